@@ -1,0 +1,1 @@
+//! The accounts: one file each, from the closed book to named figures.

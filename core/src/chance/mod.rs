@@ -1,0 +1,1 @@
+//! Uncertainty: draws keyed by an input's identity.

@@ -1,0 +1,1 @@
+//! Carbon dioxide: equation of state, phase, transport properties.

@@ -1,0 +1,1 @@
+//! Each route beside the present one.

@@ -1,0 +1,1 @@
+//! Published hazard scores as pure functions of stated inputs.

@@ -1,0 +1,1 @@
+//! Places, postings, the bench and the closing of the book.

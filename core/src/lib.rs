@@ -1,0 +1,24 @@
+//! Thimbleworth: the account of every extraction route, kept like a set of books.
+//!
+//! ```text
+//!  plan ──► program ──► bench ──► ledger ──► accounts ──► comparison ──► report / page
+//! ```
+//!
+//! Data flows one way. Everything is computed from *postings*: a posting moves a mass of one material from one
+//! place to another, because of one step, by one stated rule. The library reads no files, has no clock and gives
+//! the same bits natively and in WebAssembly.
+#![deny(missing_docs)]
+
+pub mod account;
+pub mod chance;
+pub mod co2;
+pub mod compare;
+pub mod hazard;
+pub mod ledger;
+pub mod material;
+pub mod metric;
+pub mod plan;
+pub mod quantity;
+pub mod report;
+pub mod source;
+pub mod step;

@@ -1,0 +1,1 @@
+//! The catalogue of materials: properties, hazards, and where each figure comes from.

@@ -1,0 +1,1 @@
+//! Published mass metrics as pure functions of stated inputs.

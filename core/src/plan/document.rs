@@ -1,0 +1,161 @@
+//! The plan as typed text: every amount is kept as it was written, so that saving never prints a float and a
+//! half-typed amount can be held. `Eq` all through: two plans are compared by value.
+
+/// The version of the plan document that this library reads and writes.
+pub const PLAN_VERSION: u64 = 1;
+
+/// One value of a field as the document holds it.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub enum Field {
+    /// Text: an amount, a name, a word.
+    Text(String),
+    /// A bare number, kept as it was written.
+    Number(String),
+    /// Yes or no.
+    YesNo(bool),
+    /// Several named values in the order written: a mixture, a share for each material.
+    Rows(Vec<(String, String)>),
+}
+
+/// A whole question.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Plan {
+    /// What is asked.
+    pub title: String,
+    /// Free text that prints with the report.
+    pub notes: Option<String>,
+    /// The site: rules, date, streams.
+    pub site: Site,
+    /// Materials that the plan adds to the catalogue or overrides, each with its source.
+    pub materials: Vec<OwnMaterial>,
+    /// The pieces of work.
+    pub workloads: Vec<Workload>,
+}
+
+/// The site whose work it is.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Site {
+    /// Its name.
+    pub name: String,
+    /// `US`, `EU` or `none`.
+    pub rules: Option<String>,
+    /// The date on which the rules are read, `2026-12-01`.
+    pub as_of: Option<String>,
+    /// The temperature at which solvents are poured and stored.
+    pub bench_temperature: Option<String>,
+    /// The named permit under which something may go down the drain.
+    pub drain_permit: Option<String>,
+    /// Kept for the accounts of energy, climate and cost.
+    pub electricity: Option<Electricity>,
+    /// Kept for the account of room air.
+    pub room: Option<Room>,
+    /// The waste streams that the site keeps apart.
+    pub streams: Vec<Stream>,
+}
+
+/// What the site knows of its electricity.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Electricity {
+    /// CO2-equivalent per energy.
+    pub climate: Option<String>,
+    /// Price per energy.
+    pub price: Option<String>,
+    /// Where these figures come from.
+    pub source: Option<String>,
+}
+
+/// The room in which the work happens.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Room {
+    /// Volume of air.
+    pub volume: Option<String>,
+    /// Air changes per time.
+    pub air_changes: Option<String>,
+    /// Share of a release at the hood that the hood captures.
+    pub hood_capture: Option<String>,
+}
+
+/// A waste stream that the site keeps apart.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Stream {
+    /// Its name; steps and ends refer to it.
+    pub name: String,
+    /// `liquid` or `solid`; liquid when left out.
+    pub holds: Option<String>,
+    /// The size of one container.
+    pub container: Option<String>,
+    /// How full a container is when it is closed.
+    pub fill: Option<String>,
+    /// Bulk density, for solids.
+    pub bulk_density: Option<String>,
+    /// `none`, `recycling`, `degradation` or `passivation`: what happens to it on site.
+    pub treatment: Option<String>,
+}
+
+/// A material that the plan adds to the catalogue or overrides there.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct OwnMaterial {
+    /// Its name.
+    pub name: String,
+    /// Its fields in the order written: `class`, `cas`, `density`, `hazards`, `source` and so on.
+    pub fields: Vec<(String, Field)>,
+}
+
+/// One piece of work, done by any of several routes.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Workload {
+    /// Its name.
+    pub name: String,
+    /// Results reported (or product batches made) in a year.
+    pub results_per_year: Option<Field>,
+    /// Samples in a batch as batches really leave, results only.
+    pub batch_samples: Option<Field>,
+    /// Blanks and other control samples that go with each batch.
+    pub batch_controls: Option<Field>,
+    /// Share of results that have to be done again.
+    pub repeats: Option<String>,
+    /// Whether repeats bring their own controls (yes when left out).
+    pub repeats_bring_controls: Option<bool>,
+    /// Whether controls carry feed like a sample (yes when left out).
+    pub controls_carry_feed: Option<bool>,
+    /// What one sample (or product batch) brings: materials with their masses or volumes.
+    pub feed: Vec<(String, String)>,
+    /// The name of the present route.
+    pub present: String,
+    /// The routes.
+    pub routes: Vec<Route>,
+}
+
+/// One way of doing the work.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Route {
+    /// Its name, unique in the workload.
+    pub name: String,
+    /// What one sample brings on this route, where it differs from the workload's feed.
+    pub feed: Option<Vec<(String, String)>>,
+    /// Recovery of what is sought, as this route reaches it.
+    pub recovery: Option<String>,
+    /// On what the claim of equal work rests.
+    pub equivalence: Option<String>,
+    /// The lowest and highest pH on the way, `2 to 7`; for the pH rule of the NEMI criteria.
+    pub ph: Option<String>,
+    /// The steps in order.
+    pub steps: Vec<Step>,
+    /// Where what is left on the bench goes: `liquor`, `second phase`, `marc`, `trap`, `vapour` to a place.
+    pub ends: Vec<(String, String)>,
+}
+
+/// One step of a route.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Step {
+    /// The technique's key.
+    pub technique: String,
+    /// `sample`, `batch`, `month` or `year`; sample when left out.
+    pub per: Option<String>,
+    /// The technique's own fields in the order written.
+    pub fields: Vec<(String, Field)>,
+    /// Measured figures by the name of the rule that they take the place of.
+    pub measured: Vec<(String, String)>,
+    /// Free text that prints with the step.
+    pub note: Option<String>,
+}

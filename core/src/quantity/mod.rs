@@ -1,0 +1,3 @@
+//! Amounts as people write them.
+mod kind;
+pub use kind::Kind;

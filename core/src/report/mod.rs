@@ -1,0 +1,1 @@
+//! Documents for people and for other programs.

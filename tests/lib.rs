@@ -1,0 +1,1 @@
+//! What the evidence shares: tolerances, and reading of the tables beside each check.
