@@ -81,6 +81,30 @@ pub fn adr_fill(expansion_per_k: f64, filling_k: f64) -> Result<f64, ContainerEr
     Ok(0.98 / (1.0 + alpha * (50.0 - t_f)))
 }
 
+/// Degree of filling by boiling point for a liquid filled at 15 °C, a fraction: below 60 °C 0.90, to 100 °C 0.92, to
+/// 200 °C 0.94, to 300 °C 0.96, above 0.98. The rule's other branch, for when no densities are at hand.
+///
+/// `boiling_point_k` is the initial boiling point, K.
+///
+/// # Errors
+/// [`ContainerError::OutOfRange`].
+///
+/// ```
+/// // toluene, 110.6 °C
+/// assert_eq!(thimbleworth::metric::container::adr_fill_by_boiling_point(383.75), Ok(0.94));
+/// ```
+pub fn adr_fill_by_boiling_point(boiling_point_k: f64) -> Result<f64, ContainerError> {
+    let boiling_point =
+        within("boiling point, K", boiling_point_k, boiling_point_k > 0.0, "a temperature above 0 K")?;
+    Ok(match boiling_point - 273.15 {
+        c if c < 60.0 => 0.90,
+        c if c < 100.0 => 0.92,
+        c if c < 200.0 => 0.94,
+        c if c < 300.0 => 0.96,
+        _ => 0.98,
+    })
+}
+
 /// Containers that a period's volume takes, a part-full one carried over: ⌈V/(V_c f)⌉.
 ///
 /// `volume_m3` is the waste of the period, `capacity_m3` the capacity of a container, both m³; `fill` the degree of

@@ -220,7 +220,8 @@ pub fn reaction_mass_efficiency_generalised(inputs: &Inputs) -> Result<f64, Metr
 /// What is benign is the plan's own list and must be printed beside the figure.
 ///
 /// # Errors
-/// [`MetricError::NothingToDivideBy`] where every input is declared benign, besides those of the module.
+/// [`MetricError::NothingToDivideBy`] where every input is declared benign, [`MetricError::NotAnAmount`] where more than
+/// that is, besides those of the module.
 ///
 /// ```
 /// use thimbleworth::metric::{mass, Inputs};
@@ -231,8 +232,9 @@ pub fn reaction_mass_efficiency_generalised(inputs: &Inputs) -> Result<f64, Metr
 /// ```
 pub fn effective_mass_yield(inputs: &Inputs) -> Result<f64, MetricError> {
     let i = inputs.with_product()?;
+    let counted_kg = amount("mass of inputs less the benign", i.gross_kg() - i.benign_kg)?;
     // EMY = m_P/(Σ m_in − m_benign)
-    over(i.product_kg, i.gross_kg() - i.benign_kg, "mass of inputs not declared benign")
+    over(i.product_kg, counted_kg, "mass of inputs not declared benign")
 }
 
 /// Solvent intensity, gross: SI = m_S/m_P.
