@@ -38,7 +38,7 @@ impl Answer {
 /// The acidity that a procedure goes through.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub enum Acidity {
-    /// No water phase, so no pH.
+    /// No water phase, so no pH: counted as met, which is our reading; the paper speaks of pH only.
     NoWaterPhase,
     /// The lowest and the highest pH.
     Range {
