@@ -1,0 +1,287 @@
+//! The keys of the document, declared once: the reader checks by these tables, and the schema is made from them.
+//! The order here is the order in which a plan is written.
+
+/// The key that says that a document is a plan, and of which version.
+pub(super) const VERSION_KEY: &str = "thimbleworth";
+
+/// What may stand at a key.
+#[derive(Clone, Copy, Debug)]
+pub(super) enum Shape {
+    /// The version of the document.
+    Version,
+    /// Any text.
+    Text,
+    /// A text that is not empty.
+    Name,
+    /// An amount with its unit, as text.
+    Amount,
+    /// A bare number, or an amount as text.
+    Count,
+    /// One of these words.
+    Word(&'static [&'static str]),
+    /// `true` or `false`.
+    YesNo,
+    /// Names of the user's own, each with a text.
+    Rows,
+    /// An object with declared keys.
+    Object(&'static Object),
+    /// Names of the user's own, each with an object.
+    Named(&'static Object),
+    /// A list of objects, and the least number of them.
+    List(&'static Object, usize),
+}
+
+/// One key of an object.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Key {
+    /// The key.
+    pub(super) name: &'static str,
+    /// What may stand there.
+    pub(super) shape: Shape,
+    /// Whether it must be written.
+    pub(super) required: bool,
+    /// An example, as JSON.
+    pub(super) example: &'static str,
+    /// What it is: completes the sentence "here stands ...".
+    pub(super) what: &'static str,
+}
+
+/// One kind of object.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Object {
+    /// What it is called in a sentence, with its article.
+    pub(super) title: &'static str,
+    /// Its declared keys in the order written.
+    pub(super) keys: &'static [Key],
+    /// How many of these keys are written before the fields that are declared elsewhere (by a technique, by the
+    /// catalogue of materials); none when there are no such fields.
+    pub(super) fields_after: Option<usize>,
+}
+
+const fn must(name: &'static str, shape: Shape, example: &'static str, what: &'static str) -> Key {
+    Key { name, shape, required: true, example, what }
+}
+
+const fn may(name: &'static str, shape: Shape, example: &'static str, what: &'static str) -> Key {
+    Key { name, shape, required: false, example, what }
+}
+
+pub(super) static PLAN: Object = Object {
+    title: "a plan",
+    keys: &[
+        must(VERSION_KEY, Shape::Version, "1", "the version of the plan document"),
+        must("title", Shape::Text, r#""Harbour sediment: leave the Soxhlet bench?""#, "the question asked"),
+        may(
+            "notes",
+            Shape::Text,
+            r#""Figures of the spring campaign""#,
+            "free text that prints with the report",
+        ),
+        must(
+            "site",
+            Shape::Object(&SITE),
+            r#"{ "name": "Harbour laboratory", "streams": [] }"#,
+            "the site: its rules, its date, its waste streams",
+        ),
+        may(
+            "materials",
+            Shape::Named(&MATERIAL),
+            r#"{ "sorbent mix": { "density": "1.4 kg/L", "source": "supplier's sheet" } }"#,
+            "materials that the plan adds to the catalogue or overrides, each with its source",
+        ),
+        must("workloads", Shape::List(&WORKLOAD, 1), "", "the pieces of work, at least one"),
+    ],
+    fields_after: None,
+};
+
+pub(super) static SITE: Object = Object {
+    title: "a site",
+    keys: &[
+        must("name", Shape::Name, r#""Harbour laboratory""#, "the name of the site"),
+        may("rules", Shape::Word(&["US", "EU", "none"]), r#""EU""#, "whose waste rules are read"),
+        may("as_of", Shape::Text, r#""2026-12-01""#, "the date on which the rules are read"),
+        may(
+            "bench_temperature",
+            Shape::Amount,
+            r#""20 °C""#,
+            "the temperature at which solvents are poured and stored",
+        ),
+        may(
+            "drain_permit",
+            Shape::Text,
+            r#""discharge permit 7, section 2""#,
+            "the named permit under which something may go down the drain",
+        ),
+        may(
+            "electricity",
+            Shape::Object(&ELECTRICITY),
+            r#"{ "climate": "0.37 kg/kWh", "price": "0.14 USD/kWh", "source": "the site's own figure" }"#,
+            "what the site knows of its electricity",
+        ),
+        may(
+            "room",
+            Shape::Object(&ROOM),
+            r#"{ "volume": "140 m3", "air_changes": "8 /h", "hood_capture": "95 to 99 %" }"#,
+            "the room in which the work happens",
+        ),
+        must(
+            "streams",
+            Shape::List(&STREAM, 0),
+            r#"[{ "name": "flammable", "container": "20 L", "fill": "90 %" }]"#,
+            "the waste streams that the site keeps apart",
+        ),
+    ],
+    fields_after: None,
+};
+
+static ELECTRICITY: Object = Object {
+    title: "the electricity",
+    keys: &[
+        may("climate", Shape::Amount, r#""0.37 kg/kWh""#, "the CO2-equivalent for each unit of energy"),
+        may("price", Shape::Amount, r#""0.14 USD/kWh""#, "the price of each unit of energy"),
+        may("source", Shape::Text, r#""the site's own figure""#, "where these figures come from"),
+    ],
+    fields_after: None,
+};
+
+static ROOM: Object = Object {
+    title: "a room",
+    keys: &[
+        may("volume", Shape::Amount, r#""140 m3""#, "the volume of its air"),
+        may("air_changes", Shape::Amount, r#""8 /h""#, "how often its air is changed"),
+        may(
+            "hood_capture",
+            Shape::Amount,
+            r#""95 to 99 %""#,
+            "the share of a release at the hood that the hood captures",
+        ),
+    ],
+    fields_after: None,
+};
+
+static STREAM: Object = Object {
+    title: "a stream",
+    keys: &[
+        must("name", Shape::Name, r#""flammable""#, "the name by which steps and ends refer to the stream"),
+        may("holds", Shape::Word(&["liquid", "solid"]), r#""solid""#, "what it holds; liquid when left out"),
+        may("container", Shape::Amount, r#""20 L""#, "the size of one container"),
+        may("fill", Shape::Amount, r#""90 %""#, "how full a container is when it is closed"),
+        may("bulk_density", Shape::Amount, r#""0.4 kg/L""#, "the bulk density of a solid stream"),
+        may(
+            "treatment",
+            Shape::Word(&["none", "recycling", "degradation", "passivation"]),
+            r#""recycling""#,
+            "what happens to it on site",
+        ),
+    ],
+    fields_after: None,
+};
+
+static MATERIAL: Object = Object { title: "a material", keys: &[], fields_after: Some(0) };
+
+static WORKLOAD: Object = Object {
+    title: "a workload",
+    keys: &[
+        must("name", Shape::Name, r#""PAH in sediment""#, "the name of the work"),
+        must(
+            "results_per_year",
+            Shape::Count,
+            "1400",
+            "the results reported, or product batches made, in a year",
+        ),
+        must("batch", Shape::Object(&BATCH), r#"{ "samples": 13, "controls": 4 }"#, "what leaves together"),
+        may("repeats", Shape::Amount, r#""3 %""#, "the share of results that have to be done again"),
+        may(
+            "repeats_bring_controls",
+            Shape::YesNo,
+            "true",
+            "whether repeats bring their own controls; they do when left out",
+        ),
+        may(
+            "controls_carry_feed",
+            Shape::YesNo,
+            "false",
+            "whether controls carry feed as a sample does; they do when left out",
+        ),
+        must(
+            "feed",
+            Shape::Rows,
+            r#"{ "sediment": "10 g" }"#,
+            "what one sample, or one product batch, brings",
+        ),
+        must("present", Shape::Name, r#""Soxhlet""#, "the name of the route in use now"),
+        must("routes", Shape::List(&ROUTE, 1), "", "the routes, at least one"),
+    ],
+    fields_after: None,
+};
+
+static BATCH: Object = Object {
+    title: "a batch",
+    keys: &[
+        must(
+            "samples",
+            Shape::Count,
+            "13",
+            "the samples in a batch as batches really leave, controls not counted",
+        ),
+        may("controls", Shape::Count, "4", "the blanks and other control samples that go with each batch"),
+    ],
+    fields_after: None,
+};
+
+static ROUTE: Object = Object {
+    title: "a route",
+    keys: &[
+        must("name", Shape::Name, r#""Soxhlet""#, "the name of the route, its own within the workload"),
+        may(
+            "feed",
+            Shape::Rows,
+            r#"{ "sediment": "3 g" }"#,
+            "what one sample brings, where this route differs",
+        ),
+        may(
+            "recovery",
+            Shape::Amount,
+            r#""94 ± 3 %""#,
+            "the recovery of what is sought, as this route reaches it",
+        ),
+        may("equivalence", Shape::Text, r#""paired samples, 2026""#, "what the claim of equal work rests on"),
+        may("ph", Shape::Amount, r#""2 to 7""#, "the lowest and the highest pH on the way"),
+        must("steps", Shape::List(&STEP, 0), "", "the steps in their order"),
+        may(
+            "ends",
+            Shape::Rows,
+            r#"{ "liquor": "flammable", "marc": "solids" }"#,
+            "where what is left on the bench goes",
+        ),
+    ],
+    fields_after: None,
+};
+
+/// How often a step is done.
+pub(super) const BASES: &[&str] = &["sample", "batch", "month", "year"];
+
+pub(super) static STEP: Object = Object {
+    title: "a step",
+    keys: &[
+        must("step", Shape::Name, r#""soxhlet""#, "the technique"),
+        may(
+            "per",
+            Shape::Word(BASES),
+            r#""batch""#,
+            "how often the step is done; for each sample when left out",
+        ),
+        may(
+            "measured",
+            Shape::Rows,
+            r#"{ "condenser loss": "6 ± 2 g" }"#,
+            "measured figures by the name of the rule whose result they replace",
+        ),
+        may("note", Shape::Text, r#""chiller shared with bench 2""#, "free text that prints with the step"),
+    ],
+    fields_after: Some(2),
+};
+
+#[cfg(test)]
+pub(super) static ALL: [&Object; 10] =
+    [&PLAN, &SITE, &ELECTRICITY, &ROOM, &STREAM, &MATERIAL, &WORKLOAD, &BATCH, &ROUTE, &STEP];

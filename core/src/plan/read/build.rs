@@ -1,0 +1,158 @@
+//! From a tree to a typed plan, as far as it goes. Nothing is reported here: what does not fit has been, and is kept
+//! as text where it can be, so that it can be shown and mended.
+
+use super::super::document::{
+    Electricity, Field, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
+};
+use super::super::keys::STEP;
+use super::super::tree::Node;
+
+/// The value of a key; of a key written twice the first.
+fn get<'n>(node: &'n Node, key: &str) -> Option<&'n Node> {
+    entries(node).iter().find(|(name, _)| name == key).map(|(_, value)| value)
+}
+
+fn entries(node: &Node) -> &[(String, Node)] {
+    match node {
+        Node::Map(entries) => entries,
+        Node::Null | Node::YesNo(_) | Node::Number(_) | Node::Text(_) | Node::List(_) => &[],
+    }
+}
+
+fn plain(node: &Node) -> Option<String> {
+    match node {
+        Node::Text(text) | Node::Number(text) => Some(text.clone()),
+        Node::Null | Node::YesNo(_) | Node::List(_) | Node::Map(_) => None,
+    }
+}
+
+fn text(node: &Node, key: &str) -> Option<String> {
+    get(node, key).and_then(plain)
+}
+
+fn required(node: &Node, key: &str) -> String {
+    text(node, key).unwrap_or_default()
+}
+
+fn yes_no(node: &Node, key: &str) -> Option<bool> {
+    match get(node, key)? {
+        Node::YesNo(yes) => Some(*yes),
+        Node::Null | Node::Number(_) | Node::Text(_) | Node::List(_) | Node::Map(_) => None,
+    }
+}
+
+fn field(node: &Node) -> Field {
+    match node {
+        Node::Text(text) => Field::Text(text.clone()),
+        Node::Number(number) => Field::Number(number.clone()),
+        Node::YesNo(yes) => Field::YesNo(*yes),
+        Node::Map(_) => Field::Rows(rows(node)),
+        Node::Null | Node::List(_) => Field::Text(String::new()),
+    }
+}
+
+fn rows(node: &Node) -> Vec<(String, String)> {
+    entries(node).iter().map(|(name, value)| (name.clone(), plain(value).unwrap_or_default())).collect()
+}
+
+fn list<T>(node: &Node, key: &str, item: fn(&Node) -> T) -> Vec<T> {
+    match get(node, key) {
+        Some(Node::List(items)) => items.iter().map(item).collect(),
+        _ => Vec::new(),
+    }
+}
+
+pub(super) fn plan(node: &Node) -> Plan {
+    Plan {
+        title: required(node, "title"),
+        notes: text(node, "notes"),
+        site: get(node, "site").map(site).unwrap_or_default(),
+        materials: get(node, "materials").map(materials).unwrap_or_default(),
+        workloads: list(node, "workloads", workload),
+    }
+}
+
+fn site(node: &Node) -> Site {
+    Site {
+        name: required(node, "name"),
+        rules: text(node, "rules"),
+        as_of: text(node, "as_of"),
+        bench_temperature: text(node, "bench_temperature"),
+        drain_permit: text(node, "drain_permit"),
+        electricity: get(node, "electricity").map(|node| Electricity {
+            climate: text(node, "climate"),
+            price: text(node, "price"),
+            source: text(node, "source"),
+        }),
+        room: get(node, "room").map(|node| Room {
+            volume: text(node, "volume"),
+            air_changes: text(node, "air_changes"),
+            hood_capture: text(node, "hood_capture"),
+        }),
+        streams: list(node, "streams", stream),
+    }
+}
+
+fn stream(node: &Node) -> Stream {
+    Stream {
+        name: required(node, "name"),
+        holds: text(node, "holds"),
+        container: text(node, "container"),
+        fill: text(node, "fill"),
+        bulk_density: text(node, "bulk_density"),
+        treatment: text(node, "treatment"),
+    }
+}
+
+fn materials(node: &Node) -> Vec<OwnMaterial> {
+    entries(node)
+        .iter()
+        .map(|(name, value)| OwnMaterial {
+            name: name.clone(),
+            fields: entries(value).iter().map(|(key, value)| (key.clone(), field(value))).collect(),
+        })
+        .collect()
+}
+
+fn workload(node: &Node) -> Workload {
+    let batch = get(node, "batch");
+    Workload {
+        name: required(node, "name"),
+        results_per_year: get(node, "results_per_year").map(field),
+        batch_samples: batch.and_then(|node| get(node, "samples")).map(field),
+        batch_controls: batch.and_then(|node| get(node, "controls")).map(field),
+        repeats: text(node, "repeats"),
+        repeats_bring_controls: yes_no(node, "repeats_bring_controls"),
+        controls_carry_feed: yes_no(node, "controls_carry_feed"),
+        feed: get(node, "feed").map(rows).unwrap_or_default(),
+        present: required(node, "present"),
+        routes: list(node, "routes", route),
+    }
+}
+
+fn route(node: &Node) -> Route {
+    Route {
+        name: required(node, "name"),
+        feed: get(node, "feed").map(rows),
+        recovery: text(node, "recovery"),
+        equivalence: text(node, "equivalence"),
+        ph: text(node, "ph"),
+        steps: list(node, "steps", step),
+        ends: get(node, "ends").map(rows).unwrap_or_default(),
+    }
+}
+
+fn step(node: &Node) -> Step {
+    let declared = |name: &str| STEP.keys.iter().any(|key| key.name == name);
+    Step {
+        technique: required(node, "step"),
+        per: text(node, "per"),
+        fields: entries(node)
+            .iter()
+            .filter(|(name, _)| !declared(name))
+            .map(|(name, value)| (name.clone(), field(value)))
+            .collect(),
+        measured: get(node, "measured").map(rows).unwrap_or_default(),
+        note: text(node, "note"),
+    }
+}

@@ -1,0 +1,293 @@
+//! Saving a plan: the same plan always gives the same bytes.
+
+use super::document::{Field, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
+use super::keys::VERSION_KEY;
+use super::print::print;
+use super::tree::{self, Node};
+
+/// The plan as a JSON document: keys in their declared order, two spaces a level, LF, a final newline, every amount as
+/// it was written. An object of plain values stands on one line where it fits.
+///
+/// What was opened and saved is saved the same way again, and [`open`](super::open) gives back the plan that was
+/// saved, as far as JSON can hold it: a field of a step must not be called `step`, `per`, `measured` or `note`, and a
+/// [`Field::Number`] that is no JSON number is written as text.
+///
+/// ```
+/// use thimbleworth::plan::{Plan, open, save};
+/// let plan = Plan { title: "Trial".into(), ..Plan::default() };
+/// let text = save(&plan);
+/// assert!(text.starts_with("{\n  \"thimbleworth\": 1,\n  \"title\": \"Trial\",\n"));
+/// assert_eq!(open(&text).plan, Some(plan));
+/// ```
+#[must_use]
+pub fn save(plan: &Plan) -> String {
+    print(&tree(plan))
+}
+
+/// The entries of an object as they are written.
+#[derive(Default)]
+struct Entries(Vec<(String, Node)>);
+
+impl Entries {
+    fn put(&mut self, key: &str, value: Node) {
+        self.0.push((key.to_owned(), value));
+    }
+
+    fn text(&mut self, key: &str, text: &str) {
+        self.put(key, Node::Text(text.to_owned()));
+    }
+
+    fn optional(&mut self, key: &str, text: Option<&String>) {
+        if let Some(text) = text {
+            self.text(key, text);
+        }
+    }
+
+    fn yes_no(&mut self, key: &str, yes: Option<bool>) {
+        if let Some(yes) = yes {
+            self.put(key, Node::YesNo(yes));
+        }
+    }
+
+    fn field(&mut self, key: &str, value: Option<&Field>) {
+        if let Some(value) = value {
+            self.put(key, field(value));
+        }
+    }
+
+    fn list<T>(&mut self, key: &str, items: &[T], item: fn(&T) -> Node) {
+        self.put(key, Node::List(items.iter().map(item).collect()));
+    }
+}
+
+impl From<Entries> for Node {
+    fn from(entries: Entries) -> Self {
+        Self::Map(entries.0)
+    }
+}
+
+fn tree(plan: &Plan) -> Node {
+    let mut out = Entries::default();
+    out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
+    out.text("title", &plan.title);
+    out.optional("notes", plan.notes.as_ref());
+    out.put("site", site(&plan.site));
+    if !plan.materials.is_empty() {
+        let mut materials = Entries::default();
+        for material in &plan.materials {
+            let fields = material.fields.iter().map(|(key, value)| (key.clone(), field(value)));
+            materials.put(&material.name, Node::Map(fields.collect()));
+        }
+        out.put("materials", materials.into());
+    }
+    out.list("workloads", &plan.workloads, workload);
+    out.into()
+}
+
+fn site(site: &Site) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &site.name);
+    out.optional("rules", site.rules.as_ref());
+    out.optional("as_of", site.as_of.as_ref());
+    out.optional("bench_temperature", site.bench_temperature.as_ref());
+    out.optional("drain_permit", site.drain_permit.as_ref());
+    if let Some(electricity) = &site.electricity {
+        let mut inner = Entries::default();
+        inner.optional("climate", electricity.climate.as_ref());
+        inner.optional("price", electricity.price.as_ref());
+        inner.optional("source", electricity.source.as_ref());
+        out.put("electricity", inner.into());
+    }
+    if let Some(room) = &site.room {
+        let mut inner = Entries::default();
+        inner.optional("volume", room.volume.as_ref());
+        inner.optional("air_changes", room.air_changes.as_ref());
+        inner.optional("hood_capture", room.hood_capture.as_ref());
+        out.put("room", inner.into());
+    }
+    out.list("streams", &site.streams, stream);
+    out.into()
+}
+
+fn stream(stream: &Stream) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &stream.name);
+    out.optional("holds", stream.holds.as_ref());
+    out.optional("container", stream.container.as_ref());
+    out.optional("fill", stream.fill.as_ref());
+    out.optional("bulk_density", stream.bulk_density.as_ref());
+    out.optional("treatment", stream.treatment.as_ref());
+    out.into()
+}
+
+fn workload(workload: &Workload) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &workload.name);
+    out.field("results_per_year", workload.results_per_year.as_ref());
+    if workload.batch_samples.is_some() || workload.batch_controls.is_some() {
+        let mut batch = Entries::default();
+        batch.field("samples", workload.batch_samples.as_ref());
+        batch.field("controls", workload.batch_controls.as_ref());
+        out.put("batch", batch.into());
+    }
+    out.optional("repeats", workload.repeats.as_ref());
+    out.yes_no("repeats_bring_controls", workload.repeats_bring_controls);
+    out.yes_no("controls_carry_feed", workload.controls_carry_feed);
+    out.put("feed", rows(&workload.feed));
+    out.text("present", &workload.present);
+    out.list("routes", &workload.routes, route);
+    out.into()
+}
+
+fn route(route: &Route) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &route.name);
+    if let Some(feed) = &route.feed {
+        out.put("feed", rows(feed));
+    }
+    out.optional("recovery", route.recovery.as_ref());
+    out.optional("equivalence", route.equivalence.as_ref());
+    out.optional("ph", route.ph.as_ref());
+    out.list("steps", &route.steps, step);
+    if !route.ends.is_empty() {
+        out.put("ends", rows(&route.ends));
+    }
+    out.into()
+}
+
+fn step(step: &Step) -> Node {
+    let mut out = Entries::default();
+    out.text("step", &step.technique);
+    out.optional("per", step.per.as_ref());
+    for (key, value) in &step.fields {
+        out.put(key, field(value));
+    }
+    if !step.measured.is_empty() {
+        out.put("measured", rows(&step.measured));
+    }
+    out.optional("note", step.note.as_ref());
+    out.into()
+}
+
+fn field(field: &Field) -> Node {
+    match field {
+        Field::Text(text) => Node::Text(text.clone()),
+        Field::Number(number) => match tree::read(number) {
+            // Compared, because white space around a number is not part of it.
+            Ok(Node::Number(read)) if read == *number => Node::Number(read),
+            _ => Node::Text(number.clone()),
+        },
+        Field::YesNo(yes) => Node::YesNo(*yes),
+        Field::Rows(list) => rows(list),
+    }
+}
+
+fn rows(list: &[(String, String)]) -> Node {
+    Node::Map(list.iter().map(|(name, value)| (name.clone(), Node::Text(value.clone()))).collect())
+}
+
+#[cfg(test)]
+mod tests {
+    use super::super::keys::{Object, PLAN, Shape};
+    use super::super::{Electricity, OwnMaterial, Room, open};
+    use super::*;
+
+    /// A plan in which every key is used.
+    fn full() -> Plan {
+        let some = |text: &str| Some(text.to_owned());
+        let pair = |name: &str, value: &str| vec![(name.to_owned(), value.to_owned())];
+        let step = Step {
+            technique: "rinse".into(),
+            per: some("batch"),
+            fields: vec![("charge".into(), Field::Text("40 mL".into()))],
+            measured: pair("held", "2 g"),
+            note: some("n"),
+        };
+        let route = Route {
+            name: "A".into(),
+            feed: Some(pair("soil", "3 g")),
+            recovery: some("94 %"),
+            equivalence: some("paired"),
+            ph: some("2 to 7"),
+            steps: vec![step],
+            ends: pair("liquor", "flammable"),
+        };
+        Plan {
+            title: "t".into(),
+            notes: some("n"),
+            site: Site {
+                name: "s".into(),
+                rules: some("EU"),
+                as_of: some("2026-12-01"),
+                bench_temperature: some("20 °C"),
+                drain_permit: some("p"),
+                electricity: Some(Electricity { climate: some("c"), price: some("p"), source: some("s") }),
+                room: Some(Room { volume: some("v"), air_changes: some("a"), hood_capture: some("h") }),
+                streams: vec![Stream {
+                    name: "flammable".into(),
+                    holds: some("liquid"),
+                    container: some("20 L"),
+                    fill: some("90 %"),
+                    bulk_density: some("1 kg/L"),
+                    treatment: some("none"),
+                }],
+            },
+            materials: vec![OwnMaterial { name: "m".into(), fields: vec![("x".into(), Field::YesNo(true))] }],
+            workloads: vec![Workload {
+                name: "w".into(),
+                results_per_year: Some(Field::Number("1400".into())),
+                batch_samples: Some(Field::Number("13".into())),
+                batch_controls: Some(Field::Text("4".into())),
+                repeats: some("3 %"),
+                repeats_bring_controls: Some(true),
+                controls_carry_feed: Some(false),
+                feed: pair("soil", "10 g"),
+                present: "A".into(),
+                routes: vec![route],
+            }],
+        }
+    }
+
+    /// The object's keys are those of its table, all of them, in the table's order.
+    fn follows(node: &Node, table: &Object) {
+        let Node::Map(entries) = node else { panic!("{} is no object", table.title) };
+        let declared = |name: &str| table.keys.iter().find(|key| key.name == name);
+        let written: Vec<&str> = entries.iter().map(|(name, _)| name.as_str()).collect();
+        let mut expected: Vec<&str> = table.keys.iter().map(|key| key.name).collect();
+        if let Some(place) = table.fields_after {
+            let fields: Vec<&str> = written.iter().copied().filter(|name| declared(name).is_none()).collect();
+            assert!(!fields.is_empty(), "{} without a field", table.title);
+            expected.splice(place..place, fields);
+        }
+        assert_eq!(written, expected, "{}", table.title);
+        for (name, value) in entries {
+            match (declared(name).map(|key| key.shape), value) {
+                (Some(Shape::Object(inner)), _) => follows(value, inner),
+                (Some(Shape::Named(inner)), Node::Map(named)) => {
+                    named.iter().for_each(|(_, v)| follows(v, inner));
+                }
+                (Some(Shape::List(inner, _)), Node::List(items)) => {
+                    items.iter().for_each(|v| follows(v, inner));
+                }
+                _ => {}
+            }
+        }
+    }
+
+    #[test]
+    fn a_plan_is_written_as_the_tables_declare_it_and_nothing_is_lost() {
+        follows(&tree(&full()), &PLAN);
+        let opened = open(&save(&full()));
+        assert_eq!(opened.problems, []);
+        assert_eq!(opened.plan, Some(full()));
+    }
+
+    #[test]
+    fn a_number_that_json_cannot_hold_is_written_as_text() {
+        let written = |number: &str| field(&Field::Number(number.into()));
+        assert_eq!(written("0.10"), Node::Number("0.10".into()));
+        for odd in ["", "1 ", "05", "NaN", "1e999", "1, 2", "{}", "\"1\""] {
+            assert_eq!(written(odd), Node::Text(odd.into()));
+        }
+    }
+}

@@ -1,0 +1,153 @@
+//! Plans made by chance, the same ones every time.
+
+use thimbleworth::plan::{Electricity, Field, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload};
+
+/// SplitMix64 (Steele, Lea and Flood 2014; constants from memory). Any generator would do; nothing rests on its
+/// quality.
+pub(crate) struct Chance(pub(crate) u64);
+
+/// Parts of hostile texts.
+const PARTS: [&str; 24] = [
+    "acetone",
+    "250 ± 5 mL",
+    "0.10",
+    " ",
+    "\"",
+    "\\",
+    "\n",
+    "\r\n",
+    "\t",
+    "\0",
+    "\u{1b}",
+    "\u{7f}",
+    "\u{85}",
+    "\u{2028}",
+    "\u{2029}",
+    "\u{feff}",
+    "\u{202e}",
+    "🧪",
+    "é",
+    "e\u{301}",
+    "</script>",
+    "{",
+    "]",
+    "not known",
+];
+
+const NUMBERS: [&str; 10] =
+    ["0", "-0", "1400", "0.10", "1E+2", "-3.50e-7", "12345678901234567890123", "0.1e1", "1.0", "9"];
+
+impl Chance {
+    pub(crate) fn next(&mut self) -> u64 {
+        self.0 = self.0.wrapping_add(0x9E37_79B9_7F4A_7C15);
+        let mut z = self.0;
+        z = (z ^ (z >> 30)).wrapping_mul(0xBF58_476D_1CE4_E5B9);
+        z = (z ^ (z >> 27)).wrapping_mul(0x94D0_49BB_1331_11EB);
+        z ^ (z >> 31)
+    }
+
+    pub(crate) fn below(&mut self, n: usize) -> usize {
+        usize::try_from(self.next() % u64::try_from(n).unwrap()).unwrap()
+    }
+
+    fn yes(&mut self) -> bool {
+        self.below(2) == 1
+    }
+
+    fn text(&mut self) -> String {
+        (0..self.below(5)).map(|_| PARTS[self.below(PARTS.len())]).collect()
+    }
+
+    fn maybe<T>(&mut self, make: impl FnOnce(&mut Self) -> T) -> Option<T> {
+        self.yes().then(|| make(self))
+    }
+
+    fn list<T>(&mut self, most: usize, make: impl Fn(&mut Self) -> T) -> Vec<T> {
+        (0..self.below(most + 1)).map(|_| make(self)).collect()
+    }
+
+    fn rows(&mut self) -> Vec<(String, String)> {
+        self.list(4, |c| (c.text(), c.text()))
+    }
+
+    fn field(&mut self) -> Field {
+        match self.below(4) {
+            0 => Field::Text(self.text()),
+            1 => Field::Number(NUMBERS[self.below(NUMBERS.len())].into()),
+            2 => Field::YesNo(self.yes()),
+            _ => Field::Rows(self.rows()),
+        }
+    }
+
+    fn fields(&mut self) -> Vec<(String, Field)> {
+        // A letter before, so that no field is called as one of a step's own keys.
+        self.list(5, |c| (format!("x{}", c.text()), c.field()))
+    }
+
+    pub(crate) fn plan(&mut self) -> Plan {
+        Plan {
+            title: self.text(),
+            notes: self.maybe(Self::text),
+            site: self.site(),
+            materials: self.list(3, |c| OwnMaterial { name: c.text(), fields: c.fields() }),
+            workloads: self.list(3, Self::workload),
+        }
+    }
+
+    fn site(&mut self) -> Site {
+        Site {
+            name: self.text(),
+            rules: self.maybe(Self::text),
+            as_of: self.maybe(Self::text),
+            bench_temperature: self.maybe(Self::text),
+            drain_permit: self.maybe(Self::text),
+            electricity: self.maybe(|c| Electricity {
+                climate: c.maybe(Self::text),
+                price: c.maybe(Self::text),
+                source: c.maybe(Self::text),
+            }),
+            room: self.maybe(|c| Room {
+                volume: c.maybe(Self::text),
+                air_changes: c.maybe(Self::text),
+                hood_capture: c.maybe(Self::text),
+            }),
+            streams: self.list(3, |c| Stream {
+                name: c.text(),
+                holds: c.maybe(Self::text),
+                container: c.maybe(Self::text),
+                fill: c.maybe(Self::text),
+                bulk_density: c.maybe(Self::text),
+                treatment: c.maybe(Self::text),
+            }),
+        }
+    }
+
+    fn workload(&mut self) -> Workload {
+        Workload {
+            name: self.text(),
+            results_per_year: self.maybe(Self::field),
+            batch_samples: self.maybe(Self::field),
+            batch_controls: self.maybe(Self::field),
+            repeats: self.maybe(Self::text),
+            repeats_bring_controls: self.maybe(Self::yes),
+            controls_carry_feed: self.maybe(Self::yes),
+            feed: self.rows(),
+            present: self.text(),
+            routes: self.list(3, |c| Route {
+                name: c.text(),
+                feed: c.maybe(Self::rows),
+                recovery: c.maybe(Self::text),
+                equivalence: c.maybe(Self::text),
+                ph: c.maybe(Self::text),
+                steps: c.list(4, |c| Step {
+                    technique: c.text(),
+                    per: c.maybe(Self::text),
+                    fields: c.fields(),
+                    measured: c.rows(),
+                    note: c.maybe(Self::text),
+                }),
+                ends: c.rows(),
+            }),
+        }
+    }
+}
