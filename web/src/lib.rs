@@ -18,7 +18,8 @@ pub const PROGRAM: &str = concat!("Thimbleworth ", env!("CARGO_PKG_VERSION"));
 /// Draws the page into the element `app` of the shell.
 #[wasm_bindgen]
 pub fn start_page() {
-    std::panic::set_hook(Box::new(|fault| {
+    // Through Yew, which puts a hook of its own over one that is set past it.
+    yew::set_custom_panic_hook(Box::new(|fault| {
         gloo::console::error!(fault.to_string());
         if let Some(notice) = gloo::utils::document().get_element_by_id("stopped") {
             // An attribute that cannot be removed leaves the message in the console.
