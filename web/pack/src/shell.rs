@@ -1,0 +1,126 @@
+//! The shell and what is inlined into it: pure functions from text to text.
+use anyhow::{Result, ensure};
+use base64::Engine;
+use base64::engine::general_purpose::STANDARD as BASE64;
+use flate2::{Compression, GzBuilder};
+use sha2::{Digest, Sha256};
+use std::io::Write;
+
+/// The element of the shell that loads the script from its folder.
+const SCRIPT_START: &str = r#"<script src="web/dist/page.js""#;
+const SCRIPT_END: &str = "</script>";
+/// The element of the shell that loads the styles from their folder.
+const STYLES: &str = r#"<link rel="stylesheet" href="web/page.css">"#;
+/// The policy goes behind this element: it must stand before anything that it governs.
+const CHARSET: &str = r#"<meta charset="utf-8">"#;
+
+/// Gzip without a time stamp, so that the same bytes give the same bytes.
+pub(crate) fn gzip(bytes: &[u8]) -> Result<Vec<u8>> {
+    let mut encoder = GzBuilder::new().mtime(0).write(Vec::new(), Compression::best());
+    encoder.write_all(bytes)?;
+    Ok(encoder.finish()?)
+}
+
+/// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
+pub(crate) fn script(packed: &[u8], glue: &str, boot: &str) -> Result<String> {
+    let payload = BASE64.encode(packed);
+    let script =
+        format!("(function () {{\n\"use strict\";\nconst PAYLOAD = \"{payload}\";\n{glue}\n{boot}}})();\n");
+    for (name, text) in [("glue", glue), ("start", boot)] {
+        let text = text.to_ascii_lowercase();
+        for bad in ["</script", "<script", "<!--"] {
+            ensure!(
+                !text.contains(bad),
+                "the {name} holds {bad:?}, which would end or confuse the script element"
+            );
+        }
+    }
+    Ok(script)
+}
+
+/// The shell with styles, script and a policy that admits these two and nothing else.
+pub(crate) fn inline(shell: &str, styles: &str, script: &str) -> Result<String> {
+    ensure!(!styles.to_ascii_lowercase().contains("</style"), "the styles hold \"</style\"");
+    for mark in [CHARSET, STYLES, SCRIPT_START] {
+        ensure!(shell.matches(mark).count() == 1, "index.html must hold {mark} exactly once");
+    }
+    ensure!(shell.matches("<script").count() == 1, "index.html may hold one script only");
+    ensure!(shell.matches("<style").count() == 0, "index.html may hold no styles of its own");
+    let policy = format!(
+        "default-src 'none'; script-src {} 'wasm-unsafe-eval'; style-src {}; img-src data: blob:; \
+         base-uri 'none'; form-action 'none'",
+        hash(script),
+        hash(styles)
+    );
+    let meta = format!("{CHARSET}\n<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
+    let page = shell.replace(CHARSET, &meta).replace(STYLES, &format!("<style>{styles}</style>"));
+    let Some((before, rest)) = page.split_once(SCRIPT_START) else {
+        anyhow::bail!("index.html lost its script");
+    };
+    let Some((_, after)) = rest.split_once(SCRIPT_END) else {
+        anyhow::bail!("the script element of index.html has no end");
+    };
+    Ok(format!("{before}<script>{script}{SCRIPT_END}{after}"))
+}
+
+/// A hash source of Content Security Policy Level 3: the base64 of the SHA-256 of the element's text.
+fn hash(text: &str) -> String {
+    format!("'sha256-{}'", BASE64.encode(Sha256::digest(text.as_bytes())))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const SHELL: &str = include_str!("../../../index.html");
+
+    #[test]
+    fn the_root_shell_takes_styles_script_and_policy() {
+        let page = inline(SHELL, "p{color:red}", "run();").expect("a page");
+        assert!(page.contains("<style>p{color:red}</style>"));
+        assert!(page.contains("<script>run();</script>\n</body>"));
+        assert!(!page.contains("src=\"web/") && !page.contains("href=\"web/") && !page.contains("onerror"));
+        let policy = page.find("Content-Security-Policy").expect("a policy");
+        assert!(
+            policy < page.find("<style>").expect("styles"),
+            "the policy must stand before what it governs"
+        );
+    }
+
+    #[test]
+    fn the_policy_names_the_hash_of_exactly_what_is_inlined() {
+        // The example of Content Security Policy Level 3, section on hash usage: the hash of `alert('Hello, world.');`.
+        assert_eq!(hash("alert('Hello, world.');"), "'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='");
+        let page = inline(SHELL, "", "alert('Hello, world.');").expect("a page");
+        assert!(
+            page.contains(
+                "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng=' 'wasm-unsafe-eval'"
+            )
+        );
+    }
+
+    #[test]
+    fn text_that_would_end_its_element_is_refused() {
+        for bad in ["a = '</SCRIPT>';", "a = '<script>';", "a = '<!-- ';"] {
+            assert!(script(b"", bad, "").is_err(), "{bad} in the glue");
+            assert!(script(b"", "", bad).is_err(), "{bad} in the start");
+        }
+        assert!(script(b"", "let a = 1 < 2;", "").is_ok());
+        assert!(inline(SHELL, "</Style>", "").is_err());
+    }
+
+    #[test]
+    fn a_shell_that_changed_its_marks_is_refused() {
+        assert!(inline(&SHELL.replace(STYLES, ""), "", "").is_err());
+        assert!(inline(&SHELL.replace("</body>", "<script>more()</script></body>"), "", "").is_err());
+        assert!(inline(&SHELL.replace("web/dist/page.js", "page.js"), "", "").is_err());
+    }
+
+    #[test]
+    fn gzip_gives_the_same_bytes_and_carries_no_time() {
+        let packed = gzip(b"the same").expect("packed");
+        assert_eq!(packed, gzip(b"the same").expect("packed"));
+        // RFC 1952, 2.3.1: bytes 4 to 7 are the time of modification, 0 when there is none.
+        assert_eq!(packed[4..8], [0; 4]);
+    }
+}

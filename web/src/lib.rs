@@ -1,0 +1,54 @@
+//! The page: a view of the account in `thimbleworth`, and nothing that the account itself should know.
+//!
+//! `state` and `history` are free of the document and tested natively; everything else draws. `account` is exported
+//! beside `start_page`, so that what a test computes with is the very module that people open.
+mod app;
+mod contents;
+pub mod history;
+mod sections;
+pub mod state;
+mod toolbar;
+
+use serde_json::json;
+use wasm_bindgen::prelude::wasm_bindgen;
+
+/// Name and version, as the page and its documents show them.
+pub const PROGRAM: &str = concat!("Thimbleworth ", env!("CARGO_PKG_VERSION"));
+
+/// Draws the page into the element `app` of the shell.
+#[wasm_bindgen]
+pub fn start_page() {
+    // Through Yew, which puts a hook of its own over one that is set past it.
+    yew::set_custom_panic_hook(Box::new(|fault| {
+        gloo::console::error!(fault.to_string());
+        if let Some(notice) = gloo::utils::document().get_element_by_id("stopped") {
+            // An attribute that cannot be removed leaves the message in the console.
+            let _ = notice.remove_attribute("hidden");
+        }
+    }));
+    match gloo::utils::document().get_element_by_id("app") {
+        Some(root) => {
+            yew::Renderer::<app::App>::with_root(root).render();
+        }
+        None => gloo::console::error!("The shell has no element with the id \"app\"."),
+    }
+}
+
+/// The account of a plan as a document. Not connected yet: it says so, and whether the plan is JSON at all.
+#[wasm_bindgen]
+#[must_use]
+pub fn account(plan_json: &str, format: &str) -> String {
+    let found = match serde_json::from_str::<serde_json::Value>(plan_json) {
+        Ok(_) => "JSON".to_owned(),
+        Err(error) => format!("not JSON: {error}"),
+    };
+    json!({
+        "program": PROGRAM,
+        "plan_version": thimbleworth::plan::PLAN_VERSION,
+        "plan": found,
+        "format": format,
+        "account": null,
+        "why": "the account is not connected to the page yet",
+    })
+    .to_string()
+}
