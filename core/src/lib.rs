@@ -18,6 +18,7 @@ pub mod ledger;
 pub mod material;
 pub mod metric;
 pub mod plan;
+pub mod program;
 pub mod quantity;
 pub mod report;
 pub mod source;

@@ -1,1 +1,20 @@
 //! The accounts: one file each, from the closed book to named figures.
+//!
+//! A figure is data: a sum over cells of the book, a ratio of two figures, a number of containers. So each opens into the
+//! postings behind it, and the same figure can be evaluated for any draw.
+
+mod carbon_dioxide;
+mod energy;
+mod figure;
+mod hazard;
+mod mass;
+mod metric;
+mod open;
+mod waste;
+mod working;
+
+pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
+pub use hazard::{HazardAccount, MaterialHazard};
+pub use metric::Refusal;
+pub use open::{Account, RouteAccount, WorkloadAccount, account, account_text, rule_of};
+pub use working::{Contribution, behind, describe};

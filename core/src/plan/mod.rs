@@ -18,7 +18,8 @@ mod write;
 pub use document::{
     Electricity, Field, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream, Workload,
 };
-pub use path::Path;
+pub(crate) use nearest::nearest;
+pub use path::{Path, below};
 pub use problem::{Problem, Severity};
 pub use read::{Opened, open, open_bytes};
 pub use schema::{TechniqueShape, schema};

@@ -27,6 +27,8 @@ const LONGEST_KEY: usize = 1000;
 pub enum Path<'a> {
     /// The document as a whole; written as the empty text.
     Root,
+    /// A place whose path has been written out already.
+    At(&'a str),
     /// The value of a key of the object at the given place.
     Key(&'a Path<'a>, &'a str),
     /// The value at a position, counted from 0, of the list at the given place.
@@ -47,14 +49,21 @@ impl<'a> Path<'a> {
     }
 }
 
+/// The path of a key of the object at a path that has been written out already.
+#[must_use]
+pub fn below(path: &str, key: &str) -> String {
+    Path::At(path).key(key).to_string()
+}
+
 impl fmt::Display for Path<'_> {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
             Self::Root => Ok(()),
+            Self::At(path) => f.write_str(path),
             Self::Index(parent, position) => write!(f, "{parent}[{position}]"),
             Self::Key(parent, key) if is_plain(key) => {
                 parent.fmt(f)?;
-                if !matches!(parent, Self::Root) {
+                if !matches!(parent, Self::Root | Self::At("")) {
                     f.write_char('.')?;
                 }
                 f.write_str(key)

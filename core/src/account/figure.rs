@@ -1,0 +1,218 @@
+//! Figures as data, and their evaluation over one run.
+
+use crate::chance::{Draw, In};
+use crate::ledger::{Direction, Material, Place, Utility};
+use crate::program::Desk;
+use crate::source::Source;
+
+/// What a figure measures, and so in which unit it is shown.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Measure {
+    /// kg
+    Mass,
+    /// m³ in the core; shown in litres
+    Volume,
+    /// J in the core; shown in kWh
+    Energy,
+    /// Whole containers
+    Containers,
+    /// kg multiplied by a score from 1 to 10
+    WeightedMass,
+    /// A ratio of two figures
+    Ratio,
+}
+
+impl Measure {
+    /// The unit in which results are written, and what to multiply an SI value with to get there.
+    #[must_use]
+    pub const fn written(self) -> (&'static str, f64) {
+        match self {
+            Self::Mass => ("kg", 1.0),
+            Self::Volume => ("L", 1000.0),
+            Self::Energy => ("kWh", 1.0 / 3.6e6),
+            Self::Containers => ("containers", 1.0),
+            Self::WeightedMass => ("kg_score", 1.0),
+            Self::Ratio => ("ratio", 1.0),
+        }
+    }
+
+    /// Whether a figure grows with the amount of work.
+    #[must_use]
+    pub const fn extensive(self) -> bool {
+        !matches!(self, Self::Ratio)
+    }
+}
+
+/// Under which account a figure stands.
+#[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Group {
+    /// Where every gram goes.
+    Mass,
+    /// What leaves as waste.
+    Waste,
+    /// Carbon dioxide used, vented, recycled.
+    CarbonDioxide,
+    /// E-factor, process mass intensity and their kin.
+    Metric,
+    /// Hazard-weighted mass.
+    Hazard,
+    /// Electricity and water.
+    Energy,
+}
+
+impl Group {
+    /// All, in the order in which they are shown.
+    pub const ALL: [Self; 6] =
+        [Self::Mass, Self::Waste, Self::CarbonDioxide, Self::Metric, Self::Hazard, Self::Energy];
+
+    /// The title shown.
+    #[must_use]
+    pub const fn title(self) -> &'static str {
+        match self {
+            Self::Mass => "Where the mass goes",
+            Self::Waste => "Waste",
+            Self::CarbonDioxide => "Carbon dioxide",
+            Self::Metric => "Mass metrics",
+            Self::Hazard => "Hazard-weighted mass",
+            Self::Energy => "Electricity and water",
+        }
+    }
+}
+
+/// What a cell is multiplied with.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Factor {
+    /// As it stands.
+    One,
+    /// Subtracted.
+    Minus,
+    /// Multiplied with a constant.
+    Times(f64),
+    /// Divided by an input, as a mass by a density.
+    Over(In),
+}
+
+/// One cell of the book with its factor.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Term {
+    /// The place outside the bench.
+    pub place: Place,
+    /// Which way the mass passed it.
+    pub direction: Direction,
+    /// The material.
+    pub material: Material,
+    /// What the cell is multiplied with.
+    pub factor: Factor,
+}
+
+impl Term {
+    /// What has come into a place.
+    #[must_use]
+    pub const fn into(place: Place, material: Material) -> Self {
+        Self { place, direction: Direction::Into, material, factor: Factor::One }
+    }
+
+    /// What has gone out of a place.
+    #[must_use]
+    pub const fn out_of(place: Place, material: Material) -> Self {
+        Self { place, direction: Direction::OutOf, material, factor: Factor::One }
+    }
+
+    /// The same cell with another factor.
+    #[must_use]
+    pub const fn times(mut self, factor: Factor) -> Self {
+        self.factor = factor;
+        self
+    }
+}
+
+/// How a figure follows from the book.
+#[derive(Clone, Debug, PartialEq)]
+pub enum How {
+    /// A sum over cells; a year.
+    Sum(Vec<Term>),
+    /// A utility spent; a year.
+    Spent(Utility),
+    /// Containers filled in a year: the volume of another figure over what one container takes, carried over through
+    /// the year and rounded up once.
+    Containers {
+        /// The index of the figure with the volume.
+        volume: usize,
+        /// What one container takes; m³.
+        takes_m3: f64,
+    },
+    /// One figure over another.
+    Ratio {
+        /// The index of the figure above the line.
+        over: usize,
+        /// The index of the figure below the line.
+        under: usize,
+    },
+}
+
+/// One figure of a route.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Figure {
+    /// Its name for other programs; never reused for another meaning.
+    pub id: String,
+    /// Its title.
+    pub title: String,
+    /// Its account.
+    pub group: Group,
+    /// What it measures.
+    pub measure: Measure,
+    /// What is counted and what is not.
+    pub boundary: String,
+    /// The formula in words or symbols.
+    pub formula: &'static str,
+    /// Where the formula comes from.
+    pub source: Source,
+    /// How it follows from the book.
+    pub how: How,
+}
+
+/// The figures of a route while the accounts are drawn up.
+#[derive(Debug, Default)]
+pub struct Draft {
+    pub(super) figures: Vec<Figure>,
+}
+
+impl Draft {
+    /// Adds a figure and returns its index.
+    pub fn add(&mut self, figure: Figure) -> usize {
+        self.figures.push(figure);
+        self.figures.len() - 1
+    }
+}
+
+/// Evaluates figures over one run, into `out`: a year for those that grow with the work, SI.
+///
+/// A ratio over nothing gives 0: such figures are not drawn up in the first place.
+pub fn evaluate(figures: &[Figure], desk: &Desk, x: Draw<'_>, out: &mut [f64]) {
+    for (i, figure) in figures.iter().enumerate() {
+        let value = match &figure.how {
+            How::Sum(terms) => {
+                let mut sum = 0.0;
+                for term in terms {
+                    let kg = desk.cells.passed(term.place, term.direction, term.material);
+                    sum += match term.factor {
+                        Factor::One => kg,
+                        Factor::Minus => -kg,
+                        Factor::Times(factor) => kg * factor,
+                        Factor::Over(slot) => kg / x.get(slot),
+                    };
+                }
+                sum
+            }
+            How::Spent(utility) => desk.spent[*utility as usize],
+            // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number
+            How::Containers { volume, takes_m3 } => libm::ceil(out[*volume] / takes_m3 - 1e-9),
+            How::Ratio { over, under } => {
+                let under = out[*under];
+                if under > 0.0 { out[*over] / under } else { 0.0 }
+            }
+        };
+        // A negative zero is a zero.
+        out[i] = value + 0.0;
+    }
+}

@@ -1,0 +1,98 @@
+//! Opening a figure: the postings and utilities behind it.
+
+use super::figure::{Factor, Figure, How};
+use super::mass::place_name;
+use super::open::{RouteAccount, rule_of};
+use crate::ledger::{Direction, Place, Posting, StepIx};
+use crate::program::{RouteProgram, SiteUse};
+
+/// What one entry of the book adds to a figure.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Contribution {
+    /// A posting: its index in the trace, and what it adds; SI, a year.
+    Posting {
+        /// The index among the postings.
+        index: usize,
+        /// What it adds to the figure; SI, a year.
+        amount_si: f64,
+    },
+    /// A utility spent: its index in the trace, and what it adds; SI, a year.
+    Spending {
+        /// The index among the utilities spent.
+        index: usize,
+        /// What it adds to the figure; SI, a year.
+        amount_si: f64,
+    },
+}
+
+/// What lies behind a figure, largest first; zeros are left out.
+///
+/// Behind a number of containers lies what is behind its volume; a ratio has its two figures behind it, named by
+/// [`How::Ratio`], and no entries of its own.
+#[must_use]
+pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> Vec<Contribution> {
+    let mut out = Vec::new();
+    match &figure.how {
+        How::Sum(terms) => {
+            for (index, posting) in account.trace.postings.iter().enumerate() {
+                let mut amount_si = 0.0;
+                for term in terms.iter().filter(|t| t.material == posting.material) {
+                    let here = match term.direction {
+                        Direction::Into => posting.to,
+                        Direction::OutOf => posting.from,
+                    };
+                    if here == term.place {
+                        let kg = posting.kg_a_year();
+                        amount_si += match term.factor {
+                            Factor::One => kg,
+                            Factor::Minus => -kg,
+                            Factor::Times(factor) => kg * factor,
+                            Factor::Over(slot) => {
+                                route.inputs.get(slot.0 as usize).map_or(0.0, |i| kg / i.central_si)
+                            }
+                        };
+                    }
+                }
+                if amount_si != 0.0 {
+                    out.push(Contribution::Posting { index, amount_si });
+                }
+            }
+        }
+        How::Spent(utility) => {
+            for (index, spending) in account.trace.spendings.iter().enumerate() {
+                let amount_si = spending.amount_si * spending.runs_a_year;
+                if spending.utility == *utility && amount_si != 0.0 {
+                    out.push(Contribution::Spending { index, amount_si });
+                }
+            }
+        }
+        How::Containers { volume, .. } => {
+            if let Some(volume) = account.figures.get(*volume) {
+                return behind(route, account, volume);
+            }
+        }
+        How::Ratio { .. } => {}
+    }
+    let size = |c: &Contribution| match c {
+        Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => amount_si.abs(),
+    };
+    out.sort_by(|a, b| size(b).total_cmp(&size(a)));
+    out
+}
+
+/// A posting in words: "condenser loss: n-hexane from liquor to hood, step 1 (Soxhlet extraction)".
+#[must_use]
+pub fn describe(route: &RouteProgram, site: &SiteUse, posting: &Posting) -> String {
+    let rule = rule_of(route, posting.step, posting.rule).map_or("", |r| r.name);
+    let name = route.materials.get(posting.material.0 as usize).map_or("", |m| m.name.as_str());
+    let place = |p: Place| place_name(site, p);
+    let by = match posting.step {
+        StepIx::Opening => "before the first step".to_owned(),
+        StepIx::Closing => "at the end".to_owned(),
+        StepIx::Step(i) => {
+            let title = route.steps.get(i as usize).map_or("", |s| s.technique.title);
+            format!("step {} ({title})", i + 1)
+        }
+    };
+    format!("{rule}: {name} from {} to {}, {by}", place(posting.from), place(posting.to))
+}

@@ -1,0 +1,386 @@
+//! The bench on which a route runs: the only hand that writes postings.
+
+use super::{Cells, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
+use crate::chance::{Draw, In};
+use crate::quantity::Kind;
+
+/// A measured figure that takes the place of a computed one.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum Measured {
+    /// A mass in one run of the step; kg.
+    Mass(In),
+    /// A share of what was there.
+    Share(In),
+}
+
+/// What the bench knows of a material of the route.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub struct Nature {
+    /// Its density at the bench's temperature, where it has one; kg/m³.
+    pub density: Option<In>,
+    /// Whether it can evaporate from an extract: solvents, gases and water.
+    pub volatile: bool,
+}
+
+/// The books of one route for one draw. All storage is lent by the caller and reused; nothing is allocated.
+///
+/// A step can only move what is there. Verbs that take materials in a list, or everything in a place, apply a measured
+/// figure in place of the computed one; the sequence of postings is the same in every draw.
+pub struct Bench<'a> {
+    draw: Draw<'a>,
+    natures: &'a [Nature],
+    cells: &'a mut Cells,
+    spent: &'a mut [f64; Utility::COUNT],
+    trace: Option<&'a mut Trace>,
+    step: StepIx,
+    measured: &'a [Option<Measured>],
+    runs_a_year: f64,
+}
+
+impl<'a> Bench<'a> {
+    /// A bench over lent storage, which it clears.
+    pub fn new(
+        draw: Draw<'a>,
+        natures: &'a [Nature],
+        cells: &'a mut Cells,
+        spent: &'a mut [f64; Utility::COUNT],
+        trace: Option<&'a mut Trace>,
+    ) -> Self {
+        cells.clear();
+        spent.fill(0.0);
+        Self { draw, natures, cells, spent, trace, step: StepIx::Opening, measured: &[], runs_a_year: 0.0 }
+    }
+
+    /// Turns to the next step, which runs so often a year.
+    ///
+    /// What lies on the bench is gathered: when four samples make a batch, a step that happens once a batch finds four
+    /// times as much. The other way round is refused, because a batch cannot be taken apart again.
+    ///
+    /// # Errors
+    /// [`Halt::FinerBasis`] when the step runs more often than the one before it and the bench is not empty;
+    /// [`Halt::NoRuns`] when the number of runs is not a positive finite number.
+    pub fn turn_to(
+        &mut self,
+        step: StepIx,
+        runs_a_year: f64,
+        measured: &'a [Option<Measured>],
+    ) -> Result<(), Halt> {
+        if !(runs_a_year > 0.0 && runs_a_year.is_finite()) {
+            return Err(Halt::NoRuns);
+        }
+        if runs_a_year > self.runs_a_year {
+            let left_kg = self.cells.bench_kg();
+            if left_kg > 0.0 {
+                return Err(Halt::FinerBasis { left_kg });
+            }
+        } else if runs_a_year < self.runs_a_year {
+            // m_coarse = m_fine · runs_fine / runs_coarse
+            self.cells.gather(self.runs_a_year / runs_a_year);
+        }
+        self.runs_a_year = runs_a_year;
+        self.step = step;
+        self.measured = measured;
+        Ok(())
+    }
+
+    /// Turns to the closing of the book, on the basis of the last step.
+    pub fn at_close(&mut self) {
+        self.step = StepIx::Closing;
+        self.measured = &[];
+    }
+
+    /// What lies in a bench place; kg in this run.
+    #[inline]
+    #[must_use]
+    pub fn there(&self, place: Place, m: Material) -> f64 {
+        self.cells.there(place, m)
+    }
+
+    /// All that lies in a bench place; kg in this run.
+    #[must_use]
+    pub fn mass_kg(&self, place: Place) -> f64 {
+        let mut sum = 0.0;
+        for kg in self.cells.lying(place) {
+            sum += kg;
+        }
+        sum
+    }
+
+    /// The volume of the liquids that lie in a bench place, as if they mixed without change of volume; m³.
+    ///
+    /// Only materials that can evaporate count: a dissolved solid is left out. Excess volumes of solvent mixtures reach a
+    /// few per cent (ethanol and water: about −3.5 %, from memory).
+    #[must_use]
+    pub fn liquid_volume_m3(&self, place: Place) -> f64 {
+        let mut sum = 0.0;
+        for (kg, nature) in self.cells.lying(place).iter().zip(self.natures) {
+            if let (true, Some(density)) = (nature.volatile, nature.density) {
+                // V = Σ mᵢ / ρᵢ
+                sum += kg / self.draw.get(density);
+            }
+        }
+        sum
+    }
+
+    /// How many materials the route has.
+    #[must_use]
+    pub fn materials(&self) -> usize {
+        self.natures.len()
+    }
+
+    /// Whether a material can evaporate from an extract.
+    #[must_use]
+    pub fn volatile(&self, m: Material) -> bool {
+        self.natures.get(m.0 as usize).is_some_and(|n| n.volatile)
+    }
+
+    fn post(&mut self, from: Place, to: Place, m: Material, kg: f64, rule: RuleIx, measured: bool) {
+        self.cells.move_mass(from, to, m, kg, self.runs_a_year);
+        if let Some(trace) = self.trace.as_deref_mut() {
+            let (step, runs_a_year) = (self.step, self.runs_a_year);
+            trace.postings.push(Posting { step, rule, from, to, material: m, kg, runs_a_year, measured });
+        }
+    }
+
+    /// Draws a mass from the store, or takes in feed.
+    ///
+    /// # Errors
+    /// [`Halt::NotANumber`] for a mass that is negative or not finite.
+    pub fn charge(
+        &mut self,
+        from: Place,
+        to: Place,
+        m: Material,
+        kg: f64,
+        rule: RuleIx,
+    ) -> Result<f64, Halt> {
+        if !(kg >= 0.0 && kg.is_finite()) {
+            return Err(Halt::NotANumber { rule });
+        }
+        self.post(from, to, m, kg, rule, false);
+        Ok(kg)
+    }
+
+    /// Moves exactly this mass of one material.
+    ///
+    /// # Errors
+    /// [`Halt::Short`] when less is there, [`Halt::NotANumber`] for a mass that is negative or not finite.
+    pub fn take(&mut self, from: Place, to: Place, m: Material, kg: f64, rule: RuleIx) -> Result<f64, Halt> {
+        self.take_as(from, to, m, kg, rule, false)
+    }
+
+    fn take_as(
+        &mut self,
+        from: Place,
+        to: Place,
+        m: Material,
+        kg: f64,
+        rule: RuleIx,
+        measured: bool,
+    ) -> Result<f64, Halt> {
+        if !(kg >= 0.0 && kg.is_finite()) {
+            return Err(Halt::NotANumber { rule });
+        }
+        let there_kg = self.there(from, m);
+        // A rounding in the last places is not a shortage.
+        if kg > there_kg * (1.0 + 1e-12) {
+            return Err(Halt::Short { rule, place: from, material: m, wanted_kg: kg, there_kg });
+        }
+        let kg = if kg > there_kg { there_kg } else { kg };
+        self.post(from, to, m, kg, rule, measured);
+        Ok(kg)
+    }
+
+    /// Moves up to this mass of one material: saturation is the physics, so that less is no shortage.
+    ///
+    /// # Errors
+    /// [`Halt::NotANumber`] for a mass that is negative or not finite.
+    pub fn up_to(&mut self, from: Place, to: Place, m: Material, kg: f64, rule: RuleIx) -> Result<f64, Halt> {
+        let there_kg = self.there(from, m);
+        self.take_as(from, to, m, if kg > there_kg { there_kg } else { kg }, rule, false)
+    }
+
+    /// Moves a share of one material.
+    ///
+    /// # Errors
+    /// [`Halt::Short`] for a share above one, [`Halt::NotANumber`] for one that is negative or not finite.
+    pub fn share(
+        &mut self,
+        from: Place,
+        to: Place,
+        m: Material,
+        share: f64,
+        rule: RuleIx,
+    ) -> Result<f64, Halt> {
+        let kg = self.there(from, m) * share;
+        self.take(from, to, m, kg, rule)
+    }
+
+    /// Moves everything of one material; exactly 0 is left.
+    pub fn all(&mut self, from: Place, to: Place, m: Material, rule: RuleIx) -> f64 {
+        let kg = self.there(from, m);
+        self.post(from, to, m, kg, rule, false);
+        kg
+    }
+
+    /// Moves everything of every material; exactly 0 is left. Returns the mass moved; kg.
+    pub fn sweep(&mut self, from: Place, to: Place, rule: RuleIx) -> f64 {
+        let mut sum = 0.0;
+        for i in 0..self.natures.len() {
+            sum += self.all(from, to, Material(index(i)), rule);
+        }
+        sum
+    }
+
+    /// Moves the computed masses of several materials, or the measured figure in their place.
+    ///
+    /// A measured mass is split in the computed proportions; where the computed total is zero, by what is there. A measured
+    /// share applies to each listed material. Returns the mass moved; kg.
+    ///
+    /// # Errors
+    /// As [`Bench::take`]; [`Halt::NothingToMeasure`] where a measured mass finds nothing.
+    pub fn split(
+        &mut self,
+        from: Place,
+        to: Place,
+        parts: &[(Material, f64)],
+        rule: RuleIx,
+    ) -> Result<f64, Halt> {
+        let (mut computed_kg, mut there_kg) = (0.0, 0.0);
+        for &(m, kg) in parts {
+            computed_kg += kg;
+            there_kg += self.there(from, m);
+        }
+        let mut sum = 0.0;
+        match self.measured_for(rule) {
+            None => {
+                for &(m, kg) in parts {
+                    sum += self.take_as(from, to, m, kg, rule, false)?;
+                }
+            }
+            Some(Measured::Share(slot)) => {
+                let share = self.draw.get(slot);
+                self.note_computed(rule, computed_kg);
+                for &(m, _) in parts {
+                    sum += self.take_as(from, to, m, self.there(from, m) * share, rule, true)?;
+                }
+            }
+            Some(Measured::Mass(slot)) => {
+                let total_kg = self.draw.get(slot);
+                self.note_computed(rule, computed_kg);
+                if total_kg > 0.0 && there_kg <= 0.0 {
+                    return Err(Halt::NothingToMeasure { rule, place: from });
+                }
+                for &(m, kg) in parts {
+                    let kg = if computed_kg > 0.0 {
+                        total_kg * (kg / computed_kg)
+                    } else if there_kg > 0.0 {
+                        total_kg * (self.there(from, m) / there_kg)
+                    } else {
+                        0.0
+                    };
+                    sum += self.take_as(from, to, m, kg, rule, true)?;
+                }
+            }
+        }
+        Ok(sum)
+    }
+
+    /// Moves a share of everything in a place that can evaporate, or the measured figure in its place. Returns the mass; kg.
+    ///
+    /// # Errors
+    /// As [`Bench::split`].
+    pub fn share_volatile(&mut self, from: Place, to: Place, share: f64, rule: RuleIx) -> Result<f64, Halt> {
+        self.share_where(from, to, share, rule, true)
+    }
+
+    /// Moves a share of everything in a place, or the measured figure in its place. Returns the mass moved; kg.
+    ///
+    /// # Errors
+    /// As [`Bench::split`].
+    pub fn share_all(&mut self, from: Place, to: Place, share: f64, rule: RuleIx) -> Result<f64, Halt> {
+        self.share_where(from, to, share, rule, false)
+    }
+
+    fn share_where(
+        &mut self,
+        from: Place,
+        to: Place,
+        share: f64,
+        rule: RuleIx,
+        only_volatile: bool,
+    ) -> Result<f64, Halt> {
+        let mut there_kg = 0.0;
+        for (kg, nature) in self.cells.lying(from).iter().zip(self.natures) {
+            if nature.volatile || !only_volatile {
+                there_kg += kg;
+            }
+        }
+        let (share, measured) = match self.measured_for(rule) {
+            None => (share, false),
+            Some(which) => {
+                self.note_computed(rule, there_kg * share);
+                match which {
+                    Measured::Share(slot) => (self.draw.get(slot), true),
+                    Measured::Mass(slot) => {
+                        let total_kg = self.draw.get(slot);
+                        if there_kg > 0.0 {
+                            (total_kg / there_kg, true)
+                        } else if total_kg > 0.0 {
+                            return Err(Halt::NothingToMeasure { rule, place: from });
+                        } else {
+                            (0.0, true)
+                        }
+                    }
+                }
+            }
+        };
+        let mut sum = 0.0;
+        for i in 0..self.natures.len() {
+            if self.natures[i].volatile || !only_volatile {
+                let m = Material(index(i));
+                sum += self.take_as(from, to, m, self.there(from, m) * share, rule, measured)?;
+            }
+        }
+        Ok(sum)
+    }
+
+    fn measured_for(&self, rule: RuleIx) -> Option<Measured> {
+        self.measured.get(rule.0 as usize).copied().flatten()
+    }
+
+    fn note_computed(&mut self, rule: RuleIx, kg: f64) {
+        self.note(rule, "computed in its place", kg, Kind::Mass);
+    }
+
+    /// Asks that something lies in a place.
+    ///
+    /// # Errors
+    /// [`Halt::Empty`] when nothing does.
+    pub fn need(&self, place: Place) -> Result<f64, Halt> {
+        let kg = self.mass_kg(place);
+        if kg > 0.0 { Ok(kg) } else { Err(Halt::Empty { place }) }
+    }
+
+    /// Spends a utility; SI amount in this run.
+    pub fn spend(&mut self, utility: Utility, amount_si: f64, rule: RuleIx) {
+        self.spent[utility as usize] += amount_si * self.runs_a_year;
+        if let Some(trace) = self.trace.as_deref_mut() {
+            let (step, runs_a_year) = (self.step, self.runs_a_year);
+            trace.spendings.push(Spending { step, rule, utility, amount_si, runs_a_year });
+        }
+    }
+
+    /// Notes a number put into a rule; does nothing unless the run is traced.
+    #[inline]
+    pub fn note(&mut self, rule: RuleIx, symbol: &'static str, value_si: f64, kind: Kind) {
+        if let Some(trace) = self.trace.as_deref_mut() {
+            trace.notes.push(Note { step: self.step, rule, symbol, value_si, kind });
+        }
+    }
+}
+
+/// A route never holds more materials than fit; the resolver sees to it.
+fn index(i: usize) -> u16 {
+    u16::try_from(i).unwrap_or(u16::MAX)
+}

@@ -1,0 +1,75 @@
+//! Why a run stops. In the single run a halt is the error shown; in a sampled run it is counted by kind.
+
+use super::{Material, Place, RuleIx};
+use crate::co2::StateError;
+
+/// A run cannot go on. `Copy`, carrying values and no text, so that it costs nothing in a draw.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Halt {
+    /// A rule wants more of a material than lies in the place.
+    Short {
+        /// The rule.
+        rule: RuleIx,
+        /// From where.
+        place: Place,
+        /// Of what.
+        material: Material,
+        /// How much was wanted; kg.
+        wanted_kg: f64,
+        /// How much was there; kg.
+        there_kg: f64,
+    },
+    /// A measured mass stands against a place that holds nothing it could apply to.
+    NothingToMeasure {
+        /// The rule.
+        rule: RuleIx,
+        /// From where.
+        place: Place,
+    },
+    /// A step needs something in a place that is empty.
+    Empty {
+        /// The place.
+        place: Place,
+    },
+    /// The step runs more often than the one before it while something still lies on the bench.
+    FinerBasis {
+        /// What lies there; kg.
+        left_kg: f64,
+    },
+    /// Something is left in a bench place and nothing says where it goes.
+    NoEnd {
+        /// The place.
+        place: Place,
+        /// How much is left; kg.
+        left_kg: f64,
+    },
+    /// A volume has to hold more than fits.
+    DoesNotFit {
+        /// What has to fit; m³.
+        wanted_m3: f64,
+        /// What there is; m³.
+        there_m3: f64,
+    },
+    /// More is to be left than there is.
+    NotReached {
+        /// What is to be left; m³.
+        wanted_m3: f64,
+        /// What there is; m³.
+        there_m3: f64,
+    },
+    /// The equation of state has no such state of CO2.
+    Co2(StateError),
+    /// A computed amount is not finite, or negative.
+    NotANumber {
+        /// The rule.
+        rule: RuleIx,
+    },
+    /// The work comes to no runs at all, or to a number that is not finite.
+    NoRuns,
+}
+
+impl From<StateError> for Halt {
+    fn from(e: StateError) -> Self {
+        Self::Co2(e)
+    }
+}

@@ -1,0 +1,131 @@
+//! Behind the vessel: co-solvent, a liquid trap and its losses, the rinse of a solid one.
+
+use crate::chance::{Draw, In};
+use crate::ledger::{Bench, Halt, Place, RuleIx};
+use crate::program::Reader;
+use crate::quantity::Kind;
+use crate::source::{COMMON_PRACTICE, FROM_MEMORY};
+use crate::step::{Control, Mixture, Param};
+
+pub(super) const COSOLVENT: Param = Param::new("cosolvent", "Co-solvent", Control::Mixture)
+    .hint("One material, or several with shares by volume.");
+pub(super) const COSOLVENT_FLOW: Param =
+    Param::quantity("cosolvent_flow", "Flow of co-solvent", Kind::VolumeFlow)
+        .physical(0.0, 1.0)
+        .hint("As liquid at the bench's temperature, while CO2 flows: 5 % of 4 mL/min is 0.2 mL/min.")
+        .source(COMMON_PRACTICE);
+pub(super) const COSOLVENT_KEPT: Param =
+    Param::quantity("cosolvent_kept", "Share of the co-solvent that the trap keeps", Kind::Fraction)
+        .default("90 %", FROM_MEMORY)
+        .physical(0.0, 1.0)
+        .hint("The rest leaves with the gas.")
+        .source(FROM_MEMORY);
+pub(super) const TRAP_SOLVENT: Param = Param::new("trap_solvent", "Solvent in the trap", Control::Mixture)
+    .hint("Where the extract is collected in liquid; left out for a solid trap or a separator.");
+pub(super) const TRAP_VOLUME: Param = Param::quantity("trap_volume", "Volume in the trap", Kind::Volume)
+    .physical(0.0, 10.0)
+    .usual(1e-6, 1e-4)
+    .hint("At the start; 3 to 15 mL is usual.")
+    .source(COMMON_PRACTICE);
+pub(super) const TRAP_LOSS: Param = Param::quantity(
+    "trap_loss",
+    "Share of the trap solvent blown off",
+    Kind::Fraction,
+)
+.default("20 %", FROM_MEMORY)
+.physical(0.0, 1.0)
+.usual(0.0, 0.6)
+.hint("Of the trap's own solvent, by the gas that bubbles through. Read the level after the run to know.")
+.source(FROM_MEMORY);
+pub(super) const RINSE: Param = Param::new("rinse", "Solvent that rinses the trap", Control::Mixture)
+    .hint("1 to 2 mL at a time is usual for a solid trap.");
+pub(super) const RINSE_VOLUME: Param = Param::quantity("rinse_volume", "Volume of the rinse", Kind::Volume)
+    .physical(0.0, 10.0)
+    .usual(5e-7, 5e-5)
+    .hint("All portions together.")
+    .source(COMMON_PRACTICE);
+
+/// The trap of one step.
+pub(super) struct Trap {
+    cosolvent: Option<(Mixture, In)>,
+    kept: In,
+    solvent: Option<(Mixture, In)>,
+    loss: In,
+    rinse: Option<(Mixture, In)>,
+}
+
+impl Trap {
+    pub(super) fn read(r: &mut Reader<'_, '_>) -> Self {
+        let mut pair = |mixture: &'static Param, volume: &'static Param| {
+            let (m, v) = (r.optional_mixture(mixture), r.optional(volume));
+            match (&m, v) {
+                (Some(_), None) => {
+                    r.problem(volume.key, format!("{} without its amount", mixture.key), volume.hint);
+                }
+                (None, Some(_)) => {
+                    r.problem(mixture.key, format!("{} without its solvent", volume.key), mixture.hint);
+                }
+                _ => {}
+            }
+            m.zip(v)
+        };
+        let cosolvent = pair(&COSOLVENT, &COSOLVENT_FLOW);
+        let solvent = pair(&TRAP_SOLVENT, &TRAP_VOLUME);
+        let rinse = pair(&RINSE, &RINSE_VOLUME);
+        Self { cosolvent, kept: r.quantity(&COSOLVENT_KEPT), solvent, loss: r.quantity(&TRAP_LOSS), rinse }
+    }
+
+    pub(super) fn fill(&self, x: Draw<'_>, b: &mut Bench<'_>, rule: RuleIx) -> Result<(), Halt> {
+        if let Some((mixture, volume)) = &self.solvent {
+            mixture.charge(x, b, Place::TRAP, x.get(*volume), rule)?;
+        }
+        Ok(())
+    }
+
+    /// Co-solvent pumped while CO2 flows: part of it stays in the trap, the rest leaves with the gas.
+    pub(super) fn cosolvent(
+        &self,
+        x: Draw<'_>,
+        b: &mut Bench<'_>,
+        time_s: f64,
+        vent: Place,
+        rule: RuleIx,
+    ) -> Result<(), Halt> {
+        if let Some((mixture, flow)) = &self.cosolvent {
+            let kept = x.get(self.kept);
+            b.note(rule, "q", x.get(*flow), Kind::VolumeFlow);
+            b.note(rule, "t", time_s, Kind::Time);
+            b.note(rule, "k", kept, Kind::Fraction);
+            // mᵢ = q t φᵢ ρᵢ
+            let masses_kg = mixture.masses_kg(x, x.get(*flow) * time_s);
+            for (part, kg) in mixture.parts.iter().zip(masses_kg) {
+                b.charge(Place::STORE, Place::TRAP, part.material, kg * kept, rule)?;
+                b.charge(Place::STORE, vent, part.material, kg * (1.0 - kept), rule)?;
+            }
+        }
+        Ok(())
+    }
+
+    /// What the gas blows off a liquid trap: a share of all that can evaporate there.
+    pub(super) fn blow_off(
+        &self,
+        x: Draw<'_>,
+        b: &mut Bench<'_>,
+        vent: Place,
+        rule: RuleIx,
+    ) -> Result<(), Halt> {
+        if self.solvent.is_some() {
+            b.note(rule, "s", x.get(self.loss), Kind::Fraction);
+            // mᵢ = s mᵢ(trap)
+            b.share_volatile(Place::TRAP, vent, x.get(self.loss), rule)?;
+        }
+        Ok(())
+    }
+
+    pub(super) fn rinse(&self, x: Draw<'_>, b: &mut Bench<'_>, rule: RuleIx) -> Result<(), Halt> {
+        if let Some((mixture, volume)) = &self.rinse {
+            mixture.charge(x, b, Place::TRAP, x.get(*volume), rule)?;
+        }
+        Ok(())
+    }
+}
