@@ -561,7 +561,7 @@ impl<'p> RouteBuilder<'p> {
                 return In(0);
             }
         };
-        match read(text, Kind::Count) {
+        match read(text, Kind::Number) {
             Ok(amount) if amount.central_si >= least => self.input(path.to_owned(), &amount, Origin::Entered),
             Ok(amount) => {
                 self.problems.push(Problem::error(
