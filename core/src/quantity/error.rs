@@ -328,6 +328,9 @@ impl AmountError {
             Self::OneSided { .. } => "write both limits, like 0 to 5 mL".to_owned(),
             Self::Approximate { .. } => "write the size of the doubt, like 250 ± 25 mL".to_owned(),
             Self::NoUnit { kind, .. } => like(*kind),
+            Self::SpreadWithoutUnit { found, unit, .. } if unit.starts_with('%') => {
+                format!("{found} {unit}?")
+            }
             Self::SpreadWithoutUnit { found, unit, .. } => format!("{found} {unit} or {found} %?"),
             Self::UnknownUnit { kind, suggestion, .. } => match suggestion {
                 Some(unit) => format!("is “{unit}” meant? {}", capital(&accepted(*kind))),

@@ -230,11 +230,12 @@ fn coverage(scan: &mut Scan) -> Result<Option<(Decimal, String, usize)>, AmountE
         }
     };
     scan.skip_spaces();
-    if bracket && scan.peek(0) == Some(')') {
+    let closed = scan.peek(0) == Some(')');
+    if bracket && closed {
         scan.step(1);
     }
     let found = scan.since(from);
-    if number.is_negative() || number.is_zero() {
+    if number.is_negative() || number.is_zero() || bracket != closed {
         return Err(AmountError::BadCoverage { found, at: from });
     }
     Ok(Some((number, found, from)))
