@@ -1,0 +1,241 @@
+//! Finding a material by name, synonym or CAS number, and suggesting one that comes close.
+use super::load::{Loaded, load};
+use super::{Substance, UnknownMaterial};
+use crate::source::Source;
+use std::sync::OnceLock;
+
+/// Names longer than this are not compared with the catalogue: no material has one.
+const LONGEST_NAME: usize = 80;
+/// How many suggestions an unknown name gets.
+const SUGGESTIONS: usize = 3;
+
+/// Every material that Thimbleworth knows, with the bibliography of its figures.
+#[derive(Debug)]
+pub struct Catalogue {
+    substances: Vec<Substance>,
+    /// Folded name, synonym or CAS number, and whose it is; sorted.
+    index: Vec<(String, usize)>,
+    sources: Vec<(&'static str, Source)>,
+    faults: Vec<String>,
+}
+
+/// The catalogue, read once from the embedded tables.
+///
+/// ```
+/// let catalogue = thimbleworth::material::catalogue();
+/// assert_eq!(catalogue.find("dcm").unwrap().name, "dichloromethane");
+/// assert_eq!(catalogue.find("75-09-2").unwrap().name, "dichloromethane");
+/// assert_eq!(catalogue.find("acetine").unwrap_err().suggestions, ["acetone"]);
+/// ```
+pub fn catalogue() -> &'static Catalogue {
+    static CATALOGUE: OnceLock<Catalogue> = OnceLock::new();
+    CATALOGUE.get_or_init(Catalogue::from_tables)
+}
+
+impl Catalogue {
+    /// Reads the embedded tables anew; [`catalogue`] does it once.
+    #[must_use]
+    pub fn from_tables() -> Self {
+        let Loaded { substances, sources, faults } = load();
+        let mut index = Vec::with_capacity(substances.len() * 4);
+        for (place, substance) in substances.iter().enumerate() {
+            index.push((fold(&substance.name), place));
+            for synonym in substance.synonyms.iter().chain(&substance.cas) {
+                index.push((fold(synonym), place));
+            }
+        }
+        index.sort_unstable();
+        index.dedup();
+        Self { substances, index, sources, faults }
+    }
+
+    /// The material with this name, synonym or CAS number. Case, spaces, hyphens and commas do not matter, nor does
+    /// `sulph` or `sulf`.
+    ///
+    /// # Errors
+    /// [`UnknownMaterial`] with names that come close.
+    pub fn find(&self, name: &str) -> Result<&Substance, UnknownMaterial> {
+        let short = name.len() <= LONGEST_NAME;
+        let key = if short { fold(name) } else { String::new() };
+        let found = self.index.binary_search_by(|(entry, _)| entry.as_str().cmp(&key)).ok();
+        let substance =
+            found.and_then(|at| self.index.get(at)).and_then(|&(_, place)| self.substances.get(place));
+        substance.ok_or_else(|| UnknownMaterial {
+            asked: name.chars().take(LONGEST_NAME).collect(),
+            suggestions: if key.is_empty() { Vec::new() } else { self.suggest(&key) },
+        })
+    }
+
+    /// Every material, in the order of the tables.
+    pub fn iter(&self) -> std::slice::Iter<'_, Substance> {
+        self.substances.iter()
+    }
+
+    /// The citation behind a key that stands in [`Figure::source`](super::Figure), and how far it has been traced.
+    ///
+    /// ```
+    /// use thimbleworth::source::Standing;
+    /// let source = thimbleworth::material::catalogue().source("VDI 2010").unwrap();
+    /// assert_eq!(source.standing, Standing::Secondary);
+    /// ```
+    #[must_use]
+    pub fn source(&self, key: &str) -> Option<&Source> {
+        let place = self.sources.binary_search_by(|(entry, _)| (*entry).cmp(key)).ok()?;
+        self.sources.get(place).map(|(_, source)| source)
+    }
+
+    /// Every key of the bibliography with its citation.
+    pub fn sources(&self) -> impl Iterator<Item = (&'static str, &Source)> {
+        self.sources.iter().map(|(key, source)| (*key, source))
+    }
+
+    /// What in the embedded tables could not be read; empty in a sound build, which a test holds it to.
+    #[must_use]
+    pub fn faults(&self) -> &[String] {
+        &self.faults
+    }
+
+    fn suggest(&self, key: &str) -> Vec<String> {
+        let asked: Vec<char> = key.chars().collect();
+        let furthest = 1 + asked.len() / 4;
+        let mut close: Vec<(usize, usize)> = Vec::new();
+        for (entry, place) in &self.index {
+            let mut apart = distance(&asked, entry, furthest);
+            // The beginning of a name counts as one slip: "diethyl" means "diethyl ether".
+            if asked.len() >= 4 && entry.starts_with(key) {
+                apart = Some(apart.map_or(1, |apart| if apart < 1 { apart } else { 1 }));
+            }
+            if let Some(apart) = apart {
+                match close.iter_mut().find(|(_, known)| known == place) {
+                    Some(entry) if entry.0 <= apart => {}
+                    Some(entry) => entry.0 = apart,
+                    None => close.push((apart, *place)),
+                }
+            }
+        }
+        close.sort_unstable();
+        close
+            .iter()
+            .take(SUGGESTIONS)
+            .filter_map(|&(_, place)| self.substances.get(place))
+            .map(|substance| substance.name.clone().into_owned())
+            .collect()
+    }
+}
+
+impl<'a> IntoIterator for &'a Catalogue {
+    type Item = &'a Substance;
+    type IntoIter = std::slice::Iter<'a, Substance>;
+
+    fn into_iter(self) -> Self::IntoIter {
+        self.iter()
+    }
+}
+
+/// Letters and digits in lower case, `ph` of `sulph` as `f`: what two spellings of one name share.
+fn fold(name: &str) -> String {
+    let mut folded: String =
+        name.chars().filter(|c| c.is_alphanumeric()).flat_map(char::to_lowercase).collect();
+    if folded.contains("sulph") {
+        folded = folded.replace("sulph", "sulf");
+    }
+    folded
+}
+
+/// Slips between the two names: letters added, left out, mistaken or swapped with a neighbour (optimal string alignment);
+/// `None` when there are more than `furthest`.
+fn distance(asked: &[char], entry: &str, furthest: usize) -> Option<usize> {
+    let entry: Vec<char> = entry.chars().collect();
+    if asked.len().abs_diff(entry.len()) > furthest {
+        return None;
+    }
+    let mut before: Vec<usize> = Vec::new();
+    let mut last: Vec<usize> = (0..=entry.len()).collect();
+    for (i, &a) in asked.iter().enumerate() {
+        let mut row = Vec::with_capacity(entry.len() + 1);
+        row.push(i + 1);
+        let mut previous = None;
+        for (j, &b) in entry.iter().enumerate() {
+            let cell = |row: &[usize], place: usize| row.get(place).copied().unwrap_or(usize::MAX / 2);
+            let mut least = cell(&last, j) + usize::from(a != b);
+            for step in [cell(&last, j + 1) + 1, cell(&row, j) + 1] {
+                if step < least {
+                    least = step;
+                }
+            }
+            let swapped = i > 0 && previous == Some(a) && asked.get(i - 1) == Some(&b);
+            if swapped && j > 0 && cell(&before, j - 1) + 1 < least {
+                least = cell(&before, j - 1) + 1;
+            }
+            row.push(least);
+            previous = Some(b);
+        }
+        before = last;
+        last = row;
+    }
+    last.last().copied().filter(|&slips| slips <= furthest)
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_tables_are_sound() {
+        assert_eq!(catalogue().faults(), [""; 0]);
+    }
+
+    #[test]
+    fn no_two_materials_share_a_name() {
+        for pair in catalogue().index.windows(2) {
+            assert_ne!(pair[0].0, pair[1].0);
+        }
+    }
+
+    #[test]
+    fn finds_what_people_write() {
+        for (asked, name) in [
+            ("hexane", "n-hexane"),
+            ("N-Hexane", "n-hexane"),
+            ("DCM", "dichloromethane"),
+            ("methylene chloride", "dichloromethane"),
+            ("MeOH", "methanol"),
+            ("iso-octane", "isooctane"),
+            ("2,2,4-trimethylpentane", "isooctane"),
+            ("ether", "diethyl ether"),
+            ("methyl ethyl ketone", "butanone"),
+            ("MEK", "butanone"),
+            (" Ethyl  Acetate ", "ethyl acetate"),
+            ("anhydrous sodium sulphate", "sodium sulfate"),
+            ("7732-18-5", "water"),
+            ("CO2", "carbon dioxide"),
+            ("1,4 dioxane", "1,4-dioxane"),
+        ] {
+            assert_eq!(catalogue().find(asked).unwrap().name, name, "{asked}");
+        }
+    }
+
+    #[test]
+    fn suggests_what_comes_close() {
+        let suggestions = |asked: &str| catalogue().find(asked).unwrap_err().suggestions;
+        assert_eq!(suggestions("metahnol")[0], "methanol");
+        assert_eq!(suggestions("cyclohexan")[0], "cyclohexane");
+        assert_eq!(suggestions("67-64-2")[0], "acetone");
+        assert_eq!(suggestions("diethyl")[0], "diethyl ether");
+        assert!(suggestions("unobtainium").is_empty());
+        assert!(suggestions("").is_empty());
+        assert!(suggestions("---").is_empty());
+        let long = catalogue().find(&"x".repeat(1_000_000)).unwrap_err();
+        assert_eq!((long.asked.len(), long.suggestions.len()), (LONGEST_NAME, 0));
+    }
+
+    #[test]
+    fn counts_slips() {
+        let slips = |a: &str, b: &str| distance(&a.chars().collect::<Vec<_>>(), b, 9);
+        assert_eq!(slips("acetone", "acetone"), Some(0));
+        assert_eq!(slips("actone", "acetone"), Some(1));
+        assert_eq!(slips("acteone", "acetone"), Some(1));
+        assert_eq!(slips("toluene", "xylene"), Some(3));
+        assert_eq!(distance(&['a'], "abcdef", 2), None);
+    }
+}
