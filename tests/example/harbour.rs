@@ -78,19 +78,19 @@ fn pressurised_liquid_solvent_by_hand() {
 
 /// CO2: what the pump head meters, and the last fill of the vessel.
 ///
-/// Witness of the fill's density: 0.63 g/mL at 120 °C and 4900 psi, stated in US EPA SW-846 3561 (from memory). At 4 °C and
-/// 60 bar liquid CO2 has 0.924 g/mL (reference equation of state, which has its own evidence).
+/// Witnesses: US EPA SW-846 3561 states 0.63 g/mL at 120 °C and 4900 psi; 3562 states that 100 mL at a pump head at 4 °C
+/// are 92 g, which fits a supply of about 60 bar. Two digits, so half a per cent.
 #[test]
 fn carbon_dioxide_by_hand() {
     let account = accounted("harbour-sediment");
     let found = route(&account, 0, "Supercritical CO2");
     // 10 min at 2.0, 30 min at 3.8, 10 min at 4.0 mL/min: the co-solvent's 0.2 mL/min is not CO2.
-    let metered_g = 0.924 * (10.0 * 2.0 + 30.0 * 3.8 + 10.0 * 4.0);
-    near(a_year(found, "co2.circulated"), metered_g * EXTRACTIONS / 1000.0, 1e-3);
+    let metered_g = 0.92 * (10.0 * 2.0 + 30.0 * 3.8 + 10.0 * 4.0);
+    near(a_year(found, "co2.circulated"), metered_g * EXTRACTIONS / 1000.0, 6e-3);
     // 7 mL less 2 g at 2.6 g/mL and 1 mL of filler; stages one and two fill it, only the last one lets it down.
     let void_ml = 7.0 - 2.0 / 2.6 - 1.0;
     let vented_kg = (metered_g + 0.63 * void_ml) * EXTRACTIONS / 1000.0;
-    near(a_year(found, "co2.vented"), vented_kg, 2e-3);
+    near(a_year(found, "co2.vented"), vented_kg, 6e-3);
     // Nothing is recycled and nothing carried off: what is drawn is vented.
     near(a_year(found, "co2.used"), a_year(found, "co2.vented"), 1e-12);
     near(a_year(found, "mass.drawn.methanol"), 0.791 * 0.2 * 0.2 * 30.0 * EXTRACTIONS / 1000.0, 2e-3);

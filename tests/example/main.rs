@@ -4,10 +4,13 @@
 //! Densities at 20 °C in the hand calculations are from memory, to three or four digits: n-hexane 0.659, acetone 0.790,
 //! dichloromethane 1.326, ethyl acetate 0.900, ethanol 0.789 g/mL. So they witness the bookkeeping; the catalogue's own
 //! densities have their evidence elsewhere.
+// Helpers of tests may panic: that is how a test fails.
+#![allow(clippy::unwrap_used, clippy::panic)]
 
 mod botanical;
 mod every;
 mod harbour;
+mod prose;
 mod water;
 
 use thimbleworth::account::{Account, RouteAccount, account_text};
