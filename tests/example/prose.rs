@@ -2,7 +2,8 @@
 
 use super::{a_year, accounted, beside, route};
 use thimbleworth::account::account_text;
-use thimbleworth::plan::Severity;
+use thimbleworth::plan::{Severity, schema};
+use thimbleworth::program::OWN_FIELDS;
 
 const README: &str = include_str!("../../README.md");
 const DEVELOPERS: &str = include_str!("../../DEVELOPERS.md");
@@ -62,4 +63,49 @@ fn plans_in_the_prose_account() {
         }
     }
     assert!(plans >= 1);
+}
+
+/// The reference of the plan document names every key that the reader knows.
+#[test]
+fn every_key_of_a_plan_is_in_the_reference() {
+    fn keys(schema: &serde_json::Value, found: &mut Vec<String>) {
+        match schema {
+            serde_json::Value::Object(map) => {
+                for (key, inner) in map {
+                    if let ("properties", Some(properties)) = (key.as_str(), inner.as_object()) {
+                        found.extend(properties.keys().cloned());
+                    }
+                    keys(inner, found);
+                }
+            }
+            serde_json::Value::Array(items) => items.iter().for_each(|i| keys(i, found)),
+            _ => {}
+        }
+    }
+    let mut found: Vec<String> = OWN_FIELDS.iter().map(|f| f.key.to_owned()).collect();
+    keys(&serde_json::from_str(&schema(&[])).unwrap(), &mut found);
+    assert!(found.len() > 50, "{found:?}");
+    for key in found {
+        assert!(DEVELOPERS.contains(&format!("`{key}`")), "DEVELOPERS.md should name the key {key}");
+    }
+}
+
+/// The layout names every room of the core, and no room that is not there.
+#[test]
+fn the_layout_is_the_tree() {
+    let layout = DEVELOPERS.split("  src/\n").nth(1).unwrap().split("  command/").next().unwrap();
+    let mut told: Vec<&str> = layout.lines().filter_map(|l| l.split_whitespace().next()).collect();
+    let source = std::path::Path::new(env!("CARGO_MANIFEST_DIR")).join("../core/src");
+    let mut there: Vec<String> = std::fs::read_dir(source)
+        .unwrap()
+        .map(|entry| {
+            let entry = entry.unwrap();
+            let name = entry.file_name().into_string().unwrap();
+            if entry.path().is_dir() { format!("{name}/") } else { name }
+        })
+        .filter(|name| name != "lib.rs")
+        .collect();
+    told.sort_unstable();
+    there.sort_unstable();
+    assert_eq!(told, there);
 }
