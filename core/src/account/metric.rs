@@ -4,8 +4,9 @@ use super::figure::{Draft, Factor, Figure, Group, How, Measure, Term};
 use super::mass::{destinations, materials};
 use crate::ledger::{Direction, Material, Place};
 use crate::material::Class;
+use crate::metric::MASS_METRICS;
 use crate::program::{Desk, RouteProgram, SiteUse};
-use crate::source::{MASS_BALANCE, Source, Standing};
+use crate::source::MASS_BALANCE;
 
 /// Why a metric is not given.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -15,15 +16,6 @@ pub struct Refusal {
     /// The reason, and what is given in their place.
     pub reason: String,
 }
-
-const SHELDON: Source = Source::new("Sheldon, Green Chem. 2007, 9, 1273", Standing::Secondary);
-const ROSCHANGAR: Source =
-    Source::new("Roschangar, Sheldon, Senanayake, Green Chem. 2015, 17, 752", Standing::FromMemory);
-const JIMENEZ: Source =
-    Source::new("Jimenez-Gonzalez et al., Org. Process Res. Dev. 2011, 15, 912", Standing::Secondary);
-const CONSTABLE: Source =
-    Source::new("Constable, Curzons, Cunningham, Green Chem. 2002, 4, 521", Standing::FromMemory);
-const ANDRAOS: Source = Source::new("Andraos, Org. Process Res. Dev. 2005, 9, 149", Standing::FromMemory);
 
 /// What is drawn from the store, by what it counts as.
 #[derive(Clone, Copy, PartialEq, Eq)]
@@ -184,155 +176,137 @@ pub(super) fn draw_up(draft: &mut Draft, route: &RouteProgram, site: &SiteUse, d
     let made =
         mass("product", "product", "everything placed in product, solvent left in it included", product);
 
-    let mut ratio = |id: &str, title: &str, boundary: &str, formula, source, over, under| {
+    let mut ratio = |id: &str, title: &str, published: &str, boundary: &str, over, under| {
+        // A key that no published metric has cannot be drawn up; a test walks through all of them.
+        let Some(about) = MASS_METRICS.iter().find(|m| m.metric.key == published) else { return };
         draft.add(Figure {
             id: format!("metric.{id}"),
             title: title.into(),
             group: Group::Metric,
             measure: Measure::Ratio,
             boundary: boundary.into(),
-            formula,
-            source,
+            formula: about.metric.formula,
+            source: about.metric.source,
             how: How::Ratio { over, under },
         });
     };
-    const E: &str = "E = m_waste / m_product";
-    const CE: &str = "cE = (Σ m_inputs − m_product) / m_product";
-    const PMI: &str = "PMI = Σ m_inputs / m_product";
-    const MI: &str = "MI = Σ m_inputs without water / m_product";
-    const RME: &str = "gRME = m_product / Σ m_inputs = 1 / PMI";
     ratio(
         "e_factor.net",
         "E-factor",
+        "e-factor",
         "waste without water; recovered solvent is no waste; marc is waste unless placed in by-product",
-        E,
-        SHELDON,
         leaving_net,
         made,
     );
     ratio(
         "e_factor.gross",
         "E-factor, nothing recovered",
+        "e-factor",
         "as E-factor, with everything returned to the store counted as waste",
-        E,
-        SHELDON,
         leaving_gross,
         made,
     );
     ratio(
         "e_factor.without_feed",
         "E-factor without the feed's remains",
+        "e-factor",
         "solvents, gases, reagents and disposables lost; what is left of the feed is not counted",
-        E,
-        SHELDON,
         leaving_bought,
         made,
     );
     ratio(
         "simple_e",
         "simple E-factor",
+        "simple-e-factor",
         "feed and reagents; no solvents, no water",
-        "sE = (Σ m_raw + Σ m_reagents − m_product) / m_product",
-        ROSCHANGAR,
         simple,
         made,
     );
     ratio(
         "complete_e.gross",
         "complete E-factor, gross",
+        "complete-e-factor",
         "all inputs with water and solvents, no credit for recovery",
-        CE,
-        ROSCHANGAR,
         complete_gross,
         made,
     );
     ratio(
         "complete_e.net",
         "complete E-factor, net",
+        "complete-e-factor",
         "all inputs with water and solvents, recovery credited",
-        CE,
-        ROSCHANGAR,
         complete_net,
         made,
     );
     ratio(
         "pmi.gross",
         "process mass intensity, gross",
+        "pmi",
         "all inputs with water, as drawn",
-        PMI,
-        JIMENEZ,
         inputs_gross,
         made,
     );
     ratio(
         "pmi.net",
         "process mass intensity, net",
+        "pmi-net",
         "all inputs with water, less what is returned",
-        PMI,
-        JIMENEZ,
         inputs_net,
         made,
     );
     ratio(
         "mass_intensity.gross",
         "mass intensity, gross",
+        "mass-intensity",
         "all inputs without water, as drawn",
-        MI,
-        CONSTABLE,
         no_water,
         made,
     );
     ratio(
         "mass_intensity.net",
         "mass intensity, net",
+        "mass-intensity",
         "all inputs without water, less what is returned",
-        MI,
-        CONSTABLE,
         no_water_net,
         made,
     );
     ratio(
         "generalised_rme.gross",
         "generalised reaction mass efficiency, gross",
+        "reaction-mass-efficiency-generalised",
         "1 / PMI gross",
-        RME,
-        ANDRAOS,
         made,
         inputs_gross,
     );
     ratio(
         "generalised_rme.net",
         "generalised reaction mass efficiency, net",
+        "reaction-mass-efficiency-generalised",
         "1 / PMI net",
-        RME,
-        ANDRAOS,
         made,
         inputs_net,
     );
     ratio(
         "solvent_intensity.gross",
         "solvent intensity, gross",
+        "solvent-intensity",
         "solvents and gases as drawn",
-        "SI = Σ m_solvent / m_product",
-        CONSTABLE,
         solvent_gross,
         made,
     );
     ratio(
         "solvent_intensity.net",
         "solvent intensity, net",
+        "solvent-intensity-net",
         "solvents and gases less what is returned",
-        "SI = Σ m_solvent / m_product",
-        CONSTABLE,
         solvent_net,
         made,
     );
     ratio(
         "water_intensity",
         "water intensity",
+        "water-intensity",
         "process water; not cooling water, not water in the feed",
-        "WI = Σ m_water / m_product",
-        CONSTABLE,
         process_water,
         made,
     );

@@ -5,7 +5,7 @@ use super::hazard::HazardAccount;
 use super::metric::Refusal;
 use super::{carbon_dioxide, energy, hazard, mass, metric, waste};
 use crate::chance::Draw;
-use crate::ledger::{Halt, Material, Place, RuleIx, StepIx, Trace};
+use crate::ledger::{Direction, Halt, Material, Place, RuleIx, StepIx, Trace};
 use crate::plan::{Plan, Problem, Severity, below, open};
 use crate::program::{BOOK_RULES, Desk, Failure, Program, RouteProgram, Runs, SiteUse, resolve};
 use crate::quantity::{Kind, show};
@@ -143,6 +143,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         return None;
     }
     placed_by_default(route, site, &desk, problems);
+    returned_unbought(route, &desk, problems);
     let mut draft = Draft::default();
     mass::draw_up(&mut draft, route, site, &desk);
     waste::draw_up(&mut draft, route, site, &desk);
@@ -156,7 +157,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     evaluate(&figures, &desk, Draw(&x), &mut values);
     let mut product_kg = 0.0;
     for m in mass::materials(route) {
-        product_kg += desk.cells.passed(Place::PRODUCT, crate::ledger::Direction::Into, m);
+        product_kg += desk.cells.passed(Place::PRODUCT, Direction::Into, m);
     }
     let mut cautions: Vec<&'static Caution> = Vec::new();
     for caution in route.steps.iter().flat_map(|s| s.technique.cautions) {
@@ -190,6 +191,26 @@ fn placed_by_default(route: &RouteProgram, site: &SiteUse, desk: &Desk, problems
                     mass::place_name(site, to)
                 ),
                 format!("say under ends where the {name} goes"),
+            ));
+        }
+    }
+}
+
+/// What goes back to the store without having come from it: feed water in a condensate, for one.
+fn returned_unbought(route: &RouteProgram, desk: &Desk, problems: &mut Vec<Problem>) {
+    for m in mass::materials(route) {
+        let drawn = desk.cells.passed(Place::STORE, Direction::OutOf, m);
+        let back = desk.cells.passed(Place::STORE, Direction::Into, m);
+        if back > drawn * (1.0 + 1e-9) {
+            let name = route.materials.get(m.0 as usize).map_or("", |m| m.name.as_str());
+            problems.push(Problem::warning(
+                below(&route.path, "steps"),
+                format!(
+                    "{} of {name} goes back to the store in a year where {} was drawn: the figures net of recovery count the rest as a gain",
+                    show(back, Kind::Mass),
+                    show(drawn, Kind::Mass)
+                ),
+                format!("a stream for the {name}, or a step that takes it out before"),
             ));
         }
     }

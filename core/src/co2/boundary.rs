@@ -188,3 +188,28 @@ pub(super) fn melting_line_pa(temperature_k: f64) -> f64 {
     // pₘ = pₜ [1 + a₁ (T/Tₜ − 1) + a₂ (T/Tₜ − 1)²]
     TRIPLE_PRESSURE_PA * (1.0 + x * (MELTING[0] + x * MELTING[1]))
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn a_chebyshev_series_is_its_polynomial() {
+        // 1 + 2 T₁ + 3 T₂ = 1 + 2x + 3(2x² − 1)
+        for x in [-1.0, -0.3, 0.0, 0.7, 1.0] {
+            let expected = 1.0 + 2.0 * x + 3.0 * (2.0 * x * x - 1.0);
+            assert!((chebyshev(&[1.0, 2.0, 3.0], x) - expected).abs() < 1e-15);
+        }
+    }
+
+    #[test]
+    fn the_pieces_join() {
+        for (n, end) in PIECE_ENDS.iter().enumerate().take(PIECE_ENDS.len() - 1).skip(1) {
+            let below = OnSaturation { piece: n - 1, x: 1.0, nearness: 1.0 };
+            let above = OnSaturation { piece: n, x: -1.0, nearness: 1.0 };
+            assert!((below.pressure_pa() / above.pressure_pa() - 1.0).abs() < 1e-11, "{end}");
+            assert!((below.liquid() / above.liquid() - 1.0).abs() < 1e-8, "{end}");
+            assert!((below.vapour() / above.vapour() - 1.0).abs() < 1e-8, "{end}");
+        }
+    }
+}

@@ -2,7 +2,8 @@
 //!
 //! Equation of state: R. Span, W. Wagner, *A New Equation of State for Carbon Dioxide Covering the Fluid Region from
 //! the Triple-Point Temperature to 1100 K at Pressures up to 800 MPa*, J. Phys. Chem. Ref. Data 25 (1996) 1509;
-//! the coefficients as carried, rounded to 12 digits, by an open reference library (CoolProp 8.0.0).
+//! the coefficients as carried, rounded to 12 digits, by an open reference library (CoolProp 8.0.0),
+//! and in agreement with a public 14-digit listing of the paper's Table 31.
 //! Viscosity: A. Laesecke, C. D. Muzny, *Reference Correlation for the Viscosity of Carbon Dioxide*, J. Phys. Chem.
 //! Ref. Data 46 (2017) 013107. What shows that the digits are right stands in `tests/co2`.
 

@@ -217,3 +217,26 @@ impl Isotherm {
         ]
     }
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn the_series_of_the_exponential_meets_it() {
+        for y in [0.0, 1e-9, 1e-4, 0.005, 0.009_999, 0.01, 1.0, 59.0] {
+            assert!((decay(y) - libm::exp(-y)).abs() <= 2.3e-16, "{y}");
+        }
+        assert!(libm::exp(-60.0) < 1e-26 && decay(60.0) == 0.0);
+    }
+
+    #[test]
+    fn every_power_that_a_term_asks_for_is_there() {
+        let powers = TauPowers::new(1.1);
+        for term in &POWER_TERMS {
+            let exponent = term.tau as f64 + 0.25 * term.tau_quarters as f64;
+            let found = powers.at(term.tau, term.tau_quarters);
+            assert!((found / libm::pow(1.1, exponent) - 1.0).abs() < 1e-14, "{exponent}");
+        }
+    }
+}

@@ -42,7 +42,7 @@ pub use coefficients::{
     CRITICAL_DENSITY_KG_M3, CRITICAL_PRESSURE_PA, CRITICAL_TEMPERATURE_K, GAS_CONSTANT_J_MOL_K,
     MOLAR_MASS_KG_MOL, TRIPLE_PRESSURE_PA, TRIPLE_TEMPERATURE_K,
 };
-pub use density::{COUNT, density_and_phase, density_kg_m3, pressure_pa};
+pub use density::{density_and_phase, density_kg_m3, pressure_pa};
 pub use error::StateError;
 pub use viscosity::viscosity_pa_s;
 
@@ -123,7 +123,7 @@ impl State {
 /// The state at a temperature, K, and an absolute pressure, Pa.
 ///
 /// Range, phases and zero of enthalpy: see the [module](self). Without the caloric properties and the viscosity
-/// [`density_kg_m3`] costs about a third.
+/// [`density_kg_m3`] costs about half.
 ///
 /// # Errors
 /// As for [`density_kg_m3`], and [`StateError::Critical`] where the isotherm is flat to rounding.

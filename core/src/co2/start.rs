@@ -106,3 +106,47 @@ fn sheet(coefficients: &[[f64; SHEET]; SHEET], a: f64, y: f64) -> f64 {
     }
     sum
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::co2::coefficients::{GAS_CONSTANT_J_MOL_K, REDUCING_DENSITY_MOL_M3};
+    use crate::co2::{CRITICAL_DENSITY_KG_M3, density_kg_m3};
+
+    #[test]
+    fn the_basis_is_chebyshev() {
+        for x in [0.0, 0.2, 0.5, 0.9, 1.0] {
+            for (n, t) in (0_u32..).zip(basis(x)) {
+                let expected = libm::cos(f64::from(n) * libm::acos(2.0 * x - 1.0));
+                assert!((t - expected).abs() < 1e-14, "T{n} at {x}");
+            }
+        }
+    }
+
+    #[test]
+    fn starts_are_within_a_few_percent() {
+        // The solver would hide a bad start behind more steps.
+        for n in 0..40 {
+            let temperature_k = 217.0 + 22.0 * f64::from(n);
+            let unit_pa = REDUCING_DENSITY_MOL_M3 * GAS_CONSTANT_J_MOL_K * temperature_k;
+            for m in 0..40 {
+                let pressure_pa = libm::pow(10.0, 3.0 + 5.8 * f64::from(m) / 39.0);
+                let Ok(density) = density_kg_m3(temperature_k, pressure_pa) else { continue };
+                let start = if temperature_k >= CRITICAL_TEMPERATURE_K {
+                    Start::hot(temperature_k, pressure_pa, unit_pa)
+                } else {
+                    let at = OnSaturation::new(temperature_k);
+                    if pressure_pa > at.pressure_pa() {
+                        Start::liquid(temperature_k, pressure_pa, &at, at.pressure_pa())
+                    } else {
+                        Start::gas(temperature_k, pressure_pa, &at, at.pressure_pa(), unit_pa)
+                    }
+                };
+                let off = start.guess * CRITICAL_DENSITY_KG_M3 / density - 1.0;
+                assert!(off.abs() < 0.06, "{temperature_k} K, {pressure_pa} Pa: {off}");
+                assert!(start.low * CRITICAL_DENSITY_KG_M3 < density);
+                assert!(start.high * CRITICAL_DENSITY_KG_M3 > density);
+            }
+        }
+    }
+}

@@ -67,7 +67,9 @@ fn clause(name: &str, before: f64, after: f64, measure: Measure) -> String {
     } else if after <= 0.0 {
         format!("no {name} instead of {before_text}")
     } else if after < before {
-        let share = significant((1.0 - after / before) * 100.0, 2);
+        // "100 % less" is only said of nothing at all.
+        let percent = (1.0 - after / before) * 100.0;
+        let share = if percent < 99.5 { significant(percent, 2) } else { "over 99".to_owned() };
         format!("{after_text} of {name} instead of {before_text} ({share} % less)")
     } else if after < 2.0 * before {
         let share = significant((after / before - 1.0) * 100.0, 2);

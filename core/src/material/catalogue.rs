@@ -99,8 +99,9 @@ impl Catalogue {
         let asked: Vec<char> = key.chars().collect();
         let furthest = 1 + asked.len() / 4;
         let mut close: Vec<(usize, usize)> = Vec::new();
+        let mut scratch = Scratch::default();
         for (entry, place) in &self.index {
-            let mut apart = distance(&asked, entry, furthest);
+            let mut apart = scratch.distance(&asked, entry, furthest);
             // The beginning of a name counts as one slip: "diethyl" means "diethyl ether".
             if asked.len() >= 4 && entry.starts_with(key) {
                 apart = Some(apart.map_or(1, |apart| if apart < 1 { apart } else { 1 }));
@@ -142,38 +143,59 @@ fn fold(name: &str) -> String {
     folded
 }
 
-/// Slips between the two names: letters added, left out, mistaken or swapped with a neighbour (optimal string alignment);
-/// `None` when there are more than `furthest`.
-fn distance(asked: &[char], entry: &str, furthest: usize) -> Option<usize> {
-    let entry: Vec<char> = entry.chars().collect();
-    if asked.len().abs_diff(entry.len()) > furthest {
-        return None;
-    }
-    let mut before: Vec<usize> = Vec::new();
-    let mut last: Vec<usize> = (0..=entry.len()).collect();
-    for (i, &a) in asked.iter().enumerate() {
-        let mut row = Vec::with_capacity(entry.len() + 1);
-        row.push(i + 1);
-        let mut previous = None;
-        for (j, &b) in entry.iter().enumerate() {
-            let cell = |row: &[usize], place: usize| row.get(place).copied().unwrap_or(usize::MAX / 2);
-            let mut least = cell(&last, j) + usize::from(a != b);
-            for step in [cell(&last, j + 1) + 1, cell(&row, j) + 1] {
-                if step < least {
-                    least = step;
-                }
-            }
-            let swapped = i > 0 && previous == Some(a) && asked.get(i - 1) == Some(&b);
-            if swapped && j > 0 && cell(&before, j - 1) + 1 < least {
-                least = cell(&before, j - 1) + 1;
-            }
-            row.push(least);
-            previous = Some(b);
+/// Room for the comparison of two names, lent from one comparison to the next.
+#[derive(Default)]
+struct Scratch {
+    entry: Vec<char>,
+    before: Vec<usize>,
+    last: Vec<usize>,
+    row: Vec<usize>,
+}
+
+impl Scratch {
+    /// Slips between the two names: letters added, left out, mistaken or swapped with a neighbour (optimal string
+    /// alignment); `None` when there are more than `furthest`.
+    fn distance(&mut self, asked: &[char], entry: &str, furthest: usize) -> Option<usize> {
+        self.entry.clear();
+        self.entry.extend(entry.chars());
+        if asked.len().abs_diff(self.entry.len()) > furthest {
+            return None;
         }
-        before = last;
-        last = row;
+        self.before.clear();
+        self.last.clear();
+        self.last.extend(0..=self.entry.len());
+        for (i, &a) in asked.iter().enumerate() {
+            let cell = |row: &[usize], place: usize| row.get(place).copied().unwrap_or(usize::MAX / 2);
+            self.row.clear();
+            self.row.push(i + 1);
+            let mut previous = None;
+            let mut nearest = i + 1;
+            for (j, &b) in self.entry.iter().enumerate() {
+                let mut least = cell(&self.last, j) + usize::from(a != b);
+                for step in [cell(&self.last, j + 1) + 1, cell(&self.row, j) + 1] {
+                    if step < least {
+                        least = step;
+                    }
+                }
+                let swapped = i > 0 && j > 0 && previous == Some(a) && asked.get(i - 1) == Some(&b);
+                if swapped && cell(&self.before, j - 1) + 1 < least {
+                    least = cell(&self.before, j - 1) + 1;
+                }
+                if least < nearest {
+                    nearest = least;
+                }
+                self.row.push(least);
+                previous = Some(b);
+            }
+            // A swap may still reach back over one row, so give up one slip later than the row alone would allow.
+            if nearest > furthest + 1 {
+                return None;
+            }
+            std::mem::swap(&mut self.before, &mut self.last);
+            std::mem::swap(&mut self.last, &mut self.row);
+        }
+        self.last.last().copied().filter(|&slips| slips <= furthest)
     }
-    last.last().copied().filter(|&slips| slips <= furthest)
 }
 
 #[cfg(test)]
@@ -231,11 +253,12 @@ mod tests {
 
     #[test]
     fn counts_slips() {
-        let slips = |a: &str, b: &str| distance(&a.chars().collect::<Vec<_>>(), b, 9);
+        let mut scratch = Scratch::default();
+        let mut slips = |a: &str, b: &str| scratch.distance(&a.chars().collect::<Vec<_>>(), b, 9);
         assert_eq!(slips("acetone", "acetone"), Some(0));
         assert_eq!(slips("actone", "acetone"), Some(1));
         assert_eq!(slips("acteone", "acetone"), Some(1));
         assert_eq!(slips("toluene", "xylene"), Some(3));
-        assert_eq!(distance(&['a'], "abcdef", 2), None);
+        assert_eq!(scratch.distance(&['a'], "abcdef", 2), None);
     }
 }

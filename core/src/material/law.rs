@@ -70,7 +70,7 @@ pub enum Form {
         /// A, B, C, D.
         terms: [f64; 4],
         /// x and y.
-        powers: (f64, f64),
+        powers: WagnerPowers,
     },
     /// Vapour pressure, Antoine: `log₁₀(p/Pa) = A − B/(T + C)`.
     Antoine {
@@ -111,6 +111,15 @@ pub enum Form {
     },
 }
 
+/// The two pairs of powers in which Wagner's equation is published.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum WagnerPowers {
+    /// 2.5 and 5.
+    TwoAndAHalfAndFive,
+    /// 3 and 6.
+    ThreeAndSix,
+}
+
 impl Form {
     /// The value at `temperature_k`, without regard to the range; NaN where the form has no value.
     fn value(&self, temperature_k: f64) -> f64 {
@@ -130,9 +139,15 @@ impl Form {
                 // ρ = ρ₀ (1 − β (T − T₀))
                 density_kg_m3 * (1.0 - expansion_per_k * (t - at_k))
             }
-            Self::Wagner { tc_k, pc_pa, terms: [a, b, c, d], powers: (x, y) } => {
+            Self::Wagner { tc_k, pc_pa, terms: [a, b, c, d], powers } => {
                 let tau = 1.0 - t / tc_k;
-                let sum = a * tau + b * tau * tau.sqrt() + c * libm::pow(tau, x) + d * libm::pow(tau, y);
+                let root = tau.sqrt();
+                let square = tau * tau;
+                let (to_x, to_y) = match powers {
+                    WagnerPowers::TwoAndAHalfAndFive => (square * root, square * square * tau),
+                    WagnerPowers::ThreeAndSix => (square * tau, square * square * square),
+                };
+                let sum = a * tau + b * tau * root + c * to_x + d * to_y;
                 // p = pc exp((Tc/T) Σ)
                 pc_pa * libm::exp(tc_k / t * sum)
             }

@@ -36,7 +36,7 @@ pub(super) struct Loaded {
 }
 
 pub(super) fn load() -> Loaded {
-    let mut shelf = Shelf { substances: Vec::new(), by_name: Vec::new(), faults: Vec::new() };
+    let mut shelf = Shelf { substances: Vec::new(), names: Vec::new(), faults: Vec::new() };
     let sources = sources(&mut shelf.faults);
     shelf.identity();
     shelf.density();
@@ -79,7 +79,8 @@ fn sources(faults: &mut Vec<String>) -> Vec<(&'static str, Source)> {
 
 struct Shelf {
     substances: Vec<Substance>,
-    by_name: Vec<(&'static str, usize)>,
+    /// The names in the order of `substances`.
+    names: Vec<&'static str>,
     faults: Vec<String>,
 }
 
@@ -137,15 +138,22 @@ impl Shelf {
         mut set: impl FnMut(&mut Self, usize, [&'static str; N]),
     ) {
         let rows = table.rows(columns, &mut self.faults);
+        // The rows follow the order of identity.csv, so the search starts where the last one ended.
+        let mut start = 0;
         for row in rows {
             let name = row.first().copied().unwrap_or("");
-            match self.by_name.binary_search_by_key(&name, |&(name, _)| name) {
-                Ok(place) => {
-                    if let Some(&(_, index)) = self.by_name.get(place) {
-                        set(self, index, row);
-                    }
+            let (passed, ahead) = self.names.split_at_checked(start).unwrap_or((&self.names, &[]));
+            let found = ahead
+                .iter()
+                .position(|known| *known == name)
+                .map(|place| start + place)
+                .or_else(|| passed.iter().position(|known| *known == name));
+            match found {
+                Some(index) => {
+                    start = index + 1;
+                    set(self, index, row);
                 }
-                Err(_) => self.faults.push(format!("{}: \"{name}\" is not in identity.csv", table.name)),
+                None => self.faults.push(format!("{}: \"{name}\" is not in identity.csv", table.name)),
             }
         }
     }
@@ -182,10 +190,9 @@ impl Shelf {
                     Err(error) => self.faults.push(format!("{}: {name}: {error}", IDENTITY.name)),
                 }
             }
-            self.by_name.push((name, self.substances.len()));
+            self.names.push(name);
             self.substances.push(substance);
         }
-        self.by_name.sort_unstable();
     }
 
     fn boiling(&mut self) {

@@ -31,7 +31,7 @@ pub use catalogue::{Catalogue, catalogue};
 pub use error::{PropertyError, UnknownMaterial};
 pub use figure::{Figure, Text};
 pub use formula::{Composition, FormulaError, parse_formula};
-pub use law::{Equation, Form, Law};
+pub use law::{Equation, Form, Law, WagnerPowers};
 pub use statement::statement_text;
 pub use substance::{
     Class, EuLow, FlashPoint, Gwp100, Hazard, Rcra, Registration, Solubility, Substance, Transport,

@@ -11,6 +11,12 @@ pub(super) struct Decimal {
 /// Whole numbers up to this are exact in a double: 2^53.
 const EXACT: u128 = 9_007_199_254_740_992;
 
+/// The powers of ten that are exact in a double.
+const POWERS: [f64; 23] = [
+    1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18,
+    1e19, 1e20, 1e21, 1e22,
+];
+
 impl Decimal {
     pub(super) const fn new(mantissa: i128, exponent: i32) -> Self {
         Self { mantissa, exponent }
@@ -50,13 +56,13 @@ impl Decimal {
     /// The sum. Where the two lie so far apart that it does not fit 38 digits, the smaller is beyond the reach of a
     /// double and the larger is returned.
     pub(super) fn plus(self, other: Self) -> Self {
+        if self.mantissa == 0 {
+            return other;
+        }
+        if other.mantissa == 0 {
+            return self;
+        }
         let (a, b) = (self.trimmed(), other.trimmed());
-        if a.mantissa == 0 {
-            return b;
-        }
-        if b.mantissa == 0 {
-            return a;
-        }
         let exponent = if a.exponent < b.exponent { a.exponent } else { b.exponent };
         let sum = match (a.mantissa_at(exponent), b.mantissa_at(exponent)) {
             (Some(x), Some(y)) => x.checked_add(y),
@@ -87,6 +93,9 @@ impl Decimal {
 
     /// The product; where it does not fit 38 digits, that of the nearest doubles.
     pub(super) fn times(self, other: Self) -> Self {
+        if let Some(mantissa) = self.mantissa.checked_mul(other.mantissa) {
+            return Self::new(mantissa, self.exponent.saturating_add(other.exponent));
+        }
         let (a, b) = (self.trimmed(), other.trimmed());
         match a.mantissa.checked_mul(b.mantissa) {
             Some(mantissa) => Self::new(mantissa, a.exponent.saturating_add(b.exponent)),
@@ -99,12 +108,21 @@ impl Decimal {
         if self.mantissa == 0 {
             return 0.0;
         }
+        // One product or quotient of two exact doubles is rounded once.
+        let power = usize::try_from(self.exponent.unsigned_abs()).ok().and_then(|n| POWERS.get(n));
+        if let Some(power) = power.filter(|_| self.mantissa.unsigned_abs() <= EXACT) {
+            let mantissa = self.mantissa as f64;
+            return if self.exponent < 0 { mantissa / power } else { mantissa * power };
+        }
         // The standard library's reading of decimals is correctly rounded; the text is well formed, so it never fails.
         format!("{}e{}", self.mantissa, self.exponent).parse::<f64>().unwrap_or(f64::NAN)
     }
 
     /// The number divided by a whole number, rounded once where both sides are exact in a double.
     pub(super) fn over(self, divisor: u128) -> f64 {
+        if divisor == 1 {
+            return self.to_f64();
+        }
         let (mut divisor, mut number) = (divisor, self.trimmed());
         while divisor != 0 && divisor.is_multiple_of(10) {
             divisor /= 10;
@@ -148,6 +166,16 @@ mod tests {
         // 0.37 / 3.6e6 as one quotient of whole numbers.
         assert_eq!(Decimal::new(37, -2).over(3_600_000), 37.0 / 360_000_000.0);
         assert_eq!(Decimal::new(-1, 0).over(3), -1.0 / 3.0);
+    }
+
+    #[test]
+    fn short_numbers_are_as_the_standard_library_reads_them() {
+        for mantissa in [1_i128, 3, 25, 12_345, 999_999_999, 9_007_199_254_740_991, 9_007_199_254_740_993] {
+            for exponent in -30..30 {
+                let read = format!("{mantissa}e{exponent}").parse::<f64>().unwrap();
+                assert_eq!(Decimal::new(mantissa, exponent).to_f64().to_bits(), read.to_bits());
+            }
+        }
     }
 
     #[test]

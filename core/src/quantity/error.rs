@@ -146,6 +146,8 @@ pub enum AmountError {
         found: String,
         /// The second number with its sign.
         spread: String,
+        /// The first number times 100.
+        hundredfold: String,
         /// Where.
         at: usize,
     },
@@ -162,6 +164,8 @@ pub enum AmountError {
         low: String,
         /// The second limit.
         high: String,
+        /// The two in order.
+        meant: String,
         /// Where the second stands.
         at: usize,
     },
@@ -195,6 +199,11 @@ pub enum AmountError {
         found: String,
         /// Where.
         at: usize,
+    },
+    /// A plain number above 1 where a fraction is needed.
+    PercentMissing {
+        /// The number.
+        found: String,
     },
     /// The value, or one of its limits, is physically impossible or absurd.
     OutOfBounds {
@@ -230,6 +239,7 @@ impl AmountError {
             | Self::NotKnown { .. }
             | Self::NotKnownWord { .. }
             | Self::NotWhole { .. }
+            | Self::PercentMissing { .. }
             | Self::OutOfBounds { .. } => None,
             Self::NoNumber { at, .. }
             | Self::BadNumber { at, .. }
@@ -272,7 +282,7 @@ impl AmountError {
             Self::SpreadWithoutUnit { found, .. } => format!("the spread “{found}” has no unit"),
             Self::UnknownUnit { found, .. } => format!("the unit “{found}” is not known here"),
             Self::RefusedUnit { found, .. } => format!("the unit “{found}” is not accepted"),
-            Self::OtherKind { found, is, .. } => format!("“{found}” is a unit of {}", bare(is.words())),
+            Self::OtherKind { found, is, .. } => format!("“{found}” measures {}", is.words()),
             Self::Disagree { first, second, .. } => {
                 format!("“{first}” and “{second}” stand in one amount")
             }
@@ -287,6 +297,7 @@ impl AmountError {
             Self::BadCoverage { found, .. } => format!("the coverage factor “{found}” cannot be used"),
             Self::UncertainCount { .. } => "a whole number has a spread".to_owned(),
             Self::NotWhole { found } => format!("“{found}” is not a whole number"),
+            Self::PercentMissing { found } => format!("“{found}” is above 1, and a fraction is not"),
             Self::LeftOver { found, .. } => format!("“{found}” stands after the amount"),
             Self::OutOfBounds { kind, which, value_si, bound } => {
                 let value = show(*value_si, *kind);
@@ -308,7 +319,7 @@ impl AmountError {
         match self {
             Self::Empty { kind } => like(*kind),
             Self::TooLong { .. } => format!("an amount has at most {} characters", super::LONGEST),
-            Self::NotKnown { kind } => format!("a value is needed here: {}", like(*kind)),
+            Self::NotKnown { kind } => format!("a value is needed here{}", examples(*kind)),
             Self::NotKnownWord { .. } => "write “not known” if that is meant".to_owned(),
             Self::NoNumber { kind, .. } => like(*kind),
             Self::BadNumber { .. } => "write it like 1234.5, 1 234.5, 1.2e3 or 1.2×10^3".to_owned(),
@@ -317,19 +328,22 @@ impl AmountError {
             Self::OneSided { .. } => "write both limits, like 0 to 5 mL".to_owned(),
             Self::Approximate { .. } => "write the size of the doubt, like 250 ± 25 mL".to_owned(),
             Self::NoUnit { kind, .. } => like(*kind),
+            Self::SpreadWithoutUnit { found, unit, .. } if unit.starts_with('%') => {
+                format!("{found} {unit}?")
+            }
             Self::SpreadWithoutUnit { found, unit, .. } => format!("{found} {unit} or {found} %?"),
             Self::UnknownUnit { kind, suggestion, .. } => match suggestion {
                 Some(unit) => format!("is “{unit}” meant? {}", capital(&accepted(*kind))),
                 None => accepted(*kind),
             },
             Self::RefusedUnit { reply, .. } => (*reply).to_owned(),
-            Self::OtherKind { kind, .. } => format!("{} is needed: {}", kind.words(), like(*kind)),
+            Self::OtherKind { kind, .. } => format!("{} is needed{}", kind.words(), examples(*kind)),
             Self::Disagree { .. } => "write one of them throughout".to_owned(),
-            Self::WhoseSign { found, spread, .. } => {
-                format!("write the unit twice ({found} % ± {spread}), or neither time as plain fractions")
+            Self::WhoseSign { found, spread, hundredfold, .. } => {
+                format!("{found} % ± {spread} or {hundredfold} % ± {spread}?")
             }
             Self::NegativeSpread { .. } => "write it without the minus sign".to_owned(),
-            Self::ReversedLimits { low, high, .. } => format!("write {high} to {low}"),
+            Self::ReversedLimits { meant, .. } => format!("is {meant} meant?"),
             Self::RelativeTemperature { .. } => "write it in kelvin, like 12 ± 3 °C".to_owned(),
             Self::BadCoverage { .. } => "write it after ±, above 0, like 250 ± 4 mL (k=2)".to_owned(),
             Self::UncertainCount { .. } => "write the number alone; a count is exact".to_owned(),
@@ -338,24 +352,19 @@ impl AmountError {
                 "write one amount: 250 mL, 250 ± 5 mL, 250 mL u 2 mL, 250 ± 4 mL (k=2) or 245 to 255 mL"
                     .to_owned()
             }
-            Self::OutOfBounds { kind: Kind::Fraction, value_si, bound, .. }
-                if *value_si > 1.0 && *value_si <= 100.0 =>
-            {
-                format!("{}; write {} % if per cent is meant", bound.phrase, super::significant(*value_si, 6))
-            }
+            Self::PercentMissing { found } => format!("write {found} % if per cent is meant"),
             Self::OutOfBounds { bound, .. } => bound.phrase.to_owned(),
         }
     }
 }
 
-/// The words for a kind without their article.
-fn bare(words: &str) -> &str {
-    words.split_once(' ').map_or(words, |(_, rest)| rest)
+fn like(kind: Kind) -> String {
+    format!("write {}{}", kind.words(), examples(kind))
 }
 
-fn like(kind: Kind) -> String {
+fn examples(kind: Kind) -> String {
     let [one, other] = kind.examples();
-    format!("write {}, like {one} or {other}", kind.words())
+    format!(", like {one} or {other}")
 }
 
 fn accepted(kind: Kind) -> String {

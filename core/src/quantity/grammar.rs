@@ -172,10 +172,11 @@ fn between(scan: &Scan) -> Option<(Between, usize)> {
         't' if spaced && scan.sees("to") && scan.peek(2).is_some_and(is_space) => Some((Between::To, 2)),
         '–' | '—' | '‒' => Some((Between::To, 1)),
         '-' => {
-            // `h-1` is a unit, `12-22 mL` is a range.
+            // `h-1` and `m-3` belong to a unit, `12-22 mL` is a range.
             let letter = scan.before().is_some_and(char::is_alphabetic);
-            let inverse =
-                letter && scan.peek(1) == Some('1') && !matches!(scan.peek(2), Some('0'..='9' | '.' | ','));
+            let inverse = letter
+                && matches!(scan.peek(1), Some('1'..='3'))
+                && !matches!(scan.peek(2), Some('0'..='9' | '.' | ','));
             (!inverse && number_starts(scan, 1 + scan.spaces(1))).then_some((Between::To, 1))
         }
         _ => None,
@@ -229,11 +230,12 @@ fn coverage(scan: &mut Scan) -> Result<Option<(Decimal, String, usize)>, AmountE
         }
     };
     scan.skip_spaces();
-    if bracket && scan.peek(0) == Some(')') {
+    let closed = scan.peek(0) == Some(')');
+    if bracket && closed {
         scan.step(1);
     }
     let found = scan.since(from);
-    if number.is_negative() || number.is_zero() {
+    if number.is_negative() || number.is_zero() || bracket != closed {
         return Err(AmountError::BadCoverage { found, at: from });
     }
     Ok(Some((number, found, from)))

@@ -48,6 +48,10 @@ pub(super) fn numeral(scan: &mut Scan) -> Result<Option<Numeral>, AmountError> {
         let mantissa = if bare_ten && exponent.bare { 1 } else { mantissa };
         let power = i64::from(exponent.value) + dropped - form.decimals;
         match i32::try_from(power) {
+            Ok(power) if (-250..=250).contains(&power) => {
+                // With up to 22 digits this neither overflows nor vanishes.
+                return Ok(Decimal::new(if negative { -mantissa } else { mantissa }, power));
+            }
             Ok(power) if (-400..=400).contains(&power) => {
                 let number = Decimal::new(if negative { -mantissa } else { mantissa }, power);
                 let value = number.to_f64();

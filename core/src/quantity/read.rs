@@ -142,6 +142,13 @@ impl Parsed {
                 self.around(&mut amount, number, unit, (half, half_unit));
             }
         }
+        if kind == Kind::Fraction
+            && spelling.0.is_empty()
+            && (1.0..=100.0).contains(&amount.central_si)
+            && amount.central_si != 1.0
+        {
+            return Err(AmountError::PercentMissing { found: first.found.clone() });
+        }
         check_which(kind, amount.central_si, Which::Value)?;
         if let Spread::Limits { low_si, high_si } = amount.spread {
             check_which(kind, low_si, Which::LowerLimit)?;
@@ -203,6 +210,7 @@ impl Parsed {
             return Err(AmountError::WhoseSign {
                 found: self.first.found.clone(),
                 spread: second.with_unit(),
+                hundredfold: super::significant(self.first.decimal("")?.to_f64() * 100.0, 15),
                 at: self.first.at,
             });
         }
@@ -254,11 +262,13 @@ fn between_limits(
     agree(amount, high_unit, low, second)?;
     let (low_si, high_si) = (unit.exact_to_si(low_number), high_unit.exact_to_si(high_number));
     if low_si > high_si {
-        return Err(AmountError::ReversedLimits {
-            low: low.with_unit(),
-            high: second.with_unit(),
-            at: second.at,
-        });
+        let meant = if low.unit.is_empty() {
+            format!("{} to {} {}", second.found, low.found, second.unit)
+        } else {
+            format!("{} to {}", second.with_unit(), low.with_unit())
+        };
+        let (low, high) = (low.with_unit(), second.with_unit());
+        return Err(AmountError::ReversedLimits { low, high, meant, at: second.at });
     }
     // The limits are told apart from the midpoint before anything is computed from them.
     check_which(kind, low_si, Which::LowerLimit)?;

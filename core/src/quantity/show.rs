@@ -25,8 +25,8 @@ impl Ladder {
             Kind::Density => &[(0.0, "µg/L"), (1e-3, "mg/L"), (1.0, "g/L"), (100.0, "g/mL")],
             // 1 L/min and 1 m³/min in m³/s
             Kind::VolumeFlow => &[(0.0, "mL/min"), (1.666e-5, "L/min"), (1.666e-2, "m³/h")],
-            // 1 kg/min in kg/s
-            Kind::MassFlow => &[(0.0, "g/min"), (1.666e-2, "kg/min")],
+            // 0.6 g/min (316 kg/year) and 1 kg/min in kg/s
+            Kind::MassFlow => &[(0.0, "kg/year"), (1e-5, "g/min"), (1.666e-2, "kg/min")],
             // once a day, an hour, a minute, a second
             Kind::Frequency => {
                 &[(0.0, "/year"), (1.15e-5, "/d"), (2.77e-4, "/h"), (1.66e-2, "/min"), (1.0, "/s")]

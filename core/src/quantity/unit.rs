@@ -141,8 +141,10 @@ impl Unit {
             Above::Row(row) => (row.factor.number, row.factor.power, row.factor.over),
             Above::One | Above::Money(_) => (1, 0, 1),
         };
-        let below =
-            self.below.map_or((1, 0, 1), |row| (row.factor.number, row.factor.power, row.factor.over));
+        let Some(below) = self.below else {
+            return Ratio { number: u128::from(number), power, over: u128::from(over) };
+        };
+        let below = (below.factor.number, below.factor.power, below.factor.over);
         let mut number = u128::from(number) * u128::from(below.2);
         let mut over = u128::from(over) * u128::from(below.0);
         let mut power = power - below.1;
@@ -362,13 +364,14 @@ fn normal(text: &str) -> String {
     for (wide, narrow) in [(" /", "/"), ("/ ", "/"), (" ·", "·"), ("· ", "·")] {
         text = text.replace(wide, narrow);
     }
-    // g·mL-1 and g mL-1 are g/mL; h-1 is /h.
-    if let Some(rest) = text.strip_suffix("-1").filter(|rest| !rest.contains('/')) {
-        let cut = rest.rfind(['·', ' ']);
-        text = match cut.map(|cut| rest.split_at(cut)) {
-            Some((above, below)) => format!("{above}/{}", below.trim_start_matches(['·', ' '])),
-            None => format!("/{rest}"),
+    // g·mL-1 and g mL-1 are g/mL; kg m-3 is kg/m3; h-1 is /h.
+    for (inverse, power) in [("-1", ""), ("-2", "2"), ("-3", "3")] {
+        let Some(rest) = text.strip_suffix(inverse).filter(|rest| !rest.contains('/')) else { continue };
+        text = match rest.rfind(['·', ' ']).map(|cut| rest.split_at(cut)) {
+            Some((above, below)) => format!("{above}/{}{power}", below.trim_start_matches(['·', ' '])),
+            None => format!("/{rest}{power}"),
         };
+        break;
     }
     text
 }

@@ -1,6 +1,6 @@
 //! The tables of density, vapour pressure and heat of vaporisation: coefficients of published equations.
 use super::super::table::Table;
-use super::super::{Equation, Form, Law};
+use super::super::{Equation, Form, Law, WagnerPowers};
 use super::Shelf;
 
 tables! {
@@ -105,10 +105,10 @@ impl Shelf {
 
     pub(super) fn vapour_pressure(&mut self) {
         for (table, powers) in [
-            (VAPOUR_EOS, (2.5, 5.0)),
-            (VAPOUR_VDI, (2.5, 5.0)),
-            (VAPOUR_POLING, (2.5, 5.0)),
-            (VAPOUR_MCGARRY, (3.0, 6.0)),
+            (VAPOUR_EOS, WagnerPowers::TwoAndAHalfAndFive),
+            (VAPOUR_VDI, WagnerPowers::TwoAndAHalfAndFive),
+            (VAPOUR_POLING, WagnerPowers::TwoAndAHalfAndFive),
+            (VAPOUR_MCGARRY, WagnerPowers::ThreeAndSix),
         ] {
             let columns = [
                 "name",
