@@ -43,7 +43,12 @@ pub(crate) fn watch_files(with: impl FnMut(String, f64, Vec<u8>) + 'static) {
 }
 
 /// Saves a text and calls `then` with the name that was chosen, or nothing when the person thought better of it.
-pub(crate) fn save_file(name: &str, text: &str, media_type: &str, then: impl FnOnce(Option<String>) + 'static) {
+pub(crate) fn save_file(
+    name: &str,
+    text: &str,
+    media_type: &str,
+    then: impl FnOnce(Option<String>) + 'static,
+) {
     save_file_js(name, text, media_type, &Closure::once_into_js(then));
 }
 

@@ -77,9 +77,11 @@ impl Document {
     /// Where the route with this id stands: workload and route.
     #[must_use]
     pub fn route(&self, id: u32) -> Option<(usize, usize)> {
-        self.ids.workloads.iter().enumerate().find_map(|(w, workload)| {
-            workload.routes.iter().position(|route| route.id == id).map(|r| (w, r))
-        })
+        self.ids
+            .workloads
+            .iter()
+            .enumerate()
+            .find_map(|(w, workload)| workload.routes.iter().position(|route| route.id == id).map(|r| (w, r)))
     }
 
     /// The id of a route.

@@ -142,7 +142,9 @@ pub fn problem_at<'a>(problems: &'a [Problem], path: &str) -> Option<&'a Problem
     problems
         .iter()
         .filter(|p| p.severity != Severity::Note)
-        .filter(|p| p.path.strip_prefix(path).is_some_and(|rest| rest.is_empty() || rest.starts_with(['.', '['])))
+        .filter(|p| {
+            p.path.strip_prefix(path).is_some_and(|rest| rest.is_empty() || rest.starts_with(['.', '[']))
+        })
         .min_by_key(|p| (p.severity, p.path.len()))
 }
 
@@ -194,7 +196,8 @@ pub fn measured_lines(
     let under = below(path, "measured");
     let open = technique.rules.iter().enumerate().filter(|(_, r)| r.measurable == Measurable::MassOrShare);
     open.map(|(i, rule)| {
-        let value = step.measured.iter().find(|(k, _)| k == rule.name).map_or(String::new(), |(_, v)| v.clone());
+        let value =
+            step.measured.iter().find(|(k, _)| k == rule.name).map_or(String::new(), |(_, v)| v.clone());
         let computed = computed_kg(book, at, i).map_or_else(
             || "Not computed yet.".to_owned(),
             |kg| {
@@ -232,7 +235,8 @@ pub fn summary(technique: Option<&Technique>, step: &Step) -> Vec<(String, Strin
             .map_or_else(|| key.clone(), |p| p.label.to_owned());
         let value = match field {
             Field::Rows(rows) => {
-                let rows: Vec<String> = rows.iter().map(|(name, amount)| format!("{name} {amount}")).collect();
+                let rows: Vec<String> =
+                    rows.iter().map(|(name, amount)| format!("{name} {amount}")).collect();
                 rows.join(", ")
             }
             other => word(&text_of(Some(other))).to_owned(),
@@ -272,7 +276,10 @@ mod tests {
     fn what_was_understood_is_said_or_what_stands_in_its_place() {
         let default = Need::Default("5 %", thimbleworth::source::FROM_MEMORY);
         assert_eq!(understood("", Kind::Fraction, default), "5 % is assumed: from memory.");
-        assert_eq!(understood("not known", Kind::Fraction, default), "Not known: 5 % stands in for it, from memory.");
+        assert_eq!(
+            understood("not known", Kind::Fraction, default),
+            "Not known: 5 % stands in for it, from memory."
+        );
         assert_eq!(understood("250mL", Kind::Volume, Need::Required), "Read as 250 mL.");
         assert_eq!(understood("0.25 l", Kind::Volume, Need::Required), "Read as 250 mL.");
         assert_eq!(understood("250 m", Kind::Volume, Need::Required), "");
@@ -293,7 +300,11 @@ mod tests {
     fn every_parameter_of_every_technique_can_be_drawn() {
         for technique in TECHNIQUES {
             for param in technique.params {
-                assert!(!param.label.is_empty() && param.label.starts_with(char::is_uppercase), "{}", param.label);
+                assert!(
+                    !param.label.is_empty() && param.label.starts_with(char::is_uppercase),
+                    "{}",
+                    param.label
+                );
                 let quantity = matches!(param.control, Control::Quantity(kind) if !kind.is_plain());
                 if let (Control::Quantity(kind), true) = (param.control, quantity) {
                     assert!(!units(kind).is_empty(), "{}: no unit in the label", param.key);
@@ -306,7 +317,11 @@ mod tests {
 
     #[test]
     fn a_problem_is_said_in_sentences() {
-        let problem = Problem::error("x", "\"300 m\": a length where a volume should stand", "a volume, such as \"250 mL\"");
+        let problem = Problem::error(
+            "x",
+            "\"300 m\": a length where a volume should stand",
+            "a volume, such as \"250 mL\"",
+        );
         assert_eq!(
             sentence(&problem),
             "\"300 m\": a length where a volume should stand. A volume, such as \"250 mL\"."
@@ -315,7 +330,8 @@ mod tests {
 
     #[test]
     fn a_problem_in_a_row_shows_at_its_field() {
-        let problems = [Problem::error("a.solvent[\"2-propanol\"]", "x", "y"), Problem::warning("a.solvent", "z", "")];
+        let problems =
+            [Problem::error("a.solvent[\"2-propanol\"]", "x", "y"), Problem::warning("a.solvent", "z", "")];
         assert_eq!(problem_at(&problems, "a.solvent").map(|p| p.found.as_str()), Some("x"));
         assert_eq!(problem_at(&problems, "a.solv"), None);
     }

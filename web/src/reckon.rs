@@ -234,12 +234,7 @@ impl Book {
                         (None, _) => true,
                     })
                     .count();
-                Column {
-                    name: route.name.clone(),
-                    errors,
-                    at: position.filter(|_| found.is_some()),
-                    index,
-                }
+                Column { name: route.name.clone(), errors, at: position.filter(|_| found.is_some()), index }
             });
             let routes: Vec<Column> = columns.collect();
             let present = workload.routes.iter().position(|r| r.name == workload.present);
@@ -313,7 +308,10 @@ impl Book {
         }
         let present = work.present.and_then(|p| work.routes.get(p));
         if let Some(column) = present.filter(|column| column.at.is_none()) {
-            out.push(format!("Nothing can be compared until {} can be accounted: it is the present route.", column.name));
+            out.push(format!(
+                "Nothing can be compared until {} can be accounted: it is the present route.",
+                column.name
+            ));
         }
         for (r, column) in work.routes.iter().enumerate() {
             if column.at.is_none() {

@@ -61,7 +61,8 @@ impl Scale {
         let text = format!("{:.*}", self.decimals, value.abs());
         let zero = text.bytes().all(|b| b == b'0' || b == b'.');
         if zero && value != 0.0 {
-            let least = format!("{:.*}", self.decimals, 10_f64.powi(-i32::try_from(self.decimals).unwrap_or(0)));
+            let least =
+                format!("{:.*}", self.decimals, 10_f64.powi(-i32::try_from(self.decimals).unwrap_or(0)));
             return format!("< {least}");
         }
         let sign = if value < 0.0 && !zero { "\u{2212}" } else { "" };
@@ -71,7 +72,12 @@ impl Scale {
     /// The whole value with its unit, for those who need every digit.
     #[must_use]
     pub fn full(&self, value_si: f64) -> String {
-        format!("{}{}{}", shortest(value_si * self.factor), if self.unit.is_empty() { "" } else { " " }, self.unit)
+        format!(
+            "{}{}{}",
+            shortest(value_si * self.factor),
+            if self.unit.is_empty() { "" } else { " " },
+            self.unit
+        )
     }
 
     /// The whole value alone, for a spreadsheet.

@@ -236,15 +236,13 @@ impl State {
     }
 
     fn open(&mut self, from: From, plan: Plan, lines: Vec<String>) {
-        let (name, text, file) = match from {
-            From::File(name) => {
-                (format!("open {name}"), format!("{name} is open."), Some(name))
-            }
+        let (name, text, file) = match &from {
+            From::File(name) => (format!("open {name}"), format!("{name} is open."), Some(name.clone())),
             From::Example => {
                 ("open the example".to_owned(), format!("The example “{}” is open.", plan.title), None)
             }
             From::Blank => ("start blank".to_owned(), "A blank plan is open.".to_owned(), None),
-            From::Recovery(ref file) => (
+            From::Recovery(file) => (
                 "open the kept copy".to_owned(),
                 "The kept copy is open. Save it to a file.".to_owned(),
                 file.clone(),
@@ -402,7 +400,13 @@ mod tests {
     #[test]
     fn an_action_without_effect_returns_the_same_state() {
         let blank = start();
-        let actions = [Action::Undo, Action::Redo, set("title", "Title", ""), set("no.such", "x", "y"), Action::List(false)];
+        let actions = [
+            Action::Undo,
+            Action::Redo,
+            set("title", "Title", ""),
+            set("no.such", "x", "y"),
+            Action::List(false),
+        ];
         for action in actions {
             assert!(Rc::ptr_eq(&blank, &after(&blank, action.clone())), "{action:?}");
         }
@@ -452,12 +456,18 @@ mod tests {
         let gone = after(&state, Action::Go("workloads[0].routes[0].steps".into()));
         assert_eq!(gone.view.route, first);
         assert_eq!(gone.view.focus.as_ref().map(|f| f.1.as_str()), Some("workloads[0].routes[0].steps"));
-        assert!(!Rc::ptr_eq(&gone, &after(&gone, Action::Go("workloads[0].routes[0].steps".into()))), "asked again");
+        assert!(
+            !Rc::ptr_eq(&gone, &after(&gone, Action::Go("workloads[0].routes[0].steps".into()))),
+            "asked again"
+        );
     }
 
     #[test]
     fn a_file_is_named_after_the_title() {
-        assert_eq!(stem("Harbour sediment: leave the Soxhlet bench?"), "harbour-sediment-leave-the-soxhlet-bench");
+        assert_eq!(
+            stem("Harbour sediment: leave the Soxhlet bench?"),
+            "harbour-sediment-leave-the-soxhlet-bench"
+        );
         assert_eq!(stem(" ../\u{0} "), "plan");
     }
 }

@@ -32,7 +32,11 @@ impl Item {
     #[must_use]
     pub const fn position(self) -> usize {
         match self {
-            Self::Stream(i) | Self::Material(i) | Self::Workload(i) | Self::Route(_, i) | Self::Step(_, _, i) => i,
+            Self::Stream(i)
+            | Self::Material(i)
+            | Self::Workload(i)
+            | Self::Route(_, i)
+            | Self::Step(_, _, i) => i,
         }
     }
 
@@ -146,7 +150,9 @@ impl Edit {
     pub fn focus(&self, after: &Document) -> Option<String> {
         match &self.change {
             Change::Set(..) | Change::Rename(..) => None,
-            Change::Add(item, _) => Some(item.at(list::count(after, *item).saturating_sub(1)).path(&after.plan)),
+            Change::Add(item, _) => {
+                Some(item.at(list::count(after, *item).saturating_sub(1)).path(&after.plan))
+            }
             Change::Duplicate(item) => Some(item.at(item.position() + 1).path(&after.plan)),
             Change::Remove(item) => {
                 let left = list::count(after, *item);

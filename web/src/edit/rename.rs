@@ -77,7 +77,9 @@ fn in_fields(step: &mut Step, old: &str, new: &str, wanted: impl Fn(Control) -> 
 pub fn refusal(plan: &Plan, item: Item, name: &str) -> Option<String> {
     let (what, others): (&str, Vec<&str>) = match item {
         Item::Stream(_) => ("stream", plan.site.streams.iter().map(|s| s.name.as_str()).collect()),
-        Item::Material(_) => ("material of the plan", plan.materials.iter().map(|m| m.name.as_str()).collect()),
+        Item::Material(_) => {
+            ("material of the plan", plan.materials.iter().map(|m| m.name.as_str()).collect())
+        }
         Item::Workload(_) => ("piece of work", plan.workloads.iter().map(|w| w.name.as_str()).collect()),
         Item::Route(w, _) => (
             "route",

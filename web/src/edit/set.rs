@@ -198,7 +198,8 @@ mod tests {
     fn plan() -> Plan {
         let mut plan = blank();
         plan.workloads[0].routes[0].steps.push(new_step("soxhlet").expect("a technique"));
-        plan.materials.push(thimbleworth::plan::OwnMaterial { name: "sorbent mix".into(), fields: Vec::new() });
+        plan.materials
+            .push(thimbleworth::plan::OwnMaterial { name: "sorbent mix".into(), fields: Vec::new() });
         plan
     }
 
@@ -206,15 +207,36 @@ mod tests {
     #[test]
     fn every_field_is_set_and_cleared() {
         let texts = [
-            "title", "notes", "site.name", "site.rules", "site.as_of", "site.bench_temperature", "site.drain_permit",
-            "site.electricity.climate", "site.electricity.price", "site.electricity.source", "site.room.volume",
-            "site.room.air_changes", "site.room.hood_capture", "site.streams[0].holds", "site.streams[0].fill",
-            "site.streams[0].bulk_density", "site.streams[0].treatment", r#"materials["sorbent mix"].density"#,
-            "workloads[0].results_per_year", "workloads[0].batch.controls", "workloads[0].repeats",
-            "workloads[0].routes[0].recovery", "workloads[0].routes[0].equivalence", "workloads[0].routes[0].ph",
-            "workloads[0].routes[0].ends.marc", r#"workloads[0].routes[0].ends["second phase"]"#,
-            "workloads[0].routes[0].steps[0].per", "workloads[0].routes[0].steps[0].note",
-            "workloads[0].routes[0].steps[0].charge", r#"workloads[0].routes[0].steps[0].measured["condenser loss"]"#,
+            "title",
+            "notes",
+            "site.name",
+            "site.rules",
+            "site.as_of",
+            "site.bench_temperature",
+            "site.drain_permit",
+            "site.electricity.climate",
+            "site.electricity.price",
+            "site.electricity.source",
+            "site.room.volume",
+            "site.room.air_changes",
+            "site.room.hood_capture",
+            "site.streams[0].holds",
+            "site.streams[0].fill",
+            "site.streams[0].bulk_density",
+            "site.streams[0].treatment",
+            r#"materials["sorbent mix"].density"#,
+            "workloads[0].results_per_year",
+            "workloads[0].batch.controls",
+            "workloads[0].repeats",
+            "workloads[0].routes[0].recovery",
+            "workloads[0].routes[0].equivalence",
+            "workloads[0].routes[0].ph",
+            "workloads[0].routes[0].ends.marc",
+            r#"workloads[0].routes[0].ends["second phase"]"#,
+            "workloads[0].routes[0].steps[0].per",
+            "workloads[0].routes[0].steps[0].note",
+            "workloads[0].routes[0].steps[0].charge",
+            r#"workloads[0].routes[0].steps[0].measured["condenser loss"]"#,
         ];
         for path in texts {
             let (before, mut after) = (plan(), plan());
@@ -241,7 +263,14 @@ mod tests {
 
     #[test]
     fn a_path_to_nothing_is_refused() {
-        for path in ["", "nothing", "site.nothing", "workloads[9].repeats", "workloads[0].routes[0].steps[7].charge", "a["] {
+        for path in [
+            "",
+            "nothing",
+            "site.nothing",
+            "workloads[9].repeats",
+            "workloads[0].routes[0].steps[7].charge",
+            "a[",
+        ] {
             let mut after = plan();
             assert!(!set(&mut after, path, text("x")), "{path}");
             assert_eq!(after, plan());
@@ -254,7 +283,8 @@ mod tests {
         for key in ["loss", "time", "charge"] {
             set(&mut after, &format!("workloads[0].routes[0].steps[0].{key}"), text("1"));
         }
-        let keys: Vec<&str> = after.workloads[0].routes[0].steps[0].fields.iter().map(|(k, _)| k.as_str()).collect();
+        let keys: Vec<&str> =
+            after.workloads[0].routes[0].steps[0].fields.iter().map(|(k, _)| k.as_str()).collect();
         assert_eq!(keys, ["charge", "time", "loss"]);
     }
 

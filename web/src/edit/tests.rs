@@ -8,7 +8,10 @@ fn document() -> Document {
     route.steps.push(new_step("soxhlet").expect("a technique"));
     route.steps.push(new_step("rinse").expect("a technique"));
     route.steps[0].fields = vec![
-        ("solvent".into(), Field::Rows(vec![("oil".into(), "50 %".into()), ("acetone".into(), "50 %".into())])),
+        (
+            "solvent".into(),
+            Field::Rows(vec![("oil".into(), "50 %".into()), ("acetone".into(), "50 %".into())]),
+        ),
         ("lost_to".into(), Field::Text("solvents".into())),
         ("charge".into(), Field::Text("solvents".into())),
     ];
@@ -76,7 +79,8 @@ fn moving_carries_the_id_along_and_stops_at_the_ends() {
     let after = done(Change::Move(Item::Step(0, 0, 1), true));
     assert_eq!(after.plan.workloads[0].routes[0].steps[0].technique, "rinse");
     assert_eq!(after.ids.workloads[0].routes[0].steps[0], before.ids.workloads[0].routes[0].steps[1]);
-    for (item, up) in [(Item::Step(0, 0, 0), true), (Item::Step(0, 0, 1), false), (Item::Route(0, 0), false)] {
+    for (item, up) in [(Item::Step(0, 0, 0), true), (Item::Step(0, 0, 1), false), (Item::Route(0, 0), false)]
+    {
         let mut same = document();
         assert!(!Edit::list(Change::Move(item, up)).apply(&mut same));
         assert_eq!(same, before);

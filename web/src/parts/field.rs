@@ -135,7 +135,8 @@ pub(crate) fn Field(props: &Props) -> Html {
     let wrong = shown.is_some_and(|s| s.severity == Severity::Error);
     let typed = {
         let (patience, shown) = (patience.clone(), shown.is_some());
-        let (edit, path, label, ask) = (props.edit.clone(), props.path.clone(), props.label.clone(), props.ask.clone());
+        let (edit, path, label, ask) =
+            (props.edit.clone(), props.path.clone(), props.label.clone(), props.ask.clone());
         move |value: String| {
             patience.set(patience.typed(shown));
             edit.emit(Edit::set(&path, &label, read(&ask, &value)));
@@ -161,13 +162,17 @@ pub(crate) fn Field(props: &Props) -> Html {
     let described = if props.hint.is_empty() { note.clone() } else { format!("{hint} {note}") };
     let invalid = wrong.then_some("true");
     let value = props.value.clone();
-    let select = |options: Vec<Html>| html! {
-        <select id={id.clone()} aria-describedby={described.clone()} aria-invalid={invalid} {onchange} onblur={&onblur}>
-            { for options }
-        </select>
+    let select = |options: Vec<Html>| {
+        html! {
+            <select id={id.clone()} aria-describedby={described.clone()} aria-invalid={invalid} {onchange} onblur={&onblur}>
+                { for options }
+            </select>
+        }
     };
-    let option = |word: &str, shown: &str| html! {
-        <option value={word.to_owned()} selected={*word == *value}>{ shown }</option>
+    let option = |word: &str, shown: &str| {
+        html! {
+            <option value={word.to_owned()} selected={*word == *value}>{ shown }</option>
+        }
     };
     let control = match &props.ask {
         Ask::Area => html! {
@@ -181,9 +186,9 @@ pub(crate) fn Field(props: &Props) -> Html {
             }
             select(drawn)
         }
-        Ask::YesNo(left_out) => {
-            select([("", &**left_out), ("true", "yes"), ("false", "no")].iter().map(|(w, s)| option(w, s)).collect())
-        }
+        Ask::YesNo(left_out) => select(
+            [("", &**left_out), ("true", "yes"), ("false", "no")].iter().map(|(w, s)| option(w, s)).collect(),
+        ),
         Ask::Text | Ask::Amount | Ask::Number | Ask::Material => html! {
             <input id={id.clone()} type="text" autocomplete="off" spellcheck="false"
                 inputmode={(props.ask == Ask::Number).then_some("decimal")}

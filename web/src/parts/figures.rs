@@ -58,7 +58,9 @@ impl Sheet<'_> {
             .filter(|m| !self.beside && self.lines.iter().all(|l| l.measure == *m))
             .map(|m| (m, Scale::of(m, values.iter().flatten().flatten().copied())));
         let first = match &common {
-            Some((m, scale)) if !scale.unit.is_empty() => format!("{} / {}", self.first, self.unit(*m, scale)),
+            Some((m, scale)) if !scale.unit.is_empty() => {
+                format!("{} / {}", self.first, self.unit(*m, scale))
+            }
             _ => self.first.to_owned(),
         };
         let caption = format!("{}-caption", self.id);
@@ -95,7 +97,14 @@ impl Sheet<'_> {
         }
     }
 
-    fn row(&self, line: &Line, values: &[Option<f64>], scale: &Scale, unit: bool, present: Option<usize>) -> Html {
+    fn row(
+        &self,
+        line: &Line,
+        values: &[Option<f64>],
+        scale: &Scale,
+        unit: bool,
+        present: Option<usize>,
+    ) -> Html {
         let unit = if unit { self.unit(line.measure, scale) } else { String::new() };
         let before = present.and_then(|p| values.get(p).copied().flatten());
         html! {

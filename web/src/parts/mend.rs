@@ -40,7 +40,9 @@ pub(crate) fn place_words(plan: &Plan, path: &str) -> String {
                             let step = s.parse::<usize>().ok().and_then(|s| route?.steps.get(s));
                             let known = step.and_then(|s| technique(&s.technique));
                             for key in rest {
-                                let label = known.and_then(|t| t.params.iter().find(|p| p.key == *key)).map(|p| p.label);
+                                let label = known
+                                    .and_then(|t| t.params.iter().find(|p| p.key == *key))
+                                    .map(|p| p.label);
                                 out.push(label.map_or_else(|| plain(key), str::to_owned));
                             }
                         }
@@ -65,7 +67,10 @@ pub(crate) fn Mend(props: &Props) -> Html {
     let (errors, doubts) = (props.reckoned.count(Severity::Error), props.reckoned.count(Severity::Warning));
     let heading = match errors {
         0 => "Nothing has to be mended".to_owned(),
-        n => format!("There {} to mend", if n == 1 { "is 1 thing".to_owned() } else { format!("are {}", things(n)) }),
+        n => format!(
+            "There {} to mend",
+            if n == 1 { "is 1 thing".to_owned() } else { format!("are {}", things(n)) }
+        ),
     };
     let doubtful = match doubts {
         0 => "no doubts".to_owned(),
@@ -142,7 +147,10 @@ mod tests {
         let mut plan = blank();
         plan.workloads[0].routes[0].steps.push(new_step("soxhlet").expect("a technique"));
         let words = |path: &str| place_words(&plan, path);
-        assert_eq!(words("workloads[0].routes[0].steps[0].charge"), "Present route, step 1, Solvent in the flask");
+        assert_eq!(
+            words("workloads[0].routes[0].steps[0].charge"),
+            "Present route, step 1, Solvent in the flask"
+        );
         assert_eq!(words("site.streams[1].fill"), "stream solids, fill");
         assert_eq!(words("workloads[0].results_per_year"), "results per year");
         assert_eq!(words(""), "");

@@ -9,7 +9,7 @@ mod toolbar;
 mod working;
 
 pub(crate) use card::tools;
-pub(crate) use field::{Ask, Field, Options, Said, said};
+pub(crate) use field::{Ask, Field, Options, said};
 pub(crate) use figures::{Line, Sheet, figure_button};
 pub(crate) use mend::{Mend, basis_of};
 pub(crate) use name::Name;

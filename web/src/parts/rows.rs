@@ -67,7 +67,8 @@ pub(crate) fn Rows(props: &Props) -> Html {
         }
     };
     let typed = |i: usize, second: bool| {
-        let (put, rows, patience, shown) = (put.clone(), props.rows.clone(), patience.clone(), shown.is_some());
+        let (put, rows, patience, shown) =
+            (put.clone(), props.rows.clone(), patience.clone(), shown.is_some());
         let place = format!("{} {i} {second}", props.path);
         Callback::from(move |event: InputEvent| {
             let Some(value) = value_of(&event) else { return };
@@ -94,12 +95,13 @@ pub(crate) fn Rows(props: &Props) -> Html {
             let mut rows = rows.clone();
             rows.remove(i);
             let next = if i < rows.len() { i } else { rows.len().saturating_sub(1) };
-            *wanted.borrow_mut() = Some(if rows.is_empty() { format!("{id}-add") } else { row_id(&path, &rows, next) });
+            *wanted.borrow_mut() =
+                Some(if rows.is_empty() { format!("{id}-add") } else { row_id(&path, &rows, next) });
             put(rows, None);
         })
     };
     let add = {
-        let (put, rows, wanted, path) = (put, props.rows.clone(), wanted, props.path.clone());
+        let (put, rows, wanted, path) = (put.clone(), props.rows.clone(), wanted.clone(), props.path.clone());
         Callback::from(move |_: MouseEvent| {
             let mut rows = rows.clone();
             // One material alone has the whole share; the usual next one fills it up.

@@ -45,7 +45,9 @@ pub(crate) fn Toolbar(props: &Props) -> Html {
                 {onclick}>{ label }</button>
         }
     };
-    let named = |verb: &str, name: Option<&AttrValue>| name.map_or_else(|| verb.to_owned(), |name| format!("{verb}: {name}"));
+    let named = |verb: &str, name: Option<&AttrValue>| {
+        name.map_or_else(|| verb.to_owned(), |name| format!("{verb}: {name}"))
+    };
     html! {
         <div class="toolbar" role="group" aria-label="Plan">
             { button("Open a file".into(), "Control+O Meta+O", false, Wish::Open) }

@@ -127,10 +127,9 @@ fn working(
 fn parts(opened: &Opened, account: &RouteAccount, figure: &Figure) -> Html {
     let (indices, words): (Vec<usize>, String) = match figure.how {
         How::Ratio { over, under } => (vec![over, under], "One figure over another:".to_owned()),
-        How::Containers { volume, takes_m3 } => (
-            vec![volume],
-            format!("One container takes {} of this volume:", show(takes_m3, Kind::Volume)),
-        ),
+        How::Containers { volume, takes_m3 } => {
+            (vec![volume], format!("One container takes {} of this volume:", show(takes_m3, Kind::Volume)))
+        }
         How::Sum(_) | How::Spent(_) => return Html::default(),
     };
     html! {
@@ -169,7 +168,9 @@ fn postings(
         _ => figure.measure,
     };
     let scale = Scale::of(measure, found.iter().map(amount_of));
-    let name = |m: thimbleworth::ledger::Material| route.materials.get(usize::from(m.0)).map_or("", |m| m.name.as_str());
+    let name = |m: thimbleworth::ledger::Material| {
+        route.materials.get(usize::from(m.0)).map_or("", |m| m.name.as_str())
+    };
     html! {
         <>
             <h3>{ "Behind it, largest first" }</h3>
@@ -226,8 +227,12 @@ fn rules(route: &RouteProgram, account: &RouteAccount, found: &[Contribution]) -
     let mut met: Vec<(StepIx, RuleIx)> = Vec::new();
     for contribution in found {
         let key = match contribution {
-            Contribution::Posting { index, .. } => account.trace.postings.get(*index).map(|p| (p.step, p.rule)),
-            Contribution::Spending { index, .. } => account.trace.spendings.get(*index).map(|s| (s.step, s.rule)),
+            Contribution::Posting { index, .. } => {
+                account.trace.postings.get(*index).map(|p| (p.step, p.rule))
+            }
+            Contribution::Spending { index, .. } => {
+                account.trace.spendings.get(*index).map(|s| (s.step, s.rule))
+            }
         };
         if let Some(key) = key.filter(|key| !met.contains(key)) {
             met.push(key);

@@ -63,7 +63,11 @@ fn a_route_that_cannot_be_accounted_is_left_out_and_named() {
     assert!(book.finding(0)[1].starts_with("In place of A, C costs"), "{:?}", book.finding(0));
     // Warnings of the others keep the paths of the whole plan.
     assert!(reckoned.problems.iter().all(|p| !p.path.contains("routes[3]")));
-    assert!(reckoned.problems.iter().any(|p| p.path.starts_with("workloads[0].routes[2]")), "{:?}", reckoned.problems);
+    assert!(
+        reckoned.problems.iter().any(|p| p.path.starts_with("workloads[0].routes[2]")),
+        "{:?}",
+        reckoned.problems
+    );
 }
 
 #[test]
@@ -106,7 +110,10 @@ fn a_blank_title_keeps_nothing_from_being_accounted() {
 #[test]
 fn paths_are_found_again() {
     let kept = [vec![], vec![1, 3]];
-    assert_eq!(path_in_plan("workloads[0].routes[1].steps[2].charge", &kept), "workloads[1].routes[3].steps[2].charge");
+    assert_eq!(
+        path_in_plan("workloads[0].routes[1].steps[2].charge", &kept),
+        "workloads[1].routes[3].steps[2].charge"
+    );
     assert_eq!(path_in_plan("workloads[0].repeats", &kept), "workloads[1].repeats");
     assert_eq!(path_in_plan("site.as_of", &kept), "site.as_of");
 }

@@ -96,7 +96,9 @@ fn refusals(view: &View, w: usize) -> Html {
     for (r, column) in view.book().works.get(w).map_or(&[][..], |work| &work.routes).iter().enumerate() {
         let Some((_, account)) = view.book().route(w, r) else { continue };
         for refusal in &account.refusals {
-            out.push(html! { <li>{ format!("{}, {}: {}", column.name, refusal.metrics, refusal.reason) }</li> });
+            out.push(
+                html! { <li>{ format!("{}, {}: {}", column.name, refusal.metrics, refusal.reason) }</li> },
+            );
         }
     }
     if out.is_empty() {

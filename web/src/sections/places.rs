@@ -41,7 +41,12 @@ pub(super) fn lines(book: &Book, w: usize, wanted: impl Fn(&Figure) -> bool) -> 
     let mut out: Vec<Line> = Vec::new();
     for figure in all_figures(book, w).filter(|f| wanted(f)) {
         if !out.iter().any(|line| line.id == figure.id) {
-            out.push(Line { label: figure.title.clone(), id: figure.id.clone(), measure: figure.measure, part: false });
+            out.push(Line {
+                label: figure.title.clone(),
+                id: figure.id.clone(),
+                measure: figure.measure,
+                part: false,
+            });
         }
     }
     out

@@ -42,7 +42,12 @@ impl<'a> Asked<'a> {
         Self { path: path.into(), label, hint: "", value, kind: None, need: Need::Optional, ask: Ask::Text }
     }
 
-    pub(super) fn amount(path: impl Into<String>, label: &'a str, kind: Kind, value: Option<&String>) -> Self {
+    pub(super) fn amount(
+        path: impl Into<String>,
+        label: &'a str,
+        kind: Kind,
+        value: Option<&String>,
+    ) -> Self {
         let value = value.cloned().unwrap_or_default();
         Self { kind: Some(kind), ask: Ask::Amount, ..Self::text(path, label, value) }
     }
@@ -75,8 +80,9 @@ impl<'a> Asked<'a> {
             (Ask::Number, _) | (_, None) => String::new(),
             (_, Some(kind)) => crate::form::units(kind),
         };
+        let path = self.path.clone();
         html! {
-            <Field key={self.path.clone()} label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
+            <Field key={path} label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
                 said={said(&view.reckoned.problems, &self.path)} show_all={view.state.view.show_all}
                 optional={self.need == Need::Optional} value={self.value} ask={self.ask} path={self.path} edit={view.edit.clone()} />
         }
@@ -112,7 +118,8 @@ fn about(view: &View) -> Html {
 
 fn add(view: &View, words: &'static str, item: Item) -> Html {
     let edit = view.edit.clone();
-    let onclick = Callback::from(move |_: MouseEvent| edit.emit(Edit::list(Change::Add(item, String::new()))));
+    let onclick =
+        Callback::from(move |_: MouseEvent| edit.emit(Edit::list(Change::Add(item, String::new()))));
     html! { <button type="button" {onclick}>{ words }</button> }
 }
 
@@ -171,12 +178,16 @@ fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
     let path = format!("workloads[{w}]");
     let id = view.state.document().ids.workloads.get(w).map(|ids| ids.id).unwrap_or_default();
     let at = |key: &str| format!("{path}.{key}");
-    let number = |key: &str, label: &'static str, value: Option<&Value>| {
-        Asked { kind: Some(Kind::Number), ask: Ask::Number, ..Asked::text(at(key), label, text_of(value)) }
+    let number = |key: &str, label: &'static str, value: Option<&Value>| Asked {
+        kind: Some(Kind::Number),
+        ask: Ask::Number,
+        ..Asked::text(at(key), label, text_of(value))
     };
     let yes = |key: &str, label: &'static str, value: Option<bool>| {
         let text = value.map_or("", |yes| if yes { "true" } else { "false" });
-        Asked::text(at(key), label, text).need(Need::Default("true", DEFINITION)).ask(Ask::YesNo("yes (left out)".into()))
+        Asked::text(at(key), label, text)
+            .need(Need::Default("true", DEFINITION))
+            .ask(Ask::YesNo("yes (left out)".into()))
     };
     let routes: Vec<&str> = work.routes.iter().map(|r| r.name.as_str()).collect();
     let feed = at("feed");
@@ -294,7 +305,12 @@ fn printed(view: &View) -> Html {
         lines.push(line(&format!("Stream {}", stream.name), Some(parts.join(", "))));
     }
     for material in &plan.materials {
-        let fields = material.fields.iter().map(|(k, v)| format!("{k} {}", text_of(Some(v)))).collect::<Vec<_>>().join(", ");
+        let fields = material
+            .fields
+            .iter()
+            .map(|(k, v)| format!("{k} {}", text_of(Some(v))))
+            .collect::<Vec<_>>()
+            .join(", ");
         lines.push(line(&format!("Material {}", material.name), Some(fields)));
     }
     for work in &plan.workloads {

@@ -2,7 +2,9 @@
 use super::View;
 use super::question::{Asked, options};
 use crate::edit::{Change, Edit, Item, dom_id, step_field};
-use crate::form::{applies, cited, left_out, margin, measured_lines, places, rows_of, summary, text_of, understood, units};
+use crate::form::{
+    applies, cited, left_out, margin, measured_lines, places, rows_of, summary, text_of, understood, units,
+};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
 use crate::reckon::things;
 use crate::state::Action;
@@ -31,7 +33,9 @@ pub(super) fn draw(view: &View) -> Html {
 
 fn add_route(view: &View, w: usize) -> Html {
     let edit = view.edit.clone();
-    let onclick = Callback::from(move |_: MouseEvent| edit.emit(Edit::list(Change::Add(Item::Route(w, 0), String::new()))));
+    let onclick = Callback::from(move |_: MouseEvent| {
+        edit.emit(Edit::list(Change::Add(Item::Route(w, 0), String::new())))
+    });
     html! { <button type="button" {onclick}>{ "Add a route" }</button> }
 }
 
@@ -45,7 +49,8 @@ fn card(view: &View, w: usize, r: usize, route: &Route) -> Html {
         let act = view.act.clone();
         Callback::from(move |_: MouseEvent| act.emit(Action::Route(if open { None } else { id })))
     };
-    let errors = view.book().works.get(w).and_then(|work| work.routes.get(r)).map_or(0, |column| column.errors);
+    let errors =
+        view.book().works.get(w).and_then(|work| work.routes.get(r)).map_or(0, |column| column.errors);
     let heading = format!("{path}-heading");
     html! {
         <article class={classes!("card", "route", open.then_some("open"))} key={id.unwrap_or_default()} id={path.clone()} tabindex="-1"
@@ -177,14 +182,18 @@ fn AddStep(props: &AddProps) -> Html {
     };
     let onclick = {
         let (edit, w, r, chosen) = (props.edit.clone(), props.w, props.r, chosen.clone());
-        Callback::from(move |_: MouseEvent| edit.emit(Edit::list(Change::Add(Item::Step(w, r, 0), (*chosen).clone()))))
+        Callback::from(move |_: MouseEvent| {
+            edit.emit(Edit::list(Change::Add(Item::Step(w, r, 0), (*chosen).clone())))
+        })
     };
-    let group = |group: Group, label: &'static str| html! {
-        <optgroup {label}>
-            { for TECHNIQUES.iter().filter(|t| t.group == group).map(|t| html! {
-                <option value={t.key} selected={*chosen == t.key}>{ t.title }</option>
-            }) }
-        </optgroup>
+    let group = |group: Group, label: &'static str| {
+        html! {
+            <optgroup {label}>
+                { for TECHNIQUES.iter().filter(|t| t.group == group).map(|t| html! {
+                    <option value={t.key} selected={*chosen == t.key}>{ t.title }</option>
+                }) }
+            </optgroup>
+        }
     };
     html! {
         <div class="add">
