@@ -148,8 +148,8 @@ function focusOn(id) {
     place = document.getElementById(path);
   }
   if (!place) return;
-  const focusable = "input, select, textarea, button, [tabindex]";
-  const target = place.matches(focusable) ? place : place.querySelector(focusable) || place;
+  const field = place.matches("input, select, textarea") ? place : place.querySelector("input, select, textarea");
+  const target = field || (place.hasAttribute("tabindex") ? place : place.querySelector("button") || place);
   target.focus();
 }
 

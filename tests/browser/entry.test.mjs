@@ -117,7 +117,7 @@ test("16: what is unusual is doubted and still counted; what is impossible is no
 
 test("17, 18, 19, 21: a wrong entry is told after it was left, names what would do, is never cleared, and goes at once when mended", async () => {
   const { page, seen, close } = await open(browser);
-  await page.getByText("Begin anew").click();
+  await page.getByText("Begin anew", { exact: true }).click();
   await page.getByRole("button", { name: "Blank plan" }).click();
   await page.getByRole("button", { name: "Add the step" }).click();
   const message = beside(page).locator(".said");

@@ -13,7 +13,7 @@ after(() => browser?.close());
 
 test("a first visit: look at the example, type a volume, see the finding change, print the comparison", async () => {
   const { page, seen, close } = await open(browser);
-  await page.getByText("This is an example").waitFor();
+  await page.getByText("This is an example: the laboratory").waitFor();
   const before = await insight(page);
   assert.match(before, /In place of /);
   const charge = page.getByLabel(/^Solvent in the flask/);
@@ -32,7 +32,7 @@ test("a first visit: look at the example, type a volume, see the finding change,
 
 test("from a blank plan: every entry typed, a second route added, the two compared", async () => {
   const { page, seen, close } = await open(browser);
-  await page.getByText("Begin anew").click();
+  await page.getByText("Begin anew", { exact: true }).click();
   await page.getByRole("button", { name: "Blank plan" }).click();
   await page.getByText("A blank plan is open.").waitFor();
   assert.match(await insight(page), /Nothing can be accounted yet/);
@@ -153,7 +153,7 @@ test("42: where the browser has a dialog for saving, it is used, and thinking be
 test("every state of the page is clean by axe: blank, filled, error, dialog, results", async () => {
   const { page, close } = await open(browser);
   assert.deepEqual(await axeFindings(page), [], "example");
-  await page.getByText("Begin anew").click();
+  await page.getByText("Begin anew", { exact: true }).click();
   assert.deepEqual(await axeFindings(page), [], "menu");
   await page.getByRole("button", { name: "Blank plan" }).click();
   await page.getByText("A blank plan is open.").waitFor();

@@ -238,9 +238,9 @@ pub(crate) fn App() -> Html {
                         { names() }
                     </datalist>
                 </main>
+                <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} />
             </div>
             <ReadOut text={finding.join(" ")} />
-            <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} />
             <footer class="foot">
                 <p>
                     { format!("{} reads and writes plans of version {PLAN_VERSION}. ", crate::PROGRAM) }

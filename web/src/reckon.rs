@@ -272,6 +272,13 @@ impl Book {
         Some((program, account))
     }
 
+    /// Where a piece of work and one of its routes stand in the account itself; for what reads the account directly.
+    #[must_use]
+    pub fn in_account(&self, w: usize, r: usize) -> Option<(usize, usize)> {
+        let work = self.works.get(w)?;
+        Some((work.at?, work.routes.get(r)?.at?))
+    }
+
     /// A figure of a route and its value: a year for what grows with the work, SI.
     #[must_use]
     pub fn figure(&self, w: usize, r: usize, id: &str) -> Option<(&Figure, f64)> {

@@ -6,6 +6,7 @@ use crate::form::understood;
 use thimbleworth::plan::{Field as Value, Severity, below};
 use thimbleworth::quantity::Kind;
 use thimbleworth::step::Need;
+use wasm_bindgen::JsCast;
 use yew::prelude::*;
 
 #[derive(Properties, PartialEq)]
@@ -86,7 +87,16 @@ pub(crate) fn Rows(props: &Props) -> Html {
     };
     let onblur = {
         let patience = patience.clone();
-        Callback::from(move |_: FocusEvent| patience.set(patience.gone()))
+        Callback::from(move |event: FocusEvent| {
+            // From cell to cell is not yet leaving.
+            let rows = |target: Option<web_sys::EventTarget>| {
+                target?.dyn_into::<web_sys::Element>().ok()?.closest("fieldset").ok().flatten()
+            };
+            let (from, to) = (rows(event.target()), rows(event.related_target()));
+            if to.is_none() || from != to {
+                patience.set(patience.gone());
+            }
+        })
     };
     let remove = |i: usize| {
         let (put, rows, wanted, path, id) =

@@ -80,9 +80,8 @@ impl<'a> Asked<'a> {
             (Ask::Number, _) | (_, None) => String::new(),
             (_, Some(kind)) => crate::form::units(kind),
         };
-        let path = self.path.clone();
         html! {
-            <Field key={path} label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
+            <Field label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
                 said={said(&view.reckoned.problems, &self.path)} show_all={view.state.view.show_all}
                 optional={self.need == Need::Optional} value={self.value} ask={self.ask} path={self.path} edit={view.edit.clone()} />
         }
