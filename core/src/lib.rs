@@ -13,6 +13,7 @@ pub mod account;
 pub mod chance;
 pub mod co2;
 pub mod compare;
+pub mod example;
 pub mod hazard;
 pub mod ledger;
 pub mod material;
