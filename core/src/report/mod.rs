@@ -6,10 +6,17 @@
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
+mod csv;
+mod grid;
+mod markdown;
 mod result;
 mod row;
+mod table;
 mod words;
 
+pub use csv::{result_csv, text_cell};
+pub use markdown::{escaped, markdown};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
+pub use table::{account_table, comparison_table};
 pub use words::{problem_line, visible};

@@ -1,11 +1,12 @@
 //! Words and units that several documents share.
 
-use crate::account::place_name;
+use crate::account::{Measure, place_name};
+use crate::chance::Draw;
 use crate::ledger::Place;
 use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
 use crate::plan::Problem;
-use crate::program::{Program, SiteUse};
-use crate::quantity::Kind;
+use crate::program::{Program, SiteUse, WorkloadProgram};
+use crate::quantity::{Kind, show, significant};
 use crate::source::Standing;
 use std::collections::BTreeSet;
 
@@ -98,6 +99,37 @@ fn sources(s: &Substance) -> BTreeSet<String> {
     out.extend([s.hazard.source.to_string(), s.rcra.source.to_string()]);
     out.remove("");
     out
+}
+
+/// An amount for people: four significant digits and a unit that suits its size.
+pub(super) fn amount(value_si: f64, measure: Measure) -> String {
+    match measure {
+        Measure::Mass => show(value_si, Kind::Mass),
+        Measure::Volume => show(value_si, Kind::Volume),
+        Measure::Energy => show(value_si, Kind::Energy),
+        Measure::WeightedMass => format!("{} × score", show(value_si, Kind::Mass)),
+        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
+    }
+}
+
+/// How much work there is, in words.
+pub(super) fn work_words(work: &WorkloadProgram) -> String {
+    let runs = work.routes.first().and_then(|r| r.work.runs(Draw(&r.central())).ok());
+    runs.map_or_else(
+        || "no work".to_owned(),
+        |runs| {
+            let [results, extractions, batches] =
+                [runs.results, runs.extractions, runs.batches].map(|n| significant(n, 4));
+            format!("{results} results, {extractions} extractions, {batches} batches a year")
+        },
+    )
+}
+
+/// Whether a figure of the account of mass is that of one material alone.
+pub(super) fn is_detail(id: &str) -> bool {
+    let parts = id.split('.').count();
+    let of = |start: &str| id.starts_with(start);
+    of("mass.feed.") || of("mass.drawn.") || of("mass.returned.") || of("mass.to.") && parts > 3
 }
 
 /// A problem on one line: `warning site.streams[0].fill: what was found; what would do`.
