@@ -5,7 +5,7 @@ mod hazard;
 mod posting;
 
 pub(super) use figure::FigureRow;
-pub(super) use posting::InputDocument;
+pub(super) use posting::{InputDocument, step_and_technique};
 
 use super::row::PROGRAM;
 use super::words::editions;
