@@ -115,7 +115,7 @@ fn table(state: &State) -> String {
         ("entropy", format!("{} J/(kg K)", number(state.entropy_j_kg_k))),
         ("heat capacity at constant pressure", format!("{} J/(kg K)", number(state.heat_capacity_j_kg_k))),
         ("speed of sound", format!("{} m/s", number(state.sound_speed_m_s))),
-        ("viscosity", format!("{} Pa s", number(state.viscosity_pa_s))),
+        ("viscosity", format!("{} µPa s", number(state.viscosity_pa_s * 1e6))),
     ];
     let mut text = String::new();
     for (what, value) in rows {

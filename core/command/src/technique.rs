@@ -3,7 +3,7 @@
 use crate::output::{Refusal, print};
 use std::process::ExitCode;
 use thimbleworth::quantity::{Kind, show};
-use thimbleworth::source::Source;
+use thimbleworth::report::cited;
 use thimbleworth::step::{Control, Measurable, Need, Param, TECHNIQUES, Technique, technique};
 
 #[derive(clap::Args)]
@@ -103,9 +103,4 @@ fn limits((low, high): (f64, f64), kind: Kind) -> Option<String> {
         (false, true) => Some(format!("up to {}", show(high, kind))),
         (false, false) => None,
     }
-}
-
-fn cited(source: Source) -> String {
-    let standing = source.standing.words();
-    if source.cite == standing { standing.to_owned() } else { format!("{}, {standing}", source.cite) }
 }

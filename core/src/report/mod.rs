@@ -25,4 +25,4 @@ pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
 pub use table::{account_table, comparison_table};
 pub use trace::{Selection, TraceError, TracedFigure, trace};
-pub use words::{problem_line, visible};
+pub use words::{cited, problem_line, visible};

@@ -235,10 +235,14 @@ fn finding(out: &mut String, beside: &RouteComparison) {
     paragraph(out, "", &beside.finding);
     for (id, name) in HEADLINES {
         let Some(d) = beside.differences.iter().find(|d| d.id == id) else { continue };
-        let causes: Vec<String> =
-            d.causes.iter().take(3).map(|c| format!("{} {}", signed(c.change, d.measure), c.what)).collect();
+        let causes: Vec<String> = d
+            .causes
+            .iter()
+            .take(3)
+            .map(|c| format!("{} ({})", signed(c.change, d.measure), c.what))
+            .collect();
         if !causes.is_empty() {
-            paragraph(out, "  ", &format!("{name}: {}", causes.join("; ")));
+            paragraph(out, "  ", &format!("{name}: {}", causes.join(", ")));
         }
     }
     for doubt in &beside.doubts {

@@ -13,6 +13,7 @@ use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
 use crate::program::{Program, RouteProgram, SiteUse};
 use crate::quantity::show;
+use crate::step::Rule;
 use serde::Serialize;
 use serde::ser::{SerializeMap, Serializer};
 
@@ -46,10 +47,7 @@ struct Entry<'a> {
     what: String,
     step: StepIx,
     by: (Option<u16>, &'static str),
-    rule: &'static str,
-    equation: &'static str,
-    source: &'static str,
-    standing: &'static str,
+    rule: Option<&'static Rule>,
     working: Vec<&'a Note>,
     moved: Moved<'a>,
     adds_si: f64,
@@ -162,21 +160,15 @@ fn entry<'a>(
     measure: Measure,
     contribution: Contribution,
 ) -> Option<Entry<'a>> {
-    let make = |step: StepIx, rule_ix: RuleIx, what: String, moved, adds_si| {
-        let rule = rule_of(route, step, rule_ix);
-        Entry {
-            what,
-            step,
-            by: step_and_technique(route, step),
-            rule: rule.map_or("", |r| r.name),
-            equation: rule.map_or("", |r| r.equation),
-            source: rule.map_or("", |r| r.source.cite),
-            standing: rule.map_or("", |r| r.source.standing.words()),
-            working: account.trace.working(step, rule_ix).collect(),
-            moved,
-            adds_si,
-            measure,
-        }
+    let make = |step: StepIx, rule: RuleIx, what: String, moved, adds_si| Entry {
+        what,
+        step,
+        by: step_and_technique(route, step),
+        rule: rule_of(route, step, rule),
+        working: account.trace.working(step, rule).collect(),
+        moved,
+        adds_si,
+        measure,
     };
     match contribution {
         Contribution::Posting { index, amount_si } => {
@@ -204,7 +196,8 @@ fn entry<'a>(
     }
 }
 
-/// The inputs of the steps, feeds and materials that the entries come from.
+/// Every input that the entries can rest on: those of the work, the feed and the materials, and those of every step up to
+/// the last that made an entry.
 fn inputs_behind<'a, 'o>(
     route: &'a RouteProgram,
     parts: impl Iterator<Item = &'o Opened<'a>>,
@@ -212,38 +205,23 @@ fn inputs_behind<'a, 'o>(
 where
     'a: 'o,
 {
-    let (mut steps, mut materials, mut feed) = (Vec::new(), Vec::new(), false);
+    let mut after = 0;
     for entry in parts.flat_map(|p| &p.entries) {
-        match entry.step {
-            StepIx::Opening => feed = true,
-            StepIx::Closing => {}
-            StepIx::Step(i) => steps.extend(route.steps.get(i as usize).map(|s| s.path.as_str())),
-        }
-        if let Moved::Mass { material, .. } = entry.moved {
-            materials.push(format!("material/{material}/"));
+        let steps = match entry.step {
+            StepIx::Opening => 0,
+            StepIx::Closing => route.steps.len(),
+            StepIx::Step(i) => usize::from(i) + 1,
+        };
+        if steps > after {
+            after = steps;
         }
     }
     // `steps[1]` is not the beginning of `steps[10]`: what follows a step's path is a dot or a bracket.
     let under = |identity: &str, path: &str| {
         identity.strip_prefix(path).is_some_and(|rest| rest.starts_with('.') || rest.starts_with('['))
     };
-    let fed: Vec<&str> = route
-        .feed
-        .iter()
-        .filter_map(|(_, slot)| Some(route.inputs.get(slot.0 as usize)?.identity.as_str()))
-        .collect();
-    let work = route.work;
-    let counted = [work.results, work.batch_samples, work.batch_controls, work.repeats];
-    let counted: Vec<&str> =
-        counted.iter().filter_map(|s| Some(route.inputs.get(s.0 as usize)?.identity.as_str())).collect();
-    let wanted = |i: &&Input| {
-        let id = i.identity.as_str();
-        counted.contains(&id)
-            || feed && fed.contains(&id)
-            || steps.iter().any(|path| under(id, path))
-            || materials.iter().any(|m| id.starts_with(m))
-    };
-    route.inputs.iter().filter(wanted).collect()
+    let later = |i: &Input| route.steps.iter().skip(after).any(|s| under(&i.identity, &s.path));
+    route.inputs.iter().filter(|i| !later(i)).collect()
 }
 
 impl TracedFigure<'_> {
@@ -251,8 +229,8 @@ impl TracedFigure<'_> {
     /// and `under` for a ratio, `volume` for containers (each with its own `figure` and `entries`), `inputs`.
     ///
     /// An entry has `what`, `step`, `technique`, `rule`, `equation`, `source`, `standing`, `working` (symbol, `value_si`,
-    /// `unit`), for a posting `from`, `to`, `material`, `kg_per_run`, `kg_per_year` and `measured`, then `runs_per_year`,
-    /// and what it adds to the figure, as in `adds_kg_per_year`.
+    /// `unit`), for a posting `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year` and `measured`, for a utility what a run takes and
+    /// `runs_per_year`, and what it adds to the figure, as in `adds_kg_per_year`.
     #[must_use]
     pub fn json(&self) -> String {
         // Plain data with text keys: writing it to memory cannot fail.
@@ -312,10 +290,10 @@ impl Serialize for Entry<'_> {
         map.serialize_entry("what", &self.what)?;
         map.serialize_entry("step", &self.by.0)?;
         map.serialize_entry("technique", self.by.1)?;
-        map.serialize_entry("rule", self.rule)?;
-        map.serialize_entry("equation", self.equation)?;
-        map.serialize_entry("source", self.source)?;
-        map.serialize_entry("standing", self.standing)?;
+        map.serialize_entry("rule", &self.rule.map(|r| r.name))?;
+        map.serialize_entry("equation", &self.rule.map(|r| r.equation))?;
+        map.serialize_entry("source", &self.rule.map(|r| r.source.cite))?;
+        map.serialize_entry("standing", &self.rule.map(|r| r.source.standing.words()))?;
         let working = |n: &&Note| Working { symbol: n.symbol, value_si: n.value_si, unit: si_unit(n.kind) };
         map.serialize_entry("working", &self.working.iter().map(working).collect::<Vec<_>>())?;
         match &self.moved {
@@ -329,6 +307,8 @@ impl Serialize for Entry<'_> {
                 map.serialize_entry("measured", &posting.measured)?;
             }
             Moved::Utility(spending) => {
+                let a_run = format!("{}_per_run", key_unit(self.measure));
+                map.serialize_entry(&a_run, &written(self.measure, spending.amount_si))?;
                 map.serialize_entry("runs_per_year", &spending.runs_a_year)?;
             }
         }

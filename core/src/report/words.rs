@@ -7,7 +7,7 @@ use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
 use crate::plan::Problem;
 use crate::program::{Program, SiteUse, WorkloadProgram};
 use crate::quantity::{Kind, show, significant};
-use crate::source::Standing;
+use crate::source::{Source, Standing};
 use std::collections::BTreeSet;
 
 /// The name of a place, streams by the site's names.
@@ -107,7 +107,7 @@ pub(super) fn amount(value_si: f64, measure: Measure) -> String {
         Measure::Mass => show(value_si, Kind::Mass),
         Measure::Volume => show(value_si, Kind::Volume),
         Measure::Energy => show(value_si, Kind::Energy),
-        Measure::WeightedMass => format!("{} × score", show(value_si, Kind::Mass)),
+        Measure::WeightedMass => format!("{}·score", show(value_si, Kind::Mass)),
         Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
     }
 }
@@ -130,6 +130,19 @@ pub(super) fn is_detail(id: &str) -> bool {
     let parts = id.split('.').count();
     let of = |start: &str| id.starts_with(start);
     of("mass.feed.") || of("mass.drawn.") || of("mass.returned.") || of("mass.to.") && parts > 3
+}
+
+/// A source with how far it has been traced.
+///
+/// ```
+/// use thimbleworth::{report::cited, source};
+/// assert_eq!(cited(source::MASS_BALANCE), "conservation of mass, by definition");
+/// assert_eq!(cited(source::FROM_MEMORY), "from memory");
+/// ```
+#[must_use]
+pub fn cited(source: Source) -> String {
+    let standing = source.standing.words();
+    if standing.contains(source.cite) { standing.to_owned() } else { format!("{}, {standing}", source.cite) }
 }
 
 /// A problem on one line: `warning site.streams[0].fill: what was found; what would do`.

@@ -2,7 +2,7 @@
 
 use super::super::grid::paragraph;
 use super::super::row::MONTHS;
-use super::super::words::{amount, visible};
+use super::super::words::{amount, cited, visible};
 use super::{Entry, Moved, Opened, TracedFigure, working_words};
 use crate::account::How;
 use crate::quantity::{Kind, Origin, Spread, show, significant};
@@ -21,7 +21,7 @@ pub(super) fn text(traced: &TracedFigure<'_>) -> String {
         opened(&mut out, part, words);
     }
     if !traced.inputs.is_empty() {
-        out.push_str("\nWhat was read for these steps\n");
+        out.push_str("\nWhat was read for these steps and those before them\n");
     }
     for input in &traced.inputs {
         let spread = match input.spread {
@@ -67,13 +67,7 @@ fn opened(out: &mut String, o: &Opened<'_>, before: &str) {
         paragraph(out, "  ", &shown(o.value_si));
     }
     paragraph(out, "  ", &format!("Counted: {}", figure.boundary));
-    let source = figure.source;
-    let standing = if source.cite == source.standing.words() {
-        String::new()
-    } else {
-        format!(", {}", source.standing.words())
-    };
-    paragraph(out, "  ", &format!("Formula: {} ({}{standing})", figure.formula, source.cite));
+    paragraph(out, "  ", &format!("Formula: {} ({})", figure.formula, cited(figure.source)));
     if let How::Containers { takes_m3, .. } = figure.how {
         paragraph(out, "  ", &format!("One container takes {}.", show(takes_m3, Kind::Volume)));
     }
@@ -108,9 +102,9 @@ fn entry(out: &mut String, o: &Opened<'_>, e: &Entry<'_>) {
         let a_run = amount(spending.amount_si, e.measure);
         paragraph(out, "    ", &format!("{a_run} a run, {runs} runs a year"));
     }
-    let source =
-        if e.source == e.standing { e.source.to_owned() } else { format!("{}, {}", e.source, e.standing) };
-    paragraph(out, "    ", &format!("Rule {}: {} ({source})", e.rule, e.equation));
+    if let Some(rule) = e.rule {
+        paragraph(out, "    ", &format!("Rule {}: {} ({})", rule.name, rule.equation, cited(rule.source)));
+    }
     let working: Vec<String> = e.working.iter().map(|n| working_words(n)).collect();
     if !working.is_empty() {
         paragraph(out, "    ", &format!("with {}", visible(&working.join(", "))));
