@@ -11,6 +11,7 @@ use super::words::{place, si_unit};
 use crate::account::{Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, rule_of};
 use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
+use crate::plan::below;
 use crate::program::{Program, RouteProgram, SiteUse};
 use crate::quantity::show;
 use crate::step::Rule;
@@ -216,11 +217,9 @@ where
             after = steps;
         }
     }
-    // `steps[1]` is not the beginning of `steps[10]`: what follows a step's path is a dot or a bracket.
-    let under = |identity: &str, path: &str| {
-        identity.strip_prefix(path).is_some_and(|rest| rest.starts_with('.') || rest.starts_with('['))
-    };
-    let later = |i: &Input| route.steps.iter().skip(after).any(|s| under(&i.identity, &s.path));
+    let steps = below(&route.path, "steps") + "[";
+    let step_of = |i: &Input| i.identity.strip_prefix(&steps)?.split_once(']')?.0.parse::<usize>().ok();
+    let later = |i: &Input| step_of(i).is_some_and(|step| step >= after);
     route.inputs.iter().filter(|i| !later(i)).collect()
 }
 
