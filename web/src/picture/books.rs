@@ -100,7 +100,7 @@ pub(super) fn fills(ends: &[End]) -> String {
         (End::Air, "slanting lines are air"),
         (End::Kept, "dark is product or kept"),
         (End::Other, "dots are drain, destroyed or elsewhere"),
-        (End::Back, "an outline is returned to the store"),
+        (End::Back, "a broken outline is returned to the store"),
     ]
     .into_iter()
     .filter_map(|(end, words)| ends.contains(&end).then_some(words))

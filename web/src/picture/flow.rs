@@ -266,7 +266,18 @@ fn draw(flow: &Flow, total: f64, unit: (&'static str, f64), size: Size) -> Drawi
         let under = fold + thick + 2.0;
         let end = under + if thick > 1.0 { thick } else { 1.0 };
         shapes.extend(way_back(x_left, x_right, under, thick));
-        bottom = [end + 8.0, fold + room + 8.0].into_iter().fold(bottom, |a, b| if b > a { b } else { a });
+        // The fold itself, from the band that arrives to the band that leaves.
+        shapes.push(Shape::Rect {
+            x: x_right,
+            y: fold,
+            width: STOP,
+            height: end - fold,
+            class: "stop",
+            hatch: Hatch::No,
+        });
+        let base = (under + end) / 2.0 + type_size * 0.35;
+        shapes.push(text((x_left - 6.0, base), Anchor::End, type_size, "soft", "drawn again"));
+        bottom = [end + step, fold + room + 8.0].into_iter().fold(bottom, |a, b| if b > a { b } else { a });
     }
     let mut bands = bands(flow, &left, &right, scale);
     // The thin ones on top.
@@ -322,8 +333,8 @@ fn way_back(x_left: f64, x_right: f64, y: f64, thick: f64) -> Vec<Shape> {
     }
     let d = Trail::from(x_left, middle)
         .to(x_left + head, y)
-        .to(x_right + STOP, y)
-        .to(x_right + STOP, y + thick)
+        .to(x_right, y)
+        .to(x_right, y + thick)
         .to(x_left + head, y + thick)
         .closed();
     vec![Shape::Path { d, class: "band fill-back", hatch: Hatch::No }]

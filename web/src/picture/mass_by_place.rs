@@ -126,9 +126,16 @@ fn draw(masses: &Masses, totals: &[f64], unit: (&'static str, f64), size: Size) 
         .chain(totals)
         .map(|kg| text_width(&amounts(*kg), type_size) * BOLD)
         .fold(0.0, |a: f64, b| if b > a { b } else { a });
+    let names = masses
+        .places
+        .iter()
+        .map(|(name, _)| text_width(name, type_size))
+        .chain([100.0])
+        .fold(0.0, |a: f64, b| if b > a { b } else { a });
+    let names = if names > 230.0 { 230.0 } else { names };
     let rule = width - widest - 14.0;
     let (bars, row) = match size {
-        Size::Wide => (Linear::new((0.0, most), (176.0, rule - 10.0)), 24.0),
+        Size::Wide => (Linear::new((0.0, most), (names + 10.0, rule - 10.0)), 24.0),
         Size::Narrow => (Linear::new((0.0, most), (2.0, width - 2.0)), 34.0),
     };
     let mut shapes = Vec::new();
@@ -149,7 +156,7 @@ fn draw(masses: &Masses, totals: &[f64], unit: (&'static str, f64), size: Size) 
         for ((place, end), kg) in masses.places.iter().zip(at) {
             let amount = amounts(*kg);
             let (words, bar, thick) = match size {
-                Size::Wide => (166.0, y + 6.0, 12.0),
+                Size::Wide => (names, y + 6.0, 12.0),
                 Size::Narrow => (width - text_width(&amount, type_size) - 12.0, y + 20.0, 9.0),
             };
             let base = if size.narrow() { y + 14.0 } else { y + 16.5 };
@@ -160,7 +167,7 @@ fn draw(masses: &Masses, totals: &[f64], unit: (&'static str, f64), size: Size) 
             shapes.push(line((0.0, y), (width, y), "rule"));
         }
         if !size.narrow() {
-            shapes.push(line((176.0, top), (176.0, y), "axis"));
+            shapes.push(line((bars.at(0.0), top), (bars.at(0.0), y), "axis"));
             for x in [rule - 1.5, rule + 1.5] {
                 shapes.push(line((x, top), (x, y + 24.0), "margin"));
             }

@@ -12,7 +12,6 @@ mod co2_map;
 mod difference;
 mod draw;
 mod flow;
-#[cfg(test)]
 mod label;
 mod letter;
 mod mass_by_place;
