@@ -142,10 +142,11 @@ pub(super) fn into_places(account: &RouteAccount) -> Vec<(Place, f64)> {
 pub(super) fn mass_unit(largest_kg: f64) -> (&'static str, f64) {
     match largest_kg {
         x if x >= 1e4 => ("t", 1e-3),
-        x if x >= 1.0 || !(x > 0.0) => ("kg", 1.0),
+        x if x >= 1.0 => ("kg", 1.0),
         x if x >= 1e-3 => ("g", 1e3),
         x if x >= 1e-6 => ("mg", 1e6),
-        _ => ("µg", 1e9),
+        x if x > 0.0 => ("µg", 1e9),
+        _ => ("kg", 1.0),
     }
 }
 

@@ -4,6 +4,7 @@
 //! state gives it without a search, and the steps of the map are what lies between two such lines. Where liquid and vapour
 //! exist side by side, the lines run together on the saturation line.
 
+use super::co2_lines::{Frame, LEVELS_KG_M3, Lines, inside};
 use super::label::{Area, Taken};
 use super::letter::{class_width, text_width, written};
 use super::scale::{Linear, ticks};
@@ -11,8 +12,8 @@ use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
 use super::{Drawing, Head, Picture, Size, Table};
 use thimbleworth::account::{Account, RouteAccount};
 use thimbleworth::co2::{
-    CRITICAL_DENSITY_KG_M3, CRITICAL_PRESSURE_PA, CRITICAL_TEMPERATURE_K, StateError, TRIPLE_TEMPERATURE_K,
-    density_kg_m3, pressure_pa, saturated_densities_kg_m3, saturation_pressure_pa,
+    CRITICAL_DENSITY_KG_M3, CRITICAL_PRESSURE_PA, CRITICAL_TEMPERATURE_K, density_kg_m3,
+    saturation_pressure_pa,
 };
 use thimbleworth::ledger::StepIx;
 
@@ -94,14 +95,6 @@ fn state(account: &RouteAccount, step: StepIx, of: Use) -> Option<[f64; 3]> {
     Some([t?, p?, rho?]).filter(|state| state.iter().all(|v| v.is_finite()))
 }
 
-/// What the map shows; °C and bar.
-#[derive(Clone, Copy, Debug, PartialEq)]
-struct Frame {
-    low_c: f64,
-    high_c: f64,
-    high_bar: f64,
-}
-
 fn celsius(point: &Point) -> f64 {
     point.temperature_k - 273.15
 }
@@ -129,11 +122,6 @@ impl Frame {
         (self.low_c..=self.high_c).contains(&celsius(point)) && bar(point) <= self.high_bar
     }
 }
-
-/// The lines of equal density; kg/m³.
-const LEVELS_KG_M3: [f64; 11] =
-    [100.0, 200.0, 300.0, 400.0, 500.0, 600.0, 700.0, 800.0, 900.0, 1000.0, 1100.0];
-
 const STEPS: [&str; 12] = [
     "step step-0",
     "step step-1",
@@ -248,86 +236,6 @@ fn density_table(frame: Frame) -> Table {
         .collect();
     Table { caption: "Density of CO₂ (kg/m³) by temperature and pressure".into(), head, rows }
 }
-
-/// The pressure of a density at each temperature of the rows, bar; and whether it lies on the saturation line there.
-fn level(rows_c: &[f64], density: f64) -> Vec<(f64, bool)> {
-    rows_c
-        .iter()
-        .map(|c| match pressure_pa(c + 273.15, density) {
-            Ok(pa) => (pa / 1e5, false),
-            Err(StateError::TwoPhase { saturation_pressure_pa, .. }) => (saturation_pressure_pa / 1e5, true),
-            // Beyond the equation of state: beyond the frame as well.
-            Err(_) => (f64::MAX, false),
-        })
-        .collect()
-}
-
-/// The temperatures at which lines are computed: evenly spaced, and those at which a line leaves the saturation line; °C.
-fn rows(frame: Frame) -> Vec<f64> {
-    let count = 60;
-    let even =
-        (0..=count).map(|i| frame.low_c + (frame.high_c - frame.low_c) * f64::from(i) / f64::from(count));
-    let leave = LEVELS_KG_M3.iter().map(|density| saturated_at_k(*density) - 273.15);
-    let mut rows: Vec<f64> =
-        even.chain(leave.filter(|c| *c > frame.low_c)).chain([CRITICAL_TEMPERATURE_K - 273.15]).collect();
-    rows.sort_by(f64::total_cmp);
-    rows
-}
-
-/// The temperature at which the saturated liquid or vapour has this density: halving, since both change steadily.
-fn saturated_at_k(density: f64) -> f64 {
-    let (mut low_k, mut high_k) = (TRIPLE_TEMPERATURE_K, CRITICAL_TEMPERATURE_K);
-    for _ in 0..40 {
-        let middle_k = (low_k + high_k) / 2.0;
-        let apart = saturated_densities_kg_m3(middle_k)
-            .is_ok_and(|(liquid, vapour)| vapour < density && density < liquid);
-        if apart {
-            low_k = middle_k;
-        } else {
-            high_k = middle_k;
-        }
-    }
-    low_k
-}
-
-/// The part of a line outside the two-phase region and inside the frame, with the point at which it leaves the frame;
-/// bar and °C.
-fn inside(rows_c: &[f64], level: &[(f64, bool)], frame: Frame) -> Vec<(f64, f64)> {
-    let all: Vec<(f64, f64, bool)> =
-        rows_c.iter().zip(level).map(|(c, (bar, two))| (*bar, *c, *two)).collect();
-    let mut out = Vec::new();
-    for (i, (bar, c, two_phase)) in all.iter().enumerate() {
-        // The last row with two phases is where the line leaves the saturation line.
-        if *two_phase && all.get(i + 1).is_none_or(|next| next.2) {
-            continue;
-        }
-        if *bar <= frame.high_bar {
-            out.push((*bar, *c));
-        } else {
-            if let (Some((b, d)), true) = (out.last(), *bar < 1e6) {
-                let share = (frame.high_bar - b) / (bar - b);
-                out.push((frame.high_bar, d + share * (c - d)));
-            }
-            break;
-        }
-    }
-    out
-}
-
-/// The lines of a map, the same for both drawings.
-struct Lines {
-    rows_c: Vec<f64>,
-    levels: Vec<Vec<(f64, bool)>>,
-}
-
-impl Lines {
-    fn of(frame: Frame) -> Self {
-        let rows_c = rows(frame);
-        let levels = LEVELS_KG_M3.iter().map(|l| level(&rows_c, *l)).collect();
-        Self { rows_c, levels }
-    }
-}
-
 struct Axes {
     x: Linear,
     y: Linear,
@@ -389,9 +297,9 @@ fn draw(points: &[Point], frame: Frame, map: &Lines, size: Size) -> Drawing {
         class: "open",
         hatch: Hatch::No,
     });
-    shapes.extend(beside(critical, "critical point", "soft", type_size, &mut taken));
+    shapes.extend(beside(critical, "critical point", "", type_size, &mut taken));
     let middle = saturation.get(saturation.len() / 3).copied();
-    shapes.extend(middle.and_then(|at| beside(at, "saturation line", "soft", type_size, &mut taken)));
+    shapes.extend(middle.and_then(|at| beside(at, "saturation line", "", type_size, &mut taken)));
     for (name, b, c) in [("liquid", 0.6, 10.0), ("gas", 0.06, 70.0), ("supercritical", 0.45, 85.0)] {
         let (x, y) = axes.at(b * frame.high_bar, c);
         shapes.extend(beside((x - 7.0, y), name, "region", type_size, &mut taken));
@@ -543,25 +451,6 @@ mod tests {
         Point { of, temperature_k, pressure_pa, density_kg_m3, by: vec!["A, step 1".into()] }
     }
 
-    /// Lines come from p(T, ρ), the table from ρ(T, p): two ways through the equation of state.
-    #[test]
-    fn lines_of_equal_density_are_where_the_density_is() {
-        let frame = Frame::around(&[]);
-        let rows_c = rows(frame);
-        for wanted in LEVELS_KG_M3 {
-            let line = inside(&rows_c, &level(&rows_c, wanted), frame);
-            for (b, c) in &line {
-                let found = match density_kg_m3(c + 273.15, b * 1e5) {
-                    Err(StateError::TwoPhase { liquid_kg_m3, vapour_kg_m3, .. }) => {
-                        if wanted > CRITICAL_DENSITY_KG_M3 { liquid_kg_m3 } else { vapour_kg_m3 }
-                    }
-                    other => other.unwrap(),
-                };
-                assert!((found / wanted - 1.0).abs() < 1e-4, "{wanted} at {c} °C, {b} bar: {found}");
-            }
-        }
-    }
-
     #[test]
     fn the_frame_grows_as_far_as_it_helps() {
         let small = Frame { low_c: -20.0, high_c: 100.0, high_bar: 400.0 };
@@ -578,13 +467,6 @@ mod tests {
             picture.notes[1]
         );
         assert!(!picture.wide.shapes.iter().any(|s| matches!(s, Shape::Path { class: "mark", .. })));
-    }
-
-    #[test]
-    fn no_frame_holds_a_solid() {
-        for c in [-30.0, -20.0] {
-            assert!(thimbleworth::co2::melting_pressure_pa(c + 273.15).unwrap() > 1000e5);
-        }
     }
 
     #[test]

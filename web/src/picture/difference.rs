@@ -97,7 +97,7 @@ pub(super) fn picture(key: &str, present: &str, other: &str, rows: &[Row]) -> Op
     ];
     if rows.iter().any(|r| r.change == Change::New) {
         notes.push(
-            "\"New\" is what the present route does not have: no change in per cent can be given.".to_owned(),
+            "“New” is what the present route does not have: no change in per cent can be given.".to_owned(),
         );
     }
     Some(Picture {

@@ -170,9 +170,6 @@ fn shape_node(id: &str, shape: &Shape) -> Vec<Node> {
                     .say(text.clone()),
             ]
         }
-        Shape::Group { class, shapes } => {
-            vec![Node::new("g").set("class", *class).put_all(shapes.iter().flat_map(|s| shape_node(id, s)))]
-        }
     }
 }
 
@@ -247,7 +244,6 @@ pub fn plate(picture: &Picture) -> Node {
 }
 
 /// The picture for the page.
-#[must_use]
 pub fn to_html(picture: &Picture) -> Html {
     plate(picture).html()
 }
@@ -280,6 +276,15 @@ mod tests {
     fn markup_and_control_characters_stay_text() {
         let node = Node::new("text").set("x", "\"><script>").say("<b>&\u{1}\u{0}amp;</b>");
         assert_eq!(node.text(), "<text x=\"&quot;&gt;&lt;script&gt;\">&lt;b&gt;&amp;amp;&lt;/b&gt;</text>");
+    }
+
+    #[test]
+    fn the_page_gets_the_same_tree() {
+        let node = Node::new("g").set("class", "a").put(Node::new("text").say("1 < 2"));
+        let VNode::VTag(tag) = node.html() else { panic!("no element") };
+        assert_eq!((tag.tag(), tag.attributes.iter().next()), ("g", Some(("class", "a"))));
+        let VNode::VList(children) = tag.children().unwrap() else { panic!("no children") };
+        assert_eq!(children.len(), 1);
     }
 
     #[test]

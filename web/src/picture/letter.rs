@@ -62,7 +62,7 @@ pub(super) fn fit(text: &str, width: f64, size: f64) -> String {
         }
         kept.push(c);
     }
-    let kept = kept.trim_end();
+    let kept = kept.trim_end_matches([' ', ',', ';', '(']);
     // Not even one letter: the ellipsis alone, where that fits.
     if text_width("…", size) > width { String::new() } else { format!("{kept}…") }
 }

@@ -64,11 +64,11 @@ pub(super) fn picture(key: &str, masses: &Masses) -> Option<Picture> {
     let unit = mass_unit(largest.2);
     let totals: Vec<f64> = masses.routes.iter().map(|(_, at)| total(at)).collect();
     let title = format!(
-        "Most of all goes from {} to {}: {} {}",
-        largest.0,
-        largest.1,
+        "The largest mass is {} {}, from {} to {}",
         mass_with_unit(largest.2, unit),
-        masses.per
+        masses.per,
+        largest.0,
+        largest.1
     );
     let each: Vec<String> = masses
         .routes
@@ -186,10 +186,7 @@ fn draw(masses: &Masses, totals: &[f64], unit: (&'static str, f64), size: Size) 
 /// A bar from zero, a hairline where it would be thinner than that, nothing for nothing.
 fn bar_shape(bars: &Linear, kg: f64, (y, height): (f64, f64), end: End) -> Option<Shape> {
     let (x, width) = (bars.at(0.0), bars.length(kg));
-    if !(kg > 0.0) {
-        return None;
-    }
-    Some(if width < 1.0 {
+    (kg > 0.0).then_some(if width < 1.0 {
         line((x + 0.5, y), (x + 0.5, y + height), "hair")
     } else {
         Shape::Rect { x, y, width, height, class: end.class(), hatch: end.hatch() }

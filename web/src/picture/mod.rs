@@ -8,6 +8,7 @@
 //! All bars and bands are to scale from zero. What would be thinner than a pixel is a hairline, with its amount beside it.
 
 mod books;
+mod co2_lines;
 mod co2_map;
 mod difference;
 mod draw;

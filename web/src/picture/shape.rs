@@ -73,13 +73,6 @@ pub enum Shape {
         /// The text.
         text: String,
     },
-    /// Shapes that belong together.
-    Group {
-        /// Class.
-        class: &'static str,
-        /// The shapes.
-        shapes: Vec<Shape>,
-    },
 }
 
 /// A text.

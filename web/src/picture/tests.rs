@@ -52,14 +52,8 @@ fn plans() -> Vec<String> {
     vec![PLAN.to_owned(), named, huge, many.to_string()]
 }
 
-fn texts<'a>(shapes: &'a [Shape], out: &mut Vec<&'a Shape>) {
-    for shape in shapes {
-        match shape {
-            Shape::Group { shapes, .. } => texts(shapes, out),
-            Shape::Text { .. } => out.push(shape),
-            _ => {}
-        }
-    }
+fn texts(drawing: &Drawing) -> Vec<&Shape> {
+    drawing.shapes.iter().filter(|s| matches!(s, Shape::Text { .. })).collect()
 }
 
 /// Every file is compared to the byte; `UPDATE=1` writes them anew.
@@ -96,8 +90,7 @@ fn the_plan_gives_every_picture() {
 fn every_text_stands_inside_its_drawing_and_on_no_other() {
     for picture in plans().iter().flat_map(|p| of(p)) {
         for drawing in [&picture.wide, &picture.narrow] {
-            let mut found = Vec::new();
-            texts(&drawing.shapes, &mut found);
+            let found = texts(drawing);
             assert!(!found.is_empty());
             let mut boxes: Vec<(f64, f64, f64, f64, &str)> = Vec::new();
             for shape in found {
@@ -133,8 +126,7 @@ fn every_number_of_a_drawing_stands_in_a_table() {
             .flat_map(|t| t.rows.iter().flatten().chain(t.head.iter().map(|h| &h.text)).chain([&t.caption]))
             .fold(String::new(), |all, cell| all + "\n" + cell);
         for drawing in [&picture.wide, &picture.narrow] {
-            let mut found = Vec::new();
-            texts(&drawing.shapes, &mut found);
+            let found = texts(drawing);
             for shape in found {
                 let Shape::Text { text, class, .. } = shape else { continue };
                 // Ticks and lines of equal density are the ruler, not what is measured; names may be cut.
