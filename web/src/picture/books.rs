@@ -110,6 +110,14 @@ pub(super) fn fills(ends: &[End]) -> String {
     letters.next().map_or_else(String::new, |first| format!("{}{}.", first.to_uppercase(), letters.as_str()))
 }
 
+/// The first few of a list in words; a sentence with more of them would not be read.
+pub(super) fn few(items: &[String]) -> String {
+    match items {
+        [a, b, c, d, _, rest @ ..] => format!("{a}; {b}; {c}; {d}; and {} more in the table", rest.len() + 1),
+        _ => items.join("; "),
+    }
+}
+
 /// The name of a place, streams by the site's names.
 pub(super) fn place_name(site: &SiteUse, place: Place) -> String {
     place
@@ -180,6 +188,13 @@ mod tests {
         ] {
             assert_eq!(mass_with_unit(kg, mass_unit(kg)), text);
         }
+    }
+
+    #[test]
+    fn long_lists_are_cut() {
+        let items: Vec<String> = (1..=6).map(|i| i.to_string()).collect();
+        assert_eq!(few(&items[..4]), "1; 2; 3; 4");
+        assert_eq!(few(&items), "1; 2; 3; 4; and 2 more in the table");
     }
 
     #[test]

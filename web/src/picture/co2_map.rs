@@ -4,6 +4,7 @@
 //! state gives it without a search, and the steps of the map are what lies between two such lines. Where liquid and vapour
 //! exist side by side, the lines run together on the saturation line.
 
+use super::books::few;
 use super::co2_lines::{Frame, LEVELS_KG_M3, Lines, inside};
 use super::label::{Area, Taken};
 use super::letter::{class_width, text_width, written};
@@ -146,7 +147,7 @@ pub(super) fn picture(key: &str, points: &[Point]) -> Option<Picture> {
         .iter()
         .map(|p| format!("{} at {} with {}\u{a0}kg/m³", p.of.words(), place(p), density(p.density_kg_m3)))
         .collect();
-    let description = format!("States at which CO₂ is used: {}.", each.join("; "));
+    let description = format!("States at which CO₂ is used: {}.", few(&each));
     let outside: Vec<String> = points
         .iter()
         .enumerate()

@@ -2,7 +2,7 @@
 //! to the store is folded back under the rest.
 
 use super::books::{
-    End, Per, fills, into_places, mass, mass_unit, mass_with_unit, material_name, percent, place_name,
+    End, Per, few, fills, into_places, mass, mass_unit, mass_with_unit, material_name, percent, place_name,
 };
 use super::letter::{text_width, wrap};
 use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
@@ -109,7 +109,7 @@ pub(super) fn picture(key: &str, flow: &Flow) -> Option<Picture> {
         "What comes in, {} {}, goes to these places: {}.",
         mass_with_unit(total, unit),
         flow.per,
-        ends.join(", ")
+        few(&ends)
     );
     let heading = format!("{} {}", unit.0, flow.per);
     let mut rows: Vec<Vec<String>> = flow

@@ -1,6 +1,6 @@
 //! Where the mass of each route ends: one ruled line a place, a bar from zero, the amount in the column right of a double rule.
 
-use super::books::{End, Per, fills, into_places, mass, mass_unit, mass_with_unit, place_name};
+use super::books::{End, Per, few, fills, into_places, mass, mass_unit, mass_with_unit, place_name};
 use super::letter::{BOLD, fit, text_width};
 use super::scale::Linear;
 use super::shape::{Anchor, Shape, line, text};
@@ -76,7 +76,7 @@ pub(super) fn picture(key: &str, masses: &Masses) -> Option<Picture> {
         .zip(&totals)
         .map(|((name, _), kg)| format!("{} from {name}", mass_with_unit(*kg, unit)))
         .collect();
-    let description = format!("Everything that ends anywhere, {}: {}.", masses.per, each.join(", "));
+    let description = format!("Everything that ends anywhere, {}: {}.", masses.per, few(&each));
     let heading = format!("{} {}", unit.0, masses.per);
     let mut rows = Vec::new();
     for ((route, at), total) in masses.routes.iter().zip(&totals) {
