@@ -5,6 +5,7 @@
 mod app;
 mod contents;
 pub mod history;
+pub mod picture;
 mod sections;
 pub mod state;
 mod toolbar;
