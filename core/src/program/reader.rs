@@ -562,7 +562,8 @@ impl<'r, 'p> Reader<'r, 'p> {
             measured[index] = match (read(text, Kind::Mass), read(text, Kind::Fraction)) {
                 (Ok(amount), _) => Some(Measured::Mass(self.route.input(path, &amount, Origin::Measured))),
                 (_, Ok(amount)) => Some(Measured::Share(self.route.input(path, &amount, Origin::Measured))),
-                (Err(e), Err(_)) => {
+                (Err(as_mass), Err(as_share)) => {
+                    let e = if text.contains('%') { as_share } else { as_mass };
                     let need = "a mass in one run, such as \"6 ± 2 g\", or a share of what was there, such as \"3 %\"";
                     self.route.problems.push(Problem::error(
                         path,
