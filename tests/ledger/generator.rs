@@ -299,7 +299,8 @@ impl Writer {
 /// A plan around routes.
 pub(crate) fn plan(routes: &[Value], seed: u64, style: Style) -> Value {
     let mut chance = Chance::new(seed ^ 0xB00C);
-    let repeats = if style.uncertain { "3 % ± 1 %".to_owned() } else { format!("{} %", chance.from_to(0, 9)) };
+    let repeats =
+        if style.uncertain { "3 % ± 1 %".to_owned() } else { format!("{} %", chance.from_to(0, 9)) };
     json!({
         "thimbleworth": 1,
         "title": "A plan made by a number",

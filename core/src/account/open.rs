@@ -204,11 +204,26 @@ pub fn rule_of(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<&'sta
     }
 }
 
+/// The path of the measured figure that stands in place of a rule, where one does.
+fn measured_path(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<String> {
+    let StepIx::Step(i) = step else { return None };
+    let step = route.steps.get(i as usize)?;
+    step.measured.get(rule.0 as usize).copied().flatten()?;
+    let name = step.technique.rules.get(rule.0 as usize)?.name;
+    Some(below(&below(&step.path, "measured"), name))
+}
+
 fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
     let path = match failure.step {
         StepIx::Opening => below(&route.path, "steps"),
         StepIx::Closing => below(&route.path, "ends"),
         StepIx::Step(i) => route.steps.get(i as usize).map_or_else(|| route.path.clone(), |s| s.path.clone()),
+    };
+    let path = match failure.halt {
+        Halt::Short { rule, .. }
+        | Halt::MeasuredTooMuch { rule, .. }
+        | Halt::NothingToMeasure { rule, .. } => measured_path(route, failure.step, rule).unwrap_or(path),
+        _ => path,
     };
     let rule = |r| rule_of(route, failure.step, r).map_or("a rule", |r| r.name);
     let name = |m: Material| route.materials.get(m.0 as usize).map_or("", |m| m.name.as_str());
@@ -224,6 +239,16 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
                 show(there_kg, Kind::Mass)
             ),
             "a smaller amount, or an earlier step that brings more".to_owned(),
+        ),
+        Halt::MeasuredTooMuch { rule: r, place, measured_kg, there_kg } => (
+            format!(
+                "{} is measured for \"{}\", but of what it moves only {} is there, in the {}",
+                show(measured_kg, Kind::Mass),
+                rule(r),
+                show(there_kg, Kind::Mass),
+                at(place)
+            ),
+            "a mass in one run of the step, no more than is there".to_owned(),
         ),
         Halt::NothingToMeasure { rule: r, place } => (
             format!(

@@ -238,7 +238,8 @@ impl<'a> Bench<'a> {
     /// share applies to each listed material. Returns the mass moved; kg.
     ///
     /// # Errors
-    /// As [`Bench::take`]; [`Halt::NothingToMeasure`] where a measured mass finds nothing.
+    /// As [`Bench::take`]; [`Halt::NothingToMeasure`] where a measured mass finds nothing, [`Halt::MeasuredTooMuch`]
+    /// where it is more than there is.
     pub fn split(
         &mut self,
         from: Place,
@@ -261,6 +262,7 @@ impl<'a> Bench<'a> {
             Some(Measured::Share(slot)) => {
                 let share = self.draw.get(slot);
                 self.note_computed(rule, computed_kg);
+                measurable(rule, from, share * there_kg, there_kg)?;
                 for &(m, _) in parts {
                     sum += self.take_as(from, to, m, self.there(from, m) * share, rule, true)?;
                 }
@@ -271,6 +273,7 @@ impl<'a> Bench<'a> {
                 if total_kg > 0.0 && there_kg <= 0.0 {
                     return Err(Halt::NothingToMeasure { rule, place: from });
                 }
+                measurable(rule, from, total_kg, there_kg)?;
                 for &(m, kg) in parts {
                     let kg = if computed_kg > 0.0 {
                         total_kg * (kg / computed_kg)
@@ -321,10 +324,15 @@ impl<'a> Bench<'a> {
             Some(which) => {
                 self.note_computed(rule, there_kg * share);
                 match which {
-                    Measured::Share(slot) => (self.draw.get(slot), true),
+                    Measured::Share(slot) => {
+                        let share = self.draw.get(slot);
+                        measurable(rule, from, share * there_kg, there_kg)?;
+                        (share, true)
+                    }
                     Measured::Mass(slot) => {
                         let total_kg = self.draw.get(slot);
                         if there_kg > 0.0 {
+                            measurable(rule, from, total_kg, there_kg)?;
                             (total_kg / there_kg, true)
                         } else if total_kg > 0.0 {
                             return Err(Halt::NothingToMeasure { rule, place: from });
@@ -378,6 +386,14 @@ impl<'a> Bench<'a> {
             trace.notes.push(Note { step: self.step, rule, symbol, value_si, kind });
         }
     }
+}
+
+/// A measured mass that is no more than there is; a rounding in the last places is not more.
+fn measurable(rule: RuleIx, place: Place, measured_kg: f64, there_kg: f64) -> Result<(), Halt> {
+    if measured_kg > there_kg * (1.0 + 1e-12) {
+        return Err(Halt::MeasuredTooMuch { rule, place, measured_kg, there_kg });
+    }
+    Ok(())
 }
 
 /// A route never holds more materials than fit; the resolver sees to it.
