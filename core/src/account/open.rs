@@ -151,7 +151,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     energy::draw_up(&mut draft, &desk);
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
-    let figures = draft.figures;
+    let figures = draft.kept_to(&trace);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
     let mut product_kg = 0.0;

@@ -114,7 +114,8 @@ impl<'a> Bench<'a> {
     pub fn liquid_volume_m3(&self, place: Place) -> f64 {
         let mut sum = 0.0;
         for (kg, nature) in self.cells.lying(place).iter().zip(self.natures) {
-            if let (true, Some(density)) = (nature.volatile, nature.density) {
+            // Most cells are empty, and a division costs more than a look.
+            if let (true, Some(density)) = (nature.volatile && *kg > 0.0, nature.density) {
                 // V = Σ mᵢ / ρᵢ
                 sum += kg / self.draw.get(density);
             }
@@ -134,8 +135,12 @@ impl<'a> Bench<'a> {
         self.natures.get(m.0 as usize).is_some_and(|n| n.volatile)
     }
 
+    #[inline]
     fn post(&mut self, from: Place, to: Place, m: Material, kg: f64, rule: RuleIx, measured: bool) {
-        self.cells.move_mass(from, to, m, kg, self.runs_a_year);
+        // Moving nothing changes no cell; only the trace wants to know.
+        if kg != 0.0 {
+            self.cells.move_mass(from, to, m, kg, self.runs_a_year);
+        }
         if let Some(trace) = self.trace.as_deref_mut() {
             let (step, runs_a_year) = (self.step, self.runs_a_year);
             trace.postings.push(Posting { step, rule, from, to, material: m, kg, runs_a_year, measured });
@@ -225,6 +230,9 @@ impl<'a> Bench<'a> {
 
     /// Moves everything of every material; exactly 0 is left. Returns the mass moved; kg.
     pub fn sweep(&mut self, from: Place, to: Place, rule: RuleIx) -> f64 {
+        if self.trace.is_none() {
+            return self.cells.move_all(from, to, self.runs_a_year);
+        }
         let mut sum = 0.0;
         for i in 0..self.natures.len() {
             sum += self.all(from, to, Material(index(i)), rule);
@@ -347,7 +355,10 @@ impl<'a> Bench<'a> {
         for i in 0..self.natures.len() {
             if self.natures[i].volatile || !only_volatile {
                 let m = Material(index(i));
-                sum += self.take_as(from, to, m, self.there(from, m) * share, rule, measured)?;
+                let there_kg = self.there(from, m);
+                if there_kg > 0.0 || self.trace.is_some() {
+                    sum += self.take_as(from, to, m, there_kg * share, rule, measured)?;
+                }
             }
         }
         Ok(sum)
