@@ -337,7 +337,7 @@ mod tests {
     #[test]
     fn names_bring_no_markup() {
         let evil = "<img src=x onerror=alert(1)> | `x` **b** [l](javascript:1)";
-        let text = EXAMPLES[0].text.replace("\"CO2\"", &format!("\"{evil}\""));
+        let text = EXAMPLES[0].text.replace("\"Ultrasonic\"", &format!("\"{evil}\""));
         let report = markdown(&account_text(&text));
         assert!(report.contains("&lt;img src=x onerror=alert(1)&gt; \\| \\`x\\`"));
         assert!(!report.contains("<img") && !report.contains("[l]("));

@@ -9,7 +9,7 @@ use crate::program::{RouteProgram, WorkloadProgram};
 use crate::quantity::significant;
 
 /// So many routes stand beside the present one before the table starts anew.
-const ROUTES_ABREAST: usize = 3;
+const ROUTES_ABREAST: usize = 2;
 
 /// The account of every route as text: figures by account, hazards, what was assumed, cautions.
 ///
@@ -263,7 +263,7 @@ fn side_by_side(
     others: &[&RouteComparison],
 ) {
     let name = |i: usize| work.routes.get(i).map_or(String::new(), |r| short(&r.name));
-    let mut grid = Grid::new(38, 11);
+    let mut grid = Grid::new(38, 8);
     let mut head = vec!["A year".to_owned(), name(present_index)];
     let mut under = vec![String::new(), "present".to_owned()];
     for other in others {
