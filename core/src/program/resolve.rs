@@ -321,8 +321,8 @@ impl<'p> RouteBuilder<'p> {
     }
 
     pub(super) fn assume(&mut self, path: String, label: &str, value: &str, source: Source) {
-        // A technique may look at a parameter twice.
-        if self.assumptions.iter().any(|a| a.path == path) {
+        // A technique may look at a parameter twice; those of other steps lie further back than it has parameters.
+        if self.assumptions.iter().rev().take(64).any(|a| a.path == path) {
             return;
         }
         self.assumptions.push(Assumption { path, label: label.to_owned(), value: value.to_owned(), source });
