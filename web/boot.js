@@ -1,4 +1,4 @@
-// The last part of the page's one script; before it stand PAYLOAD (the program, gzip in base64) and `wasm_bindgen`.
+// The last part of the page's one script; before it stand PAYLOAD (the program, gzip in 85 signs) and `wasm_bindgen`.
 // With a document it starts the page; without one (a test that computes) it only makes `account` ready.
 // The functions below are called by the program, through src/browser.rs.
 
@@ -150,13 +150,24 @@ function focusOn(id) {
   if (!place) return;
   const field = place.matches("input, select, textarea") ? place : place.querySelector("input, select, textarea");
   const target = field || (place.hasAttribute("tabindex") ? place : place.querySelector("button") || place);
+  for (let fold = target.closest("details:not([open])"); fold; fold = fold.parentElement.closest("details:not([open])")) {
+    fold.open = true;
+  }
   target.focus();
 }
 
-function decode(base64) {
-  const text = atob(base64);
-  const bytes = new Uint8Array(text.length);
-  for (let i = 0; i < text.length; i += 1) bytes[i] = text.charCodeAt(i);
+// Five of 85 signs for every four bytes; see web/pack/src/shell.rs.
+function decode(packed) {
+  const start = packed.indexOf(":") + 1;
+  const bytes = new Uint8Array(Number.parseInt(packed, 10));
+  for (let i = start, at = 0; i < packed.length; i += 5, at += 4) {
+    let word = 0;
+    for (let j = 0; j < 5; j += 1) {
+      const code = packed.charCodeAt(i + j);
+      word = word * 85 + (code === 120 ? 60 : code === 121 ? 92 : code) - 35;
+    }
+    for (let j = 0; j < 4 && at + j < bytes.length; j += 1) bytes[at + j] = word >>> (24 - 8 * j);
+  }
   return bytes;
 }
 

@@ -23,7 +23,9 @@ for (const [name, options] of Object.entries(looks)) {
   test(`6: axe finds nothing: ${name}`, async () => {
     const { page, seen, close } = await open(browser, packed, options);
     await picture(page, name);
-    assert.deepEqual(await axeFindings(page), []);
+    // Nothing on paper is pressed with a finger.
+    const rules = name === "print" ? { "target-size": { enabled: false } } : {};
+    assert.deepEqual(await axeFindings(page, rules), []);
     if (name !== "print") {
       await page.getByLabel("Title").fill("Which route for hop oil?");
       await page.getByLabel(/^Solvent in the flask/).fill("300 m");

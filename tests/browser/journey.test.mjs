@@ -159,7 +159,7 @@ test("every state of the page is clean by axe: blank, filled, error, dialog, res
   await page.getByText("A blank plan is open.").waitFor();
   assert.deepEqual(await axeFindings(page), [], "blank");
   await page.getByRole("button", { name: "Print the report" }).click();
-  await page.locator("#mend").getByRole("heading", { name: "To mend" }).waitFor();
+  await page.locator("#mend").getByRole("heading", { name: "To mend", exact: true }).waitFor();
   assert.deepEqual(await axeFindings(page), [], "errors");
   await picture(page, "errors", false);
   await give(page, "plan.json", smallPlan());

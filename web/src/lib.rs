@@ -11,12 +11,14 @@ pub mod files;
 pub mod form;
 pub mod history;
 mod parts;
+pub mod picture;
 pub mod reckon;
 mod sections;
 pub mod show;
 pub mod state;
 
-use serde_json::json;
+use thimbleworth::account::{Account, account_text};
+use thimbleworth::report::{markdown, result_csv, result_json};
 use wasm_bindgen::prelude::wasm_bindgen;
 
 /// Name and version, as the page and its documents show them.
@@ -38,21 +40,20 @@ pub fn start_page() {
     }
 }
 
-/// The account of a plan as a document. Not connected yet: it says so, and whether the plan is JSON at all.
+/// The account of a plan as a document, the same bytes as the command writes: `json`, `csv` or `markdown` as
+/// `thimbleworth account PLAN --format …`, and `compare` as `thimbleworth compare PLAN --format json`.
+///
+/// A plan with errors gives a JSON document without workloads, with the problems in it. An unknown format is answered with
+/// a sentence.
 #[wasm_bindgen]
 #[must_use]
 pub fn account(plan_json: &str, format: &str) -> String {
-    let found = match serde_json::from_str::<serde_json::Value>(plan_json) {
-        Ok(_) => "JSON".to_owned(),
-        Err(error) => format!("not JSON: {error}"),
+    let write: fn(&Account) -> String = match format {
+        "json" => |account| result_json(account, false),
+        "compare" => |account| result_json(account, true),
+        "csv" => result_csv,
+        "markdown" => markdown,
+        _ => return format!("no format \"{format}\"; there are: json, compare, csv, markdown"),
     };
-    json!({
-        "program": PROGRAM,
-        "plan_version": thimbleworth::plan::PLAN_VERSION,
-        "plan": found,
-        "format": format,
-        "account": null,
-        "why": "the account is not connected to the page yet",
-    })
-    .to_string()
+    write(&account_text(plan_json))
 }

@@ -1,7 +1,7 @@
 //! Figures as data, and their evaluation over one run.
 
 use crate::chance::{Draw, In};
-use crate::ledger::{Direction, Material, Place, Utility};
+use crate::ledger::{Direction, Material, Place, Trace, Utility};
 use crate::program::Desk;
 use crate::source::Source;
 
@@ -182,6 +182,24 @@ impl Draft {
     pub fn add(&mut self, figure: Figure) -> usize {
         self.figures.push(figure);
         self.figures.len() - 1
+    }
+
+    /// The figures without the cells that no posting touches. The sequence of postings is the same in every draw, so that
+    /// those cells are empty in every draw too.
+    pub(super) fn kept_to(mut self, trace: &Trace) -> Vec<Figure> {
+        let mut touched: Vec<(Place, Direction, Material)> = Vec::new();
+        for p in &trace.postings {
+            touched.push((p.from, Direction::OutOf, p.material));
+            touched.push((p.to, Direction::Into, p.material));
+        }
+        touched.sort_unstable();
+        touched.dedup();
+        for figure in &mut self.figures {
+            if let How::Sum(terms) = &mut figure.how {
+                terms.retain(|t| touched.binary_search(&(t.place, t.direction, t.material)).is_ok());
+            }
+        }
+        self.figures
     }
 }
 

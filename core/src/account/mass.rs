@@ -12,7 +12,7 @@ pub(super) fn slug(name: &str) -> String {
 }
 
 /// The name of a place, streams by the site's names.
-pub(super) fn place_name(site: &SiteUse, place: Place) -> String {
+pub fn place_name(site: &SiteUse, place: Place) -> String {
     place
         .stream_index()
         .and_then(|i| site.streams.get(i))

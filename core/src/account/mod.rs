@@ -15,6 +15,7 @@ mod working;
 
 pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
 pub use hazard::{HazardAccount, MaterialHazard};
+pub use mass::place_name;
 pub use metric::Refusal;
 pub use open::{Account, RouteAccount, WorkloadAccount, account, account_text, rule_of};
 pub use working::{Contribution, behind, describe};

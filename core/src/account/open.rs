@@ -152,7 +152,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     energy::draw_up(&mut draft, &desk);
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
-    let figures = draft.figures;
+    let figures = draft.kept_to(&trace);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
     let mut product_kg = 0.0;
@@ -225,11 +225,26 @@ pub fn rule_of(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<&'sta
     }
 }
 
+/// The path of the measured figure that stands in place of a rule, where one does.
+fn measured_path(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<String> {
+    let StepIx::Step(i) = step else { return None };
+    let step = route.steps.get(i as usize)?;
+    step.measured.get(rule.0 as usize).copied().flatten()?;
+    let name = step.technique.rules.get(rule.0 as usize)?.name;
+    Some(below(&below(&step.path, "measured"), name))
+}
+
 fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
     let path = match failure.step {
         StepIx::Opening => below(&route.path, "steps"),
         StepIx::Closing => below(&route.path, "ends"),
         StepIx::Step(i) => route.steps.get(i as usize).map_or_else(|| route.path.clone(), |s| s.path.clone()),
+    };
+    let path = match failure.halt {
+        Halt::Short { rule, .. }
+        | Halt::MeasuredTooMuch { rule, .. }
+        | Halt::NothingToMeasure { rule, .. } => measured_path(route, failure.step, rule).unwrap_or(path),
+        _ => path,
     };
     let rule = |r| rule_of(route, failure.step, r).map_or("a rule", |r| r.name);
     let name = |m: Material| route.materials.get(m.0 as usize).map_or("", |m| m.name.as_str());
@@ -245,6 +260,16 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
                 show(there_kg, Kind::Mass)
             ),
             "a smaller amount, or an earlier step that brings more".to_owned(),
+        ),
+        Halt::MeasuredTooMuch { rule: r, place, measured_kg, there_kg } => (
+            format!(
+                "{} is measured for \"{}\", but of what it moves only {} is there, in the {}",
+                show(measured_kg, Kind::Mass),
+                rule(r),
+                show(there_kg, Kind::Mass),
+                at(place)
+            ),
+            "a mass in one run of the step, no more than is there".to_owned(),
         ),
         Halt::NothingToMeasure { rule: r, place } => (
             format!(

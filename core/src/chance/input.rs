@@ -10,9 +10,10 @@ pub struct In(pub u32);
 /// One number that a route rests on.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Input {
-    /// The identity, `materials/n-hexane/density` or the path in the plan.
+    /// The identity, `material/n-hexane/density` or the path in the plan.
     pub identity: String,
-    /// The key of the identity; equal identities draw equal numbers.
+    /// The key of the identity, with the names of workload and route in place of their numbers, so that no input draws
+    /// other numbers because a route was added before it or moved. Equal keys draw equal numbers.
     pub key: u64,
     /// What it measures.
     pub kind: Kind,
@@ -75,8 +76,14 @@ impl Draw<'_> {
 /// ```
 #[must_use]
 pub fn identity_key(identity: &str) -> u64 {
-    let mut hash = 0xcbf2_9ce4_8422_2325_u64;
-    for byte in identity.bytes() {
+    continued_key(0xcbf2_9ce4_8422_2325, identity)
+}
+
+/// The key of an identity whose beginning already has a key: `continued_key(identity_key(a), b)` is that of `ab`.
+#[must_use]
+pub fn continued_key(beginning: u64, rest: &str) -> u64 {
+    let mut hash = beginning;
+    for byte in rest.bytes() {
         hash = (hash ^ u64::from(byte)).wrapping_mul(0x0100_0000_01b3);
     }
     hash

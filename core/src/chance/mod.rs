@@ -5,4 +5,4 @@ mod draw;
 mod input;
 
 pub use draw::{keyed_bits, normal_quantile, unit_interval};
-pub use input::{Draw, In, Input, identity_key};
+pub use input::{Draw, In, Input, continued_key, identity_key};

@@ -114,7 +114,8 @@ impl<'a> Bench<'a> {
     pub fn liquid_volume_m3(&self, place: Place) -> f64 {
         let mut sum = 0.0;
         for (kg, nature) in self.cells.lying(place).iter().zip(self.natures) {
-            if let (true, Some(density)) = (nature.volatile, nature.density) {
+            // Most cells are empty, and a division costs more than a look.
+            if let (true, Some(density)) = (nature.volatile && *kg > 0.0, nature.density) {
                 // V = Σ mᵢ / ρᵢ
                 sum += kg / self.draw.get(density);
             }
@@ -134,8 +135,12 @@ impl<'a> Bench<'a> {
         self.natures.get(m.0 as usize).is_some_and(|n| n.volatile)
     }
 
+    #[inline]
     fn post(&mut self, from: Place, to: Place, m: Material, kg: f64, rule: RuleIx, measured: bool) {
-        self.cells.move_mass(from, to, m, kg, self.runs_a_year);
+        // Moving nothing changes no cell; only the trace wants to know.
+        if kg != 0.0 {
+            self.cells.move_mass(from, to, m, kg, self.runs_a_year);
+        }
         if let Some(trace) = self.trace.as_deref_mut() {
             let (step, runs_a_year) = (self.step, self.runs_a_year);
             trace.postings.push(Posting { step, rule, from, to, material: m, kg, runs_a_year, measured });
@@ -225,6 +230,9 @@ impl<'a> Bench<'a> {
 
     /// Moves everything of every material; exactly 0 is left. Returns the mass moved; kg.
     pub fn sweep(&mut self, from: Place, to: Place, rule: RuleIx) -> f64 {
+        if self.trace.is_none() {
+            return self.cells.move_all(from, to, self.runs_a_year);
+        }
         let mut sum = 0.0;
         for i in 0..self.natures.len() {
             sum += self.all(from, to, Material(index(i)), rule);
@@ -238,7 +246,8 @@ impl<'a> Bench<'a> {
     /// share applies to each listed material. Returns the mass moved; kg.
     ///
     /// # Errors
-    /// As [`Bench::take`]; [`Halt::NothingToMeasure`] where a measured mass finds nothing.
+    /// As [`Bench::take`]; [`Halt::NothingToMeasure`] where a measured mass finds nothing, [`Halt::MeasuredTooMuch`]
+    /// where it is more than there is.
     pub fn split(
         &mut self,
         from: Place,
@@ -261,6 +270,7 @@ impl<'a> Bench<'a> {
             Some(Measured::Share(slot)) => {
                 let share = self.draw.get(slot);
                 self.note_computed(rule, computed_kg);
+                measurable(rule, from, share * there_kg, there_kg)?;
                 for &(m, _) in parts {
                     sum += self.take_as(from, to, m, self.there(from, m) * share, rule, true)?;
                 }
@@ -271,6 +281,7 @@ impl<'a> Bench<'a> {
                 if total_kg > 0.0 && there_kg <= 0.0 {
                     return Err(Halt::NothingToMeasure { rule, place: from });
                 }
+                measurable(rule, from, total_kg, there_kg)?;
                 for &(m, kg) in parts {
                     let kg = if computed_kg > 0.0 {
                         total_kg * (kg / computed_kg)
@@ -321,10 +332,15 @@ impl<'a> Bench<'a> {
             Some(which) => {
                 self.note_computed(rule, there_kg * share);
                 match which {
-                    Measured::Share(slot) => (self.draw.get(slot), true),
+                    Measured::Share(slot) => {
+                        let share = self.draw.get(slot);
+                        measurable(rule, from, share * there_kg, there_kg)?;
+                        (share, true)
+                    }
                     Measured::Mass(slot) => {
                         let total_kg = self.draw.get(slot);
                         if there_kg > 0.0 {
+                            measurable(rule, from, total_kg, there_kg)?;
                             (total_kg / there_kg, true)
                         } else if total_kg > 0.0 {
                             return Err(Halt::NothingToMeasure { rule, place: from });
@@ -339,7 +355,10 @@ impl<'a> Bench<'a> {
         for i in 0..self.natures.len() {
             if self.natures[i].volatile || !only_volatile {
                 let m = Material(index(i));
-                sum += self.take_as(from, to, m, self.there(from, m) * share, rule, measured)?;
+                let there_kg = self.there(from, m);
+                if there_kg > 0.0 || self.trace.is_some() {
+                    sum += self.take_as(from, to, m, there_kg * share, rule, measured)?;
+                }
             }
         }
         Ok(sum)
@@ -378,6 +397,14 @@ impl<'a> Bench<'a> {
             trace.notes.push(Note { step: self.step, rule, symbol, value_si, kind });
         }
     }
+}
+
+/// A measured mass that is no more than there is; a rounding in the last places is not more.
+fn measurable(rule: RuleIx, place: Place, measured_kg: f64, there_kg: f64) -> Result<(), Halt> {
+    if measured_kg > there_kg * (1.0 + 1e-12) {
+        return Err(Halt::MeasuredTooMuch { rule, place, measured_kg, there_kg });
+    }
+    Ok(())
 }
 
 /// A route never holds more materials than fit; the resolver sees to it.

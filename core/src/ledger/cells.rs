@@ -89,6 +89,32 @@ impl Cells {
         }
     }
 
+    /// Everything of every material, as [`Cells::move_mass`] would move it; exactly 0 is left. Returns the mass moved; kg.
+    pub(super) fn move_all(&mut self, from: Place, to: Place, runs_a_year: f64) -> f64 {
+        let mut sum = 0.0;
+        let start = self.at(from, Material(0));
+        let end = start + self.materials;
+        if to.on_bench() {
+            if from != to {
+                let there = self.at(to, Material(0));
+                for i in 0..self.materials {
+                    sum += self.bench[start + i];
+                    self.bench[there + i] += self.bench[start + i];
+                }
+                self.bench[start..end].fill(0.0);
+            }
+            return sum;
+        }
+        let there = self.at(to, Material(0));
+        let into = &mut self.into[there..there + self.materials];
+        for (kg, into) in self.bench[start..end].iter_mut().zip(into) {
+            sum += *kg;
+            *into += *kg * runs_a_year;
+            *kg = 0.0;
+        }
+        sum
+    }
+
     pub(super) fn gather(&mut self, factor: f64) {
         for kg in &mut self.bench {
             *kg *= factor;

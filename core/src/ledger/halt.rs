@@ -26,6 +26,17 @@ pub enum Halt {
         /// From where.
         place: Place,
     },
+    /// More was measured than lies in the place.
+    MeasuredTooMuch {
+        /// The rule.
+        rule: RuleIx,
+        /// From where.
+        place: Place,
+        /// How much was measured, or follows from a measured share; kg.
+        measured_kg: f64,
+        /// How much of what the rule moves was there; kg.
+        there_kg: f64,
+    },
     /// A step needs something in a place that is empty.
     Empty {
         /// The place.

@@ -1,6 +1,7 @@
 //! The plan compiled once: names resolved, amounts read, every number that a route rests on in a slot. The single traced
 //! run and the many sampled ones run the same steps over the same slots.
 
+mod asked;
 mod book;
 mod materials;
 mod reader;
@@ -8,6 +9,7 @@ mod resolve;
 mod run;
 mod work;
 
+pub use asked::asked;
 pub use book::{BOOK_RULES, PLACED, PLACED_BY_DEFAULT, TAKEN_IN};
 pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
 pub use reader::Reader;

@@ -52,32 +52,38 @@ impl<'r, 'p> Reader<'r, 'p> {
         doc.fields.iter().find(|(k, _)| k == key).map(|(_, f)| f)
     }
 
-    /// Whether a parameter is to be read at all: one that hangs on another's choice only where that choice is made.
-    fn applies(&self, p: &'static Param) -> bool {
-        let Some((on, values)) = p.shown_when else { return true };
-        let declared = self.technique.params.iter().find(|q| q.key == on);
-        let word = match (self.field(on), declared.map(|d| d.need)) {
-            (Some(Field::Text(word)), _) => word.as_str(),
-            (None, Some(Need::Default(word, _))) => word,
-            _ => "",
-        };
-        values.contains(&word)
+    /// Why a parameter is not to be read, where it has no meaning: where it would have one, and what would do.
+    fn idle(&self, p: &'static Param) -> Option<(String, String)> {
+        if let Some((on, values)) = p.shown_when {
+            let declared = self.technique.params.iter().find(|q| q.key == on);
+            let word = match (self.field(on), declared.map(|d| d.need)) {
+                (Some(Field::Text(word)), _) => word.as_str(),
+                (None, Some(Need::Default(word, _))) => word,
+                _ => "",
+            };
+            if !values.contains(&word) {
+                let place = format!("only where {on} is {}", values.join(" or "));
+                return Some((place, format!("leave it out, or change {on}")));
+            }
+        }
+        if let Some(other) = p.with.filter(|other| self.field(other).is_none()) {
+            return Some((format!("only beside {other}"), format!("leave it out, or give {other}")));
+        }
+        if let Some(other) = p.without.filter(|other| self.field(other).is_some()) {
+            return Some((
+                format!("only without {other}, which stands in its place"),
+                "one of the two".to_owned(),
+            ));
+        }
+        None
     }
 
     fn find(&mut self, p: &'static Param) -> Found<'p> {
         self.asked.push(p.key);
         let written = self.field(p.key);
-        if !self.applies(p) {
-            if let (Some(_), Some((on, values))) = (written, p.shown_when) {
-                self.error(
-                    p.key,
-                    format!(
-                        "{} is given, but it has a meaning only where {on} is {}",
-                        p.key,
-                        values.join(" or ")
-                    ),
-                    format!("leave it out, or change {on}"),
-                );
+        if let Some((meaning, need)) = self.idle(p) {
+            if written.is_some() {
+                self.error(p.key, format!("{} is given, but it has a meaning {meaning}", p.key), need);
             }
             return Found::Nothing;
         }
@@ -556,7 +562,8 @@ impl<'r, 'p> Reader<'r, 'p> {
             measured[index] = match (read(text, Kind::Mass), read(text, Kind::Fraction)) {
                 (Ok(amount), _) => Some(Measured::Mass(self.route.input(path, &amount, Origin::Measured))),
                 (_, Ok(amount)) => Some(Measured::Share(self.route.input(path, &amount, Origin::Measured))),
-                (Err(e), Err(_)) => {
+                (Err(as_mass), Err(as_share)) => {
+                    let e = if text.contains('%') { as_share } else { as_mass };
                     let need = "a mass in one run, such as \"6 ± 2 g\", or a share of what was there, such as \"3 %\"";
                     self.route.problems.push(Problem::error(
                         path,

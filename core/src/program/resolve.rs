@@ -5,7 +5,7 @@ use super::reader::Reader;
 use super::{
     Assumption, Basis, Program, RouteProgram, SiteUse, StepProgram, StreamUse, Work, WorkloadProgram,
 };
-use crate::chance::{In, Input, identity_key};
+use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
 use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
@@ -54,18 +54,11 @@ pub fn resolve(plan: &Plan) -> Resolved {
         }
         let mut routes = Vec::new();
         for (j, route) in workload.routes.iter().enumerate() {
-            let builder = RouteBuilder {
-                book: &mut book,
-                site: &site,
-                permit: plan.site.drain_permit.is_some(),
-                problems: &mut problems,
-                inputs: Vec::new(),
-                slots: BTreeMap::new(),
-                materials: Vec::new(),
-                densities: Vec::new(),
-                assumptions: Vec::new(),
-            };
-            routes.push(builder.build(workload, route, &path, &format!("{path}.routes[{j}]")));
+            let permit = plan.site.drain_permit.is_some();
+            let mut builder = RouteBuilder::new(&mut book, &site, permit, &mut problems);
+            let at = format!("{path}.routes[{j}]");
+            builder.name_paths((&path, &workload.name), (&at, &route.name));
+            routes.push(builder.build(workload, route, &path, &at));
         }
         let present = workload.routes.iter().position(|r| r.name == workload.present).unwrap_or(0);
         workloads.push(WorkloadProgram { name: workload.name.clone(), present, routes });
@@ -267,11 +260,49 @@ pub(super) struct RouteBuilder<'p> {
     pub(super) materials: Vec<MaterialUse>,
     densities: Vec<Option<In>>,
     assumptions: Vec<Assumption>,
+    /// Paths of the route and of its workload, each with the key of its name.
+    named: [(String, u64); 2],
 }
 
 impl<'p> RouteBuilder<'p> {
+    pub(super) fn new(
+        book: &'p mut MaterialBook,
+        site: &'p SiteUse,
+        permit: bool,
+        problems: &'p mut Vec<Problem>,
+    ) -> Self {
+        Self {
+            book,
+            site,
+            permit,
+            problems,
+            inputs: Vec::new(),
+            slots: BTreeMap::new(),
+            materials: Vec::new(),
+            densities: Vec::new(),
+            assumptions: Vec::new(),
+            named: Default::default(),
+        }
+    }
+
+    /// From here on inputs below these paths are known by the names, not by the numbers in the paths.
+    fn name_paths(&mut self, (above, workload): (&str, &str), (path, route): (&str, &str)) {
+        let workload = identity_key(&format!("workload/{workload}"));
+        let route = continued_key(workload, &format!("/route/{route}"));
+        self.named = [(path.to_owned(), route), (above.to_owned(), workload)];
+    }
+
+    fn key(&self, identity: &str) -> u64 {
+        for (path, key) in self.named.iter().filter(|(path, _)| !path.is_empty()) {
+            if let Some(rest) = identity.strip_prefix(path.as_str()) {
+                return continued_key(*key, rest);
+            }
+        }
+        identity_key(identity)
+    }
+
     pub(super) fn input(&mut self, identity: String, amount: &Amount, origin: Origin) -> In {
-        let key = identity_key(&identity);
+        let key = self.key(&identity);
         if let Some(&slot) = self.slots.get(&key) {
             return slot;
         }
@@ -290,6 +321,10 @@ impl<'p> RouteBuilder<'p> {
     }
 
     pub(super) fn assume(&mut self, path: String, label: &str, value: &str, source: Source) {
+        // A technique may look at a parameter twice; those of other steps lie further back than it has parameters.
+        if self.assumptions.iter().rev().take(64).any(|a| a.path == path) {
+            return;
+        }
         self.assumptions.push(Assumption { path, label: label.to_owned(), value: value.to_owned(), source });
     }
 

@@ -1,1 +1,28 @@
-//! Documents for people and for other programs.
+//! Results for other programs and for people: nothing here computes a figure, and nothing reads or writes a file.
+//!
+//! | file | what it writes |
+//! | --- | --- |
+//! | [`result_json`] | the result document, JSON: a contract for other programs |
+//! | [`result_csv`] | the same figures, flat, for a spreadsheet |
+//! | [`markdown()`] | a report to read and to print |
+//! | [`account_table`], [`comparison_table`] | plain text for a terminal |
+//! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
+//!
+//! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
+//! stand in their declared order.
+mod csv;
+mod grid;
+mod markdown;
+mod result;
+mod row;
+mod table;
+mod trace;
+mod words;
+
+pub use csv::{result_csv, text_cell};
+pub use markdown::{escaped, markdown};
+pub use result::{RESULT_VERSION, result_json};
+pub use row::PROGRAM;
+pub use table::{account_table, comparison_table};
+pub use trace::{Selection, TraceError, TracedFigure, trace};
+pub use words::{cited, problem_line, visible};

@@ -41,6 +41,7 @@ const GAS_FLOW: Param = Param::quantity("gas_flow", "Nitrogen flow", Kind::Volum
     .physical(0.0, 1.0)
     .usual(1e-6, 1e-3)
     .when("by", &[NITROGEN])
+    .with("time")
     .hint("At 25 °C and 1 atm, for one sample; left out, no nitrogen is counted.")
     .source(COMMON_PRACTICE);
 const LOST_TO: Param = Param::new("lost_to", "To air by", Control::Place)
@@ -54,6 +55,7 @@ const TIME: Param = Param::quantity("time", "Time", Kind::Time)
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e6)
     .usual(100.0, 3000.0)
+    .with("time")
     .hint("Bath, rotation, pump and chiller on average; left out, no electricity is counted.")
     .source(FROM_MEMORY);
 
@@ -125,9 +127,6 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     };
     let lost_to = r.place(&LOST_TO);
     let time = r.optional(&TIME);
-    if flow.is_some() && time.is_none() {
-        r.problem("time", "a nitrogen flow without a time", "how long it flows");
-    }
     let gas = flow.and_then(|flow| r.known("nitrogen").map(|m| (m, flow)));
     Box::new(Concentrate {
         to,

@@ -4,7 +4,7 @@ use super::{Control, Group, Param, Rule, Step, Technique};
 use crate::chance::{Draw, In};
 use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::quantity::Kind;
-use crate::source::{DEFINITION, MASS_BALANCE};
+use crate::source::{COMMON_PRACTICE, DEFINITION, MASS_BALANCE};
 
 const MATERIAL: Param = Param::new("material", "What is used", Control::Material)
     .required()
@@ -13,7 +13,8 @@ const MASS: Param = Param::quantity("mass", "Mass used each time", Kind::Mass)
     .required()
     .physical(0.0, 1e5)
     .usual(1e-6, 10.0)
-    .hint("Of all pieces together.");
+    .hint("Of all pieces together.")
+    .source(COMMON_PRACTICE);
 const TO: Param = Param::new("to", "Goes to", Control::Place)
     .default("marc", DEFINITION)
     .hint("A waste stream; left out, it stays with the marc and shares its fate.");

@@ -57,6 +57,10 @@ pub struct Param {
     pub source: Source,
     /// Shown (and read) only when another parameter has one of these values.
     pub shown_when: Option<(&'static str, &'static [&'static str])>,
+    /// Shown (and read) only where this other parameter is written: without it there is nothing it could apply to.
+    pub with: Option<&'static str>,
+    /// Shown (and read) only where this other parameter is not written: that one stands in its place.
+    pub without: Option<&'static str>,
 }
 
 impl Param {
@@ -73,6 +77,8 @@ impl Param {
             hint: "",
             source: SITE,
             shown_when: None,
+            with: None,
+            without: None,
         }
     }
 
@@ -128,6 +134,20 @@ impl Param {
     #[must_use]
     pub const fn when(mut self, key: &'static str, values: &'static [&'static str]) -> Self {
         self.shown_when = Some((key, values));
+        self
+    }
+
+    /// Shown and read only where the parameter `key` is written.
+    #[must_use]
+    pub const fn with(mut self, key: &'static str) -> Self {
+        self.with = Some(key);
+        self
+    }
+
+    /// Shown and read only where the parameter `key` is not written.
+    #[must_use]
+    pub const fn without(mut self, key: &'static str) -> Self {
+        self.without = Some(key);
         self
     }
 }

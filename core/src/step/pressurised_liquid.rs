@@ -23,17 +23,20 @@ const VOID: Param = Param::quantity("void", "Share of the cell that solvent fill
     .default("50 %", FROM_MEMORY)
     .physical(0.0, 1.0)
     .usual(0.2, 0.8)
+    .without("used")
     .hint("What sample and dispersant leave free.")
     .source(FROM_MEMORY);
 const FLUSH: Param = Param::quantity("flush", "Flush, as a share of the cell", Kind::Fraction)
     .default("60 %", SW846_3545A)
     .physical(0.0, 5.0)
     .usual(0.3, 1.5)
+    .without("used")
     .hint("Fresh solvent pumped through after the static time, all cycles together.")
     .source(SW846_3545A);
 const LINES: Param = Param::quantity("lines", "Rinse of pump and lines", Kind::Volume)
     .physical(0.0, 0.1)
     .usual(0.0, 2e-5)
+    .without("used")
     .hint("For each cell; it ends with the extract. Left out, none is counted.")
     .source(COMMON_PRACTICE);
 const USED: Param = Param::quantity("used", "Solvent used, where it is known", Kind::Volume)
@@ -46,6 +49,7 @@ const DISPERSANT: Param = Param::new("dispersant", "Dispersant", Control::Materi
 const DISPERSANT_MASS: Param = Param::quantity("dispersant_mass", "Mass of dispersant", Kind::Mass)
     .physical(0.0, 10.0)
     .usual(1e-3, 0.05)
+    .with("dispersant")
     .hint("For each cell.")
     .source(COMMON_PRACTICE);
 const TIME: Param = Param::quantity("time", "Time for a cell", Kind::Time)
@@ -56,6 +60,7 @@ const TIME: Param = Param::quantity("time", "Time for a cell", Kind::Time)
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e6)
     .usual(200.0, 1500.0)
+    .with("time")
     .hint("On average; left out, no electricity is counted.")
     .source(FROM_MEMORY);
 const EXTRACTS: Param =
@@ -122,12 +127,8 @@ pub(super) static TECHNIQUE: Technique = Technique {
     read: |r| {
         let dispersant = r.optional_material(&DISPERSANT);
         let mass = r.optional(&DISPERSANT_MASS);
-        match (dispersant, mass) {
-            (Some(_), None) => {
-                r.problem("dispersant_mass", "a dispersant without its mass", "its mass, such as \"8 g\"");
-            }
-            (None, Some(_)) => r.problem("dispersant", "a mass of dispersant without its name", "a material"),
-            _ => {}
+        if dispersant.is_some() && mass.is_none() {
+            r.problem("dispersant_mass", "a dispersant without its mass", "its mass, such as \"8 g\"");
         }
         Box::new(PressurisedLiquid {
             solvent: r.mixture(&SOLVENT),

@@ -16,6 +16,7 @@ const CARTRIDGE: Param = Param::new("cartridge", "Cartridge or disk", Control::M
 const CARTRIDGE_MASS: Param = Param::quantity("cartridge_mass", "Mass of the cartridge", Kind::Mass)
     .physical(0.0, 1.0)
     .usual(1e-4, 0.05)
+    .with("cartridge")
     .hint("With bed and housing, dry.")
     .source(COMMON_PRACTICE);
 const CONDITION: Param = Param::new("condition", "Conditioning", Control::PerMaterial(Kind::Volume))

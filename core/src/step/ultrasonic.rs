@@ -35,6 +35,7 @@ const TIME: Param = Param::quantity("time", "Time in one portion", Kind::Time)
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e6)
     .usual(100.0, 1500.0)
+    .with("time")
     .hint("Of bath or probe, averaged over the pulses; left out, no electricity is counted.")
     .source(FROM_MEMORY);
 const EXTRACTS: Param =

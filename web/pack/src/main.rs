@@ -22,7 +22,8 @@ fn main() -> Result<()> {
         let path = workspace.root.join(path);
         fs::read_to_string(&path).with_context(|| format!("cannot read {}", path.display()))
     };
-    let (styles, page) = (read("web/page.css")?, read("index.html")?);
+    let styles = shell::with_imports(&read("web/page.css")?, |name| read(&format!("web/{name}")))?;
+    let page = read("index.html")?;
     let packed = shell::gzip(&program.wasm)?;
     let script = shell::script(&packed, &program.glue, &read("web/boot.js")?)?;
     let html = shell::inline(&page, &styles, &script)?;

@@ -162,7 +162,12 @@ impl Edit {
                 let i = item.position();
                 Some(item.at(if i < left { i } else { left - 1 }).path(&after.plan))
             }
-            Change::Move(..) => None,
+            // What is moved in the document loses the focus; the same button gets it back.
+            Change::Move(item, up) => {
+                let i = item.position();
+                let moved = item.at(if *up { i.saturating_sub(1) } else { i + 1 });
+                Some(format!("{}-move-{}", moved.path(&after.plan), if *up { "up" } else { "down" }))
+            }
         }
     }
 

@@ -157,6 +157,7 @@ fn focus_goes_to_what_was_added_and_to_the_neighbour_of_what_is_gone() {
     assert_eq!(focus(Change::Duplicate(Item::Step(0, 0, 0))), Some(step(1)));
     assert_eq!(focus(Change::Remove(Item::Step(0, 0, 0))), Some(step(0)));
     assert_eq!(focus(Change::Remove(Item::Step(0, 0, 1))), Some(step(0)));
+    assert_eq!(focus(Change::Move(Item::Step(0, 0, 1), true)), Some(format!("{}-move-up", step(0))));
     assert_eq!(focus(Change::Remove(Item::Route(0, 0))).as_deref(), Some("workloads[0].routes"));
 }
 

@@ -1,9 +1,9 @@
 //! The buttons of an entry in a list: copy, move, take away. All of them work by key as well as by pointer.
-use crate::edit::{Change, Edit, Item};
+use crate::edit::{Change, Edit, Item, dom_id};
 use yew::prelude::*;
 
-/// Buttons for `item`, which is called `name` and has `count` entries in its list.
-pub(crate) fn tools(item: Item, name: &str, count: usize, edit: &Callback<Edit>) -> Html {
+/// Buttons for `item` at `path`, which is called `name` and has `count` entries in its list.
+pub(crate) fn tools(item: Item, path: &str, name: &str, count: usize, edit: &Callback<Edit>) -> Html {
     let button = |words: &'static str, idle: bool, change: Change| {
         let edit = edit.clone();
         let onclick = Callback::from(move |_: MouseEvent| {
@@ -12,7 +12,7 @@ pub(crate) fn tools(item: Item, name: &str, count: usize, edit: &Callback<Edit>)
             }
         });
         html! {
-            <button type="button" class="small" aria-disabled={idle.then_some("true")} {onclick}
+            <button type="button" class="small" id={dom_id(&format!("{path}-{}", words.replace(' ', "-").to_lowercase()))} aria-disabled={idle.then_some("true")} {onclick}
                 aria-label={format!("{words}: {name}")}>{ words }</button>
         }
     };

@@ -39,7 +39,16 @@ pub(crate) fn Toolbar(props: &Props) -> Html {
     // A button that stays focusable when it has nothing to do, so that the keyboard does not lose its place.
     let button = |label: String, keys: &'static str, idle: bool, wish: Wish| {
         let on = props.wish.clone();
-        let onclick = Callback::from(move |_: MouseEvent| on.emit(wish));
+        let onclick = Callback::from(move |event: MouseEvent| {
+            // A menu has done its work once something is chosen.
+            let menu =
+                event.target_dyn_into::<web_sys::Element>().and_then(|b| b.closest("details").ok().flatten());
+            if let Some(menu) = menu {
+                // A menu that stays open is no harm.
+                let _ = menu.remove_attribute("open");
+            }
+            on.emit(wish);
+        });
         html! {
             <button type="button" aria-disabled={idle.then_some("true")} aria-keyshortcuts={(!keys.is_empty()).then_some(keys)}
                 {onclick}>{ label }</button>

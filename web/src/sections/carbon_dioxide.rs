@@ -1,6 +1,7 @@
 //! Section "CO₂": drawn, returned, made up, vented.
 use super::View;
 use super::places::{lines, sentence_case};
+use super::plates::What;
 use crate::parts::Sheet;
 use thimbleworth::account::Group;
 use yew::prelude::*;
@@ -26,6 +27,7 @@ pub(super) fn draw(view: &View) -> Html {
                     basis: view.state.view.basis,
                     beside: false,
                 }.draw() }
+                { view.plate(w, What::Co2) }
                 <p class="caution"><strong>{ "Caution: " }</strong>
                     { "CO₂ harms before oxygen falls: a CO₂ sensor low down, not an oxygen alarm. Pressure vessels are rated, inspected and relieved under local codes." }
                 </p>

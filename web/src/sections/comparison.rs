@@ -1,11 +1,15 @@
 //! Section "The comparison": the figures that decide, better and worse, doubts, and what makes the difference.
 use super::View;
 use super::places::{lines, sentence_case};
+use super::plates::What;
 use crate::parts::Sheet;
 use crate::show::Scale;
 use thimbleworth::account::{Figure, Group};
 use thimbleworth::compare::{HEADLINES, RouteComparison};
 use yew::prelude::*;
+
+/// Up to so many routes each difference is drawn; beyond, the table alone can be read.
+const DRAWN: usize = 8;
 
 pub(super) fn draw(view: &View) -> Html {
     view.works(|w| {
@@ -17,6 +21,8 @@ pub(super) fn draw(view: &View) -> Html {
             line.label = sentence_case(&line.label);
         }
         let routes = view.book().works.get(w).map_or(0, |work| work.routes.len());
+        let drawn =
+            |r: usize| if routes <= DRAWN { view.plate(w, What::Difference(r)) } else { Html::default() };
         html! {
             <>
                 { Sheet {
@@ -31,7 +37,7 @@ pub(super) fn draw(view: &View) -> Html {
                 }.draw() }
                 { for (0..routes).filter_map(|r| {
                     let beside = view.book().beside(w, r)?;
-                    Some(one(&view.book().works[w].routes[r].name, beside))
+                    Some(one(&view.book().works[w].routes[r].name, beside, drawn(r)))
                 }) }
                 { refusals(view, w) }
             </>
@@ -49,7 +55,7 @@ fn decides(figure: &Figure) -> bool {
     }
 }
 
-fn one(name: &str, beside: &RouteComparison) -> Html {
+fn one(name: &str, beside: &RouteComparison, drawn: Html) -> Html {
     let list = |title: &'static str, items: &[String]| {
         if items.is_empty() {
             return Html::default();
@@ -76,6 +82,7 @@ fn one(name: &str, beside: &RouteComparison) -> Html {
     html! {
         <div class="besides">
             <h4>{ format!("{name} beside the present route") }</h4>
+            { drawn }
             <dl>
                 { list("Falls", &beside.better) }
                 { list("Rises", &beside.worse) }

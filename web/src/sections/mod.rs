@@ -5,6 +5,7 @@ mod comparison;
 mod finding;
 mod hazard;
 mod places;
+mod plates;
 mod question;
 mod routes;
 mod waste;
@@ -35,6 +36,12 @@ impl View {
 
     pub(crate) fn book(&self) -> &Book {
         &self.reckoned.book
+    }
+
+    /// A picture of a piece of work.
+    fn plate(&self, work: usize, what: plates::What) -> Html {
+        let book = ByRc(Rc::clone(&self.reckoned.book));
+        html! { <plates::Plate {book} {work} basis={self.state.view.basis} {what} /> }
     }
 
     /// Draws something for each piece of work, under its name where there are several.

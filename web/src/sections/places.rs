@@ -1,5 +1,6 @@
 //! Section "Where it goes": what comes in, and where every mass ends, by place and material, the routes side by side.
 use super::View;
+use super::plates::What;
 use crate::parts::{Line, Sheet};
 use crate::reckon::Book;
 use thimbleworth::account::{Figure, How, Measure};
@@ -22,12 +23,20 @@ pub(super) fn draw(view: &View) -> Html {
         };
         html! {
             <>
+                { view.plate(w, What::Places) }
                 { sheet("comes-in", "What comes in", "Material", coming(view.book(), w)).draw() }
                 { sheet("goes-to", "Where it ends", "Place and material", going(view.book(), w)).draw() }
                 { closure(view.book(), w) }
+                { flowing(view, w).map_or_else(Html::default, |r| view.plate(w, What::Flow(r))) }
             </>
         }
     })
+}
+
+/// The route whose flow is drawn: the one whose form is open, or the present one.
+fn flowing(view: &View, w: usize) -> Option<usize> {
+    let open = view.state.view.route.and_then(|id| view.state.document().route(id));
+    open.filter(|(work, _)| *work == w).map(|(_, r)| r).or(view.book().works.get(w)?.present)
 }
 
 /// The figures of every accounted route of a work, in order.

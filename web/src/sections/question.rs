@@ -140,8 +140,9 @@ fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
     let at = |key: &str| format!("{path}.{key}");
     let solid = stream.holds.as_deref() == Some("solid");
     html! {
-        <div class="card" key={id} id={path.clone()} role="group" aria-label={format!("Stream {}", stream.name)}>
-            <div class="cardhead"><h4>{ &stream.name }</h4>{ tools(Item::Stream(i), &stream.name, count, &view.edit) }</div>
+        <details class="card" key={id} id={path.clone()}>
+            <summary><h4>{ &stream.name }</h4>{ ": " }{ stream_words(stream) }</summary>
+            { tools(Item::Stream(i), &path, &stream.name, count, &view.edit) }
             <Name item={Item::Stream(i)} id={at("name")} label="Name of the stream" value={stream.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
             { Asked::text(at("holds"), "Holds", stream.holds.clone().unwrap_or_default())
@@ -157,8 +158,18 @@ fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
             { Asked::text(at("treatment"), "Treatment on site", stream.treatment.clone().unwrap_or_default())
                 .need(Need::Default("none", DEFINITION))
                 .ask(Ask::Choice(options("none (left out)", &["recycling", "degradation", "passivation", "none"]))).draw(view) }
-        </div>
+        </details>
     }
+}
+
+/// A stream in one line.
+fn stream_words(stream: &Stream) -> String {
+    let mut parts = vec![stream.holds.clone().unwrap_or_else(|| "liquid".into())];
+    parts.extend(stream.container.as_ref().map(|c| format!("containers of {c}")));
+    parts.extend(stream.fill.as_ref().map(|f| format!("filled to {f}")));
+    parts.extend(stream.bulk_density.as_ref().map(|d| format!("bulk density {d}")));
+    parts.extend(stream.treatment.as_ref().map(|t| format!("treatment {t}")));
+    parts.join(", ")
 }
 
 fn works(view: &View) -> Html {
@@ -192,7 +203,7 @@ fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
     let feed = at("feed");
     html! {
         <div class="card" key={id} id={path.clone()} role="group" aria-label={format!("Work {}", work.name)}>
-            <div class="cardhead"><h4>{ &work.name }</h4>{ tools(Item::Workload(w), &work.name, count, &view.edit) }</div>
+            <div class="cardhead"><h4>{ &work.name }</h4>{ tools(Item::Workload(w), &path, &work.name, count, &view.edit) }</div>
             <Name item={Item::Workload(w)} id={at("name")} label="Name of the work" value={work.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
             { number("results_per_year", "Results reported in a year", work.results_per_year.as_ref()).need(Need::Required)
@@ -255,7 +266,7 @@ fn one_material(view: &View, i: usize, material: &OwnMaterial, count: usize) -> 
     let value = |key: &str| text_of(material.fields.iter().find(|(k, _)| k == key).map(|(_, field)| field));
     html! {
         <div class="card" key={id} id={crate::edit::dom_id(&path)} role="group" aria-label={format!("Material {}", material.name)}>
-            <div class="cardhead"><h4>{ &material.name }</h4>{ tools(item, &material.name, count, &view.edit) }</div>
+            <div class="cardhead"><h4>{ &material.name }</h4>{ tools(item, &path, &material.name, count, &view.edit) }</div>
             <Name {item} id={format!("material-{id}-name")} label="Name of the material" value={material.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
             { for OWN_FIELDS.iter().map(|p| {
@@ -296,12 +307,7 @@ fn printed(view: &View) -> Html {
         line("Notes", plan.notes.clone()),
     ];
     for stream in &site.streams {
-        let mut parts = vec![stream.holds.clone().unwrap_or_else(|| "liquid".into())];
-        parts.extend(stream.container.as_ref().map(|c| format!("containers of {c}")));
-        parts.extend(stream.fill.as_ref().map(|f| format!("filled to {f}")));
-        parts.extend(stream.bulk_density.as_ref().map(|d| format!("bulk density {d}")));
-        parts.extend(stream.treatment.as_ref().map(|t| format!("treatment {t}")));
-        lines.push(line(&format!("Stream {}", stream.name), Some(parts.join(", "))));
+        lines.push(line(&format!("Stream {}", stream.name), Some(stream_words(stream))));
     }
     for material in &plan.materials {
         let fields = material

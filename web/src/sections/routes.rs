@@ -65,7 +65,7 @@ fn card(view: &View, w: usize, r: usize, route: &Route) -> Html {
                     aria-label={format!("{} {}", if open { "Close the form of" } else { "Open the form of" }, route.name)}>
                     { if open { "Close the form" } else { "Open the form" } }
                 </button>
-                { tools(Item::Route(w, r), &route.name, work.routes.len(), &view.edit) }
+                { tools(Item::Route(w, r), &path, &route.name, work.routes.len(), &view.edit) }
             </div>
             <Summary route={route.clone()} open={open} />
             if open { { form(view, w, r, route, &path) } }
@@ -220,7 +220,7 @@ fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &
         <section class="card step" key={id} id={path.clone()} aria-label={format!("Step {}, {title}", s + 1)}>
             <div class="cardhead">
                 <h5><span class="folio">{ s + 1 }</span>{ " " }{ &title }</h5>
-                { tools(Item::Step(w, r, s), &named, route.steps.len(), &view.edit) }
+                { tools(Item::Step(w, r, s), &path, &named, route.steps.len(), &view.edit) }
             </div>
             if let Some(technique) = known {
                 <p class="hint">{ technique.about }</p>

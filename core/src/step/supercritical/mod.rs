@@ -63,6 +63,7 @@ const IN_MARC: Param = Param::quantity("in_marc", "CO2 left in the marc", Kind::
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e7)
     .usual(300.0, 1e5)
+    .with("run_time")
     .hint("Pump, chiller and heaters on average; left out, no electricity is counted.")
     .source(FROM_MEMORY);
 const RUN_TIME: Param = Param::quantity("run_time", "Time the unit runs", Kind::Time)
@@ -176,9 +177,6 @@ struct Supercritical {
 fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     let recycled = r.choice(&CIRCUIT) == RECYCLED;
     let (power, run_time) = (r.optional(&POWER), r.optional(&RUN_TIME));
-    if power.is_some() && run_time.is_none() {
-        r.problem("run_time", "a power without the time that the unit runs", "the time, such as \"70 min\"");
-    }
     Box::new(Supercritical {
         co2: r.known("carbon dioxide").unwrap_or(Material(0)),
         temperature: r.quantity(&TEMPERATURE),
@@ -282,6 +280,7 @@ impl Supercritical {
             b.up_to(Place::VAPOUR, self.vent_to, self.co2, kg, LET_DOWN)?;
             b.all(Place::VAPOUR, Place::STORE, self.co2, RETURNED);
         } else {
+            b.note(LET_DOWN, "m(vessel)", b.there(Place::VAPOUR, self.co2), Kind::Mass);
             b.all(Place::VAPOUR, self.vent_to, self.co2, LET_DOWN);
         }
         Ok(())

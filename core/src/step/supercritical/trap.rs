@@ -18,6 +18,7 @@ pub(super) const COSOLVENT_KEPT: Param =
     Param::quantity("cosolvent_kept", "Share of the co-solvent that the trap keeps", Kind::Fraction)
         .default("90 %", FROM_MEMORY)
         .physical(0.0, 1.0)
+        .with("cosolvent")
         .hint("The rest leaves with the gas.")
         .source(FROM_MEMORY);
 pub(super) const TRAP_SOLVENT: Param = Param::new("trap_solvent", "Solvent in the trap", Control::Mixture)
@@ -35,6 +36,7 @@ pub(super) const TRAP_LOSS: Param = Param::quantity(
 .default("20 %", FROM_MEMORY)
 .physical(0.0, 1.0)
 .usual(0.0, 0.6)
+.with("trap_solvent")
 .hint("Of the trap's own solvent, by the gas that bubbles through. Read the level after the run to know.")
 .source(FROM_MEMORY);
 pub(super) const RINSE: Param = Param::new("rinse", "Solvent that rinses the trap", Control::Mixture)
@@ -48,9 +50,9 @@ pub(super) const RINSE_VOLUME: Param = Param::quantity("rinse_volume", "Volume o
 /// The trap of one step.
 pub(super) struct Trap {
     cosolvent: Option<(Mixture, In)>,
-    kept: In,
+    kept: Option<In>,
     solvent: Option<(Mixture, In)>,
-    loss: In,
+    loss: Option<In>,
     rinse: Option<(Mixture, In)>,
 }
 
@@ -72,7 +74,7 @@ impl Trap {
         let cosolvent = pair(&COSOLVENT, &COSOLVENT_FLOW);
         let solvent = pair(&TRAP_SOLVENT, &TRAP_VOLUME);
         let rinse = pair(&RINSE, &RINSE_VOLUME);
-        Self { cosolvent, kept: r.quantity(&COSOLVENT_KEPT), solvent, loss: r.quantity(&TRAP_LOSS), rinse }
+        Self { cosolvent, kept: r.optional(&COSOLVENT_KEPT), solvent, loss: r.optional(&TRAP_LOSS), rinse }
     }
 
     pub(super) fn fill(&self, x: Draw<'_>, b: &mut Bench<'_>, rule: RuleIx) -> Result<(), Halt> {
@@ -91,8 +93,8 @@ impl Trap {
         vent: Place,
         rule: RuleIx,
     ) -> Result<(), Halt> {
-        if let Some((mixture, flow)) = &self.cosolvent {
-            let kept = x.get(self.kept);
+        if let (Some((mixture, flow)), Some(kept)) = (&self.cosolvent, self.kept) {
+            let kept = x.get(kept);
             b.note(rule, "q", x.get(*flow), Kind::VolumeFlow);
             b.note(rule, "t", time_s, Kind::Time);
             b.note(rule, "k", kept, Kind::Fraction);
@@ -114,10 +116,10 @@ impl Trap {
         vent: Place,
         rule: RuleIx,
     ) -> Result<(), Halt> {
-        if self.solvent.is_some() {
-            b.note(rule, "s", x.get(self.loss), Kind::Fraction);
+        if let Some(loss) = self.loss {
+            b.note(rule, "s", x.get(loss), Kind::Fraction);
             // mᵢ = s mᵢ(trap)
-            b.share_volatile(Place::TRAP, vent, x.get(self.loss), rule)?;
+            b.share_volatile(Place::TRAP, vent, x.get(loss), rule)?;
         }
         Ok(())
     }

@@ -22,11 +22,13 @@ pub(super) const SOLID_DENSITY: Param =
         .default("2.6 g/mL", FROM_MEMORY)
         .physical(100.0, 25_000.0)
         .usual(900.0, 3000.0)
+        .without("void")
         .hint("Not the bulk density: quartz 2.6, plant tissue about 1.3 to 1.5 g/mL.")
         .source(FROM_MEMORY);
 pub(super) const FILLER: Param = Param::quantity("filler", "Volume of inert filler", Kind::Volume)
     .default("0 mL", DEFINITION)
     .physical(0.0, 100.0)
+    .without("void")
     .hint("Glass beads or a plug that takes up void.")
     .source(COMMON_PRACTICE);
 pub(super) const LET_DOWN: Param = Param::new("let_down", "Let down after this step", Control::YesNo)

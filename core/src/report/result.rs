@@ -1,0 +1,320 @@
+//! The result document.
+
+mod figure;
+mod hazard;
+mod posting;
+
+pub(super) use figure::FigureRow;
+pub(super) use posting::{InputDocument, step_and_technique};
+
+use super::row::PROGRAM;
+use super::words::editions;
+use crate::account::{Account, RouteAccount};
+use crate::chance::{Draw, identity_key};
+use crate::compare::compare;
+use crate::plan::{Problem, save};
+use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
+use figure::ComparisonDocument;
+use hazard::HazardDocument;
+use posting::{AssumptionDocument, CautionDocument, PostingDocument, SpendingDocument};
+use serde::Serialize;
+
+/// The version of the result document. Keys may be added under the same version; a key that goes or changes its meaning
+/// brings a new one.
+pub const RESULT_VERSION: u64 = 1;
+
+#[derive(Serialize)]
+struct Document<'a> {
+    thimbleworth_result: u64,
+    program: &'static str,
+    plan_digest: Option<String>,
+    title: Option<&'a str>,
+    site: Option<&'a str>,
+    rules: Option<&'a str>,
+    as_of: Option<&'a str>,
+    data_editions: Vec<EditionDocument>,
+    workloads: Vec<WorkloadDocument<'a>>,
+    problems: Vec<ProblemDocument<'a>>,
+}
+
+#[derive(Serialize)]
+struct EditionDocument {
+    key: String,
+    cite: String,
+    standing: &'static str,
+}
+
+#[derive(Serialize)]
+struct WorkloadDocument<'a> {
+    name: &'a str,
+    work: Option<WorkDocument>,
+    present: &'a str,
+    routes: Vec<RouteDocument<'a>>,
+    #[serde(skip_serializing_if = "Option::is_none")]
+    comparison: Option<Option<ComparisonDocument<'a>>>,
+}
+
+#[derive(Serialize)]
+struct WorkDocument {
+    results_per_year: f64,
+    extractions_per_year: f64,
+    batches_per_year: f64,
+}
+
+#[derive(Serialize)]
+struct RouteDocument<'a> {
+    name: &'a str,
+    accounted: bool,
+    #[serde(flatten)]
+    account: Option<RouteAccountDocument<'a>>,
+}
+
+#[derive(Serialize)]
+struct RouteAccountDocument<'a> {
+    kg_product_per_year: f64,
+    figures: Vec<FigureRow<'a>>,
+    refused: Vec<RefusalDocument<'a>>,
+    hazard: HazardDocument<'a>,
+    assumptions: Vec<AssumptionDocument<'a>>,
+    cautions: Vec<CautionDocument>,
+    closure: f64,
+    postings: Vec<PostingDocument<'a>>,
+    utilities: Vec<SpendingDocument>,
+    inputs: Vec<InputDocument<'a>>,
+}
+
+#[derive(Serialize)]
+struct RefusalDocument<'a> {
+    metrics: &'static str,
+    reason: &'a str,
+}
+
+#[derive(Serialize)]
+struct ProblemDocument<'a> {
+    severity: &'static str,
+    path: &'a str,
+    found: &'a str,
+    need: &'a str,
+}
+
+/// The result document of an account: JSON for other programs, the same bytes from the command and from the page.
+///
+/// Laid out with two spaces a level and a final newline; keys in the order given here; numbers as the shortest text that
+/// reads back as the same double. A figure that is not a finite number would be `null`. With `with_comparison` each
+/// workload has `comparison` as well.
+///
+/// | key | what it holds |
+/// | --- | --- |
+/// | `thimbleworth_result` | [`RESULT_VERSION`] |
+/// | `program` | name and version |
+/// | `plan_digest` | `fnv1a64:` and 16 hexadecimal digits: FNV-1a, 64 bits, of the plan as [`save`] writes it; tells whether two results are of the same plan, and protects against nothing; `null` where there is no plan |
+/// | `title`, `site`, `rules`, `as_of` | from the plan; `null` where it does not say |
+/// | `data_editions` | the sources of the densities, hazards, flash and boiling points and waste codes of all materials on routes, by key, each with `cite` and `standing` |
+/// | `workloads` | the pieces of work in the order of the plan; empty when the plan has an error |
+/// | `problems` | everything found on the way, errors first: `severity` (`error`, `warning`, `note`), `path` in the plan, `found`, `need` |
+///
+/// A workload has `name`, `work` (`results_per_year`, `extractions_per_year` with controls and repeats,
+/// `batches_per_year`, which need not be whole), `present` (the name of the present route) and `routes`. A route has
+/// `name` and `accounted`; where that is `false` its run stopped, `problems` says why, and nothing else follows. Else:
+///
+/// | key | what it holds |
+/// | --- | --- |
+/// | `kg_product_per_year` | what is placed in product |
+/// | `figures` | see below |
+/// | `refused` | metrics that are not given: `metrics`, `reason` |
+/// | `hazard` | `materials` (statements with text where it is known, pictogram codes, signal word, CHEM21 scores 1 to 10 with reasons, or why there are none, source and date), `eco_scale` (Analytical Eco-Scale for one result, its penalty lines), `nemi` (four rules, `met` is `yes`, `no` or `not known`), `not_scored` (materials that reach air or drain without a score) |
+/// | `assumptions` | values that stand in for what the plan leaves out: `path`, `label`, `value`, `source`, `standing` |
+/// | `cautions` | what can hurt: `key`, `text`, `source`; local codes and licensed practice decide |
+/// | `closure` | (mass in − mass out) / mass in: rounding only |
+/// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `measured` |
+/// | `utilities` | electricity (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
+///
+/// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
+/// `formula`, `source`, `standing`, and its values under keys that name the unit: `kg`, `l` (litres), `kwh`, `containers`
+/// or `kg_score` (mass times a score) with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
+/// (`null` without a product). A month is a twelfth of the year. Containers are whole in a year, and the other values are
+/// shares of that number. A ratio has only `ratio`. All are central values; gross and net stand as figures of their own.
+///
+/// **Comparison.** `comparison` is `null` where the present route has no account, else `present` and `routes`, one for
+/// each other route with an account: `name`, `finding`, `better`, `worse`, `doubts`, and `differences`: `id`, `title`,
+/// `present_U`, `route_U`, `change_U` (route less present), `route_over_present` (`null` over nothing) and `causes`, where
+/// `U` is the unit with `_per_year`, or `ratio`; of a cause `what` and `change_U`, for containers in litres.
+///
+/// ```
+/// use thimbleworth::{account::account_text, report::result_json};
+/// let result = result_json(&account_text("{}"), false);
+/// assert!(result.starts_with("{\n  \"thimbleworth_result\": 1,\n  \"program\": \"Thimbleworth "));
+/// assert!(result.contains("\"severity\": \"error\""));
+/// ```
+#[must_use]
+pub fn result_json(account: &Account, with_comparison: bool) -> String {
+    let plan = account.plan.as_ref();
+    let program = account.program.as_ref();
+    let document = Document {
+        thimbleworth_result: RESULT_VERSION,
+        program: PROGRAM,
+        plan_digest: plan.map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p)))),
+        title: plan.map(|p| p.title.as_str()),
+        site: plan.map(|p| p.site.name.as_str()),
+        rules: plan.and_then(|p| p.site.rules.as_deref()),
+        as_of: plan.and_then(|p| p.site.as_of.as_deref()),
+        data_editions: program.map(editions).unwrap_or_default().into_iter().map(edition).collect(),
+        workloads: workloads(account, with_comparison),
+        problems: account.problems.iter().map(problem).collect(),
+    };
+    // Plain data with text keys: writing it to memory cannot fail.
+    let mut text = serde_json::to_string_pretty(&document).unwrap_or_default();
+    text.push('\n');
+    text
+}
+
+fn edition(e: super::words::Edition) -> EditionDocument {
+    EditionDocument { key: e.key, cite: e.cite, standing: e.standing }
+}
+
+fn problem(p: &Problem) -> ProblemDocument<'_> {
+    ProblemDocument { severity: p.severity.word(), path: &p.path, found: &p.found, need: &p.need }
+}
+
+fn workloads(account: &Account, with_comparison: bool) -> Vec<WorkloadDocument<'_>> {
+    let Some(program) = &account.program else { return Vec::new() };
+    let pairs = program.workloads.iter().zip(&account.workloads).enumerate();
+    pairs
+        .map(|(i, (work, accounts))| WorkloadDocument {
+            name: &work.name,
+            work: runs(work),
+            present: work.routes.get(work.present).map_or("", |r| r.name.as_str()),
+            routes: work
+                .routes
+                .iter()
+                .zip(&accounts.routes)
+                .map(|(route, account)| RouteDocument {
+                    name: &route.name,
+                    accounted: account.is_some(),
+                    account: account.as_ref().map(|a| route_account(route, &program.site, a)),
+                })
+                .collect(),
+            comparison: with_comparison.then(|| compare(account, i).map(|c| ComparisonDocument::of(work, c))),
+        })
+        .collect()
+}
+
+fn runs(work: &WorkloadProgram) -> Option<WorkDocument> {
+    let route = work.routes.first()?;
+    let runs = route.work.runs(Draw(&route.central())).ok()?;
+    Some(WorkDocument {
+        results_per_year: runs.results,
+        extractions_per_year: runs.extractions,
+        batches_per_year: runs.batches,
+    })
+}
+
+fn route_account<'a>(
+    route: &'a RouteProgram,
+    site: &SiteUse,
+    account: &'a RouteAccount,
+) -> RouteAccountDocument<'a> {
+    let refusal = |r: &'a crate::account::Refusal| RefusalDocument { metrics: r.metrics, reason: &r.reason };
+    let moved = account.trace.postings.iter().filter(|p| p.kg != 0.0);
+    RouteAccountDocument {
+        kg_product_per_year: account.product_kg,
+        figures: FigureRow::all(account),
+        refused: account.refusals.iter().map(refusal).collect(),
+        hazard: HazardDocument::of(&account.hazard),
+        assumptions: route.assumptions.iter().map(AssumptionDocument::of).collect(),
+        cautions: account.cautions.iter().map(|c| CautionDocument::of(c)).collect(),
+        closure: account.closure,
+        postings: moved.map(|p| PostingDocument::of(route, site, p)).collect(),
+        utilities: account.trace.spendings.iter().map(|s| SpendingDocument::of(route, s)).collect(),
+        inputs: route.inputs.iter().map(InputDocument::of).collect(),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::account::account_text;
+    use crate::example::EXAMPLES;
+    use serde_json::Value;
+
+    fn read(text: &str, compared: bool) -> Value {
+        serde_json::from_str(&result_json(&account_text(text), compared)).unwrap()
+    }
+
+    #[test]
+    fn every_figure_has_its_unit_in_its_keys_and_scales() {
+        for example in EXAMPLES {
+            let result = read(example.text, false);
+            assert_eq!(result["thimbleworth_result"], 1);
+            for workload in result["workloads"].as_array().unwrap() {
+                let results = workload["work"]["results_per_year"].as_f64().unwrap();
+                for route in workload["routes"].as_array().unwrap() {
+                    assert_eq!(route["accounted"], true, "{}", example.key);
+                    for figure in route["figures"].as_array().unwrap() {
+                        let keys: Vec<&String> = figure.as_object().unwrap().keys().collect();
+                        if figure.get("ratio").is_some() {
+                            assert_eq!(keys.len(), 8, "{keys:?}");
+                            continue;
+                        }
+                        let unit = ["kg", "l", "kwh", "containers", "kg_score"]
+                            .into_iter()
+                            .find(|u| figure.get(format!("{u}_per_year")).is_some())
+                            .unwrap();
+                        let value = |per: &str| figure[format!("{unit}_per_{per}")].as_f64().unwrap();
+                        let year = value("year");
+                        let near = |a: f64, b: f64| (a - b).abs() <= 1e-12 * b.abs();
+                        assert!(near(value("result") * results, year) && near(value("month") * 12.0, year));
+                        assert_eq!(keys.len(), 12, "{keys:?}");
+                    }
+                }
+            }
+        }
+    }
+
+    #[test]
+    fn the_postings_add_up_to_the_mass_that_came_in() {
+        let result = read(EXAMPLES[0].text, false);
+        let route = &result["workloads"][0]["routes"][0];
+        let came: f64 = route["postings"]
+            .as_array()
+            .unwrap()
+            .iter()
+            .filter(|p| p["from"] == "feed" || p["from"] == "store")
+            .map(|p| p["kg_per_year"].as_f64().unwrap())
+            .sum();
+        let figure = route["figures"].as_array().unwrap().iter().find(|f| f["id"] == "mass.in").unwrap();
+        assert!((came / figure["kg_per_year"].as_f64().unwrap() - 1.0).abs() < 1e-12);
+        assert!(route["closure"].as_f64().unwrap().abs() < 1e-12);
+    }
+
+    #[test]
+    fn the_comparison_is_there_when_asked_for_and_keys_keep_their_order() {
+        let account = account_text(EXAMPLES[0].text);
+        let (plain, compared) = (result_json(&account, false), result_json(&account, true));
+        assert!(!plain.contains("\"comparison\"") && compared.contains("\"finding\""));
+        let at = |key: &str| compared.find(&format!("\n  \"{key}\": ")).unwrap();
+        let order =
+            ["thimbleworth_result", "program", "plan_digest", "title", "site", "workloads", "problems"];
+        assert!(order.windows(2).all(|w| at(w[0]) < at(w[1])));
+        assert_eq!(result_json(&account_text(EXAMPLES[0].text), true), compared);
+    }
+
+    #[test]
+    fn what_is_no_plan_still_gives_a_document() {
+        for text in ["", "{", "[]", "{\"thimbleworth\": 99}"] {
+            let result = read(text, true);
+            assert_eq!(result["workloads"].as_array().unwrap().len(), 0);
+            assert_eq!(result["problems"][0]["severity"], "error", "{text}");
+        }
+    }
+
+    #[test]
+    fn the_digest_follows_the_plan_and_not_its_layout() {
+        let text = EXAMPLES[0].text;
+        let spaced = text.replace("\": ", "\":   ");
+        assert_eq!(read(text, false)["plan_digest"], read(&spaced, false)["plan_digest"]);
+        let other = text.replacen("\"title\": \"", "\"title\": \"Again: ", 1);
+        assert_ne!(read(text, false)["plan_digest"], read(&other, false)["plan_digest"]);
+    }
+}

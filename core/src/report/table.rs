@@ -1,0 +1,397 @@
+//! Plain text for a terminal: the accounts of each route, or the routes side by side.
+
+use super::grid::{Grid, paragraph};
+use super::row::figures;
+use super::words::{amount, is_detail, visible, work_words};
+use crate::account::{Account, Group, Measure, RouteAccount};
+use crate::compare::{Comparison, Difference, HEADLINES, RouteComparison, compare};
+use crate::program::{RouteProgram, WorkloadProgram};
+use crate::quantity::significant;
+
+/// So many routes stand beside the present one before the table starts anew.
+const ROUTES_ABREAST: usize = 2;
+
+/// The account of every route as text: figures by account, hazards, what was assumed, cautions.
+///
+/// Amounts are rounded to four significant digits and stand in a unit that suits their size. Control characters in names
+/// are made visible. Empty where the plan has an error.
+///
+/// ```
+/// use thimbleworth::{account::account_text, example::EXAMPLES, report::account_table};
+/// let text = account_table(&account_text(EXAMPLES[0].text));
+/// assert!(text.contains("Where the mass goes"));
+/// ```
+#[must_use]
+pub fn account_table(account: &Account) -> String {
+    let mut out = String::new();
+    let Some(program) = &account.program else { return out };
+    heading(&mut out, account);
+    for (work, accounts) in program.workloads.iter().zip(&account.workloads) {
+        for (i, (route, account)) in work.routes.iter().zip(&accounts.routes).enumerate() {
+            let present = if i == work.present { " (present)" } else { "" };
+            out.push('\n');
+            paragraph(&mut out, "", &format!("{}: {}{present}", work.name, route.name));
+            if let Some(account) = account {
+                route_account(&mut out, route, account);
+            } else {
+                paragraph(&mut out, "", "Its run stopped: see the problems.");
+            }
+        }
+    }
+    out
+}
+
+/// The routes of every workload side by side, a year, with the finding first.
+///
+/// Per-material lines of the mass account are left to [`account_table`].
+///
+/// ```
+/// use thimbleworth::{account::account_text, example::EXAMPLES, report::comparison_table};
+/// let text = comparison_table(&account_text(EXAMPLES[0].text));
+/// assert!(text.contains("In place of "));
+/// ```
+#[must_use]
+pub fn comparison_table(account: &Account) -> String {
+    let mut out = String::new();
+    let Some(program) = &account.program else { return out };
+    heading(&mut out, account);
+    for (i, work) in program.workloads.iter().enumerate() {
+        out.push('\n');
+        paragraph(&mut out, "", &format!("{}: {}", work.name, work_words(work)));
+        match compare(account, i) {
+            Some(comparison) => compared(&mut out, account, i, work, &comparison),
+            None => paragraph(&mut out, "", "The present route has no account: see the problems."),
+        }
+    }
+    out
+}
+
+fn heading(out: &mut String, account: &Account) {
+    let Some(plan) = &account.plan else { return };
+    paragraph(out, "", &plan.title);
+    let mut line = plan.site.name.clone();
+    if let Some(rules) = &plan.site.rules {
+        line.push_str(&format!(", rules: {rules}"));
+    }
+    if let Some(as_of) = &plan.site.as_of {
+        line.push_str(&format!(", as of {as_of}"));
+    }
+    paragraph(out, "", &line);
+}
+
+fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
+    let runs = account.runs;
+    let number = |value| significant(value, 4);
+    paragraph(
+        out,
+        "",
+        &format!(
+            "{} results, {} extractions, {} batches a year; a month is a twelfth of it",
+            number(runs.results),
+            number(runs.extractions),
+            number(runs.batches)
+        ),
+    );
+    out.push('\n');
+    let product = account.product_kg > 0.0;
+    let mut grid = Grid::new(40, 10);
+    let mut head = ["", "per result", "per batch", "per month", "per year"].map(str::to_owned).to_vec();
+    if product {
+        head.push("per kg product".to_owned());
+    }
+    grid.row(head);
+    for group in Group::ALL {
+        let rows: Vec<_> = figures(account).filter(|(f, _)| f.group == group).collect();
+        if rows.is_empty() {
+            continue;
+        }
+        grid.heading(group.title());
+        for (figure, a_year) in rows {
+            let mut cells = vec![format!("  {}", visible(&figure.title))];
+            if figure.measure.extensive() {
+                let per = [
+                    account.per_result(a_year),
+                    account.per_batch(a_year),
+                    a_year / super::row::MONTHS,
+                    a_year,
+                ];
+                cells.extend(per.map(|value| amount(value, figure.measure)));
+                cells.extend(account.per_kg_product(a_year).map(|value| amount(value, figure.measure)));
+            } else {
+                // A ratio holds for every unit of work; it stands once, in the last column.
+                cells.extend([String::new(), String::new(), String::new()]);
+                cells.push(amount(a_year, figure.measure));
+            }
+            grid.row(cells);
+        }
+    }
+    grid.print(out);
+    for refusal in &account.refusals {
+        paragraph(out, "  ", &format!("Not given: {}: {}.", refusal.metrics, refusal.reason));
+    }
+    hazards(out, account);
+    if !route.assumptions.is_empty() {
+        out.push_str("Assumed, because the plan does not say\n");
+        for a in &route.assumptions {
+            let text = format!("{}: {} ({}); {}", a.label, a.value, a.source.cite, a.path);
+            paragraph(out, "  ", &text);
+        }
+    }
+    if !account.cautions.is_empty() {
+        out.push_str("Cautions; local codes and licensed practice decide\n");
+        for caution in &account.cautions {
+            paragraph(out, "  ", caution.text);
+        }
+    }
+    paragraph(
+        out,
+        "",
+        &format!("The book closes to {} of the mass that came in.", significant(account.closure.abs(), 2)),
+    );
+}
+
+fn hazards(out: &mut String, account: &RouteAccount) {
+    let hazard = &account.hazard;
+    out.push_str("Hazard; it replaces no safety data sheet and no risk assessment\n");
+    for m in &hazard.materials {
+        let pictograms: Vec<&str> = m.label.pictograms.iter().map(|p| p.code()).collect();
+        let mut text = format!("{}: ", m.name);
+        if m.source.is_empty() {
+            text.push_str("nothing is known of its hazards");
+        } else if m.statements.is_empty() {
+            text.push_str("no hazard statement");
+        } else {
+            text.push_str(&format!(
+                "{}, {}; {}",
+                m.label.signal_word.word(),
+                pictograms.join(" "),
+                m.statements.join(" ")
+            ));
+        }
+        match &m.chem21 {
+            Some(Ok(a)) => text.push_str(&format!(
+                "; CHEM21 safety {}, health {}, environment {}: {}",
+                a.safety.value,
+                a.health.value,
+                a.environment.value,
+                a.ranking.word()
+            )),
+            Some(Err(why)) => text.push_str(&format!("; no CHEM21 score: {why}")),
+            None => {}
+        }
+        paragraph(out, "  ", &text);
+    }
+    match &hazard.eco_scale {
+        Ok(eco) => {
+            paragraph(
+                out,
+                "  ",
+                &format!("Analytical Eco-Scale: {} of 100, {}", eco.score, eco.verdict.word()),
+            );
+            for line in eco.lines.iter().filter(|l| l.penalty > 0) {
+                let of = if line.amount.is_empty() { String::new() } else { format!(", {}", line.amount) };
+                paragraph(out, "    ", &format!("-{}  {}{of}: {}", line.penalty, line.what, line.why));
+            }
+        }
+        Err(why) => paragraph(out, "  ", &format!("Analytical Eco-Scale: not scored, {why}")),
+    }
+    for rule in &hazard.nemi {
+        paragraph(out, "  ", &format!("NEMI, {}: {} ({})", rule.rule, rule.met.word(), rule.why));
+    }
+    if !hazard.not_scored.is_empty() {
+        let names = hazard.not_scored.join(", ");
+        paragraph(
+            out,
+            "  ",
+            &format!("Reaches air or drain without a score, not in the weighted mass: {names}"),
+        );
+    }
+}
+
+fn compared(out: &mut String, account: &Account, workload: usize, work: &WorkloadProgram, c: &Comparison) {
+    if c.routes.is_empty() {
+        paragraph(out, "", "There is no other route to set beside the present one.");
+    }
+    for beside in &c.routes {
+        out.push('\n');
+        finding(out, beside);
+    }
+    let Some(accounts) = account.workloads.get(workload) else { return };
+    let Some(Some(present)) = accounts.routes.get(c.present) else { return };
+    let others: Vec<_> = c.routes.iter().collect();
+    let blocks: Vec<&[&RouteComparison]> =
+        if others.is_empty() { vec![&[]] } else { others.chunks(ROUTES_ABREAST).collect() };
+    for block in blocks {
+        out.push('\n');
+        side_by_side(out, work, present, c.present, block);
+    }
+    out.push_str(
+        "× is the ratio to the present route; `account` shows each material and each unit of work.\n",
+    );
+}
+
+/// The finding with the postings that make it, and what speaks against equal work.
+fn finding(out: &mut String, beside: &RouteComparison) {
+    paragraph(out, "", &beside.finding);
+    for (id, name) in HEADLINES {
+        let Some(d) = beside.differences.iter().find(|d| d.id == id) else { continue };
+        let causes: Vec<String> = d
+            .causes
+            .iter()
+            .take(3)
+            .map(|c| format!("{} ({})", signed(c.change, d.measure), c.what))
+            .collect();
+        if !causes.is_empty() {
+            paragraph(out, "  ", &format!("{name}: {}", causes.join(", ")));
+        }
+    }
+    for doubt in &beside.doubts {
+        paragraph(out, "  Doubt: ", doubt);
+    }
+}
+
+fn signed(value: f64, measure: Measure) -> String {
+    let sign = if value < 0.0 { "−" } else { "+" };
+    format!("{sign}{}", amount(value.abs(), measure))
+}
+
+fn side_by_side(
+    out: &mut String,
+    work: &WorkloadProgram,
+    present: &RouteAccount,
+    present_index: usize,
+    others: &[&RouteComparison],
+) {
+    let name = |i: usize| work.routes.get(i).map_or(String::new(), |r| short(&r.name));
+    let mut grid = Grid::new(38, 8);
+    let mut head = vec!["A year".to_owned(), name(present_index)];
+    let mut under = vec![String::new(), "present".to_owned()];
+    for other in others {
+        head.extend([name(other.route), String::new()]);
+        under.extend([String::new(), String::new()]);
+    }
+    grid.row(head);
+    grid.row(under);
+    for group in Group::ALL {
+        let rows = union(present, others).into_iter().filter(|r| r.0 == group && !is_detail(&r.1.id));
+        let mut titled = false;
+        for (_, row) in rows {
+            if !titled {
+                grid.heading(group.title());
+                titled = true;
+            }
+            let shown = |v: Option<f64>| v.map_or_else(|| "not given".to_owned(), |v| amount(v, row.measure));
+            let mut cells = vec![format!("  {}", visible(&row.title)), shown(row.present)];
+            for other in others {
+                let difference = other.differences.iter().find(|d| d.id == row.id);
+                // A figure that neither this route nor the present one has is zero on both.
+                let zero = row.measure.extensive().then_some(0.0);
+                cells.push(shown(difference.map_or(zero, |d| d.other)));
+                let ratio = difference.and_then(|d| d.ratio);
+                cells.push(ratio.map_or_else(String::new, |r| format!("×{}", significant(r, 3))));
+            }
+            grid.row(cells);
+        }
+    }
+    grid.print(out);
+}
+
+/// One line of the table: what all routes share of a figure.
+struct Shared {
+    id: String,
+    title: String,
+    measure: Measure,
+    present: Option<f64>,
+}
+
+/// Every figure that the present route or one of the others has.
+fn union(present: &RouteAccount, others: &[&RouteComparison]) -> Vec<(Group, Shared)> {
+    let mut out: Vec<(Group, Shared)> = Vec::new();
+    for (figure, value) in figures(present) {
+        let (id, title, measure) = (figure.id.clone(), figure.title.clone(), figure.measure);
+        out.push((figure.group, Shared { id, title, measure, present: Some(value) }));
+    }
+    for d in others.iter().flat_map(|o| &o.differences) {
+        if !out.iter().any(|(_, row)| row.id == d.id) {
+            out.push((group_of(d), shared(d)));
+        }
+    }
+    out
+}
+
+fn shared(d: &Difference) -> Shared {
+    Shared { id: d.id.clone(), title: d.title.clone(), measure: d.measure, present: d.present }
+}
+
+/// The account of a figure that only the other route has: the first word of its id says it.
+fn group_of(d: &Difference) -> Group {
+    match d.id.split('.').next().unwrap_or_default() {
+        "waste" => Group::Waste,
+        "co2" => Group::CarbonDioxide,
+        "input" | "metric" => Group::Metric,
+        "hazard" => Group::Hazard,
+        "energy" => Group::Energy,
+        _ => Group::Mass,
+    }
+}
+
+/// A name of a route, short enough for a column.
+fn short(name: &str) -> String {
+    const LONGEST: usize = 18;
+    let name = visible(name);
+    match name.char_indices().nth(LONGEST) {
+        Some((end, _)) => format!("{}…", name.get(..end).unwrap_or_default().trim_end()),
+        None => name,
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::account::account_text;
+    use crate::example::EXAMPLES;
+
+    #[test]
+    fn lines_are_not_endless_and_nothing_steers_the_terminal() {
+        let hostile = EXAMPLES[0].text.replacen("\"title\": \"", "\"title\": \"\\u001b[2J\\u202e", 1);
+        let account = account_text(&hostile);
+        for text in [account_table(&account), comparison_table(&account)] {
+            assert!(text.starts_with("\\u{1b}[2J\\u{202e}"));
+            assert!(!text.chars().any(|c| c != '\n' && super::super::words::hidden(c)));
+            for line in text.lines() {
+                assert!(line.chars().count() <= 130, "{line}");
+            }
+        }
+    }
+
+    #[test]
+    fn the_group_of_a_figure_follows_from_its_id() {
+        for example in EXAMPLES {
+            let account = account_text(example.text);
+            for route in account.workloads.iter().flat_map(|w| &w.routes).flatten() {
+                for (figure, value) in figures(route) {
+                    let d = Difference {
+                        id: figure.id.clone(),
+                        title: String::new(),
+                        measure: figure.measure,
+                        present: Some(value),
+                        other: None,
+                        change: None,
+                        ratio: None,
+                        causes: Vec::new(),
+                    };
+                    assert_eq!(group_of(&d), figure.group, "{}", figure.id);
+                }
+            }
+        }
+    }
+
+    #[test]
+    fn routes_stand_side_by_side_under_their_names() {
+        let text = comparison_table(&account_text(EXAMPLES[0].text));
+        let head = text.lines().find(|l| l.starts_with("A year")).unwrap();
+        let line = text.lines().find(|l| l.starts_with("  all waste streams: mass")).unwrap();
+        assert!(head.split_whitespace().count() >= 4, "{head}");
+        assert!(line.contains('×'), "{line}");
+    }
+}
