@@ -1,4 +1,5 @@
-// The last part of the page's one script; before it stand PAYLOAD (the program, gzip in 85 signs) and `wasm_bindgen`.
+// The last part of the page's one script; before it stand UNPACKER, SIZE and PAYLOAD (see web/pack/src/packing.rs) and
+// `wasm_bindgen`.
 // With a document it starts the page; without one (a test that computes) it only makes `account` ready.
 // The functions below are called by the program, through src/browser.rs.
 
@@ -156,28 +157,46 @@ function focusOn(id) {
   target.focus();
 }
 
-// Five of 85 signs for every four bytes; see web/pack/src/shell.rs.
-function decode(packed) {
-  const start = packed.indexOf(":") + 1;
-  const bytes = new Uint8Array(Number.parseInt(packed, 10));
-  for (let i = start, at = 0; i < packed.length; i += 5, at += 4) {
-    let word = 0;
-    for (let j = 0; j < 5; j += 1) {
-      const code = packed.charCodeAt(i + j);
-      word = word * 85 + (code === 120 ? 60 : code === 121 ? 92 : code) - 35;
+// Two of 91 signs for every thirteen bits; see web/pack/src/packing.rs.
+function bytesOf(signs) {
+  const bytes = new Uint8Array(Number.parseInt(signs, 10));
+  const value = (i) => {
+    const code = signs.charCodeAt(i);
+    return (code === 33 ? 60 : code === 126 ? 92 : code) - 35;
+  };
+  let held = 0;
+  let bits = 0;
+  let at = 0;
+  for (let i = signs.indexOf(":") + 1; i < signs.length; i += 2) {
+    held |= (value(i) + value(i + 1) * 91) << bits;
+    bits += 13;
+    while (bits >= 8 && at < bytes.length) {
+      bytes[at] = held;
+      at += 1;
+      held >>>= 8;
+      bits -= 8;
     }
-    for (let j = 0; j < 4 && at + j < bytes.length; j += 1) bytes[at + j] = word >>> (24 - 8 * j);
   }
   return bytes;
 }
 
+async function unpacked() {
+  const packed = bytesOf(PAYLOAD);
+  const from = 65536;
+  const to = from + packed.length;
+  const memory = new WebAssembly.Memory({ initial: Math.ceil((to + SIZE) / 65536) });
+  new Uint16Array(memory.buffer, 0, 7164).fill(1024);
+  new Uint8Array(memory.buffer, from).set(packed);
+  const { instance } = await WebAssembly.instantiate(bytesOf(UNPACKER), { "": { memory } });
+  instance.exports.unpack(from, to, SIZE);
+  return new Uint8Array(memory.buffer, to, SIZE);
+}
+
 async function load() {
-  if (typeof WebAssembly !== "object" || typeof DecompressionStream !== "function") {
-    throw new Error("this browser lacks WebAssembly or DecompressionStream. A current browser has both");
+  if (typeof WebAssembly !== "object") {
+    throw new Error("this browser lacks WebAssembly. A current browser has it");
   }
-  const packed = new Blob([decode(PAYLOAD)]).stream();
-  const program = new Response(packed.pipeThrough(new DecompressionStream("gzip")));
-  wasm_bindgen.initSync({ module: await WebAssembly.compile(await program.arrayBuffer()) });
+  wasm_bindgen.initSync({ module: await WebAssembly.compile(await unpacked()) });
   return { account: wasm_bindgen.account };
 }
 

@@ -101,10 +101,10 @@ test("without JavaScript the page says that it needs it", async () => {
 test("a browser that cannot unpack the program is told so", async () => {
   const { page, close } = await openRaw(browser, packed, {
     prepare: () => {
-      delete globalThis.DecompressionStream;
+      delete globalThis.WebAssembly;
     },
   });
   await page.locator("#boot").waitFor({ timeout: 5_000 });
-  assert.match(await page.locator("#boot").innerText(), /could not start.*DecompressionStream/);
+  assert.match(await page.locator("#boot").innerText(), /could not start.*lacks WebAssembly/);
   await close();
 });

@@ -1,10 +1,9 @@
 //! The shell and what is inlined into it: pure functions from text to text.
+use crate::packing::{pack, signs, unpacker};
 use anyhow::{Result, ensure};
 use base64::Engine;
 use base64::engine::general_purpose::STANDARD as BASE64;
-use flate2::{Compression, GzBuilder};
 use sha2::{Digest, Sha256};
-use std::io::Write;
 
 /// The element of the shell that loads the script from its folder.
 const SCRIPT_START: &str = r#"<script src="web/dist/page.js""#;
@@ -30,39 +29,31 @@ pub(crate) fn with_imports(styles: &str, read: impl Fn(&str) -> Result<String>) 
     Ok(out)
 }
 
-/// The bytes in 85 signs that stand for themselves in a script: five for every four bytes, a fifth less than base64 adds.
-/// The signs from '#' on, with 'x' for '<' and 'y' for the backslash. The last group is filled up with zeros; what is
-/// too much is a gzip reader's to leave alone, so the length stands before.
-fn base85(bytes: &[u8]) -> String {
-    let mut out = format!("{}:", bytes.len());
-    for group in bytes.chunks(4) {
-        let mut word = 0_u32;
-        for i in 0..4 {
-            word = word << 8 | u32::from(group.get(i).copied().unwrap_or(0));
-        }
-        for power in [85_u32.pow(4), 85_u32.pow(3), 85 * 85, 85, 1] {
-            out.push(match b'#' + u8::try_from(word / power % 85).unwrap_or(0) {
-                b'<' => 'x',
-                b'\\' => 'y',
-                sign => char::from(sign),
-            });
+/// A script or a style sheet without the lines that are comments and without indentation: the reader of the source has
+/// the source.
+pub(crate) fn lean(text: &str) -> String {
+    let mut out = String::new();
+    let mut comment = false;
+    for line in text.lines().map(str::trim) {
+        let opens = line.starts_with("/*");
+        let skipped = comment || opens || line.is_empty() || line.starts_with("//");
+        comment = (comment || opens) && !line.ends_with("*/");
+        if !skipped {
+            out.push_str(line);
+            out.push('\n');
         }
     }
     out
 }
 
-/// Gzip without a time stamp, so that the same bytes give the same bytes.
-pub(crate) fn gzip(bytes: &[u8]) -> Result<Vec<u8>> {
-    let mut encoder = GzBuilder::new().mtime(0).write(Vec::new(), Compression::best());
-    encoder.write_all(bytes)?;
-    Ok(encoder.finish()?)
-}
-
 /// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
-pub(crate) fn script(packed: &[u8], glue: &str, boot: &str) -> Result<String> {
-    let payload = base85(packed);
-    let script =
-        format!("(function () {{\n\"use strict\";\nconst PAYLOAD = \"{payload}\";\n{glue}\n{boot}}})();\n");
+pub(crate) fn script(program: &[u8], glue: &str, boot: &str) -> Result<String> {
+    let (packed, unpacker) = (signs(&pack(program)?), signs(&unpacker()?));
+    let script = format!(
+        "(function () {{\n\"use strict\";\nconst UNPACKER = \"{unpacker}\";\nconst SIZE = {};\n\
+         const PAYLOAD = \"{packed}\";\n{glue}\n{boot}}})();\n",
+        program.len()
+    );
     for (name, text) in [("glue", glue), ("start", boot)] {
         let text = text.to_ascii_lowercase();
         for bad in ["</script", "<script", "<!--"] {
@@ -154,10 +145,20 @@ mod tests {
     }
 
     #[test]
-    fn gzip_gives_the_same_bytes_and_carries_no_time() {
-        let packed = gzip(b"the same").expect("packed");
-        assert_eq!(packed, gzip(b"the same").expect("packed"));
-        // RFC 1952, 2.3.1: bytes 4 to 7 are the time of modification, 0 when there is none.
-        assert_eq!(packed[4..8], [0; 4]);
+    fn what_is_for_the_reader_of_the_source_is_left_out() {
+        assert_eq!(
+            lean("// a\n\n  let b = 1; // c\n/* d\n   e */\n  /** f */\nlet g = \"/*\";\n"),
+            "let b = 1; // c\nlet g = \"/*\";\n"
+        );
+    }
+
+    #[test]
+    fn a_sheet_that_is_imported_stands_in_its_place() {
+        let read = |name: &str| Ok(format!("/* {name} */\n"));
+        assert_eq!(
+            with_imports("a {}\n@import \"b.css\";\nc {}\n", read).expect("styles"),
+            "a {}\n/* b.css */\nc {}\n"
+        );
+        assert!(with_imports("a {} @import \"b.css\";", read).is_err());
     }
 }
