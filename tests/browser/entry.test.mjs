@@ -159,13 +159,15 @@ test("nothing moves while someone types, right or wrong", async () => {
     const where = () => page.evaluate(() => {
       const label = document.activeElement.closest(".field");
       const next = label.nextElementSibling.getBoundingClientRect();
-      return [document.activeElement.getBoundingClientRect().top, next.top].map(Math.round);
+      return [document.activeElement.getBoundingClientRect().top, next.top];
     });
     await charge(page).press("End");
     const start = await where();
     for (const key of ["Backspace", "Backspace", "Backspace", "Backspace", "Backspace", "Backspace", "2", "5", "0", " ", "m", "L", " ", "±", " ", "5", " ", "m", "L"]) {
       await (key.length === 1 ? page.keyboard.insertText(key) : page.keyboard.press(key));
-      assert.deepEqual(await where(), start, `after ${key} at ${viewport.width}`);
+      const now = await where();
+      // Less than a pixel is the rounding of a line's height.
+      assert.ok(now.every((y, i) => Math.abs(y - start[i]) <= 1), `after ${key} at ${viewport.width}: ${start} became ${now}`);
     }
     await close();
   }

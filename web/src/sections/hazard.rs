@@ -5,7 +5,7 @@ use super::places::{lines, sentence_case};
 use crate::parts::Sheet;
 use thimbleworth::account::{Group, HazardAccount, MaterialHazard};
 use thimbleworth::hazard::chem21::{Assessment, Score};
-use thimbleworth::material::catalogue;
+use thimbleworth::material::{catalogue, statement_text};
 use yew::prelude::*;
 
 pub(super) fn draw(view: &View) -> Html {
@@ -63,6 +63,13 @@ fn material(material: &MaterialHazard) -> Html {
             <summary>{ &material.name }{ ": " }{ &statements }
                 if !words.is_empty() { { format!(" ({})", words.join(", ")) } }
             </summary>
+            if !material.statements.is_empty() {
+                <ul>
+                    { for material.statements.iter().map(|code| html! {
+                        <li>{ code }{ statement_text(code).map_or(String::new(), |text| format!(": {text}")) }</li>
+                    }) }
+                </ul>
+            }
             <dl>
                 if !material.source.is_empty() {
                     <dt>{ "Statements from" }</dt>
