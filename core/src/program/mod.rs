@@ -1,6 +1,7 @@
 //! The plan compiled once: names resolved, amounts read, every number that a route rests on in a slot. The single traced
 //! run and the many sampled ones run the same steps over the same slots.
 
+mod amounts;
 mod asked;
 mod book;
 mod materials;
