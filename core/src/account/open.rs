@@ -94,9 +94,12 @@ pub fn account_text(text: &str) -> Account {
     let opened = open(text);
     let usable = opened.usable();
     let mut problems = opened.problems;
-    let mut account = match &opened.plan {
+    let mut account = match opened.plan {
         // A plan with errors of shape is resolved all the same, so that errors of meaning are told with them.
-        Some(plan) => self::account(plan),
+        Some(plan) => {
+            let (program, workloads, problems) = drawn_up(&plan);
+            Account { plan: Some(plan), program, workloads, problems }
+        }
         None => Account { plan: None, program: None, workloads: Vec::new(), problems: Vec::new() },
     };
     if !usable {
@@ -115,6 +118,11 @@ pub fn account_text(text: &str) -> Account {
 /// Accounts for every route of a plan.
 #[must_use]
 pub fn account(plan: &Plan) -> Account {
+    let (program, workloads, problems) = drawn_up(plan);
+    Account { plan: Some(plan.clone()), program, workloads, problems }
+}
+
+fn drawn_up(plan: &Plan) -> (Option<Program>, Vec<WorkloadAccount>, Vec<Problem>) {
     let resolved = resolve(plan);
     let mut problems = resolved.problems;
     let mut workloads = Vec::new();
@@ -126,7 +134,7 @@ pub fn account(plan: &Plan) -> Account {
         }
     }
     sort(&mut problems);
-    Account { plan: Some(plan.clone()), program: resolved.program, workloads, problems }
+    (resolved.program, workloads, problems)
 }
 
 /// Worst first; among equals in the order of the document.
@@ -152,7 +160,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     energy::draw_up(&mut draft, &desk);
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
-    let figures = draft.kept_to(&trace);
+    let figures = draft.kept_to(&trace, &desk.cells);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
     let mut product_kg = 0.0;

@@ -110,7 +110,12 @@ fn beside(
             },
         });
     }
-    let judged = finding::judge(&old.name, &new.name, &differences);
+    let judged = finding::judge(
+        &old.name,
+        &new.name,
+        &differences,
+        old.uncounted.is_empty() && new.uncounted.is_empty(),
+    );
     RouteComparison {
         route,
         differences,
@@ -181,6 +186,18 @@ fn doubts(old: &RouteProgram, new: &RouteProgram) -> Vec<String> {
     for route in [old, new] {
         if route.recovery.is_none() {
             out.push(format!("nothing says what recovery {} reaches", route.name));
+        }
+    }
+    for route in [old, new] {
+        if let Some(first) = route.uncounted.first() {
+            let more = match route.uncounted.len() {
+                1 => String::new(),
+                n => format!(" and {} more", n - 1),
+            };
+            out.push(format!(
+                "electricity is not compared: {} gives no power at {first}{more}, so nothing is counted there",
+                route.name
+            ));
         }
     }
     let taken_kg = |route: &RouteProgram| {

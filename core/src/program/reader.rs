@@ -7,7 +7,7 @@ use super::resolve::RouteBuilder;
 use crate::chance::In;
 use crate::ledger::{Material, Measured, Place};
 use crate::plan::{Field, Problem, Step as StepDoc, below, nearest};
-use crate::quantity::{Amount, Entry, Kind, Origin, ShareBy, Spread, read, read_entry, show};
+use crate::quantity::{Amount, Entry, Kind, Origin, ShareBy, Spread, show};
 use crate::step::{Control, Mixture, Need, Param, Part, Poured, Technique};
 
 /// At most so many materials in one mixture.
@@ -124,7 +124,7 @@ impl<'r, 'p> Reader<'r, 'p> {
             Found::Default(text) => (text.to_owned(), Origin::Assumed),
             Found::Nothing => return None,
         };
-        let amount = match read_entry(&text, kind) {
+        let amount = match self.route.amounts.entry(&text, kind) {
             Ok(Entry::Known(amount)) => amount,
             Ok(Entry::NotKnown) => {
                 let Need::Default(default, source) = p.need else {
@@ -141,7 +141,7 @@ impl<'r, 'p> Reader<'r, 'p> {
                 origin = Origin::NotKnown;
                 let path = self.at(p.key);
                 self.route.assume(path, p.label, default, source);
-                read(default, kind).ok()?
+                self.route.amounts.read(default, kind).ok()?
             }
             Err(e) => {
                 self.error(p.key, format!("\"{}\": {}", text, e.found()), e.need());
@@ -155,7 +155,6 @@ impl<'r, 'p> Reader<'r, 'p> {
 
     fn bounds(&mut self, p: &'static Param, kind: Kind, amount: &Amount) {
         let (low, high) = reach(amount);
-        let path = self.at(p.key);
         let limits = |(a, b): (f64, f64)| match (a.is_finite(), b.is_finite()) {
             (true, true) => format!("between {} and {}", show(a, kind), show(b, kind)),
             (true, false) => format!("at least {}", show(a, kind)),
@@ -164,12 +163,23 @@ impl<'r, 'p> Reader<'r, 'p> {
         };
         if low < p.physical.0 || high > p.physical.1 {
             let found = format!("{} is outside what is possible", amount.understood());
-            self.route.problems.push(Problem::error(path, found, limits(p.physical)));
+            self.error(p.key, found, limits(p.physical));
         } else if amount.central_si < p.usual.0 || amount.central_si > p.usual.1 {
             let found = format!("{} is unusual for {}", amount.understood(), p.label.to_lowercase());
             let need = format!("{} is usual ({}); leave it if it is right", limits(p.usual), p.source.cite);
-            self.route.problems.push(Problem::warning(path, found, need));
+            self.doubt(p.key, found, need);
         }
+    }
+
+    /// A power that may be left out: then the route remembers that this step's electricity is not counted, so that no
+    /// comparison takes nothing stated for nothing used.
+    pub fn power(&mut self, p: &'static Param) -> Option<In> {
+        let power = self.optional(p);
+        if power.is_none() {
+            let path = self.at(p.key);
+            self.route.uncounted.push(path);
+        }
+        power
     }
 
     /// A whole number.
@@ -296,7 +306,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         let (mut parts, mut by, mut sum, mut whole) = (Vec::new(), None, 0.0, true);
         for (name, share) in rows {
             let row = below(&path, name);
-            let amount = read(share.unwrap_or("100 %"), Kind::Fraction);
+            let amount = self.route.amounts.read(share.unwrap_or("100 %"), Kind::Fraction);
             let amount = match amount {
                 Ok(amount) => amount,
                 Err(e) => {
@@ -363,7 +373,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         for (name, text) in rows {
             let row = below(&path, name);
             let material = self.route.material(name, &row);
-            match read(text, kind) {
+            match self.route.amounts.read(text, kind) {
                 Ok(amount) => {
                     let (low, high) = reach(&amount);
                     if low < p.physical.0 || high > p.physical.1 {
@@ -559,7 +569,10 @@ impl<'r, 'p> Reader<'r, 'p> {
                 ));
                 continue;
             }
-            measured[index] = match (read(text, Kind::Mass), read(text, Kind::Fraction)) {
+            let mass = self.route.amounts.read(text, Kind::Mass);
+            let share =
+                if mass.is_ok() { mass.clone() } else { self.route.amounts.read(text, Kind::Fraction) };
+            measured[index] = match (mass, share) {
                 (Ok(amount), _) => Some(Measured::Mass(self.route.input(path, &amount, Origin::Measured))),
                 (_, Ok(amount)) => Some(Measured::Share(self.route.input(path, &amount, Origin::Measured))),
                 (Err(as_mass), Err(as_share)) => {

@@ -1,5 +1,6 @@
 //! From the document to a program: every name resolved, every amount read, every problem found.
 
+use super::amounts::Amounts;
 use super::materials::{MaterialBook, MaterialUse};
 use super::reader::Reader;
 use super::{
@@ -42,6 +43,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
             "at least one workload with a route",
         ));
     }
+    let mut amounts = Amounts::default();
     let mut workloads = Vec::new();
     for (i, workload) in plan.workloads.iter().enumerate() {
         let path = format!("workloads[{i}]");
@@ -55,7 +57,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
         let mut routes = Vec::new();
         for (j, route) in workload.routes.iter().enumerate() {
             let permit = plan.site.drain_permit.is_some();
-            let mut builder = RouteBuilder::new(&mut book, &site, permit, &mut problems);
+            let mut builder = RouteBuilder::new(&mut book, &mut amounts, &site, permit, &mut problems);
             let at = format!("{path}.routes[{j}]");
             builder.name_paths((&path, &workload.name), (&at, &route.name));
             routes.push(builder.build(workload, route, &path, &at));
@@ -252,6 +254,7 @@ fn own_places<'a>() -> impl Iterator<Item = &'a str> {
 /// What a route is built from while its steps read themselves.
 pub(super) struct RouteBuilder<'p> {
     book: &'p mut MaterialBook,
+    pub(super) amounts: &'p mut Amounts,
     site: &'p SiteUse,
     permit: bool,
     pub(super) problems: &'p mut Vec<Problem>,
@@ -262,17 +265,21 @@ pub(super) struct RouteBuilder<'p> {
     assumptions: Vec<Assumption>,
     /// Paths of the route and of its workload, each with the key of its name.
     named: [(String, u64); 2],
+    /// Where a power could be given and is not.
+    pub(super) uncounted: Vec<String>,
 }
 
 impl<'p> RouteBuilder<'p> {
     pub(super) fn new(
         book: &'p mut MaterialBook,
+        amounts: &'p mut Amounts,
         site: &'p SiteUse,
         permit: bool,
         problems: &'p mut Vec<Problem>,
     ) -> Self {
         Self {
             book,
+            amounts,
             site,
             permit,
             problems,
@@ -281,6 +288,7 @@ impl<'p> RouteBuilder<'p> {
             materials: Vec::new(),
             densities: Vec::new(),
             assumptions: Vec::new(),
+            uncounted: Vec::new(),
             named: Default::default(),
         }
     }
@@ -536,12 +544,13 @@ impl<'p> RouteBuilder<'p> {
             equivalence: doc.equivalence.clone(),
             ph,
             assumptions: self.assumptions,
+            uncounted: self.uncounted,
             streams: self.site.streams.len(),
         }
     }
 
     fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
-        match read(text?, kind) {
+        match self.amounts.read(text?, kind) {
             Ok(amount) => Some(self.input(path.to_owned(), &amount, Origin::Entered)),
             Err(e) => {
                 let found = format!("\"{}\": {}", text.unwrap_or_default(), e.found());
@@ -596,7 +605,7 @@ impl<'p> RouteBuilder<'p> {
                 return In(0);
             }
         };
-        match read(text, Kind::Number) {
+        match self.amounts.read(text, Kind::Number) {
             Ok(amount) if amount.central_si >= least => self.input(path.to_owned(), &amount, Origin::Entered),
             Ok(amount) => {
                 self.problems.push(Problem::error(
@@ -622,7 +631,9 @@ impl<'p> RouteBuilder<'p> {
         for (name, text) in rows {
             let at = below(&path, name);
             let Some(material) = self.material(name, &at) else { continue };
-            match (read(text, Kind::Mass), read(text, Kind::Volume)) {
+            let mass = self.amounts.read(text, Kind::Mass);
+            let volume = if mass.is_ok() { mass.clone() } else { self.amounts.read(text, Kind::Volume) };
+            match (mass, volume) {
                 (Ok(mass), _) => out.push((material, self.input(at, &mass, Origin::Entered))),
                 (Err(_), Ok(volume)) => {
                     match self.density(material).and_then(|d| self.inputs.get(d.0 as usize)) {

@@ -54,9 +54,9 @@ const TIME: Param = Param::quantity("time", "Time", Kind::Time)
     .source(COMMON_PRACTICE);
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e6)
-    .usual(100.0, 3000.0)
+    .usual(0.0, 3000.0)
     .with("time")
-    .hint("Bath, rotation, pump and chiller on average; left out, no electricity is counted.")
+    .hint("Bath, rotation, pump and chiller on average; \"0 W\" for an unheated stream; left out, electricity is not compared.")
     .source(FROM_MEMORY);
 
 const EVAPORATED: RuleIx = RuleIx(0);
@@ -135,7 +135,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         gas,
         lost_to,
         time,
-        power: r.optional(&POWER),
+        power: r.power(&POWER),
     })
 }
 

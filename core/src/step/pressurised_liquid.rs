@@ -139,7 +139,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             used: r.optional(&USED),
             dispersant: dispersant.zip(mass),
             time: r.optional(&TIME),
-            power: r.optional(&POWER),
+            power: r.power(&POWER),
             extracts: r.per_material(&EXTRACTS),
             loss: r.quantity(&LOSS),
             lost_to: r.place(&LOST_TO),

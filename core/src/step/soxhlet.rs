@@ -86,7 +86,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             solvent: r.mixture(&SOLVENT),
             charge: r.quantity(&CHARGE),
             time: r.quantity(&TIME),
-            heater: r.optional(&HEATER),
+            heater: r.power(&HEATER),
             cooling_water: r.optional(&COOLING_WATER),
             extracts: r.per_material(&EXTRACTS),
             loss: r.quantity(&LOSS),

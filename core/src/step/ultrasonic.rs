@@ -88,7 +88,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             charge: r.quantity(&CHARGE),
             portions: r.count(&PORTIONS),
             time: r.optional(&TIME),
-            power: r.optional(&POWER),
+            power: r.power(&POWER),
             extracts: r.per_material(&EXTRACTS),
             loss: r.quantity(&LOSS),
             lost_to: r.place(&LOST_TO),

@@ -176,7 +176,7 @@ struct Supercritical {
 
 fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     let recycled = r.choice(&CIRCUIT) == RECYCLED;
-    let (power, run_time) = (r.optional(&POWER), r.optional(&RUN_TIME));
+    let (power, run_time) = (r.power(&POWER), r.optional(&RUN_TIME));
     Box::new(Supercritical {
         co2: r.known("carbon dioxide").unwrap_or(Material(0)),
         temperature: r.quantity(&TEMPERATURE),
