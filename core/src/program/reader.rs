@@ -74,7 +74,7 @@ impl<'r, 'p> Reader<'r, 'p> {
                 Some(Control::Choice(words)) => words,
                 _ => values,
             };
-            if !values.contains(&word) && !(word.is_empty() || choices.contains(&word)) {
+            if !(values.contains(&word) || word.is_empty() || choices.contains(&word)) {
                 return Some(Idle::Unclear);
             }
             if !values.contains(&word) {
