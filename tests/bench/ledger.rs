@@ -96,7 +96,7 @@ fn workload(name: &str, co2: &[bool]) -> Value {
         "feed": { "sediment": "3 g ± 1 %" }, "present": "route 0", "routes": routes })
 }
 
-fn plan(workloads: Vec<Value>) -> String {
+fn plan(workloads: &[Value]) -> String {
     json!({ "thimbleworth": 1, "title": "Time", "site": { "name": "Sandpiper Lock laboratory", "rules": "US", "as_of": "2026-12-01",
         "streams": [{ "name": "flammable", "container": "20 L" }, { "name": "solids", "holds": "solid", "container": "60 L" }] },
         "workloads": workloads })
@@ -178,8 +178,8 @@ fn main() {
     });
     println!("a yard is {yard_ns:.0} ns");
 
-    let bench = plan(vec![workload("bench", &[false; 4])]);
-    let co2 = plan(vec![workload("CO2", &[false, false, true, true])]);
+    let bench = plan(&[workload("bench", &[false; 4])]);
+    let co2 = plan(&[workload("CO2", &[false, false, true, true])]);
     draws("without CO2", &bench, Some(5e3), yard_ns);
     draws("two of four routes with CO2", &co2, None, yard_ns);
 
@@ -197,7 +197,8 @@ fn main() {
     );
 
     let names: Vec<String> = (0..1000).map(|i| format!("work {i}")).collect();
-    let site = plan(names.iter().map(|name| workload(name, &[false, false, false, true])).collect());
+    let site =
+        plan(&names.iter().map(|name| workload(name, &[false, false, false, true])).collect::<Vec<_>>());
     println!("a site of 1,000 workloads of 4 routes, {} bytes", site.len());
     line("  open", ns(|| drop(black_box(open(&site)))), None, yard_ns);
     // What is made is freed outside of the time: a command answers before it tidies up.

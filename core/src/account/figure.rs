@@ -92,6 +92,17 @@ pub enum Factor {
     Over(In),
 }
 
+impl Factor {
+    /// What to multiply with, where it is a number; 1 where it is a division.
+    const fn number(self) -> f64 {
+        match self {
+            Self::One | Self::Over(_) => 1.0,
+            Self::Minus => -1.0,
+            Self::Times(factor) => factor,
+        }
+    }
+}
+
 /// One cell of the book with its factor.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Term {
@@ -103,21 +114,21 @@ pub struct Term {
     pub material: Material,
     /// What the cell is multiplied with.
     pub factor: Factor,
-    /// Where the cell lies in the book of its route, once that is known.
-    cell: Option<u32>,
+    /// Where the cell lies in the book of its route, and the factor as a number, once that is known.
+    ready: Option<(u32, f64)>,
 }
 
 impl Term {
     /// What has come into a place.
     #[must_use]
     pub const fn into(place: Place, material: Material) -> Self {
-        Self { place, direction: Direction::Into, material, factor: Factor::One, cell: None }
+        Self { place, direction: Direction::Into, material, factor: Factor::One, ready: None }
     }
 
     /// What has gone out of a place.
     #[must_use]
     pub const fn out_of(place: Place, material: Material) -> Self {
-        Self { place, direction: Direction::OutOf, material, factor: Factor::One, cell: None }
+        Self { place, direction: Direction::OutOf, material, factor: Factor::One, ready: None }
     }
 
     /// The same cell with another factor.
@@ -203,7 +214,7 @@ impl Draft {
             if let How::Sum(terms) = &mut figure.how {
                 terms.retain_mut(|t| {
                     let cell = cells.cell(t.place, t.direction, t.material);
-                    t.cell = Some(cell);
+                    t.ready = Some((cell, t.factor.number()));
                     touched.get(cell as usize) == Some(&true)
                 });
             }
@@ -221,15 +232,16 @@ pub fn evaluate(figures: &[Figure], desk: &Desk, x: Draw<'_>, out: &mut [f64]) {
             How::Sum(terms) => {
                 let mut sum = 0.0;
                 for term in terms {
-                    let kg = match term.cell {
-                        Some(cell) => desk.cells.passed_at(cell),
-                        None => desk.cells.passed(term.place, term.direction, term.material),
+                    let (kg, number) = match term.ready {
+                        Some((cell, number)) => (desk.cells.passed_at(cell), number),
+                        None => (
+                            desk.cells.passed(term.place, term.direction, term.material),
+                            term.factor.number(),
+                        ),
                     };
                     sum += match term.factor {
-                        Factor::One => kg,
-                        Factor::Minus => -kg,
-                        Factor::Times(factor) => kg * factor,
                         Factor::Over(slot) => kg / x.get(slot),
+                        Factor::One | Factor::Minus | Factor::Times(_) => kg * number,
                     };
                 }
                 sum

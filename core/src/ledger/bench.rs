@@ -383,6 +383,15 @@ impl<'a> Bench<'a> {
         if kg > 0.0 { Ok(kg) } else { Err(Halt::Empty { place }) }
     }
 
+    /// Asks that nothing lies in a place.
+    ///
+    /// # Errors
+    /// [`Halt::Occupied`] when something does.
+    pub fn need_empty(&self, place: Place) -> Result<(), Halt> {
+        let left_kg = self.mass_kg(place);
+        if left_kg > 0.0 { Err(Halt::Occupied { place, left_kg }) } else { Ok(()) }
+    }
+
     /// Spends a utility; SI amount in this run.
     pub fn spend(&mut self, utility: Utility, amount_si: f64, rule: RuleIx) {
         self.spent[utility as usize] += amount_si * self.runs_a_year;

@@ -22,6 +22,14 @@ pub struct Reader<'r, 'p> {
     asked: Vec<&'static str>,
 }
 
+/// Why a parameter is not read.
+enum Idle {
+    /// It has a meaning elsewhere: where, and what would do.
+    Because(String, String),
+    /// What it hangs on is wrong itself.
+    Unclear,
+}
+
 enum Found<'p> {
     Written(&'p Field),
     Default(&'static str),
@@ -53,7 +61,7 @@ impl<'r, 'p> Reader<'r, 'p> {
     }
 
     /// Why a parameter is not to be read, where it has no meaning: where it would have one, and what would do.
-    fn idle(&self, p: &'static Param) -> Option<(String, String)> {
+    fn idle(&self, p: &'static Param) -> Option<Idle> {
         if let Some((on, values)) = p.shown_when {
             let declared = self.technique.params.iter().find(|q| q.key == on);
             let word = match (self.field(on), declared.map(|d| d.need)) {
@@ -61,16 +69,27 @@ impl<'r, 'p> Reader<'r, 'p> {
                 (None, Some(Need::Default(word, _))) => word,
                 _ => "",
             };
+            // A word that is no choice at all is told by itself; whether this would apply, nobody knows.
+            let choices = match declared.map(|d| d.control) {
+                Some(Control::Choice(words)) => words,
+                _ => values,
+            };
+            if !(values.contains(&word) || word.is_empty() || choices.contains(&word)) {
+                return Some(Idle::Unclear);
+            }
             if !values.contains(&word) {
                 let place = format!("only where {on} is {}", values.join(" or "));
-                return Some((place, format!("leave it out, or change {on}")));
+                return Some(Idle::Because(place, format!("leave it out, or change {on}")));
             }
         }
         if let Some(other) = p.with.filter(|other| self.field(other).is_none()) {
-            return Some((format!("only beside {other}"), format!("leave it out, or give {other}")));
+            return Some(Idle::Because(
+                format!("only beside {other}"),
+                format!("leave it out, or give {other}"),
+            ));
         }
         if let Some(other) = p.without.filter(|other| self.field(other).is_some()) {
-            return Some((
+            return Some(Idle::Because(
                 format!("only without {other}, which stands in its place"),
                 "one of the two".to_owned(),
             ));
@@ -81,8 +100,8 @@ impl<'r, 'p> Reader<'r, 'p> {
     fn find(&mut self, p: &'static Param) -> Found<'p> {
         self.asked.push(p.key);
         let written = self.field(p.key);
-        if let Some((meaning, need)) = self.idle(p) {
-            if written.is_some() {
+        if let Some(idle) = self.idle(p) {
+            if let (true, Idle::Because(meaning, need)) = (written.is_some(), idle) {
                 self.error(p.key, format!("{} is given, but it has a meaning {meaning}", p.key), need);
             }
             return Found::Nothing;
@@ -202,7 +221,7 @@ impl<'r, 'p> Reader<'r, 'p> {
                     if p.physical.0.is_finite() { p.physical.0 } else { 0.0 },
                     if p.physical.1.is_finite() { p.physical.1 } else { 1000.0 }
                 );
-                self.error(p.key, format!("\"{text}\""), need);
+                self.error(p.key, format!("{text} is not such a number"), need);
                 1
             }
         }
@@ -241,7 +260,8 @@ impl<'r, 'p> Reader<'r, 'p> {
         }
         let hint = nearest(text, words.iter().copied())
             .map_or(String::new(), |w| format!("; did you mean \"{w}\"?"));
-        self.error(p.key, format!("\"{text}\""), format!("one of: {}{hint}", words.join(", ")));
+        let need = format!("one of: {}{hint}", words.join(", "));
+        self.error(p.key, format!("\"{text}\" is none of the choices"), need);
         first
     }
 
@@ -340,6 +360,12 @@ impl<'r, 'p> Reader<'r, 'p> {
                 whole = false;
                 continue;
             };
+            if parts.iter().any(|p: &Part| p.material == material) {
+                let known = self.route.name_of(material).to_owned();
+                self.twice(row, name, &known);
+                whole = false;
+                continue;
+            }
             let origin = if share.is_some() { Origin::Entered } else { Origin::Computed };
             let share = self.route.input(row, &amount, origin);
             parts.push(Part { material, share, density });
@@ -382,6 +408,11 @@ impl<'r, 'p> Reader<'r, 'p> {
                             format!("between {} and {}", show(p.physical.0, kind), show(p.physical.1, kind));
                         self.route.problems.push(Problem::error(row, found, need));
                     } else if let Some(material) = material {
+                        if out.iter().any(|(m, _)| *m == material) {
+                            let known = self.route.name_of(material).to_owned();
+                            self.twice(row, name, &known);
+                            continue;
+                        }
                         let slot = self.route.input(row, &amount, Origin::Entered);
                         out.push((material, slot));
                     }
@@ -396,6 +427,35 @@ impl<'r, 'p> Reader<'r, 'p> {
             }
         }
         out
+    }
+
+    fn twice(&mut self, row: String, name: &str, known: &str) {
+        let found = if name == known {
+            format!("{known} is listed already, under another of its names")
+        } else {
+            format!("{name} is {known}, which is listed already")
+        };
+        self.route.problems.push(Problem::error(row, found, "each material once, with its whole amount"));
+    }
+
+    /// Materials of the feed with the share that is taken out of each.
+    pub fn taken_out(&mut self, p: &'static Param) -> Vec<(Material, In)> {
+        let rows = self.per_material(p);
+        for &(material, _) in &rows {
+            if !self.route.fed.contains(&material) {
+                let name = self.name_of(material).to_owned();
+                let fed: Vec<&str> = self.route.fed.iter().map(|m| self.route.name_of(*m)).collect();
+                let need = if fed.is_empty() {
+                    "a feed that holds it".to_owned()
+                } else {
+                    format!("a material of the feed ({}), or a feed that holds it", fed.join(", "))
+                };
+                let row = below(&self.at(p.key), &name);
+                let found = format!("the feed holds no {name}, so that none of it is taken out");
+                self.route.problems.push(Problem::warning(row, found, need));
+            }
+        }
+        rows
     }
 
     /// Materials with volumes, each with its density.
@@ -501,6 +561,12 @@ impl<'r, 'p> Reader<'r, 'p> {
         self.route.input(identity, &amount, Origin::Computed)
     }
 
+    /// Whether the step writes this key at all, rightly or wrongly.
+    #[must_use]
+    pub fn written(&self, key: &str) -> bool {
+        self.field(key).is_some()
+    }
+
     /// A problem at one of the step's own parameters.
     pub fn problem(&mut self, key: &str, found: impl Into<String>, need: impl Into<String>) {
         self.error(key, found, need);
@@ -524,8 +590,10 @@ impl<'r, 'p> Reader<'r, 'p> {
         for (key, _) in &doc.fields {
             if !self.technique.params.iter().any(|p| p.key == key) {
                 let known = self.technique.params.iter().map(|p| p.key);
-                let hint = nearest(key, known.clone())
-                    .map_or_else(|| known.collect::<Vec<_>>().join(", "), |k| format!("did you mean {k}?"));
+                let hint = nearest(key, known.clone()).map_or_else(
+                    || format!("one of: {}", known.collect::<Vec<_>>().join(", ")),
+                    |k| format!("did you mean {k}?"),
+                );
                 let found = format!("{} has no parameter \"{key}\"", self.technique.key);
                 self.error(key, found, hint);
             }

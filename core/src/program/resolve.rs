@@ -10,7 +10,7 @@ use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
 use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
-use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read};
+use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
 use crate::step::{TECHNIQUES, technique};
 use std::collections::BTreeMap;
@@ -101,6 +101,13 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         "site.bench_temperature",
         problems,
     );
+    if !(278.15..=313.15).contains(&bench_temperature_k) {
+        problems.push(Problem::warning(
+            "site.bench_temperature",
+            format!("{} is unusual for a bench", show(bench_temperature_k, Kind::Temperature)),
+            "the temperature at which solvents are poured and stored, as a rule between 5 and 40 °C; leave it if it is right",
+        ));
+    }
     if let Some(e) = &doc.electricity {
         check(e.climate.as_deref(), Kind::ClimatePerEnergy, "site.electricity.climate", problems);
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
@@ -210,7 +217,8 @@ fn amount(text: Option<&str>, default: &str, kind: Kind, path: &str, problems: &
                 format!("\"{}\": {}", text.unwrap_or(default), e.found()),
                 e.need(),
             ));
-            1.0
+            // What the plan would have without it, so that nothing else seems wrong.
+            read(default, kind).map_or(1.0, |a| a.central_si)
         }
     }
 }
@@ -263,6 +271,8 @@ pub(super) struct RouteBuilder<'p> {
     pub(super) materials: Vec<MaterialUse>,
     densities: Vec<Option<In>>,
     assumptions: Vec<Assumption>,
+    /// What comes with the feed.
+    pub(super) fed: Vec<Material>,
     /// Paths of the route and of its workload, each with the key of its name.
     named: [(String, u64); 2],
     /// Where a power could be given and is not.
@@ -289,6 +299,7 @@ impl<'p> RouteBuilder<'p> {
             densities: Vec::new(),
             assumptions: Vec::new(),
             uncounted: Vec::new(),
+            fed: Vec::new(),
             named: Default::default(),
         }
     }
@@ -461,8 +472,9 @@ impl<'p> RouteBuilder<'p> {
     fn build(mut self, workload: &'p Workload, doc: &'p Route, above: &str, path: &str) -> RouteProgram {
         let work = self.work(workload, above);
         let feed = self.feed(workload, doc, above, path);
+        self.fed = feed.iter().map(|(m, _)| *m).collect();
         let mut steps = Vec::new();
-        let mut taken_in = None;
+        let (mut taken_in, mut unknown) = (None, false);
         if doc.steps.is_empty() {
             self.problems.push(Problem::error(
                 below(path, "steps"),
@@ -480,6 +492,7 @@ impl<'p> RouteBuilder<'p> {
                 );
                 let found = format!("no technique is called \"{}\"", step.technique);
                 self.problems.push(Problem::error(below(&at, "step"), found, need));
+                unknown = true;
                 continue;
             };
             if let (None, Some(place)) = (taken_in, technique.takes_feed) {
@@ -503,7 +516,8 @@ impl<'p> RouteBuilder<'p> {
                 note: step.note.clone(),
             });
         }
-        if taken_in.is_none() && !feed.is_empty() && !doc.steps.is_empty() {
+        // A technique that nobody knows may have been the one.
+        if taken_in.is_none() && !unknown && !feed.is_empty() && !doc.steps.is_empty() {
             self.problems.push(Problem::error(
                 below(path, "steps"),
                 "no step takes the sample in",
@@ -610,8 +624,8 @@ impl<'p> RouteBuilder<'p> {
             Ok(amount) => {
                 self.problems.push(Problem::error(
                     path,
-                    format!("{}", amount.central_si),
-                    "a number above zero",
+                    format!("{} where a number above zero should stand", amount.central_si),
+                    "a number, such as 20",
                 ));
                 In(0)
             }
@@ -631,6 +645,12 @@ impl<'p> RouteBuilder<'p> {
         for (name, text) in rows {
             let at = below(&path, name);
             let Some(material) = self.material(name, &at) else { continue };
+            if out.iter().any(|(m, _)| *m == material) {
+                let known = self.name_of(material).to_owned();
+                let found = format!("{name} is {known}, which the feed holds already");
+                self.problems.push(Problem::error(at, found, "each material once, with its whole amount"));
+                continue;
+            }
             let mass = self.amounts.read(text, Kind::Mass);
             let volume = if mass.is_ok() { mass.clone() } else { self.amounts.read(text, Kind::Volume) };
             match (mass, volume) {
@@ -696,7 +716,7 @@ impl<'p> RouteBuilder<'p> {
                         self.problems.push(Problem::error(
                             below(&at, name),
                             format!("\"{to}\" is on the bench itself"),
-                            "a stream, product, elsewhere, hood ...",
+                            "a place outside the bench: a stream, product, elsewhere, hood",
                         ));
                         return None;
                     }
@@ -722,7 +742,7 @@ impl<'p> RouteBuilder<'p> {
                 if low < -2.0 || high > 16.0 {
                     self.problems.push(Problem::error(
                         path,
-                        format!("\"{text}\""),
+                        format!("\"{text}\" is no pH that water reaches"),
                         "pH between -2 and 16, such as \"2 to 7\"",
                     ));
                     return None;

@@ -113,7 +113,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     let condensate = r.optional_place(&CONDENSATE);
     let (share, caught, flow) = (r.optional(&LOSS), r.optional(&CAUGHT), r.optional(&GAS_FLOW));
     let catches = caught.is_some_and(|c| r.value(c) > 0.0);
-    if condensate.is_none() && (by == ROTARY || catches) {
+    if !r.written("condensate") && (by == ROTARY || catches) {
         r.problem(
             "condensate",
             "nothing says where the condensate goes",
@@ -142,6 +142,8 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
 impl Step for Concentrate {
     fn run(&self, x: Draw<'_>, b: &mut Bench<'_>) -> Result<(), Halt> {
         b.need(Place::LIQUOR)?;
+        // What evaporates passes the vapour place: CO2 still in a vessel must not end in the condensate.
+        b.need_empty(Place::VAPOUR)?;
         let (there_m3, wanted_m3) = (b.liquid_volume_m3(Place::LIQUOR), x.get(self.to));
         if wanted_m3 > there_m3 {
             return Err(Halt::NotReached { wanted_m3, there_m3 });

@@ -140,7 +140,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             dispersant: dispersant.zip(mass),
             time: r.optional(&TIME),
             power: r.power(&POWER),
-            extracts: r.per_material(&EXTRACTS),
+            extracts: r.taken_out(&EXTRACTS),
             loss: r.quantity(&LOSS),
             lost_to: r.place(&LOST_TO),
             hold_up: r.quantity(&HOLD_UP),

@@ -88,7 +88,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             time: r.quantity(&TIME),
             heater: r.power(&HEATER),
             cooling_water: r.optional(&COOLING_WATER),
-            extracts: r.per_material(&EXTRACTS),
+            extracts: r.taken_out(&EXTRACTS),
             loss: r.quantity(&LOSS),
             lost_to: r.place(&LOST_TO),
             hold_up: r.quantity(&HOLD_UP),

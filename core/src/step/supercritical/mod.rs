@@ -187,7 +187,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         recycled,
         vent_to: r.place(&VENT_TO),
         leak: r.optional(&LEAK),
-        extracts: r.per_material(&EXTRACTS),
+        extracts: r.taken_out(&EXTRACTS),
         dissolved: r.optional(&DISSOLVED),
         in_marc: r.optional(&IN_MARC),
         power: power.zip(run_time),
