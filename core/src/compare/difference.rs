@@ -1,7 +1,7 @@
 //! Differences and ratios, and the postings that make them.
 
 use super::finding;
-use crate::account::{Account, Contribution, Measure, RouteAccount, behind};
+use crate::account::{Account, Contribution, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
 use crate::program::{RouteProgram, WorkloadProgram};
 
@@ -40,7 +40,8 @@ pub struct Difference {
     pub title: String,
     /// What it measures.
     pub measure: Measure,
-    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio.
+    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio, or
+    /// states no power or water flow.
     pub present: Option<f64>,
     /// Its value on the route; likewise.
     pub other: Option<f64>,
@@ -77,6 +78,9 @@ pub fn compare(account: &Account, workload: usize) -> Option<Comparison> {
     Some(Comparison { present: work.present, routes })
 }
 
+/// The figure that a route has only where it states a power.
+const ELECTRICITY: &str = "energy.electricity";
+
 fn beside(
     work: &WorkloadProgram,
     route: usize,
@@ -90,8 +94,10 @@ fn beside(
     for id in ids {
         let figure = present.figures.iter().chain(&other.figures).find(|f| f.id == id);
         let Some(figure) = figure else { continue };
-        // Nothing of a thing is zero of it; a ratio that is not given is not zero.
-        let value = |a: &RouteAccount| a.value(id).or_else(|| figure.measure.extensive().then_some(0.0));
+        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is the electricity of a route that
+        // states no power.
+        let zero = (figure.measure.extensive() && figure.group != Group::Energy).then_some(0.0);
+        let value = |a: &RouteAccount| a.value(id).or(zero);
         let (before, after) = (value(present), value(other));
         let change = before.zip(after).map(|(b, a)| a - b);
         let ratio = before.zip(after).filter(|(b, _)| *b > 0.0).map(|(b, a)| a / b);
@@ -110,6 +116,12 @@ fn beside(
             },
         });
     }
+    let mut doubts = doubts(old, new);
+    for (route, account, against) in [(old, present, other), (new, other, present)] {
+        if account.value(ELECTRICITY).is_none() && against.value(ELECTRICITY).is_some() {
+            doubts.push(format!("nothing says what electricity {} draws, so it is not compared", route.name));
+        }
+    }
     let judged = finding::judge(&old.name, &new.name, &differences);
     RouteComparison {
         route,
@@ -117,7 +129,7 @@ fn beside(
         finding: judged.sentence,
         better: judged.better,
         worse: judged.worse,
-        doubts: doubts(old, new),
+        doubts,
     }
 }
 
