@@ -150,7 +150,7 @@ fn opened<'a>(
     let value_si = account.values.get(index).copied()?;
     // A number of containers is opened through its volume.
     let whole = !matches!(figure.how, How::Containers { .. });
-    let entries = whole.then(|| behind(route, account, figure)).unwrap_or_default();
+    let entries = if whole { behind(route, account, figure) } else { Vec::new() };
     let entries =
         entries.into_iter().filter_map(|c| entry(route, site, account, figure.measure, c)).collect();
     Some(Opened { figure, value_si, account, entries })
