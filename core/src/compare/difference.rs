@@ -1,7 +1,7 @@
 //! Differences and ratios, and the postings that make them.
 
 use super::finding;
-use crate::account::{Account, Contribution, Measure, RouteAccount, behind};
+use crate::account::{Account, Contribution, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
 use crate::program::{RouteProgram, WorkloadProgram};
 
@@ -40,7 +40,8 @@ pub struct Difference {
     pub title: String,
     /// What it measures.
     pub measure: Measure,
-    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio.
+    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio, or
+    /// states no power or water flow.
     pub present: Option<f64>,
     /// Its value on the route; likewise.
     pub other: Option<f64>,
@@ -90,8 +91,10 @@ fn beside(
     for id in ids {
         let figure = present.figures.iter().chain(&other.figures).find(|f| f.id == id);
         let Some(figure) = figure else { continue };
-        // Nothing of a thing is zero of it; a ratio that is not given is not zero.
-        let value = |a: &RouteAccount| a.value(id).or_else(|| figure.measure.extensive().then_some(0.0));
+        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is the electricity of a route that
+        // states no power.
+        let zero = (figure.measure.extensive() && figure.group != Group::Energy).then_some(0.0);
+        let value = |a: &RouteAccount| a.value(id).or(zero);
         let (before, after) = (value(present), value(other));
         let change = before.zip(after).map(|(b, a)| a - b);
         let ratio = before.zip(after).filter(|(b, _)| *b > 0.0).map(|(b, a)| a / b);
