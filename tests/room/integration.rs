@@ -33,13 +33,13 @@ fn solved(lab: &Lab) -> Course {
     Course::new(&lab.room, &Ventilation::new(lab.settings.clone()).unwrap(), &lab.releases).unwrap()
 }
 
-/// Fourth-order Runge-Kutta with one step a minute; between whole minutes nothing changes.
+/// Fourth-order Runge-Kutta, ten steps a minute, told every minute; between whole minutes nothing changes.
 fn integrated(lab: &Lab, minutes: u32) -> Vec<f64> {
-    let step = 60.0;
+    let step = 6.0;
     let mut c = lab.room.background;
     let mut found = Vec::new();
     for minute in 0..=minutes {
-        let t = f64::from(minute) * step;
+        let t = f64::from(minute) * 60.0;
         let puffs = lab.releases.iter().filter(|r| r.duration_s == 0.0 && r.from_s == t);
         c += puffs.map(|r| r.volume_m3).sum::<f64>() / lab.room.volume_m3;
         found.push(c);
@@ -47,11 +47,13 @@ fn integrated(lab: &Lab, minutes: u32) -> Vec<f64> {
         let g: f64 = runs.map(|r| r.volume_m3 / r.duration_s).sum();
         let n = lab.settings.iter().rev().find(|s| s.from_s <= t).unwrap().air_changes_per_s;
         let slope = |c: f64| g / lab.room.volume_m3 - lab.room.mixing_factor * n * (c - lab.room.background);
-        let k1 = slope(c);
-        let k2 = slope(c + step / 2.0 * k1);
-        let k3 = slope(c + step / 2.0 * k2);
-        let k4 = slope(c + step * k3);
-        c += step / 6.0 * (k1 + 2.0 * k2 + 2.0 * k3 + k4);
+        for _ in 0..10 {
+            let k1 = slope(c);
+            let k2 = slope(c + step / 2.0 * k1);
+            let k3 = slope(c + step / 2.0 * k2);
+            let k4 = slope(c + step * k3);
+            c += step / 6.0 * (k1 + 2.0 * k2 + 2.0 * k3 + k4);
+        }
     }
     found
 }
@@ -136,17 +138,18 @@ fn worst_window_against_a_search() {
     }
 }
 
-// With the air that the gas pushes out: V dC/dt = G (1 − C) − k Q (C − C₀). The simple box is on the safe side, by half the rise at most.
+// With the air that the gas pushes out: V dC/dt = G (1 − C) − k Q (C − C₀). The simple box is on the safe side, by
+// the rise at most.
 #[test]
 fn the_neglect_of_air_pushed_out_is_on_the_safe_side() {
     let room = Room { volume_m3: 30.0, background: 0.0, mixing_factor: 1.0 };
-    for (m3, n) in [(0.3, 0.0), (3.0, 0.0), (3.0, 2.0)] {
+    for (m3, n) in [(0.3, 0.0), (3.0, 0.0), (3.0, 2.0), (1.0, 12.0)] {
         let gas = Release { from_s: 0.0, duration_s: HOUR_S, volume_m3: m3 };
         let course = Course::new(&room, &Ventilation::steady(per_hour(n)).unwrap(), &[gas]).unwrap();
         let g = m3 / HOUR_S / 30.0;
         // C = (G/V)/(G/V + N) (1 − e^{−(G/V + N) t})
         let full = g / (g + per_hour(n)) * (1.0 - (-(g + per_hour(n)) * HOUR_S).exp());
         let simple = course.at(HOUR_S);
-        assert!(simple >= full && simple / full - 1.0 <= 0.55 * simple, "{m3} {n}: {simple} {full}");
+        assert!(simple >= full && simple / full - 1.0 <= simple, "{m3} {n}: {simple} {full}");
     }
 }

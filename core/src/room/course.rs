@@ -3,9 +3,9 @@
 //! V dC/dt = G − k Q (C − C₀). With λ = k Q/V and the rise r = C − C₀, from a time at which nothing changes until the next:
 //! r(t) = r₀ e^{−λt} + (G/V)(1 − e^{−λt})/λ. No time steps, so no step to choose and none to get wrong.
 //!
-//! The equation leaves out the air that the released gas itself pushes out. It therefore overstates, by about half the rise: by 0.5 %
-//! of the figure at 1 % by volume, by 5 % of it at 10 %. In a closed room and a long release it can pass 100 %, and says so in
-//! [`Course::is_beyond_the_equation`]; for what is let go at once see [`super::Sudden`].
+//! The equation leaves out the air that the released gas itself pushes out. It therefore overstates, by up to the rise itself: by at
+//! most 1 % of the figure at 1 % by volume and 10 % of it at 10 %, in a closed room by half of that. A long release into a closed room
+//! can pass 100 %, which [`Course::is_beyond_the_equation`] tells; for what is let go at once see [`super::Sudden`].
 use super::error::RoomError;
 use super::schedule::{Release, Room, Ventilation};
 
