@@ -80,13 +80,13 @@ fn peak_and_times_against_the_minutes() {
         let last = minutes.iter().rposition(|c| *c >= limit);
         match (course.first_at(limit), first) {
             (Some(t), Some(minute)) => {
-                assert!((t / 60.0 - minute as f64).abs() <= 1.0, "{limit}: {t} and {minute}")
+                assert!((t / 60.0 - minute as f64).abs() <= 1.0, "{limit}: {t} and {minute}");
             }
             (found, wanted) => assert!(found.is_none() && wanted.is_none(), "{limit}: {found:?} {wanted:?}"),
         }
         match (course.under_from(limit), last) {
             (Some(t), Some(minute)) => {
-                assert!((t / 60.0 - minute as f64).abs() <= 1.0, "{limit}: {t} and {minute}")
+                assert!((t / 60.0 - minute as f64).abs() <= 1.0, "{limit}: {t} and {minute}");
             }
             // at the end, in the closed room, it stays above
             (None, Some(minute)) => assert_eq!(minute, 3600, "{limit}"),

@@ -7,6 +7,7 @@
 //! | `course` | the well-mixed box solved exactly, piece by piece: time course, averages, peak, times |
 //! | `oxygen` | oxygen displaced: at once, mixed, ventilated |
 //! | `sudden` | a cylinder or a spill let go at once; never averaged |
+//! | `day` | calendar days |
 //! | `limits` | exposure limits by substance, jurisdiction and date |
 //! | `judge` | a figure held against a limit |
 //! | `sensor` | which sensor sees what, and which is blind |
@@ -26,6 +27,7 @@
 //! ```
 mod concentration;
 mod course;
+mod day;
 mod error;
 mod judge;
 mod limits;
@@ -38,11 +40,12 @@ pub use concentration::{
     GAS_CONSTANT_J_MOL_K, fraction_of, gas_volume_m3, mass_concentration_kg_m3, saturation_fraction,
 };
 pub use course::Course;
+pub use day::{Day, DayError};
 pub use error::RoomError;
 pub use judge::{Exposure, Judgement, judge, judge_sudden};
 pub use limits::{
-    Day, DayError, Jurisdiction, LIMITS_CAUTION, Limit, LimitKind, LimitNote, LimitState, LimitUnit, Limits,
-    Uses, Why, all_limits, limit_faults, limits,
+    Jurisdiction, LIMITS_CAUTION, Limit, LimitKind, LimitNote, LimitState, LimitUnit, Limits, Uses, Why,
+    all_limits, limit_faults, limits,
 };
 pub use oxygen::{
     OXYGEN_ALARM_FIRST, OXYGEN_ALARM_SECOND, OXYGEN_DISPLACED, OXYGEN_VENTILATED, gas_fraction_at_oxygen,
