@@ -12,6 +12,7 @@
 pub mod account;
 pub mod chance;
 pub mod co2;
+pub mod co2_loop;
 pub mod compare;
 pub mod example;
 pub mod hazard;
