@@ -14,6 +14,7 @@ pub mod chance;
 pub mod co2;
 pub mod co2_loop;
 pub mod compare;
+pub mod dense_gas;
 pub mod example;
 pub mod hazard;
 pub mod ledger;

@@ -12,7 +12,10 @@ use super::{
 /// Newton's steps with halving as the fallback; five or six are usual, halving alone would take about 45.
 const STEPS: u32 = 120;
 /// A temperature is found when the next step would change it by less than this part of itself.
-const TEMPERATURE_FOUND: f64 = 1e-11;
+const TEMPERATURE_FOUND: f64 = 1e-12;
+
+/// The same where the pressure does not tell the phase: 1e-9 of the pressure, which rises some sevenfold as fast as T.
+const SATURATION_BLUR: f64 = 2e-10;
 
 /// Which phases a state has.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -139,7 +142,7 @@ pub fn saturation_temperature_k(pressure_pa: f64) -> Result<f64, StateError> {
 /// The state at an enthalpy, J/kg, and an absolute pressure, Pa.
 ///
 /// Range: as for [`state`]; at a pressure between the triple and the critical point the result may be liquid and
-/// vapour, with the share of vapour. Temperature to 1e-11 of itself.
+/// vapour, with the share of vapour. Temperature to 1e-12 of itself.
 ///
 /// # Errors
 /// [`StateError::Pressure`], [`StateError::Enthalpy`] where no fluid state of the range has that enthalpy (below, there
@@ -313,24 +316,21 @@ fn single(wanted: Wanted, pressure_pa: f64, branch: &Branch) -> Result<Equilibri
     }
     let mut last_step = f64::INFINITY;
     for _ in 0..STEPS {
-        let here = match (state(temperature_k, pressure_pa), branch.saturated) {
-            (Ok(here), _) => here,
+        let (here, found) = match (state(temperature_k, pressure_pa), branch.saturated) {
+            (Ok(here), _) => (here, TEMPERATURE_FOUND),
             // So close to the saturation line that the pressure does not tell the phase: the branch does.
-            (Err(StateError::TwoPhase { .. }), Some(saturated)) => saturated,
+            (Err(StateError::TwoPhase { .. }), Some(saturated)) => (saturated, SATURATION_BLUR),
             (Err(error), _) => return Err(error),
         };
+        temperature_k = here.temperature_k;
         let excess = wanted.of(&here) - wanted.value();
         let step = -excess / wanted.slope(&here);
-        if step.abs() <= TEMPERATURE_FOUND * temperature_k {
-            return Ok(here.into());
+        if step.abs() <= found * temperature_k {
+            return Ok(beside(&here, step));
         }
         // At the end of the range and still pointing out of it.
         if (temperature_k >= branch.high && excess < 0.0) || (temperature_k <= branch.low && excess > 0.0) {
-            return match branch.saturated {
-                // Rounding between the two sides of the saturation line, not a value out of range.
-                Some(saturated) if here == saturated => Ok(here.into()),
-                _ => Err(wanted.refused(pressure_pa, &here)),
-            };
+            return Err(wanted.refused(pressure_pa, &here));
         }
         if excess > 0.0 {
             (high, high_seen) = (temperature_k, true);
@@ -350,7 +350,7 @@ fn single(wanted: Wanted, pressure_pa: f64, branch: &Branch) -> Result<Equilibri
         last_step = (next - temperature_k).abs();
         if last_step <= 1e-15 * temperature_k || !next.is_finite() {
             return if excess.is_finite() {
-                Ok(here.into())
+                Ok(beside(&here, step))
             } else {
                 Err(wanted.refused(pressure_pa, &here))
             };
@@ -359,6 +359,18 @@ fn single(wanted: Wanted, pressure_pa: f64, branch: &Branch) -> Result<Equilibri
     }
     // 120 halvings of 900 K are far below rounding, so this is not reached with finite numbers.
     Ok(state(temperature_k, pressure_pa)?.into())
+}
+
+/// The state a last, small step in temperature away at the same pressure.
+fn beside(here: &State, step_k: f64) -> Equilibrium {
+    let heat_j_kg = here.heat_capacity_j_kg_k * step_k;
+    Equilibrium {
+        temperature_k: here.temperature_k + step_k,
+        enthalpy_j_kg: here.enthalpy_j_kg + heat_j_kg,
+        // ds = dh/T at constant pressure
+        entropy_j_kg_k: here.entropy_j_kg_k + heat_j_kg / here.temperature_k,
+        ..(*here).into()
+    }
 }
 
 /// Liquid and vapour in the given proportion.

@@ -6,7 +6,7 @@ use crate::co2::{Equilibrium, state};
 
 /// Recompression of gas in stages of equal pressure ratio.
 ///
-/// The default is the worked example of the tests: from 1 atm and 25 °C to 60 bar in three stages, liquid at 15 °C.
+/// The default is the worked example of the tests: from 1 atm and 20 °C to 60 bar in three stages, liquid at 15 °C.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Recompression {
     /// Temperature of the gas, K.
@@ -28,7 +28,7 @@ pub struct Recompression {
 impl Default for Recompression {
     fn default() -> Self {
         Self {
-            inlet_temperature_k: 298.15,
+            inlet_temperature_k: 293.15,
             inlet_pressure_pa: 101_325.0,
             outlet_pressure_pa: 60e5,
             stages: 3,
