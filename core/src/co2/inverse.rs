@@ -105,8 +105,7 @@ impl Equilibrium {
 /// ```
 pub fn saturation_temperature_k(pressure_pa: f64) -> Result<f64, StateError> {
     let none = Err(StateError::NoBoiling { pressure_pa });
-    // Written so that not-a-number is refused too.
-    if !(pressure_pa >= TRIPLE_PRESSURE_PA && pressure_pa < CRITICAL_PRESSURE_PA) {
+    if !(TRIPLE_PRESSURE_PA..CRITICAL_PRESSURE_PA).contains(&pressure_pa) {
         return none;
     }
     let ln_pressure = libm::log(pressure_pa);
@@ -209,13 +208,26 @@ pub fn temperature_from_entropy_k(entropy_j_kg_k: f64, pressure_pa: f64) -> Resu
     Ok(state_from_entropy(entropy_j_kg_k, pressure_pa)?.temperature_k)
 }
 
-/// [`state_from_entropy`] with a temperature, K, from which to start: the same state, sooner.
-pub(crate) fn state_from_entropy_near(
+/// The enthalpy, J/kg, of [`state_from_entropy`], sought from a temperature, K: for a machine's outlet, of which no more is
+/// needed, at half the cost. It agrees with the long way to 1e-5 J/kg.
+pub(crate) fn enthalpy_from_entropy_near(
     entropy_j_kg_k: f64,
     pressure_pa: f64,
     near_k: f64,
-) -> Result<Equilibrium, StateError> {
-    solve(Wanted::Entropy(entropy_j_kg_k), pressure_pa, Some(near_k))
+) -> Result<f64, StateError> {
+    let mut temperature_k = near_k;
+    for _ in 0..4 {
+        let Ok(here) = state(temperature_k, pressure_pa) else { break };
+        let (excess, cp) = (entropy_j_kg_k - here.entropy_j_kg_k, here.heat_capacity_j_kg_k);
+        let step = excess * temperature_k / cp;
+        // Near the critical point the heat capacity changes too fast for the series.
+        if step.abs() < 1e-4 * temperature_k && cp < 1e4 {
+            // h(s) at constant pressure: dh = T ds, d²h = (T/c_p) ds²
+            return Ok(here.enthalpy_j_kg + temperature_k * excess * (1.0 + 0.5 * excess / cp));
+        }
+        temperature_k += step;
+    }
+    Ok(solve(Wanted::Entropy(entropy_j_kg_k), pressure_pa, Some(near_k))?.enthalpy_j_kg)
 }
 
 /// What the state must have.
@@ -427,13 +439,33 @@ mod tests {
         assert_eq!(coldest_fluid_k(1e5), TRIPLE_TEMPERATURE_K);
     }
 
+    /// Over liquid, gas, the neighbourhood of the saturation line and of the critical point.
+    #[test]
+    fn the_short_way_is_the_long_way() {
+        for t in 0..60 {
+            let inlet_k = 220.0 + 3.0 * f64::from(t);
+            for (from_pa, to_pa) in [(1e5, 6e5), (6e5, 40e5), (40e5, 74e5), (60e5, 73.7e5), (60e5, 500e5)] {
+                let Ok(inlet) = state(inlet_k, from_pa) else { continue };
+                let Ok(long) = state_from_entropy(inlet.entropy_j_kg_k, to_pa) else { continue };
+                for off in [-3.0, 0.0, 0.02, 10.0] {
+                    let near_k = long.temperature_k + off;
+                    let short = enthalpy_from_entropy_near(inlet.entropy_j_kg_k, to_pa, near_k).unwrap();
+                    let apart = (short - long.enthalpy_j_kg).abs();
+                    assert!(apart < 1e-5, "{inlet_k} K, {from_pa} to {to_pa} Pa, off {off} K: {apart:e}");
+                }
+            }
+        }
+    }
+
     #[test]
     fn any_start_ends_at_the_same_state() {
         for pressure_pa in [1e5, 45e5, 73e5, 74e5, 80e5, 300e5] {
             let wanted = state(320.0, pressure_pa).unwrap();
             for near_k in [200.0, 217.0, 250.0, 300.0, 304.2, 310.0, 400.0, 1100.0, f64::NAN] {
-                let found = state_from_entropy_near(wanted.entropy_j_kg_k, pressure_pa, near_k).unwrap();
+                let found = solve(Wanted::Entropy(wanted.entropy_j_kg_k), pressure_pa, Some(near_k)).unwrap();
                 assert!((found.temperature_k - 320.0).abs() < 1e-8, "{pressure_pa} {near_k}: {found:?}");
+                let short = enthalpy_from_entropy_near(wanted.entropy_j_kg_k, pressure_pa, near_k).unwrap();
+                assert!((short - wanted.enthalpy_j_kg).abs() < 1e-5, "{pressure_pa} {near_k}: {short}");
             }
         }
     }

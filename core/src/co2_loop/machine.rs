@@ -1,7 +1,7 @@
 //! Pump and compressor by isentropic efficiency.
 use super::LoopError;
 use super::error::{above, at, efficiency};
-use crate::co2::{Equilibrium, Phase, Phases, state_from_entropy_near};
+use crate::co2::{Equilibrium, Phase, Phases, enthalpy_from_entropy_near};
 
 /// What a machine does to the stream.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -78,10 +78,10 @@ fn lift(
 ) -> Result<Lift, LoopError> {
     let eta = efficiency("isentropic efficiency", isentropic_efficiency)?;
     above("outlet pressure", outlet_pressure_pa, "inlet pressure", inlet.pressure_pa)?;
-    let ideal =
-        state_from_entropy_near(inlet.entropy_j_kg_k, outlet_pressure_pa, near_k).map_err(at(name))?;
+    let ideal_end_j_kg =
+        enthalpy_from_entropy_near(inlet.entropy_j_kg_k, outlet_pressure_pa, near_k).map_err(at(name))?;
     // w_s = h(s₁, p₂) − h₁
-    let ideal_j_kg = ideal.enthalpy_j_kg - inlet.enthalpy_j_kg;
+    let ideal_j_kg = ideal_end_j_kg - inlet.enthalpy_j_kg;
     // w = w_s/η
     let work_j_kg = ideal_j_kg / eta;
     Ok(Lift {

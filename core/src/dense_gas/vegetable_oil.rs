@@ -10,8 +10,8 @@ pub const SOURCE: Source = Source::new(
     Standing::FromMemory,
 );
 
-/// Range in temperature, K.
-pub const TEMPERATURE_K: [f64; 2] = [293.0, 353.0];
+/// Range in temperature, K: 293 K to 353 K in the source, in whole kelvins, so that 20 °C and 80 °C belong to it.
+pub const TEMPERATURE_K: [f64; 2] = [292.5, 353.5];
 /// Range in absolute pressure, Pa.
 pub const PRESSURE_PA: [f64; 2] = [15e6, 88e6];
 /// Highest solubility, kg/m³.
