@@ -12,7 +12,9 @@
 pub mod account;
 pub mod chance;
 pub mod co2;
+pub mod co2_loop;
 pub mod compare;
+pub mod dense_gas;
 pub mod example;
 pub mod hazard;
 pub mod heat;
