@@ -277,8 +277,8 @@ impl<'m> Clock<'m> {
         let mut error = 0.0;
         for i in 0..LARGEST {
             // the difference to the second-order member: h (−5/72 k₁ + 1/12 k₂ + 1/9 k₃ − 1/8 k₄)
-            let off = h
-                * (-5.0 / 72.0 * k1.phi[i] + k2.phi[i] / 12.0 + k3.phi[i] / 9.0 - k4.phi[i] / 8.0).abs();
+            let off =
+                h * (-5.0 / 72.0 * k1.phi[i] + k2.phi[i] / 12.0 + k3.phi[i] / 9.0 - k4.phi[i] / 8.0).abs();
             // A component that is all but gone need not be followed to the last digit.
             let weight = self.volumes[i] * n[i] / k1.volume_m3;
             error += off * weight;

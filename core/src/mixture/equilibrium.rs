@@ -26,7 +26,8 @@ impl<'a> Component<'a> {
     pub fn of(substance: &'a Substance, volume_temperature_k: f64) -> Result<Self, MixtureError> {
         let mass = substance.molar_mass_kg_mol.as_ref();
         let mass = mass.ok_or_else(|| MixtureError::NoMolarMass { material: substance.name.clone() })?;
-        let density = substance.density.value(volume_temperature_k, &substance.name, "density of the liquid")?;
+        let density =
+            substance.density.value(volume_temperature_k, &substance.name, "density of the liquid")?;
         Ok(Self {
             name: &substance.name,
             vapour_pressure: &substance.vapour_pressure,
@@ -199,7 +200,11 @@ impl<'a> Mixture<'a> {
     ///
     /// # Errors
     /// As [`Mixture::partial_pressures_pa`].
-    pub fn vapour_composition(&self, amounts: &[f64], temperature_k: f64) -> Result<PerComponent, MixtureError> {
+    pub fn vapour_composition(
+        &self,
+        amounts: &[f64],
+        temperature_k: f64,
+    ) -> Result<PerComponent, MixtureError> {
         let mut y = self.partial_pressures_pa(amounts, temperature_k)?;
         let total = sum(&y);
         for y in &mut y {

@@ -138,20 +138,14 @@ fn row(line: &'static str) -> Option<Pair> {
     let (first, second) = (next()?, next()?);
     let numbers = [next()?, next()?, next()?, next()?, next()?, next()?].map(str::parse::<f64>);
     let (basis, source) = (next()?, next()?);
-    let basis =
-        [Basis::Published, Basis::Azeotrope, Basis::Fitted, Basis::Homologues, Basis::Splits]
-            .into_iter()
-            .find(|b| b.word() == basis)?;
+    let basis = [Basis::Published, Basis::Azeotrope, Basis::Fitted, Basis::Homologues, Basis::Splits]
+        .into_iter()
+        .find(|b| b.word() == basis)?;
     let law = match (basis, numbers) {
         (Basis::Splits, _) => PairLaw::Splits,
-        (_, [Ok(a12), Ok(b12_k), Ok(a21), Ok(b21_k), Ok(low_c), Ok(high_c)]) => PairLaw::Wilson(Wilson {
-            a12,
-            b12_k,
-            a21,
-            b21_k,
-            low_k: low_c + 273.15,
-            high_k: high_c + 273.15,
-        }),
+        (_, [Ok(a12), Ok(b12_k), Ok(a21), Ok(b21_k), Ok(low_c), Ok(high_c)]) => {
+            PairLaw::Wilson(Wilson { a12, b12_k, a21, b21_k, low_k: low_c + 273.15, high_k: high_c + 273.15 })
+        }
         _ => return None,
     };
     Some(Pair { first: first.into(), second: second.into(), law, basis, source: source.into() })

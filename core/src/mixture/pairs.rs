@@ -69,10 +69,8 @@ impl Pairs {
         let mut pairs = Self::ideal(substances.len())?;
         for (j, second) in substances.iter().enumerate() {
             for (i, first) in substances.iter().enumerate().take(j) {
-                let splits = || MixtureError::TwoLiquids {
-                    first: first.name.clone(),
-                    second: second.name.clone(),
-                };
+                let splits =
+                    || MixtureError::TwoLiquids { first: first.name.clone(), second: second.name.clone() };
                 match find_pair(&first.name, &second.name).map(|pair| pair.law) {
                     Some(PairLaw::Wilson(wilson)) => pairs.set(i, j, wilson)?,
                     Some(PairLaw::Splits) => return Err(splits()),
