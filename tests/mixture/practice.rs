@@ -45,22 +45,56 @@ fn van_laar_by_hand_and_the_core_agree() {
     });
 }
 
-// Witness: the same hand calculation's distillation: 300 mL taken to 5 mL ends as more than 99 mol % hexane.
+// Witness: the same hand calculation's distillation: 300 mL taken to 5 mL ends as more than 99 mol % hexane with van Laar's equation, at one atmosphere as at
+// 20 °C. Wilson's equation from the same azeotrope ends between 98.5 and 99.1 %: the mixture starts only 4 mol % from the azeotrope, so the end hangs on
+// its composition more than on the equation. Raoult's law ends at 78 %.
 #[test]
 fn taken_to_5_ml_it_is_hexane() {
     mixed(&["n-hexane", "acetone"], |m| {
-        for hold in [Hold::Pressure(101_325.0), Hold::Temperature(293.15), Hold::Temperature(313.15)] {
+        for (hold, least) in [
+            (Hold::Pressure(101_325.0), 0.984),
+            (Hold::Temperature(293.15), 0.99),
+            (Hold::Temperature(313.15), 0.988),
+        ] {
             let end = m.distil_batch(&charge(m), 5e-6, hold).unwrap();
             let share = end.left_mol[0] / (end.left_mol[0] + end.left_mol[1]);
-            assert!(share > 0.99, "{hold:?}: {share}");
-            assert!((end.last.volume_m3 / 5e-6 - 1.0).abs() < 1e-5, "{hold:?}");
+            assert!(share > least && share < 0.995, "{hold:?}: {share}");
+            assert!((end.last.volume_m3 / 5e-6 - 1.0).abs() < 1e-4, "{hold:?}");
         }
-        // Raoult's law has it the other way round: acetone, the more volatile, leaves first as well, but at the start the
-        // real vapour holds much more hexane than the ideal one.
+        let (van_laar, ideal) = (by_hand(m, true), by_hand(m, false));
+        assert!(van_laar > 0.99 && van_laar < 0.995, "{van_laar}");
+        assert!((ideal - 0.784).abs() < 0.002, "{ideal}");
+        // The real vapour holds more hexane than the ideal one, though less than the liquid does.
         let n = charge(m);
         let y = m.vapour_composition(&n, 293.15).unwrap();
         let ideal = n[0] * m.components()[0].vapour_pressure_pa(293.15).unwrap()
             / (m.ideal_bubble_pressure_pa(&n, 293.15).unwrap() * (n[0] + n[1]));
         assert!((ideal - 0.27).abs() < 0.01 && y[0] > 0.33, "{} {ideal}", y[0]);
     });
+}
+
+/// Mole fraction of hexane at 5 mL, at 20 °C, by ten thousand small steps with van Laar's equation or Raoult's law.
+fn by_hand(m: &thimbleworth::mixture::Mixture<'_>, real: bool) -> f64 {
+    let t = 49.8 + 273.15;
+    let az = mole_fraction("n-hexane", "acetone", 0.41);
+    let p = |i: usize, t| m.components()[i].vapour_pressure_pa(t).unwrap();
+    let (l1, l2) = ((101_325.0 / p(0, t)).ln(), (101_325.0 / p(1, t)).ln());
+    let a = l1 * (1.0 + (1.0 - az) * l2 / (az * l1)).powi(2);
+    let b = l2 * (1.0 + az * l1 / ((1.0 - az) * l2)).powi(2);
+    let v = [0, 1].map(|i| m.components()[i].molar_volume_m3_mol());
+    let pure = [p(0, 293.15), p(1, 293.15)];
+    let mut n = charge(m);
+    let steps = 10_000;
+    let fall = (60.0_f64).ln() / f64::from(steps);
+    for _ in 0..steps {
+        let x = n[0] / (n[0] + n[1]);
+        let gamma = [
+            (a / (1.0 + a * x / (b * (1.0 - x))).powi(2)).exp(),
+            (b / (1.0 + b * (1.0 - x) / (a * x)).powi(2)).exp(),
+        ];
+        let k = [0, 1].map(|i| if real { gamma[i] * pure[i] } else { pure[i] });
+        let (volume, leaving) = (n[0] * v[0] + n[1] * v[1], n[0] * v[0] * k[0] + n[1] * v[1] * k[1]);
+        n = [0, 1].map(|i| n[i] * (-fall * k[i] * volume / leaving).exp());
+    }
+    n[0] / (n[0] + n[1])
 }

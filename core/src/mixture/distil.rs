@@ -55,7 +55,9 @@ impl Distillation {
 }
 
 /// The error allowed in one step, in the logarithm of an amount times its share of the volume.
-const TOLERANCE: f64 = 1e-6;
+const TOLERANCE: f64 = 2e-5;
+/// The longest step in ln V: paths that need no short steps still have points to draw.
+const LONGEST: f64 = 1.0;
 /// Steps after which the path is given as it is; ten times what the stiffest mixture of the catalogue takes.
 const MOST_STEPS: usize = 4000;
 
@@ -139,6 +141,9 @@ impl Mixture<'_> {
                 ratio
             };
             h = step * 0.9 * factor;
+            if h > LONGEST {
+                h = LONGEST;
+            }
             if tried.error <= TOLERANCE {
                 s = if whole { end } else { s + step };
                 per_pressure += tried.per_pressure;
@@ -171,8 +176,8 @@ struct Rate {
     phi: PerComponent,
     /// Mole fractions of the vapour.
     vapour: PerComponent,
-    /// −d(∫ dN/Σp)/ds, mol/Pa.
-    per_pressure: f64,
+    /// All that is left, mol.
+    left_mol: f64,
     volume_m3: f64,
     temperature_k: f64,
     pressure_pa: f64,
@@ -242,15 +247,13 @@ impl<'m> Clock<'m> {
             // Σp = Σ xᵢ κᵢ
             pressure_pa += x[i] * kappa[i];
         }
-        let (mut phi, mut vapour, mut leaving) = ([0.0; LARGEST], [0.0; LARGEST], 0.0);
+        let (mut phi, mut vapour) = ([0.0; LARGEST], [0.0; LARGEST]);
         for i in 0..LARGEST {
             // φᵢ = κᵢ V / Σ vⱼ nⱼ κⱼ
             phi[i] = kappa[i] * volume / escaping_volume;
             vapour[i] = x[i] * kappa[i] / pressure_pa;
-            leaving += n[i] * phi[i];
         }
-        let per_pressure = leaving / pressure_pa;
-        Ok(Rate { phi, vapour, per_pressure, volume_m3: volume, temperature_k, pressure_pa })
+        Ok(Rate { phi, vapour, left_mol: sum(n), volume_m3: volume, temperature_k, pressure_pa })
     }
 
     /// One step of the pair of Bogacki and Shampine in ln nᵢ.
@@ -283,7 +286,21 @@ impl<'m> Clock<'m> {
             let weight = self.volumes[i] * n[i] / k1.volume_m3;
             error += off * weight;
         }
-        let per_pressure = h * (2.0 * k1.per_pressure + 3.0 * k2.per_pressure + 4.0 * k3.per_pressure) / 9.0;
+        let per_pressure = per_pressure(k1, &k2, &k4);
         Ok(Tried { amounts, rate: k4, error, per_pressure })
+    }
+}
+
+/// ∫ dN/Σp over a step, mol/Pa: the parabola through beginning, middle and end, over the moles that leave.
+fn per_pressure(begin: &Rate, middle: &Rate, end: &Rate) -> f64 {
+    let (a, b) = (begin.left_mol - middle.left_mol, middle.left_mol - end.left_mol);
+    if a > 0.0 && b > 0.0 {
+        // (a+b)/6 · [(2 − b/a) f₀ + (a+b)²/(ab) f₁ + (2 − a/b) f₂], f = 1/Σp
+        (a + b) / 6.0
+            * ((2.0 - b / a) / begin.pressure_pa
+                + (a + b) * (a + b) / (a * b) / middle.pressure_pa
+                + (2.0 - a / b) / end.pressure_pa)
+    } else {
+        0.5 * (a + b) * (1.0 / begin.pressure_pa + 1.0 / end.pressure_pa)
     }
 }
