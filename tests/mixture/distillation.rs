@@ -66,15 +66,15 @@ fn the_path_is_that_of_many_small_parts() {
             for (i, slow) in slow.iter().enumerate() {
                 worst = worst.max((fast.left_mol[i] - slow).abs() / total);
                 let off = (fast.left_mol[i] - slow).abs() / total;
-                assert!(off < 1e-4, "{names:?} {hold:?}: {} left of {}: {slow}", fast.left_mol[i], names[i]);
+                assert!(off < 3e-4, "{names:?} {hold:?}: {} left of {}: {slow}", fast.left_mol[i], names[i]);
                 assert!(
                     (fast.left_mol[i] + fast.distillate_mol[i] - start[i]).abs() < 1e-15 * start[i].max(1.0)
                 );
             }
             let off = fast.per_pressure_mol_pa / per_pressure - 1.0;
             println!("{names:?} {hold:?}: {steps} points, left off {worst:.1e}, carrier off {off:.1e}");
-            assert!(off.abs() < 2e-4, "{names:?} {hold:?}: {off}");
-            assert!(steps < 60, "{names:?} {hold:?}: {steps} steps");
+            assert!(off.abs() < 6e-4, "{names:?} {hold:?}: {off}");
+            assert!(steps < 40, "{names:?} {hold:?}: {steps} steps");
         });
     }
 }
@@ -88,7 +88,7 @@ fn an_ideal_pair_at_one_temperature_follows_the_closed_form() {
         let end = m.distil_batch(&start, 10e-6, Hold::Temperature(313.15)).unwrap();
         let p = [0, 1].map(|i| m.components()[i].vapour_pressure_pa(313.15).unwrap());
         let slopes = [0, 1].map(|i| (end.left_mol[i] / start[i]).ln() / p[i]);
-        assert!((slopes[0] / slopes[1] - 1.0).abs() < 1e-4, "{slopes:?}");
+        assert!((slopes[0] / slopes[1] - 1.0).abs() < 5e-4, "{slopes:?}");
         // Their sum Σ pᵢ is what the least gas follows: one liquid alone takes N (P − p)/p.
         let alone = m.distil_batch(&[0.0, 1.0], 10e-6, Hold::Temperature(313.15)).unwrap();
         let gone = alone.distillate_mol[1];

@@ -18,7 +18,7 @@ fn multicomponent_activity_coefficients_are_those_of_another_program() {
 }
 
 // Witness: NRTL with its own constants, and modified UNIFAC (Dortmund), which knows groups only; both by thermo 0.6.1. The allowance stands
-// in the table: 6 % for NRTL, fitted by its makers to much the same measurements, 13 % for acetonitrile and toluene, where it was not; 13 % for the
+// in the table: 8 % for NRTL, fitted by its makers to much the same measurements, 13 % for acetonitrile and toluene, where it was not; 13 % for the
 // prediction, 18 % for methanol and water: constants found at the boiling point, and Wilson's equation lets the deviation grow in the cold, where that
 // of an alcohol in much water shrinks because mixing gives off heat. So the pressure over dilute alcohol at 20 °C may be 10 to 16 % too high.
 #[test]

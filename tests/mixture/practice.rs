@@ -59,7 +59,7 @@ fn taken_to_5_ml_it_is_hexane() {
             let end = m.distil_batch(&charge(m), 5e-6, hold).unwrap();
             let share = end.left_mol[0] / (end.left_mol[0] + end.left_mol[1]);
             assert!(share > least && share < 0.995, "{hold:?}: {share}");
-            assert!((end.last.volume_m3 / 5e-6 - 1.0).abs() < 1e-4, "{hold:?}");
+            assert!((end.last.volume_m3 / 5e-6 - 1.0).abs() < 5e-4, "{hold:?}");
         }
         let (van_laar, ideal) = (by_hand(m, true), by_hand(m, false));
         assert!(van_laar > 0.99 && van_laar < 0.995, "{van_laar}");

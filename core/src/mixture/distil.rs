@@ -55,7 +55,9 @@ impl Distillation {
 }
 
 /// The error allowed in one step, in the logarithm of an amount times its share of the volume.
-const TOLERANCE: f64 = 2e-5;
+const TOLERANCE: f64 = 1e-4;
+/// How near a bubble point is sought on the way, in ln p: only ratios of pressures enter, so 3 mK are near enough.
+const NEAR: f64 = 1e-4;
 /// The longest step in ln V: paths that need no short steps still have points to draw.
 const LONGEST: f64 = 1.0;
 /// Steps after which the path is given as it is; ten times what the stiffest mixture of the catalogue takes.
@@ -149,7 +151,6 @@ impl Mixture<'_> {
                 per_pressure += tried.per_pressure;
                 n = tried.amounts;
                 rate = tried.rate;
-                clock.temperature_k = Some(rate.temperature_k);
                 last = rate.point(&n);
                 each(&last);
             }
@@ -204,12 +205,14 @@ struct Tried {
 
 struct Clock<'m> {
     mixture: &'m Mixture<'m>,
+    count: usize,
     volumes: PerComponent,
     hold: Hold,
     /// At a held temperature, what does not change.
     warm: Option<super::equilibrium::Warm>,
-    /// Where the last bubble point was.
-    temperature_k: Option<f64>,
+    range_k: (f64, f64),
+    /// The last bubble point.
+    boiling: Option<super::equilibrium::Boiling>,
 }
 
 impl<'m> Clock<'m> {
@@ -225,42 +228,55 @@ impl<'m> Clock<'m> {
                 None
             }
         };
-        Ok(Self { mixture, volumes, hold, warm, temperature_k: None })
+        Ok(Self {
+            mixture,
+            count: mixture.components.len(),
+            volumes,
+            hold,
+            warm,
+            range_k: mixture.range_k(),
+            boiling: None,
+        })
     }
 
     fn rate(&mut self, n: &PerComponent) -> Result<Rate, MixtureError> {
         let x = fractions_of(n);
-        let (temperature_k, kappa) = match (self.hold, &self.warm) {
-            (Hold::Temperature(t), Some(warm)) => (t, warm.escaping_pa(&x)),
-            (Hold::Temperature(t), None) => (t, self.mixture.warm(t)?.escaping_pa(&x)),
+        let (temperature_k, held_pa, kappa) = match (self.hold, &self.warm) {
+            (Hold::Temperature(t), Some(warm)) => (t, None, warm.escaping_pa(&x)),
+            (Hold::Temperature(t), None) => (t, None, self.mixture.warm(t)?.escaping_pa(&x)),
             (Hold::Pressure(p), _) => {
-                let (t, warm) = self.mixture.boil(&x, p, self.temperature_k, 1e-8)?;
-                self.temperature_k = Some(t);
-                (t, warm.escaping_pa(&x))
+                let boiling = self.mixture.boil(&x, p, self.range_k, self.boiling.as_ref(), NEAR)?;
+                let kappa = boiling.warm.escaping_pa(&x);
+                self.boiling = Some(boiling);
+                (boiling.temperature_k, Some(p), kappa)
             }
         };
         let (mut volume, mut escaping_volume, mut pressure_pa) = (0.0, 0.0, 0.0);
-        for i in 0..LARGEST {
+        for i in 0..self.count {
+            let part = self.volumes[i] * n[i];
             // V = Σ vᵢ nᵢ
-            volume += self.volumes[i] * n[i];
-            escaping_volume += self.volumes[i] * n[i] * kappa[i];
+            volume += part;
+            escaping_volume += part * kappa[i];
             // Σp = Σ xᵢ κᵢ
             pressure_pa += x[i] * kappa[i];
         }
         let (mut phi, mut vapour) = ([0.0; LARGEST], [0.0; LARGEST]);
-        for i in 0..LARGEST {
+        let (scale, over) = (volume / escaping_volume, 1.0 / pressure_pa);
+        for i in 0..self.count {
             // φᵢ = κᵢ V / Σ vⱼ nⱼ κⱼ
-            phi[i] = kappa[i] * volume / escaping_volume;
-            vapour[i] = x[i] * kappa[i] / pressure_pa;
+            phi[i] = kappa[i] * scale;
+            vapour[i] = x[i] * kappa[i] * over;
         }
+        let pressure_pa = held_pa.unwrap_or(pressure_pa);
         Ok(Rate { phi, vapour, left_mol: sum(n), volume_m3: volume, temperature_k, pressure_pa })
     }
 
     /// One step of the pair of Bogacki and Shampine in ln nᵢ.
     fn step(&mut self, n: &PerComponent, k1: &Rate, h: f64) -> Result<Tried, MixtureError> {
+        let count = self.count;
         let along = |phi: &PerComponent, h: f64| {
             let mut out = *n;
-            for (out, phi) in out.iter_mut().zip(phi) {
+            for (out, phi) in out.iter_mut().zip(phi).take(count) {
                 if *out > 0.0 {
                     // nᵢ(s + h) = nᵢ exp(−h φᵢ)
                     *out *= libm::exp(-h * phi);
@@ -271,14 +287,14 @@ impl<'m> Clock<'m> {
         let k2 = self.rate(&along(&k1.phi, 0.5 * h))?;
         let k3 = self.rate(&along(&k2.phi, 0.75 * h))?;
         let mut mean = [0.0; LARGEST];
-        for i in 0..LARGEST {
+        for i in 0..self.count {
             // φ̄ = 2/9 k₁ + 1/3 k₂ + 4/9 k₃
             mean[i] = (2.0 * k1.phi[i] + 3.0 * k2.phi[i] + 4.0 * k3.phi[i]) / 9.0;
         }
         let amounts = along(&mean, h);
         let k4 = self.rate(&amounts)?;
         let mut error = 0.0;
-        for i in 0..LARGEST {
+        for i in 0..self.count {
             // the difference to the second-order member: h (−5/72 k₁ + 1/12 k₂ + 1/9 k₃ − 1/8 k₄)
             let off =
                 h * (-5.0 / 72.0 * k1.phi[i] + k2.phi[i] / 12.0 + k3.phi[i] / 9.0 - k4.phi[i] / 8.0).abs();

@@ -72,6 +72,15 @@ pub(super) struct Warm {
     lambda: Lambda,
 }
 
+/// A mixture at its bubble point.
+#[derive(Clone, Copy, Debug)]
+pub(super) struct Boiling {
+    pub(super) temperature_k: f64,
+    /// d ln p / d(1/T), from which the next search starts.
+    slope_k: f64,
+    pub(super) warm: Warm,
+}
+
 impl Warm {
     /// γᵢ Pᵢ, the pressure of each component over its mole fraction.
     pub(super) fn escaping_pa(&self, x: &PerComponent) -> PerComponent {
@@ -234,54 +243,63 @@ impl<'a> Mixture<'a> {
     pub fn bubble_temperature_k(&self, amounts: &[f64], pressure_pa: f64) -> Result<f64, MixtureError> {
         let x = self.fractions(amounts)?;
         positive("pressure, Pa", pressure_pa)?;
-        Ok(self.boil(&x, pressure_pa, None, 1e-13)?.0)
+        Ok(self.boil(&x, pressure_pa, self.range_k(), None, 1e-13)?.temperature_k)
     }
 
-    /// The bubble temperature of mole fractions with the mixture at it, from a start near it if there is one, to `near` in ln p.
+    /// The bubble temperature of mole fractions with the mixture at it, to `near` in ln p, from the last one near it if there is one.
     ///
     /// A secant in 1/T, in which ln p is nearly straight, kept inside a shrinking bracket.
     pub(super) fn boil(
         &self,
         x: &PerComponent,
         pressure_pa: f64,
-        start_k: Option<f64>,
+        (low_k, high_k): (f64, f64),
+        before: Option<&Boiling>,
         near: f64,
-    ) -> Result<(f64, Warm), MixtureError> {
-        let (low_k, high_k) = self.range_k();
+    ) -> Result<Boiling, MixtureError> {
         let missed = || MixtureError::NoBubblePoint { pressure_pa, low_k, high_k };
         // A constant law and no known pair leave the temperature without bounds: there is no bubble point to find.
         if !(low_k < high_k && high_k.is_finite()) {
             return Err(missed());
         }
         let (mut below, mut above) = (low_k, high_k);
-        let mut t = start_k.unwrap_or(0.5 * (low_k + high_k));
+        // Without a second point the slope is Trouton's: d ln p / d(1/T) = −Δh/R ≈ −10.6 T
+        let (mut t, mut slope) = match before {
+            Some(before) => (before.temperature_k, before.slope_k),
+            None => (0.5 * (low_k + high_k), -5.3 * (low_k + high_k)),
+        };
         let mut last: Option<(f64, f64)> = None;
         for _ in 0..200 {
             let warm = self.warm(t)?;
             // f = ln(Σ Pᵢ / p)
             let f = libm::log(sum(&warm.partial_pressures_pa(x)) / pressure_pa);
+            let u = 1.0 / t;
+            if let Some((u0, f0)) = last
+                && u != u0
+                && f != f0
+            {
+                slope = (f - f0) / (u - u0);
+            }
             if f.abs() <= near {
-                return Ok((t, warm));
+                return Ok(Boiling { temperature_k: t, slope_k: slope, warm });
             }
             if f > 0.0 {
                 above = t;
             } else {
                 below = t;
             }
-            let u = 1.0 / t;
-            // Without a second point the slope is Trouton's: d ln p / d(1/T) = −Δh/R ≈ −10.6 T
-            let slope = match last {
-                Some((u0, f0)) if u != u0 && f != f0 => (f - f0) / (u - u0),
-                _ => -10.6 * t,
-            };
             last = Some((u, f));
-            let next = 1.0 / (u - f / slope);
-            let narrowest = 4.0 * f64::EPSILON * t;
-            t = if next > below && next < above { next } else { 0.5 * (below + above) };
-            if above - below <= narrowest {
+            if above - below <= 4.0 * f64::EPSILON * t {
                 // Closed in on an end of the range: it does not boil there. Closed in elsewhere: the last bit is reached.
-                return if below <= low_k || above >= high_k { Err(missed()) } else { Ok((t, warm)) };
+                let at_an_end = below <= low_k || above >= high_k;
+                return if at_an_end {
+                    Err(missed())
+                } else {
+                    Ok(Boiling { temperature_k: t, slope_k: slope, warm })
+                };
             }
+            let next = 1.0 / (u - f / slope);
+            t = if next > below && next < above { next } else { 0.5 * (below + above) };
         }
         Err(missed())
     }

@@ -12,12 +12,11 @@ impl Lambda {
     pub(super) fn at(pairs: &Pairs, temperature_k: f64) -> Self {
         let count = pairs.count();
         let mut values = [[1.0; LARGEST]; LARGEST];
-        for i in 0..count {
-            for j in 0..count {
-                let (a, b_k) = (pairs.a[i][j], pairs.b_k[i][j]);
+        for ((row, a), b_k) in values.iter_mut().zip(&pairs.a).zip(&pairs.b_k).take(count) {
+            for ((value, &a), &b_k) in row.iter_mut().zip(a).zip(b_k).take(count) {
                 if a != 0.0 || b_k != 0.0 {
                     // Λᵢⱼ = exp(aᵢⱼ + bᵢⱼ/T)
-                    values[i][j] = libm::exp(a + b_k / temperature_k);
+                    *value = libm::exp(a + b_k / temperature_k);
                 }
             }
         }
@@ -26,23 +25,23 @@ impl Lambda {
 
     /// γᵢ of mole fractions that add to 1.
     pub(super) fn activity_coefficients(&self, x: &PerComponent) -> PerComponent {
-        let mut sums = [0.0; LARGEST];
-        for k in 0..self.count {
+        let mut over = [0.0; LARGEST];
+        for (over, row) in over.iter_mut().zip(&self.values).take(self.count) {
             let mut sum = 0.0;
-            for j in 0..self.count {
-                sum += x[j] * self.values[k][j];
+            for (x, value) in x.iter().zip(row).take(self.count) {
+                sum += x * value;
             }
-            // Sₖ = Σⱼ xⱼ Λₖⱼ
-            sums[k] = sum;
+            // 1/Sₖ, Sₖ = Σⱼ xⱼ Λₖⱼ
+            *over = 1.0 / sum;
         }
         let mut gamma = [0.0; LARGEST];
-        for i in 0..self.count {
+        for (i, gamma) in gamma.iter_mut().enumerate().take(self.count) {
             let mut sum = 0.0;
-            for k in 0..self.count {
-                sum += x[k] * self.values[k][i] / sums[k];
+            for ((x, over), row) in x.iter().zip(over).zip(&self.values).take(self.count) {
+                sum += x * row[i] * over;
             }
             // ln γᵢ = 1 − ln Sᵢ − Σₖ xₖ Λₖᵢ / Sₖ
-            gamma[i] = libm::exp(1.0 - sum) / sums[i];
+            *gamma = libm::exp(1.0 - sum) * over[i];
         }
         gamma
     }
