@@ -148,8 +148,8 @@ pub fn heat_up(
         let mut out = Emitted::default();
         let sum = start.sum + end.sum;
         if sum > 0.0 {
-            for i in 0..count {
-                out.kg[i] = mass[i] * mol * (start.p[i] + end.p[i]) / sum;
+            for (((kg, mass), p1), p2) in out.kg.iter_mut().zip(mass).zip(start.p).zip(end.p).take(count) {
+                *kg = mass * mol * (p1 + p2) / sum;
             }
         }
         out
@@ -187,8 +187,8 @@ fn integrate(
             } else {
                 state(from + (to - from) * f64::from(step) / f64::from(panels))?
             };
-            for i in 0..LARGEST {
-                sum[i] += 0.5 * (last.ratio[i] + next.ratio[i]) * (last.gas_mol - next.gas_mol);
+            for ((sum, a), b) in sum.iter_mut().zip(last.ratio).zip(next.ratio) {
+                *sum += 0.5 * (a + b) * (last.gas_mol - next.gas_mol);
             }
             last = next;
         }

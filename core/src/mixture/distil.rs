@@ -135,14 +135,14 @@ impl Mixture<'_> {
             let tried = clock.step(&n, &rate, step)?;
             // The third-order error of the pair grows with the cube of the step.
             let ratio = libm::cbrt(TOLERANCE / (tried.error + 1e-30));
-            let factor = if ratio > 5.0 {
-                5.0
-            } else if ratio < 0.2 {
-                0.2
-            } else {
-                ratio
-            };
-            h = step * 0.9 * factor;
+            h = step * 0.9 * ratio;
+            // no more than five times longer or shorter at once
+            if h > 5.0 * step {
+                h = 5.0 * step;
+            }
+            if h < 0.2 * step {
+                h = 0.2 * step;
+            }
             if h > LONGEST {
                 h = LONGEST;
             }
@@ -287,20 +287,19 @@ impl<'m> Clock<'m> {
         let k2 = self.rate(&along(&k1.phi, 0.5 * h))?;
         let k3 = self.rate(&along(&k2.phi, 0.75 * h))?;
         let mut mean = [0.0; LARGEST];
-        for i in 0..self.count {
+        for (((mean, a), b), c) in mean.iter_mut().zip(k1.phi).zip(k2.phi).zip(k3.phi).take(count) {
             // φ̄ = 2/9 k₁ + 1/3 k₂ + 4/9 k₃
-            mean[i] = (2.0 * k1.phi[i] + 3.0 * k2.phi[i] + 4.0 * k3.phi[i]) / 9.0;
+            *mean = (2.0 * a + 3.0 * b + 4.0 * c) / 9.0;
         }
         let amounts = along(&mean, h);
         let k4 = self.rate(&amounts)?;
         let mut error = 0.0;
-        for i in 0..self.count {
+        let stages = k1.phi.iter().zip(k2.phi).zip(k3.phi).zip(k4.phi);
+        for ((n, volume), (((a, b), c), d)) in n.iter().zip(self.volumes).zip(stages).take(count) {
             // the difference to the second-order member: h (−5/72 k₁ + 1/12 k₂ + 1/9 k₃ − 1/8 k₄)
-            let off =
-                h * (-5.0 / 72.0 * k1.phi[i] + k2.phi[i] / 12.0 + k3.phi[i] / 9.0 - k4.phi[i] / 8.0).abs();
+            let off = h * (-5.0 / 72.0 * a + b / 12.0 + c / 9.0 - d / 8.0).abs();
             // A component that is all but gone need not be followed to the last digit.
-            let weight = self.volumes[i] * n[i] / k1.volume_m3;
-            error += off * weight;
+            error += off * volume * n / k1.volume_m3;
         }
         let per_pressure = per_pressure(k1, &k2, &k4);
         Ok(Tried { amounts, rate: k4, error, per_pressure })
