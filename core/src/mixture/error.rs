@@ -66,6 +66,13 @@ pub enum MixtureError {
         /// The highest, K.
         high_k: f64,
     },
+    /// The distillation was given up on the way, because its steps became too short.
+    NotReached {
+        /// The volume asked for, m³.
+        wanted_m3: f64,
+        /// The volume reached, m³.
+        reached_m3: f64,
+    },
 }
 
 impl From<PropertyError> for MixtureError {
@@ -112,6 +119,12 @@ impl fmt::Display for MixtureError {
                  choose another pressure",
                 low_k - 273.15,
                 high_k - 273.15
+            ),
+            Self::NotReached { wanted_m3, reached_m3 } => write!(
+                f,
+                "the distillation to {:.3} mL was given up at {:.3} mL; take it in two parts, or leave out a component of which there is next to nothing",
+                wanted_m3 * 1e6,
+                reached_m3 * 1e6
             ),
         }
     }

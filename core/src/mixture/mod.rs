@@ -10,7 +10,7 @@
 //! | `distil` | a batch boiled or blown down to a volume (Rayleigh) |
 //! | `doubt` | how far an ideal mixture can be from a real one |
 //!
-//! The gas phase is ideal: at or below one atmosphere that costs 1 to 3 % for solvents, more for acids that pair up in the vapour.
+//! The gas phase is ideal: at or below one atmosphere that costs 1 to 3 % for solvents (from memory), more for acids that pair up in the vapour.
 //! Most constants were found near the boiling points. Carried to 20 °C, the pressure over a mixture agrees with other models within 8 to 13 %; over alcohols in
 //! much water it is 10 to 16 % too high. Of hexane and acetone in the hexane-rich third it is some 8 % lower than modified UNIFAC has it.
 //!
