@@ -91,11 +91,16 @@ fn beside(
     for id in ids {
         let figure = present.figures.iter().chain(&other.figures).find(|f| f.id == id);
         let Some(figure) = figure else { continue };
-        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is the electricity of a route that
-        // states no power.
-        let zero = (figure.measure.extensive() && figure.group != Group::Energy).then_some(0.0);
-        let value = |a: &RouteAccount| a.value(id).or(zero);
-        let (before, after) = (value(present), value(other));
+        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
+        // stated, nor the electricity of a route that leaves a power out.
+        let value = |route: &RouteProgram, account: &RouteAccount| {
+            let zero = match figure.id.as_str() {
+                "energy.electricity" => route.uncounted.is_empty(),
+                _ => figure.measure.extensive() && figure.group != Group::Energy,
+            };
+            account.value(id).or(zero.then_some(0.0))
+        };
+        let (before, after) = (value(old, present), value(new, other));
         let change = before.zip(after).map(|(b, a)| a - b);
         let ratio = before.zip(after).filter(|(b, _)| *b > 0.0).map(|(b, a)| a / b);
         differences.push(Difference {
