@@ -13,7 +13,7 @@ after(() => browser?.close());
 const elsewhere = "http://127.0.0.1:9/";
 const call = (page) => page.evaluate((url) => fetch(url).catch(() => {}), elsewhere);
 
-test("opening, typing and undoing sends no request, with the network off", async () => {
+test("3: opening, typing and undoing sends no request, with the network off", async () => {
   for (const file of [packed, shell]) {
     const { page, seen, close } = await open(browser, file, { offline: true });
     await page.getByLabel("Title").fill("Hop oil");

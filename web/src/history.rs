@@ -2,7 +2,7 @@
 use std::rc::Rc;
 
 /// Steps kept; older ones are forgotten first.
-const DEPTH: usize = 500;
+const DEPTH: usize = 200;
 
 /// One action that can be undone or redone: its name, and the document on its far side.
 #[derive(Clone, Debug, PartialEq, Eq)]

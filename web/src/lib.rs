@@ -1,14 +1,21 @@
 //! The page: a view of the account in `thimbleworth`, and nothing that the account itself should know.
 //!
-//! `state` and `history` are free of the document and tested natively; everything else draws. `account` is exported
+//! `document`, `edit`, `files`, `form`, `history`, `reckon`, `show` and `state` are free of the document object model and
+//! tested natively; everything else draws. `account` is exported
 //! beside `start_page`, so that what a test computes with is the very module that people open.
 mod app;
-mod contents;
+mod browser;
+pub mod document;
+pub mod edit;
+pub mod files;
+pub mod form;
 pub mod history;
+mod parts;
 pub mod picture;
+pub mod reckon;
 mod sections;
+pub mod show;
 pub mod state;
-mod toolbar;
 
 use thimbleworth::account::{Account, account_text};
 use thimbleworth::report::{markdown, result_csv, result_json};
@@ -23,10 +30,7 @@ pub fn start_page() {
     // Through Yew, which puts a hook of its own over one that is set past it.
     yew::set_custom_panic_hook(Box::new(|fault| {
         gloo::console::error!(fault.to_string());
-        if let Some(notice) = gloo::utils::document().get_element_by_id("stopped") {
-            // An attribute that cannot be removed leaves the message in the console.
-            let _ = notice.remove_attribute("hidden");
-        }
+        browser::show_stopped();
     }));
     match gloo::utils::document().get_element_by_id("app") {
         Some(root) => {

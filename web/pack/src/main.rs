@@ -3,6 +3,7 @@
 //! The app is compiled for WebAssembly, the glue is made in process by the library behind the wasm-bindgen tool, and
 //! everything is inlined into the shell, which is the root `index.html`. No bundler and no installed tool is needed.
 mod compile;
+mod packing;
 mod parts;
 mod shell;
 
@@ -22,9 +23,11 @@ fn main() -> Result<()> {
         let path = workspace.root.join(path);
         fs::read_to_string(&path).with_context(|| format!("cannot read {}", path.display()))
     };
-    let (styles, page) = (read("web/page.css")?, read("index.html")?);
-    let packed = shell::gzip(&program.wasm)?;
-    let script = shell::script(&packed, &program.glue, &read("web/boot.js")?)?;
+    let styles = shell::with_imports(&read("web/page.css")?, |name| read(&format!("web/{name}")))?;
+    let (styles, glue, boot) =
+        (shell::lean(&styles), shell::lean(&program.glue), shell::lean(&read("web/boot.js")?));
+    let page = read("index.html")?;
+    let script = shell::script(&program.wasm, &glue, &boot)?;
     let html = shell::inline(&page, &styles, &script)?;
 
     let dist = workspace.root.join("web/dist");
@@ -33,18 +36,19 @@ fn main() -> Result<()> {
     fs::write(dist.join("thimbleworth.html"), &html)?;
 
     let parts = Parts::of(&program.wasm)?;
-    println!("part                           bytes    gzip");
-    let row = |name: &str, bytes: usize, gzip: Option<usize>| {
-        println!("{name:<26} {bytes:>9} {:>7}", gzip.map_or_else(String::new, |n| n.to_string()));
-    };
-    row("program", program.wasm.len(), Some(packed.len()));
-    row("  of that code", parts.code, None);
-    row("  of that data", parts.data, None);
-    row("glue", program.glue.len(), Some(shell::gzip(program.glue.as_bytes())?.len()));
-    row("styles", styles.len(), Some(shell::gzip(styles.as_bytes())?.len()));
-    row("shell", page.len(), Some(shell::gzip(page.as_bytes())?.len()));
-    row("web/dist/page.js", script.len(), None);
-    row("web/dist/thimbleworth.html", html.len(), None);
+    println!("part                           bytes");
+    let row = |name: &str, bytes: usize| println!("{name:<26} {bytes:>9}");
+    row("program", program.wasm.len());
+    row("  of that code", parts.code);
+    row("  of that data", parts.data);
+    row("program, packed", packing::pack(&program.wasm)?.len());
+    row("program, as text", script.len() - glue.len() - boot.len());
+    row("glue", glue.len());
+    row("start", boot.len());
+    row("styles", styles.len());
+    row("shell", page.len());
+    row("web/dist/page.js", script.len());
+    row("web/dist/thimbleworth.html", html.len());
     ensure!(
         html.len() <= LIMIT_BYTES,
         "web/dist/thimbleworth.html has {} bytes and may have {LIMIT_BYTES}: find the part above that grew",

@@ -1,10 +1,9 @@
 //! The shell and what is inlined into it: pure functions from text to text.
+use crate::packing::{pack, signs, unpacker};
 use anyhow::{Result, ensure};
 use base64::Engine;
 use base64::engine::general_purpose::STANDARD as BASE64;
-use flate2::{Compression, GzBuilder};
 use sha2::{Digest, Sha256};
-use std::io::Write;
 
 /// The element of the shell that loads the script from its folder.
 const SCRIPT_START: &str = r#"<script src="web/dist/page.js""#;
@@ -14,18 +13,47 @@ const STYLES: &str = r#"<link rel="stylesheet" href="web/page.css">"#;
 /// The policy goes behind this element: it must stand before anything that it governs.
 const CHARSET: &str = r#"<meta charset="utf-8">"#;
 
-/// Gzip without a time stamp, so that the same bytes give the same bytes.
-pub(crate) fn gzip(bytes: &[u8]) -> Result<Vec<u8>> {
-    let mut encoder = GzBuilder::new().mtime(0).write(Vec::new(), Compression::best());
-    encoder.write_all(bytes)?;
-    Ok(encoder.finish()?)
+/// The styles with every sheet that they import in its place: in one file there is nothing to import from.
+pub(crate) fn with_imports(styles: &str, read: impl Fn(&str) -> Result<String>) -> Result<String> {
+    let mut out = String::new();
+    for line in styles.split_inclusive('\n') {
+        match line.trim().strip_prefix("@import \"").and_then(|rest| rest.strip_suffix("\";")) {
+            Some(name) => out.push_str(&read(name)?),
+            None => out.push_str(line),
+        }
+    }
+    ensure!(
+        !out.contains("@import"),
+        "an @import stands on no line of its own, or in a sheet that is imported"
+    );
+    Ok(out)
+}
+
+/// A script or a style sheet without the lines that are comments and without indentation: the reader of the source has
+/// the source.
+pub(crate) fn lean(text: &str) -> String {
+    let mut out = String::new();
+    let mut comment = false;
+    for line in text.lines().map(str::trim) {
+        let opens = line.starts_with("/*");
+        let skipped = comment || opens || line.is_empty() || line.starts_with("//");
+        comment = (comment || opens) && !line.ends_with("*/");
+        if !skipped {
+            out.push_str(line);
+            out.push('\n');
+        }
+    }
+    out
 }
 
 /// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
-pub(crate) fn script(packed: &[u8], glue: &str, boot: &str) -> Result<String> {
-    let payload = BASE64.encode(packed);
-    let script =
-        format!("(function () {{\n\"use strict\";\nconst PAYLOAD = \"{payload}\";\n{glue}\n{boot}}})();\n");
+pub(crate) fn script(program: &[u8], glue: &str, boot: &str) -> Result<String> {
+    let (packed, unpacker) = (signs(&pack(program)?), signs(&unpacker()?));
+    let script = format!(
+        "(function () {{\n\"use strict\";\nconst UNPACKER = \"{unpacker}\";\nconst SIZE = {};\n\
+         const PAYLOAD = \"{packed}\";\n{glue}\n{boot}}})();\n",
+        program.len()
+    );
     for (name, text) in [("glue", glue), ("start", boot)] {
         let text = text.to_ascii_lowercase();
         for bad in ["</script", "<script", "<!--"] {
@@ -117,10 +145,20 @@ mod tests {
     }
 
     #[test]
-    fn gzip_gives_the_same_bytes_and_carries_no_time() {
-        let packed = gzip(b"the same").expect("packed");
-        assert_eq!(packed, gzip(b"the same").expect("packed"));
-        // RFC 1952, 2.3.1: bytes 4 to 7 are the time of modification, 0 when there is none.
-        assert_eq!(packed[4..8], [0; 4]);
+    fn what_is_for_the_reader_of_the_source_is_left_out() {
+        assert_eq!(
+            lean("// a\n\n  let b = 1; // c\n/* d\n   e */\n  /** f */\nlet g = \"/*\";\n"),
+            "let b = 1; // c\nlet g = \"/*\";\n"
+        );
+    }
+
+    #[test]
+    fn a_sheet_that_is_imported_stands_in_its_place() {
+        let read = |name: &str| Ok(format!("/* {name} */\n"));
+        assert_eq!(
+            with_imports("a {}\n@import \"b.css\";\nc {}\n", read).expect("styles"),
+            "a {}\n/* b.css */\nc {}\n"
+        );
+        assert!(with_imports("a {} @import \"b.css\";", read).is_err());
     }
 }

@@ -1,17 +1,67 @@
 //! The numbered sections of the page. Adding one is one line in [`SECTIONS`]; its number is its place there.
+mod assumptions;
+mod carbon_dioxide;
+mod comparison;
+mod finding;
+mod hazard;
+mod places;
+mod plates;
 mod question;
+mod routes;
+mod waste;
 
-use crate::state::Edit;
-use question::Question;
+use crate::edit::Edit;
+use crate::parts::ByRc;
+use crate::reckon::{Book, Reckoned};
+use crate::state::{Action, State};
 use std::rc::Rc;
 use thimbleworth::plan::Plan;
 use yew::prelude::*;
 
-/// What a section may look at, and how it says that something was edited.
+/// What a section may look at, and how it says that something was edited or asked for.
 #[derive(Clone, PartialEq)]
 pub(crate) struct View {
-    pub(crate) plan: Rc<Plan>,
+    pub(crate) state: Rc<State>,
+    pub(crate) reckoned: ByRc<Reckoned>,
     pub(crate) edit: Callback<Edit>,
+    pub(crate) act: Callback<Action>,
+    /// Why a name cannot be taken.
+    pub(crate) refusal: Callback<(crate::edit::Item, String), Option<String>>,
+}
+
+impl View {
+    pub(crate) fn plan(&self) -> &Plan {
+        self.state.plan()
+    }
+
+    pub(crate) fn book(&self) -> &Book {
+        &self.reckoned.book
+    }
+
+    /// A picture of a piece of work.
+    fn plate(&self, work: usize, what: plates::What) -> Html {
+        let book = ByRc(Rc::clone(&self.reckoned.book));
+        html! { <plates::Plate {book} {work} basis={self.state.view.basis} {what} /> }
+    }
+
+    /// Draws something for each piece of work, under its name where there are several.
+    pub(crate) fn works(&self, draw: impl Fn(usize) -> Html) -> Html {
+        let works = &self.book().works;
+        let several = works.len() > 1;
+        html! {
+            <div class={classes!("works", self.reckoned.old.then_some("old"))}>
+                if self.reckoned.old {
+                    <p class="hint">{ "These are the figures before the last change: it holds something that is to be mended first." }</p>
+                }
+                { for works.iter().enumerate().map(|(w, work)| html! {
+                    <>
+                        if several { <h3 class="work">{ &work.name }</h3> }
+                        { draw(w) }
+                    </>
+                }) }
+            </div>
+        }
+    }
 }
 
 /// One section.
@@ -27,15 +77,15 @@ pub(crate) struct Section {
 /// All sections in the order of the page.
 #[rustfmt::skip]
 pub(crate) static SECTIONS: [Section; 9] = [
-    Section { id: "question", title: "The question", lead: "What is asked, and for which site.", body: |v| html! { <Question view={v.clone()} /> } },
-    Section { id: "routes", title: "The routes", lead: "Every way of doing the work, step by step.", body: empty },
-    Section { id: "finding", title: "The finding", lead: "The answer in one sentence.", body: empty },
-    Section { id: "places", title: "Where it goes", lead: "Every mass, from the place it comes from to the place it ends.", body: empty },
-    Section { id: "waste", title: "Waste", lead: "What has to be collected, in which containers, under which code.", body: empty },
-    Section { id: "co2", title: "CO₂", lead: "The state of the fluid, what is drawn, returned and vented.", body: empty },
-    Section { id: "hazard", title: "Hazard", lead: "What can hurt, beside the figure that it belongs to.", body: empty },
-    Section { id: "comparison", title: "The comparison", lead: "The routes beside one another, against the present one.", body: empty },
-    Section { id: "assumptions", title: "Assumptions, cautions and sources", lead: "What the figures rest on.", body: empty },
+    Section { id: "question", title: "The question", lead: "What is asked, for which site, and how much work there is.", body: question::draw },
+    Section { id: "routes", title: "The routes", lead: "Every way of doing the work, step by step.", body: routes::draw },
+    Section { id: "finding", title: "The finding", lead: "What each route would change in place of the present one.", body: finding::draw },
+    Section { id: "places", title: "Where it goes", lead: "Every mass, from where it comes to where it ends. A figure opens into the postings behind it.", body: places::draw },
+    Section { id: "waste", title: "Waste", lead: "What has to be collected, and in how many containers.", body: waste::draw },
+    Section { id: "co2", title: "CO₂", lead: "What is drawn, returned and vented where a route works with carbon dioxide.", body: carbon_dioxide::draw },
+    Section { id: "hazard", title: "Hazard", lead: "What can hurt people and water, with the reasons behind every score.", body: hazard::draw },
+    Section { id: "comparison", title: "The comparison", lead: "The routes beside one another on the same work, against the present one.", body: comparison::draw },
+    Section { id: "assumptions", title: "Assumptions, cautions and sources", lead: "What the figures rest on, and what to mind.", body: assumptions::draw },
 ];
 
 impl Section {
@@ -51,11 +101,6 @@ impl Section {
             </section>
         }
     }
-}
-
-/// The body of a section that has none yet.
-fn empty(_: &View) -> Html {
-    html! { <p class="empty">{ "Nothing stands here yet: the account is not connected to the page." }</p> }
 }
 
 #[cfg(test)]

@@ -1,49 +1,332 @@
-//! Section "The question": what is asked, and for which site.
+//! Section "The question": what is asked, for which site, with which waste streams, and how much work there is.
 use super::View;
-use crate::state::Edit;
+use crate::edit::{Change, Edit, Item};
+use crate::form::{text_of, understood};
+use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
+use std::rc::Rc;
+use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
+use thimbleworth::program::OWN_FIELDS;
+use thimbleworth::quantity::Kind;
+use thimbleworth::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY};
+use thimbleworth::step::{Control, Need};
 use yew::prelude::*;
 
-#[derive(Properties, PartialEq)]
-pub(crate) struct Props {
-    pub(crate) view: View,
-}
-
-#[component]
-pub(crate) fn Question(props: &Props) -> Html {
-    let View { plan, edit } = &props.view;
-    let on_input = |variant: fn(String) -> Edit| {
-        let edit = edit.clone();
-        Callback::from(move |event: InputEvent| {
-            if let Some(input) = event.target_dyn_into::<web_sys::HtmlInputElement>() {
-                edit.emit(variant(input.value()));
-            }
-        })
-    };
-    let on_notes = {
-        let edit = edit.clone();
-        Callback::from(move |event: InputEvent| {
-            if let Some(area) = event.target_dyn_into::<web_sys::HtmlTextAreaElement>() {
-                edit.emit(Edit::Notes(area.value()));
-            }
-        })
-    };
+pub(super) fn draw(view: &View) -> Html {
     html! {
         <>
-            <div class="field wide">
-                <label for="title">{ "Title" }</label>
-                <p class="hint" id="title-hint">{ "The question in a few words, as it prints on the report." }</p>
-                <input id="title" type="text" autocomplete="off" aria-describedby="title-hint"
-                    value={plan.title.clone()} oninput={on_input(Edit::Title)} />
+            <div class="form">
+                { about(view) }
+                { streams(view) }
+                { works(view) }
+                { more(view) }
             </div>
-            <div class="field">
-                <label for="site.name">{ "Site" }</label>
-                <input id="site.name" type="text" autocomplete="off"
-                    value={plan.site.name.clone()} oninput={on_input(Edit::SiteName)} />
-            </div>
-            <div class="field wide">
-                <label for="notes">{ "Notes (optional)" }</label>
-                <textarea id="notes" rows="3" value={plan.notes.clone().unwrap_or_default()} oninput={on_notes} />
-            </div>
+            { printed(view) }
         </>
     }
+}
+
+/// One field of the plan's own; `value` is what stands there.
+pub(super) struct Asked<'a> {
+    pub(super) path: String,
+    pub(super) label: &'a str,
+    pub(super) hint: &'a str,
+    pub(super) value: String,
+    pub(super) kind: Option<Kind>,
+    pub(super) need: Need,
+    pub(super) ask: Ask,
+}
+
+impl<'a> Asked<'a> {
+    pub(super) fn text(path: impl Into<String>, label: &'a str, value: impl Into<String>) -> Self {
+        let value = value.into();
+        Self { path: path.into(), label, hint: "", value, kind: None, need: Need::Optional, ask: Ask::Text }
+    }
+
+    pub(super) fn amount(
+        path: impl Into<String>,
+        label: &'a str,
+        kind: Kind,
+        value: Option<&String>,
+    ) -> Self {
+        let value = value.cloned().unwrap_or_default();
+        Self { kind: Some(kind), ask: Ask::Amount, ..Self::text(path, label, value) }
+    }
+
+    pub(super) fn hint(mut self, hint: &'a str) -> Self {
+        self.hint = hint;
+        self
+    }
+
+    pub(super) fn need(mut self, need: Need) -> Self {
+        self.need = need;
+        self
+    }
+
+    pub(super) fn ask(mut self, ask: Ask) -> Self {
+        self.ask = ask;
+        self
+    }
+
+    pub(super) fn draw(self, view: &View) -> Html {
+        let echo = match self.kind {
+            Some(kind) => understood(&self.value, kind, self.need),
+            None if self.value.is_empty() => match self.need {
+                Need::Default(..) => crate::form::left_out(self.need),
+                Need::Required | Need::Optional => String::new(),
+            },
+            None => String::new(),
+        };
+        let units = match (&self.ask, self.kind) {
+            (Ask::Number, _) | (_, None) => String::new(),
+            (_, Some(kind)) => crate::form::units(kind),
+        };
+        html! {
+            <Field label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
+                said={said(&view.reckoned.problems, &self.path)} show_all={view.state.view.show_all}
+                optional={self.need == Need::Optional} value={self.value} ask={self.ask} path={self.path} edit={view.edit.clone()} />
+        }
+    }
+}
+
+/// The words of a choice, shown as they are written.
+pub(super) fn options(left_out: &str, words: &[&str]) -> Options {
+    let first = (AttrValue::from(""), AttrValue::from(left_out.to_owned()));
+    let rest = words.iter().map(|w| (AttrValue::from((*w).to_owned()), AttrValue::from((*w).to_owned())));
+    Rc::from_iter(std::iter::once(first).chain(rest))
+}
+
+fn about(view: &View) -> Html {
+    let plan = view.plan();
+    let site = &plan.site;
+    let words = |text: &Option<String>| text.clone().unwrap_or_default();
+    html! {
+        <>
+            { Asked::text("title", "Title", plan.title.clone()).need(Need::Required)
+                .hint("The question in a few words, as it prints on the report.").draw(view) }
+            { Asked::text("site.name", "Site", site.name.clone()).need(Need::Required).draw(view) }
+            { Asked::text("site.rules", "Waste rules read", words(&site.rules))
+                .ask(Ask::Choice(options("none", &["US", "EU"]))).draw(view) }
+            { Asked::text("site.as_of", "Date of the plan", words(&site.as_of))
+                .hint("Rules and classifications are read as of this day: year-month-day.").draw(view) }
+            { Asked::amount("site.bench_temperature", "Temperature of the bench", Kind::Temperature, site.bench_temperature.as_ref())
+                .need(Need::Default("20 °C", COMMON_PRACTICE)).hint("At which solvents are poured and stored.").draw(view) }
+            { Asked::text("notes", "Notes", words(&plan.notes)).ask(Ask::Area).draw(view) }
+        </>
+    }
+}
+
+fn add(view: &View, words: &'static str, item: Item) -> Html {
+    let edit = view.edit.clone();
+    let onclick =
+        Callback::from(move |_: MouseEvent| edit.emit(Edit::list(Change::Add(item, String::new()))));
+    html! { <button type="button" {onclick}>{ words }</button> }
+}
+
+fn streams(view: &View) -> Html {
+    let plan = view.plan();
+    let count = plan.site.streams.len();
+    html! {
+        <section id="site.streams" tabindex="-1" aria-labelledby="streams-heading">
+            <h3 id="streams-heading">{ "Waste streams that the site keeps apart" }</h3>
+            { for plan.site.streams.iter().enumerate().map(|(i, stream)| one_stream(view, i, stream, count)) }
+            { add(view, "Add a stream", Item::Stream(0)) }
+        </section>
+    }
+}
+
+fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
+    let path = format!("site.streams[{i}]");
+    let id = view.state.document().ids.streams.get(i).copied().unwrap_or_default();
+    let at = |key: &str| format!("{path}.{key}");
+    let solid = stream.holds.as_deref() == Some("solid");
+    html! {
+        <details class="card" key={id} id={path.clone()}>
+            <summary><h4>{ &stream.name }</h4>{ ": " }{ stream_words(stream) }</summary>
+            { tools(Item::Stream(i), &path, &stream.name, count, &view.edit) }
+            <Name item={Item::Stream(i)} id={at("name")} label="Name of the stream" value={stream.name.clone()}
+                refusal={view.refusal.clone()} edit={view.edit.clone()} />
+            { Asked::text(at("holds"), "Holds", stream.holds.clone().unwrap_or_default())
+                .need(Need::Default("liquid", DEFINITION)).ask(Ask::Choice(options("liquid (left out)", &["liquid", "solid"]))).draw(view) }
+            { Asked::amount(at("container"), "Size of a container", Kind::Volume, stream.container.as_ref())
+                .hint("Left out, no containers are counted.").draw(view) }
+            { Asked::amount(at("fill"), "Filled to", Kind::Fraction, stream.fill.as_ref())
+                .need(Need::Default("90 %", COMMON_PRACTICE)).draw(view) }
+            if solid || stream.bulk_density.is_some() {
+                { Asked::amount(at("bulk_density"), "Bulk density", Kind::Density, stream.bulk_density.as_ref())
+                    .need(Need::Default("0.6 kg/L", FROM_MEMORY)).hint("Weigh a full container to know.").draw(view) }
+            }
+            { Asked::text(at("treatment"), "Treatment on site", stream.treatment.clone().unwrap_or_default())
+                .need(Need::Default("none", DEFINITION))
+                .ask(Ask::Choice(options("none (left out)", &["recycling", "degradation", "passivation", "none"]))).draw(view) }
+        </details>
+    }
+}
+
+/// A stream in one line.
+fn stream_words(stream: &Stream) -> String {
+    let mut parts = vec![stream.holds.clone().unwrap_or_else(|| "liquid".into())];
+    parts.extend(stream.container.as_ref().map(|c| format!("containers of {c}")));
+    parts.extend(stream.fill.as_ref().map(|f| format!("filled to {f}")));
+    parts.extend(stream.bulk_density.as_ref().map(|d| format!("bulk density {d}")));
+    parts.extend(stream.treatment.as_ref().map(|t| format!("treatment {t}")));
+    parts.join(", ")
+}
+
+fn works(view: &View) -> Html {
+    let plan = view.plan();
+    let count = plan.workloads.len();
+    html! {
+        <section id="workloads" tabindex="-1" aria-labelledby="workloads-heading">
+            <h3 id="workloads-heading">{ "The work that is to be done" }</h3>
+            { for plan.workloads.iter().enumerate().map(|(w, work)| one_work(view, w, work, count)) }
+            { add(view, "Add a piece of work", Item::Workload(0)) }
+        </section>
+    }
+}
+
+fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
+    let path = format!("workloads[{w}]");
+    let id = view.state.document().ids.workloads.get(w).map(|ids| ids.id).unwrap_or_default();
+    let at = |key: &str| format!("{path}.{key}");
+    let number = |key: &str, label: &'static str, value: Option<&Value>| Asked {
+        kind: Some(Kind::Number),
+        ask: Ask::Number,
+        ..Asked::text(at(key), label, text_of(value))
+    };
+    let yes = |key: &str, label: &'static str, value: Option<bool>| {
+        let text = value.map_or("", |yes| if yes { "true" } else { "false" });
+        Asked::text(at(key), label, text)
+            .need(Need::Default("true", DEFINITION))
+            .ask(Ask::YesNo("yes (left out)".into()))
+    };
+    let routes: Vec<&str> = work.routes.iter().map(|r| r.name.as_str()).collect();
+    let feed = at("feed");
+    html! {
+        <div class="card" key={id} id={path.clone()} role="group" aria-label={format!("Work {}", work.name)}>
+            <div class="cardhead"><h4>{ &work.name }</h4>{ tools(Item::Workload(w), &path, &work.name, count, &view.edit) }</div>
+            <Name item={Item::Workload(w)} id={at("name")} label="Name of the work" value={work.name.clone()}
+                refusal={view.refusal.clone()} edit={view.edit.clone()} />
+            { number("results_per_year", "Results reported in a year", work.results_per_year.as_ref()).need(Need::Required)
+                .hint("Or product batches made. It may be uncertain: 1400 ± 100.").draw(view) }
+            { number("batch.samples", "Samples in a batch", work.batch_samples.as_ref()).need(Need::Default("1", DEFINITION))
+                .hint("As batches really leave, controls not counted.").draw(view) }
+            { number("batch.controls", "Controls in a batch", work.batch_controls.as_ref()).need(Need::Default("0", DEFINITION))
+                .hint("Blanks and other control samples that go with each batch.").draw(view) }
+            { Asked::amount(at("repeats"), "Results done again", Kind::Fraction, work.repeats.as_ref())
+                .need(Need::Default("0 %", DEFINITION)).draw(view) }
+            { yes("repeats_bring_controls", "Repeats bring their own controls", work.repeats_bring_controls).draw(view) }
+            { yes("controls_carry_feed", "Controls carry feed as a sample does", work.controls_carry_feed).draw(view) }
+            <Rows label="What one sample brings" kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L" rows={work.feed.clone()}
+                hint="Or one product batch. A route may say that it takes another amount."
+                said={said(&view.reckoned.problems, &feed)} show_all={view.state.view.show_all} path={feed} edit={view.edit.clone()} />
+            { Asked::text(at("present"), "The present route", work.present.clone()).need(Need::Required)
+                .hint("The one in use now; the others are compared with it.")
+                .ask(Ask::Choice(routes.iter().map(|r| (AttrValue::from((*r).to_owned()), AttrValue::from((*r).to_owned()))).collect())).draw(view) }
+        </div>
+    }
+}
+
+/// What is seldom needed: materials of the plan's own, the drain, and what later accounts will use.
+fn more(view: &View) -> Html {
+    let plan = view.plan();
+    let site = &plan.site;
+    let count = plan.materials.len();
+    let electricity = site.electricity.clone().unwrap_or_default();
+    let room = site.room.clone().unwrap_or_default();
+    let kept = "Kept in the plan; no figure of this version uses it yet.";
+    html! {
+        <>
+            <details class="more" open={count > 0}>
+                <summary>{ format!("Materials of the plan's own ({count})") }</summary>
+                <section id="materials" tabindex="-1" aria-label="Materials of the plan's own">
+                    <p class="hint">{ "For what the catalogue does not know, or knows otherwise. Every figure needs its source." }</p>
+                    { for plan.materials.iter().enumerate().map(|(i, material)| one_material(view, i, material, count)) }
+                    { add(view, "Add a material", Item::Material(0)) }
+                </section>
+            </details>
+            <details class="more">
+                <summary>{ "Drain, electricity and room" }</summary>
+                { Asked::text("site.drain_permit", "Permit for the drain", site.drain_permit.clone().unwrap_or_default())
+                    .hint("The drain is closed until a permit is named; never by dilution.").draw(view) }
+                { Asked::amount("site.electricity.climate", "CO2-equivalent of electricity", Kind::ClimatePerEnergy, electricity.climate.as_ref()).hint(kept).draw(view) }
+                { Asked::amount("site.electricity.price", "Price of electricity", Kind::PricePerEnergy, electricity.price.as_ref()).hint(kept).draw(view) }
+                { Asked::text("site.electricity.source", "Source of these figures", electricity.source.unwrap_or_default()).draw(view) }
+                { Asked::amount("site.room.volume", "Volume of the room", Kind::Volume, room.volume.as_ref()).hint(kept).draw(view) }
+                { Asked::amount("site.room.air_changes", "Air changes", Kind::Frequency, room.air_changes.as_ref()).hint(kept).draw(view) }
+                { Asked::amount("site.room.hood_capture", "Share that the hood captures", Kind::Fraction, room.hood_capture.as_ref()).hint(kept).draw(view) }
+            </details>
+        </>
+    }
+}
+
+fn one_material(view: &View, i: usize, material: &OwnMaterial, count: usize) -> Html {
+    let item = Item::Material(i);
+    let path = item.path(view.plan());
+    let id = view.state.document().ids.materials.get(i).copied().unwrap_or_default();
+    let value = |key: &str| text_of(material.fields.iter().find(|(k, _)| k == key).map(|(_, field)| field));
+    html! {
+        <div class="card" key={id} id={crate::edit::dom_id(&path)} role="group" aria-label={format!("Material {}", material.name)}>
+            <div class="cardhead"><h4>{ &material.name }</h4>{ tools(item, &path, &material.name, count, &view.edit) }</div>
+            <Name {item} id={format!("material-{id}-name")} label="Name of the material" value={material.name.clone()}
+                refusal={view.refusal.clone()} edit={view.edit.clone()} />
+            { for OWN_FIELDS.iter().map(|p| {
+                let at = thimbleworth::plan::below(&path, p.key);
+                let asked = match p.control {
+                    Control::Quantity(kind) => Asked::amount(at, p.label, kind, Some(&value(p.key))),
+                    Control::Choice(words) => Asked::text(at, p.label, value(p.key)).ask(Ask::Choice(options("solute (left out)", words))),
+                    _ => Asked::text(at, p.label, value(p.key)),
+                };
+                // "none" and "miscible" are answers too, which no amount could be.
+                let asked = match value(p.key).as_str() {
+                    "none" | "miscible" => Asked { kind: None, ..asked },
+                    _ => asked,
+                };
+                asked.hint(p.hint).need(p.need).draw(view)
+            }) }
+        </div>
+    }
+}
+
+/// The same as plain lines, for the report.
+fn printed(view: &View) -> Html {
+    let plan = view.plan();
+    let line = |label: &str, value: Option<String>| {
+        let value = value.filter(|v| !v.is_empty())?;
+        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ value }</dd></> })
+    };
+    let site = &plan.site;
+    let rows = |rows: &[(String, String)]| {
+        rows.iter().map(|(name, amount)| format!("{name} {amount}")).collect::<Vec<_>>().join(", ")
+    };
+    let mut lines = vec![
+        line("Site", Some(site.name.clone())),
+        line("Waste rules read", site.rules.clone()),
+        line("Date of the plan", site.as_of.clone()),
+        line("Temperature of the bench", site.bench_temperature.clone()),
+        line("Permit for the drain", site.drain_permit.clone()),
+        line("Notes", plan.notes.clone()),
+    ];
+    for stream in &site.streams {
+        lines.push(line(&format!("Stream {}", stream.name), Some(stream_words(stream))));
+    }
+    for material in &plan.materials {
+        let fields = material
+            .fields
+            .iter()
+            .map(|(k, v)| format!("{k} {}", text_of(Some(v))))
+            .collect::<Vec<_>>()
+            .join(", ");
+        lines.push(line(&format!("Material {}", material.name), Some(fields)));
+    }
+    for work in &plan.workloads {
+        let samples = text_of(work.batch_samples.as_ref());
+        let controls = work.batch_controls.as_ref().map_or("0".to_owned(), |c| text_of(Some(c)));
+        let mut parts = vec![format!("{} results a year", text_of(work.results_per_year.as_ref()))];
+        parts.push(format!("batches of {samples} samples and {controls} controls"));
+        parts.extend(work.repeats.as_ref().map(|r| format!("{r} done again")));
+        parts.push(format!("one sample brings {}", rows(&work.feed)));
+        parts.push(format!("present route {}", work.present));
+        lines.push(line(&format!("Work {}", work.name), Some(parts.join("; "))));
+    }
+    html! { <dl class="onpaper">{ for lines.into_iter().flatten() }</dl> }
 }

@@ -1,0 +1,298 @@
+//! Setting one field of a plan by its path.
+use super::path::keys;
+use thimbleworth::plan::{Electricity, Field, Plan, Room, Route, Site, Step, Workload};
+use thimbleworth::step::{TECHNIQUES, technique};
+
+/// Sets the field at `path`, or clears it; returns whether there is such a field.
+pub(super) fn set(plan: &mut Plan, path: &str, value: Option<Field>) -> bool {
+    let Some(keys) = keys(path) else { return false };
+    let keys: Vec<&str> = keys.iter().map(String::as_str).collect();
+    at_plan(plan, &keys, value).is_some()
+}
+
+/// A number as the document holds it: bare where JSON can hold it bare.
+#[must_use]
+pub fn number(text: &str) -> Option<Field> {
+    let text = text.trim();
+    if text.is_empty() {
+        return None;
+    }
+    Some(match serde_json::from_str::<serde_json::Number>(text) {
+        Ok(_) => Field::Number(text.to_owned()),
+        Err(_) => Field::Text(text.to_owned()),
+    })
+}
+
+/// A text; nothing where it is empty.
+#[must_use]
+pub fn text(text: &str) -> Option<Field> {
+    (!text.is_empty()).then(|| Field::Text(text.to_owned()))
+}
+
+fn words(value: Option<Field>) -> Option<String> {
+    match value {
+        Some(Field::Text(text) | Field::Number(text)) => Some(text),
+        Some(Field::YesNo(_) | Field::Rows(_)) | None => None,
+    }
+}
+
+fn yes(value: Option<&Field>) -> Option<bool> {
+    match value {
+        Some(Field::YesNo(yes)) => Some(*yes),
+        _ => None,
+    }
+}
+
+fn rows(value: Option<Field>) -> Vec<(String, String)> {
+    match value {
+        Some(Field::Rows(rows)) => rows,
+        _ => Vec::new(),
+    }
+}
+
+fn nth<'a, T>(list: &'a mut [T], position: &str) -> Option<&'a mut T> {
+    list.get_mut(position.parse::<usize>().ok()?)
+}
+
+fn at_plan(plan: &mut Plan, keys: &[&str], value: Option<Field>) -> Option<()> {
+    match keys {
+        ["title"] => plan.title = words(value).unwrap_or_default(),
+        ["notes"] => plan.notes = words(value),
+        ["site", rest @ ..] => at_site(&mut plan.site, rest, value)?,
+        ["materials", name, key] => {
+            let material = plan.materials.iter_mut().find(|m| m.name == *name)?;
+            put(&mut material.fields, key, value, |_| usize::MAX);
+        }
+        ["workloads", w, "routes", r, "steps", s, rest @ ..] => {
+            let route = nth(&mut nth(&mut plan.workloads, w)?.routes, r)?;
+            at_step(nth(&mut route.steps, s)?, rest, value)?;
+        }
+        ["workloads", w, "routes", r, rest @ ..] => {
+            at_route(nth(&mut nth(&mut plan.workloads, w)?.routes, r)?, rest, value)?;
+        }
+        ["workloads", w, rest @ ..] => at_workload(nth(&mut plan.workloads, w)?, rest, value)?,
+        _ => return None,
+    }
+    Some(())
+}
+
+fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
+    match keys {
+        ["name"] => site.name = words(value).unwrap_or_default(),
+        ["rules"] => site.rules = words(value),
+        ["as_of"] => site.as_of = words(value),
+        ["bench_temperature"] => site.bench_temperature = words(value),
+        ["drain_permit"] => site.drain_permit = words(value),
+        ["electricity", key] => {
+            let mut of = site.electricity.take().unwrap_or_default();
+            match *key {
+                "climate" => of.climate = words(value),
+                "price" => of.price = words(value),
+                "source" => of.source = words(value),
+                _ => return None,
+            }
+            site.electricity = (of != Electricity::default()).then_some(of);
+        }
+        ["room", key] => {
+            let mut of = site.room.take().unwrap_or_default();
+            match *key {
+                "volume" => of.volume = words(value),
+                "air_changes" => of.air_changes = words(value),
+                "hood_capture" => of.hood_capture = words(value),
+                _ => return None,
+            }
+            site.room = (of != Room::default()).then_some(of);
+        }
+        ["streams", i, key] => {
+            let stream = nth(&mut site.streams, i)?;
+            match *key {
+                "holds" => stream.holds = words(value),
+                "container" => stream.container = words(value),
+                "fill" => stream.fill = words(value),
+                "bulk_density" => stream.bulk_density = words(value),
+                "treatment" => stream.treatment = words(value),
+                _ => return None,
+            }
+        }
+        _ => return None,
+    }
+    Some(())
+}
+
+fn at_workload(work: &mut Workload, keys: &[&str], value: Option<Field>) -> Option<()> {
+    match keys {
+        ["results_per_year"] => work.results_per_year = value,
+        ["batch", "samples"] => work.batch_samples = value,
+        ["batch", "controls"] => work.batch_controls = value,
+        ["repeats"] => work.repeats = words(value),
+        ["repeats_bring_controls"] => work.repeats_bring_controls = yes(value.as_ref()),
+        ["controls_carry_feed"] => work.controls_carry_feed = yes(value.as_ref()),
+        ["feed"] => work.feed = rows(value),
+        ["present"] => work.present = words(value).unwrap_or_default(),
+        _ => return None,
+    }
+    Some(())
+}
+
+fn at_route(route: &mut Route, keys: &[&str], value: Option<Field>) -> Option<()> {
+    match keys {
+        ["feed"] => route.feed = value.map(|value| rows(Some(value))),
+        ["recovery"] => route.recovery = words(value),
+        ["equivalence"] => route.equivalence = words(value),
+        ["ph"] => route.ph = words(value),
+        ["ends"] => route.ends = rows(value),
+        ["ends", place] => put(&mut route.ends, place, words(value), |_| usize::MAX),
+        _ => return None,
+    }
+    Some(())
+}
+
+fn at_step(step: &mut Step, keys: &[&str], value: Option<Field>) -> Option<()> {
+    match keys {
+        ["per"] => step.per = words(value),
+        ["note"] => step.note = words(value),
+        ["measured", rule] => put(&mut step.measured, rule, words(value), |_| usize::MAX),
+        [key] => {
+            let params = technique(&step.technique).map_or(&[][..], |t| t.params);
+            put(&mut step.fields, key, value, |key| {
+                params.iter().position(|p| p.key == key).unwrap_or(usize::MAX)
+            });
+        }
+        _ => return None,
+    }
+    Some(())
+}
+
+/// Sets, adds or clears one of several named values; a new one goes before the first that ranks behind it.
+fn put<T>(list: &mut Vec<(String, T)>, key: &str, value: Option<T>, rank: impl Fn(&str) -> usize) {
+    match (list.iter().position(|(k, _)| k == key), value) {
+        (Some(i), Some(value)) => list[i].1 = value,
+        (Some(i), None) => {
+            list.remove(i);
+        }
+        (None, Some(value)) => {
+            let at = list.iter().position(|(k, _)| rank(k) > rank(key)).unwrap_or(list.len());
+            list.insert(at, (key.to_owned(), value));
+        }
+        (None, None) => {}
+    }
+}
+
+/// The value that stands at a field of a step.
+#[must_use]
+pub fn step_field<'a>(step: &'a Step, key: &str) -> Option<&'a Field> {
+    step.fields.iter().find(|(k, _)| k == key).map(|(_, field)| field)
+}
+
+/// A step with nothing but its technique.
+#[must_use]
+pub fn new_step(key: &str) -> Option<Step> {
+    TECHNIQUES.iter().find(|t| t.key == key).map(|t| Step { technique: t.key.into(), ..Step::default() })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::document::blank;
+
+    fn plan() -> Plan {
+        let mut plan = blank();
+        plan.workloads[0].routes[0].steps.push(new_step("soxhlet").expect("a technique"));
+        plan.materials
+            .push(thimbleworth::plan::OwnMaterial { name: "sorbent mix".into(), fields: Vec::new() });
+        plan
+    }
+
+    /// Every field that the page offers can be set, is then not what it was, and can be cleared again.
+    #[test]
+    fn every_field_is_set_and_cleared() {
+        let texts = [
+            "title",
+            "notes",
+            "site.name",
+            "site.rules",
+            "site.as_of",
+            "site.bench_temperature",
+            "site.drain_permit",
+            "site.electricity.climate",
+            "site.electricity.price",
+            "site.electricity.source",
+            "site.room.volume",
+            "site.room.air_changes",
+            "site.room.hood_capture",
+            "site.streams[0].holds",
+            "site.streams[0].fill",
+            "site.streams[0].bulk_density",
+            "site.streams[0].treatment",
+            r#"materials["sorbent mix"].density"#,
+            "workloads[0].results_per_year",
+            "workloads[0].batch.controls",
+            "workloads[0].repeats",
+            "workloads[0].routes[0].recovery",
+            "workloads[0].routes[0].equivalence",
+            "workloads[0].routes[0].ph",
+            "workloads[0].routes[0].ends.marc",
+            r#"workloads[0].routes[0].ends["second phase"]"#,
+            "workloads[0].routes[0].steps[0].per",
+            "workloads[0].routes[0].steps[0].note",
+            "workloads[0].routes[0].steps[0].charge",
+            r#"workloads[0].routes[0].steps[0].measured["condenser loss"]"#,
+        ];
+        for path in texts {
+            let (before, mut after) = (plan(), plan());
+            assert!(set(&mut after, path, text("12 g")), "{path}");
+            assert_ne!(after, before, "{path}");
+            assert!(set(&mut after, path, None));
+            assert_eq!(after, before, "{path}");
+        }
+    }
+
+    #[test]
+    fn rows_and_yes_no_have_their_own_form() {
+        let mut after = plan();
+        let feed = vec![("sediment".to_owned(), "10 g".to_owned())];
+        assert!(set(&mut after, "workloads[0].feed", Some(Field::Rows(feed.clone()))));
+        assert!(set(&mut after, "workloads[0].routes[0].feed", Some(Field::Rows(feed.clone()))));
+        assert!(set(&mut after, "workloads[0].controls_carry_feed", Some(Field::YesNo(false))));
+        assert_eq!(after.workloads[0].feed, feed);
+        assert_eq!(after.workloads[0].routes[0].feed.as_ref(), Some(&feed));
+        assert_eq!(after.workloads[0].controls_carry_feed, Some(false));
+        assert!(set(&mut after, "workloads[0].routes[0].feed", None));
+        assert_eq!(after.workloads[0].routes[0].feed, None);
+    }
+
+    #[test]
+    fn a_path_to_nothing_is_refused() {
+        for path in [
+            "",
+            "nothing",
+            "site.nothing",
+            "workloads[9].repeats",
+            "workloads[0].routes[0].steps[7].charge",
+            "a[",
+        ] {
+            let mut after = plan();
+            assert!(!set(&mut after, path, text("x")), "{path}");
+            assert_eq!(after, plan());
+        }
+    }
+
+    #[test]
+    fn fields_of_a_step_keep_the_order_of_the_technique() {
+        let mut after = plan();
+        for key in ["loss", "time", "charge"] {
+            set(&mut after, &format!("workloads[0].routes[0].steps[0].{key}"), text("1"));
+        }
+        let keys: Vec<&str> =
+            after.workloads[0].routes[0].steps[0].fields.iter().map(|(k, _)| k.as_str()).collect();
+        assert_eq!(keys, ["charge", "time", "loss"]);
+    }
+
+    #[test]
+    fn numbers_stay_bare_where_json_can_hold_them() {
+        assert_eq!(number("1400"), Some(Field::Number("1400".into())));
+        assert_eq!(number("1 400"), Some(Field::Text("1 400".into())));
+        assert_eq!(number("1400 ± 100"), Some(Field::Text("1400 ± 100".into())));
+        assert_eq!(number(" "), None);
+    }
+}

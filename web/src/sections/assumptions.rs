@@ -1,0 +1,101 @@
+//! Section "Assumptions, cautions and sources".
+use super::View;
+use crate::form::{cited, sentence, word};
+use crate::reckon::Book;
+use std::collections::BTreeSet;
+use thimbleworth::material::catalogue;
+use thimbleworth::plan::Severity;
+use thimbleworth::step::Caution;
+use yew::prelude::*;
+
+pub(super) fn draw(view: &View) -> Html {
+    let notes: Vec<_> = view.reckoned.problems.iter().filter(|p| p.severity == Severity::Note).collect();
+    html! {
+        <>
+            <h3>{ "Cautions" }</h3>
+            { cautions(view.book()) }
+            { view.works(|w| assumptions(view.book(), w)) }
+            if !notes.is_empty() {
+                <h3>{ "Worth knowing" }</h3>
+                <ul>{ for notes.into_iter().map(|p| html! { <li>{ sentence(p) }</li> }) }</ul>
+            }
+            <h3>{ "Methods and sources" }</h3>
+            { sources(view.book()) }
+            <p class="hint">{ "Codes, limits and classes are help for a licensed person, read as of the date of the plan; state or national rules may be stricter." }</p>
+        </>
+    }
+}
+
+fn each_route(book: &Book) -> impl Iterator<Item = (usize, usize)> {
+    book.works.iter().enumerate().flat_map(|(w, work)| (0..work.routes.len()).map(move |r| (w, r)))
+}
+
+fn cautions(book: &Book) -> Html {
+    let mut met: Vec<&'static Caution> = Vec::new();
+    for (w, r) in each_route(book) {
+        if let Some((_, account)) = book.route(w, r) {
+            for caution in &account.cautions {
+                if !met.iter().any(|c| c.key == caution.key) {
+                    met.push(caution);
+                }
+            }
+        }
+    }
+    if met.is_empty() {
+        return html! { <p class="empty">{ "No step brings a usual caution." }</p> };
+    }
+    html! {
+        <ul>{ for met.into_iter().map(|c| html! { <li class="caution">{ c.text }<span class="margin">{ format!(" {}.", cited(&c.source)) }</span></li> }) }</ul>
+    }
+}
+
+fn assumptions(book: &Book, w: usize) -> Html {
+    let routes = book.works.get(w).map_or(&[][..], |work| &work.routes);
+    html! {
+        <>
+            <h3>{ "Assumed, because the plan does not say" }</h3>
+            { for routes.iter().enumerate().filter_map(|(r, column)| {
+                let (route, _) = book.route(w, r)?;
+                let items: Vec<Html> = route.assumptions.iter().map(|a| {
+                    let step = a.path.rsplit_once("steps[").and_then(|(_, rest)| rest.split_once(']'))
+                        .and_then(|(s, _)| s.parse::<usize>().ok())
+                        .map_or(String::new(), |s| format!("step {}, ", s + 1));
+                    html! { <li>{ format!("{step}{}: {} ({})", crate::edit::lowered(&a.label), word(&a.value), cited(&a.source)) }</li> }
+                }).collect();
+                Some(html! {
+                    <>
+                        <h4>{ &column.name }</h4>
+                        if items.is_empty() { <p class="empty">{ "Nothing." }</p> } else { <ul>{ for items }</ul> }
+                    </>
+                })
+            }) }
+        </>
+    }
+}
+
+/// Every citation that the figures rest on: formulas, rules, figures of materials.
+fn sources(book: &Book) -> Html {
+    let mut cites: BTreeSet<String> = BTreeSet::new();
+    for (w, r) in each_route(book) {
+        let Some((route, account)) = book.route(w, r) else { continue };
+        cites.extend(account.figures.iter().map(|f| cited(&f.source)));
+        for step in &route.steps {
+            cites.extend(step.technique.rules.iter().map(|rule| cited(&rule.source)));
+            cites.extend(step.technique.params.iter().map(|p| cited(&p.source)));
+        }
+        cites.extend(route.assumptions.iter().map(|a| cited(&a.source)));
+        for input in route.inputs.iter().filter(|i| i.identity.starts_with("material/")) {
+            let cite = catalogue().source(&input.basis).map_or(input.basis.clone(), |s| s.cite.to_owned());
+            cites.insert(cite);
+        }
+        for material in &account.hazard.materials {
+            if let Some(source) = catalogue().source(&material.source) {
+                cites.insert(source.cite.to_owned());
+            }
+        }
+    }
+    if cites.is_empty() {
+        return html! { <p class="empty">{ "No figure stands yet." }</p> };
+    }
+    html! { <ul class="sources">{ for cites.into_iter().filter(|c| !c.is_empty()).map(|c| html! { <li>{ c }</li> }) }</ul> }
+}

@@ -1,0 +1,82 @@
+//! The pictures of a section. They follow the figures a moment later, so that no key stroke waits for a drawing.
+use crate::parts::ByRc;
+use crate::picture::{self, Per, Picture, to_html};
+use crate::reckon::{Basis, Book};
+use gloo::timers::callback::Timeout;
+use std::rc::Rc;
+use yew::prelude::*;
+
+/// How long after the last change the pictures follow.
+const FOLLOW_AFTER_MS: u32 = 150;
+
+/// What is drawn.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub(super) enum What {
+    /// Mass by place, every route.
+    Places,
+    /// The flow of one route; its place in the plan.
+    Flow(usize),
+    /// The headline figures of one route beside the present one.
+    Difference(usize),
+    /// The states of CO2 that the plan uses.
+    Co2,
+}
+
+#[derive(Clone, Properties, PartialEq)]
+pub(super) struct Props {
+    pub(super) book: ByRc<Book>,
+    pub(super) work: usize,
+    pub(super) basis: Basis,
+    pub(super) what: What,
+}
+
+fn per(basis: Basis) -> Per {
+    match basis {
+        Basis::Year | Basis::Month => Per::Year,
+        Basis::Batch => Per::Batch,
+        Basis::Result => Per::Result,
+        Basis::Product => Per::KgProduct,
+    }
+}
+
+fn draw(props: &Props) -> Option<Picture> {
+    let (book, w) = (&*props.book, props.work);
+    // Any route that can be accounted tells where its work stands in the account.
+    let routes = book.works.get(w)?.routes.len();
+    let (at, _) = (0..routes).find_map(|r| book.in_account(w, r))?;
+    match props.what {
+        What::Places => picture::mass_by_place(&format!("places-{w}"), &book.account, at, per(props.basis)),
+        What::Flow(r) => {
+            let (at, route) = book.in_account(w, r)?;
+            picture::flow(&format!("flow-{w}"), &book.account, at, route, per(props.basis))
+        }
+        What::Difference(r) => {
+            let program = book.account.program.as_ref()?;
+            picture::difference(&format!("difference-{w}-{r}"), program, at, book.beside(w, r)?)
+        }
+        What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
+    }
+}
+
+#[component]
+fn Drawn(props: &Props) -> Html {
+    draw(props).map_or_else(Html::default, |picture| to_html(&picture))
+}
+
+/// A picture that follows its figures.
+#[component]
+pub(super) fn Plate(props: &Props) -> Html {
+    let shown = use_state(|| None::<Props>);
+    {
+        let shown = shown.clone();
+        use_effect_with(props.clone(), move |props| {
+            let props = Props { book: ByRc(Rc::clone(&props.book.0)), ..props.clone() };
+            let timer = Timeout::new(FOLLOW_AFTER_MS, move || shown.set(Some(props)));
+            move || drop(timer)
+        });
+    }
+    match &*shown {
+        Some(props) => html! { <Drawn ..props.clone() /> },
+        None => Html::default(),
+    }
+}
