@@ -1,7 +1,7 @@
 // What can be typed, what is understood, and what is said when it cannot be. Numbers are those of the list of points.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { assertQuiet, insight, launch, open, openWith, smallPlan } from "./vocabulary.mjs";
+import { assertQuiet, insight, launch, open, openWith, smallPlan, unfold } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -97,6 +97,7 @@ test("15: a route, a step and a stream are copied rather than typed again", asyn
   assert.equal(await charge(page).nth(1).inputValue(), "300 mL");
   await page.getByRole("button", { name: "Duplicate: Large flask" }).click();
   assert.equal(await page.locator(".route").count(), 3);
+  await unfold(page, "solids");
   await page.getByRole("button", { name: "Duplicate: solids" }).click();
   assert.equal(await page.getByLabel("Name of the stream").nth(2).inputValue(), "solids 2");
   await close();
@@ -163,7 +164,7 @@ test("nothing moves while someone types, right or wrong", async () => {
     await charge(page).press("End");
     const start = await where();
     for (const key of ["Backspace", "Backspace", "Backspace", "Backspace", "Backspace", "Backspace", "2", "5", "0", " ", "m", "L", " ", "±", " ", "5", " ", "m", "L"]) {
-      await page.keyboard.press(key);
+      await (key.length === 1 ? page.keyboard.insertText(key) : page.keyboard.press(key));
       assert.deepEqual(await where(), start, `after ${key} at ${viewport.width}`);
     }
     await close();

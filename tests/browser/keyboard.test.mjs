@@ -1,7 +1,7 @@
 // Everything by keyboard: order, focus, undo, lists, dialogs, messages.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { assertQuiet, focused, give, insight, launch, open, openWith, picture, smallPlan } from "./vocabulary.mjs";
+import { assertQuiet, focused, give, insight, launch, open, openWith, picture, smallPlan, unfold } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -140,6 +140,7 @@ test("27: what is added takes the focus, what goes hands it on, and undo is offe
   const { page, close } = await openWith(browser, smallPlan());
   await page.getByRole("button", { name: "Add a stream" }).click();
   assert.equal(await focused(page), "site.streams[2].name");
+  await unfold(page, "flammable");
   await page.getByRole("button", { name: "Remove: flammable" }).click();
   assert.match(await page.evaluate(() => document.activeElement.closest("[id]").id || ""), /site\.streams\[0\]/);
   await page.getByText("Done: remove stream. Undo takes it back.").waitFor();
@@ -165,6 +166,7 @@ test("28: routes and steps change places by button, and the open form stays with
 
 test("references follow a stream that is renamed, and a name that is taken is refused at the field", async () => {
   const { page, close } = await openWith(browser, smallPlan());
+  await unfold(page, "flammable");
   const name = page.getByLabel("Name of the stream").first();
   await name.fill("solids");
   await name.blur();

@@ -190,3 +190,6 @@ export const insight = async (page) => (await page.locator(".insight p:not(.head
 
 /** The id of the element that has the focus. */
 export const focused = (page) => page.evaluate(() => document.activeElement.id || document.activeElement.textContent);
+
+/** Opens the fold of a waste stream. */
+export const unfold = (page, stream) => page.locator("details.card > summary", { hasText: new RegExp(`^\\s*${stream}`) }).click();

@@ -22,6 +22,9 @@ const READ_OUT_AFTER_MS: u32 = 900;
 /// How long after the last change the recovery copy is kept.
 const KEEP_AFTER_MS: u32 = 400;
 
+/// The most sentences of the finding that stand beside the account.
+const IN_SIGHT: usize = 6;
+
 impl Reducible for State {
     type Action = Action;
     fn reduce(self: Rc<Self>, action: Action) -> Rc<Self> {
@@ -111,10 +114,7 @@ pub(crate) fn App() -> Html {
     let handle = use_reducer(first);
     let dispatcher = handle.dispatcher();
     let state = Rc::new((*handle).clone());
-    let act = {
-        let dispatcher = dispatcher.clone();
-        use_callback((), move |action: Action, ()| dispatcher.dispatch(action))
-    };
+    let act = { use_callback((), move |action: Action, ()| dispatcher.dispatch(action)) };
     let edit = {
         let act = act.clone();
         use_callback((), move |edit: Edit, ()| act.emit(Action::Edit(edit)))
@@ -129,7 +129,6 @@ pub(crate) fn App() -> Html {
 
     let last = use_mut_ref(|| None::<Rc<Book>>);
     let reckoned = {
-        let last = last.clone();
         use_memo(ByRc(Rc::clone(state.document())), move |document| {
             let before = last.borrow().clone();
             let reckoned = Reckoned::new(&document.plan, &save(&document.plan), before.as_ref());
@@ -153,7 +152,7 @@ pub(crate) fn App() -> Html {
         }
     });
     {
-        let (kept, act, newest) = (kept.clone(), act.clone(), newest.clone());
+        let (kept, act, newest) = (kept.clone(), act.clone(), newest);
         use_effect_with((), move |()| {
             let (found, notice) = kept_copy();
             kept.set(found);
@@ -226,7 +225,8 @@ pub(crate) fn App() -> Html {
                     </nav>
                     <div class={classes!("insight", reckoned.old.then_some("old"))}>
                         <p class="head">{ "The finding as it stands" }</p>
-                        { for finding.iter().map(|sentence| html! { <p>{ sentence }</p> }) }
+                        { for finding.iter().take(IN_SIGHT).map(|sentence| html! { <p>{ sentence }</p> }) }
+                        if finding.len() > IN_SIGHT { <p><a href="#finding">{ format!("and {} more", finding.len() - IN_SIGHT) }</a></p> }
                     </div>
                 </aside>
                 <main id="main" tabindex="-1">

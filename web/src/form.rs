@@ -27,10 +27,11 @@ pub fn applies(technique: &Technique, step: &Step, param: &Param) -> bool {
 pub fn units(kind: Kind) -> String {
     let mut out: Vec<&str> = Vec::new();
     for example in kind.examples() {
-        if let Some((_, unit)) = example.split_once(' ') {
-            if unit.starts_with(|c: char| c.is_alphabetic() || "°%/µ".contains(c)) && !out.contains(&unit) {
-                out.push(unit);
-            }
+        if let Some((_, unit)) = example.split_once(' ')
+            && unit.starts_with(|c: char| c.is_alphabetic() || "°%/µ".contains(c))
+            && !out.contains(&unit)
+        {
+            out.push(unit);
         }
     }
     for unit in units_of(kind) {
@@ -76,6 +77,9 @@ pub fn word(text: &str) -> &str {
 #[must_use]
 pub fn cited(source: &Source) -> String {
     let standing = source.standing.words();
+    if source.cite == "definition" {
+        return standing.to_owned();
+    }
     if source.cite == standing || matches!(source.standing, Standing::Definition) {
         source.cite.to_owned()
     } else {
@@ -133,7 +137,7 @@ pub fn margin(param: &Param) -> String {
             _ => return String::new(),
         },
     };
-    if param.source == SITE { format!("{range}.") } else { format!("{range}. {}.", cited(&param.source)) }
+    if param.source == SITE { format!("{range}.") } else { format!("{range}; {}.", cited(&param.source)) }
 }
 
 /// The problem at a field, or at one of the rows in it: the worst.

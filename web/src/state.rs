@@ -200,12 +200,11 @@ impl State {
     /// The form of the route that a path lies in is opened, so that there is something to go to.
     fn go(&mut self, path: String) {
         let keys = crate::edit::keys(&path).unwrap_or_default();
-        if let [workloads, w, routes, r, ..] = keys.as_slice() {
-            if (workloads.as_str(), routes.as_str()) == ("workloads", "routes") {
-                if let (Ok(w), Ok(r)) = (w.parse(), r.parse()) {
-                    self.view.route = self.document().route_id(w, r).or(self.view.route);
-                }
-            }
+        if let [workloads, w, routes, r, ..] = keys.as_slice()
+            && (workloads.as_str(), routes.as_str()) == ("workloads", "routes")
+            && let (Ok(w), Ok(r)) = (w.parse(), r.parse())
+        {
+            self.view.route = self.document().route_id(w, r).or(self.view.route);
         }
         self.focus(path);
     }
@@ -235,8 +234,8 @@ impl State {
         true
     }
 
-    fn open(&mut self, from: From, plan: Plan, lines: Vec<String>) {
-        let (name, text, file) = match &from {
+    fn open(&mut self, from: &From, plan: Plan, lines: Vec<String>) {
+        let (name, text, file) = match from {
             From::File(name) => (format!("open {name}"), format!("{name} is open."), Some(name.clone())),
             From::Example => {
                 ("open the example".to_owned(), format!("The example “{}” is open.", plan.title), None)
@@ -257,8 +256,8 @@ impl State {
         self.view = View {
             route: self.first_route(),
             basis: self.view.basis,
-            show_all: from != From::Blank,
-            example: from == From::Example,
+            show_all: *from != From::Blank,
+            example: *from == From::Example,
             notice: Some(Notice { text, lines, wrong: false }),
             focus: self.view.focus.take(),
             ..View::default()
@@ -272,7 +271,7 @@ impl State {
         let changed = match action {
             Action::Edit(edit) => next.edit(&edit),
             Action::Open(from, plan, lines) => {
-                next.open(from, *plan, lines);
+                next.open(&from, *plan, lines);
                 true
             }
             Action::Saved(name) => {

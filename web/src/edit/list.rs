@@ -42,7 +42,7 @@ pub fn name_of(plan: &Plan, item: Item) -> Option<&str> {
 }
 
 /// A name that none of `taken` is: `base` itself, or with the first number from 2 that is free.
-fn free_name<'a>(base: &str, taken: impl Iterator<Item = &'a str> + Clone) -> String {
+fn free_name<'a>(base: &str, taken: &(impl Iterator<Item = &'a str> + Clone)) -> String {
     let mut name = base.to_owned();
     let mut n = 2;
     while taken.clone().any(|other| other == name) {
@@ -56,19 +56,19 @@ pub(super) fn add(document: &mut Document, item: Item, what: &str) -> Option<()>
     let Document { plan, ids } = document;
     match item {
         Item::Stream(_) => {
-            let name = free_name("stream", plan.site.streams.iter().map(|s| s.name.as_str()));
+            let name = free_name("stream", &plan.site.streams.iter().map(|s| s.name.as_str()));
             plan.site.streams.push(Stream { name, ..Stream::default() });
             let id = ids.give();
             ids.streams.push(id);
         }
         Item::Material(_) => {
-            let name = free_name("material", plan.materials.iter().map(|m| m.name.as_str()));
+            let name = free_name("material", &plan.materials.iter().map(|m| m.name.as_str()));
             plan.materials.push(OwnMaterial { name, fields: Vec::new() });
             let id = ids.give();
             ids.materials.push(id);
         }
         Item::Workload(_) => {
-            let name = free_name("Work", plan.workloads.iter().map(|w| w.name.as_str()));
+            let name = free_name("Work", &plan.workloads.iter().map(|w| w.name.as_str()));
             let workload = blank_workload(&name);
             let given = ids.give_workload(&workload);
             ids.workloads.push(given);
@@ -76,7 +76,7 @@ pub(super) fn add(document: &mut Document, item: Item, what: &str) -> Option<()>
         }
         Item::Route(w, _) => {
             let workload = plan.workloads.get_mut(w)?;
-            let name = free_name("Route", workload.routes.iter().map(|r| r.name.as_str()));
+            let name = free_name("Route", &workload.routes.iter().map(|r| r.name.as_str()));
             if workload.routes.is_empty() {
                 name.clone_into(&mut workload.present);
             }
@@ -100,21 +100,21 @@ pub(super) fn duplicate(document: &mut Document, item: Item) -> Option<()> {
     match item {
         Item::Stream(i) => {
             let mut copy = plan.site.streams.get(i)?.clone();
-            copy.name = free_name(&copy.name, plan.site.streams.iter().map(|s| s.name.as_str()));
+            copy.name = free_name(&copy.name, &plan.site.streams.iter().map(|s| s.name.as_str()));
             plan.site.streams.insert(behind, copy);
             let id = ids.give();
             ids.streams.insert(behind, id);
         }
         Item::Material(i) => {
             let mut copy = plan.materials.get(i)?.clone();
-            copy.name = free_name(&copy.name, plan.materials.iter().map(|m| m.name.as_str()));
+            copy.name = free_name(&copy.name, &plan.materials.iter().map(|m| m.name.as_str()));
             plan.materials.insert(behind, copy);
             let id = ids.give();
             ids.materials.insert(behind, id);
         }
         Item::Workload(w) => {
             let mut copy = plan.workloads.get(w)?.clone();
-            copy.name = free_name(&copy.name, plan.workloads.iter().map(|w| w.name.as_str()));
+            copy.name = free_name(&copy.name, &plan.workloads.iter().map(|w| w.name.as_str()));
             let given = ids.give_workload(&copy);
             plan.workloads.insert(behind, copy);
             ids.workloads.insert(behind, given);
@@ -122,7 +122,7 @@ pub(super) fn duplicate(document: &mut Document, item: Item) -> Option<()> {
         Item::Route(w, r) => {
             let workload = plan.workloads.get_mut(w)?;
             let mut copy = workload.routes.get(r)?.clone();
-            copy.name = free_name(&copy.name, workload.routes.iter().map(|r| r.name.as_str()));
+            copy.name = free_name(&copy.name, &workload.routes.iter().map(|r| r.name.as_str()));
             let given = ids.give_route(copy.steps.len());
             workload.routes.insert(behind, copy);
             ids.workloads.get_mut(w)?.routes.insert(behind, given);

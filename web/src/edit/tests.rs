@@ -22,8 +22,9 @@ fn document() -> Document {
 }
 
 fn done(change: Change) -> Document {
+    let shown = format!("{change:?}");
     let mut after = document();
-    assert!(Edit::list(change.clone()).apply(&mut after), "{change:?}");
+    assert!(Edit::list(change).apply(&mut after), "{shown}");
     assert_parallel(&after);
     after
 }

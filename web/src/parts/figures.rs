@@ -45,6 +45,7 @@ impl Sheet<'_> {
     fn unit(&self, measure: Measure, scale: &Scale) -> String {
         match (measure.extensive(), scale.unit) {
             (false, _) => String::new(),
+            (true, "containers") => self.basis.words().to_owned(),
             (true, unit) => format!("{unit} {}", self.basis.words()),
         }
     }

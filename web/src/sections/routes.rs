@@ -34,7 +34,7 @@ pub(super) fn draw(view: &View) -> Html {
 fn add_route(view: &View, w: usize) -> Html {
     let edit = view.edit.clone();
     let onclick = Callback::from(move |_: MouseEvent| {
-        edit.emit(Edit::list(Change::Add(Item::Route(w, 0), String::new())))
+        edit.emit(Edit::list(Change::Add(Item::Route(w, 0), String::new())));
     });
     html! { <button type="button" {onclick}>{ "Add a route" }</button> }
 }
@@ -183,7 +183,7 @@ fn AddStep(props: &AddProps) -> Html {
     let onclick = {
         let (edit, w, r, chosen) = (props.edit.clone(), props.w, props.r, chosen.clone());
         Callback::from(move |_: MouseEvent| {
-            edit.emit(Edit::list(Change::Add(Item::Step(w, r, 0), (*chosen).clone())))
+            edit.emit(Edit::list(Change::Add(Item::Step(w, r, 0), (*chosen).clone())));
         })
     };
     let group = |group: Group, label: &'static str| {
