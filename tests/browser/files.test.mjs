@@ -81,7 +81,7 @@ test("43: unsaved work is offered on the next visit, not imposed, and a saved fi
   await page.waitForFunction((key) => localStorage.getItem(key), KEY);
   page.on("dialog", (dialog) => dialog.accept());
   await page.reload();
-  await page.locator("#question").waitFor();
+  await page.locator("#assumptions").waitFor();
   assert.notEqual(await page.getByLabel("Title").inputValue(), "kept against a crash");
   await page.getByText("kept from an earlier visit: “kept against a crash”").waitFor();
   await page.getByRole("button", { name: "Open the kept copy" }).click();

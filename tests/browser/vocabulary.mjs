@@ -75,7 +75,7 @@ const unfold = () => {
 /** Opens `file` and waits until the account is drawn. */
 export async function open(browser, file = packed, options = {}) {
   const opened = await openRaw(browser, file, options);
-  await opened.page.locator("#question").waitFor({ timeout: 10_000 });
+  await opened.page.locator("#assumptions").waitFor({ timeout: 10_000 });
   return opened;
 }
 

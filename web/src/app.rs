@@ -138,6 +138,14 @@ pub(crate) fn App() -> Html {
     };
     let errors = reckoned.count(Severity::Error);
 
+    // The first section stands at once; the others follow in a second turn, so that the page can be used the sooner.
+    let whole = use_state_eq(|| false);
+    {
+        let whole = whole.clone();
+        use_effect_with((), move |()| Timeout::new(0, move || whole.set(true)).forget());
+    }
+    let sections = if *whole { &SECTIONS[..] } else { &SECTIONS[..1] };
+
     let kept = use_state(|| None::<(Option<String>, Plan)>);
     let wish = {
         let (act, newest) = (act.clone(), newest.clone());
@@ -232,7 +240,7 @@ pub(crate) fn App() -> Html {
                 <main id="main" tabindex="-1">
                     { report_head(&state, &finding) }
                     <Mend plan={Rc::clone(state.document())} reckoned={ByRc(reckoned.clone())} open={state.view.listed} act={act.clone()} />
-                    { for SECTIONS.iter().enumerate().map(|(i, section)| section.draw(i + 1, &view)) }
+                    { for sections.iter().enumerate().map(|(i, section)| section.draw(i + 1, &view)) }
                     <datalist id="catalogue">
                         { for state.plan().materials.iter().map(|m| html! { <option value={m.name.clone()} /> }) }
                         { names() }

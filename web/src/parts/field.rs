@@ -197,7 +197,7 @@ pub(crate) fn Field(props: &Props) -> Html {
         },
     };
     html! {
-        <div class={classes!("field", wrong.then_some("wrong"))}>
+        <div class={classes!("field", (props.ask == Ask::Amount).then_some("reads"), wrong.then_some("wrong"))}>
             <div class="ask">
                 <label for={id.clone()}>
                     { &props.label }
