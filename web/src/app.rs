@@ -142,7 +142,10 @@ pub(crate) fn App() -> Html {
     let whole = use_state_eq(|| false);
     {
         let whole = whole.clone();
-        use_effect_with((), move |()| Timeout::new(0, move || whole.set(true)).forget());
+        use_effect_with((), move |()| {
+            let timer = Timeout::new(0, move || whole.set(true));
+            move || drop(timer)
+        });
     }
     let sections = if *whole { &SECTIONS[..] } else { &SECTIONS[..1] };
 
