@@ -61,13 +61,13 @@ export async function openRaw(browser, file, options = {}) {
     await page.emulateMedia({ forcedColors: forced ? "active" : null, media: print ? "print" : null });
   }
   if (prepare) await page.addInitScript(prepare);
-  if (!folded) await page.addInitScript(unfold);
+  if (!folded) await page.addInitScript(stepsOpen);
   if (file) await page.goto(pathToFileURL(file).href);
   return { page, seen, close: () => profile.close() };
 }
 
 /** Opens every step's card as soon as it is drawn, so that a scenario need not unfold it before it types. */
-const unfold = () => {
+const stepsOpen = () => {
   const open = () => document.querySelectorAll("details.step:not([open])").forEach((card) => (card.open = true));
   document.addEventListener("DOMContentLoaded", () => new MutationObserver(open).observe(document.body, { childList: true, subtree: true }));
 };
