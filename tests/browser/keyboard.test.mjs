@@ -199,6 +199,21 @@ test("20: errors are listed with links in the words of the fields, and a link le
   await close();
 });
 
+test("a step is folded into its line, says there what has to be mended, and opens when a link leads into it", async () => {
+  const broken = smallPlan((plan) => {
+    plan.workloads[0].routes[0].steps[0].charge = "300 m";
+  });
+  const { page, close } = await openWith(browser, broken, { folded: true });
+  const step = page.locator("details.step").first();
+  assert.equal(await step.evaluate((card) => card.open), false);
+  assert.match(await step.locator("summary").innerText(), /Solvent in the flask 300 m[^]*1 thing to mend/);
+  await page.getByRole("button", { name: "Print the report" }).click();
+  await page.locator("#mend li a").first().click();
+  assert.equal(await focused(page), "workloads[0].routes[0].steps[0].charge");
+  assert.equal(await step.evaluate((card) => card.open), true);
+  await close();
+});
+
 test("29: the working is a dialog that takes the focus, closes with Escape and gives the focus back", async () => {
   const { page, close } = await openWith(browser, smallPlan());
   const figure = page.locator("table[id^=goes-to] button.figure").first();

@@ -53,7 +53,7 @@ function watch(context) {
 
 /** Opens `file` in a fresh profile without waiting for the program. */
 export async function openRaw(browser, file, options = {}) {
-  const { forced, print, prepare, ...context } = options;
+  const { forced, print, prepare, folded, ...context } = options;
   const profile = await browser.newContext({ viewport: { width: 1280, height: 900 }, ...context });
   const seen = watch(profile);
   const page = await profile.newPage();
@@ -61,9 +61,16 @@ export async function openRaw(browser, file, options = {}) {
     await page.emulateMedia({ forcedColors: forced ? "active" : null, media: print ? "print" : null });
   }
   if (prepare) await page.addInitScript(prepare);
+  if (!folded) await page.addInitScript(stepsOpen);
   if (file) await page.goto(pathToFileURL(file).href);
   return { page, seen, close: () => profile.close() };
 }
+
+/** Opens every step's card as soon as it is drawn, so that a scenario need not unfold it before it types. */
+const stepsOpen = () => {
+  const open = () => document.querySelectorAll("details.step:not([open])").forEach((card) => (card.open = true));
+  document.addEventListener("DOMContentLoaded", () => new MutationObserver(open).observe(document.body, { childList: true, subtree: true }));
+};
 
 /** Opens `file` and waits until the account is drawn. */
 export async function open(browser, file = packed, options = {}) {

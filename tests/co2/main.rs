@@ -3,6 +3,7 @@
 #![allow(clippy::unwrap_used, clippy::panic)]
 
 mod consistency;
+mod inverse;
 mod naive;
 mod refusals;
 mod saturation;

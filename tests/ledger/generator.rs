@@ -15,17 +15,17 @@ impl Chance {
     }
 
     /// A whole number from `low` to `high`, both included.
-    pub(crate) fn from_to(&mut self, low: u64, high: u64) -> u64 {
+    pub(crate) fn between(&mut self, low: u64, high: u64) -> u64 {
         self.count += 1;
         low + keyed_bits(self.key.wrapping_mul(0x9E37_79B9), self.count) % (high - low + 1)
     }
 
     pub(crate) fn one_in(&mut self, n: u64) -> bool {
-        self.from_to(1, n) == 1
+        self.between(1, n) == 1
     }
 
     fn of<'a>(&mut self, words: &[&'a str]) -> &'a str {
-        let i = self.from_to(0, words.len() as u64 - 1);
+        let i = self.between(0, words.len() as u64 - 1);
         words[usize::try_from(i).unwrap()]
     }
 }
@@ -65,54 +65,54 @@ impl Writer {
 
     fn spread(&mut self, text: String) -> String {
         // The number is taken whether it is used or not, so that the style does not change the plan.
-        let percent = self.chance.from_to(1, 12);
+        let percent = self.chance.between(1, 12);
         if self.style.uncertain { format!("{text} ± {percent} %") } else { text }
     }
 
     fn ml(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         let text = [format!("{n} mL"), format!("{} L", thousandths(n)), format!("{n} cm3")];
         self.spread(text[self.style.units].clone())
     }
 
     fn g(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         let text = [format!("{n} g"), format!("{} kg", thousandths(n)), format!("{} mg", n * 1000)];
         self.spread(text[self.style.units].clone())
     }
 
     fn minutes(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         let text = [format!("{n} min"), format!("{} s", n * 60), format!("{n} min")];
         self.spread(text[self.style.units].clone())
     }
 
     fn celsius(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         [format!("{n} °C"), format!("{}.15 K", n + 273), format!("{n} °C")][self.style.units].clone()
     }
 
     fn bar(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         [format!("{n} bar"), format!("{}.{} MPa", n / 10, n % 10), format!("{} kPa", n * 100)]
             [self.style.units]
             .clone()
     }
 
     fn watt(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
+        let n = self.chance.between(low, high);
         let text = [format!("{n} W"), format!("{} kW", thousandths(n)), format!("{n} J/s")];
         self.spread(text[self.style.units.min(1)].clone())
     }
 
     fn percent(&mut self, low: u64, high: u64) -> String {
-        let n = self.chance.from_to(low, high);
-        let tenths = self.chance.from_to(1, 9);
+        let n = self.chance.between(low, high);
+        let tenths = self.chance.between(1, 9);
         if self.style.uncertain { format!("{n} % ± 0.{tenths} %") } else { format!("{n} %") }
     }
 
     fn hold_up(&mut self) -> String {
-        let n = self.chance.from_to(50, 900);
+        let n = self.chance.between(50, 900);
         let text = [
             format!("{} mL/g", thousandths(n)),
             format!("{} L/kg", thousandths(n)),
@@ -122,7 +122,7 @@ impl Writer {
     }
 
     fn solvent(&mut self) -> Value {
-        match self.chance.from_to(0, 3) {
+        match self.chance.between(0, 3) {
             0 => json!("ethyl acetate"),
             1 => json!({ "n-hexane": "50 %", "acetone": "50 %" }),
             2 => json!({ "dichloromethane": "30 % w/w", "acetone": "70 % w/w" }),
@@ -139,8 +139,8 @@ impl Writer {
     }
 
     /// A way of extracting a solid; the last word says how much liquor is left at least, in mL.
-    fn from_solid(&mut self) -> (Vec<Value>, u64) {
-        match self.chance.from_to(0, 4) {
+    fn extract_a_solid(&mut self) -> (Vec<Value>, u64) {
+        match self.chance.between(0, 4) {
             0 => {
                 let mut step = json!({ "step": "soxhlet", "solvent": self.solvent(), "charge": self.ml(150, 400),
                     "time": self.minutes(300, 1400), "heater": self.watt(100, 400), "extracts": { "oil": self.percent(20, 80) },
@@ -150,7 +150,7 @@ impl Writer {
             }
             1 => {
                 let mut step = json!({ "step": "ultrasonic", "solvent": self.solvent(), "charge": self.ml(60, 120),
-                    "portions": self.chance.from_to(1, 4), "time": self.minutes(2, 20), "power": self.watt(100, 900),
+                    "portions": self.chance.between(1, 4), "time": self.minutes(2, 20), "power": self.watt(100, 900),
                     "extracts": { "oil": self.percent(10, 60) }, "loss": self.percent(1, 8), "hold_up": self.hold_up() });
                 self.measured(&mut step, &["lost to air", "held in the marc"]);
                 (vec![step], 20)
@@ -165,7 +165,7 @@ impl Writer {
             }
             3 => {
                 let mut out = Vec::new();
-                let stages = self.chance.from_to(1, 3);
+                let stages = self.chance.between(1, 3);
                 for stage in 1..=stages {
                     let mut step = json!({ "step": "supercritical", "temperature": self.celsius(40, 120),
                         "pressure": self.bar(120, 450), "vessel": self.ml(60, 90), "metered": "pump head",
@@ -198,15 +198,15 @@ impl Writer {
     }
 
     fn mass_of_flow(&mut self) -> String {
-        let n = self.chance.from_to(1, 4);
+        let n = self.chance.between(1, 4);
         let text = [format!("{n} mL/min"), format!("{} L/min", thousandths(n)), format!("{n} cm3/min")];
         self.spread(text[self.style.units].clone())
     }
 
-    fn from_water(&mut self) -> (Vec<Value>, u64) {
+    fn extract_water(&mut self) -> (Vec<Value>, u64) {
         if self.chance.one_in(2) {
             let mut step = json!({ "step": "liquid-liquid", "solvent": { "dichloromethane": "85 %", "acetone": "15 %" },
-                "charge": self.ml(40, 90), "portions": self.chance.from_to(1, 4), "distribution": { "acetone": "0.7", "oil": "25" },
+                "charge": self.ml(40, 90), "portions": self.chance.between(1, 4), "distribution": { "acetone": "0.7", "oil": "25" },
                 "loss": self.percent(1, 5) });
             self.measured(&mut step, &["dissolved in the water", "lost to air"]);
             (vec![step], 15)
@@ -227,7 +227,7 @@ impl Writer {
         if self.chance.one_in(2) {
             let condensate = self.chance.of(&["store", "waste", "elsewhere"]);
             let to = if least_ml > 10 { self.ml(2, 5) } else { "1 mL".to_owned() };
-            let mut step = match self.chance.from_to(0, 2) {
+            let mut step = match self.chance.between(0, 2) {
                 0 => {
                     json!({ "step": "concentrate", "by": "rotary evaporator", "to": to, "condensate": condensate,
                     "loss": self.percent(2, 9), "time": self.minutes(5, 30), "power": self.watt(500, 1500) })
@@ -266,7 +266,7 @@ impl Writer {
     /// A route; `product` where its liquor is what the work is done for.
     pub(crate) fn route(&mut self, name: &str, product: bool) -> Value {
         let solid = product || self.chance.one_in(2);
-        let (mut steps, least_ml) = if solid { self.from_solid() } else { self.from_water() };
+        let (mut steps, least_ml) = if solid { self.extract_a_solid() } else { self.extract_water() };
         let feed = if solid {
             json!({ "sediment": self.g(12, 40), "water": self.g(1, 5), "oil": self.g(1, 4) })
         } else {
@@ -300,7 +300,7 @@ impl Writer {
 pub(crate) fn plan(routes: &[Value], seed: u64, style: Style) -> Value {
     let mut chance = Chance::new(seed ^ 0xB00C);
     let repeats =
-        if style.uncertain { "3 % ± 1 %".to_owned() } else { format!("{} %", chance.from_to(0, 9)) };
+        if style.uncertain { "3 % ± 1 %".to_owned() } else { format!("{} %", chance.between(0, 9)) };
     json!({
         "thimbleworth": 1,
         "title": "A plan made by a number",
@@ -311,7 +311,7 @@ pub(crate) fn plan(routes: &[Value], seed: u64, style: Style) -> Value {
         "materials": { "oil": { "class": "solute", "source": "made up for this test" } },
         "workloads": [{
             "name": "w", "results_per_year": style.results,
-            "batch": { "samples": chance.from_to(1, 13), "controls": chance.from_to(0, 4) }, "repeats": repeats,
+            "batch": { "samples": chance.between(1, 13), "controls": chance.between(0, 4) }, "repeats": repeats,
             "repeats_bring_controls": chance.one_in(2), "controls_carry_feed": chance.one_in(2),
             "feed": {}, "present": routes[0]["name"], "routes": routes
         }]

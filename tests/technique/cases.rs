@@ -66,6 +66,27 @@ fn where_the_flow_is_metered_is_never_left_open() {
     assert!(account.problems.iter().any(|p| p.path.ends_with("steps[0].metered")), "{:#?}", account.problems);
 }
 
+/// A loop without a compressor recovers no more than the receiver's pressure lets it: from 250 bar to a receiver at 55 bar
+/// 22 % of the fill is lost (the project's notes on practice, recomputed). The temperatures are not stated there; 60 °C in
+/// the vessel and 20 °C at the end of recovery are our reading, under which the number comes out.
+#[test]
+fn a_loop_loses_what_the_receiver_cannot_take() {
+    let account = account_of("loop.json");
+    let (_, found) = route(&account, "loop");
+    let value = |id: &str| found.value(id).unwrap();
+    close(value("co2.vented") / value("co2.used"), 0.22, 0.005, "share of the fill that is vented");
+    close(value("co2.make_up"), value("co2.vented"), 1e-12, "made up");
+    // Neither vent nor make-up is a share of what is sent round: twice the time changes neither.
+    let longer = text_of("loop.json").replace("\"time\": \"2 h\"", "\"time\": \"4 h\"");
+    let account = super::sound(&longer);
+    let (_, twice) = route(&account, "loop");
+    close(twice.value("co2.circulated").unwrap(), 2.0 * value("co2.circulated"), 1e-12, "sent round");
+    assert_eq!(twice.value("co2.vented").unwrap().to_bits(), value("co2.vented").to_bits());
+    // The void is vented, not the vessel.
+    let note = |symbol: &str| found.trace.notes.iter().find(|n| n.symbol == symbol).unwrap().value_si;
+    close(value("co2.vented") / 200.0, 30e-3 * note("ρ_l"), 1e-12, "vented in one run");
+}
+
 /// Water takes up dichloromethane once: the wrong answer of three times as much is 47.9 g, and with the catalogue's own
 /// solubility the figure lies between 13 and 20 g (project's worked case).
 #[test]

@@ -142,7 +142,7 @@ fn every_default_reads_and_lies_within_its_own_bounds() {
                 }
                 Control::YesNo => assert!(["true", "false"].contains(&text), "{at} = {text}"),
                 Control::Place => {
-                    assert!(thimbleworth::ledger::Place::named(text).is_some(), "{at} = {text}")
+                    assert!(thimbleworth::ledger::Place::named(text).is_some(), "{at} = {text}");
                 }
                 Control::Material => {
                     assert!(thimbleworth::material::catalogue().find(text).is_ok(), "{at} = {text}");

@@ -19,10 +19,10 @@ fn drawn_l(account: &Account, workload: usize, route: usize) -> f64 {
     let mut litres = 0.0;
     for (m, nature) in program.materials.iter().zip(&program.natures) {
         let id = format!("mass.drawn.{}", m.name.replace(' ', "-"));
-        if let (Some(kg), Some(density)) = (found.value(&id), nature.density) {
-            if m.name != "carbon dioxide" {
-                litres += 1000.0 * kg / program.inputs[density.0 as usize].central_si;
-            }
+        if let (Some(kg), Some(density)) = (found.value(&id), nature.density)
+            && m.name != "carbon dioxide"
+        {
+            litres += 1000.0 * kg / program.inputs[density.0 as usize].central_si;
         }
     }
     litres

@@ -101,6 +101,9 @@ fn json<T: Serialize>(document: &T) -> Result<String, Refusal> {
     Ok(text + "\n")
 }
 
+/// A figure, and the range of temperature in which its law holds; K.
+type Known = (Option<Figure>, Option<(f64, f64)>);
+
 /// Every figure that is known, properties at 20 °C.
 fn figures(catalogue: &Catalogue, s: &Substance) -> Vec<FigureDocument> {
     let fixed = |figure: Option<&Figure>| (figure.cloned(), None);
@@ -147,7 +150,7 @@ fn figures(catalogue: &Catalogue, s: &Substance) -> Vec<FigureDocument> {
         ("unit_mass_kg", "mass of one piece", Kind::Mass, fixed(s.unit_mass_kg.as_ref())),
         ("water_capacity_kg_kg", "water taken up", Kind::MassPerMass, fixed(s.water_capacity_kg_kg.as_ref())),
     ];
-    let known = |(key, title, kind, (figure, range)): (_, _, _, (Option<Figure>, Option<(f64, f64)>))| {
+    let known = |(key, title, kind, (figure, range)): (_, _, _, Known)| {
         let figure = figure?;
         let source = catalogue.source(&figure.source);
         Some(FigureDocument {

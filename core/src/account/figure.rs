@@ -1,7 +1,7 @@
 //! Figures as data, and their evaluation over one run.
 
 use crate::chance::{Draw, In};
-use crate::ledger::{Direction, Material, Place, Trace, Utility};
+use crate::ledger::{Cells, Direction, Material, Place, Trace, Utility};
 use crate::program::Desk;
 use crate::source::Source;
 
@@ -92,6 +92,17 @@ pub enum Factor {
     Over(In),
 }
 
+impl Factor {
+    /// What to multiply with, where it is a number; 1 where it is a division.
+    const fn number(self) -> f64 {
+        match self {
+            Self::One | Self::Over(_) => 1.0,
+            Self::Minus => -1.0,
+            Self::Times(factor) => factor,
+        }
+    }
+}
+
 /// One cell of the book with its factor.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Term {
@@ -103,19 +114,21 @@ pub struct Term {
     pub material: Material,
     /// What the cell is multiplied with.
     pub factor: Factor,
+    /// Where the cell lies in the book of its route, and the factor as a number, once that is known.
+    ready: Option<(u32, f64)>,
 }
 
 impl Term {
     /// What has come into a place.
     #[must_use]
     pub const fn into(place: Place, material: Material) -> Self {
-        Self { place, direction: Direction::Into, material, factor: Factor::One }
+        Self { place, direction: Direction::Into, material, factor: Factor::One, ready: None }
     }
 
     /// What has gone out of a place.
     #[must_use]
     pub const fn out_of(place: Place, material: Material) -> Self {
-        Self { place, direction: Direction::OutOf, material, factor: Factor::One }
+        Self { place, direction: Direction::OutOf, material, factor: Factor::One, ready: None }
     }
 
     /// The same cell with another factor.
@@ -186,17 +199,24 @@ impl Draft {
 
     /// The figures without the cells that no posting touches. The sequence of postings is the same in every draw, so that
     /// those cells are empty in every draw too.
-    pub(super) fn kept_to(mut self, trace: &Trace) -> Vec<Figure> {
-        let mut touched: Vec<(Place, Direction, Material)> = Vec::new();
+    pub(super) fn kept_to(mut self, trace: &Trace, cells: &Cells) -> Vec<Figure> {
+        let mut touched: Vec<bool> = Vec::new();
         for p in &trace.postings {
-            touched.push((p.from, Direction::OutOf, p.material));
-            touched.push((p.to, Direction::Into, p.material));
+            for (place, direction) in [(p.from, Direction::OutOf), (p.to, Direction::Into)] {
+                let i = cells.cell(place, direction, p.material) as usize;
+                if touched.len() <= i {
+                    touched.resize(i + 1, false);
+                }
+                touched[i] = true;
+            }
         }
-        touched.sort_unstable();
-        touched.dedup();
         for figure in &mut self.figures {
             if let How::Sum(terms) = &mut figure.how {
-                terms.retain(|t| touched.binary_search(&(t.place, t.direction, t.material)).is_ok());
+                terms.retain_mut(|t| {
+                    let cell = cells.cell(t.place, t.direction, t.material);
+                    t.ready = Some((cell, t.factor.number()));
+                    touched.get(cell as usize) == Some(&true)
+                });
             }
         }
         self.figures
@@ -212,12 +232,16 @@ pub fn evaluate(figures: &[Figure], desk: &Desk, x: Draw<'_>, out: &mut [f64]) {
             How::Sum(terms) => {
                 let mut sum = 0.0;
                 for term in terms {
-                    let kg = desk.cells.passed(term.place, term.direction, term.material);
+                    let (kg, number) = match term.ready {
+                        Some((cell, number)) => (desk.cells.passed_at(cell), number),
+                        None => (
+                            desk.cells.passed(term.place, term.direction, term.material),
+                            term.factor.number(),
+                        ),
+                    };
                     sum += match term.factor {
-                        Factor::One => kg,
-                        Factor::Minus => -kg,
-                        Factor::Times(factor) => kg * factor,
                         Factor::Over(slot) => kg / x.get(slot),
+                        Factor::One | Factor::Minus | Factor::Times(_) => kg * number,
                     };
                 }
                 sum

@@ -12,6 +12,7 @@ pub(super) fn slug(name: &str) -> String {
 }
 
 /// The name of a place, streams by the site's names.
+#[must_use]
 pub fn place_name(site: &SiteUse, place: Place) -> String {
     place
         .stream_index()

@@ -94,9 +94,12 @@ pub fn account_text(text: &str) -> Account {
     let opened = open(text);
     let usable = opened.usable();
     let mut problems = opened.problems;
-    let mut account = match &opened.plan {
+    let mut account = match opened.plan {
         // A plan with errors of shape is resolved all the same, so that errors of meaning are told with them.
-        Some(plan) => self::account(plan),
+        Some(plan) => {
+            let (program, workloads, problems) = drawn_up(&plan);
+            Account { plan: Some(plan), program, workloads, problems }
+        }
         None => Account { plan: None, program: None, workloads: Vec::new(), problems: Vec::new() },
     };
     if !usable {
@@ -115,6 +118,11 @@ pub fn account_text(text: &str) -> Account {
 /// Accounts for every route of a plan.
 #[must_use]
 pub fn account(plan: &Plan) -> Account {
+    let (program, workloads, problems) = drawn_up(plan);
+    Account { plan: Some(plan.clone()), program, workloads, problems }
+}
+
+fn drawn_up(plan: &Plan) -> (Option<Program>, Vec<WorkloadAccount>, Vec<Problem>) {
     let resolved = resolve(plan);
     let mut problems = resolved.problems;
     let mut workloads = Vec::new();
@@ -126,7 +134,7 @@ pub fn account(plan: &Plan) -> Account {
         }
     }
     sort(&mut problems);
-    Account { plan: Some(plan.clone()), program: resolved.program, workloads, problems }
+    (resolved.program, workloads, problems)
 }
 
 /// Worst first; among equals in the order of the document.
@@ -152,7 +160,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     energy::draw_up(&mut draft, &desk);
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
-    let figures = draft.kept_to(&trace);
+    let figures = draft.kept_to(&trace, &desk.cells);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
     let mut product_kg = 0.0;
@@ -286,6 +294,14 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
                 _ => format!("an earlier step that leaves something in the {}", at(place)),
             },
         ),
+        Halt::NoLiquid { place } => (
+            format!("the step shakes a liquid in the {}, and there is none", at(place)),
+            "a feed with water, such as { \"water\": \"1 L\" }".to_owned(),
+        ),
+        Halt::Occupied { place, left_kg } => (
+            format!("the step works through the {}, where {} still lies", at(place), show(left_kg, Kind::Mass)),
+            "let the vessel down in the stage before (let_down true), or place what lies there with \"discard\"".to_owned(),
+        ),
         Halt::FinerBasis { left_kg } => (
             format!(
                 "the step happens more often than the one before it while {} still lies on the bench",
@@ -299,7 +315,10 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
                 show(left_kg, Kind::Mass),
                 at(place)
             ),
-            format!("ends with \"{}\", or a stream of that kind under site.streams", at(place)),
+            match place {
+                Place::VAPOUR => "let_down true in the last stage, or under ends a place for \"vapour\"".to_owned(),
+                _ => format!("under ends a place for \"{}\", or a stream of that kind under site.streams", at(place)),
+            },
         ),
         Halt::DoesNotFit { wanted_m3, there_m3 } => (
             format!("{} has to fit into {}", show(wanted_m3, Kind::Volume), show(there_m3, Kind::Volume)),
@@ -313,7 +332,14 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
             ),
             "a smaller volume to be left, or no concentration".to_owned(),
         ),
-        Halt::Co2(e) => (e.to_string(), "another temperature or pressure".to_owned()),
+        Halt::Co2(e) => {
+            // The sentence of a state says what would do after its last semicolon.
+            let text = e.to_string();
+            text.rsplit_once("; ").map_or_else(
+                || (text.clone(), "another temperature or pressure".to_owned()),
+                |(found, need)| (found.to_owned(), need.to_owned()),
+            )
+        }
         Halt::NotANumber { rule: r } => (
             format!("\"{}\" comes to an amount that is negative or not a finite number", rule(r)),
             "check the amounts of this step".to_owned(),

@@ -47,6 +47,37 @@ pub enum StateError {
         /// Temperature found, K.
         temperature_k: f64,
     },
+    /// Outside the triple and the critical pressure nothing boils.
+    NoBoiling {
+        /// Pressure found, Pa.
+        pressure_pa: f64,
+    },
+    /// No fluid state of the range has this enthalpy at this pressure.
+    Enthalpy {
+        /// Enthalpy found, J/kg.
+        enthalpy_j_kg: f64,
+        /// Pressure found, Pa.
+        pressure_pa: f64,
+        /// Enthalpy at the end of the range, J/kg.
+        bound_j_kg: f64,
+        /// Temperature at the end of the range, K.
+        temperature_k: f64,
+        /// Whether it lies below the lower end.
+        below: bool,
+    },
+    /// No fluid state of the range has this entropy at this pressure.
+    Entropy {
+        /// Entropy found, J/(kg K).
+        entropy_j_kg_k: f64,
+        /// Pressure found, Pa.
+        pressure_pa: f64,
+        /// Entropy at the end of the range, J/(kg K).
+        bound_j_kg_k: f64,
+        /// Temperature at the end of the range, K.
+        temperature_k: f64,
+        /// Whether it lies below the lower end.
+        below: bool,
+    },
     /// No pressure up to 800 MPa makes it solid at this temperature.
     NoMelting {
         /// Temperature found, K.
@@ -84,6 +115,19 @@ struct Pressure(f64);
 impl fmt::Display for Pressure {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         write!(f, "{:.4} bar ({:.0} Pa)", self.0 / 1e5, self.0)
+    }
+}
+
+/// What lies beyond the end of the range, and what to do.
+struct Beyond(bool);
+
+impl fmt::Display for Beyond {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        f.write_str(if self.0 {
+            "below that a part of it is solid, which the equation cannot describe: state a higher value or pressure"
+        } else {
+            "above that is the end of the equation's range: state a lower value"
+        })
     }
 }
 
@@ -141,6 +185,31 @@ impl fmt::Display for StateError {
                  state a lower temperature",
                 Temperature(temperature_k),
                 Temperature(super::CRITICAL_TEMPERATURE_K),
+            ),
+            Self::NoBoiling { pressure_pa } => write!(
+                f,
+                "CO2 at {} has no boiling temperature: it boils from {} to below {}; state a pressure in between",
+                Pressure(pressure_pa),
+                Pressure(super::TRIPLE_PRESSURE_PA),
+                Pressure(super::CRITICAL_PRESSURE_PA),
+            ),
+            Self::Enthalpy { enthalpy_j_kg, pressure_pa, bound_j_kg, temperature_k, below } => write!(
+                f,
+                "no fluid CO2 at {} has an enthalpy of {:.2} kJ/kg: at {} it has {:.2} kJ/kg; {}",
+                Pressure(pressure_pa),
+                enthalpy_j_kg / 1e3,
+                Temperature(temperature_k),
+                bound_j_kg / 1e3,
+                Beyond(below),
+            ),
+            Self::Entropy { entropy_j_kg_k, pressure_pa, bound_j_kg_k, temperature_k, below } => write!(
+                f,
+                "no fluid CO2 at {} has an entropy of {:.4} kJ/(kg K): at {} it has {:.4} kJ/(kg K); {}",
+                Pressure(pressure_pa),
+                entropy_j_kg_k / 1e3,
+                Temperature(temperature_k),
+                bound_j_kg_k / 1e3,
+                Beyond(below),
             ),
             Self::NoMelting { temperature_k } => write!(
                 f,

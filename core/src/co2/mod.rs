@@ -27,23 +27,31 @@
 //! ```
 
 mod boundary;
+mod closed;
 mod coefficients;
 mod critical;
 mod density;
 mod error;
 mod fits;
 mod helmholtz;
+mod inverse;
 mod isotherm;
 mod start;
 mod viscosity;
 
 pub use boundary::{Phase, melting_pressure_pa, saturated_densities_kg_m3, saturation_pressure_pa};
+pub use closed::{isochoric_pressure_pa, isochoric_temperature_k};
 pub use coefficients::{
     CRITICAL_DENSITY_KG_M3, CRITICAL_PRESSURE_PA, CRITICAL_TEMPERATURE_K, GAS_CONSTANT_J_MOL_K,
     MOLAR_MASS_KG_MOL, TRIPLE_PRESSURE_PA, TRIPLE_TEMPERATURE_K,
 };
 pub use density::{density_and_phase, density_kg_m3, pressure_pa};
 pub use error::StateError;
+pub(crate) use inverse::enthalpy_from_entropy_near;
+pub use inverse::{
+    Equilibrium, Phases, saturation_temperature_k, state_from_enthalpy, state_from_entropy,
+    temperature_from_enthalpy_k, temperature_from_entropy_k,
+};
 pub use viscosity::viscosity_pa_s;
 
 /// Highest temperature of the equation of state, K.

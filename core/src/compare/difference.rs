@@ -1,7 +1,7 @@
 //! Differences and ratios, and the postings that make them.
 
 use super::finding;
-use crate::account::{Account, Contribution, Measure, RouteAccount, behind};
+use crate::account::{Account, Contribution, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
 use crate::program::{RouteProgram, WorkloadProgram};
 
@@ -40,7 +40,8 @@ pub struct Difference {
     pub title: String,
     /// What it measures.
     pub measure: Measure,
-    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio.
+    /// Its value on the present route; SI, a year for what grows with the work. `None` where it has no such ratio, or
+    /// states no power or water flow.
     pub present: Option<f64>,
     /// Its value on the route; likewise.
     pub other: Option<f64>,
@@ -90,9 +91,16 @@ fn beside(
     for id in ids {
         let figure = present.figures.iter().chain(&other.figures).find(|f| f.id == id);
         let Some(figure) = figure else { continue };
-        // Nothing of a thing is zero of it; a ratio that is not given is not zero.
-        let value = |a: &RouteAccount| a.value(id).or_else(|| figure.measure.extensive().then_some(0.0));
-        let (before, after) = (value(present), value(other));
+        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
+        // stated, nor the electricity of a route that leaves a power out.
+        let value = |route: &RouteProgram, account: &RouteAccount| {
+            let zero = match figure.id.as_str() {
+                "energy.electricity" => route.uncounted.is_empty(),
+                _ => figure.measure.extensive() && figure.group != Group::Energy,
+            };
+            account.value(id).or(zero.then_some(0.0))
+        };
+        let (before, after) = (value(old, present), value(new, other));
         let change = before.zip(after).map(|(b, a)| a - b);
         let ratio = before.zip(after).filter(|(b, _)| *b > 0.0).map(|(b, a)| a / b);
         differences.push(Difference {
@@ -110,7 +118,12 @@ fn beside(
             },
         });
     }
-    let judged = finding::judge(&old.name, &new.name, &differences);
+    let judged = finding::judge(
+        &old.name,
+        &new.name,
+        &differences,
+        old.uncounted.is_empty() && new.uncounted.is_empty(),
+    );
     RouteComparison {
         route,
         differences,
@@ -181,6 +194,18 @@ fn doubts(old: &RouteProgram, new: &RouteProgram) -> Vec<String> {
     for route in [old, new] {
         if route.recovery.is_none() {
             out.push(format!("nothing says what recovery {} reaches", route.name));
+        }
+    }
+    for route in [old, new] {
+        if let Some(first) = route.uncounted.first() {
+            let more = match route.uncounted.len() {
+                1 => String::new(),
+                n => format!(" and {} more", n - 1),
+            };
+            out.push(format!(
+                "electricity is not compared: {} gives no power at {first}{more}, so nothing is counted there",
+                route.name
+            ));
         }
     }
     let taken_kg = |route: &RouteProgram| {

@@ -23,10 +23,14 @@ pub(super) struct Judged {
     pub(super) worse: Vec<String>,
 }
 
-pub(super) fn judge(present: &str, other: &str, differences: &[Difference]) -> Judged {
+/// Judges the headline figures; electricity only where both routes state all of it.
+pub(super) fn judge(present: &str, other: &str, differences: &[Difference], electricity: bool) -> Judged {
     let (mut falls, mut rises) = (Vec::new(), Vec::new());
     let (mut better, mut worse) = (Vec::new(), Vec::new());
     for (id, name) in HEADLINES {
+        if id == "energy.electricity" && !electricity {
+            continue;
+        }
         let Some(d) = differences.iter().find(|d| d.id == id) else { continue };
         let (Some(before), Some(after)) = (d.present, d.other) else { continue };
         let larger = if before > after { before } else { after };

@@ -351,14 +351,16 @@ impl<'a> Bench<'a> {
                 }
             }
         };
+        // The same moves without a trace to write and without a share that could overdraw.
+        if self.trace.is_none() && (0.0..=1.0).contains(&share) {
+            let moves = self.natures.iter().map(|n| n.volatile || !only_volatile);
+            return Ok(self.cells.move_share(from, to, share, moves, self.runs_a_year));
+        }
         let mut sum = 0.0;
         for i in 0..self.natures.len() {
             if self.natures[i].volatile || !only_volatile {
                 let m = Material(index(i));
-                let there_kg = self.there(from, m);
-                if there_kg > 0.0 || self.trace.is_some() {
-                    sum += self.take_as(from, to, m, there_kg * share, rule, measured)?;
-                }
+                sum += self.take_as(from, to, m, self.there(from, m) * share, rule, measured)?;
             }
         }
         Ok(sum)
@@ -379,6 +381,15 @@ impl<'a> Bench<'a> {
     pub fn need(&self, place: Place) -> Result<f64, Halt> {
         let kg = self.mass_kg(place);
         if kg > 0.0 { Ok(kg) } else { Err(Halt::Empty { place }) }
+    }
+
+    /// Asks that nothing lies in a place.
+    ///
+    /// # Errors
+    /// [`Halt::Occupied`] when something does.
+    pub fn need_empty(&self, place: Place) -> Result<(), Halt> {
+        let left_kg = self.mass_kg(place);
+        if left_kg > 0.0 { Err(Halt::Occupied { place, left_kg }) } else { Ok(()) }
     }
 
     /// Spends a utility; SI amount in this run.

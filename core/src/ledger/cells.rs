@@ -18,8 +18,9 @@ pub enum Direction {
 pub struct Cells {
     materials: usize,
     bench: Vec<f64>,
-    into: Vec<f64>,
-    out_of: Vec<f64>,
+    /// What has passed into every place, then what has passed out of it.
+    passed: Vec<f64>,
+    out_of: usize,
 }
 
 impl Cells {
@@ -30,16 +31,15 @@ impl Cells {
         Self {
             materials,
             bench: vec![0.0; BENCH_PLACES * materials],
-            into: vec![0.0; outside * materials],
-            out_of: vec![0.0; outside * materials],
+            passed: vec![0.0; 2 * outside * materials],
+            out_of: outside * materials,
         }
     }
 
     /// Everything back to zero.
     pub fn clear(&mut self) {
         self.bench.fill(0.0);
-        self.into.fill(0.0);
-        self.out_of.fill(0.0);
+        self.passed.fill(0.0);
     }
 
     #[inline]
@@ -67,11 +67,24 @@ impl Cells {
     #[inline]
     #[must_use]
     pub fn passed(&self, place: Place, direction: Direction, m: Material) -> f64 {
-        let i = self.at(place, m);
-        match direction {
-            Direction::Into => self.into[i],
-            Direction::OutOf => self.out_of[i],
-        }
+        self.passed[self.cell(place, direction, m) as usize]
+    }
+
+    /// The index of a cell of an outside place, for [`Cells::passed_at`].
+    pub(crate) fn cell(&self, place: Place, direction: Direction, m: Material) -> u32 {
+        // Bench places have rows here too, always empty, so that the index of a place is the index of its row.
+        let i = place.index() * self.materials + m.0 as usize;
+        let i = match direction {
+            Direction::Into => i,
+            Direction::OutOf => self.out_of + i,
+        };
+        u32::try_from(i).unwrap_or(u32::MAX)
+    }
+
+    /// What has passed a cell; kg a year.
+    #[inline]
+    pub(crate) fn passed_at(&self, cell: u32) -> f64 {
+        self.passed.get(cell as usize).copied().unwrap_or(0.0)
     }
 
     #[inline]
@@ -80,37 +93,57 @@ impl Cells {
         if from.on_bench() {
             self.bench[i] -= kg;
         } else {
-            self.out_of[i] += kg * runs_a_year;
+            self.passed[self.out_of + i] += kg * runs_a_year;
         }
         if to.on_bench() {
             self.bench[j] += kg;
         } else {
-            self.into[j] += kg * runs_a_year;
+            self.passed[j] += kg * runs_a_year;
         }
     }
 
     /// Everything of every material, as [`Cells::move_mass`] would move it; exactly 0 is left. Returns the mass moved; kg.
     pub(super) fn move_all(&mut self, from: Place, to: Place, runs_a_year: f64) -> f64 {
+        self.move_each(from, to, runs_a_year, |kg| kg)
+    }
+
+    /// A share from 0 to 1 of every material that moves, as [`Cells::move_mass`] would move it. Returns the mass moved; kg.
+    pub(super) fn move_share(
+        &mut self,
+        from: Place,
+        to: Place,
+        share: f64,
+        mut moves: impl Iterator<Item = bool>,
+        runs_a_year: f64,
+    ) -> f64 {
+        self.move_each(from, to, runs_a_year, |kg| if moves.next() == Some(true) { kg * share } else { 0.0 })
+    }
+
+    #[inline]
+    fn move_each(
+        &mut self,
+        from: Place,
+        to: Place,
+        runs_a_year: f64,
+        mut part: impl FnMut(f64) -> f64,
+    ) -> f64 {
+        let (start, there, count) = (self.at(from, Material(0)), self.at(to, Material(0)), self.materials);
         let mut sum = 0.0;
-        let start = self.at(from, Material(0));
-        let end = start + self.materials;
         if to.on_bench() {
-            if from != to {
-                let there = self.at(to, Material(0));
-                for i in 0..self.materials {
-                    sum += self.bench[start + i];
-                    self.bench[there + i] += self.bench[start + i];
-                }
-                self.bench[start..end].fill(0.0);
+            for i in 0..count {
+                let kg = part(self.bench[start + i]);
+                sum += kg;
+                self.bench[start + i] -= kg;
+                self.bench[there + i] += kg;
             }
-            return sum;
-        }
-        let there = self.at(to, Material(0));
-        let into = &mut self.into[there..there + self.materials];
-        for (kg, into) in self.bench[start..end].iter_mut().zip(into) {
-            sum += *kg;
-            *into += *kg * runs_a_year;
-            *kg = 0.0;
+        } else {
+            let into = &mut self.passed[there..there + count];
+            for (lying, into) in self.bench[start..start + count].iter_mut().zip(into) {
+                let kg = part(*lying);
+                sum += kg;
+                *lying -= kg;
+                *into += kg * runs_a_year;
+            }
         }
         sum
     }

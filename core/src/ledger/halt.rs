@@ -42,6 +42,18 @@ pub enum Halt {
         /// The place.
         place: Place,
     },
+    /// A step needs a liquid in a place that holds none.
+    NoLiquid {
+        /// The place.
+        place: Place,
+    },
+    /// A step works through a place in which something still lies.
+    Occupied {
+        /// The place.
+        place: Place,
+        /// What lies there; kg.
+        left_kg: f64,
+    },
     /// The step runs more often than the one before it while something still lies on the bench.
     FinerBasis {
         /// What lies there; kg.

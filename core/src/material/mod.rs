@@ -25,7 +25,7 @@ mod law;
 mod load;
 mod statement;
 mod substance;
-mod table;
+pub(crate) mod table;
 
 pub use catalogue::{Catalogue, catalogue};
 pub use error::{PropertyError, UnknownMaterial};

@@ -2,19 +2,19 @@
 
 /// An embedded table with its name, for the messages.
 #[derive(Clone, Copy)]
-pub(super) struct Table {
+pub(crate) struct Table {
     /// The file's name.
-    pub(super) name: &'static str,
+    pub(crate) name: &'static str,
     /// The file's text.
-    pub(super) text: &'static str,
+    pub(crate) text: &'static str,
 }
 
 /// One row: its fields in the order of the columns that were asked for.
-pub(super) type Row<const N: usize> = [&'static str; N];
+pub(crate) type Row<const N: usize> = [&'static str; N];
 
 impl Table {
     /// Every row, reduced to the named columns; a fault for every row or column that is not as it should be.
-    pub(super) fn rows<const N: usize>(self, columns: [&str; N], faults: &mut Vec<String>) -> Vec<Row<N>> {
+    pub(crate) fn rows<const N: usize>(self, columns: [&str; N], faults: &mut Vec<String>) -> Vec<Row<N>> {
         let mut lines = self.text.lines();
         let mut fields = Vec::new();
         split(lines.next().unwrap_or(""), &mut fields);

@@ -1,5 +1,6 @@
 //! One step read by itself, to see what its technique asks for.
 
+use super::amounts::Amounts;
 use super::materials::MaterialBook;
 use super::resolve::RouteBuilder;
 use super::{Reader, SiteUse};
@@ -31,7 +32,8 @@ pub fn asked(technique: &'static Technique, step: &StepDoc) -> (Vec<&'static str
         bench_temperature_k: 293.15,
         streams: Vec::new(),
     };
-    let mut route = RouteBuilder::new(&mut book, &site, false, &mut problems);
+    let mut amounts = Amounts::default();
+    let mut route = RouteBuilder::new(&mut book, &mut amounts, &site, false, &mut problems);
     let mut reader = Reader::new(&mut route, technique, step, "step".to_owned());
     (technique.read)(&mut reader);
     let mut keys: Vec<&'static str> = Vec::new();

@@ -118,8 +118,10 @@ fn own_substance(own: &OwnMaterial, path: &str, problems: &mut Vec<Problem>) -> 
         let at = below(path, key);
         let Some(declared) = OWN_FIELDS.iter().find(|p| p.key == key) else {
             let known = OWN_FIELDS.iter().map(|p| p.key);
-            let need = nearest(key, known.clone())
-                .map_or_else(|| known.collect::<Vec<_>>().join(", "), |k| format!("did you mean {k}?"));
+            let need = nearest(key, known.clone()).map_or_else(
+                || format!("one of: {}", known.collect::<Vec<_>>().join(", ")),
+                |k| format!("did you mean {k}?"),
+            );
             problems.push(Problem::error(at, format!("a material has no field \"{key}\""), need));
             continue;
         };

@@ -1,6 +1,7 @@
 //! The plan compiled once: names resolved, amounts read, every number that a route rests on in a slot. The single traced
 //! run and the many sampled ones run the same steps over the same slots.
 
+mod amounts;
 mod asked;
 mod book;
 mod materials;
@@ -105,6 +106,8 @@ pub struct RouteProgram {
     pub ph: Option<(f64, f64)>,
     /// What was assumed because the plan does not say.
     pub assumptions: Vec<Assumption>,
+    /// Where a power could be given and is not, so that the step's electricity is not counted.
+    pub uncounted: Vec<String>,
     /// How many streams the site has.
     pub streams: usize,
 }

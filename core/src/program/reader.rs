@@ -7,7 +7,7 @@ use super::resolve::RouteBuilder;
 use crate::chance::In;
 use crate::ledger::{Material, Measured, Place};
 use crate::plan::{Field, Problem, Step as StepDoc, below, nearest};
-use crate::quantity::{Amount, Entry, Kind, Origin, ShareBy, Spread, read, read_entry, show};
+use crate::quantity::{Amount, Entry, Kind, Origin, ShareBy, Spread, show};
 use crate::step::{Control, Mixture, Need, Param, Part, Poured, Technique};
 
 /// At most so many materials in one mixture.
@@ -20,6 +20,14 @@ pub struct Reader<'r, 'p> {
     doc: &'p StepDoc,
     path: String,
     asked: Vec<&'static str>,
+}
+
+/// Why a parameter is not read.
+enum Idle {
+    /// It has a meaning elsewhere: where, and what would do.
+    Because(String, String),
+    /// What it hangs on is wrong itself.
+    Unclear,
 }
 
 enum Found<'p> {
@@ -53,7 +61,7 @@ impl<'r, 'p> Reader<'r, 'p> {
     }
 
     /// Why a parameter is not to be read, where it has no meaning: where it would have one, and what would do.
-    fn idle(&self, p: &'static Param) -> Option<(String, String)> {
+    fn idle(&self, p: &'static Param) -> Option<Idle> {
         if let Some((on, values)) = p.shown_when {
             let declared = self.technique.params.iter().find(|q| q.key == on);
             let word = match (self.field(on), declared.map(|d| d.need)) {
@@ -61,16 +69,27 @@ impl<'r, 'p> Reader<'r, 'p> {
                 (None, Some(Need::Default(word, _))) => word,
                 _ => "",
             };
+            // A word that is no choice at all is told by itself; whether this would apply, nobody knows.
+            let choices = match declared.map(|d| d.control) {
+                Some(Control::Choice(words)) => words,
+                _ => values,
+            };
+            if !(values.contains(&word) || word.is_empty() || choices.contains(&word)) {
+                return Some(Idle::Unclear);
+            }
             if !values.contains(&word) {
                 let place = format!("only where {on} is {}", values.join(" or "));
-                return Some((place, format!("leave it out, or change {on}")));
+                return Some(Idle::Because(place, format!("leave it out, or change {on}")));
             }
         }
         if let Some(other) = p.with.filter(|other| self.field(other).is_none()) {
-            return Some((format!("only beside {other}"), format!("leave it out, or give {other}")));
+            return Some(Idle::Because(
+                format!("only beside {other}"),
+                format!("leave it out, or give {other}"),
+            ));
         }
         if let Some(other) = p.without.filter(|other| self.field(other).is_some()) {
-            return Some((
+            return Some(Idle::Because(
                 format!("only without {other}, which stands in its place"),
                 "one of the two".to_owned(),
             ));
@@ -81,8 +100,8 @@ impl<'r, 'p> Reader<'r, 'p> {
     fn find(&mut self, p: &'static Param) -> Found<'p> {
         self.asked.push(p.key);
         let written = self.field(p.key);
-        if let Some((meaning, need)) = self.idle(p) {
-            if written.is_some() {
+        if let Some(idle) = self.idle(p) {
+            if let (true, Idle::Because(meaning, need)) = (written.is_some(), idle) {
                 self.error(p.key, format!("{} is given, but it has a meaning {meaning}", p.key), need);
             }
             return Found::Nothing;
@@ -124,7 +143,7 @@ impl<'r, 'p> Reader<'r, 'p> {
             Found::Default(text) => (text.to_owned(), Origin::Assumed),
             Found::Nothing => return None,
         };
-        let amount = match read_entry(&text, kind) {
+        let amount = match self.route.amounts.entry(&text, kind) {
             Ok(Entry::Known(amount)) => amount,
             Ok(Entry::NotKnown) => {
                 let Need::Default(default, source) = p.need else {
@@ -141,7 +160,7 @@ impl<'r, 'p> Reader<'r, 'p> {
                 origin = Origin::NotKnown;
                 let path = self.at(p.key);
                 self.route.assume(path, p.label, default, source);
-                read(default, kind).ok()?
+                self.route.amounts.read(default, kind).ok()?
             }
             Err(e) => {
                 self.error(p.key, format!("\"{}\": {}", text, e.found()), e.need());
@@ -155,7 +174,6 @@ impl<'r, 'p> Reader<'r, 'p> {
 
     fn bounds(&mut self, p: &'static Param, kind: Kind, amount: &Amount) {
         let (low, high) = reach(amount);
-        let path = self.at(p.key);
         let limits = |(a, b): (f64, f64)| match (a.is_finite(), b.is_finite()) {
             (true, true) => format!("between {} and {}", show(a, kind), show(b, kind)),
             (true, false) => format!("at least {}", show(a, kind)),
@@ -164,12 +182,23 @@ impl<'r, 'p> Reader<'r, 'p> {
         };
         if low < p.physical.0 || high > p.physical.1 {
             let found = format!("{} is outside what is possible", amount.understood());
-            self.route.problems.push(Problem::error(path, found, limits(p.physical)));
+            self.error(p.key, found, limits(p.physical));
         } else if amount.central_si < p.usual.0 || amount.central_si > p.usual.1 {
             let found = format!("{} is unusual for {}", amount.understood(), p.label.to_lowercase());
             let need = format!("{} is usual ({}); leave it if it is right", limits(p.usual), p.source.cite);
-            self.route.problems.push(Problem::warning(path, found, need));
+            self.doubt(p.key, found, need);
         }
+    }
+
+    /// A power that may be left out: then the route remembers that this step's electricity is not counted, so that no
+    /// comparison takes nothing stated for nothing used.
+    pub fn power(&mut self, p: &'static Param) -> Option<In> {
+        let power = self.optional(p);
+        if power.is_none() {
+            let path = self.at(p.key);
+            self.route.uncounted.push(path);
+        }
+        power
     }
 
     /// A whole number.
@@ -192,7 +221,7 @@ impl<'r, 'p> Reader<'r, 'p> {
                     if p.physical.0.is_finite() { p.physical.0 } else { 0.0 },
                     if p.physical.1.is_finite() { p.physical.1 } else { 1000.0 }
                 );
-                self.error(p.key, format!("\"{text}\""), need);
+                self.error(p.key, format!("{text} is not such a number"), need);
                 1
             }
         }
@@ -231,7 +260,8 @@ impl<'r, 'p> Reader<'r, 'p> {
         }
         let hint = nearest(text, words.iter().copied())
             .map_or(String::new(), |w| format!("; did you mean \"{w}\"?"));
-        self.error(p.key, format!("\"{text}\""), format!("one of: {}{hint}", words.join(", ")));
+        let need = format!("one of: {}{hint}", words.join(", "));
+        self.error(p.key, format!("\"{text}\" is none of the choices"), need);
         first
     }
 
@@ -296,7 +326,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         let (mut parts, mut by, mut sum, mut whole) = (Vec::new(), None, 0.0, true);
         for (name, share) in rows {
             let row = below(&path, name);
-            let amount = read(share.unwrap_or("100 %"), Kind::Fraction);
+            let amount = self.route.amounts.read(share.unwrap_or("100 %"), Kind::Fraction);
             let amount = match amount {
                 Ok(amount) => amount,
                 Err(e) => {
@@ -330,6 +360,12 @@ impl<'r, 'p> Reader<'r, 'p> {
                 whole = false;
                 continue;
             };
+            if parts.iter().any(|p: &Part| p.material == material) {
+                let known = self.route.name_of(material).to_owned();
+                self.twice(row, name, &known);
+                whole = false;
+                continue;
+            }
             let origin = if share.is_some() { Origin::Entered } else { Origin::Computed };
             let share = self.route.input(row, &amount, origin);
             parts.push(Part { material, share, density });
@@ -363,7 +399,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         for (name, text) in rows {
             let row = below(&path, name);
             let material = self.route.material(name, &row);
-            match read(text, kind) {
+            match self.route.amounts.read(text, kind) {
                 Ok(amount) => {
                     let (low, high) = reach(&amount);
                     if low < p.physical.0 || high > p.physical.1 {
@@ -372,6 +408,11 @@ impl<'r, 'p> Reader<'r, 'p> {
                             format!("between {} and {}", show(p.physical.0, kind), show(p.physical.1, kind));
                         self.route.problems.push(Problem::error(row, found, need));
                     } else if let Some(material) = material {
+                        if out.iter().any(|(m, _)| *m == material) {
+                            let known = self.route.name_of(material).to_owned();
+                            self.twice(row, name, &known);
+                            continue;
+                        }
                         let slot = self.route.input(row, &amount, Origin::Entered);
                         out.push((material, slot));
                     }
@@ -386,6 +427,35 @@ impl<'r, 'p> Reader<'r, 'p> {
             }
         }
         out
+    }
+
+    fn twice(&mut self, row: String, name: &str, known: &str) {
+        let found = if name == known {
+            format!("{known} is listed already, under another of its names")
+        } else {
+            format!("{name} is {known}, which is listed already")
+        };
+        self.route.problems.push(Problem::error(row, found, "each material once, with its whole amount"));
+    }
+
+    /// Materials of the feed with the share that is taken out of each.
+    pub fn taken_out(&mut self, p: &'static Param) -> Vec<(Material, In)> {
+        let rows = self.per_material(p);
+        for &(material, _) in &rows {
+            if !self.route.fed.contains(&material) {
+                let name = self.name_of(material).to_owned();
+                let fed: Vec<&str> = self.route.fed.iter().map(|m| self.route.name_of(*m)).collect();
+                let need = if fed.is_empty() {
+                    "a feed that holds it".to_owned()
+                } else {
+                    format!("a material of the feed ({}), or a feed that holds it", fed.join(", "))
+                };
+                let row = below(&self.at(p.key), &name);
+                let found = format!("the feed holds no {name}, so that none of it is taken out");
+                self.route.problems.push(Problem::warning(row, found, need));
+            }
+        }
+        rows
     }
 
     /// Materials with volumes, each with its density.
@@ -491,6 +561,12 @@ impl<'r, 'p> Reader<'r, 'p> {
         self.route.input(identity, &amount, Origin::Computed)
     }
 
+    /// Whether the step writes this key at all, rightly or wrongly.
+    #[must_use]
+    pub fn written(&self, key: &str) -> bool {
+        self.field(key).is_some()
+    }
+
     /// A problem at one of the step's own parameters.
     pub fn problem(&mut self, key: &str, found: impl Into<String>, need: impl Into<String>) {
         self.error(key, found, need);
@@ -514,8 +590,10 @@ impl<'r, 'p> Reader<'r, 'p> {
         for (key, _) in &doc.fields {
             if !self.technique.params.iter().any(|p| p.key == key) {
                 let known = self.technique.params.iter().map(|p| p.key);
-                let hint = nearest(key, known.clone())
-                    .map_or_else(|| known.collect::<Vec<_>>().join(", "), |k| format!("did you mean {k}?"));
+                let hint = nearest(key, known.clone()).map_or_else(
+                    || format!("one of: {}", known.collect::<Vec<_>>().join(", ")),
+                    |k| format!("did you mean {k}?"),
+                );
                 let found = format!("{} has no parameter \"{key}\"", self.technique.key);
                 self.error(key, found, hint);
             }
@@ -559,7 +637,10 @@ impl<'r, 'p> Reader<'r, 'p> {
                 ));
                 continue;
             }
-            measured[index] = match (read(text, Kind::Mass), read(text, Kind::Fraction)) {
+            let mass = self.route.amounts.read(text, Kind::Mass);
+            let share =
+                if mass.is_ok() { mass.clone() } else { self.route.amounts.read(text, Kind::Fraction) };
+            measured[index] = match (mass, share) {
                 (Ok(amount), _) => Some(Measured::Mass(self.route.input(path, &amount, Origin::Measured))),
                 (_, Ok(amount)) => Some(Measured::Share(self.route.input(path, &amount, Origin::Measured))),
                 (Err(as_mass), Err(as_share)) => {

@@ -1,5 +1,6 @@
 //! From the document to a program: every name resolved, every amount read, every problem found.
 
+use super::amounts::Amounts;
 use super::materials::{MaterialBook, MaterialUse};
 use super::reader::Reader;
 use super::{
@@ -9,7 +10,7 @@ use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
 use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
-use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read};
+use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
 use crate::step::{TECHNIQUES, technique};
 use std::collections::BTreeMap;
@@ -42,6 +43,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
             "at least one workload with a route",
         ));
     }
+    let mut amounts = Amounts::default();
     let mut workloads = Vec::new();
     for (i, workload) in plan.workloads.iter().enumerate() {
         let path = format!("workloads[{i}]");
@@ -55,7 +57,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
         let mut routes = Vec::new();
         for (j, route) in workload.routes.iter().enumerate() {
             let permit = plan.site.drain_permit.is_some();
-            let mut builder = RouteBuilder::new(&mut book, &site, permit, &mut problems);
+            let mut builder = RouteBuilder::new(&mut book, &mut amounts, &site, permit, &mut problems);
             let at = format!("{path}.routes[{j}]");
             builder.name_paths((&path, &workload.name), (&at, &route.name));
             routes.push(builder.build(workload, route, &path, &at));
@@ -99,6 +101,13 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         "site.bench_temperature",
         problems,
     );
+    if !(278.15..=313.15).contains(&bench_temperature_k) {
+        problems.push(Problem::warning(
+            "site.bench_temperature",
+            format!("{} is unusual for a bench", show(bench_temperature_k, Kind::Temperature)),
+            "the temperature at which solvents are poured and stored, as a rule between 5 and 40 °C; leave it if it is right",
+        ));
+    }
     if let Some(e) = &doc.electricity {
         check(e.climate.as_deref(), Kind::ClimatePerEnergy, "site.electricity.climate", problems);
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
@@ -208,7 +217,8 @@ fn amount(text: Option<&str>, default: &str, kind: Kind, path: &str, problems: &
                 format!("\"{}\": {}", text.unwrap_or(default), e.found()),
                 e.need(),
             ));
-            1.0
+            // What the plan would have without it, so that nothing else seems wrong.
+            read(default, kind).map_or(1.0, |a| a.central_si)
         }
     }
 }
@@ -252,6 +262,7 @@ fn own_places<'a>() -> impl Iterator<Item = &'a str> {
 /// What a route is built from while its steps read themselves.
 pub(super) struct RouteBuilder<'p> {
     book: &'p mut MaterialBook,
+    pub(super) amounts: &'p mut Amounts,
     site: &'p SiteUse,
     permit: bool,
     pub(super) problems: &'p mut Vec<Problem>,
@@ -260,19 +271,25 @@ pub(super) struct RouteBuilder<'p> {
     pub(super) materials: Vec<MaterialUse>,
     densities: Vec<Option<In>>,
     assumptions: Vec<Assumption>,
+    /// What comes with the feed.
+    pub(super) fed: Vec<Material>,
     /// Paths of the route and of its workload, each with the key of its name.
     named: [(String, u64); 2],
+    /// Where a power could be given and is not.
+    pub(super) uncounted: Vec<String>,
 }
 
 impl<'p> RouteBuilder<'p> {
     pub(super) fn new(
         book: &'p mut MaterialBook,
+        amounts: &'p mut Amounts,
         site: &'p SiteUse,
         permit: bool,
         problems: &'p mut Vec<Problem>,
     ) -> Self {
         Self {
             book,
+            amounts,
             site,
             permit,
             problems,
@@ -281,6 +298,8 @@ impl<'p> RouteBuilder<'p> {
             materials: Vec::new(),
             densities: Vec::new(),
             assumptions: Vec::new(),
+            uncounted: Vec::new(),
+            fed: Vec::new(),
             named: Default::default(),
         }
     }
@@ -453,8 +472,9 @@ impl<'p> RouteBuilder<'p> {
     fn build(mut self, workload: &'p Workload, doc: &'p Route, above: &str, path: &str) -> RouteProgram {
         let work = self.work(workload, above);
         let feed = self.feed(workload, doc, above, path);
+        self.fed = feed.iter().map(|(m, _)| *m).collect();
         let mut steps = Vec::new();
-        let mut taken_in = None;
+        let (mut taken_in, mut unknown) = (None, false);
         if doc.steps.is_empty() {
             self.problems.push(Problem::error(
                 below(path, "steps"),
@@ -472,6 +492,7 @@ impl<'p> RouteBuilder<'p> {
                 );
                 let found = format!("no technique is called \"{}\"", step.technique);
                 self.problems.push(Problem::error(below(&at, "step"), found, need));
+                unknown = true;
                 continue;
             };
             if let (None, Some(place)) = (taken_in, technique.takes_feed) {
@@ -495,7 +516,8 @@ impl<'p> RouteBuilder<'p> {
                 note: step.note.clone(),
             });
         }
-        if taken_in.is_none() && !feed.is_empty() && !doc.steps.is_empty() {
+        // A technique that nobody knows may have been the one.
+        if taken_in.is_none() && !unknown && !feed.is_empty() && !doc.steps.is_empty() {
             self.problems.push(Problem::error(
                 below(path, "steps"),
                 "no step takes the sample in",
@@ -536,12 +558,13 @@ impl<'p> RouteBuilder<'p> {
             equivalence: doc.equivalence.clone(),
             ph,
             assumptions: self.assumptions,
+            uncounted: self.uncounted,
             streams: self.site.streams.len(),
         }
     }
 
     fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
-        match read(text?, kind) {
+        match self.amounts.read(text?, kind) {
             Ok(amount) => Some(self.input(path.to_owned(), &amount, Origin::Entered)),
             Err(e) => {
                 let found = format!("\"{}\": {}", text.unwrap_or_default(), e.found());
@@ -596,13 +619,13 @@ impl<'p> RouteBuilder<'p> {
                 return In(0);
             }
         };
-        match read(text, Kind::Number) {
+        match self.amounts.read(text, Kind::Number) {
             Ok(amount) if amount.central_si >= least => self.input(path.to_owned(), &amount, Origin::Entered),
             Ok(amount) => {
                 self.problems.push(Problem::error(
                     path,
-                    format!("{}", amount.central_si),
-                    "a number above zero",
+                    format!("{} where a number above zero should stand", amount.central_si),
+                    "a number, such as 20",
                 ));
                 In(0)
             }
@@ -622,7 +645,15 @@ impl<'p> RouteBuilder<'p> {
         for (name, text) in rows {
             let at = below(&path, name);
             let Some(material) = self.material(name, &at) else { continue };
-            match (read(text, Kind::Mass), read(text, Kind::Volume)) {
+            if out.iter().any(|(m, _)| *m == material) {
+                let known = self.name_of(material).to_owned();
+                let found = format!("{name} is {known}, which the feed holds already");
+                self.problems.push(Problem::error(at, found, "each material once, with its whole amount"));
+                continue;
+            }
+            let mass = self.amounts.read(text, Kind::Mass);
+            let volume = if mass.is_ok() { mass.clone() } else { self.amounts.read(text, Kind::Volume) };
+            match (mass, volume) {
                 (Ok(mass), _) => out.push((material, self.input(at, &mass, Origin::Entered))),
                 (Err(_), Ok(volume)) => {
                     match self.density(material).and_then(|d| self.inputs.get(d.0 as usize)) {
@@ -685,7 +716,7 @@ impl<'p> RouteBuilder<'p> {
                         self.problems.push(Problem::error(
                             below(&at, name),
                             format!("\"{to}\" is on the bench itself"),
-                            "a stream, product, elsewhere, hood ...",
+                            "a place outside the bench: a stream, product, elsewhere, hood",
                         ));
                         return None;
                     }
@@ -711,7 +742,7 @@ impl<'p> RouteBuilder<'p> {
                 if low < -2.0 || high > 16.0 {
                     self.problems.push(Problem::error(
                         path,
-                        format!("\"{text}\""),
+                        format!("\"{text}\" is no pH that water reaches"),
                         "pH between -2 and 16, such as \"2 to 7\"",
                     ));
                     return None;

@@ -126,7 +126,7 @@ mod tests {
         };
         let x = [1400.0, 13.0, 4.0, 0.03];
         let runs = work.runs(Draw(&x)).unwrap();
-        assert!((runs.extractions - 1885.692_307_692_307_7).abs() < 1e-9);
+        assert!((runs.extractions - 1_885.692_307_692_307_7).abs() < 1e-9);
         assert!((runs.batches - 110.923_076_923_076_92).abs() < 1e-9);
         assert!((runs.feed_share - 13.0 / 17.0).abs() < 1e-15);
         let shared = Work { repeats_bring_controls: false, ..work }.runs(Draw(&x)).unwrap();

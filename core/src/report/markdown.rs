@@ -1,7 +1,7 @@
 //! A report to read and to print, as Markdown.
 
 use super::row::{MONTHS, PROGRAM, figures};
-use super::words::{amount, editions, hidden, is_detail, work_words};
+use super::words::{amount, cited, editions, hidden, is_detail, work_words};
 use crate::account::{Account, Group, HazardAccount, MaterialHazard, RouteAccount};
 use crate::compare::{Comparison, compare};
 use crate::hazard::{chem21, eco_scale, nemi};
@@ -135,7 +135,7 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
                 "- {}: {} ({}); {}",
                 escaped(&a.label),
                 escaped(&a.value),
-                escaped(a.source.cite),
+                escaped(&cited(a.source)),
                 escaped(&a.path)
             );
         }
@@ -268,8 +268,7 @@ fn sources(out: &mut String, account: &Account) {
         let _ =
             writeln!(out, "- {}: {} ({})", escaped(&edition.key), escaped(&edition.cite), edition.standing);
     }
-    let cite = chem21::SOURCE;
-    let _ = writeln!(out, "- CHEM21: {} ({})", escaped(cite.cite), cite.standing.words());
+    let _ = writeln!(out, "- CHEM21: {}", escaped(&cited(chem21::SOURCE)));
 }
 
 /// Text as it stands, whatever it holds: markup, HTML and line breaks are made plain.

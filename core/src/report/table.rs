@@ -2,7 +2,7 @@
 
 use super::grid::{Grid, paragraph};
 use super::row::figures;
-use super::words::{amount, is_detail, visible, work_words};
+use super::words::{amount, cited, is_detail, visible, work_words};
 use crate::account::{Account, Group, Measure, RouteAccount};
 use crate::compare::{Comparison, Difference, HEADLINES, RouteComparison, compare};
 use crate::program::{RouteProgram, WorkloadProgram};
@@ -133,7 +133,7 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
     if !route.assumptions.is_empty() {
         out.push_str("Assumed, because the plan does not say\n");
         for a in &route.assumptions {
-            let text = format!("{}: {} ({}); {}", a.label, a.value, a.source.cite, a.path);
+            let text = format!("{}: {} ({}); {}", a.label, a.value, cited(a.source), a.path);
             paragraph(out, "  ", &text);
         }
     }
@@ -284,8 +284,8 @@ fn side_by_side(
             let mut cells = vec![format!("  {}", visible(&row.title)), shown(row.present)];
             for other in others {
                 let difference = other.differences.iter().find(|d| d.id == row.id);
-                // A figure that neither this route nor the present one has is zero on both.
-                let zero = row.measure.extensive().then_some(0.0);
+                // A figure that neither this route nor the present one has is zero on both, or stated on neither.
+                let zero = (row.measure.extensive() && group != Group::Energy).then_some(0.0);
                 cells.push(shown(difference.map_or(zero, |d| d.other)));
                 let ratio = difference.and_then(|d| d.ratio);
                 cells.push(ratio.map_or_else(String::new, |r| format!("×{}", significant(r, 3))));

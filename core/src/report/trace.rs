@@ -7,8 +7,10 @@ pub use error::TraceError;
 
 use super::result::{FigureRow, InputDocument, step_and_technique};
 use super::row::{key_unit, written};
-use super::words::{place, si_unit};
-use crate::account::{Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, rule_of};
+use super::words::si_unit;
+use crate::account::{
+    Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
+};
 use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
 use crate::plan::below;
@@ -148,7 +150,7 @@ fn opened<'a>(
     let value_si = account.values.get(index).copied()?;
     // A number of containers is opened through its volume.
     let whole = !matches!(figure.how, How::Containers { .. });
-    let entries = whole.then(|| behind(route, account, figure)).unwrap_or_default();
+    let entries = if whole { behind(route, account, figure) } else { Vec::new() };
     let entries =
         entries.into_iter().filter_map(|c| entry(route, site, account, figure.measure, c)).collect();
     Some(Opened { figure, value_si, account, entries })
@@ -175,7 +177,7 @@ fn entry<'a>(
         Contribution::Posting { index, amount_si } => {
             let posting = account.trace.postings.get(index)?;
             let material = route.materials.get(posting.material.0 as usize).map_or("", |m| m.name.as_str());
-            let (from, to) = (place(site, posting.from), place(site, posting.to));
+            let (from, to) = (place_name(site, posting.from), place_name(site, posting.to));
             let what = describe(route, site, posting);
             Some(make(
                 posting.step,

@@ -1,19 +1,13 @@
 //! Words and units that several documents share.
 
-use crate::account::{Measure, place_name};
+use crate::account::Measure;
 use crate::chance::Draw;
-use crate::ledger::Place;
 use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
 use crate::plan::Problem;
-use crate::program::{Program, SiteUse, WorkloadProgram};
+use crate::program::{Program, WorkloadProgram};
 use crate::quantity::{Kind, show, significant};
 use crate::source::{Source, Standing};
 use std::collections::BTreeSet;
-
-/// The name of a place, streams by the site's names.
-pub(super) fn place(site: &SiteUse, place: Place) -> String {
-    place_name(site, place)
-}
 
 /// The SI unit in which an amount of this kind is held.
 pub(super) const fn si_unit(kind: Kind) -> &'static str {

@@ -54,9 +54,9 @@ const TIME: Param = Param::quantity("time", "Time", Kind::Time)
     .source(COMMON_PRACTICE);
 const POWER: Param = Param::quantity("power", "Power drawn", Kind::Power)
     .physical(0.0, 1e6)
-    .usual(100.0, 3000.0)
+    .usual(0.0, 3000.0)
     .with("time")
-    .hint("Bath, rotation, pump and chiller on average; left out, no electricity is counted.")
+    .hint("Bath, rotation, pump and chiller on average; \"0 W\" for an unheated stream; left out, electricity is not compared.")
     .source(FROM_MEMORY);
 
 const EVAPORATED: RuleIx = RuleIx(0);
@@ -113,7 +113,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     let condensate = r.optional_place(&CONDENSATE);
     let (share, caught, flow) = (r.optional(&LOSS), r.optional(&CAUGHT), r.optional(&GAS_FLOW));
     let catches = caught.is_some_and(|c| r.value(c) > 0.0);
-    if condensate.is_none() && (by == ROTARY || catches) {
+    if !r.written("condensate") && (by == ROTARY || catches) {
         r.problem(
             "condensate",
             "nothing says where the condensate goes",
@@ -135,13 +135,15 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         gas,
         lost_to,
         time,
-        power: r.optional(&POWER),
+        power: r.power(&POWER),
     })
 }
 
 impl Step for Concentrate {
     fn run(&self, x: Draw<'_>, b: &mut Bench<'_>) -> Result<(), Halt> {
         b.need(Place::LIQUOR)?;
+        // What evaporates passes the vapour place: CO2 still in a vessel must not end in the condensate.
+        b.need_empty(Place::VAPOUR)?;
         let (there_m3, wanted_m3) = (b.liquid_volume_m3(Place::LIQUOR), x.get(self.to));
         if wanted_m3 > there_m3 {
             return Err(Halt::NotReached { wanted_m3, there_m3 });

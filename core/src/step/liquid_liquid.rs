@@ -167,7 +167,7 @@ impl Step for LiquidLiquid {
         b.need(Place::SECOND_PHASE)?;
         let water_m3 = b.liquid_volume_m3(Place::SECOND_PHASE);
         if water_m3 <= 0.0 {
-            return Err(Halt::Empty { place: Place::SECOND_PHASE });
+            return Err(Halt::NoLiquid { place: Place::SECOND_PHASE });
         }
         let portion_m3 = x.get(self.charge);
         for _ in 0..self.portions {

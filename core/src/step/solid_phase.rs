@@ -112,7 +112,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             through: r.place(&THROUGH),
             solvent: r.mixture(&SOLVENT),
             elute: r.quantity(&ELUTE),
-            extracts: r.per_material(&EXTRACTS),
+            extracts: r.taken_out(&EXTRACTS),
             loss: r.quantity(&LOSS),
             lost_to: r.place(&LOST_TO),
             hold_up: r.quantity(&HOLD_UP),

@@ -9,7 +9,7 @@ use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
 use crate::reckon::things;
 use crate::state::Action;
 use thimbleworth::ledger::Place;
-use thimbleworth::plan::{Route, Step, below};
+use thimbleworth::plan::{Route, Severity, Step, below};
 use thimbleworth::quantity::Kind;
 use thimbleworth::source::{DEFINITION, FROM_MEMORY};
 use thimbleworth::step::{Control, Group, Need, Param, TECHNIQUES, Technique, technique};
@@ -216,12 +216,19 @@ fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &
     let title = known.map_or_else(|| step.technique.clone(), |t| t.title.to_owned());
     let named = format!("step {}, {title}", s + 1);
     let per = step.per.clone().unwrap_or_default();
+    let problems = &view.reckoned.problems;
+    let errors =
+        problems.iter().filter(|p| p.severity == Severity::Error && p.path.starts_with(&path)).count();
     html! {
-        <section class="card step" key={id} id={path.clone()} aria-label={format!("Step {}, {title}", s + 1)}>
-            <div class="cardhead">
+        <details class="card step" key={id} id={path.clone()}>
+            <summary>
                 <h5><span class="folio">{ s + 1 }</span>{ " " }{ &title }</h5>
-                { tools(Item::Step(w, r, s), &path, &named, route.steps.len(), &view.edit) }
-            </div>
+                { for summary(known, step).into_iter().map(|(label, value)| html! {
+                    <span class="entry">{ label }{ " " }<b>{ value }</b></span>
+                }) }
+                if errors > 0 { <span class="wrong">{ format!("{} to mend", things(errors)) }</span> }
+            </summary>
+            { tools(Item::Step(w, r, s), &path, &named, route.steps.len(), &view.edit) }
             if let Some(technique) = known {
                 <p class="hint">{ technique.about }</p>
                 { for technique.cautions.iter().map(|c| html! { <p class="caution"><strong>{ "Caution: " }</strong>{ c.text }</p> }) }
@@ -232,7 +239,7 @@ fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &
             { Asked::text(format!("{path}.per"), "Done once for each", per).need(Need::Default("sample", DEFINITION))
                 .ask(Ask::Choice(options("sample (left out)", &["sample", "batch", "month", "year"]))).draw(view) }
             { Asked::text(format!("{path}.note"), "Note on the step", step.note.clone().unwrap_or_default()).draw(view) }
-        </section>
+        </details>
     }
 }
 

@@ -1,8 +1,8 @@
 //! Postings, utilities, inputs and assumptions as documents.
 
 use super::super::row::written;
-use super::super::words::{place, si_unit};
-use crate::account::{Measure, rule_of};
+use super::super::words::si_unit;
+use crate::account::{Measure, place_name, rule_of};
 use crate::chance::Input;
 use crate::ledger::{Posting, Spending, StepIx, Utility};
 use crate::program::{Assumption, RouteProgram, SiteUse};
@@ -40,8 +40,8 @@ impl<'a> PostingDocument<'a> {
             step,
             technique,
             rule: rule_of(route, p.step, p.rule).map_or("", |r| r.name),
-            from: place(site, p.from),
-            to: place(site, p.to),
+            from: place_name(site, p.from),
+            to: place_name(site, p.to),
             material: route.materials.get(p.material.0 as usize).map_or("", |m| m.name.as_str()),
             kg_per_run: p.kg,
             runs_per_year: p.runs_a_year,

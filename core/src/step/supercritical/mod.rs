@@ -176,7 +176,7 @@ struct Supercritical {
 
 fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     let recycled = r.choice(&CIRCUIT) == RECYCLED;
-    let (power, run_time) = (r.optional(&POWER), r.optional(&RUN_TIME));
+    let (power, run_time) = (r.power(&POWER), r.optional(&RUN_TIME));
     Box::new(Supercritical {
         co2: r.known("carbon dioxide").unwrap_or(Material(0)),
         temperature: r.quantity(&TEMPERATURE),
@@ -187,7 +187,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         recycled,
         vent_to: r.place(&VENT_TO),
         leak: r.optional(&LEAK),
-        extracts: r.per_material(&EXTRACTS),
+        extracts: r.taken_out(&EXTRACTS),
         dissolved: r.optional(&DISSOLVED),
         in_marc: r.optional(&IN_MARC),
         power: power.zip(run_time),

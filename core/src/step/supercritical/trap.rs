@@ -12,6 +12,7 @@ pub(super) const COSOLVENT: Param = Param::new("cosolvent", "Co-solvent", Contro
 pub(super) const COSOLVENT_FLOW: Param =
     Param::quantity("cosolvent_flow", "Flow of co-solvent", Kind::VolumeFlow)
         .physical(0.0, 1.0)
+        .with("cosolvent")
         .hint("As liquid at the bench's temperature, while CO2 flows: 5 % of 4 mL/min is 0.2 mL/min.")
         .source(COMMON_PRACTICE);
 pub(super) const COSOLVENT_KEPT: Param =
@@ -26,6 +27,7 @@ pub(super) const TRAP_SOLVENT: Param = Param::new("trap_solvent", "Solvent in th
 pub(super) const TRAP_VOLUME: Param = Param::quantity("trap_volume", "Volume in the trap", Kind::Volume)
     .physical(0.0, 10.0)
     .usual(1e-6, 1e-4)
+    .with("trap_solvent")
     .hint("At the start; 3 to 15 mL is usual.")
     .source(COMMON_PRACTICE);
 pub(super) const TRAP_LOSS: Param = Param::quantity(
@@ -44,6 +46,7 @@ pub(super) const RINSE: Param = Param::new("rinse", "Solvent that rinses the tra
 pub(super) const RINSE_VOLUME: Param = Param::quantity("rinse_volume", "Volume of the rinse", Kind::Volume)
     .physical(0.0, 10.0)
     .usual(5e-7, 5e-5)
+    .with("rinse")
     .hint("All portions together.")
     .source(COMMON_PRACTICE);
 
@@ -60,14 +63,10 @@ impl Trap {
     pub(super) fn read(r: &mut Reader<'_, '_>) -> Self {
         let mut pair = |mixture: &'static Param, volume: &'static Param| {
             let (m, v) = (r.optional_mixture(mixture), r.optional(volume));
-            match (&m, v) {
-                (Some(_), None) => {
-                    r.problem(volume.key, format!("{} without its amount", mixture.key), volume.hint);
-                }
-                (None, Some(_)) => {
-                    r.problem(mixture.key, format!("{} without its solvent", volume.key), mixture.hint);
-                }
-                _ => {}
+            if m.is_some() && !r.written(volume.key) {
+                let example = if volume.key == COSOLVENT_FLOW.key { "0.2 mL/min" } else { "3 mL" };
+                let found = format!("{} is given without its amount", mixture.key);
+                r.problem(volume.key, found, format!("{}, such as \"{example}\"", volume.key));
             }
             m.zip(v)
         };
