@@ -41,6 +41,8 @@ const NITROGEN_KG: f64 = 20.0 * 120.0 / 24.47 * 0.028_01;
 fn hexane_is_drawn_again() {
     let account = accounted("botanical-pilot");
     let (found, by_hand) = (route(&account, 0, "Hexane"), hexane());
+    // Where there is a product every metric is drawn up; one whose published key is misspelt would be missing here.
+    assert_eq!(found.figures.iter().filter(|f| f.id.starts_with("metric.")).count(), 15);
     near(a_year(found, "mass.drawn.n-hexane"), by_hand.charged * BATCHES, 2e-3);
     near(a_year(found, "mass.returned.n-hexane"), by_hand.returned * BATCHES, 2e-3);
     near(a_year(found, "mass.to.hood.n-hexane"), by_hand.to_air * BATCHES, 2e-3);
