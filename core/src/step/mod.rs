@@ -7,22 +7,26 @@ mod concentrate;
 mod consume;
 mod declare;
 mod discard;
+mod distil;
 mod dry;
 mod liquid_liquid;
+mod microwave;
 mod mixture;
+mod percolate;
 mod pressurised_liquid;
 mod rinse;
 mod solid_phase;
 mod soxhlet;
 mod supercritical;
 mod ultrasonic;
+mod vapours;
 
 pub use caution::Caution;
 pub use declare::{Control, Measurable, Need, Param, Rule};
 pub use mixture::{LARGEST, Mixture, Part};
 pub use solid_phase::Poured;
 
-use common::{electricity, extract, hold_up};
+use common::{cooling_water, electricity, extract, hold_up};
 
 use crate::chance::Draw;
 use crate::ledger::{Bench, Halt, Place};
@@ -76,11 +80,14 @@ pub struct Technique {
 pub static TECHNIQUES: &[&Technique] = &[
     &soxhlet::TECHNIQUE,
     &ultrasonic::TECHNIQUE,
+    &percolate::TECHNIQUE,
+    &microwave::TECHNIQUE,
     &pressurised_liquid::TECHNIQUE,
     &supercritical::TECHNIQUE,
     &liquid_liquid::TECHNIQUE,
     &solid_phase::TECHNIQUE,
     &concentrate::TECHNIQUE,
+    &distil::TECHNIQUE,
     &dry::TECHNIQUE,
     &rinse::TECHNIQUE,
     &consume::TECHNIQUE,
