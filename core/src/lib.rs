@@ -26,6 +26,7 @@ pub mod material;
 pub mod metric;
 pub mod mixture;
 pub mod plan;
+pub mod pour;
 pub mod program;
 pub mod quantity;
 pub mod report;

@@ -12,10 +12,12 @@ mod example;
 mod input;
 mod materials;
 mod output;
+mod pour;
 mod schema;
 mod states;
 mod technique;
 mod trace;
+mod waste;
 
 use clap::{Parser, Subcommand};
 use output::Refusal;
@@ -42,6 +44,10 @@ enum What {
     Compare(account::Args),
     /// The postings, rules and inputs behind one figure
     Trace(trace::Args),
+    /// Papers of the waste desk: codes, labels, contents, months, pick-ups, load
+    Waste(waste::Args),
+    /// May this go into that container: codes gained, what must not meet, headspace
+    Pour(pour::Args),
     /// All errors and warnings of a plan; exit status 1 if there is an error
     Check(check::Args),
     /// The catalogue of materials, or all figures of one with their sources
@@ -70,6 +76,8 @@ fn main() -> ExitCode {
         Some(What::Account(args)) => account::run(args, account::What::Account),
         Some(What::Compare(args)) => account::run(args, account::What::Comparison),
         Some(What::Trace(args)) => trace::run(args),
+        Some(What::Waste(args)) => waste::run(args),
+        Some(What::Pour(args)) => pour::run(args),
         Some(What::Check(args)) => check::run(args),
         Some(What::Materials(args)) => materials::run(args),
         Some(What::Schema) => schema::run(),

@@ -5,6 +5,7 @@ mod bad_input;
 mod co2;
 mod files;
 mod results;
+mod waste;
 
 use serde_json::Value;
 use std::io::Write;
