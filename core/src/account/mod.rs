@@ -13,7 +13,9 @@ mod open;
 mod waste;
 mod working;
 
-pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
+pub use figure::{
+    Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
+};
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;
 pub use metric::Refusal;
