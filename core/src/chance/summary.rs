@@ -102,11 +102,13 @@ pub fn mean_and_deviation(values: &[f64]) -> (f64, f64) {
         return (0.0, 0.0);
     }
     let count = as_f64(values.len());
+    // From the first value on, so that equal values have a deviation of exactly 0.
+    let first = values.first().copied().unwrap_or(0.0);
     let mut sum = 0.0;
     for v in values {
-        sum += v;
+        sum += v - first;
     }
-    let mean = sum / count;
+    let mean = first + sum / count;
     let mut squares = 0.0;
     for v in values {
         squares += (v - mean) * (v - mean);

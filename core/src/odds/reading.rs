@@ -218,7 +218,7 @@ impl<'a> Reading<'a> {
     }
 
     /// The inputs that explain most of how far a figure of a route spreads, or of how far it differs from that of the route
-    /// `against`: largest first, those below a thousandth left out. What they do not add up to is due to inputs that act
+    /// `against`: largest first; those below a thousandth, or below what chance alone would show, are left out. What they do not add up to is due to inputs that act
     /// together. Empty with too few draws.
     #[must_use]
     pub fn matters(&self, id: &str, route: usize, against: Option<usize>) -> Vec<Matter> {
@@ -235,6 +235,9 @@ impl<'a> Reading<'a> {
             None => column(figure, this, this, DRAWS_FOR_SHARES),
         };
         let Some(values) = values else { return Vec::new() };
+        // The share of an input without influence scatters by √(2 · 31)/N around 0: three times that is nothing.
+        let by_chance = 24.0 / values.len() as f64;
+        let least = if by_chance > 1e-3 { by_chance } else { 1e-3 };
         let mut inputs: Vec<&Input> = Vec::new();
         for input in [Some(this), other].into_iter().flatten().flat_map(|r| &r.program.inputs) {
             if input.spread != Spread::Exact && !inputs.iter().any(|i| i.key == input.key) {
@@ -246,7 +249,7 @@ impl<'a> Reading<'a> {
         for input in inputs {
             let draws = this.columns.kept(beside, DRAWS_FOR_SHARES).map(u64::from);
             let share = variance_share(draws, &values, input.key, self.sampled.seed());
-            if let Some(share) = share.filter(|s| *s >= 1e-3) {
+            if let Some(share) = share.filter(|s| *s >= least) {
                 let words = input_words(self.work, &input.identity);
                 out.push(Matter { identity: input.identity.clone(), words, share, origin: input.origin });
             }
