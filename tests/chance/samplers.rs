@@ -28,7 +28,7 @@ fn distance(mut a: Vec<f64>, mut b: Vec<f64>) -> f64 {
 fn draws_are_those_of_the_reference_library() {
     let limit = 1.95 * (2.0 / COUNT as f64).sqrt();
     for seed in [1_u64, 7] {
-        let mut rng = Pcg64::new(u128::from(seed), 0xa02b_dbf7_bb3c_0a7a_c28f_a16a_64ab_f96);
+        let mut rng = Pcg64::new(u128::from(seed), 0x0a02_bdbf_7bb3_c0a7_ac28_fa16_a64a_bf96);
         let ours =
             |input: &thimbleworth::chance::Input| (0..COUNT).map(|d| input.draw(seed, d)).collect::<Vec<_>>();
         let theirs: Vec<f64> =

@@ -139,7 +139,7 @@ fn only_edited_routes_are_drawn_again() {
     run.follow(&sound(&more), wish(1000));
     assert_eq!(run.remaining(), 4000);
     let mut run = sampled(&account, 1000);
-    let mut noted = plan.clone();
+    let mut noted = plan;
     noted["notes"] = json!("other words");
     noted["workloads"][0]["present"] = json!("Ultrasonic");
     run.follow(&sound(&noted), wish(1000));
