@@ -164,6 +164,14 @@ impl<'a> Contents<'a> {
         kg / self.mass_kg()
     }
 
+    /// Density of its liquids alone, as if they mixed without change; kg/m³.
+    #[must_use]
+    pub fn liquid_density_kg_m3(&self) -> Option<f64> {
+        let m3 = self.volume_m3();
+        let kg = self.parts.iter().filter(|p| p.density_kg_m3.is_some()).fold(0.0, |sum, p| sum + p.kg);
+        (m3 > 0.0).then(|| kg / m3)
+    }
+
     /// The share by mass of the parts for which this holds.
     pub(super) fn mass_share(&self, holds: &dyn Fn(&Substance) -> bool) -> f64 {
         let kg = self.parts.iter().filter(|p| holds(p.substance)).fold(0.0, |sum, p| sum + p.kg);

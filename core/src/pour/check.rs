@@ -201,7 +201,7 @@ fn space(
     if all.solid {
         return;
     }
-    if let Some(density) = all.density_kg_m3() {
+    if let Some(density) = all.liquid_density_kg_m3() {
         let relative = density / 1000.0;
         let words = |mark: f64| {
             let (found, mark) = (show(relative, Kind::Number), show(mark, Kind::Number));

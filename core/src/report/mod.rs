@@ -6,6 +6,7 @@
 //! | [`result_csv`] | the same figures, flat, for a spreadsheet |
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
+//! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
 //! | [`paper()`] | a paper of the waste desk: codes, labels, contents, months, pick-ups, load |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
@@ -14,6 +15,7 @@
 mod csv;
 mod grid;
 mod markdown;
+mod odds;
 mod paper;
 mod result;
 mod row;
@@ -23,6 +25,7 @@ mod words;
 
 pub use csv::{result_csv, text_cell};
 pub use markdown::{escaped, markdown};
+pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
 pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
