@@ -242,6 +242,12 @@ fn measured_path(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<Str
     Some(below(&below(&step.path, "measured"), name))
 }
 
+/// The sentence of a state or loop says what would do after its last semicolon.
+pub(super) fn found_and_need(text: &str) -> (String, String) {
+    let (found, need) = text.rsplit_once("; ").unwrap_or((text, "another temperature or pressure"));
+    (found.to_owned(), need.to_owned())
+}
+
 fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
     let path = match failure.step {
         StepIx::Opening => below(&route.path, "steps"),
@@ -332,14 +338,8 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
             ),
             "a smaller volume to be left, or no concentration".to_owned(),
         ),
-        Halt::Co2(e) => {
-            // The sentence of a state says what would do after its last semicolon.
-            let text = e.to_string();
-            text.rsplit_once("; ").map_or_else(
-                || (text.clone(), "another temperature or pressure".to_owned()),
-                |(found, need)| (found.to_owned(), need.to_owned()),
-            )
-        }
+        Halt::Co2(e) => found_and_need(&e.to_string()),
+        Halt::Loop(e) => found_and_need(&e.to_string()),
         Halt::NotANumber { rule: r } => (
             format!("\"{}\" comes to an amount that is negative or not a finite number", rule(r)),
             "check the amounts of this step".to_owned(),

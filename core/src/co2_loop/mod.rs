@@ -42,7 +42,7 @@ pub use open::OpenLoop;
 pub use recompression::Recompression;
 pub use vessel::{Trapped, letdown_left_share, trapped_liquid, vent_kg, void_m3};
 
-use crate::co2::{Equilibrium, StateError, state_from_enthalpy};
+use crate::co2::{Equilibrium, Memo, StateError, state_from_enthalpy};
 use crate::source::{Source, Standing};
 
 /// First law of a steady stream.
@@ -142,8 +142,18 @@ pub struct Leg {
     pub ideal_j_kg: Option<f64>,
 }
 
+/// What a route keeps of carbon dioxide from draw to draw: states met, and room for a loop. Nothing follows from what
+/// stands in it.
+#[derive(Clone, Debug, Default)]
+pub struct Scratch {
+    /// States met.
+    pub states: Memo,
+    /// Room for a loop.
+    pub legs: Loop,
+}
+
 /// The points and legs of a loop, open or closed, per kilogram of carbon dioxide passed through.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, Default, PartialEq)]
 pub struct Loop {
     /// The points in the order of flow.
     pub points: Vec<Point>,
@@ -154,8 +164,12 @@ pub struct Loop {
 }
 
 impl Loop {
-    fn from(first: Point) -> Self {
-        Self { points: vec![first], legs: Vec::new(), closed: false }
+    /// Empty but for a first point.
+    fn begin(&mut self, first: Point) {
+        self.points.clear();
+        self.legs.clear();
+        self.closed = false;
+        self.points.push(first);
     }
 
     fn last(&self) -> usize {

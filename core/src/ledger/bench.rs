@@ -2,6 +2,9 @@
 
 use super::{Cells, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
 use crate::chance::{Draw, In};
+use crate::co2::Memo;
+use crate::co2_loop::Scratch;
+use crate::heat::{Basis, Demand};
 use crate::quantity::Kind;
 
 /// A measured figure that takes the place of a computed one.
@@ -31,6 +34,7 @@ pub struct Bench<'a> {
     natures: &'a [Nature],
     cells: &'a mut Cells,
     spent: &'a mut [f64; Utility::COUNT],
+    co2: &'a mut Scratch,
     trace: Option<&'a mut Trace>,
     step: StepIx,
     measured: &'a [Option<Measured>],
@@ -44,11 +48,13 @@ impl<'a> Bench<'a> {
         natures: &'a [Nature],
         cells: &'a mut Cells,
         spent: &'a mut [f64; Utility::COUNT],
+        co2: &'a mut Scratch,
         trace: Option<&'a mut Trace>,
     ) -> Self {
         cells.clear();
         spent.fill(0.0);
-        Self { draw, natures, cells, spent, trace, step: StepIx::Opening, measured: &[], runs_a_year: 0.0 }
+        co2.states.begin();
+        Self { draw, natures, cells, spent, co2, trace, step: StepIx::Opening, measured: &[], runs_a_year: 0.0 }
     }
 
     /// Turns to the next step, which runs so often a year.
@@ -399,6 +405,35 @@ impl<'a> Bench<'a> {
             let (step, runs_a_year) = (self.step, self.runs_a_year);
             trace.spendings.push(Spending { step, rule, utility, amount_si, runs_a_year });
         }
+    }
+
+    /// Spends heat into a stream, or the heat taken out of it where the amount is negative; J in this run.
+    ///
+    /// Both are posted, one of them as zero, so that the sequence is the same in every draw.
+    pub fn spend_heat(&mut self, heat_j: f64, rule: RuleIx) {
+        let (into_j, out_j) = if heat_j < 0.0 { (0.0, -heat_j) } else { (heat_j, 0.0) };
+        self.spend(Utility::Heat, into_j, rule);
+        self.spend(Utility::Cooling, out_j, rule);
+    }
+
+    /// Spends the electricity of one apparatus: whichever figure is chosen counts, and all that are known are kept beside it.
+    pub fn spend_electricity(&mut self, demand: &Demand, rule: RuleIx) -> Basis {
+        let (chosen_j, basis) = demand.chosen();
+        self.spend(Utility::Electricity, chosen_j, rule);
+        self.spend(Utility::NominalElectricity, demand.nominal_j, rule);
+        self.spend(Utility::ComputedElectricity, demand.computed_j.unwrap_or(0.0), rule);
+        self.spend(Utility::MeasuredElectricity, demand.measured_j.unwrap_or(0.0), rule);
+        basis
+    }
+
+    /// States of carbon dioxide that this route has met.
+    pub fn states(&mut self) -> &mut Memo {
+        &mut self.co2.states
+    }
+
+    /// States met, and room for a loop.
+    pub fn co2(&mut self) -> &mut Scratch {
+        self.co2
     }
 
     /// Notes a number put into a rule; does nothing unless the run is traced.

@@ -1,7 +1,8 @@
 //! Rules that several techniques share.
 
 use crate::chance::{Draw, In};
-use crate::ledger::{Bench, Halt, Material, Place, RuleIx, Utility};
+use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
+use crate::heat::Demand;
 use crate::quantity::Kind;
 
 /// What the sample gives up: a share of each named material moves with the extract.
@@ -39,5 +40,5 @@ pub(super) fn electricity(b: &mut Bench<'_>, power_w: f64, time_s: f64, rule: Ru
     b.note(rule, "P", power_w, Kind::Power);
     b.note(rule, "t", time_s, Kind::Time);
     // W = P t
-    b.spend(Utility::Electricity, power_w * time_s, rule);
+    b.spend_electricity(&Demand { nominal_j: power_w * time_s, computed_j: None, measured_j: None }, rule);
 }

@@ -202,7 +202,7 @@ fn postings(
                             }
                             Contribution::Spending { index, amount_si } => {
                                 let s = account.trace.spendings.get(*index)?;
-                                let kind = if matches!(s.utility, thimbleworth::ledger::Utility::Electricity) { Kind::Energy } else { Kind::Mass };
+                                let kind = if s.utility.is_energy() { Kind::Energy } else { Kind::Mass };
                                 Some(html! { <tr>
                                     <th scope="row">{ rule_of(route, s.step, s.rule).map_or("", |r| r.name) }</th>
                                     <td>{ s.utility.name() }</td><td></td><td></td>
