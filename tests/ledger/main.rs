@@ -17,6 +17,7 @@ mod figures;
 mod generator;
 mod invariance;
 mod measured;
+mod release;
 mod worked;
 
 use serde_json::Value;

@@ -150,6 +150,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         problems.push(explain(route, &failure));
         return None;
     }
+    doubted(route, &trace, problems);
     placed_by_default(route, site, &desk, problems);
     returned_unbought(route, &desk, problems);
     let mut draft = Draft::default();
@@ -184,6 +185,18 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         cautions,
         product_kg,
     })
+}
+
+fn doubted(route: &RouteProgram, trace: &Trace, problems: &mut Vec<Problem>) {
+    for doubt in &trace.doubts {
+        let path = match doubt.step {
+            StepIx::Step(i) => route.steps.get(i as usize).map_or(&route.path, |s| &s.path),
+            StepIx::Opening | StepIx::Closing => &route.path,
+        };
+        let rule = rule_of(route, doubt.step, doubt.rule).map_or("", |r| r.name);
+        let found = format!("{rule}: {} {}", doubt.found, show(doubt.value_si, doubt.kind));
+        problems.push(Problem::warning(path.clone(), found, doubt.need));
+    }
 }
 
 fn placed_by_default(route: &RouteProgram, site: &SiteUse, desk: &Desk, problems: &mut Vec<Problem>) {

@@ -19,11 +19,7 @@ impl<const N: usize, V> Default for Kept<N, V> {
 }
 
 impl<const N: usize, V: Copy> Kept<N, V> {
-    fn find(
-        &mut self,
-        of: [f64; N],
-        make: impl FnOnce() -> Result<V, StateError>,
-    ) -> Result<V, StateError> {
+    fn find(&mut self, of: [f64; N], make: impl FnOnce() -> Result<V, StateError>) -> Result<V, StateError> {
         let key = of.map(f64::to_bits);
         let place = self.next;
         self.next += 1;
@@ -122,7 +118,10 @@ mod tests {
             for (t, p) in [(t, 30e6), (278.15, 6e6), (t, 30e6), (t + 5.0, 5e6)] {
                 assert_eq!(memo.state(t, p), state(t, p));
             }
-            assert_eq!(memo.saturated_liquid(280.0 + t / 100.0), Ok(saturated_states(280.0 + t / 100.0).unwrap().0));
+            assert_eq!(
+                memo.saturated_liquid(280.0 + t / 100.0),
+                Ok(saturated_states(280.0 + t / 100.0).unwrap().0)
+            );
         }
         assert!(memo.states.rows.len() == 4 && memo.liquids.rows.len() == 1);
     }

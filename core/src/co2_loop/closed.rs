@@ -70,8 +70,9 @@ impl ClosedLoop {
         above("separator pressure", low_pa, "triple pressure", TRIPLE_PRESSURE_PA)?;
         let liquid = states.state(self.condenser_temperature_k, low_pa).map_err(at("condenser outlet"))?;
         let lift = pump_in(states, &liquid.into(), self.extraction_pressure_pa, self.pump_efficiency)?;
-        let extractor =
-            states.state(self.extraction_temperature_k, self.extraction_pressure_pa).map_err(at("extractor"))?;
+        let extractor = states
+            .state(self.extraction_temperature_k, self.extraction_pressure_pa)
+            .map_err(at("extractor"))?;
         let separator = states.state(self.separator_temperature_k, low_pa).map_err(at("separator"))?;
 
         legs.begin(Point::at("condenser out", liquid.into()));

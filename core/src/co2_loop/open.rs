@@ -71,7 +71,9 @@ impl OpenLoop {
     /// As for [`energies`](Self::energies).
     pub fn energies_in(&self, states: &mut Memo, legs: &mut Loop) -> Result<(), LoopError> {
         let supply: Equilibrium = match self.supply_pressure_pa {
-            Some(pressure_pa) => states.state(self.supply_temperature_k, pressure_pa).map_err(at("supply"))?,
+            Some(pressure_pa) => {
+                states.state(self.supply_temperature_k, pressure_pa).map_err(at("supply"))?
+            }
             None => states.saturated_liquid(self.supply_temperature_k).map_err(at("supply"))?,
         }
         .into();
@@ -83,8 +85,9 @@ impl OpenLoop {
         above("extraction pressure", self.extraction_pressure_pa, "supply pressure", supply.pressure_pa)?;
         above("extraction pressure", self.extraction_pressure_pa, "vent pressure", self.vent_pressure_pa)?;
         let lift = pump_in(states, &chilled, self.extraction_pressure_pa, self.pump_efficiency)?;
-        let extractor =
-            states.state(self.extraction_temperature_k, self.extraction_pressure_pa).map_err(at("extractor"))?;
+        let extractor = states
+            .state(self.extraction_temperature_k, self.extraction_pressure_pa)
+            .map_err(at("extractor"))?;
         let vent = states.state(self.vent_temperature_k, self.vent_pressure_pa).map_err(at("vent"))?;
 
         legs.begin(Point::at("supply", supply));

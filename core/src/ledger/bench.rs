@@ -1,6 +1,6 @@
 //! The bench on which a route runs: the only hand that writes postings.
 
-use super::{Cells, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
+use super::{Cells, Doubt, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
 use crate::chance::{Draw, In};
 use crate::co2::Memo;
 use crate::co2_loop::Scratch;
@@ -39,6 +39,8 @@ pub struct Bench<'a> {
     step: StepIx,
     measured: &'a [Option<Measured>],
     runs_a_year: f64,
+    /// How long what goes to air from here on takes; s.
+    over_s: Option<f64>,
 }
 
 impl<'a> Bench<'a> {
@@ -54,7 +56,18 @@ impl<'a> Bench<'a> {
         cells.clear();
         spent.fill(0.0);
         co2.states.begin();
-        Self { draw, natures, cells, spent, co2, trace, step: StepIx::Opening, measured: &[], runs_a_year: 0.0 }
+        Self {
+            draw,
+            natures,
+            cells,
+            spent,
+            co2,
+            trace,
+            step: StepIx::Opening,
+            measured: &[],
+            runs_a_year: 0.0,
+            over_s: None,
+        }
     }
 
     /// Turns to the next step, which runs so often a year.
@@ -86,6 +99,7 @@ impl<'a> Bench<'a> {
         self.runs_a_year = runs_a_year;
         self.step = step;
         self.measured = measured;
+        self.over_s = None;
         Ok(())
     }
 
@@ -93,6 +107,16 @@ impl<'a> Bench<'a> {
     pub fn at_close(&mut self) {
         self.step = StepIx::Closing;
         self.measured = &[];
+        self.over_s = None;
+    }
+
+    /// From here on what this step sends to hood or room goes evenly over so long a time; s. 0 is all at once.
+    ///
+    /// A mass alone has no concentration: the account of the room's air needs the time beside it. Until a step says it, and
+    /// again from the next step on, the time is not known, and the account of air takes the worst. Does nothing to the masses.
+    #[inline]
+    pub fn release_over(&mut self, time_s: f64) {
+        self.over_s = if time_s >= 0.0 && time_s.is_finite() { Some(time_s) } else { None };
     }
 
     /// What lies in a bench place; kg in this run.
@@ -149,7 +173,18 @@ impl<'a> Bench<'a> {
         }
         if let Some(trace) = self.trace.as_deref_mut() {
             let (step, runs_a_year) = (self.step, self.runs_a_year);
-            trace.postings.push(Posting { step, rule, from, to, material: m, kg, runs_a_year, measured });
+            let over_s = if to.is_air() { self.over_s } else { None };
+            trace.postings.push(Posting {
+                step,
+                rule,
+                from,
+                to,
+                material: m,
+                kg,
+                runs_a_year,
+                over_s,
+                measured,
+            });
         }
     }
 
@@ -441,6 +476,28 @@ impl<'a> Bench<'a> {
     pub fn note(&mut self, rule: RuleIx, symbol: &'static str, value_si: f64, kind: Kind) {
         if let Some(trace) = self.trace.as_deref_mut() {
             trace.notes.push(Note { step: self.step, rule, symbol, value_si, kind });
+        }
+    }
+
+    /// Whether the run is traced: what only a reader wants need not be computed in a draw.
+    #[inline]
+    #[must_use]
+    pub fn traced(&self) -> bool {
+        self.trace.is_some()
+    }
+
+    /// Tells the reader of something odd that does not stop the run: `found` with the value behind it, and what would do. Does
+    /// nothing unless the run is traced.
+    pub fn doubt(
+        &mut self,
+        rule: RuleIx,
+        found: &'static str,
+        value_si: f64,
+        kind: Kind,
+        need: &'static str,
+    ) {
+        if let Some(trace) = self.trace.as_deref_mut() {
+            trace.doubts.push(Doubt { step: self.step, rule, found, value_si, kind, need });
         }
     }
 }

@@ -94,6 +94,17 @@ impl Place {
         (OUTSIDE_PLACES..OUTSIDE_PLACES + BENCH_PLACES).contains(&(self.0 as usize))
     }
 
+    /// Whether what comes here has gone to air.
+    ///
+    /// ```
+    /// use thimbleworth::ledger::Place;
+    /// assert!(Place::HOOD.is_air() && Place::ROOM.is_air() && !Place::VAPOUR.is_air());
+    /// ```
+    #[must_use]
+    pub fn is_air(self) -> bool {
+        self == Self::HOOD || self == Self::ROOM
+    }
+
     /// The index among all places.
     #[must_use]
     pub fn index(self) -> usize {

@@ -31,6 +31,8 @@ pub struct Posting {
     pub kg: f64,
     /// How often the step runs; a year.
     pub runs_a_year: f64,
+    /// How long it takes in one run, where it goes to air and the step says so; s. 0 is all at once.
+    pub over_s: Option<f64>,
     /// Whether a measured figure took the place of the computed one.
     pub measured: bool,
 }
@@ -58,6 +60,23 @@ pub struct Note {
     pub kind: Kind,
 }
 
+/// Something odd that a step found while it ran, which does not stop it.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Doubt {
+    /// The step.
+    pub step: StepIx,
+    /// The rule.
+    pub rule: RuleIx,
+    /// What was found; the value follows it.
+    pub found: &'static str,
+    /// The value; SI.
+    pub value_si: f64,
+    /// What it measures.
+    pub kind: Kind,
+    /// What would do.
+    pub need: &'static str,
+}
+
 /// A utility spent by one step.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Spending {
@@ -82,6 +101,8 @@ pub struct Trace {
     pub spendings: Vec<Spending>,
     /// The numbers put into the rules.
     pub notes: Vec<Note>,
+    /// What is odd, as warnings of the account.
+    pub doubts: Vec<Doubt>,
 }
 
 impl Trace {

@@ -126,8 +126,8 @@ struct ProblemDocument<'a> {
 /// | `assumptions` | values that stand in for what the plan leaves out: `path`, `label`, `value`, `source`, `standing` |
 /// | `cautions` | what can hurt: `key`, `text`, `source`; local codes and licensed practice decide |
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
-/// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `measured` |
-/// | `utilities` | electricity (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `seconds_per_run` (how long it takes in one run, for what goes to air where the step says so, else `null`), `measured` |
+/// | `utilities` | zeros left out: electricity as it counts, and by stated power, physics and meter beside it, heat and cooling of streams (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
 /// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
@@ -226,7 +226,13 @@ fn route_account<'a>(
         cautions: account.cautions.iter().map(|c| CautionDocument::of(c)).collect(),
         closure: account.closure,
         postings: moved.map(|p| PostingDocument::of(route, site, p)).collect(),
-        utilities: account.trace.spendings.iter().map(|s| SpendingDocument::of(route, s)).collect(),
+        utilities: account
+            .trace
+            .spendings
+            .iter()
+            .filter(|s| s.amount_si != 0.0)
+            .map(|s| SpendingDocument::of(route, s))
+            .collect(),
         inputs: route.inputs.iter().map(InputDocument::of).collect(),
     }
 }

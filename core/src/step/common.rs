@@ -1,8 +1,8 @@
 //! Rules that several techniques share.
 
 use crate::chance::{Draw, In};
-use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::heat::Demand;
+use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::quantity::Kind;
 
 /// What the sample gives up: a share of each named material moves with the extract.

@@ -154,6 +154,9 @@ impl Step for Concentrate {
         let share = if there_m3 > 0.0 { 1.0 - wanted_m3 / there_m3 } else { 0.0 };
         b.share_volatile(Place::LIQUOR, Place::VAPOUR, share, EVAPORATED)?;
 
+        if let Some(time) = self.time {
+            b.release_over(x.get(time));
+        }
         let lost = match self.loss {
             Loss::Share(share) => x.get(share),
             Loss::AllBut(caught) => 1.0 - x.get(caught),

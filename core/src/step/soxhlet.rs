@@ -113,6 +113,8 @@ impl Step for Soxhlet {
         let marc_kg = b.need(Place::MARC)?;
         self.solvent.charge(x, b, Place::LIQUOR, x.get(self.charge), CHARGED)?;
 
+        let time_s = x.get(self.time);
+        b.release_over(time_s);
         let loss = x.get(self.loss);
         b.note(LOST, "s", loss, Kind::Fraction);
         // mᵢ = s mᵢ(liquor)
@@ -121,7 +123,6 @@ impl Step for Soxhlet {
         super::extract(x, b, &self.extracts, Place::MARC, Place::LIQUOR, EXTRACTED)?;
         super::hold_up(b, x.get(self.hold_up), marc_kg, HELD)?;
 
-        let time_s = x.get(self.time);
         if let Some(heater) = self.heater {
             super::electricity(b, x.get(heater), time_s, HEATED);
         }

@@ -115,6 +115,9 @@ impl Step for Ultrasonic {
         for _ in 0..self.portions {
             self.solvent.charge(x, b, Place::LIQUOR, x.get(self.charge), CHARGED)?;
         }
+        if let Some(time) = self.time {
+            b.release_over(x.get(time) * f64::from(self.portions));
+        }
         let loss = x.get(self.loss);
         b.note(LOST, "s", loss, Kind::Fraction);
         // mᵢ = s mᵢ(liquor)

@@ -21,6 +21,7 @@ pub(super) struct PostingDocument<'a> {
     kg_per_run: f64,
     runs_per_year: f64,
     kg_per_year: f64,
+    seconds_per_run: Option<f64>,
     measured: bool,
 }
 
@@ -46,6 +47,7 @@ impl<'a> PostingDocument<'a> {
             kg_per_run: p.kg,
             runs_per_year: p.runs_a_year,
             kg_per_year: p.kg_a_year(),
+            seconds_per_run: p.over_s,
             measured: p.measured,
         }
     }
