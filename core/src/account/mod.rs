@@ -13,6 +13,7 @@ mod open;
 mod waste;
 mod working;
 
+pub use energy::{StepEnergy, by_step};
 pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;

@@ -42,7 +42,7 @@ impl<const N: usize, V: Copy> Kept<N, V> {
 
 /// States of carbon dioxide that a route has met, with the bits of what they were asked for.
 ///
-/// Gives what [`state`] and its kin give, to the last bit. It grows in the first run and allocates nothing after it.
+/// Gives what [`state`] and its kin give, to the last bit. It grows where a run makes more calls than it has room for, and allocates nothing else.
 ///
 /// ```
 /// use thimbleworth::co2::{Memo, state};
@@ -60,6 +60,16 @@ pub struct Memo {
 }
 
 impl Memo {
+    /// Room for so many calls of a run.
+    #[must_use]
+    pub fn with_room(calls: usize) -> Self {
+        let mut memo = Self::default();
+        memo.states.rows.resize(calls, None);
+        memo.liquids.rows.resize(calls, None);
+        memo.lifts.rows.resize(calls, None);
+        memo
+    }
+
     /// Begins a run: the next call is its first.
     pub fn begin(&mut self) {
         self.states.next = 0;

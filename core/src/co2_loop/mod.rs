@@ -152,6 +152,16 @@ pub struct Scratch {
     pub legs: Loop,
 }
 
+impl Scratch {
+    /// Room for so many calls of a run.
+    #[must_use]
+    pub fn with_room(calls: usize) -> Self {
+        let most = if calls > 0 { 24 } else { 0 };
+        let legs = Loop { points: Vec::with_capacity(most), legs: Vec::with_capacity(most), closed: false };
+        Self { states: Memo::with_room(calls), legs }
+    }
+}
+
 /// The points and legs of a loop, open or closed, per kilogram of carbon dioxide passed through.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Loop {

@@ -4,7 +4,7 @@ use super::{Cells, Doubt, Halt, Material, Note, Place, Posting, RuleIx, Spending
 use crate::chance::{Draw, In};
 use crate::co2::Memo;
 use crate::co2_loop::Scratch;
-use crate::heat::{Basis, Demand};
+use crate::heat::Demand;
 use crate::quantity::Kind;
 
 /// A measured figure that takes the place of a computed one.
@@ -451,14 +451,12 @@ impl<'a> Bench<'a> {
         self.spend(Utility::Cooling, out_j, rule);
     }
 
-    /// Spends the electricity of one apparatus: whichever figure is chosen counts, and all that are known are kept beside it.
-    pub fn spend_electricity(&mut self, demand: &Demand, rule: RuleIx) -> Basis {
-        let (chosen_j, basis) = demand.chosen();
-        self.spend(Utility::Electricity, chosen_j, rule);
+    /// Spends the electricity of one apparatus, J in this run: what counts, and beside it all that is known.
+    pub fn spend_electricity(&mut self, counted_j: f64, demand: &Demand, rule: RuleIx) {
+        self.spend(Utility::Electricity, counted_j, rule);
         self.spend(Utility::NominalElectricity, demand.nominal_j, rule);
         self.spend(Utility::ComputedElectricity, demand.computed_j.unwrap_or(0.0), rule);
         self.spend(Utility::MeasuredElectricity, demand.measured_j.unwrap_or(0.0), rule);
-        basis
     }
 
     /// States of carbon dioxide that this route has met.

@@ -37,6 +37,8 @@ pub enum Utility {
     Heat,
     /// Heat taken out of the streams of the work; J. Likewise.
     Cooling,
+    /// Work of pumps and compressors on the streams of the work; J. Likewise.
+    Work,
     /// Electricity by stated power and time, whether or not it is the figure that counts; J.
     NominalElectricity,
     /// Electricity by physics and efficiencies, likewise; J.
@@ -47,7 +49,7 @@ pub enum Utility {
 
 impl Utility {
     /// How many there are.
-    pub const COUNT: usize = 8;
+    pub const COUNT: usize = 9;
     /// All of them, in the order of their index.
     pub const ALL: [Self; Self::COUNT] = [
         Self::Electricity,
@@ -55,6 +57,7 @@ impl Utility {
         Self::CirculatedCo2,
         Self::Heat,
         Self::Cooling,
+        Self::Work,
         Self::NominalElectricity,
         Self::ComputedElectricity,
         Self::MeasuredElectricity,
@@ -75,6 +78,7 @@ impl Utility {
             Self::CirculatedCo2 => "CO2 circulated",
             Self::Heat => "heat",
             Self::Cooling => "cooling",
+            Self::Work => "work",
             Self::NominalElectricity => "electricity, nominal",
             Self::ComputedElectricity => "electricity, computed",
             Self::MeasuredElectricity => "electricity, measured",

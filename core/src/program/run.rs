@@ -37,7 +37,7 @@ impl RouteProgram {
         Desk {
             cells: Cells::new(self.materials.len(), self.streams),
             spent: [0.0; Utility::COUNT],
-            co2: Scratch::default(),
+            co2: Scratch::with_room(self.steps.iter().fold(0, |sum, s| sum + s.step.co2_states())),
             runs: Runs { results: 0.0, extractions: 0.0, batches: 0.0, feed_share: 0.0 },
             placed_by_default_kg: [0.0; BENCH_PLACES],
         }

@@ -6,11 +6,13 @@
 //! | [`result_csv`] | the same figures, flat, for a spreadsheet |
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
+//! | [`energy_sheets`] | energy by step and CO2 by state, tables for all of them |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
 mod csv;
+mod energy;
 mod grid;
 mod markdown;
 mod result;
@@ -20,6 +22,7 @@ mod trace;
 mod words;
 
 pub use csv::{result_csv, text_cell};
+pub use energy::{Sheet, dense_words, energy_sheets};
 pub use markdown::{escaped, markdown};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;

@@ -40,5 +40,6 @@ pub(super) fn electricity(b: &mut Bench<'_>, power_w: f64, time_s: f64, rule: Ru
     b.note(rule, "P", power_w, Kind::Power);
     b.note(rule, "t", time_s, Kind::Time);
     // W = P t
-    b.spend_electricity(&Demand { nominal_j: power_w * time_s, computed_j: None, measured_j: None }, rule);
+    let demand = Demand { nominal_j: power_w * time_s, computed_j: None, measured_j: None };
+    b.spend_electricity(demand.chosen().0, &demand, rule);
 }
