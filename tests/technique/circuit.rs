@@ -176,7 +176,10 @@ fn what_cannot_come_back_is_refused() {
         found.unwrap()
     };
     let problem = refused(&step(json!({ "recycled_share": "95 %" })), "recycled_share");
-    assert!(problem.found.contains("holds 21.99 %") && problem.need.contains("at most 78.01 %"), "{problem:?}");
+    assert!(
+        problem.found.contains("holds 21.99 %") && problem.need.contains("at most 78.01 %"),
+        "{problem:?}"
+    );
     sound(&step(json!({ "recycled_share": "77 %" })));
     let low = refused(&step(json!({ "let_down_pressure": "20 bar" })), "let_down_pressure");
     assert!(low.found.contains("no compressor"), "{low:?}");

@@ -102,7 +102,7 @@ pub fn energy_sheets(route: &RouteProgram, account: &RouteAccount) -> Vec<Sheet>
         sheets.push(sheet);
     }
     for (step, dense) in &account.dense {
-        sheets.push(circuit(step_name(route, *step), dense));
+        sheets.push(circuit(&step_name(route, *step), dense));
     }
     sheets
 }
@@ -121,7 +121,7 @@ fn step_name(route: &RouteProgram, step: usize) -> String {
     format!("{} {}", step + 1, route.steps.get(step).map_or("", |s| s.technique.title))
 }
 
-fn circuit(name: String, dense: &DenseCo2) -> Sheet {
+fn circuit(name: &str, dense: &DenseCo2) -> Sheet {
     let legs = &dense.legs;
     let row = |leg: Option<&Leg>, point: usize| {
         let mut cells = Vec::new();

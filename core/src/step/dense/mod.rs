@@ -14,7 +14,7 @@ use crate::chance::{Draw, In};
 use crate::co2_loop::Scratch;
 use crate::ledger::{Bench, Halt, Material, Place, RuleIx, Utility};
 use crate::quantity::Kind;
-use crate::source::{FROM_MEMORY, MASS_BALANCE, Source, Standing};
+use crate::source::{Source, Standing};
 
 pub(super) const SPAN_WAGNER: Source =
     Source::new("Span and Wagner 1996, J. Phys. Chem. Ref. Data 25, 1509", Standing::Secondary);
@@ -61,16 +61,6 @@ pub(super) const fn rules<const N: usize>(own: &[Rule]) -> [Rule; N] {
     assert!(N == own.len() + circuit::RULES.len(), "the list is as long as its parts");
     all
 }
-
-/// The rules by which a vessel is filled, passed through and let down, in the order of a technique's list.
-pub(super) const CHAMBER: [Rule; 6] = [
-    Rule::new("static fill", "m = V_void ρ(T, p) less what is there", SPAN_WAGNER),
-    Rule::new("passed through", "what flowed, and what the vessel no longer holds", MASS_BALANCE),
-    Rule::new("leaks", "m = s m_flow", FROM_MEMORY),
-    Rule::new("left with the goods", "m = c m_goods, at most what is there", FROM_MEMORY).measurable(),
-    Rule::new("vented at let-down", "m = V_void ρ(T_l, p_l); all of it where the CO2 is vented", SPAN_WAGNER),
-    Rule::new("returned to supply", "what the let-down recovers", MASS_BALANCE),
-];
 
 /// The places of the rules in a technique's list.
 pub(super) struct Rules {
