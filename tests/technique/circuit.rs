@@ -218,5 +218,8 @@ fn a_meter_counts_before_a_power_and_a_power_before_the_states() {
     assert!((2.0..5.0).contains(&computed) && !doubted, "{computed}");
     assert_eq!(kwh(json!({ "power": "4 kW", "run_time": "3 h" })), (12.0, false));
     assert_eq!(kwh(json!({ "power": "0.5 kW", "run_time": "3 h" })), (1.5, true));
-    assert_eq!(kwh(json!({ "power": "4 kW", "run_time": "3 h", "electricity": "9 kWh" })), (9.0, false));
+    assert_eq!(
+        kwh(json!({ "power": "4 kW", "run_time": "3 h", "measured": { "electricity": "9 kWh" } })),
+        (9.0, false)
+    );
 }

@@ -602,9 +602,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         let under = below(&self.path, "measured");
         for (name, text) in &doc.measured {
             let path = below(&under, name);
-            let open = || {
-                self.technique.rules.iter().filter(|r| r.measurable == crate::step::Measurable::MassOrShare)
-            };
+            let open = || self.technique.rules.iter().filter(|r| r.measurable != crate::step::Measurable::No);
             let Some(index) = self.technique.rules.iter().position(|r| r.name == name) else {
                 let names = open().map(|r| r.name);
                 let hint = nearest(name, names.clone()).map_or_else(
@@ -635,6 +633,23 @@ impl<'r, 'p> Reader<'r, 'p> {
                     format!("\"{name}\" cannot be replaced by a measurement"),
                     need,
                 ));
+                continue;
+            }
+            if self.technique.rules[index].measurable == crate::step::Measurable::Energy {
+                match self.route.amounts.read(text, Kind::Energy) {
+                    Ok(amount) => {
+                        measured[index] =
+                            Some(Measured::Energy(self.route.input(path, &amount, Origin::Measured)));
+                        // The meter counts what no power is stated for.
+                        let under = self.path.clone() + ".";
+                        self.route.uncounted.retain(|path| !path.starts_with(&under));
+                    }
+                    Err(e) => {
+                        let need = "the electricity of one run as a meter reads it, such as \"1.2 kWh\"";
+                        let found = format!("\"{text}\": {}", e.found());
+                        self.route.problems.push(Problem::error(path, found, need));
+                    }
+                }
                 continue;
             }
             let mass = self.route.amounts.read(text, Kind::Mass);

@@ -120,11 +120,6 @@ const RUN_TIME: Param = Param::quantity("run_time", "Time the unit runs", Kind::
     .usual(600.0, 86_400.0)
     .hint("With static hold, heating up and let-down; needed where a power is given.")
     .source(COMMON_PRACTICE);
-const METER: Param = Param::quantity("electricity", "Electricity by a meter", Kind::Energy)
-    .physical(0.0, 1e12)
-    .hint("For one run; counts in place of power by time and of what the states come to.")
-    .source(COMMON_PRACTICE);
-
 /// The parameters of a circuit in the order of the form, all but [`CIRCUIT`], [`VENT_TO`], [`LEAK`] and the temperature at the
 /// pump.
 pub(in crate::step) const STATES: [Param; 8] = [
@@ -138,7 +133,7 @@ pub(in crate::step) const STATES: [Param; 8] = [
     PUMP_EFFICIENCY,
 ];
 /// The parameters of what is drawn, in the order of the form.
-pub(in crate::step) const DRAWN: [Param; 6] = [DRIVE_EFFICIENCY, COP, HEATING, POWER, RUN_TIME, METER];
+pub(in crate::step) const DRAWN: [Param; 5] = [DRIVE_EFFICIENCY, COP, HEATING, POWER, RUN_TIME];
 
 /// The rules of a circuit, which stand together in a technique's list, from the index that [`Circuit`] is given.
 pub(in crate::step) const RULES: [Rule; 7] = [
@@ -148,7 +143,8 @@ pub(in crate::step) const RULES: [Rule; 7] = [
     Rule::new("heat of letting down", "Q = m (h₂ − h₁), through a valve h₂ = h₁", SOURCE),
     Rule::new("condensing", "Q = m (h₂ − h₁)", SOURCE),
     Rule::new("recompressing", "W = m Σ (h(s₁, p₂) − h₁)/η, coolers between", SOURCE),
-    Rule::new("electricity", "W by the meter, else P t, else Σ W/η_d + Σ |Q_cold|/COP + Q_hot", DEFINITION),
+    Rule::new("electricity", "W by the meter, else P t, else Σ W/η_d + Σ |Q_cold|/COP + Q_hot", DEFINITION)
+        .metered(),
 ];
 
 /// The places of [`RULES`].
@@ -195,7 +191,6 @@ pub(in crate::step) struct Circuit {
     cop: In,
     electric: bool,
     nominal: Option<(In, In)>,
-    meter: Option<In>,
 }
 
 impl Circuit {
@@ -218,7 +213,7 @@ impl Circuit {
         let (efficiency, drive, cop) =
             (r.quantity(&PUMP_EFFICIENCY), r.quantity(&DRIVE_EFFICIENCY), r.quantity(&COP));
         let electric = r.choice(&HEATING) == ELECTRIC;
-        let (power, run_time, meter) = (r.optional(&POWER), r.optional(&RUN_TIME), r.optional(&METER));
+        let (power, run_time) = (r.optional(&POWER), r.optional(&RUN_TIME));
         Self {
             recycled,
             vent_to,
@@ -238,7 +233,6 @@ impl Circuit {
             cop,
             electric,
             nominal: power.zip(run_time),
-            meter,
         }
     }
 
@@ -458,7 +452,7 @@ impl Circuit {
                 );
             }
         }
-        let measured_j = self.meter.map(|w| x.get(w));
+        let measured_j = b.metered_j(rule);
         let stated_j = if self.nominal.is_some() { nominal_j } else { computed_j };
         let demand = Demand { nominal_j, computed_j: Some(computed_j), measured_j };
         b.spend_electricity(measured_j.unwrap_or(stated_j), &demand, rule);

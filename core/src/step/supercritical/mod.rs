@@ -57,7 +57,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             and what stays dissolved are lost. Stages follow as several steps, with let_down false for all but the last.",
     group: Group::Extraction,
     takes_feed: Some(Place::MARC),
-    params: &dense::params::<51>(&[
+    params: &dense::params::<50>(&[
         &[dense::TEMPERATURE, dense::PRESSURE],
         &vessel::PARAMS,
         &flow::PARAMS,
