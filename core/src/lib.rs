@@ -25,6 +25,7 @@ pub mod ledger;
 pub mod material;
 pub mod metric;
 pub mod mixture;
+pub mod odds;
 pub mod plan;
 pub mod program;
 pub mod quantity;

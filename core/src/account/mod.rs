@@ -15,7 +15,9 @@ mod waste;
 mod working;
 
 pub use energy::{StepEnergy, by_step};
-pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
+pub use figure::{
+    Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
+};
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;
 pub use metric::Refusal;
