@@ -4,6 +4,7 @@
 mod bad_input;
 mod co2;
 mod files;
+mod odds;
 mod results;
 
 use serde_json::Value;
