@@ -16,6 +16,7 @@ mod waste;
 mod working;
 
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
+pub use energy::{StepEnergy, by_step};
 pub use figure::{
     Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
 };

@@ -1,5 +1,6 @@
 //! A report to read and to print, as Markdown.
 
+use super::energy::energy_sheets;
 use super::row::{MONTHS, PROGRAM, figures};
 use super::words::{amount, cited, editions, hidden, is_detail, work_words};
 use crate::account::{Account, Group, HazardAccount, MaterialHazard, Pouring, RouteAccount, classified};
@@ -128,6 +129,7 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         let _ = write!(out, "Not given: {}: {}.\n\n", refusal.metrics, escaped(&refusal.reason));
     }
     waste_codes(out, site, Pouring { route, account });
+    energy(out, route, account);
     hazards(out, &account.hazard);
     if !route.assumptions.is_empty() {
         out.push_str("#### Assumed, because the plan does not say\n\n");
@@ -176,6 +178,27 @@ fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
         let _ = writeln!(out, "| {} |", cells.map(escaped).join(" | "));
     }
     out.push('\n');
+}
+
+fn energy(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
+    for sheet in energy_sheets(route, account) {
+        let _ = write!(out, "#### {}\n\n| {} |\n|", escaped(&sheet.title), sheet.head.join(" | "));
+        for i in 0..sheet.head.len() {
+            out.push_str(if i == 0 { " --- |" } else { " ---: |" });
+        }
+        out.push('\n');
+        for row in &sheet.rows {
+            let cells: Vec<String> = row.iter().map(|cell| escaped(cell)).collect();
+            let _ = writeln!(out, "| {} |", cells.join(" | "));
+        }
+        out.push('\n');
+        for note in &sheet.notes {
+            let _ = writeln!(out, "- {}", escaped(note));
+        }
+        if !sheet.notes.is_empty() {
+            out.push('\n');
+        }
+    }
 }
 
 fn hazards(out: &mut String, hazard: &HazardAccount) {

@@ -1,5 +1,6 @@
 //! Plain text for a terminal: the accounts of each route, or the routes side by side.
 
+use super::energy::energy_sheets;
 use super::grid::{Grid, paragraph};
 use super::row::figures;
 use super::words::{amount, cited, is_detail, visible, work_words};
@@ -131,6 +132,18 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         paragraph(out, "  ", &format!("Not given: {}: {}.", refusal.metrics, refusal.reason));
     }
     waste_codes(out, site, Pouring { route, account });
+    for sheet in energy_sheets(route, account) {
+        paragraph(out, "", &sheet.title);
+        let mut grid = Grid::new(24, 8);
+        grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());
+        for row in sheet.rows {
+            grid.row(row.iter().map(|cell| visible(cell)).collect());
+        }
+        grid.print(out);
+        for note in &sheet.notes {
+            paragraph(out, "  ", note);
+        }
+    }
     hazards(out, account);
     if !route.assumptions.is_empty() {
         out.push_str("Assumed, because the plan does not say\n");
