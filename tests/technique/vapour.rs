@@ -71,8 +71,8 @@ fn air_drawn_past_a_condenser_carries_what_the_equations_say() {
     let steps = json!([pour(&json!("n-hexane"), "200 mL"),
         { "step": "concentrate", "by": "rotary evaporator", "to": "5 mL", "condensate": "elsewhere", "coolant": "20 °C", "vacuum": "400 mbar",
           "evacuated": "3 L", "leak": "10 mg/min", "time": "20 min" }]);
-    let (p, held, air) = (16_179.0, 40_000.0, 101_325.0);
-    let pumped = 3e-3 / (R * 293.15) * ((air - p) / (held - p) as f64).ln();
+    let (p, held, air): (f64, f64, f64) = (16_179.0, 40_000.0, 101_325.0);
+    let pumped = 3e-3 / (R * 293.15) * ((air - p) / (held - p)).ln();
     let leaked = 10e-6 * 20.0 / 0.028_97 / (held - p);
     near(to_air_g(&soil(&steps), 1, "n-hexane"), 1000.0 * 0.086_18 * p * (pumped + leaked), 4e-3);
 

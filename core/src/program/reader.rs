@@ -160,7 +160,13 @@ impl<'r, 'p> Reader<'r, 'p> {
                 origin = Origin::NotKnown;
                 let path = self.at(p.key);
                 self.route.assume(path, p.label, default, source);
-                self.route.amounts.read(default, kind).ok()?
+                let mut amount = self.route.amounts.read(default, kind).ok()?;
+                // Nobody knows where in the usual range it lies: any value there is as likely as another.
+                let (low_si, high_si) = p.usual;
+                if low_si < high_si && low_si.is_finite() && high_si.is_finite() {
+                    amount.spread = Spread::Limits { low_si, high_si };
+                }
+                amount
             }
             Err(e) => {
                 self.error(p.key, format!("\"{}\": {}", text, e.found()), e.need());
