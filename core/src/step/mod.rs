@@ -2,6 +2,7 @@
 //! through a [`Reader`], and runs on the [`Bench`]. Adding one is a new file and one line in [`TECHNIQUES`].
 
 mod caution;
+mod clean;
 mod common;
 mod concentrate;
 mod consume;
@@ -9,6 +10,7 @@ mod declare;
 mod dense;
 mod discard;
 mod dry;
+mod impregnate;
 mod liquid_liquid;
 mod mixture;
 mod pressurised_liquid;
@@ -90,6 +92,8 @@ pub static TECHNIQUES: &[&Technique] = &[
     &ultrasonic::TECHNIQUE,
     &pressurised_liquid::TECHNIQUE,
     &supercritical::TECHNIQUE,
+    &impregnate::TECHNIQUE,
+    &clean::TECHNIQUE,
     &liquid_liquid::TECHNIQUE,
     &solid_phase::TECHNIQUE,
     &concentrate::TECHNIQUE,
