@@ -2,6 +2,7 @@
 //! through a [`Reader`], and runs on the [`Bench`]. Adding one is a new file and one line in [`TECHNIQUES`].
 
 mod caution;
+mod clean;
 mod common;
 mod concentrate;
 mod consume;
@@ -10,6 +11,7 @@ mod dense;
 mod discard;
 mod distil;
 mod dry;
+mod impregnate;
 mod liquid_liquid;
 mod microwave;
 mod mixture;
@@ -96,6 +98,8 @@ pub static TECHNIQUES: &[&Technique] = &[
     &microwave::TECHNIQUE,
     &pressurised_liquid::TECHNIQUE,
     &supercritical::TECHNIQUE,
+    &impregnate::TECHNIQUE,
+    &clean::TECHNIQUE,
     &liquid_liquid::TECHNIQUE,
     &solid_phase::TECHNIQUE,
     &concentrate::TECHNIQUE,
