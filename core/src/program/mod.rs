@@ -7,6 +7,7 @@ mod book;
 mod materials;
 mod reader;
 mod resolve;
+mod room;
 mod run;
 mod waste;
 mod work;
@@ -16,6 +17,7 @@ pub use book::{BOOK_RULES, PLACED, PLACED_BY_DEFAULT, TAKEN_IN};
 pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
 pub use reader::Reader;
 pub use resolve::{Resolved, resolve};
+pub use room::{ROOM_FIELDS, RoomUse};
 pub use run::{Desk, Failure};
 pub use waste::{Counted, EVERY_MONTH, Months, OtherWasteUse, SiteWaste, StreamWaste};
 pub use work::{Basis, Runs, Work};
@@ -53,6 +55,8 @@ pub struct SiteUse {
     pub streams: Vec<StreamUse>,
     /// What the waste desk needs to know.
     pub waste: SiteWaste,
+    /// The room, where the plan gives its volume and its air changes.
+    pub room: Option<RoomUse>,
 }
 
 /// A waste stream as the accounts need it.

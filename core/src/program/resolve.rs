@@ -129,12 +129,7 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
         problems.push(Problem::note("site.electricity", "kept; no figure of this version uses it yet"));
     }
-    if let Some(r) = &doc.room {
-        check(r.volume.as_deref(), Kind::Volume, "site.room.volume", problems);
-        check(r.air_changes.as_deref(), Kind::Frequency, "site.room.air_changes", problems);
-        check(r.hood_capture.as_deref(), Kind::Fraction, "site.room.hood_capture", problems);
-        problems.push(Problem::note("site.room", "kept; no figure of this version uses it yet"));
-    }
+    let room = doc.room.as_ref().and_then(|r| super::room::room(r, problems));
     if doc.streams.len() > MOST_STREAMS {
         problems.push(Problem::error(
             "site.streams",
@@ -149,7 +144,15 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         .map(|(i, s)| stream(s, &format!("site.streams[{i}]"), problems))
         .collect();
     let waste = waste::site(doc, problems);
-    SiteUse { name: doc.name.clone(), rules, as_of: doc.as_of.clone(), bench_temperature_k, streams, waste }
+    SiteUse {
+        name: doc.name.clone(),
+        rules,
+        as_of: doc.as_of.clone(),
+        bench_temperature_k,
+        streams,
+        waste,
+        room,
+    }
 }
 
 fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {
