@@ -89,9 +89,9 @@ fn a_cylinder_lets_go_and_nothing_is_averaged() {
     near(lab.sudden.oxygen_mixed * 100.0, 19.1, 0.005);
     near(store.sudden.mixed * 100.0, 33.9, 0.01);
     near(store.sudden.at_once * 100.0, 41.4, 0.01);
-    let (_, day, night) = lab.clears.unwrap();
-    near(day.unwrap()[0] / HOUR_S, 0.36, 0.02);
-    near(night.unwrap()[0] / HOUR_S, 9.7, 0.02);
+    let clears = lab.clears.unwrap();
+    near(clears.by_day.unwrap()[0] / HOUR_S, 0.36, 0.02);
+    near(clears.on_setback.unwrap()[0] / HOUR_S, 9.7, 0.02);
     // twice what is immediately dangerous
     near(lab.sudden.worst() / lab.idlh.unwrap().1, 2.2, 0.02);
     let told: Vec<_> = account

@@ -98,9 +98,19 @@ pub struct SuddenInRoom {
     pub sudden: Sudden,
     /// The level that is immediately dangerous, where the table has one: fraction by volume.
     pub idlh: Option<(&'static Limit, f64)>,
-    /// The lowest 8-hour mean that holds, and how long ventilation takes to come under it, from the mixed figure and from the one at
-    /// once: by day, on setback; s. `None` where it never does.
-    pub clears: Option<(f64, Option<[f64; 2]>, Option<[f64; 2]>)>,
+    /// How long ventilation takes, where there is any and a limit to come under.
+    pub clears: Option<Clears>,
+}
+
+/// How long ventilation takes to bring a room under a limit: from the mixed figure and from the one at once; s. `None` where it never does.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Clears {
+    /// The lowest 8-hour mean that holds, fraction by volume.
+    pub limit: f64,
+    /// By day.
+    pub by_day: Option<[f64; 2]>,
+    /// On setback.
+    pub on_setback: Option<[f64; 2]>,
 }
 
 /// The air of the room on one route.
@@ -337,7 +347,7 @@ fn let_go(
     let background = if cas == CARBON_DIOXIDE_CAS { CO2_OUTDOORS } else { 0.0 };
     let clears = lowest.filter(|_| ventilated).map(|limit| {
         let time = |n: f64| sudden.time_to_fall_under_s(limit, background, room.mixing * n).ok().flatten();
-        (limit, time(room.air_changes_per_s), room.setback_per_s.and_then(time))
+        Clears { limit, by_day: time(room.air_changes_per_s), on_setback: room.setback_per_s.and_then(time) }
     });
     Some(SuddenInRoom { place, name: substance.name.to_string(), mass_kg, sudden, idlh, clears })
 }

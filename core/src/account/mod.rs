@@ -16,7 +16,7 @@ mod poured;
 mod waste;
 mod working;
 
-pub use air::{AirAccount, AirRelease, GasInRoom, Held, SHIFT_S, SuddenInRoom};
+pub use air::{AirAccount, AirRelease, Clears, GasInRoom, Held, SHIFT_S, SuddenInRoom};
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
 pub use energy::{StepEnergy, by_step};
 pub use figure::{

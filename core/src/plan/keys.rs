@@ -205,7 +205,7 @@ static ELECTRICITY: Object = Object {
 };
 
 pub(super) static ROOM: Object = Object {
-    title: "the room",
+    title: "a room",
     keys: &[
         may("volume", Shape::Amount, r#""140 m3""#, "the volume of its air"),
         may("air_changes", Shape::Amount, r#""8 /h""#, "how often its air is changed by day"),

@@ -72,7 +72,7 @@ fn standing(room: &RoomUse, air: &AirAccount) -> Sheet {
         ];
         match &gas.on_setback {
             Some((_, e, shift)) => {
-                row.extend([by_volume(*shift), by_volume(e.worst_15min), by_volume(e.peak)])
+                row.extend([by_volume(*shift), by_volume(e.worst_15min), by_volume(e.peak)]);
             }
             None => row.extend([String::new(), String::new(), String::new()]),
         }
@@ -233,8 +233,8 @@ fn let_go(sudden: &[SuddenInRoom]) -> Sheet {
             s.idlh.map_or_else(String::new, |(_, x)| {
                 format!("{} times {}", significant(s.sudden.worst() / x, 2), by_volume(x))
             }),
-            s.clears.map_or_else(String::new, |(_, day, _)| clears(day)),
-            s.clears.map_or_else(String::new, |(_, _, night)| clears(night)),
+            s.clears.map_or_else(String::new, |c| clears(c.by_day)),
+            s.clears.map_or_else(String::new, |c| clears(c.on_setback)),
         ]);
     }
     let mut sheet = Sheet {

@@ -172,8 +172,8 @@ fn sudden(s: &SuddenInRoom) -> SuddenDocument {
         oxygen_at_once_percent: s.sudden.oxygen_at_once * 100.0,
         oxygen_mixed_percent: s.sudden.oxygen_mixed * 100.0,
         times_idlh: s.idlh.map(|(_, x)| s.sudden.worst() / x),
-        limit_percent: s.clears.map(|(x, ..)| x * 100.0),
-        hours_to_limit: s.clears.and_then(|(_, day, _)| day).map(hours),
-        hours_to_limit_on_setback: s.clears.and_then(|(.., night)| night).map(hours),
+        limit_percent: s.clears.map(|c| c.limit * 100.0),
+        hours_to_limit: s.clears.and_then(|c| c.by_day).map(hours),
+        hours_to_limit_on_setback: s.clears.and_then(|c| c.on_setback).map(hours),
     }
 }
