@@ -20,6 +20,7 @@ pub use document::{
 };
 pub(crate) use nearest::nearest;
 pub use path::{Path, below};
+pub(crate) use print::quote;
 pub use problem::{Problem, Severity};
 pub use read::{Opened, open, open_bytes};
 pub use schema::{TechniqueShape, schema};

@@ -12,6 +12,7 @@
 //! stand in their declared order.
 mod csv;
 mod grid;
+mod json;
 mod markdown;
 mod result;
 mod row;
