@@ -1,7 +1,7 @@
 // What can be typed, what is understood, and what is said when it cannot be. Numbers are those of the list of points.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { assertQuiet, insight, launch, open, openWith, smallPlan, unfold } from "./vocabulary.mjs";
+import { assertQuiet, insight, launch, open, openWith, settled, smallPlan, unfold } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -180,6 +180,7 @@ test("a measured figure stands beside the computed one", async () => {
   const computed = /^Computed: ([\d.]+ g) a run/.exec(await echo.innerText())[1];
   await measured.fill("6 ± 2 g");
   assert.match(await echo.innerText(), new RegExp(`^Computed in its place: ${computed} a run`));
+  await settled(page);
   await page.locator("table[id^=goes-to] tr", { hasText: "To hood" }).locator("button.figure").first().click();
   assert.match(await page.getByRole("dialog").innerText(), /measured/);
   await close();

@@ -2,7 +2,8 @@
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
 import {
-  assertQuiet, axeFindings, give, insight, launch, open, openWith, packed, picture, printed, smallPlan, withoutPicker,
+  assertQuiet, axeFindings, give, insight, launch, open, openWith, packed, picture, printed, settled, smallPlan,
+  withoutPicker,
 } from "./vocabulary.mjs";
 
 let browser;
@@ -56,6 +57,7 @@ test("from a blank plan: every entry typed, a second route added, the two compar
   await page.getByLabel("Name of the route").press("Enter");
   await page.getByLabel(/^Solvent in the flask/).fill("150 mL");
   assert.match(await insight(page), /In place of Present route, Small flask brings .* less/);
+  await settled(page);
   const rows = page.locator("table[id^=comparison] tbody tr");
   assert.ok((await rows.count()) > 5);
   assertQuiet(seen);
@@ -73,6 +75,7 @@ test("44: one action prints a report that stands by itself, on A4 and on Letter"
     };
   });
   await page.getByRole("button", { name: "Print the report" }).click();
+  await page.waitForFunction(() => globalThis.printedTimes > 0);
   assert.equal(await page.evaluate(() => globalThis.printedTimes), 1);
   for (const [format, sheet] of [["A4", "report-a4"], ["Letter", "report-letter"]]) {
     const text = (await printed(page, sheet, format)).replace(/[ \t]+/g, " ");
@@ -92,6 +95,33 @@ test("44: one action prints a report that stands by itself, on A4 and on Letter"
       assert.ok(!flat.includes(hidden), `${format}: ${hidden} should not print`);
     }
   }
+  assertQuiet(seen);
+  await close();
+});
+
+test("44: what is printed right after a key stroke has the figures of that stroke", async () => {
+  const { page, seen, close } = await openWith(browser, smallPlan());
+  const bought = () => page.evaluate(() => document.querySelector("[data-figure='0.0.mass.bought']").innerText);
+  const before = await bought();
+  const [typed, drawn] = await page.evaluate(async () => {
+    const input = [...document.querySelectorAll("label")].find((l) => l.innerText.startsWith("Solvent in the flask")).control;
+    const figure = () => document.querySelector("[data-figure='0.0.mass.bought']").innerText;
+    const drawn = new Promise((done) => {
+      globalThis.print = () => done(figure());
+    });
+    Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, "value").set.call(input, "600 mL");
+    input.dispatchEvent(new InputEvent("input", { bubbles: true }));
+    await Promise.resolve();
+    const typed = figure();
+    [...document.querySelectorAll("button")].find((button) => button.innerText === "Print the report").click();
+    return [typed, await drawn];
+  });
+  assert.equal(typed, before, "the tables have not followed yet");
+  assert.notEqual(drawn, before);
+  await page.getByLabel(/^Solvent in the flask/).fill("900 mL");
+  const text = await printed(page, "report-at-once");
+  await settled(page);
+  assert.ok(text.includes(await bought()), "the browser's own printing too");
   assertQuiet(seen);
   await close();
 });

@@ -1,7 +1,7 @@
 // Tables, numbers and signs.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { assertQuiet, downloaded, launch, open, openWith, smallPlan, withoutPicker } from "./vocabulary.mjs";
+import { assertQuiet, downloaded, launch, open, openWith, settled, smallPlan, withoutPicker } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -56,6 +56,7 @@ test("40: the full value is behind every figure, and the basis can be changed", 
   const [year, full] = [await figure.innerText(), await figure.getAttribute("title")];
   assert.match(full, /^\d+(\.\d+)? kg$/);
   await page.getByLabel("Show the figures below for").selectOption("a reported result");
+  await settled(page);
   assert.match(await page.locator("table[id^=goes-to] thead th").first().innerText(), /g a reported result/);
   assert.notEqual(await figure.innerText(), year);
   const [value, unit] = (await figure.getAttribute("title")).split(" ");
@@ -70,6 +71,7 @@ test("40, 41: no minus zero, no hyphen for a minus, a space before every unit, o
     await page.getByText("Begin anew", { exact: true }).click();
     await page.getByRole("button", { name: new RegExp(`^Example: ${name}`) }).click();
     await page.locator(".said-line", { hasText: "is open." }).waitFor();
+    await settled(page);
     const text = await page.locator("main").innerText();
     const figures = await page.locator("button.figure").allInnerTexts();
     assert.ok(figures.length > 40, name);

@@ -75,8 +75,13 @@ const stepsOpen = () => {
 /** Opens `file` and waits until the account is drawn. */
 export async function open(browser, file = packed, options = {}) {
   const opened = await openRaw(browser, file, options);
-  await opened.page.locator("#assumptions").waitFor({ timeout: 10_000 });
+  await settled(opened.page);
   return opened;
+}
+
+/** Waits until every section stands and has followed the last change. */
+export async function settled(page) {
+  await page.waitForFunction(() => document.querySelector(".leaves") && !document.querySelector(".leaves[aria-busy], .leaf[aria-busy]"), null, { timeout: 10_000 });
 }
 
 export function assertQuiet(seen) {
@@ -152,6 +157,7 @@ export async function openWith(browser, plan, options = {}) {
   const opened = await open(browser, packed, options);
   await give(opened.page, "plan.json", plan);
   await opened.page.getByText("plan.json is open.").waitFor();
+  await settled(opened.page);
   return opened;
 }
 

@@ -5,7 +5,7 @@ use crate::edit::{Edit, Item, dom_id, refusal};
 use crate::files;
 use crate::parts::{ByRc, Export, Mend, Toolbar, Wish, Working};
 use crate::reckon::{Book, Reckoned};
-use crate::sections::{SECTIONS, View};
+use crate::sections::{Contents, Leaves, View, catch_up};
 use crate::state::{Action, From, Notice, Opened, State};
 use gloo::events::{EventListener, EventListenerOptions};
 use gloo::timers::callback::Timeout;
@@ -138,17 +138,6 @@ pub(crate) fn App() -> Html {
     };
     let errors = reckoned.count(Severity::Error);
 
-    // The first section stands at once; the others follow in a second turn, so that the page can be used the sooner.
-    let whole = use_state_eq(|| false);
-    {
-        let whole = whole.clone();
-        use_effect_with((), move |()| {
-            let timer = Timeout::new(0, move || whole.set(true));
-            move || drop(timer)
-        });
-    }
-    let sections = if *whole { &SECTIONS[..] } else { &SECTIONS[..1] };
-
     let kept = use_state(|| None::<(Option<String>, Plan)>);
     let wish = {
         let (act, newest) = (act.clone(), newest.clone());
@@ -214,8 +203,7 @@ pub(crate) fn App() -> Html {
         let act = act.clone();
         Callback::from(move |event: MouseEvent| delegated(&event, &act))
     };
-    let view =
-        View { state: Rc::clone(&state), reckoned: ByRc(reckoned.clone()), edit, act: act.clone(), refusal };
+    let view = View::new(&state, &reckoned, edit, act.clone(), refusal);
     let finding: Vec<String> =
         (0..reckoned.book.works.len()).flat_map(|w| reckoned.book.finding(w)).collect();
     let examples: Vec<AttrValue> = EXAMPLES.iter().map(|e| AttrValue::from(e.title)).collect();
@@ -227,13 +215,7 @@ pub(crate) fn App() -> Html {
             { notices(&state, &kept, &act) }
             <div class="book" {onclick}>
                 <aside class="margin-column" aria-label="Contents and finding">
-                    <nav class="contents" aria-label="Contents">
-                        <ol>
-                            { for SECTIONS.iter().enumerate().map(|(i, section)| html! {
-                                <li><a href={format!("#{}", section.id)}><span class="folio">{ i + 1 }</span>{ " " }{ section.title }</a></li>
-                            }) }
-                        </ol>
-                    </nav>
+                    <Contents />
                     <div class={classes!("insight", reckoned.old.then_some("old"))}>
                         <p class="head">{ "The finding as it stands" }</p>
                         { for finding.iter().take(IN_SIGHT).map(|sentence| html! { <p>{ sentence }</p> }) }
@@ -243,7 +225,7 @@ pub(crate) fn App() -> Html {
                 <main id="main" tabindex="-1">
                     { report_head(&state, &finding) }
                     <Mend plan={Rc::clone(state.document())} reckoned={ByRc(reckoned.clone())} open={state.view.listed} act={act.clone()} />
-                    { for sections.iter().enumerate().map(|(i, section)| section.draw(i + 1, &view)) }
+                    <Leaves {view} />
                     <datalist id="catalogue">
                         { for state.plan().materials.iter().map(|m| html! { <option value={m.name.clone()} /> }) }
                         { names() }
@@ -307,9 +289,15 @@ fn grant(wish: Wish, errors: usize, state: &State, act: &Callback<Action>) {
         }
         Wish::Print | Wish::Export(_) if errors > 0 => act.emit(Action::Mend),
         Wish::Print => {
-            if window().print().is_err() {
-                act.emit(Action::Say(Notice::wrong("The browser did not print. Its own menu can.")));
-            }
+            // What follows what is typed has to be drawn first, which cannot happen while the browser prints.
+            catch_up();
+            let act = act.clone();
+            Timeout::new(0, move || {
+                if window().print().is_err() {
+                    act.emit(Action::Say(Notice::wrong("The browser did not print. Its own menu can.")));
+                }
+            })
+            .forget();
         }
         Wish::Export(export) => {
             let (extension, media_type, text) = exported(export, state.plan());

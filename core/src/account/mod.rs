@@ -10,6 +10,7 @@ mod hazard;
 mod mass;
 mod metric;
 mod open;
+mod poured;
 mod waste;
 mod working;
 
@@ -18,4 +19,5 @@ pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;
 pub use metric::Refusal;
 pub use open::{Account, RouteAccount, WorkloadAccount, account, account_text, rule_of};
+pub use poured::{Pouring, StreamContents, poured};
 pub use working::{Contribution, behind, describe};

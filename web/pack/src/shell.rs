@@ -153,6 +153,19 @@ mod tests {
     }
 
     #[test]
+    fn every_sheet_of_the_page_is_joined_once() {
+        let folder = std::path::Path::new(concat!(env!("CARGO_MANIFEST_DIR"), "/../style"));
+        let list = include_str!("../../page.css");
+        let mut sheets = 0;
+        for entry in std::fs::read_dir(folder).expect("the folder of sheets") {
+            let name = entry.expect("a sheet").file_name().into_string().expect("a name");
+            assert_eq!(list.matches(&format!("@import \"style/{name}\";")).count(), 1, "{name}");
+            sheets += 1;
+        }
+        assert_eq!(list.matches("@import").count(), sheets);
+    }
+
+    #[test]
     fn a_sheet_that_is_imported_stands_in_its_place() {
         let read = |name: &str| Ok(format!("/* {name} */\n"));
         assert_eq!(

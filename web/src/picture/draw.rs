@@ -262,7 +262,7 @@ pub fn to_svg_text(picture: &Picture) -> String {
     };
     let mut svg = svg(picture, drawing, &picture.key, "drawing drawing-file");
     // After title, description and patterns, before the first shape.
-    let style = Node::new("style").say(include_str!("../../picture.css").replace('\n', " "));
+    let style = Node::new("style").say(include_str!("../../style/picture.css").replace('\n', " "));
     let before = [style].into_iter().chain(shape_node(&picture.key, &paper)).map(Child::Node);
     svg.children.splice(3..3, before);
     format!("<?xml version=\"1.0\" encoding=\"UTF-8\"?>\n{}\n", svg.text())
@@ -289,7 +289,7 @@ mod tests {
 
     #[test]
     fn the_style_sheet_needs_no_escape() {
-        let sheet = include_str!("../../picture.css");
+        let sheet = include_str!("../../style/picture.css");
         assert!(!sheet.contains(['<', '&', '"', '>']), "the sheet stands in saved files as it is");
     }
 }

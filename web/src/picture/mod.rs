@@ -3,7 +3,7 @@
 //!
 //! Nothing here measures text in a document or knows an event. Every picture is drawn twice, wide and narrow, and the
 //! style sheet shows the drawing that fits its column; so text keeps its size on a narrow screen. Looks are classes in
-//! `web/picture.css`; there are no inline styles, which the page's policy forbids.
+//! `web/style/picture.css`; there are no inline styles, which the page's policy forbids.
 //!
 //! All bars and bands are to scale from zero. What would be thinner than a pixel is a hairline, with its amount beside it.
 

@@ -24,7 +24,7 @@ pub enum Hatch {
     Dots,
 }
 
-/// One shape. How it looks is said by its class alone (see `web/picture.css`).
+/// One shape. How it looks is said by its class alone (see `web/style/picture.css`).
 #[derive(Clone, Debug, PartialEq)]
 pub enum Shape {
     /// An upright rectangle.

@@ -1,5 +1,5 @@
 //! Section "Assumptions, cautions and sources".
-use super::View;
+use super::{Section, View, When};
 use crate::form::{cited, sentence, word};
 use crate::reckon::Book;
 use std::collections::BTreeSet;
@@ -8,7 +8,15 @@ use thimbleworth::plan::Severity;
 use thimbleworth::step::Caution;
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "assumptions",
+    title: "Assumptions, cautions and sources",
+    lead: "What the figures rest on, and what to mind.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     let notes: Vec<_> = view.reckoned.problems.iter().filter(|p| p.severity == Severity::Note).collect();
     html! {
         <>

@@ -1,12 +1,20 @@
 //! Section "CO₂": drawn, returned, made up, vented.
-use super::View;
 use super::places::{lines, sentence_case};
 use super::plates::What;
+use super::{Section, View, When};
 use crate::parts::Sheet;
 use thimbleworth::account::Group;
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "co2",
+    title: "CO₂",
+    lead: "What is drawn, returned and vented where a route works with carbon dioxide.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     view.works(|w| {
         let mut lines = lines(view.book(), w, |f| f.group == Group::CarbonDioxide);
         if lines.is_empty() {
@@ -24,7 +32,7 @@ pub(super) fn draw(view: &View) -> Html {
                     lines,
                     book: view.book(),
                     work: w,
-                    basis: view.state.view.basis,
+                    basis: view.basis,
                     beside: false,
                 }.draw() }
                 { view.plate(w, What::Co2) }

@@ -1,7 +1,7 @@
 //! Section "The comparison": the figures that decide, better and worse, doubts, and what makes the difference.
-use super::View;
 use super::places::{lines, sentence_case};
 use super::plates::What;
+use super::{Section, View, When};
 use crate::parts::Sheet;
 use crate::show::Scale;
 use thimbleworth::account::{Figure, Group};
@@ -11,7 +11,15 @@ use yew::prelude::*;
 /// Up to so many routes each difference is drawn; beyond, the table alone can be read.
 const DRAWN: usize = 8;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "comparison",
+    title: "The comparison",
+    lead: "The routes beside one another on the same work, against the present one.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     view.works(|w| {
         let mut lines = lines(view.book(), w, decides);
         if lines.is_empty() {
@@ -32,7 +40,7 @@ pub(super) fn draw(view: &View) -> Html {
                     lines,
                     book: view.book(),
                     work: w,
-                    basis: view.state.view.basis,
+                    basis: view.basis,
                     beside: true,
                 }.draw() }
                 { for (0..routes).filter_map(|r| {

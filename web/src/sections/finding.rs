@@ -1,12 +1,20 @@
 //! Section "The finding": the answer in sentences, and for how much work figures are shown.
-use super::View;
+use super::{Section, View, When};
 use crate::parts::basis_of;
 use crate::reckon::Basis;
 use crate::state::Action;
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
-    let basis = view.state.view.basis;
+pub(super) static SECTION: Section = Section {
+    id: "finding",
+    title: "The finding",
+    lead: "What each route would change in place of the present one.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
+    let basis = view.basis;
     let onchange = {
         let act = view.act.clone();
         Callback::from(move |event: Event| {

@@ -1,14 +1,22 @@
 //! Section "Hazard": hazard-weighted mass, statements in words, CHEM21 numbers with their reasons, the Eco-Scale line by
 //! line, the NEMI criteria as yes or no. No published pictogram is drawn.
-use super::View;
 use super::places::{lines, sentence_case};
+use super::{Section, View, When};
 use crate::parts::Sheet;
 use thimbleworth::account::{Group, HazardAccount, MaterialHazard};
 use thimbleworth::hazard::chem21::{Assessment, Score};
 use thimbleworth::material::{catalogue, statement_text};
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "hazard",
+    title: "Hazard",
+    lead: "What can hurt people and water, with the reasons behind every score.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     view.works(|w| {
         let mut lines = lines(view.book(), w, |f| f.group == Group::Hazard);
         for line in &mut lines {
@@ -37,7 +45,7 @@ pub(super) fn draw(view: &View) -> Html {
                         lines,
                         book: view.book(),
                         work: w,
-                        basis: view.state.view.basis,
+                        basis: view.basis,
                         beside: true,
                     }.draw() }
                 }

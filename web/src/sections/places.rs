@@ -1,6 +1,6 @@
 //! Section "Where it goes": what comes in, and where every mass ends, by place and material, the routes side by side.
-use super::View;
 use super::plates::What;
+use super::{Section, View, When};
 use crate::parts::{Line, Sheet};
 use crate::reckon::Book;
 use thimbleworth::account::{Figure, How, Measure};
@@ -8,8 +8,16 @@ use thimbleworth::ledger::Place;
 use thimbleworth::quantity::significant;
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
-    let basis = view.state.view.basis;
+pub(super) static SECTION: Section = Section {
+    id: "places",
+    title: "Where it goes",
+    lead: "Every mass, from where it comes to where it ends. A figure opens into the postings behind it.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
+    let basis = view.basis;
     view.works(|w| {
         let sheet = |id: &str, caption: &str, first, lines| Sheet {
             id: format!("{id}-{w}"),
@@ -35,7 +43,7 @@ pub(super) fn draw(view: &View) -> Html {
 
 /// The route whose flow is drawn: the one whose form is open, or the present one.
 fn flowing(view: &View, w: usize) -> Option<usize> {
-    let open = view.state.view.route.and_then(|id| view.state.document().route(id));
+    let open = view.route.and_then(|id| view.document.route(id));
     open.filter(|(work, _)| *work == w).map(|(_, r)| r).or(view.book().works.get(w)?.present)
 }
 

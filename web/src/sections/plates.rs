@@ -1,13 +1,8 @@
-//! The pictures of a section. They follow the figures a moment later, so that no key stroke waits for a drawing.
+//! The pictures of a section. They follow the figures with it, so that no key stroke waits for a drawing.
 use crate::parts::ByRc;
 use crate::picture::{self, Per, Picture, to_html};
 use crate::reckon::{Basis, Book};
-use gloo::timers::callback::Timeout;
-use std::rc::Rc;
 use yew::prelude::*;
-
-/// How long after the last change the pictures follow.
-const FOLLOW_AFTER_MS: u32 = 150;
 
 /// What is drawn.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -22,7 +17,7 @@ pub(super) enum What {
     Co2,
 }
 
-#[derive(Clone, Properties, PartialEq)]
+#[derive(Properties, PartialEq)]
 pub(super) struct Props {
     pub(super) book: ByRc<Book>,
     pub(super) work: usize,
@@ -58,25 +53,8 @@ fn draw(props: &Props) -> Option<Picture> {
     }
 }
 
-#[component]
-fn Drawn(props: &Props) -> Html {
-    draw(props).map_or_else(Html::default, |picture| to_html(&picture))
-}
-
-/// A picture that follows its figures.
+/// A picture, drawn again only for other figures.
 #[component]
 pub(super) fn Plate(props: &Props) -> Html {
-    let shown = use_state(|| None::<Props>);
-    {
-        let shown = shown.clone();
-        use_effect_with(props.clone(), move |props| {
-            let props = Props { book: ByRc(Rc::clone(&props.book.0)), ..props.clone() };
-            let timer = Timeout::new(FOLLOW_AFTER_MS, move || shown.set(Some(props)));
-            move || drop(timer)
-        });
-    }
-    match &*shown {
-        Some(props) => html! { <Drawn ..props.clone() /> },
-        None => Html::default(),
-    }
+    draw(props).map_or_else(Html::default, |picture| to_html(&picture))
 }

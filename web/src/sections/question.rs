@@ -1,5 +1,5 @@
 //! Section "The question": what is asked, for which site, with which waste streams, and how much work there is.
-use super::View;
+use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item};
 use crate::form::{text_of, understood};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
@@ -11,7 +11,15 @@ use thimbleworth::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY};
 use thimbleworth::step::{Control, Need};
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "question",
+    title: "The question",
+    lead: "What is asked, for which site, and how much work there is.",
+    when: When::AtOnce,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     html! {
         <>
             <div class="form">
@@ -82,7 +90,7 @@ impl<'a> Asked<'a> {
         };
         html! {
             <Field label={self.label.to_owned()} {units} hint={self.hint.to_owned()} {echo}
-                said={said(&view.reckoned.problems, &self.path)} show_all={view.state.view.show_all}
+                said={said(&view.reckoned.problems, &self.path)} show_all={view.show_all}
                 optional={self.need == Need::Optional} value={self.value} ask={self.ask} path={self.path} edit={view.edit.clone()} />
         }
     }
@@ -136,7 +144,7 @@ fn streams(view: &View) -> Html {
 
 fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
     let path = format!("site.streams[{i}]");
-    let id = view.state.document().ids.streams.get(i).copied().unwrap_or_default();
+    let id = view.document.ids.streams.get(i).copied().unwrap_or_default();
     let at = |key: &str| format!("{path}.{key}");
     let solid = stream.holds.as_deref() == Some("solid");
     html! {
@@ -186,7 +194,7 @@ fn works(view: &View) -> Html {
 
 fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
     let path = format!("workloads[{w}]");
-    let id = view.state.document().ids.workloads.get(w).map(|ids| ids.id).unwrap_or_default();
+    let id = view.document.ids.workloads.get(w).map(|ids| ids.id).unwrap_or_default();
     let at = |key: &str| format!("{path}.{key}");
     let number = |key: &str, label: &'static str, value: Option<&Value>| Asked {
         kind: Some(Kind::Number),
@@ -218,7 +226,7 @@ fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
             { yes("controls_carry_feed", "Controls carry feed as a sample does", work.controls_carry_feed).draw(view) }
             <Rows label="What one sample brings" kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L" rows={work.feed.clone()}
                 hint="Or one product batch. A route may say that it takes another amount."
-                said={said(&view.reckoned.problems, &feed)} show_all={view.state.view.show_all} path={feed} edit={view.edit.clone()} />
+                said={said(&view.reckoned.problems, &feed)} show_all={view.show_all} path={feed} edit={view.edit.clone()} />
             { Asked::text(at("present"), "The present route", work.present.clone()).need(Need::Required)
                 .hint("The one in use now; the others are compared with it.")
                 .ask(Ask::Choice(routes.iter().map(|r| (AttrValue::from((*r).to_owned()), AttrValue::from((*r).to_owned()))).collect())).draw(view) }
@@ -262,7 +270,7 @@ fn more(view: &View) -> Html {
 fn one_material(view: &View, i: usize, material: &OwnMaterial, count: usize) -> Html {
     let item = Item::Material(i);
     let path = item.path(view.plan());
-    let id = view.state.document().ids.materials.get(i).copied().unwrap_or_default();
+    let id = view.document.ids.materials.get(i).copied().unwrap_or_default();
     let value = |key: &str| text_of(material.fields.iter().find(|(k, _)| k == key).map(|(_, field)| field));
     html! {
         <div class="card" key={id} id={crate::edit::dom_id(&path)} role="group" aria-label={format!("Material {}", material.name)}>

@@ -1,6 +1,6 @@
 //! Section "The routes": a card a route, one form open at a time.
-use super::View;
 use super::question::{Asked, options};
+use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item, dom_id, step_field};
 use crate::form::{
     applies, cited, left_out, margin, measured_lines, places, rows_of, summary, text_of, understood, units,
@@ -15,7 +15,15 @@ use thimbleworth::source::{DEFINITION, FROM_MEMORY};
 use thimbleworth::step::{Control, Group, Need, Param, TECHNIQUES, Technique, technique};
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "routes",
+    title: "The routes",
+    lead: "Every way of doing the work, step by step.",
+    when: When::AtOnce,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     let plan = view.plan();
     let several = plan.workloads.len() > 1;
     html! {
@@ -42,8 +50,8 @@ fn add_route(view: &View, w: usize) -> Html {
 fn card(view: &View, w: usize, r: usize, route: &Route) -> Html {
     let plan = view.plan();
     let work = &plan.workloads[w];
-    let id = view.state.document().route_id(w, r);
-    let open = id.is_some() && view.state.view.route == id;
+    let id = view.document.route_id(w, r);
+    let open = id.is_some() && view.route == id;
     let path = format!("workloads[{w}].routes[{r}]");
     let toggle = {
         let act = view.act.clone();
@@ -145,7 +153,7 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                     .hint("Paired samples, a standard method, a validation.").draw(view) }
                 <Rows label="What one sample brings on this route" optional={true} kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L"
                     rows={route.feed.clone().unwrap_or_default()} hint="Only where it differs from the work's own."
-                    said={said(&view.reckoned.problems, &feed)} show_all={view.state.view.show_all} path={feed} edit={view.edit.clone()} />
+                    said={said(&view.reckoned.problems, &feed)} show_all={view.show_all} path={feed} edit={view.edit.clone()} />
                 { Asked::text(at("ph"), "Lowest and highest pH", route.ph.clone().unwrap_or_default())
                     .hint("Such as 2 to 7, where there is a water phase; for the NEMI criteria.").draw(view) }
             </section>
@@ -210,7 +218,7 @@ fn AddStep(props: &AddProps) -> Html {
 
 fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &Route) -> Html {
     let path = format!("workloads[{w}].routes[{r}].steps[{s}]");
-    let ids = view.state.document().ids.workloads.get(w).and_then(|w| w.routes.get(r));
+    let ids = view.document.ids.workloads.get(w).and_then(|w| w.routes.get(r));
     let id = ids.and_then(|r| r.steps.get(s)).copied().unwrap_or_default();
     let known = technique(&step.technique);
     let title = known.map_or_else(|| step.technique.clone(), |t| t.title.to_owned());
@@ -248,7 +256,7 @@ fn param(view: &View, step: &Step, path: &str, p: &'static Param) -> Html {
     let field = step_field(step, p.key);
     let value = text_of(field);
     let said = said(&view.reckoned.problems, &at);
-    let show_all = view.state.view.show_all;
+    let show_all = view.show_all;
     let optional = p.need == Need::Optional;
     let blank = if field.is_none() { left_out(p.need) } else { String::new() };
     let first = match p.need {
@@ -312,7 +320,7 @@ fn measured(
             <p class="hint">{ "A weighing takes the place of what is computed; the computed figure stays beside it." }</p>
             { for lines.into_iter().map(|line| html! {
                 <Field key={line.rule} label={format!("Measured: {}", line.rule)} units="g in one run, or %" optional={true}
-                    echo={line.computed} said={said(&view.reckoned.problems, &line.path)} show_all={view.state.view.show_all}
+                    echo={line.computed} said={said(&view.reckoned.problems, &line.path)} show_all={view.show_all}
                     value={line.value} ask={Ask::Amount} path={line.path} edit={view.edit.clone()}
                     margin={rule_source(technique, line.rule)} />
             }) }

@@ -1,11 +1,19 @@
 //! Section "Waste": mass, volume and containers of every stream.
-use super::View;
 use super::places::{lines, sentence_case};
+use super::{Section, View, When};
 use crate::parts::Sheet;
 use thimbleworth::account::Group;
 use yew::prelude::*;
 
-pub(super) fn draw(view: &View) -> Html {
+pub(super) static SECTION: Section = Section {
+    id: "waste",
+    title: "Waste",
+    lead: "What has to be collected, and in how many containers.",
+    when: When::Follows,
+    body: draw,
+};
+
+fn draw(view: &View) -> Html {
     html! {
         <>
             { view.works(|w| {
@@ -26,7 +34,7 @@ pub(super) fn draw(view: &View) -> Html {
                     lines,
                     book: view.book(),
                     work: w,
-                    basis: view.state.view.basis,
+                    basis: view.basis,
                     beside: true,
                 }.draw()
             }) }
