@@ -4,6 +4,7 @@ use crate::edit::{Change, Edit, Item};
 use crate::history::History;
 use crate::reckon::Basis;
 use std::rc::Rc;
+use thimbleworth::letter::small;
 use thimbleworth::plan::Plan;
 
 /// What the page knows.
@@ -340,7 +341,7 @@ pub fn stem(title: &str) -> String {
     let mut out = String::new();
     for c in title.chars().take(60) {
         if c.is_alphanumeric() {
-            out.extend(c.to_lowercase());
+            out.push(small(c));
         } else if !out.is_empty() && !out.ends_with('-') {
             out.push('-');
         }
