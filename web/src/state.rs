@@ -200,7 +200,7 @@ impl State {
 
     /// The form of the route that a path lies in is opened, so that there is something to go to.
     fn go(&mut self, path: String) {
-        let keys = crate::edit::keys(&path).unwrap_or_default();
+        let keys = thimbleworth::plan::keys(&path).unwrap_or_default();
         if let [workloads, w, routes, r, ..] = keys.as_slice()
             && (workloads.as_str(), routes.as_str()) == ("workloads", "routes")
             && let (Ok(w), Ok(r)) = (w.parse(), r.parse())

@@ -5,7 +5,7 @@ mod rename;
 mod set;
 
 pub use list::name_of;
-pub use path::{dom_id, keys};
+pub use path::dom_id;
 pub use rename::refusal;
 pub use set::{new_step, number, step_field, text};
 
