@@ -90,6 +90,7 @@ impl Chance {
         Plan {
             title: self.text(),
             notes: self.maybe(Self::text),
+            seed: self.maybe(Self::field),
             site: self.site(),
             materials: self.list(3, |c| OwnMaterial { name: c.text(), fields: c.fields() }),
             workloads: self.list(3, Self::workload),

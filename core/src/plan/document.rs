@@ -24,6 +24,8 @@ pub struct Plan {
     pub title: String,
     /// Free text that prints with the report.
     pub notes: Option<String>,
+    /// The whole number from which draws of uncertain amounts follow; 1 when left out.
+    pub seed: Option<Field>,
     /// The site: rules, date, streams.
     pub site: Site,
     /// Materials that the plan adds to the catalogue or overrides, each with its source.

@@ -79,6 +79,12 @@ pub(super) static PLAN: Object = Object {
             r#""Figures of the spring campaign""#,
             "free text that prints with the report",
         ),
+        may(
+            "seed",
+            Shape::Count,
+            "1",
+            "the whole number from which draws of uncertain amounts follow; 1 when left out",
+        ),
         must(
             "site",
             Shape::Object(&SITE),

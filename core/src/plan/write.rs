@@ -71,6 +71,7 @@ fn tree(plan: &Plan) -> Node {
     out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
     out.text("title", &plan.title);
     out.optional("notes", plan.notes.as_ref());
+    out.field("seed", plan.seed.as_ref());
     out.put("site", site(&plan.site));
     if !plan.materials.is_empty() {
         let mut materials = Entries::default();
@@ -237,6 +238,7 @@ mod tests {
         Plan {
             title: "t".into(),
             notes: some("n"),
+            seed: Some(Field::Number("7".into())),
             site: Site {
                 name: "s".into(),
                 rules: some("EU"),

@@ -30,6 +30,8 @@ use crate::step::{Step, Technique};
 pub struct Program {
     /// What is asked.
     pub title: String,
+    /// What draws of uncertain amounts follow from.
+    pub seed: u64,
     /// The site as the accounts need it.
     pub site: SiteUse,
     /// The pieces of work.

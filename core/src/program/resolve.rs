@@ -35,6 +35,7 @@ pub struct Resolved {
 #[must_use]
 pub fn resolve(plan: &Plan) -> Resolved {
     let mut problems = Vec::new();
+    let seed = seed(plan, &mut problems);
     let site = site(plan, &mut problems);
     let mut book = MaterialBook::read(&plan.materials, &mut problems);
     if plan.workloads.is_empty() {
@@ -68,11 +69,24 @@ pub fn resolve(plan: &Plan) -> Resolved {
         workloads.push(WorkloadProgram { name: workload.name.clone(), months, present, routes });
     }
     let broken = problems.iter().any(|p| p.severity == Severity::Error);
-    let program = (!broken).then(|| Program { title: plan.title.clone(), site, workloads });
+    let program = (!broken).then(|| Program { title: plan.title.clone(), seed, site, workloads });
     // The same doubt about a shared figure is told once.
     let mut told = Index::default();
     problems.retain(|p| told.put(format!("{}\n{}", p.path, p.found), 0).is_none());
     Resolved { program, problems }
+}
+
+fn seed(plan: &Plan, problems: &mut Vec<Problem>) -> u64 {
+    let Some(Field::Text(text) | Field::Number(text)) = &plan.seed else { return 1 };
+    text.trim().parse().unwrap_or_else(|_| {
+        let found = format!("{text} is not such a number");
+        problems.push(Problem::error(
+            "seed",
+            found,
+            "a whole number from 0 to 18446744073709551615, such as 1",
+        ));
+        1
+    })
 }
 
 fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {

@@ -34,6 +34,24 @@ impl From<f64> for Value<'_> {
     }
 }
 
+macro_rules! counts {
+    ($($whole:ty)*) => {
+        $(impl From<$whole> for Value<'_> {
+            fn from(count: $whole) -> Self {
+                Self::Count(count as u64)
+            }
+        })*
+    };
+}
+
+counts!(u8 u16 u32 u64 usize);
+
+impl From<i64> for Value<'_> {
+    fn from(number: i64) -> Self {
+        Self::Whole(number)
+    }
+}
+
 impl<'a> From<&'a str> for Value<'a> {
     fn from(text: &'a str) -> Self {
         Self::Text(text)
@@ -197,7 +215,7 @@ mod tests {
             json.object("empty", |_| {});
             json.list("rows", |json| json.row(|json| json.put("a", text)));
             json.put("yes", true);
-            json.put("count", Value::Count(u64::MAX));
+            json.put("count", u64::MAX);
             json.put("nothing", None::<&str>);
             json.texts("texts", &["x".to_owned(), String::new()]);
         });

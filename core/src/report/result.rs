@@ -1,16 +1,18 @@
 //! The result document.
 
+mod energy;
 mod figure;
 mod hazard;
 mod posting;
+mod waste;
 
 pub(super) use figure::figure;
-pub(super) use posting::{inputs, step, step_and_technique};
+pub(super) use posting::{inputs, step_and_technique};
 
 use super::json::{Json, Value};
 use super::row::{PROGRAM, figures};
 use super::words::editions;
-use crate::account::{Account, RouteAccount};
+use crate::account::{Account, Pouring, RouteAccount};
 use crate::chance::{Draw, identity_key};
 use crate::compare::compare;
 use crate::plan::save;
@@ -34,6 +36,7 @@ pub const RESULT_VERSION: u64 = 1;
 /// | `title`, `site`, `rules`, `as_of` | from the plan; `null` where it does not say |
 /// | `data_editions` | the sources of the densities, hazards, flash and boiling points and waste codes of all materials on routes, by key, each with `cite` and `standing` |
 /// | `workloads` | the pieces of work in the order of the plan; empty when the plan has an error |
+/// | `waste_desk` | the site with the present route of each workload: `streams` (as `waste_codes`), `months` (what counts, the category under the rules of the United States, days of storage), `headroom` (results that a month takes before the category rises), `pick_ups`, containers begun, breaches; `null` without a program |
 /// | `problems` | everything found on the way, errors first: `severity` (`error`, `warning`, `note`), `path` in the plan, `found`, `need` |
 ///
 /// A workload has `name`, `work` (`results_per_year`, `extractions_per_year` with controls and repeats,
@@ -46,11 +49,13 @@ pub const RESULT_VERSION: u64 = 1;
 /// | `figures` | see below |
 /// | `refused` | metrics that are not given: `metrics`, `reason` |
 /// | `hazard` | `materials` (statements with text where it is known, pictogram codes, signal word, CHEM21 scores 1 to 10 with reasons, or why there are none, source and date), `eco_scale` (Analytical Eco-Scale for one result, its penalty lines), `nemi` (four rules, `met` is `yes`, `no` or `not known`), `not_scored` (materials that reach air or drain without a score) |
+/// | `waste_codes` | for each stream that the route fills: `standing`, `kg_per_year`, `codes` that are put on it, `test` (codes that only a test can clear), `verdicts` (`code`, `answer`, `why`, `figures` held against limits, `rule`, `cite`, `since`, `until`, `in_force`, what would `change` it), transport included |
 /// | `assumptions` | values that stand in for what the plan leaves out: `path`, `label`, `value`, `source`, `standing` |
 /// | `cautions` | what can hurt: `key`, `text`, `source`; local codes and licensed practice decide |
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
 /// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `seconds_per_run` (how long it takes in one run, for what goes to air where the step says so, else `null`), `measured` |
-/// | `utilities` | electricity (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `utilities` | zeros left out: electricity as it counts, and by stated power, physics and meter beside it, heat and cooling of streams (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `energy` | `steps`: what each step takes in a year, electricity with the face that `counts` and all three beside it, heat, cooling and work of streams, cooling water; `co2_circuits`: for each step with dense CO2 its `states` (enthalpy and entropy 0 for the ideal gas at 298.15 K and 1 atm; `null` where the equation has no state) and the `changes` between them in J/kg, what the let-down leaves in the vessel, the pressure of liquid `shut_in` between valves at 25 °C, and the flow as `metered` and as the same volume would be elsewhere |
 /// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
@@ -75,7 +80,7 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
     let plan = account.plan.as_ref();
     let program = account.program.as_ref();
     Json::document(|json| {
-        json.put("thimbleworth_result", Value::Count(RESULT_VERSION));
+        json.put("thimbleworth_result", RESULT_VERSION);
         json.put("program", PROGRAM);
         let digest = plan.map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p))));
         json.put("plan_digest", digest.as_deref());
@@ -98,6 +103,7 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
                 json.row(|json| workload(json, account, &program.site, work, i, with_comparison));
             }
         });
+        waste::site(json, account);
         json.list("problems", |json| {
             for problem in &account.problems {
                 json.row(|json| {
@@ -165,6 +171,7 @@ fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account:
         }
     });
     json.object("hazard", |json| hazard::hazard(json, &account.hazard));
+    json.list("waste_codes", |json| waste::streams(json, Pouring { route, account }, site));
     json.list("assumptions", |json| {
         for assumption in &route.assumptions {
             json.row(|json| posting::assumption(json, assumption));
@@ -186,10 +193,11 @@ fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account:
         }
     });
     json.list("utilities", |json| {
-        for spent in &account.trace.spendings {
+        for spent in account.trace.spendings.iter().filter(|s| s.amount_si != 0.0) {
             json.row(|json| posting::spending(json, route, spent));
         }
     });
+    json.object("energy", |json| energy::energy(json, route, account));
     inputs(json, &mut route.inputs.iter());
 }
 
@@ -198,7 +206,9 @@ mod tests {
     use super::*;
     use crate::account::account_text;
     use crate::example::EXAMPLES;
-    fn read(text: &str, compared: bool) -> serde_json::Value {
+    use serde_json::Value as Read;
+
+    fn read(text: &str, compared: bool) -> Read {
         serde_json::from_str(&result_json(&account_text(text), compared)).unwrap()
     }
 

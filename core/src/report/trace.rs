@@ -6,7 +6,7 @@ mod text;
 pub use error::TraceError;
 
 use super::json::Json;
-use super::result::{figure, inputs, step, step_and_technique};
+use super::result::{figure, inputs, step_and_technique};
 use super::row::{key_unit, written};
 use super::words::si_unit;
 use crate::account::{
@@ -94,7 +94,8 @@ pub fn trace<'a>(
     let whole = open(index).ok_or(TraceError::NoAccount)?;
     let parts: Vec<_> = match whole.figure.how {
         How::Ratio { over, under } => vec![("over", open(over)), ("under", open(under))],
-        How::Containers { volume, .. } => vec![("volume", open(volume))],
+        How::Containers { of, .. } => vec![("volume", open(of))],
+        How::Times { of, .. } => vec![("of", open(of))],
         How::Sum(_) | How::Spent(_) => Vec::new(),
     };
     let parts: Vec<_> = parts.into_iter().filter_map(|(name, part)| Some((name, part?))).collect();
@@ -265,7 +266,7 @@ impl Opened<'_> {
 impl Entry<'_> {
     fn write(&self, json: &mut Json) {
         json.put("what", &self.what);
-        json.put("step", step(self.by.0));
+        json.put("step", self.by.0);
         json.put("technique", self.by.1);
         json.put("rule", self.rule.map(|r| r.name));
         json.put("equation", self.rule.map(|r| r.equation));
@@ -326,6 +327,10 @@ mod tests {
                         let summed = match figure.how {
                             How::Sum(_) | How::Spent(_) => &traced.opened,
                             How::Containers { .. } => &traced.parts[0].1,
+                            How::Times { of, factor } => {
+                                assert!((of_route.values[of] * factor - value).abs() < 1e-9);
+                                continue;
+                            }
                             How::Ratio { .. } => {
                                 assert_eq!(traced.parts.len(), 2);
                                 assert!(

@@ -4,7 +4,9 @@
 mod bad_input;
 mod co2;
 mod files;
+mod odds;
 mod results;
+mod waste;
 
 use serde_json::Value;
 use std::io::Write;

@@ -66,6 +66,7 @@ pub(super) fn plan(node: &Node) -> Plan {
     Plan {
         title: required(node, "title"),
         notes: text(node, "notes"),
+        seed: get(node, "seed").map(field),
         site: get(node, "site").map(site).unwrap_or_default(),
         materials: get(node, "materials").map(materials).unwrap_or_default(),
         workloads: list(node, "workloads", workload),

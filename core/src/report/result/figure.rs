@@ -1,7 +1,7 @@
 //! Figures and differences: flat rows whose keys name the unit.
 
 use super::super::json::Json;
-use super::super::row::{Row, key_unit, written};
+use super::super::row::{Row, key_unit, written, yearly};
 use crate::account::{Figure, Measure, RouteAccount};
 use crate::compare::{Comparison, Difference};
 use crate::program::WorkloadProgram;
@@ -69,9 +69,4 @@ fn difference(json: &mut Json, d: &Difference) {
             });
         }
     });
-}
-
-fn yearly(measure: Measure) -> String {
-    let unit = key_unit(measure);
-    if measure.extensive() { format!("{unit}_per_year") } else { unit.to_owned() }
 }

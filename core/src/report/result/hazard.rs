@@ -84,8 +84,8 @@ fn assessment(json: &mut Json, a: &Assessment) {
 }
 
 fn score(json: &mut Json, s: &Score) {
-    json.put("score", Value::Count(s.value.into()));
-    json.put("may_be_low_by", Value::Count(s.may_be_low_by().into()));
+    json.put("score", s.value);
+    json.put("may_be_low_by", s.may_be_low_by());
     json.list("reasons", |json| {
         for reason in &s.reasons {
             json.item(&reason.to_string());
@@ -94,8 +94,8 @@ fn score(json: &mut Json, s: &Score) {
 }
 
 fn scale(json: &mut Json, eco: &EcoScale) {
-    json.put("score", Value::Whole(eco.score));
-    json.put("penalty", Value::Count(eco.penalty));
+    json.put("score", eco.score);
+    json.put("penalty", eco.penalty);
     json.put("verdict", eco.verdict.word());
     json.list("lines", |json| {
         for line in &eco.lines {
@@ -110,7 +110,7 @@ fn scale(json: &mut Json, eco: &EcoScale) {
                 json.put("block", block);
                 json.put("what", &line.what);
                 json.put("amount", &line.amount);
-                json.put("penalty", Value::Count(line.penalty.into()));
+                json.put("penalty", line.penalty);
                 json.put("why", &line.why);
             });
         }

@@ -1,11 +1,11 @@
 //! Postings, utilities, inputs and assumptions as documents.
 
-use super::super::json::{Json, Value};
+use super::super::json::Json;
 use super::super::row::written;
 use super::super::words::si_unit;
 use crate::account::{Measure, place_name, rule_of};
 use crate::chance::Input;
-use crate::ledger::{Posting, Spending, StepIx, Utility};
+use crate::ledger::{Posting, Spending, StepIx};
 use crate::program::{Assumption, RouteProgram, SiteUse};
 use crate::quantity::Spread;
 
@@ -18,14 +18,9 @@ pub(crate) fn step_and_technique(route: &RouteProgram, step: StepIx) -> (Option<
     }
 }
 
-/// The index of the step, or `null`.
-pub(crate) fn step(index: Option<u16>) -> Value<'static> {
-    index.map_or(Value::Null, |i| Value::Count(i.into()))
-}
-
 pub(super) fn posting(json: &mut Json, route: &RouteProgram, site: &SiteUse, p: &Posting) {
     let (index, technique) = step_and_technique(route, p.step);
-    json.put("step", step(index));
+    json.put("step", index);
     json.put("technique", technique);
     json.put("rule", rule_of(route, p.step, p.rule).map_or("", |r| r.name));
     json.put("from", &place_name(site, p.from));
@@ -34,14 +29,15 @@ pub(super) fn posting(json: &mut Json, route: &RouteProgram, site: &SiteUse, p: 
     json.put("kg_per_run", p.kg);
     json.put("runs_per_year", p.runs_a_year);
     json.put("kg_per_year", p.kg_a_year());
+    json.put("seconds_per_run", p.over_s);
     json.put("measured", p.measured);
 }
 
 pub(super) fn spending(json: &mut Json, route: &RouteProgram, s: &Spending) {
     let (index, technique) = step_and_technique(route, s.step);
     let (unit, measure) =
-        if s.utility == Utility::Electricity { ("kwh", Measure::Energy) } else { ("kg", Measure::Mass) };
-    json.put("step", step(index));
+        if s.utility.is_energy() { ("kwh", Measure::Energy) } else { ("kg", Measure::Mass) };
+    json.put("step", index);
     json.put("technique", technique);
     json.put("rule", rule_of(route, s.step, s.rule).map_or("", |r| r.name));
     json.put("utility", s.utility.name());
