@@ -18,6 +18,7 @@ mod air;
 mod csv;
 mod energy;
 mod grid;
+mod json;
 mod markdown;
 mod odds;
 mod paper;

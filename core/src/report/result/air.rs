@@ -1,179 +1,123 @@
 //! The air of the room as a document.
 
+use super::super::json::{Json, Value};
 use super::posting::step_and_technique;
-use crate::account::{AirAccount, GasInRoom, Held, RouteAccount, SuddenInRoom};
+use crate::account::{GasInRoom, RouteAccount, SuddenInRoom};
 use crate::program::RouteProgram;
-use crate::room::{Course, Exposure, HOUR_S, Limit};
-use serde::Serialize;
-
-#[derive(Serialize)]
-pub(super) struct AirDocument {
-    gases: Vec<GasDocument>,
-    sudden: Vec<SuddenDocument>,
-}
-
-#[derive(Serialize)]
-struct GasDocument {
-    gas: String,
-    releases: Vec<ReleaseDocument>,
-    background_ppm: f64,
-    as_ventilated: CourseDocument,
-    on_setback: Option<CourseDocument>,
-    oxygen_at_highest_percent: f64,
-    limits: Vec<HeldDocument>,
-    other_limits: Vec<OtherDocument>,
-    sensor: &'static str,
-    blind: Vec<&'static str>,
-}
-
-#[derive(Serialize)]
-struct ReleaseDocument {
-    step: Option<u16>,
-    technique: &'static str,
-    posting_kg_per_run: f64,
-    kg_into_room_per_day: f64,
-    runs_per_day: f64,
-    seconds_per_day: Option<f64>,
-}
-
-#[derive(Serialize)]
-struct CourseDocument {
-    mean_8_h_ppm: f64,
-    worst_8_h_ppm: f64,
-    worst_15_min_ppm: f64,
-    highest_ppm: f64,
-    highest_after_h: f64,
-    /// Each quarter of an hour from the start of the work, for a day.
-    ppm_each_15_min: Vec<f64>,
-}
-
-#[derive(Serialize)]
-struct HeldDocument {
-    jurisdiction: &'static str,
-    kind: &'static str,
-    allowed_ppm: f64,
-    found_ppm: f64,
-    on_setback_ppm: Option<f64>,
-    passed: bool,
-    citation: &'static str,
-    source: &'static str,
-}
-
-#[derive(Serialize)]
-struct OtherDocument {
-    jurisdiction: &'static str,
-    kind: &'static str,
-    value: f64,
-    unit: &'static str,
-    why: String,
-    citation: &'static str,
-}
-
-#[derive(Serialize)]
-struct SuddenDocument {
-    place: &'static str,
-    gas: String,
-    mass_kg: f64,
-    gas_m3: f64,
-    at_once_percent: f64,
-    mixed_percent: f64,
-    oxygen_at_once_percent: f64,
-    oxygen_mixed_percent: f64,
-    times_idlh: Option<f64>,
-    limit_percent: Option<f64>,
-    hours_to_limit: Option<[f64; 2]>,
-    hours_to_limit_on_setback: Option<[f64; 2]>,
-}
-
-impl AirDocument {
-    pub(super) fn of(route: &RouteProgram, account: &RouteAccount) -> Option<Self> {
-        let air: &AirAccount = account.air.as_ref()?;
-        Some(Self {
-            gases: air.gases.iter().map(|g| gas(route, account, g)).collect(),
-            sudden: air.sudden.iter().map(sudden).collect(),
-        })
-    }
-}
+use crate::room::{Course, Exposure, HOUR_S};
 
 const PPM: f64 = 1e6;
 
-fn gas(route: &RouteProgram, account: &RouteAccount, g: &GasInRoom) -> GasDocument {
-    let releases = g.releases.iter().filter_map(|r| {
-        let p = account.trace.postings.get(r.posting)?;
-        let (step, technique) = step_and_technique(route, p.step);
-        Some(ReleaseDocument {
-            step,
-            technique,
-            posting_kg_per_run: p.kg,
-            kg_into_room_per_day: r.room_kg,
-            runs_per_day: r.runs,
-            seconds_per_day: r.over_s,
-        })
+pub(super) fn air(json: &mut Json, route: &RouteProgram, account: &RouteAccount) {
+    let Some(air) = &account.air else { return json.put("air", Value::Null) };
+    json.object("air", |json| {
+        json.list("gases", |json| {
+            for g in &air.gases {
+                json.row(|json| gas(json, route, account, g));
+            }
+        });
+        json.list("sudden", |json| {
+            for s in &air.sudden {
+                json.row(|json| sudden(json, s));
+            }
+        });
     });
-    GasDocument {
-        gas: g.name.clone(),
-        releases: releases.collect(),
-        background_ppm: g.background * PPM,
-        as_ventilated: course(&g.course, &g.exposure, g.shift),
-        on_setback: g.on_setback.as_ref().map(|(c, e, shift)| course(c, e, *shift)),
-        oxygen_at_highest_percent: g.oxygen * 100.0,
-        limits: g.held.iter().map(held).collect(),
-        other_limits: g.notes.iter().map(|(l, why)| other(l, why)).collect(),
-        sensor: g.sensor.sensor.title(),
-        blind: g.sensor.blind.iter().map(|s| s.title()).collect(),
-    }
 }
 
-fn course(c: &Course, e: &Exposure, shift: f64) -> CourseDocument {
+fn gas(json: &mut Json, route: &RouteProgram, account: &RouteAccount, g: &GasInRoom) {
+    json.put("gas", &g.name);
+    json.list("releases", |json| {
+        for r in &g.releases {
+            let Some(p) = account.trace.postings.get(r.posting) else { continue };
+            let (step, technique) = step_and_technique(route, p.step);
+            json.row(|json| {
+                json.put("step", step);
+                json.put("technique", technique);
+                json.put("kg_per_run", p.kg);
+                json.put("kg_into_room_per_day", r.room_kg);
+                json.put("runs_per_day", r.runs);
+                json.put("seconds_per_day", r.over_s);
+            });
+        }
+    });
+    json.put("background_ppm", g.background * PPM);
+    json.object("as_ventilated", |json| course(json, &g.course, &g.exposure, g.shift));
+    match &g.on_setback {
+        Some((c, e, shift)) => json.object("on_setback", |json| course(json, c, e, *shift)),
+        None => json.put("on_setback", Value::Null),
+    }
+    json.put("oxygen_at_highest_percent", g.oxygen * 100.0);
+    json.list("limits", |json| {
+        for h in &g.held {
+            json.row(|json| {
+                json.put("jurisdiction", h.limit.jurisdiction.title());
+                json.put("kind", h.limit.kind.title());
+                json.put("allowed_ppm", h.allowed * PPM);
+                json.put("found_ppm", h.found * PPM);
+                json.put("on_setback_ppm", h.on_setback.map(|x| x * PPM));
+                json.put("passed", h.is_passed());
+                json.put("citation", h.limit.citation);
+                json.put("source", h.limit.source);
+            });
+        }
+    });
+    json.list("other_limits", |json| {
+        for (limit, why) in &g.notes {
+            json.row(|json| {
+                json.put("jurisdiction", limit.jurisdiction.title());
+                json.put("kind", limit.kind.title());
+                json.put("value", limit.value);
+                json.put("unit", limit.unit.title());
+                json.put("why", why);
+                json.put("citation", limit.citation);
+            });
+        }
+    });
+    json.put("sensor", g.sensor.sensor.title());
+    json.list("blind", |json| {
+        for sensor in g.sensor.blind {
+            json.item(sensor.title());
+        }
+    });
+}
+
+/// A time course: its figures, and each quarter of an hour from the start of the work, for a day.
+fn course(json: &mut Json, c: &Course, e: &Exposure, shift: f64) {
     let (at_s, highest) = c.peak();
-    CourseDocument {
-        mean_8_h_ppm: shift * PPM,
-        worst_8_h_ppm: e.worst_8h * PPM,
-        worst_15_min_ppm: e.worst_15min * PPM,
-        highest_ppm: highest * PPM,
-        highest_after_h: at_s / HOUR_S,
-        ppm_each_15_min: (0..=96_u32).map(|i| c.at(f64::from(i) * 900.0) * PPM).collect(),
-    }
+    json.put("mean_8_h_ppm", shift * PPM);
+    json.put("worst_8_h_ppm", e.worst_8h * PPM);
+    json.put("worst_15_min_ppm", e.worst_15min * PPM);
+    json.put("highest_ppm", highest * PPM);
+    json.put("highest_after_h", at_s / HOUR_S);
+    json.list("ppm_each_15_min", |json| {
+        for i in 0..=96_u32 {
+            json.item(c.at(f64::from(i) * 900.0) * PPM);
+        }
+    });
 }
 
-fn held(h: &Held) -> HeldDocument {
-    HeldDocument {
-        jurisdiction: h.limit.jurisdiction.title(),
-        kind: h.limit.kind.title(),
-        allowed_ppm: h.allowed * PPM,
-        found_ppm: h.found * PPM,
-        on_setback_ppm: h.on_setback.map(|x| x * PPM),
-        passed: h.is_passed(),
-        citation: h.limit.citation,
-        source: h.limit.source,
-    }
-}
-
-fn other(l: &Limit, why: &str) -> OtherDocument {
-    OtherDocument {
-        jurisdiction: l.jurisdiction.title(),
-        kind: l.kind.title(),
-        value: l.value,
-        unit: l.unit.title(),
-        why: why.to_owned(),
-        citation: l.citation,
-    }
-}
-
-fn sudden(s: &SuddenInRoom) -> SuddenDocument {
-    let hours = |t: [f64; 2]| t.map(|s| s / HOUR_S);
-    SuddenDocument {
-        place: s.place,
-        gas: s.name.clone(),
-        mass_kg: s.mass_kg,
-        gas_m3: s.sudden.gas_m3,
-        at_once_percent: s.sudden.at_once * 100.0,
-        mixed_percent: s.sudden.mixed * 100.0,
-        oxygen_at_once_percent: s.sudden.oxygen_at_once * 100.0,
-        oxygen_mixed_percent: s.sudden.oxygen_mixed * 100.0,
-        times_idlh: s.idlh.map(|(_, x)| s.sudden.worst() / x),
-        limit_percent: s.clears.map(|c| c.limit * 100.0),
-        hours_to_limit: s.clears.and_then(|c| c.by_day).map(hours),
-        hours_to_limit_on_setback: s.clears.and_then(|c| c.on_setback).map(hours),
+fn sudden(json: &mut Json, s: &SuddenInRoom) {
+    json.put("place", s.place);
+    json.put("gas", &s.name);
+    json.put("mass_kg", s.mass_kg);
+    json.put("gas_m3", s.sudden.gas_m3);
+    json.put("at_once_percent", s.sudden.at_once * 100.0);
+    json.put("mixed_percent", s.sudden.mixed * 100.0);
+    json.put("oxygen_at_once_percent", s.sudden.oxygen_at_once * 100.0);
+    json.put("oxygen_mixed_percent", s.sudden.oxygen_mixed * 100.0);
+    json.put("times_idlh", s.idlh.map(|(_, x)| s.sudden.worst() / x));
+    json.put("limit_percent", s.clears.map(|c| c.limit * 100.0));
+    for (key, found) in [
+        ("hours_to_limit", s.clears.and_then(|c| c.by_day)),
+        ("hours_to_limit_on_setback", s.clears.and_then(|c| c.on_setback)),
+    ] {
+        match found {
+            Some(both) => json.list(key, |json| {
+                for s in both {
+                    json.item(s / HOUR_S);
+                }
+            }),
+            None => json.put(key, Value::Null),
+        }
     }
 }
