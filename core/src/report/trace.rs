@@ -9,7 +9,8 @@ use super::result::{FigureRow, InputDocument, step_and_technique};
 use super::row::{key_unit, written};
 use super::words::si_unit;
 use crate::account::{
-    Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
+    Account, Contribution, Entry as Source, Figure, How, Measure, RouteAccount, behind, describe, place_name,
+    rule_of,
 };
 use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
@@ -96,6 +97,15 @@ pub fn trace<'a>(
     let parts: Vec<_> = match whole.figure.how {
         How::Ratio { over, under } => vec![("over", open(over)), ("under", open(under))],
         How::Containers { volume, .. } => vec![("volume", open(volume))],
+        How::Whole(of) => vec![("of", open(of))],
+        How::Lines(ref lines) => lines
+            .iter()
+            .flat_map(|l| match l.of {
+                Source::Figure(i) => vec![("part", open(i))],
+                Source::Both(i, j) => vec![("part", open(i)), ("part", open(j))],
+                _ => Vec::new(),
+            })
+            .collect(),
         How::Sum(_) | How::Spent(_) => Vec::new(),
     };
     let parts: Vec<_> = parts.into_iter().filter_map(|(name, part)| Some((name, part?))).collect();

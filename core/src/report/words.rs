@@ -5,7 +5,7 @@ use crate::chance::Draw;
 use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
 use crate::plan::Problem;
 use crate::program::{Program, WorkloadProgram};
-use crate::quantity::{Kind, show, significant};
+use crate::quantity::{Kind, significant};
 use crate::source::{Source, Standing};
 use std::collections::BTreeSet;
 
@@ -97,13 +97,7 @@ fn sources(s: &Substance) -> BTreeSet<String> {
 
 /// An amount for people: four significant digits and a unit that suits its size.
 pub(super) fn amount(value_si: f64, measure: Measure) -> String {
-    match measure {
-        Measure::Mass => show(value_si, Kind::Mass),
-        Measure::Volume => show(value_si, Kind::Volume),
-        Measure::Energy => show(value_si, Kind::Energy),
-        Measure::WeightedMass => format!("{}·score", show(value_si, Kind::Mass)),
-        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
-    }
+    measure.shown(value_si)
 }
 
 /// How much work there is, in words.
