@@ -30,6 +30,7 @@ pub mod mixture;
 pub mod money;
 pub mod odds;
 pub mod plan;
+pub mod pour;
 pub mod program;
 pub mod quantity;
 pub mod report;

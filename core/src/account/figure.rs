@@ -287,13 +287,20 @@ pub enum How {
     Sum(Vec<Term>),
     /// A utility spent; a year.
     Spent(Utility),
-    /// Containers filled in a year: the volume of another figure over what one container takes, carried over through
+    /// Containers filled or emptied in a year: the volume or mass of another figure over what one container takes, carried over through
     /// the year and rounded up once.
     Containers {
-        /// The index of the figure with the volume.
-        volume: usize,
-        /// What one container takes; m³.
-        takes_m3: f64,
+        /// The index of the figure with the volume, or the mass.
+        of: usize,
+        /// What one container takes; SI.
+        takes: f64,
+    },
+    /// Another figure times a constant.
+    Times {
+        /// The index of that figure.
+        of: usize,
+        /// What it is multiplied with; SI.
+        factor: f64,
     },
     /// A sum of entries times factors.
     Lines(Vec<Line>),
@@ -306,6 +313,26 @@ pub enum How {
         /// The index of the figure below the line.
         under: usize,
     },
+}
+
+impl How {
+    /// The indices of the figures that it follows from, in the order of the formula; none where it follows from the book.
+    #[must_use]
+    pub fn rests_on(&self) -> Vec<usize> {
+        match self {
+            Self::Containers { of, .. } | Self::Times { of, .. } | Self::Whole(of) => vec![*of],
+            Self::Ratio { over, under } => vec![*over, *under],
+            Self::Lines(lines) => {
+                let of = |line: &Line| match line.of {
+                    Entry::Figure(i) => [Some(i), None],
+                    Entry::Both(i, j) => [Some(i), Some(j)],
+                    _ => [None, None],
+                };
+                lines.iter().flat_map(of).flatten().collect()
+            }
+            Self::Sum(_) | Self::Spent(_) => Vec::new(),
+        }
+    }
 }
 
 /// One figure of a route.
@@ -395,20 +422,8 @@ pub fn with_what_they_rest_on(figures: &[Figure], wanted: &[usize]) -> Vec<usize
     // A figure rests on earlier ones only.
     for i in (0..figures.len()).rev() {
         if needed[i] {
-            match figures[i].how {
-                How::Containers { volume, .. } => needed[volume] = true,
-                How::Ratio { over, under } => (needed[over], needed[under]) = (true, true),
-                How::Whole(of) => needed[of] = true,
-                How::Lines(ref lines) => {
-                    for line in lines {
-                        match line.of {
-                            Entry::Figure(i) => needed[i] = true,
-                            Entry::Both(i, j) => (needed[i], needed[j]) = (true, true),
-                            _ => {}
-                        }
-                    }
-                }
-                How::Sum(_) | How::Spent(_) => {}
+            for of in figures[i].how.rests_on() {
+                needed[of] = true;
             }
         }
     }
@@ -446,7 +461,8 @@ fn value(figure: &Figure, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
         }
         How::Spent(utility) => desk.spent[*utility as usize],
         // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number
-        How::Containers { volume, takes_m3 } => libm::ceil(out[*volume] / takes_m3 - 1e-9),
+        How::Containers { of, takes } => libm::ceil(out[*of] / takes - 1e-9),
+        How::Times { of, factor } => out[*of] * factor,
         How::Ratio { over, under } => {
             let under = out[*under];
             if under > 0.0 { out[*over] / under } else { 0.0 }

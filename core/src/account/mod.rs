@@ -6,6 +6,7 @@
 mod carbon_dioxide;
 mod climate;
 mod cost;
+mod desk;
 mod energy;
 mod figure;
 mod hazard;
@@ -17,6 +18,8 @@ mod time;
 mod waste;
 mod working;
 
+pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
+pub use energy::{StepEnergy, by_step};
 pub use figure::{
     Draft, Entry, Factor, Figure, Group, How, Line, Measure, Term, evaluate, evaluate_these,
     with_what_they_rest_on,

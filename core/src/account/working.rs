@@ -28,8 +28,8 @@ pub enum Contribution {
 
 /// What lies behind a figure, largest first; zeros are left out.
 ///
-/// Behind a number of containers lies what is behind its volume; a ratio has its two figures behind it, named by
-/// [`How::Ratio`], and no entries of its own.
+/// Behind a number of containers lies what is behind its volume; a ratio or a multiple has the figures behind it that
+/// [`How`] names, and no entries of its own.
 #[must_use]
 pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> Vec<Contribution> {
     let size = |c: &Contribution| match c {
@@ -125,12 +125,12 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
                 return behind(route, account, figure);
             }
         }
-        How::Containers { volume, .. } => {
-            if let Some(volume) = account.figures.get(*volume) {
-                return behind(route, account, volume);
+        How::Containers { of, .. } => {
+            if let Some(of) = account.figures.get(*of) {
+                return behind(route, account, of);
             }
         }
-        How::Ratio { .. } => {}
+        How::Ratio { .. } | How::Times { .. } => {}
     }
     out.sort_by(|a, b| size(b).total_cmp(&size(a)));
     out

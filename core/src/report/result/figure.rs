@@ -35,7 +35,7 @@ impl Serialize for FigureRow<'_> {
         map.serialize_entry("source", source.cite)?;
         map.serialize_entry("standing", source.standing.words())?;
         match &self.row {
-            Row::Ratio(value) => map.serialize_entry("ratio", value)?,
+            Row::Ratio(value) => map.serialize_entry(key_unit(*measure), value)?,
             Row::Extensive { per_result, per_batch, per_month, per_year, per_kg_product } => {
                 let unit = key_unit(*measure);
                 map.serialize_entry(&format!("{unit}_per_result"), per_result)?;
