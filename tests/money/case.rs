@@ -53,7 +53,7 @@ fn it_turns_where_the_plan_itself_turns() {
                 plan["workloads"][0]["routes"][1]["money"]["instrument"] = json!(scaled("1500 USD"));
             }
             "site.money.prices.cleaner" => {
-                plan["site"]["money"]["prices"]["cleaner"] = json!(scaled("4 USD/L"))
+                plan["site"]["money"]["prices"]["cleaner"] = json!(scaled("4 USD/L"));
             }
             _ => continue,
         }
