@@ -5,6 +5,7 @@ use super::mass::place_name;
 use super::open::{RouteAccount, rule_of};
 use crate::chance::Draw;
 use crate::ledger::{Direction, Place, Posting, StepIx};
+use crate::order;
 use crate::program::{RouteProgram, SiteUse};
 
 /// What one entry of the book adds to a figure.
@@ -132,7 +133,7 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
         }
         How::Ratio { .. } | How::Times { .. } => {}
     }
-    out.sort_by(|a, b| size(b).total_cmp(&size(a)));
+    order::sort(&mut out, &|a, b| size(a) > size(b));
     out
 }
 
