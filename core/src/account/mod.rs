@@ -5,6 +5,8 @@
 
 mod air;
 mod carbon_dioxide;
+mod climate;
+mod cost;
 mod desk;
 mod energy;
 mod figure;
@@ -13,6 +15,7 @@ mod mass;
 mod metric;
 mod open;
 mod poured;
+mod time;
 mod waste;
 mod working;
 
@@ -20,7 +23,8 @@ pub use air::{AirAccount, AirRelease, Clears, GasInRoom, Held, SHIFT_S, SuddenIn
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
 pub use energy::{StepEnergy, by_step};
 pub use figure::{
-    Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
+    Draft, Entry, Factor, Figure, Group, How, Line, Measure, Term, evaluate, evaluate_these,
+    with_what_they_rest_on,
 };
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;
