@@ -3,6 +3,7 @@ use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item};
 use crate::form::{text_of, understood};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
+use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
 use thimbleworth::program::OWN_FIELDS;
@@ -22,11 +23,9 @@ pub(super) static SECTION: Section = Section {
 fn draw(view: &View) -> Html {
     html! {
         <>
-            <div class="form">
-                { about(view) }
-                { streams(view) }
-                { works(view) }
-                { more(view) }
+            <div class="form halves">
+                <div>{ about(view) }{ streams(view) }{ more(view) }</div>
+                <div>{ works(view) }</div>
             </div>
             { printed(view) }
         </>
@@ -177,7 +176,7 @@ fn stream_words(stream: &Stream) -> String {
     parts.extend(stream.fill.as_ref().map(|f| format!("filled to {f}")));
     parts.extend(stream.bulk_density.as_ref().map(|d| format!("bulk density {d}")));
     parts.extend(stream.treatment.as_ref().map(|t| format!("treatment {t}")));
-    parts.join(", ")
+    unbroken(&parts.join(", "))
 }
 
 fn works(view: &View) -> Html {
@@ -300,7 +299,7 @@ fn printed(view: &View) -> Html {
     let plan = view.plan();
     let line = |label: &str, value: Option<String>| {
         let value = value.filter(|v| !v.is_empty())?;
-        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ value }</dd></> })
+        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ unbroken(&value) }</dd></> })
     };
     let site = &plan.site;
     let rows = |rows: &[(String, String)]| {
