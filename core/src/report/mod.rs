@@ -8,6 +8,7 @@
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
 //! | [`energy_sheets`] | energy by step and CO2 by state, tables for all of them |
 //! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
+//! | [`paper()`] | a paper of the waste desk: codes, labels, contents, months, pick-ups, load |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
@@ -17,6 +18,7 @@ mod energy;
 mod grid;
 mod markdown;
 mod odds;
+mod paper;
 mod result;
 mod row;
 mod table;
@@ -27,6 +29,7 @@ pub use csv::{result_csv, text_cell};
 pub use energy::{Sheet, dense_words, energy_sheets};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
+pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
 pub use table::{account_table, comparison_table};

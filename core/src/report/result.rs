@@ -4,13 +4,14 @@ mod energy;
 mod figure;
 mod hazard;
 mod posting;
+mod waste;
 
 pub(super) use figure::FigureRow;
 pub(super) use posting::{InputDocument, step_and_technique};
 
 use super::row::PROGRAM;
 use super::words::editions;
-use crate::account::{Account, RouteAccount};
+use crate::account::{Account, Pouring, RouteAccount};
 use crate::chance::{Draw, identity_key};
 use crate::compare::compare;
 use crate::plan::{Problem, save};
@@ -36,6 +37,7 @@ struct Document<'a> {
     as_of: Option<&'a str>,
     data_editions: Vec<EditionDocument>,
     workloads: Vec<WorkloadDocument<'a>>,
+    waste_desk: Option<waste::SiteDocument>,
     problems: Vec<ProblemDocument<'a>>,
 }
 
@@ -77,6 +79,7 @@ struct RouteAccountDocument<'a> {
     figures: Vec<FigureRow<'a>>,
     refused: Vec<RefusalDocument<'a>>,
     hazard: HazardDocument<'a>,
+    waste_codes: Vec<waste::StreamDocument>,
     assumptions: Vec<AssumptionDocument<'a>>,
     cautions: Vec<CautionDocument>,
     closure: f64,
@@ -114,6 +117,7 @@ struct ProblemDocument<'a> {
 /// | `title`, `site`, `rules`, `as_of` | from the plan; `null` where it does not say |
 /// | `data_editions` | the sources of the densities, hazards, flash and boiling points and waste codes of all materials on routes, by key, each with `cite` and `standing` |
 /// | `workloads` | the pieces of work in the order of the plan; empty when the plan has an error |
+/// | `waste_desk` | the site with the present route of each workload: `streams` (as `waste_codes`), `months` (what counts, the category under the rules of the United States, days of storage), `headroom` (results that a month takes before the category rises), `pick_ups`, containers begun, breaches; `null` without a program |
 /// | `problems` | everything found on the way, errors first: `severity` (`error`, `warning`, `note`), `path` in the plan, `found`, `need` |
 ///
 /// A workload has `name`, `work` (`results_per_year`, `extractions_per_year` with controls and repeats,
@@ -126,6 +130,7 @@ struct ProblemDocument<'a> {
 /// | `figures` | see below |
 /// | `refused` | metrics that are not given: `metrics`, `reason` |
 /// | `hazard` | `materials` (statements with text where it is known, pictogram codes, signal word, CHEM21 scores 1 to 10 with reasons, or why there are none, source and date), `eco_scale` (Analytical Eco-Scale for one result, its penalty lines), `nemi` (four rules, `met` is `yes`, `no` or `not known`), `not_scored` (materials that reach air or drain without a score) |
+/// | `waste_codes` | for each stream that the route fills: `standing`, `kg_per_year`, `codes` that are put on it, `test` (codes that only a test can clear), `verdicts` (`code`, `answer`, `why`, `figures` held against limits, `rule`, `cite`, `since`, `until`, `in_force`, what would `change` it), transport included |
 /// | `assumptions` | values that stand in for what the plan leaves out: `path`, `label`, `value`, `source`, `standing` |
 /// | `cautions` | what can hurt: `key`, `text`, `source`; local codes and licensed practice decide |
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
@@ -165,6 +170,7 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
         as_of: plan.and_then(|p| p.site.as_of.as_deref()),
         data_editions: program.map(editions).unwrap_or_default().into_iter().map(edition).collect(),
         workloads: workloads(account, with_comparison),
+        waste_desk: waste::site(account),
         problems: account.problems.iter().map(problem).collect(),
     };
     // Plain data with text keys: writing it to memory cannot fail.
@@ -226,6 +232,7 @@ fn route_account<'a>(
         figures: FigureRow::all(account),
         refused: account.refusals.iter().map(refusal).collect(),
         hazard: HazardDocument::of(&account.hazard),
+        waste_codes: waste::streams(Pouring { route, account }, site),
         assumptions: route.assumptions.iter().map(AssumptionDocument::of).collect(),
         cautions: account.cautions.iter().map(|c| CautionDocument::of(c)).collect(),
         closure: account.closure,

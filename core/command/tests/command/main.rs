@@ -6,6 +6,7 @@ mod co2;
 mod files;
 mod odds;
 mod results;
+mod waste;
 
 use serde_json::Value;
 use std::io::Write;
