@@ -14,12 +14,33 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
         head: HEAD.to_vec(),
         rows: s.verdicts.iter().map(row).collect(),
     };
+    let glance = PaperTable {
+        title: "At a glance".into(),
+        head: vec!["Stream", "Standing", "Codes", "Test, do not assume", "Transport", "kg a year"],
+        rows: sheet
+            .desk
+            .streams
+            .iter()
+            .map(|s| {
+                let transport = s.transport().map_or_else(String::new, |v| v.why.clone());
+                let kg = super::kilograms(s.contents.mass_kg());
+                vec![
+                    sheet.name(s).into(),
+                    s.standing().words().into(),
+                    s.codes().join(", "),
+                    s.open().join(", "),
+                    transport,
+                    kg,
+                ]
+            })
+            .collect(),
+    };
     Paper {
         title: "Waste codes by container".into(),
         lead: vec![
             "By everything poured in; marc, drying agents, filters and disposables inherit from the solvent that wets them.".into(),
         ],
-        tables: sheet.desk.streams.iter().map(table).collect(),
+        tables: std::iter::once(glance).chain(sheet.desk.streams.iter().map(table)).collect(),
         foot: Vec::new(),
     }
 }

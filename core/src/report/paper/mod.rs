@@ -92,7 +92,7 @@ impl PaperKind {
 /// let account = account_text(EXAMPLES[1].text);
 /// let desk = site_desk(&account, &[]).unwrap();
 /// let codes = paper(&account, &desk, PaperKind::Codes).unwrap();
-/// assert!(codes.tables[0].title.contains("halogenated"));
+/// assert!(codes.tables[1].title.contains("halogenated"));
 /// ```
 #[must_use]
 pub fn paper(account: &Account, desk: &SiteDesk<'_>, kind: PaperKind) -> Option<Paper> {
