@@ -11,18 +11,18 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     let table = |s: &crate::account::StreamDesk<'_>| PaperTable {
         title: [sheet.name(s), ": ", s.standing().words(), ", ", &mass(s.contents.mass_kg()), " a year"]
             .concat(),
-        head: HEAD.to_vec(),
+        head: &HEAD,
         rows: s.verdicts.iter().map(row).collect(),
     };
     let glance = PaperTable {
         title: "At a glance".into(),
-        head: vec!["Stream", "Standing", "Codes", "Test, do not assume", "Transport", "kg a year"],
+        head: &["Stream", "Standing", "Codes", "Test, do not assume", "Transport", "kg a year"],
         rows: sheet
             .desk
             .streams
             .iter()
             .map(|s| {
-                let transport = s.transport().map_or_else(String::new, |v| v.why.clone());
+                let transport = s.transport().map_or_else(String::new, |v| v.why.to_string());
                 let kg = super::kilograms(s.contents.mass_kg());
                 vec![
                     sheet.name(s).into(),
@@ -54,7 +54,7 @@ pub(super) fn row(v: &Verdict) -> Vec<String> {
         figures.push_str(&fact.words());
     }
     let rule = [v.rule.title, ": ", &cited(v.rule.citation()), "; ", &rule_dates(v)].concat();
-    vec![v.code.to_string(), v.answer.words().into(), v.why.clone(), figures, rule, v.change.to_string()]
+    vec![v.code.to_string(), v.answer.words().into(), v.why.to_string(), figures, rule, v.change.to_string()]
 }
 
 fn rule_dates(v: &Verdict) -> String {

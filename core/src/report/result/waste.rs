@@ -80,7 +80,12 @@ struct PickUpDocument {
 }
 
 fn fact(f: &Fact) -> FactDocument {
-    FactDocument { what: f.what.clone(), value_si: f.value_si, limit_si: f.limit_si, unit: si_unit(f.kind) }
+    FactDocument {
+        what: f.what.to_string(),
+        value_si: f.value_si,
+        limit_si: f.limit_si,
+        unit: si_unit(f.kind),
+    }
 }
 
 fn verdict(v: &Verdict) -> VerdictDocument {
@@ -89,7 +94,7 @@ fn verdict(v: &Verdict) -> VerdictDocument {
         code: v.code.to_string(),
         answer: v.answer.words(),
         in_force: v.in_force,
-        why: v.why.clone(),
+        why: v.why.to_string(),
         figures: v.facts.iter().map(fact).collect(),
         rule: v.rule.title,
         cite: cited.cite,
