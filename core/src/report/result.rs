@@ -60,9 +60,9 @@ pub const RESULT_VERSION: u64 = 1;
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
 /// `formula`, `source`, `standing`, and its values under keys that name the unit: `kg`, `l` (litres), `kwh`, `containers`
-/// or `kg_score` (mass times a score) with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
+/// `kg_score` (mass times a score), `h`, `money` (in the `currency` of the site) or `kg_co2e` with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
 /// (`null` without a product). A month is a twelfth of the year. Containers are whole in a year, and the other values are
-/// shares of that number. A ratio has only `ratio`. All are central values; gross and net stand as figures of their own.
+/// shares of that number. A ratio has only `ratio`, a number of things `count`, money paid once `money_once`. All are central values; gross and net stand as figures of their own.
 ///
 /// **Comparison.** `comparison` is `null` where the present route has no account, else `present` and `routes`, one for
 /// each other route with an account: `name`, `finding`, `better`, `worse`, `doubts`, and `differences`: `id`, `title`,
@@ -223,11 +223,11 @@ mod tests {
                     assert_eq!(route["accounted"], true, "{}", example.key);
                     for figure in route["figures"].as_array().unwrap() {
                         let keys: Vec<&String> = figure.as_object().unwrap().keys().collect();
-                        if figure.get("ratio").is_some() {
+                        if ["ratio", "count", "money_once"].iter().any(|k| figure.get(k).is_some()) {
                             assert_eq!(keys.len(), 8, "{keys:?}");
                             continue;
                         }
-                        let unit = ["kg", "l", "kwh", "containers", "kg_score"]
+                        let unit = ["kg", "l", "kwh", "containers", "kg_score", "h", "money", "kg_co2e"]
                             .into_iter()
                             .find(|u| figure.get(format!("{u}_per_year")).is_some())
                             .unwrap();
