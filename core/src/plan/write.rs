@@ -110,9 +110,9 @@ fn site(site: &Site) -> Node {
     }
     if let Some(room) = &site.room {
         let mut inner = Entries::default();
-        inner.optional("volume", room.volume.as_ref());
-        inner.optional("air_changes", room.air_changes.as_ref());
-        inner.optional("hood_capture", room.hood_capture.as_ref());
+        for (key, text) in room.given() {
+            inner.text(key, text);
+        }
         out.put("room", inner.into());
     }
     out.list("streams", &site.streams, stream);
@@ -281,7 +281,13 @@ mod tests {
                     boundary: some("b"),
                     source: some("s"),
                 }),
-                room: Some(Room { volume: some("v"), air_changes: some("a"), hood_capture: some("h") }),
+                room: Some({
+                    let mut room = Room::default();
+                    for key in ["store", "volume", "air_changes", "hood_capture"] {
+                        assert!(room.set(key, Some(key.to_owned())));
+                    }
+                    room
+                }),
                 streams: vec![Stream {
                     name: "flammable".into(),
                     holds: some("liquid"),

@@ -146,10 +146,8 @@ fn page(
         }
     }
     out.push_str("\n### What else changes\n\n");
-    if let Some(reading) = &reading {
-        if let Some(row) = first.or_else(|| rows.first()) {
-            headlines(out, work, reading, row.route);
-        }
+    if let (Some(reading), Some(row)) = (&reading, first.or_else(|| rows.first())) {
+        headlines(out, work, reading, row.route);
     }
     let Some(row) = first else {
         out.push_str("No route is ranked, so that nothing is recommended.\n\n");
