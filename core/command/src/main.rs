@@ -11,6 +11,7 @@ mod demo;
 mod example;
 mod input;
 mod materials;
+mod need;
 mod odds;
 mod output;
 mod pour;
@@ -62,6 +63,8 @@ enum What {
     Technique(technique::Args),
     /// A state of carbon dioxide, or a file of states
     Co2(co2::Args),
+    /// The CO2 that a recovery takes, and the state that takes least
+    Need(need::Args),
     /// The example plans, or the text of one to begin from
     Example(example::Args),
 }
@@ -88,6 +91,7 @@ fn main() -> ExitCode {
         Some(What::Schema) => schema::run(),
         Some(What::Technique(args)) => technique::run(args),
         Some(What::Co2(args)) => co2::run(args),
+        Some(What::Need(args)) => need::run(args),
         Some(What::Example(args)) => example::run(args),
     };
     match done {

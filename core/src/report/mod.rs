@@ -26,7 +26,7 @@ mod trace;
 mod words;
 
 pub use csv::{result_csv, text_cell};
-pub use energy::{Sheet, dense_words, energy_sheets};
+pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
 pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};

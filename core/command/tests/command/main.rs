@@ -4,6 +4,7 @@
 mod bad_input;
 mod co2;
 mod files;
+mod need;
 mod odds;
 mod results;
 mod waste;
