@@ -9,16 +9,20 @@ mod consume;
 mod declare;
 mod dense;
 mod discard;
+mod distil;
 mod dry;
 mod impregnate;
 mod liquid_liquid;
+mod microwave;
 mod mixture;
+mod percolate;
 mod pressurised_liquid;
 mod rinse;
 mod solid_phase;
 mod soxhlet;
 mod supercritical;
 mod ultrasonic;
+mod vapours;
 
 pub use caution::Caution;
 pub use declare::{Control, Measurable, Need, Param, Rule};
@@ -26,7 +30,7 @@ pub use dense::{DenseCo2, Metered};
 pub use mixture::{LARGEST, Mixture, Part};
 pub use solid_phase::Poured;
 
-use common::{electricity, extract, hold_up};
+use common::{cooling_water, electricity, extract, hold_up};
 
 use crate::chance::Draw;
 use crate::ledger::{Bench, Halt, Place};
@@ -90,6 +94,8 @@ pub struct Technique {
 pub static TECHNIQUES: &[&Technique] = &[
     &soxhlet::TECHNIQUE,
     &ultrasonic::TECHNIQUE,
+    &percolate::TECHNIQUE,
+    &microwave::TECHNIQUE,
     &pressurised_liquid::TECHNIQUE,
     &supercritical::TECHNIQUE,
     &impregnate::TECHNIQUE,
@@ -97,6 +103,7 @@ pub static TECHNIQUES: &[&Technique] = &[
     &liquid_liquid::TECHNIQUE,
     &solid_phase::TECHNIQUE,
     &concentrate::TECHNIQUE,
+    &distil::TECHNIQUE,
     &dry::TECHNIQUE,
     &rinse::TECHNIQUE,
     &consume::TECHNIQUE,
