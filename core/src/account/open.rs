@@ -140,8 +140,14 @@ fn drawn_up(plan: &Plan) -> (Option<Program>, Vec<WorkloadAccount>, Vec<Problem>
 }
 
 /// Worst first; among equals in the order of the document.
-fn sort(problems: &mut [Problem]) {
-    problems.sort_by_key(|p| p.severity);
+fn sort(problems: &mut Vec<Problem>) {
+    let mut milder = std::mem::take(problems);
+    for severity in [Severity::Error, Severity::Warning] {
+        let (these, others) = milder.into_iter().partition(|p| p.severity == severity);
+        problems.extend::<Vec<_>>(these);
+        milder = others;
+    }
+    problems.append(&mut milder);
 }
 
 fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Problem>) -> Option<RouteAccount> {

@@ -4,6 +4,7 @@ use super::figure::{Factor, Figure, How};
 use super::mass::place_name;
 use super::open::{RouteAccount, rule_of};
 use crate::ledger::{Direction, Place, Posting, StepIx};
+use crate::order;
 use crate::program::{RouteProgram, SiteUse};
 
 /// What one entry of the book adds to a figure.
@@ -76,7 +77,7 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
     let size = |c: &Contribution| match c {
         Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => amount_si.abs(),
     };
-    out.sort_by(|a, b| size(b).total_cmp(&size(a)));
+    order::sort(&mut out, &|a, b| size(a) > size(b));
     out
 }
 

@@ -3,6 +3,7 @@
 use super::finding;
 use crate::account::{Account, Contribution, Figure, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
+use crate::order;
 use crate::program::{RouteProgram, WorkloadProgram};
 
 /// The comparison of one workload.
@@ -166,7 +167,7 @@ fn causes(
         }
     }
     found.retain(|c| c.change != 0.0);
-    found.sort_by(|a, b| b.change.abs().total_cmp(&a.change.abs()));
+    order::sort(&mut found, &|a, b| a.change.abs() > b.change.abs());
     found.truncate(5);
     found
 }

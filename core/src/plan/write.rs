@@ -3,7 +3,7 @@
 use super::document::{Field, OtherWaste, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
 use super::keys::VERSION_KEY;
 use super::print::print;
-use super::tree::{self, Node};
+use super::tree::{Node, is_number};
 
 /// The plan as a JSON document: keys in their declared order, two spaces a level, LF, a final newline, every amount as
 /// it was written. An object of plain values stands on one line where it fits.
@@ -198,11 +198,8 @@ fn step(step: &Step) -> Node {
 fn field(field: &Field) -> Node {
     match field {
         Field::Text(text) => Node::Text(text.clone()),
-        Field::Number(number) => match tree::read(number) {
-            // Compared, because white space around a number is not part of it.
-            Ok(Node::Number(read)) if read == *number => Node::Number(read),
-            _ => Node::Text(number.clone()),
-        },
+        Field::Number(number) if is_number(number) => Node::Number(number.clone()),
+        Field::Number(number) => Node::Text(number.clone()),
         Field::YesNo(yes) => Node::YesNo(*yes),
         Field::Rows(list) => rows(list),
     }

@@ -10,11 +10,11 @@ use super::{
 use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
+use crate::order::Index;
 use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
 use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
 use crate::step::{TECHNIQUES, technique};
-use std::collections::BTreeMap;
 
 /// The most materials that one route may use: an index fits in 16 bits, and a plan with more has gone wrong.
 const MOST_MATERIALS: usize = 500;
@@ -71,8 +71,8 @@ pub fn resolve(plan: &Plan) -> Resolved {
     let broken = problems.iter().any(|p| p.severity == Severity::Error);
     let program = (!broken).then(|| Program { title: plan.title.clone(), seed, site, workloads });
     // The same doubt about a shared figure is told once.
-    let mut told = std::collections::BTreeSet::new();
-    problems.retain(|p| told.insert((p.path.clone(), p.found.clone())));
+    let mut told = Index::default();
+    problems.retain(|p| told.put(format!("{}\n{}", p.path, p.found), 0).is_none());
     Resolved { program, problems }
 }
 
@@ -291,7 +291,8 @@ pub(super) struct RouteBuilder<'p> {
     permit: bool,
     pub(super) problems: &'p mut Vec<Problem>,
     inputs: Vec<Input>,
-    slots: BTreeMap<u64, In>,
+    /// The keys of the inputs in order, each with where it stands.
+    slots: Vec<(u64, In)>,
     pub(super) materials: Vec<MaterialUse>,
     densities: Vec<Option<In>>,
     assumptions: Vec<Assumption>,
@@ -318,7 +319,7 @@ impl<'p> RouteBuilder<'p> {
             permit,
             problems,
             inputs: Vec::new(),
-            slots: BTreeMap::new(),
+            slots: Vec::new(),
             materials: Vec::new(),
             densities: Vec::new(),
             assumptions: Vec::new(),
@@ -346,11 +347,12 @@ impl<'p> RouteBuilder<'p> {
 
     pub(super) fn input(&mut self, identity: String, amount: &Amount, origin: Origin) -> In {
         let key = self.key(&identity);
-        if let Some(&slot) = self.slots.get(&key) {
+        let place = self.slots.partition_point(|(known, _)| *known < key);
+        if let Some(&(_, slot)) = self.slots.get(place).filter(|(known, _)| *known == key) {
             return slot;
         }
         let slot = In(u32::try_from(self.inputs.len()).unwrap_or(u32::MAX));
-        self.slots.insert(key, slot);
+        self.slots.insert(place, (key, slot));
         self.inputs.push(Input {
             identity,
             key,

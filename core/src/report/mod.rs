@@ -16,6 +16,7 @@
 mod csv;
 mod energy;
 mod grid;
+mod json;
 mod markdown;
 mod odds;
 mod paper;
