@@ -29,7 +29,7 @@ pub struct Sheet {
 }
 
 impl Sheet {
-    fn without_empty_columns(&mut self) {
+    pub(super) fn without_empty_columns(&mut self) {
         for column in (1..self.head.len()).rev() {
             if self.rows.iter().all(|row| row.get(column).is_none_or(String::is_empty)) {
                 self.head.remove(column);

@@ -91,11 +91,8 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
         }
         ["room", key] => {
             let mut of = site.room.take().unwrap_or_default();
-            match *key {
-                "volume" => of.volume = words(value),
-                "air_changes" => of.air_changes = words(value),
-                "hood_capture" => of.hood_capture = words(value),
-                _ => return None,
+            if !of.set(key, words(value)) {
+                return None;
             }
             site.room = (of != Room::default()).then_some(of);
         }

@@ -5,7 +5,7 @@ use crate::form::{text_of, understood};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
 use std::rc::Rc;
 use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
-use thimbleworth::program::OWN_FIELDS;
+use thimbleworth::program::{OWN_FIELDS, ROOM_FIELDS};
 use thimbleworth::quantity::Kind;
 use thimbleworth::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY};
 use thimbleworth::step::{Control, Need};
@@ -259,9 +259,14 @@ fn more(view: &View) -> Html {
                 { Asked::amount("site.electricity.climate", "CO2-equivalent of electricity", Kind::ClimatePerEnergy, electricity.climate.as_ref()).hint(kept).draw(view) }
                 { Asked::amount("site.electricity.price", "Price of electricity", Kind::PricePerEnergy, electricity.price.as_ref()).hint(kept).draw(view) }
                 { Asked::text("site.electricity.source", "Source of these figures", electricity.source.unwrap_or_default()).draw(view) }
-                { Asked::amount("site.room.volume", "Volume of the room", Kind::Volume, room.volume.as_ref()).hint(kept).draw(view) }
-                { Asked::amount("site.room.air_changes", "Air changes", Kind::Frequency, room.air_changes.as_ref()).hint(kept).draw(view) }
-                { Asked::amount("site.room.hood_capture", "Share that the hood captures", Kind::Fraction, room.hood_capture.as_ref()).hint(kept).draw(view) }
+                { for ROOM_FIELDS.iter().map(|p| {
+                    let path = format!("site.room.{}", p.key);
+                    let given = room.get(p.key).map(str::to_owned);
+                    match p.control {
+                        Control::Quantity(kind) => Asked::amount(&path, p.label, kind, given.as_ref()).hint(p.hint).draw(view),
+                        _ => Asked::text(&path, p.label, given.unwrap_or_default()).hint(p.hint).draw(view),
+                    }
+                }) }
             </details>
         </>
     }
