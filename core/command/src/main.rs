@@ -12,6 +12,7 @@ mod demo;
 mod example;
 mod input;
 mod materials;
+mod need;
 mod odds;
 mod output;
 mod pour;
@@ -65,6 +66,8 @@ enum What {
     Technique(technique::Args),
     /// A state of carbon dioxide, or a file of states
     Co2(co2::Args),
+    /// The CO2 that a recovery takes, and the state that takes least
+    Need(need::Args),
     /// The example plans, or the text of one to begin from
     Example(example::Args),
 }
@@ -92,6 +95,7 @@ fn main() -> ExitCode {
         Some(What::Schema) => schema::run(),
         Some(What::Technique(args)) => technique::run(args),
         Some(What::Co2(args)) => co2::run(args),
+        Some(What::Need(args)) => need::run(args),
         Some(What::Example(args)) => example::run(args),
     };
     match done {

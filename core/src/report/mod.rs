@@ -33,7 +33,7 @@ mod words;
 pub use air::{air_sheets, by_volume};
 pub use case::{case_markdown, money_words, payback_words, since_markdown, turn_words};
 pub use csv::{result_csv, text_cell};
-pub use energy::{Sheet, dense_words, energy_sheets};
+pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
 pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
