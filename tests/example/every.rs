@@ -64,6 +64,15 @@ fn warnings_are_those_that_are_meant() {
         // An extractor of 150 L is no laboratory flask.
         "botanical-pilot: workloads[0].routes[0].steps[0].charge",
         "botanical-pilot: workloads[0].routes[0].steps[0].heater",
+        // Plants are larger than the laboratories for which the usual ranges are.
+        "decaffeination: workloads[0].routes[0].steps[1].power",
+        "decaffeination: workloads[0].routes[1].steps[1].power",
+        "decaffeination: workloads[0].routes[2].steps[1].charge",
+        "textile-dyeing: workloads[0].routes[0].steps[0].power",
+        "textile-dyeing: workloads[0].routes[0].steps[4].charge",
+        "garment-cleaning: workloads[0].routes[0].steps[1].power",
+        "implant-cleaning: workloads[0].routes[0].steps[0].charge",
+        "timber-preservation: workloads[0].routes[0].steps[0].power",
     ];
     assert_eq!(found, meant);
 }

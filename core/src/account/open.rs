@@ -169,7 +169,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     let mut draft = Draft::default();
     mass::draw_up(&mut draft, route, site, &desk);
     waste::draw_up(&mut draft, route, site, &desk);
-    let dense = energy::dense(route, Draw(&x));
+    let dense = energy::dense(route, Draw(&x), &trace);
     carbon_dioxide::draw_up(&mut draft, route, site, &desk, &dense);
     let refusals = metric::draw_up(&mut draft, route, site, &desk);
     energy::draw_up(&mut draft, &desk);

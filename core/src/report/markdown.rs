@@ -175,7 +175,7 @@ fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
     );
     for s in &streams {
         let name = site.streams.get(s.stream).map_or("", |u| u.name.as_str());
-        let transport = s.transport().map_or("", |v| v.why.as_str());
+        let transport = s.transport().map_or("", |v| &*v.why);
         let cells = [name, s.standing().words(), &s.codes().join(", "), &s.open().join(", "), transport];
         let _ = writeln!(out, "| {} |", cells.map(escaped).join(" | "));
     }

@@ -21,6 +21,7 @@ mod scale;
 mod shape;
 #[cfg(test)]
 mod tests;
+mod year;
 
 pub use air_course::air_course;
 pub use books::Per;
@@ -30,6 +31,7 @@ pub use draw::{Node, plate, to_html, to_svg_text};
 pub use flow::flow;
 pub use mass_by_place::mass_by_place;
 pub use shape::{Anchor, Hatch, Shape, Trail};
+pub use year::{load, stock};
 
 /// A picture.
 #[derive(Clone, Debug, PartialEq)]

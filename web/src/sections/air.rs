@@ -2,7 +2,7 @@
 //! lets go.
 use super::plates::What;
 use super::{Section, View, When};
-use crate::parts::plain;
+use crate::parts::words;
 use thimbleworth::report::air_sheets;
 use yew::prelude::*;
 
@@ -33,7 +33,12 @@ fn draw(view: &View) -> Html {
                                 <h4>{ &route.name }</h4>
                                 if nothing { <p class="hint">{ "Nothing of this route reaches the room." }</p> }
                                 { view.plate(w, What::Air(r)) }
-                                { for sheets.iter().enumerate().map(|(i, sheet)| plain(&format!("air-{w}-{r}-{i}"), sheet)) }
+                                { for sheets.into_iter().enumerate().map(|(i, sheet)| html! {
+                                    <>
+                                        { words(format!("air-{w}-{r}-{i}"), &sheet.title, &sheet.head, &sheet.rows) }
+                                        { for sheet.notes.into_iter().map(|note| html! { <p class="hint">{ note }</p> }) }
+                                    </>
+                                }) }
                             </>
                         })
                     }) }

@@ -4,6 +4,7 @@ mod air;
 mod assumptions;
 mod carbon_dioxide;
 mod comparison;
+mod desk;
 mod finding;
 mod hazard;
 mod leaf;
@@ -11,6 +12,7 @@ mod places;
 mod plates;
 mod question;
 mod routes;
+mod site;
 mod view;
 mod waste;
 
@@ -26,6 +28,8 @@ static SECTIONS: &[&Section] = &[
     &finding::SECTION,
     &places::SECTION,
     &waste::SECTION,
+    &desk::SECTION,
+    &site::SECTION,
     &carbon_dioxide::SECTION,
     &air::SECTION,
     &hazard::SECTION,
