@@ -107,12 +107,17 @@ impl Chance {
             electricity: self.maybe(|c| Electricity {
                 climate: c.maybe(Self::text),
                 price: c.maybe(Self::text),
+                year: c.maybe(Self::field),
+                boundary: c.maybe(Self::text),
                 source: c.maybe(Self::text),
             }),
-            room: self.maybe(|c| Room {
-                volume: c.maybe(Self::text),
-                air_changes: c.maybe(Self::text),
-                hood_capture: c.maybe(Self::text),
+            room: self.maybe(|c| {
+                let mut room = Room::default();
+                for key in ["volume", "air_changes", "hood_capture", "setback", "low_spaces", "cylinder"] {
+                    let text = c.maybe(Self::text);
+                    assert!(room.set(key, text));
+                }
+                room
             }),
             streams: self.list(3, |c| Stream {
                 name: c.text(),
@@ -140,6 +145,9 @@ impl Chance {
             pick_up_every: self.maybe(Self::text),
             far_receiver: self.maybe(Self::yes),
             deviations: self.maybe(Self::text),
+            money: self.fields(),
+            hours: self.fields(),
+            climate: self.fields(),
         }
     }
 
@@ -160,6 +168,7 @@ impl Chance {
                 feed: c.maybe(Self::rows),
                 recovery: c.maybe(Self::text),
                 equivalence: c.maybe(Self::text),
+                permission: c.maybe(Self::text),
                 ph: c.maybe(Self::text),
                 steps: c.list(4, |c| Step {
                     technique: c.text(),
@@ -169,6 +178,8 @@ impl Chance {
                     note: c.maybe(Self::text),
                 }),
                 ends: c.rows(),
+                time: c.fields(),
+                money: c.fields(),
             }),
         }
     }

@@ -1,9 +1,10 @@
 //! From a plan to the account of every route.
 
+use super::air::{self, AirAccount};
 use super::figure::{Draft, Figure, evaluate};
 use super::hazard::HazardAccount;
 use super::metric::Refusal;
-use super::{carbon_dioxide, energy, hazard, mass, metric, waste};
+use super::{carbon_dioxide, climate, cost, energy, hazard, mass, metric, time, waste};
 use crate::chance::Draw;
 use crate::ledger::{Direction, Halt, Material, Place, RuleIx, StepIx, Trace};
 use crate::plan::{Plan, Problem, Severity, below, open};
@@ -49,8 +50,12 @@ pub struct RouteAccount {
     pub cautions: Vec<&'static Caution>,
     /// Steps with dense CO2 as their states are, by their index in the route; central values.
     pub dense: Vec<(usize, DenseCo2)>,
+    /// The air of the room, where the site gives one.
+    pub air: Option<AirAccount>,
     /// Product made in a year; kg.
     pub product_kg: f64,
+    /// What cost and climate leave open: what it is, and the path at which the plan could say it.
+    pub open: Vec<(String, String)>,
 }
 
 impl Account {
@@ -164,12 +169,16 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     let mut draft = Draft::default();
     mass::draw_up(&mut draft, route, site, &desk);
     waste::draw_up(&mut draft, route, site, &desk);
-    let dense = energy::dense(route, Draw(&x));
+    let dense = energy::dense(route, Draw(&x), &trace);
     carbon_dioxide::draw_up(&mut draft, route, site, &desk, &dense);
     let refusals = metric::draw_up(&mut draft, route, site, &desk);
     energy::draw_up(&mut draft, &desk);
+    let hours = time::draw_up(&mut draft, route);
+    let mut open = cost::draw_up(&mut draft, route, site, &desk, hours);
+    open.extend(climate::draw_up(&mut draft, route, site, &desk));
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
+    left_open(route, &open, problems);
     let figures = draft.kept_to(&trace, &desk.cells);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
@@ -183,6 +192,10 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
             cautions.push(caution);
         }
     }
+    let air = air::air(route, site, &trace);
+    if let Some(air) = &air {
+        air::tell(air, &route.name, problems);
+    }
     Some(RouteAccount {
         runs: desk.runs,
         closure: mass::closure(route, site, &desk),
@@ -193,8 +206,26 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         refusals,
         cautions,
         dense,
+        air,
         product_kg,
+        open,
     })
+}
+
+/// What cost and climate leave open, because the plan does not say it: each is told once, whatever the number of routes.
+fn left_open(route: &RouteProgram, open: &[(String, String)], problems: &mut Vec<Problem>) {
+    for (what, path) in open {
+        let found = format!("{what} is not known, so neither is what rests on it");
+        if problems.iter().any(|p| p.path == *path && p.found == found) {
+            continue;
+        }
+        let need = if path.starts_with("site.") {
+            "its figure, with its limits".to_owned()
+        } else {
+            format!("its figure for {}", route.name)
+        };
+        problems.push(Problem::warning(path.clone(), found, need));
+    }
 }
 
 fn doubted(route: &RouteProgram, trace: &Trace, problems: &mut Vec<Problem>) {

@@ -132,12 +132,16 @@ fn beside(
 /// Whether a route that has no such figure has none of what it counts.
 ///
 /// Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
-/// stated, nor the electricity of a route that leaves a power out.
+/// stated, nor the electricity of a route that leaves a power out, nor time, cost and climate of which the plan says too
+/// little.
 #[must_use]
 pub fn absent_is_zero(route: &RouteProgram, figure: &Figure) -> bool {
     match figure.id.as_str() {
         "energy.electricity" => route.uncounted.is_empty(),
-        _ => figure.measure.extensive() && figure.group != Group::Energy,
+        _ => {
+            figure.measure.extensive()
+                && !matches!(figure.group, Group::Energy | Group::Time | Group::Cost | Group::Climate)
+        }
     }
 }
 

@@ -49,7 +49,7 @@ pub struct Site {
     pub drain_permit: Option<String>,
     /// Kept for the accounts of energy, climate and cost.
     pub electricity: Option<Electricity>,
-    /// Kept for the account of room air.
+    /// The room, for the account of its air.
     pub room: Option<Room>,
     /// The waste streams that the site keeps apart.
     pub streams: Vec<Stream>,
@@ -65,6 +65,12 @@ pub struct Site {
     pub far_receiver: Option<bool>,
     /// Where state or nation deviate from the rules read.
     pub deviations: Option<String>,
+    /// Currency, prices of materials, disposal, labour and water, discount rate and years, in the order written.
+    pub money: Vec<(String, Field)>,
+    /// Hours in which instruments can run, in the order written.
+    pub hours: Vec<(String, Field)>,
+    /// Edition of warming potentials, origin of CO2, what is burnt, factors of production, in the order written.
+    pub climate: Vec<(String, Field)>,
 }
 
 /// Hazardous waste that a site makes beside the work of the plan.
@@ -87,19 +93,51 @@ pub struct Electricity {
     pub climate: Option<String>,
     /// Price per energy.
     pub price: Option<String>,
+    /// The year for which the climate figure holds.
+    pub year: Option<Field>,
+    /// What the climate figure counts.
+    pub boundary: Option<String>,
     /// Where these figures come from.
     pub source: Option<String>,
 }
 
-/// The room in which the work happens.
+/// The room in which the work happens: what the plan gives, as text, by key.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
 pub struct Room {
-    /// Volume of air.
-    pub volume: Option<String>,
-    /// Air changes per time.
-    pub air_changes: Option<String>,
-    /// Share of a release at the hood that the hood captures.
-    pub hood_capture: Option<String>,
+    given: Vec<(&'static str, String)>,
+}
+
+impl Room {
+    /// What the plan gives under a key.
+    #[must_use]
+    pub fn get(&self, key: &str) -> Option<&str> {
+        self.given.iter().find(|(k, _)| *k == key).map(|(_, text)| text.as_str())
+    }
+
+    /// Gives a text under a key, or takes it away; false where the room has no such key. The keys keep their order.
+    ///
+    /// ```
+    /// use thimbleworth::plan::Room;
+    /// let mut room = Room::default();
+    /// assert!(room.set("air_changes", Some("8 /h".to_owned())) && room.set("volume", Some("140 m3".to_owned())));
+    /// assert_eq!(room.given().next(), Some(("volume", "140 m3")));
+    /// assert!(!room.set("windows", None));
+    /// ```
+    pub fn set(&mut self, key: &str, text: Option<String>) -> bool {
+        let rank = |key: &str| super::keys::ROOM.keys.iter().position(|k| k.name == key);
+        let Some(at) = rank(key) else { return false };
+        self.given.retain(|(k, _)| *k != key);
+        if let Some(text) = text {
+            let place = self.given.iter().position(|(k, _)| rank(k) > Some(at)).unwrap_or(self.given.len());
+            self.given.insert(place, (super::keys::ROOM.keys[at].name, text));
+        }
+        true
+    }
+
+    /// All that is given, in the order of the keys.
+    pub fn given(&self) -> impl Iterator<Item = (&'static str, &str)> {
+        self.given.iter().map(|(k, text)| (*k, text.as_str()))
+    }
 }
 
 /// A waste stream that the site keeps apart.
@@ -180,12 +218,18 @@ pub struct Route {
     pub recovery: Option<String>,
     /// On what the claim of equal work rests.
     pub equivalence: Option<String>,
+    /// By which method, permit or agreement results of this route may be reported.
+    pub permission: Option<String>,
     /// The lowest and highest pH on the way, `2 to 7`; for the pH rule of the NEMI criteria.
     pub ph: Option<String>,
     /// The steps in order.
     pub steps: Vec<Step>,
     /// Where what is left on the bench goes: `liquor`, `second phase`, `marc`, `trap`, `vapour` to a place.
     pub ends: Vec<(String, String)>,
+    /// How long a run takes, how many run at once, how long people attend, in the order written.
+    pub time: Vec<(String, Field)>,
+    /// Instrument, validation, service and the like, in the order written.
+    pub money: Vec<(String, Field)>,
 }
 
 /// One step of a route.

@@ -55,6 +55,13 @@ impl Entries {
         }
     }
 
+    fn fields(&mut self, key: &str, fields: &[(String, Field)]) {
+        if !fields.is_empty() {
+            let inner = fields.iter().map(|(key, value)| (key.clone(), field(value)));
+            self.put(key, Node::Map(inner.collect()));
+        }
+    }
+
     fn list<T>(&mut self, key: &str, items: &[T], item: fn(&T) -> Node) {
         self.put(key, Node::List(items.iter().map(item).collect()));
     }
@@ -66,7 +73,7 @@ impl From<Entries> for Node {
     }
 }
 
-fn tree(plan: &Plan) -> Node {
+pub(super) fn tree(plan: &Plan) -> Node {
     let mut out = Entries::default();
     out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
     out.text("title", &plan.title);
@@ -96,14 +103,16 @@ fn site(site: &Site) -> Node {
         let mut inner = Entries::default();
         inner.optional("climate", electricity.climate.as_ref());
         inner.optional("price", electricity.price.as_ref());
+        inner.field("year", electricity.year.as_ref());
+        inner.optional("boundary", electricity.boundary.as_ref());
         inner.optional("source", electricity.source.as_ref());
         out.put("electricity", inner.into());
     }
     if let Some(room) = &site.room {
         let mut inner = Entries::default();
-        inner.optional("volume", room.volume.as_ref());
-        inner.optional("air_changes", room.air_changes.as_ref());
-        inner.optional("hood_capture", room.hood_capture.as_ref());
+        for (key, text) in room.given() {
+            inner.text(key, text);
+        }
         out.put("room", inner.into());
     }
     out.list("streams", &site.streams, stream);
@@ -115,6 +124,9 @@ fn site(site: &Site) -> Node {
     out.optional("pick_up_every", site.pick_up_every.as_ref());
     out.yes_no("far_receiver", site.far_receiver);
     out.optional("deviations", site.deviations.as_ref());
+    out.fields("money", &site.money);
+    out.fields("hours", &site.hours);
+    out.fields("climate", &site.climate);
     out.into()
 }
 
@@ -173,11 +185,14 @@ fn route(route: &Route) -> Node {
     }
     out.optional("recovery", route.recovery.as_ref());
     out.optional("equivalence", route.equivalence.as_ref());
+    out.optional("permission", route.permission.as_ref());
     out.optional("ph", route.ph.as_ref());
     out.list("steps", &route.steps, step);
     if !route.ends.is_empty() {
         out.put("ends", rows(&route.ends));
     }
+    out.fields("time", &route.time);
+    out.fields("money", &route.money);
     out.into()
 }
 
@@ -211,9 +226,20 @@ fn rows(list: &[(String, String)]) -> Node {
 
 #[cfg(test)]
 mod tests {
-    use super::super::keys::{Object, PLAN, Shape};
+    use super::super::keys::{CLIMATE, HOURS, MONEY, Object, PLAN, ROUTE_MONEY, Shape, TIME};
     use super::super::{Electricity, OwnMaterial, Room, open};
     use super::*;
+
+    /// A field at every key of an object that is kept as it is written.
+    fn every(table: &Object) -> Vec<(String, Field)> {
+        let value = |shape| match shape {
+            Shape::Rows => Field::Rows(vec![("a".into(), "b".into())]),
+            Shape::YesNo => Field::YesNo(true),
+            Shape::Word(words) => Field::Text((*words.first().unwrap()).into()),
+            _ => Field::Text("c".into()),
+        };
+        table.keys.iter().map(|key| (key.name.to_owned(), value(key.shape))).collect()
+    }
 
     /// A plan in which every key is used.
     fn full() -> Plan {
@@ -231,9 +257,12 @@ mod tests {
             feed: Some(pair("soil", "3 g")),
             recovery: some("94 %"),
             equivalence: some("paired"),
+            permission: some("p"),
             ph: some("2 to 7"),
             steps: vec![step],
             ends: pair("liquor", "flammable"),
+            time: every(&TIME),
+            money: every(&ROUTE_MONEY),
         };
         Plan {
             title: "t".into(),
@@ -245,8 +274,20 @@ mod tests {
                 as_of: some("2026-12-01"),
                 bench_temperature: some("20 °C"),
                 drain_permit: some("p"),
-                electricity: Some(Electricity { climate: some("c"), price: some("p"), source: some("s") }),
-                room: Some(Room { volume: some("v"), air_changes: some("a"), hood_capture: some("h") }),
+                electricity: Some(Electricity {
+                    climate: some("c"),
+                    price: some("p"),
+                    year: Some(Field::Number("2025".into())),
+                    boundary: some("b"),
+                    source: some("s"),
+                }),
+                room: Some({
+                    let mut room = Room::default();
+                    for key in ["store", "volume", "air_changes", "hood_capture"] {
+                        assert!(room.set(key, Some(key.to_owned())));
+                    }
+                    room
+                }),
                 streams: vec![Stream {
                     name: "flammable".into(),
                     holds: some("liquid"),
@@ -273,6 +314,9 @@ mod tests {
                 pick_up_every: some("60 d"),
                 far_receiver: Some(true),
                 deviations: some("d"),
+                money: every(&MONEY),
+                hours: every(&HOURS),
+                climate: every(&CLIMATE),
             },
             materials: vec![OwnMaterial { name: "m".into(), fields: vec![("x".into(), Field::YesNo(true))] }],
             workloads: vec![Workload {

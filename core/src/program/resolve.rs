@@ -11,7 +11,7 @@ use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
 use crate::order::Index;
-use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
+use crate::plan::{Field, Plan, Problem, Route, Severity, Site, Stream, Workload, below, nearest};
 use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
 use crate::step::{TECHNIQUES, technique};
@@ -62,7 +62,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
             let mut builder = RouteBuilder::new(&mut book, &mut amounts, &site, permit, &mut problems);
             let at = format!("{path}.routes[{j}]");
             builder.name_paths((&path, &workload.name), (&at, &route.name));
-            routes.push(builder.build(workload, route, &path, &at));
+            routes.push(builder.build(workload, route, &plan.site, &path, &at));
         }
         let present = workload.routes.iter().position(|r| r.name == workload.present).unwrap_or(0);
         let months = waste::months(workload.months.as_deref(), &below(&path, "months"), &mut problems);
@@ -127,14 +127,8 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
     if let Some(e) = &doc.electricity {
         check(e.climate.as_deref(), Kind::ClimatePerEnergy, "site.electricity.climate", problems);
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
-        problems.push(Problem::note("site.electricity", "kept; no figure of this version uses it yet"));
     }
-    if let Some(r) = &doc.room {
-        check(r.volume.as_deref(), Kind::Volume, "site.room.volume", problems);
-        check(r.air_changes.as_deref(), Kind::Frequency, "site.room.air_changes", problems);
-        check(r.hood_capture.as_deref(), Kind::Fraction, "site.room.hood_capture", problems);
-        problems.push(Problem::note("site.room", "kept; no figure of this version uses it yet"));
-    }
+    let room = doc.room.as_ref().and_then(|r| super::room::room(r, problems));
     if doc.streams.len() > MOST_STREAMS {
         problems.push(Problem::error(
             "site.streams",
@@ -149,7 +143,15 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         .map(|(i, s)| stream(s, &format!("site.streams[{i}]"), problems))
         .collect();
     let waste = waste::site(doc, problems);
-    SiteUse { name: doc.name.clone(), rules, as_of: doc.as_of.clone(), bench_temperature_k, streams, waste }
+    SiteUse {
+        name: doc.name.clone(),
+        rules,
+        as_of: doc.as_of.clone(),
+        bench_temperature_k,
+        streams,
+        waste,
+        room,
+    }
 }
 
 fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {
@@ -499,7 +501,14 @@ impl<'p> RouteBuilder<'p> {
         }
     }
 
-    fn build(mut self, workload: &'p Workload, doc: &'p Route, above: &str, path: &str) -> RouteProgram {
+    fn build(
+        mut self,
+        workload: &'p Workload,
+        doc: &'p Route,
+        site: &Site,
+        above: &str,
+        path: &str,
+    ) -> RouteProgram {
         let work = self.work(workload, above);
         let feed = self.feed(workload, doc, above, path);
         self.fed = feed.iter().map(|(m, _)| *m).collect();
@@ -564,6 +573,9 @@ impl<'p> RouteBuilder<'p> {
                 "recovery, and equivalence with what the claim rests on",
             ));
         }
+        let time = self.time(site, doc, path);
+        let money = self.money(site, doc, path);
+        let climate = self.climate(site);
         let natures = self
             .materials
             .iter()
@@ -586,6 +598,10 @@ impl<'p> RouteBuilder<'p> {
             ends,
             recovery,
             equivalence: doc.equivalence.clone(),
+            permission: doc.permission.clone(),
+            time,
+            money,
+            climate,
             ph,
             assumptions: self.assumptions,
             uncounted: self.uncounted,
@@ -593,7 +609,12 @@ impl<'p> RouteBuilder<'p> {
         }
     }
 
-    fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
+    /// The name under which the book shows a material.
+    pub(super) fn known_name(&mut self, name: &str) -> Result<String, (String, String)> {
+        self.book.find(name).map(|found| found.name)
+    }
+
+    pub(super) fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
         match self.amounts.read(text?, kind) {
             Ok(amount) => Some(self.input(path.to_owned(), &amount, Origin::Entered)),
             Err(e) => {

@@ -1,5 +1,6 @@
 //! The result document.
 
+mod air;
 mod energy;
 mod figure;
 mod hazard;
@@ -55,14 +56,15 @@ pub const RESULT_VERSION: u64 = 1;
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
 /// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `seconds_per_run` (how long it takes in one run, for what goes to air where the step says so, else `null`), `measured` |
 /// | `utilities` | zeros left out: electricity as it counts, and by stated power, physics and meter beside it, heat and cooling of streams (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `air` | `null` without a room; else `gases`: what each step lets into the room on a day of work, the time course `as_ventilated` and `on_setback` (mean of the first 8 h, worst 8 h and 15 min, highest, every quarter of an hour), `limits` that hold on the plan's date with the verdict, `other_limits` with the reason, the `sensor` and which ones are `blind`; and `sudden`: a cylinder that lets go, at once and mixed, never averaged |
 /// | `energy` | `steps`: what each step takes in a year, electricity with the face that `counts` and all three beside it, heat, cooling and work of streams, cooling water; `co2_circuits`: for each step with dense CO2 its `states` (enthalpy and entropy 0 for the ideal gas at 298.15 K and 1 atm; `null` where the equation has no state) and the `changes` between them in J/kg, what the let-down leaves in the vessel, the pressure of liquid `shut_in` between valves at 25 °C, and the flow as `metered` and as the same volume would be elsewhere |
 /// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
 /// `formula`, `source`, `standing`, and its values under keys that name the unit: `kg`, `l` (litres), `kwh`, `containers`
-/// or `kg_score` (mass times a score) with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
+/// `kg_score` (mass times a score), `h`, `money` (in the `currency` of the site) or `kg_co2e` with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
 /// (`null` without a product). A month is a twelfth of the year. Containers are whole in a year, and the other values are
-/// shares of that number. A ratio has only `ratio`. All are central values; gross and net stand as figures of their own.
+/// shares of that number. A ratio has only `ratio`, a number of things `count`, money paid once `money_once`. All are central values; gross and net stand as figures of their own.
 ///
 /// **Comparison.** `comparison` is `null` where the present route has no account, else `present` and `routes`, one for
 /// each other route with an account: `name`, `finding`, `better`, `worse`, `doubts`, and `differences`: `id`, `title`,
@@ -198,6 +200,7 @@ fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account:
         }
     });
     json.object("energy", |json| energy::energy(json, route, account));
+    air::air(json, route, account);
     inputs(json, &mut route.inputs.iter());
 }
 
@@ -223,11 +226,11 @@ mod tests {
                     assert_eq!(route["accounted"], true, "{}", example.key);
                     for figure in route["figures"].as_array().unwrap() {
                         let keys: Vec<&String> = figure.as_object().unwrap().keys().collect();
-                        if figure.get("ratio").is_some() {
+                        if ["ratio", "count", "money_once"].iter().any(|k| figure.get(k).is_some()) {
                             assert_eq!(keys.len(), 8, "{keys:?}");
                             continue;
                         }
-                        let unit = ["kg", "l", "kwh", "containers", "kg_score"]
+                        let unit = ["kg", "l", "kwh", "containers", "kg_score", "h", "money", "kg_co2e"]
                             .into_iter()
                             .find(|u| figure.get(format!("{u}_per_year")).is_some())
                             .unwrap();

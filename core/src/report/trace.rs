@@ -10,7 +10,7 @@ use super::result::{figure, inputs, step_and_technique};
 use super::row::{key_unit, written};
 use super::words::si_unit;
 use crate::account::{
-    Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
+    Account, Contribution, Figure, Group, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
 };
 use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
@@ -92,14 +92,17 @@ pub fn trace<'a>(
     };
     let open = |index: usize| opened(route, &program.site, of_route, index);
     let whole = open(index).ok_or(TraceError::NoAccount)?;
-    let parts: Vec<_> = match whole.figure.how {
-        How::Ratio { over, under } => vec![("over", open(over)), ("under", open(under))],
-        How::Containers { of, .. } => vec![("volume", open(of))],
-        How::Times { of, .. } => vec![("of", open(of))],
-        How::Sum(_) | How::Spent(_) => Vec::new(),
+    let priced = matches!(whole.figure.group, Group::Time | Group::Cost | Group::Climate);
+    let names: &[&str] = match whole.figure.how {
+        How::Ratio { .. } => &["over", "under"],
+        How::Containers { .. } => &["volume"],
+        How::Times { .. } | How::Whole(_) => &["of"],
+        How::Lines(_) | How::Sum(_) | How::Spent(_) => &[],
     };
-    let parts: Vec<_> = parts.into_iter().filter_map(|(name, part)| Some((name, part?))).collect();
-    let inputs = inputs_behind(route, std::iter::once(&whole).chain(parts.iter().map(|p| &p.1)));
+    let names = names.iter().copied().chain(std::iter::repeat("part"));
+    let parts = names.zip(whole.figure.how.rests_on().into_iter().map(open));
+    let parts: Vec<_> = parts.filter_map(|(name, part)| Some((name, part?))).collect();
+    let inputs = inputs_behind(route, priced, std::iter::once(&whole).chain(parts.iter().map(|p| &p.1)));
     Ok(TracedFigure { workload: &work.name, route: &route.name, opened: whole, parts, inputs })
 }
 
@@ -203,6 +206,7 @@ fn entry<'a>(
 /// the last that made an entry.
 fn inputs_behind<'a, 'o>(
     route: &'a RouteProgram,
+    priced: bool,
     parts: impl Iterator<Item = &'o Opened<'a>>,
 ) -> Vec<&'a Input>
 where
@@ -222,12 +226,20 @@ where
     let steps = below(&route.path, "steps") + "[";
     let step_of = |i: &Input| i.identity.strip_prefix(&steps)?.split_once(']')?.0.parse::<usize>().ok();
     let later = |i: &Input| step_of(i).is_some_and(|step| step >= after);
-    route.inputs.iter().filter(|i| !later(i)).collect()
+    // Prices, hours and factors of climate stand behind figures of theirs alone.
+    let apart = [below(&route.path, "money"), below(&route.path, "time")];
+    let own = |i: &Input| {
+        ["site.money", "site.hours", "site.climate", "site.electricity", apart[0].as_str(), apart[1].as_str()]
+            .iter()
+            .any(|start| i.identity.starts_with(start))
+    };
+    route.inputs.iter().filter(|i| !later(i) && (priced || !own(i))).collect()
 }
 
 impl TracedFigure<'_> {
     /// The figure as JSON: `workload`, `route`, `figure` (as in the result document), `entries` (largest first), `over`
-    /// and `under` for a ratio, `volume` for containers (each with its own `figure` and `entries`), `inputs`.
+    /// and `under` for a ratio, `volume` for containers, `of` for whole
+    /// things and multiples, `part` for each figure in a sum of lines (each with its own `figure` and `entries`), `inputs`.
     ///
     /// An entry has `what`, `step`, `technique`, `rule`, `equation`, `source`, `standing`, `working` (symbol, `value_si`,
     /// `unit`), for a posting `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year` and `measured`, for a utility what a run takes and
@@ -331,6 +343,8 @@ mod tests {
                                 assert!((of_route.values[of] * factor - value).abs() < 1e-9);
                                 continue;
                             }
+                            // What is behind a line is in the tests of cost.
+                            How::Lines(_) | How::Whole(_) => continue,
                             How::Ratio { .. } => {
                                 assert_eq!(traced.parts.len(), 2);
                                 assert!(
@@ -368,7 +382,9 @@ mod tests {
         assert!(text.contains("6 ± 2 g"), "{text}");
         let json: Value = serde_json::from_str(&traced.json()).unwrap();
         let entries = json["entries"].as_array().unwrap();
-        assert!(entries.iter().any(|e| e["measured"] == true && e["equation"] == "mᵢ = s mᵢ(liquor)"));
+        let loss =
+            |e: &Value| e["equation"].as_str().is_some_and(|text| text.starts_with("mᵢ = s mᵢ(liquor);"));
+        assert!(entries.iter().any(|e| e["measured"] == true && loss(e)));
     }
 
     #[test]

@@ -6,7 +6,7 @@ use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
 use crate::order::Index;
 use crate::plan::Problem;
 use crate::program::{Program, WorkloadProgram};
-use crate::quantity::{Kind, show, significant};
+use crate::quantity::{Kind, significant};
 use crate::source::{Source, Standing};
 
 /// The SI unit in which an amount of this kind is held.
@@ -101,13 +101,7 @@ fn sources<'s>(s: &'s Substance, keys: &mut Index<'s>) {
 
 /// An amount for people: four significant digits and a unit that suits its size.
 pub(super) fn amount(value_si: f64, measure: Measure) -> String {
-    match measure {
-        Measure::Mass => show(value_si, Kind::Mass),
-        Measure::Volume => show(value_si, Kind::Volume),
-        Measure::Energy => show(value_si, Kind::Energy),
-        Measure::WeightedMass => format!("{}·score", show(value_si, Kind::Mass)),
-        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
-    }
+    measure.shown(value_si)
 }
 
 /// How much work there is, in words.

@@ -32,6 +32,9 @@ pub(crate) struct Props {
     pub(crate) show_all: bool,
     #[prop_or_default]
     pub(crate) optional: bool,
+    /// What a row names.
+    #[prop_or(AttrValue::Static("Material"))]
+    pub(crate) names: AttrValue,
     pub(crate) rows: Vec<(String, String)>,
     pub(crate) edit: Callback<Edit>,
 }
@@ -133,7 +136,7 @@ pub(crate) fn Rows(props: &Props) -> Html {
                     <table class="inputs">
                         <thead>
                             <tr>
-                                <th scope="col">{ "Material" }</th>
+                                <th scope="col">{ &props.names }</th>
                                 <th scope="col">{ format!("{} ({})", props.amount, props.units) }</th>
                                 <th><span class="unseen">{ "Remove" }</span></th>
                             </tr>
@@ -146,8 +149,8 @@ pub(crate) fn Rows(props: &Props) -> Html {
                                 html! {
                                     <tr key={i}>
                                         <td>
-                                            <input id={row} type="text" autocomplete="off" spellcheck="false" list="catalogue"
-                                                aria-label={format!("{}, row {number}, material", props.label)}
+                                            <input id={row} type="text" autocomplete="off" spellcheck="false" list={(props.names == "Material").then_some("catalogue")}
+                                                aria-label={format!("{}, row {number}, {}", props.label, props.names.to_lowercase())}
                                                 value={name.clone()} oninput={typed(i, false)} onblur={&onblur} />
                                         </td>
                                         <td>
@@ -169,7 +172,7 @@ pub(crate) fn Rows(props: &Props) -> Html {
                     </table>
                 }
                 <button type="button" class="small" id={format!("{id}-add")} onclick={add}
-                    aria-label={format!("Add a material to {}", props.label)}>{ "Add a material" }</button>
+                    aria-label={format!("Add a {} to {}", props.names.to_lowercase(), props.label)}>{ format!("Add a {}", props.names.to_lowercase()) }</button>
             </div>
             <div class="beside">
                 { message(note, shown) }

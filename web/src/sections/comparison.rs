@@ -60,7 +60,9 @@ fn decides(figure: &Figure) -> bool {
         Group::Mass => figure.id == "mass.in" || figure.id == "mass.bought" || figure.id == "air.solvents",
         Group::Waste => !figure.id.ends_with(".volume"),
         Group::CarbonDioxide => figure.id == "co2.vented" || figure.id == "co2.make_up",
-        Group::Metric | Group::Hazard | Group::Energy => true,
+        Group::Metric | Group::Hazard | Group::Energy | Group::Climate => true,
+        Group::Time => figure.id == "time.attended" || figure.id == "time.instruments",
+        Group::Cost => figure.id == "cost.year" || figure.id == "cost.known" || figure.id == "cost.once",
     }
 }
 

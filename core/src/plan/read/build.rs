@@ -4,7 +4,7 @@
 use super::super::document::{
     Electricity, Field, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
 };
-use super::super::keys::STEP;
+use super::super::keys::{ROOM, STEP};
 use super::super::tree::Node;
 
 /// The value of a key; of a key written twice the first.
@@ -51,6 +51,12 @@ fn field(node: &Node) -> Field {
     }
 }
 
+/// The fields of an object that is kept as it is written.
+fn fields(node: &Node, key: &str) -> Vec<(String, Field)> {
+    let inner = get(node, key).map(entries).unwrap_or_default();
+    inner.iter().map(|(key, value)| (key.clone(), field(value))).collect()
+}
+
 fn rows(node: &Node) -> Vec<(String, String)> {
     entries(node).iter().map(|(name, value)| (name.clone(), plain(value).unwrap_or_default())).collect()
 }
@@ -83,12 +89,16 @@ fn site(node: &Node) -> Site {
         electricity: get(node, "electricity").map(|node| Electricity {
             climate: text(node, "climate"),
             price: text(node, "price"),
+            year: get(node, "year").map(field),
+            boundary: text(node, "boundary"),
             source: text(node, "source"),
         }),
-        room: get(node, "room").map(|node| Room {
-            volume: text(node, "volume"),
-            air_changes: text(node, "air_changes"),
-            hood_capture: text(node, "hood_capture"),
+        room: get(node, "room").map(|node| {
+            let mut room = Room::default();
+            for key in ROOM.keys {
+                room.set(key.name, text(node, key.name));
+            }
+            room
         }),
         streams: list(node, "streams", stream),
         activity: text(node, "activity"),
@@ -97,6 +107,9 @@ fn site(node: &Node) -> Site {
         pick_up_every: text(node, "pick_up_every"),
         far_receiver: yes_no(node, "far_receiver"),
         deviations: text(node, "deviations"),
+        money: fields(node, "money"),
+        hours: fields(node, "hours"),
+        climate: fields(node, "climate"),
     }
 }
 
@@ -160,9 +173,12 @@ fn route(node: &Node) -> Route {
         feed: get(node, "feed").map(rows),
         recovery: text(node, "recovery"),
         equivalence: text(node, "equivalence"),
+        permission: text(node, "permission"),
         ph: text(node, "ph"),
         steps: list(node, "steps", step),
         ends: get(node, "ends").map(rows).unwrap_or_default(),
+        time: fields(node, "time"),
+        money: fields(node, "money"),
     }
 }
 
