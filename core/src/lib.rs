@@ -20,6 +20,7 @@ pub mod example;
 pub mod hazard;
 pub mod heat;
 pub mod ledger;
+pub mod log;
 pub mod material;
 pub mod metric;
 pub mod mixture;

@@ -57,13 +57,21 @@ impl Catalogue {
     pub fn find(&self, name: &str) -> Result<&Substance, UnknownMaterial> {
         let short = name.len() <= LONGEST_NAME;
         let key = if short { fold(name) } else { String::new() };
-        let found = self.index.binary_search_by(|(entry, _)| entry.as_str().cmp(&key)).ok();
-        let substance =
-            found.and_then(|at| self.index.get(at)).and_then(|&(_, place)| self.substances.get(place));
-        substance.ok_or_else(|| UnknownMaterial {
+        self.at(&key).ok_or_else(|| UnknownMaterial {
             asked: name.chars().take(LONGEST_NAME).collect(),
             suggestions: if key.is_empty() { Vec::new() } else { self.suggest(&key) },
         })
+    }
+
+    /// As [`Catalogue::find`], without looking for names that come close: for long lists.
+    #[must_use]
+    pub fn known(&self, name: &str) -> Option<&Substance> {
+        if name.len() <= LONGEST_NAME { self.at(&fold(name)) } else { None }
+    }
+
+    fn at(&self, key: &str) -> Option<&Substance> {
+        let found = self.index.binary_search_by(|(entry, _)| entry.as_str().cmp(key)).ok()?;
+        self.substances.get(self.index.get(found)?.1)
     }
 
     /// Every material, in the order of the tables.

@@ -60,6 +60,23 @@ impl MaterialBook {
         book
     }
 
+    /// As [`MaterialBook::find`], without suggestions, and by the CAS number of the plan's own materials too: for long
+    /// lists of names.
+    #[must_use]
+    pub fn known(&self, name: &str) -> Option<Arc<Substance>> {
+        if let Some(own) = self.own.get(name) {
+            return Some(Arc::clone(own));
+        }
+        if let Some(known) = catalogue().known(name) {
+            let own = self.own.get(&*known.name);
+            return Some(own.map_or_else(|| Arc::new(known.clone()), Arc::clone));
+        }
+        let same = |own: &&Arc<Substance>| {
+            own.name.eq_ignore_ascii_case(name) || own.cas.as_deref().is_some_and(|cas| cas == name)
+        };
+        self.own.values().find(same).map(Arc::clone)
+    }
+
     /// The material of this name: the plan's own first, then the catalogue's by name, synonym or CAS number.
     ///
     /// # Errors
