@@ -10,12 +10,14 @@ mod co2;
 mod demo;
 mod example;
 mod input;
+mod log;
 mod materials;
 mod output;
 mod schema;
 mod states;
 mod technique;
 mod trace;
+mod workbook;
 
 use clap::{Parser, Subcommand};
 use output::Refusal;
@@ -52,6 +54,8 @@ enum What {
     Technique(technique::Args),
     /// A state of carbon dioxide, or a file of states
     Co2(co2::Args),
+    /// The site's own records beside its plan: sums, reconciliation, solvent balance
+    Log(log::Args),
     /// The example plans, or the text of one to begin from
     Example(example::Args),
 }
@@ -75,6 +79,7 @@ fn main() -> ExitCode {
         Some(What::Schema) => schema::run(),
         Some(What::Technique(args)) => technique::run(args),
         Some(What::Co2(args)) => co2::run(args),
+        Some(What::Log(args)) => log::run(args),
         Some(What::Example(args)) => example::run(args),
     };
     match done {

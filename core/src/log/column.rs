@@ -214,7 +214,7 @@ impl Role {
                 "gas",
                 "name",
             ],
-            Self::Cas => &["cas"],
+            Self::Cas => &["cas", "casno", "casnr", "casnumber"],
             Self::Amount => &[
                 "amount", "quantity", "qty", "net", "volume", "vol", "mass", "weight", "level", "menge",
                 "volumen", "masse", "gewicht", "heel", "left", "counted", "hand", "bestand",

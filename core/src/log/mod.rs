@@ -8,19 +8,25 @@
 //! Each row is used, used with a note of what was changed, or refused with its line and the reason; every sum says on how
 //! many rows it stands. The files may be larger than the memory: a [`Reader`] takes bytes as they come and keeps sums.
 mod amount;
+mod balance;
 mod column;
 mod day;
 mod names;
+mod posted;
 mod read;
+mod reconcile;
 mod tally;
 mod text;
 mod why;
 
 pub use amount::{Decimals, LogUnit};
+pub use balance::{OUTPUTS, SOLVENT_BALANCE, SolventBalance, solvent_balance};
 pub use column::{Column, Mapping, Register, Role, guess};
 pub use day::{Day, DayOrder};
-pub use names::{LogMaterial, LogRoute, NONE, Names};
+pub use names::{LogMaterial, LogRoute, NONE, Names, RECLAIMED};
+pub use posted::Posted;
 pub use read::{Reader, Reading, Rows, Unreadable};
+pub use reconcile::{Line, Reconciliation, SolventAccount, UNCERTAINTY, USUAL_LIMITS, reconcile};
 pub use tally::{Done, Key, Sum, Tally};
 pub use why::{Change, Remark, Verdict, Why};
 

@@ -15,6 +15,10 @@ const MOST_SUGGESTIONS: u32 = 100;
 
 /// Stands for "none" among the indices of materials, streams and routes.
 pub const NONE: u16 = u16::MAX;
+/// Stands among the streams for what is sent off to be reclaimed, which is no waste stream of the site.
+pub const RECLAIMED: u16 = u16::MAX - 1;
+/// The name that means it.
+const RECLAIMED_NAME: &str = "reclaimed off site";
 
 /// A material that a file names.
 #[derive(Clone, Debug)]
@@ -25,6 +29,9 @@ pub struct LogMaterial {
     pub class: Class,
     /// Density at the bench's temperature and how far it can be off as a share; `None` when it is not known.
     pub density_kg_m3: Option<(f64, f64)>,
+    /// Whether it counts as an organic solvent of Directive 2010/75/EU: a solvent with carbon and at least 0.01 kPa of
+    /// vapour pressure at 293.15 K, or of a vapour pressure that is not known.
+    pub voc: bool,
 }
 
 /// A route that a log can name.
@@ -107,6 +114,7 @@ impl Names {
                 name: substance.name.to_string(),
                 class: substance.class,
                 density_kg_m3: known,
+                voc: is_voc(substance),
             });
             self.materials.len() - 1
         });
@@ -141,6 +149,11 @@ impl Names {
         &mut self.found[at]
     }
 
+    /// The present routes, a workload each.
+    pub(super) fn present(&self) -> &[u16] {
+        &self.present
+    }
+
     /// Forgets what names mean in the file that was read: the next one has its own mapping.
     pub(super) fn turn_page(&mut self) {
         self.kept.clear();
@@ -158,6 +171,9 @@ impl Names {
                 self.material(name, cas.trim())
             }
             STREAM => {
+                if same(RECLAIMED_NAME, name) {
+                    return Found::plain(RECLAIMED);
+                }
                 let place = self.streams.iter().position(|s| same(s, name));
                 let index = place.and_then(|p| u16::try_from(p).ok());
                 match index {
@@ -251,6 +267,12 @@ impl Names {
         let near = crate::material::catalogue().find(name).err().map(|u| u.suggestions.join(", "));
         Found::refused(Why::UnknownMaterial, near.unwrap_or_default())
     }
+}
+
+fn is_voc(substance: &Substance) -> bool {
+    let carbon = substance.elements().is_none_or(|e| e.is_ok_and(|e| e.count("C") > 0));
+    let volatile = substance.vapour_pressure_pa(293.15).map_or(true, |p| p.value >= 10.0);
+    substance.class == Class::Solvent && carbon && volatile
 }
 
 impl Found {

@@ -6,12 +6,15 @@
 //! | [`result_csv`] | the same figures, flat, for a spreadsheet |
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
+//! | [`log_tables`], [`reconciliation_table`], [`solvent_balance_table`] | the site's records, as tables |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
 mod csv;
+mod data_table;
 mod grid;
+mod log;
 mod markdown;
 mod result;
 mod row;
@@ -20,6 +23,8 @@ mod trace;
 mod words;
 
 pub use csv::{result_csv, text_cell};
+pub use data_table::{DataCell, DataTable, data_csv, data_json, data_markdown, data_text};
+pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
