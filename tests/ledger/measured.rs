@@ -43,7 +43,9 @@ fn the_mass_posted_is_the_mass_measured() {
         let (route, before) = routes(&computed).next().unwrap();
         let at = StepIx::Step(u16::try_from(route.steps.len() - 1).unwrap());
         let technique = route.steps.last().unwrap().technique;
-        for (i, rule) in technique.rules.iter().enumerate().filter(|(_, r)| r.measurable != Measurable::No) {
+        for (i, rule) in
+            technique.rules.iter().enumerate().filter(|(_, r)| r.measurable == Measurable::MassOrShare)
+        {
             let of = |trace: &Trace| -> Vec<(u16, f64)> {
                 let here = trace.postings.iter().filter(|p| p.step == at);
                 here.filter(|p| p.rule.0 as usize == i).map(|p| (p.material.0, p.kg)).collect()
@@ -96,7 +98,7 @@ fn the_mass_posted_is_the_mass_measured() {
     let declared = thimbleworth::step::TECHNIQUES
         .iter()
         .flat_map(|t| t.rules)
-        .filter(|r| r.measurable != Measurable::No);
+        .filter(|r| r.measurable == Measurable::MassOrShare);
     assert_eq!(seen, declared.count());
 }
 
@@ -120,6 +122,34 @@ fn a_figure_for_a_rule_that_cannot_be_measured_is_refused_with_those_that_can() 
             account.broken() && account.problems.iter().any(|p| p.path.contains("measured")),
             "{bad}: {:#?}",
             account.problems
+        );
+    }
+}
+
+/// A meter's reading stands in place of power by time, and counts what no power is stated for. What a step takes at least is
+/// told where either lies below it.
+#[test]
+fn a_meter_overrides_power_by_time() {
+    let (mut step, feed) = steps().swap_remove(0);
+    step["heater"] = json!("250 W");
+    let electricity = |step: &Value| {
+        let account = sound(&plan(step.clone(), feed.clone()));
+        let (route, found) = routes(&account).next().unwrap();
+        (found.trace.spendings[0].amount_si, route.uncounted.clone())
+    };
+    let time_s = 18.0 * 3600.0;
+    step["time"] = json!("18 h");
+    assert_eq!(electricity(&step), (250.0 * time_s, vec![]));
+    step["measured"] = json!({ "heating": "3.1 kWh" });
+    assert_eq!(electricity(&step), (3.1 * 3.6e6, vec![]));
+    step.as_object_mut().unwrap().remove("heater");
+    assert_eq!(electricity(&step), (3.1 * 3.6e6, vec![]));
+    for bad in ["3 g", "5 %", "250 W", "", "-1 kWh"] {
+        step["measured"] = json!({ "heating": bad });
+        let account = account_text(&plan(step.clone(), feed.clone()).to_string());
+        assert!(
+            account.problems.iter().any(|p| p.path.contains("measured") && p.found.contains(bad)),
+            "{bad}"
         );
     }
 }

@@ -5,6 +5,7 @@ mod azeotropes;
 mod consistency;
 mod distillation;
 mod fits;
+mod held;
 mod models;
 mod practice;
 mod refusals;

@@ -1,6 +1,8 @@
 //! Plans made by chance, the same ones every time.
 
-use thimbleworth::plan::{Electricity, Field, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload};
+use thimbleworth::plan::{
+    Electricity, Field, Log, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
+};
 
 /// SplitMix64 (Steele, Lea and Flood 2014; constants from memory). Any generator would do; nothing rests on its
 /// quality.
@@ -88,9 +90,19 @@ impl Chance {
         Plan {
             title: self.text(),
             notes: self.maybe(Self::text),
+            seed: self.maybe(Self::field),
             site: self.site(),
             materials: self.list(3, |c| OwnMaterial { name: c.text(), fields: c.fields() }),
             workloads: self.list(3, Self::workload),
+            logs: self.list(2, |c| Log {
+                name: c.text(),
+                register: c.text(),
+                columns: c.rows(),
+                dates: c.maybe(Self::text),
+                decimals: c.maybe(Self::text),
+                uncertainty: c.maybe(Self::text),
+                means: c.rows(),
+            }),
         }
     }
 
@@ -118,7 +130,25 @@ impl Chance {
                 fill: c.maybe(Self::text),
                 bulk_density: c.maybe(Self::text),
                 treatment: c.maybe(Self::text),
+                ph: c.maybe(Self::text),
+                flash_point: c.maybe(Self::text),
+                unused: c.maybe(Self::yes),
+                made_of: c.maybe(Self::text),
+                density_mark: c.maybe(Self::field),
+                area: c.maybe(Self::text),
+                counted: c.maybe(Self::text),
             }),
+            activity: self.maybe(Self::text),
+            other_waste: self.list(3, |c| OtherWaste {
+                name: c.text(),
+                each_month: c.text(),
+                months: c.maybe(Self::text),
+                acute: c.maybe(Self::yes),
+            }),
+            storage_limit: self.maybe(Self::text),
+            pick_up_every: self.maybe(Self::text),
+            far_receiver: self.maybe(Self::yes),
+            deviations: self.maybe(Self::text),
         }
     }
 
@@ -132,6 +162,7 @@ impl Chance {
             repeats_bring_controls: self.maybe(Self::yes),
             controls_carry_feed: self.maybe(Self::yes),
             feed: self.rows(),
+            months: self.maybe(Self::text),
             present: self.text(),
             routes: self.list(3, |c| Route {
                 name: c.text(),

@@ -198,15 +198,16 @@ pub fn measured_lines(
     at: (usize, usize, usize),
 ) -> Vec<MeasuredLine> {
     let under = below(path, "measured");
-    let open = technique.rules.iter().enumerate().filter(|(_, r)| r.measurable == Measurable::MassOrShare);
+    let open = technique.rules.iter().enumerate().filter(|(_, r)| r.measurable != Measurable::No);
     open.map(|(i, rule)| {
         let value =
             step.measured.iter().find(|(k, _)| k == rule.name).map_or(String::new(), |(_, v)| v.clone());
-        let computed = computed_kg(book, at, i).map_or_else(
+        let kind = if rule.measurable == Measurable::Energy { Kind::Energy } else { Kind::Mass };
+        let computed = computed_si(book, at, i).map_or_else(
             || "Not computed yet.".to_owned(),
-            |kg| {
+            |si| {
                 let beside = if value.trim().is_empty() { "Computed" } else { "Computed in its place" };
-                format!("{beside}: {} a run, by {}.", show(kg, Kind::Mass), rule.equation)
+                format!("{beside}: {} a run, by {}.", show(si, kind), rule.equation)
             },
         );
         MeasuredLine { rule: rule.name, path: below(&under, rule.name), value, computed }
@@ -214,8 +215,8 @@ pub fn measured_lines(
     .collect()
 }
 
-/// What a rule moves in one run of a step by its own equation; kg.
-fn computed_kg(book: &Book, (w, r, s): (usize, usize, usize), rule: usize) -> Option<f64> {
+/// What a rule moves or spends in one run of a step by its own equation; kg or J.
+fn computed_si(book: &Book, (w, r, s): (usize, usize, usize), rule: usize) -> Option<f64> {
     let (_, account) = book.route(w, r)?;
     let (step, rule) = (StepIx::Step(u16::try_from(s).ok()?), RuleIx(u8::try_from(rule).ok()?));
     let mut notes = account.trace.working(step, rule).filter(|n| n.symbol == "computed in its place");
@@ -225,6 +226,9 @@ fn computed_kg(book: &Book, (w, r, s): (usize, usize, usize), rule: usize) -> Op
     let mut found = None;
     for posting in account.trace.postings.iter().filter(|p| p.step == step && p.rule == rule) {
         found = Some(found.unwrap_or(0.0) + posting.kg);
+    }
+    for spending in account.trace.spendings.iter().filter(|s| s.step == step && s.rule == rule) {
+        found = Some(found.unwrap_or(0.0) + spending.amount_si);
     }
     found
 }

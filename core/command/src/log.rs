@@ -77,7 +77,7 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
         return Err(Refusal::Said);
     };
     for file in args.files.iter().chain([&args.plan]) {
-        for out in [&args.refused, &args.keep].into_iter().flatten() {
+        for out in [&args.refused, &args.keep, &args.output].into_iter().flatten() {
             let same =
                 |a: &Path, b: &Path| matches!((a.canonicalize(), b.canonicalize()), (Ok(a), Ok(b)) if a == b);
             if same(file, out) && (Some(out) != args.keep.as_ref() || *file != args.plan) {

@@ -1,7 +1,7 @@
 //! The program `thimbleworth`: files, terminal and exit status over the library of that name.
 //!
 //! Results go to the standard output, problems to the standard error. Exit status: 0 fine, 1 `check` found errors, 2
-//! input that cannot be used, or a wrong call.
+//! input that cannot be used, or a wrong call, 130 ended early by an interrupt.
 #![forbid(unsafe_code)]
 
 mod account;
@@ -12,6 +12,7 @@ mod example;
 mod input;
 mod log;
 mod materials;
+mod odds;
 mod output;
 mod schema;
 mod states;
@@ -25,7 +26,8 @@ use std::process::ExitCode;
 
 /// What `--help` says at its end.
 const AFTER: &str = "PLAN is a JSON file, or - for the standard input. Results go to the standard output, problems to the \
-standard error.\nExit status: 0 fine, 1 check found errors, 2 input that cannot be used.";
+standard error.\nExit status: 0 fine, 1 check found errors, 2 input that cannot be used, \
+130 ended early by Ctrl-C.";
 
 /// Keeps the account of extraction routes like a set of books: where every gram goes, what leaves as waste, what is vented,
 /// how hazardous it is, and what differs from the present route.
@@ -42,6 +44,8 @@ enum What {
     Account(account::Args),
     /// Every route beside the present one, with a finding
     Compare(account::Args),
+    /// How sure the figures are: intervals, odds against the present route, what matters most
+    Odds(odds::Args),
     /// The postings, rules and inputs behind one figure
     Trace(trace::Args),
     /// All errors and warnings of a plan; exit status 1 if there is an error
@@ -73,6 +77,7 @@ fn main() -> ExitCode {
         None => demo::run(),
         Some(What::Account(args)) => account::run(args, account::What::Account),
         Some(What::Compare(args)) => account::run(args, account::What::Comparison),
+        Some(What::Odds(args)) => odds::run(args),
         Some(What::Trace(args)) => trace::run(args),
         Some(What::Check(args)) => check::run(args),
         Some(What::Materials(args)) => materials::run(args),

@@ -37,10 +37,10 @@ fn described(t: &Technique) -> String {
     }
     out.push_str("\nRules\n");
     for rule in t.rules {
-        let open = if rule.measurable == Measurable::No {
-            ""
-        } else {
-            "; a measured mass or share may take its place"
+        let open = match rule.measurable {
+            Measurable::No => "",
+            Measurable::MassOrShare => "; a measured mass or share may take its place",
+            Measurable::Energy => "; a meter's reading may take its place",
         };
         out.push_str(&format!("  {}: {} ({}){open}\n", rule.name, rule.equation, cited(rule.source)));
     }

@@ -228,33 +228,64 @@ impl Draft {
 /// A ratio over nothing gives 0: such figures are not drawn up in the first place.
 pub fn evaluate(figures: &[Figure], desk: &Desk, x: Draw<'_>, out: &mut [f64]) {
     for (i, figure) in figures.iter().enumerate() {
-        let value = match &figure.how {
-            How::Sum(terms) => {
-                let mut sum = 0.0;
-                for term in terms {
-                    let (kg, number) = match term.ready {
-                        Some((cell, number)) => (desk.cells.passed_at(cell), number),
-                        None => (
-                            desk.cells.passed(term.place, term.direction, term.material),
-                            term.factor.number(),
-                        ),
-                    };
-                    sum += match term.factor {
-                        Factor::Over(slot) => kg / x.get(slot),
-                        Factor::One | Factor::Minus | Factor::Times(_) => kg * number,
-                    };
-                }
-                sum
-            }
-            How::Spent(utility) => desk.spent[*utility as usize],
-            // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number
-            How::Containers { volume, takes_m3 } => libm::ceil(out[*volume] / takes_m3 - 1e-9),
-            How::Ratio { over, under } => {
-                let under = out[*under];
-                if under > 0.0 { out[*over] / under } else { 0.0 }
-            }
-        };
-        // A negative zero is a zero.
-        out[i] = value + 0.0;
+        out[i] = value(figure, desk, x, out);
     }
+}
+
+/// As [`evaluate`], of the figures with these indices alone, which have to stand in ascending order with all that they
+/// rest on among them: see [`with_what_they_rest_on`].
+pub fn evaluate_these(figures: &[Figure], which: &[usize], desk: &Desk, x: Draw<'_>, out: &mut [f64]) {
+    for &i in which {
+        out[i] = value(&figures[i], desk, x, out);
+    }
+}
+
+/// The indices of these figures and of those from which they follow, in ascending order.
+#[must_use]
+pub fn with_what_they_rest_on(figures: &[Figure], wanted: &[usize]) -> Vec<usize> {
+    let mut needed = vec![false; figures.len()];
+    for &i in wanted {
+        needed[i] = true;
+    }
+    // A figure rests on earlier ones only.
+    for i in (0..figures.len()).rev() {
+        if needed[i] {
+            match figures[i].how {
+                How::Containers { volume, .. } => needed[volume] = true,
+                How::Ratio { over, under } => (needed[over], needed[under]) = (true, true),
+                How::Sum(_) | How::Spent(_) => {}
+            }
+        }
+    }
+    (0..figures.len()).filter(|i| needed[*i]).collect()
+}
+
+fn value(figure: &Figure, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
+    let value = match &figure.how {
+        How::Sum(terms) => {
+            let mut sum = 0.0;
+            for term in terms {
+                let (kg, number) = match term.ready {
+                    Some((cell, number)) => (desk.cells.passed_at(cell), number),
+                    None => {
+                        (desk.cells.passed(term.place, term.direction, term.material), term.factor.number())
+                    }
+                };
+                sum += match term.factor {
+                    Factor::Over(slot) => kg / x.get(slot),
+                    Factor::One | Factor::Minus | Factor::Times(_) => kg * number,
+                };
+            }
+            sum
+        }
+        How::Spent(utility) => desk.spent[*utility as usize],
+        // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number
+        How::Containers { volume, takes_m3 } => libm::ceil(out[*volume] / takes_m3 - 1e-9),
+        How::Ratio { over, under } => {
+            let under = out[*under];
+            if under > 0.0 { out[*over] / under } else { 0.0 }
+        }
+    };
+    // A negative zero is a zero.
+    value + 0.0
 }

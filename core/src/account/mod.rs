@@ -10,12 +10,16 @@ mod hazard;
 mod mass;
 mod metric;
 mod open;
+mod poured;
 mod waste;
 mod working;
 
-pub use figure::{Draft, Factor, Figure, Group, How, Measure, Term, evaluate};
+pub use figure::{
+    Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
+};
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;
 pub use metric::Refusal;
 pub use open::{Account, RouteAccount, WorkloadAccount, account, account_text, rule_of};
+pub use poured::{Pouring, StreamContents, poured};
 pub use working::{Contribution, behind, describe};

@@ -1,7 +1,7 @@
 //! Differences and ratios, and the postings that make them.
 
 use super::finding;
-use crate::account::{Account, Contribution, Group, Measure, RouteAccount, behind};
+use crate::account::{Account, Contribution, Figure, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
 use crate::program::{RouteProgram, WorkloadProgram};
 
@@ -91,14 +91,8 @@ fn beside(
     for id in ids {
         let figure = present.figures.iter().chain(&other.figures).find(|f| f.id == id);
         let Some(figure) = figure else { continue };
-        // Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
-        // stated, nor the electricity of a route that leaves a power out.
         let value = |route: &RouteProgram, account: &RouteAccount| {
-            let zero = match figure.id.as_str() {
-                "energy.electricity" => route.uncounted.is_empty(),
-                _ => figure.measure.extensive() && figure.group != Group::Energy,
-            };
-            account.value(id).or(zero.then_some(0.0))
+            account.value(id).or(absent_is_zero(route, figure).then_some(0.0))
         };
         let (before, after) = (value(old, present), value(new, other));
         let change = before.zip(after).map(|(b, a)| a - b);
@@ -131,6 +125,18 @@ fn beside(
         better: judged.better,
         worse: judged.worse,
         doubts: doubts(old, new),
+    }
+}
+
+/// Whether a route that has no such figure has none of what it counts.
+///
+/// Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
+/// stated, nor the electricity of a route that leaves a power out.
+#[must_use]
+pub fn absent_is_zero(route: &RouteProgram, figure: &Figure) -> bool {
+    match figure.id.as_str() {
+        "energy.electricity" => route.uncounted.is_empty(),
+        _ => figure.measure.extensive() && figure.group != Group::Energy,
     }
 }
 

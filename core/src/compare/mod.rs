@@ -3,5 +3,5 @@
 mod difference;
 mod finding;
 
-pub use difference::{Cause, Comparison, Difference, RouteComparison, compare};
+pub use difference::{Cause, Comparison, Difference, RouteComparison, absent_is_zero, compare};
 pub use finding::HEADLINES;

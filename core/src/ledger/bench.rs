@@ -11,6 +11,8 @@ pub enum Measured {
     Mass(In),
     /// A share of what was there.
     Share(In),
+    /// Electricity in one run of the step, as a meter reads it; J.
+    Energy(In),
 }
 
 /// What the bench knows of a material of the route.
@@ -296,7 +298,7 @@ impl<'a> Bench<'a> {
         }
         let mut sum = 0.0;
         match self.measured_for(rule) {
-            None => {
+            None | Some(Measured::Energy(_)) => {
                 for &(m, kg) in parts {
                     sum += self.take_as(from, to, m, kg, rule, false)?;
                 }
@@ -366,6 +368,7 @@ impl<'a> Bench<'a> {
             Some(which) => {
                 self.note_computed(rule, there_kg * share);
                 match which {
+                    Measured::Energy(_) => (share, false),
                     Measured::Share(slot) => {
                         let share = self.draw.get(slot);
                         measurable(rule, from, share * there_kg, there_kg)?;
@@ -432,6 +435,42 @@ impl<'a> Bench<'a> {
         if let Some(trace) = self.trace.as_deref_mut() {
             let (step, runs_a_year) = (self.step, self.runs_a_year);
             trace.spendings.push(Spending { step, rule, utility, amount_si, runs_a_year });
+        }
+    }
+
+    /// Spends electricity: a meter's reading where the plan gives one, else nominal power by time unless the floor of
+    /// thermodynamics lies above it. Spends nothing where nothing is known. `nominal_j` and `floor_j` in J a run.
+    ///
+    /// What lies below the floor is told as a doubt.
+    pub fn electricity(&mut self, nominal_j: Option<f64>, floor_j: Option<f64>, rule: RuleIx) {
+        let metered_j = match self.measured_for(rule) {
+            Some(Measured::Energy(slot)) => Some(self.draw.get(slot)),
+            _ => None,
+        };
+        if let Some(floor_j) = floor_j {
+            self.note(rule, "least that physics asks for", floor_j, Kind::Energy);
+        }
+        if let (Some(metered_j), Some(nominal_j)) = (metered_j, nominal_j) {
+            self.note(rule, "computed in its place", nominal_j, Kind::Energy);
+            self.note(rule, "meter", metered_j, Kind::Energy);
+        }
+        let demand = crate::heat::Demand {
+            nominal_j: nominal_j.unwrap_or(0.0),
+            computed_j: floor_j,
+            measured_j: metered_j,
+        };
+        if nominal_j.is_some() || floor_j.is_some() || metered_j.is_some() {
+            self.spend(Utility::Electricity, demand.chosen().0, rule);
+        }
+        if let (Some(stated_j), Some(floor_j)) = (metered_j.or(nominal_j), floor_j)
+            && stated_j < floor_j
+        {
+            let found = if metered_j.is_some() {
+                "the meter reads less than physics asks for, which is"
+            } else {
+                "power by time is less than physics asks for, which is counted in its place:"
+            };
+            self.doubt(rule, found, floor_j, Kind::Energy, "check power, time and amounts of the step");
         }
     }
 

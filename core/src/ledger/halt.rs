@@ -91,6 +91,25 @@ pub enum Halt {
     NoRuns,
 }
 
+impl Halt {
+    /// What stops the run, without its values: one of a few phrases, by which halted draws are counted.
+    #[must_use]
+    pub const fn in_short(self) -> &'static str {
+        match self {
+            Self::Short { .. } => "a rule takes more than is there",
+            Self::NothingToMeasure { .. } | Self::MeasuredTooMuch { .. } => "more is measured than is there",
+            Self::Empty { .. } | Self::NoLiquid { .. } => "nothing is there to work on",
+            Self::Occupied { .. } => "something still lies in the way",
+            Self::FinerBasis { .. } | Self::NoEnd { .. } => "something is left without a place",
+            Self::DoesNotFit { .. } => "more than fits",
+            Self::NotReached { .. } => "less is there than should be left",
+            Self::Co2(_) => "no such state of CO2",
+            Self::NotANumber { .. } => "an amount below zero or not finite",
+            Self::NoRuns => "no work",
+        }
+    }
+}
+
 impl From<StateError> for Halt {
     fn from(e: StateError) -> Self {
         Self::Co2(e)

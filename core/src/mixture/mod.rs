@@ -35,6 +35,7 @@ mod distil;
 mod doubt;
 mod equilibrium;
 mod error;
+mod held;
 mod pair;
 mod pairs;
 mod wilson;
@@ -43,6 +44,7 @@ pub use distil::{Distillation, Hold, Point};
 pub use doubt::{IdealError, ideal_error};
 pub use equilibrium::{Component, Mixture};
 pub use error::MixtureError;
+pub use held::{Held, TakenDown};
 pub use pair::{Basis, Pair, PairLaw, Wilson, find_pair, pair_table};
 pub use pairs::{IdealPair, Pairs};
 

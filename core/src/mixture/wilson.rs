@@ -23,6 +23,48 @@ impl Lambda {
         Self { count, values }
     }
 
+    /// As [`Lambda::at`], of some of the components only.
+    pub(super) fn among(pairs: &Pairs, which: &[usize], temperature_k: f64) -> Self {
+        let mut values = [[1.0; LARGEST]; LARGEST];
+        for (row, &i) in values.iter_mut().zip(which) {
+            for (value, &j) in row.iter_mut().zip(which) {
+                let (a, b_k) = (pairs.a[i][j], pairs.b_k[i][j]);
+                if a != 0.0 || b_k != 0.0 {
+                    // Λᵢⱼ = exp(aᵢⱼ + bᵢⱼ/T)
+                    *value = libm::exp(a + b_k / temperature_k);
+                }
+            }
+        }
+        Self { count: which.len(), values }
+    }
+
+    /// γᵢ of amounts, of which only the ratio counts.
+    pub(super) fn activity_of_amounts(&self, n: &PerComponent) -> PerComponent {
+        let mut gamma = [1.0; LARGEST];
+        if self.count < 2 {
+            return gamma;
+        }
+        let (mut total, mut over) = (0.0, [0.0; LARGEST]);
+        for k in 0..self.count {
+            let mut sum = 0.0;
+            for (n, value) in n.iter().zip(self.values[k]).take(self.count) {
+                sum += n * value;
+            }
+            // 1/(N Sₖ), N Sₖ = Σⱼ nⱼ Λₖⱼ
+            over[k] = 1.0 / sum;
+            total += n[k];
+        }
+        for i in 0..self.count {
+            let mut sum = 0.0;
+            for k in 0..self.count {
+                sum += n[k] * over[k] * self.values[k][i];
+            }
+            // ln γᵢ = 1 − ln Sᵢ − Σₖ xₖ Λₖᵢ / Sₖ
+            gamma[i] = libm::exp(1.0 - sum) * over[i] * total;
+        }
+        gamma
+    }
+
     /// γᵢ of mole fractions that add to 1.
     pub(super) fn activity_coefficients(&self, x: &PerComponent) -> PerComponent {
         let mut over = [0.0; LARGEST];

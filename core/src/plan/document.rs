@@ -24,6 +24,8 @@ pub struct Plan {
     pub title: String,
     /// Free text that prints with the report.
     pub notes: Option<String>,
+    /// The whole number from which draws of uncertain amounts follow; 1 when left out.
+    pub seed: Option<Field>,
     /// The site: rules, date, streams.
     pub site: Site,
     /// Materials that the plan adds to the catalogue or overrides, each with its source.
@@ -72,6 +74,31 @@ pub struct Site {
     pub room: Option<Room>,
     /// The waste streams that the site keeps apart.
     pub streams: Vec<Stream>,
+    /// The kind of work, for the chapter of the List of Waste.
+    pub activity: Option<String>,
+    /// Hazardous waste that the site makes beside this work.
+    pub other_waste: Vec<OtherWaste>,
+    /// The longest that waste may be stored on site.
+    pub storage_limit: Option<String>,
+    /// The interval of pick-ups.
+    pub pick_up_every: Option<String>,
+    /// Whether the receiving facility lies more than 200 miles away.
+    pub far_receiver: Option<bool>,
+    /// Where state or nation deviate from the rules read.
+    pub deviations: Option<String>,
+}
+
+/// Hazardous waste that a site makes beside the work of the plan.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct OtherWaste {
+    /// What it is.
+    pub name: String,
+    /// Its mass in each of its months.
+    pub each_month: String,
+    /// Its months, `9-12, 1-5`; all when left out.
+    pub months: Option<String>,
+    /// Whether it is acutely hazardous.
+    pub acute: Option<bool>,
 }
 
 /// What the site knows of its electricity.
@@ -111,6 +138,20 @@ pub struct Stream {
     pub bulk_density: Option<String>,
     /// `none`, `recycling`, `degradation` or `passivation`: what happens to it on site.
     pub treatment: Option<String>,
+    /// Lowest and highest pH measured in its containers.
+    pub ph: Option<String>,
+    /// Flash point by a closed-cup test, or `none`.
+    pub flash_point: Option<String>,
+    /// Whether what goes in is unused product.
+    pub unused: Option<bool>,
+    /// What its containers are made of.
+    pub made_of: Option<String>,
+    /// The relative density up to which the mark on the container allows a liquid.
+    pub density_mark: Option<Field>,
+    /// `central` or `satellite`.
+    pub area: Option<String>,
+    /// `when made`, `reclaimed` or `treated at once`.
+    pub counted: Option<String>,
 }
 
 /// A material that the plan adds to the catalogue or overrides there.
@@ -141,6 +182,8 @@ pub struct Workload {
     pub controls_carry_feed: Option<bool>,
     /// What one sample (or product batch) brings: materials with their masses or volumes.
     pub feed: Vec<(String, String)>,
+    /// The months in which the work is done, `2-5, 9`; all when left out.
+    pub months: Option<String>,
     /// The name of the present route.
     pub present: String,
     /// The routes.

@@ -1,6 +1,8 @@
 //! The keys of the document, declared once: the reader checks by these tables, and the schema is made from them.
 //! The order here is the order in which a plan is written.
 
+use crate::code::Activity;
+
 /// The key that says that a document is a plan, and of which version.
 pub(super) const VERSION_KEY: &str = "thimbleworth";
 
@@ -77,6 +79,12 @@ pub(super) static PLAN: Object = Object {
             r#""Figures of the spring campaign""#,
             "free text that prints with the report",
         ),
+        may(
+            "seed",
+            Shape::Count,
+            "1",
+            "the whole number from which draws of uncertain amounts follow; 1 when left out",
+        ),
         must(
             "site",
             Shape::Object(&SITE),
@@ -135,6 +143,58 @@ pub(super) static SITE: Object = Object {
             Shape::List(&STREAM, 0),
             r#"[{ "name": "flammable", "container": "20 L", "fill": "90 %" }]"#,
             "the waste streams that the site keeps apart",
+        ),
+        may(
+            "activity",
+            Shape::Word(Activity::WORDS),
+            r#""laboratory""#,
+            "the kind of work; it decides the chapter of the List of Waste; laboratory when left out",
+        ),
+        may(
+            "other_waste",
+            Shape::List(&OTHER_WASTE, 0),
+            r#"[{ "name": "rest of the campus", "each_month": "55 kg" }]"#,
+            "hazardous waste that the site makes beside this work; without it no category holds",
+        ),
+        may(
+            "storage_limit",
+            Shape::Amount,
+            r#""365 d""#,
+            "the longest that waste may be stored on site, as the nation or the permit says",
+        ),
+        may(
+            "pick_up_every",
+            Shape::Amount,
+            r#""60 d""#,
+            "the interval of pick-ups; left out, the fewest that keep every limit are sought",
+        ),
+        may(
+            "far_receiver",
+            Shape::YesNo,
+            "false",
+            "whether the receiving facility lies more than 200 miles away",
+        ),
+        may(
+            "deviations",
+            Shape::Text,
+            r#""the state counts satellite containers of all rooms together""#,
+            "where state or nation deviate from these rules; prints with every paper",
+        ),
+    ],
+    fields_after: None,
+};
+
+static OTHER_WASTE: Object = Object {
+    title: "other waste",
+    keys: &[
+        must("name", Shape::Name, r#""rest of the campus""#, "what it is"),
+        must("each_month", Shape::Amount, r#""55 kg""#, "its mass in each of its months"),
+        may("months", Shape::Text, r#""9-12, 1-5""#, "its months; all when left out"),
+        may(
+            "acute",
+            Shape::YesNo,
+            "false",
+            "whether it is acutely hazardous (P list); it is not when left out",
         ),
     ],
     fields_after: None,
@@ -218,6 +278,28 @@ static STREAM: Object = Object {
             r#""recycling""#,
             "what happens to it on site",
         ),
+        may("ph", Shape::Amount, r#""6 to 8""#, "the lowest and the highest pH measured in its containers"),
+        may("flash_point", Shape::Amount, r#""26 °C""#, "its flash point by a closed-cup test, or none"),
+        may("unused", Shape::YesNo, "false", "whether what goes in is unused product"),
+        may("made_of", Shape::Word(MADE_OF), r#""polyethylene""#, "what its containers are made of"),
+        may(
+            "density_mark",
+            Shape::Count,
+            "1.2",
+            "the relative density up to which the mark on the container allows a liquid",
+        ),
+        may(
+            "area",
+            Shape::Word(AREAS),
+            r#""satellite""#,
+            "where its containers fill: central, or satellite (at the bench, US); central when left out",
+        ),
+        may(
+            "counted",
+            Shape::Word(COUNTED),
+            r#""when made""#,
+            "how it counts each month: when made, reclaimed (stored, then reclaimed and used again here) or treated at once (never stored)",
+        ),
     ],
     fields_after: None,
 };
@@ -254,6 +336,7 @@ static WORKLOAD: Object = Object {
             r#"{ "sediment": "10 g" }"#,
             "what one sample, or one product batch, brings",
         ),
+        may("months", Shape::Text, r#""5""#, "the months in which the work is done; all when left out"),
         must("present", Shape::Name, r#""Soxhlet""#, "the name of the route in use now"),
         must("routes", Shape::List(&ROUTE, 1), "", "the routes, at least one"),
     ],
@@ -303,6 +386,13 @@ static ROUTE: Object = Object {
     fields_after: None,
 };
 
+/// What a waste container is made of.
+pub(super) const MADE_OF: &[&str] = &["polyethylene", "glass", "stainless steel", "steel", "lined steel"];
+/// Where a waste container fills.
+pub(super) const AREAS: &[&str] = &["central", "satellite"];
+/// How a stream counts towards the month.
+pub(super) const COUNTED: &[&str] = &["when made", "reclaimed", "treated at once"];
+
 /// How often a step is done.
 pub(super) const BASES: &[&str] = &["sample", "batch", "month", "year"];
 
@@ -328,5 +418,17 @@ pub(super) static STEP: Object = Object {
 };
 
 #[cfg(test)]
-pub(super) static ALL: [&Object; 11] =
-    [&PLAN, &LOG, &SITE, &ELECTRICITY, &ROOM, &STREAM, &MATERIAL, &WORKLOAD, &BATCH, &ROUTE, &STEP];
+pub(super) static ALL: [&Object; 12] = [
+    &PLAN,
+    &LOG,
+    &SITE,
+    &ELECTRICITY,
+    &ROOM,
+    &STREAM,
+    &OTHER_WASTE,
+    &MATERIAL,
+    &WORKLOAD,
+    &BATCH,
+    &ROUTE,
+    &STEP,
+];

@@ -16,7 +16,8 @@ mod tree;
 mod write;
 
 pub use document::{
-    Electricity, Field, Log, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream, Workload,
+    Electricity, Field, Log, OtherWaste, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream,
+    Workload,
 };
 pub(crate) use nearest::nearest;
 pub use path::{Path, below};

@@ -1,6 +1,6 @@
 //! Saving a plan: the same plan always gives the same bytes.
 
-use super::document::{Field, Log, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
+use super::document::{Field, Log, OtherWaste, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
 use super::keys::VERSION_KEY;
 use super::print::print;
 use super::tree::{self, Node};
@@ -71,6 +71,7 @@ fn tree(plan: &Plan) -> Node {
     out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
     out.text("title", &plan.title);
     out.optional("notes", plan.notes.as_ref());
+    out.field("seed", plan.seed.as_ref());
     out.put("site", site(&plan.site));
     if !plan.materials.is_empty() {
         let mut materials = Entries::default();
@@ -125,6 +126,23 @@ fn site(site: &Site) -> Node {
         out.put("room", inner.into());
     }
     out.list("streams", &site.streams, stream);
+    out.optional("activity", site.activity.as_ref());
+    if !site.other_waste.is_empty() {
+        out.list("other_waste", &site.other_waste, other_waste);
+    }
+    out.optional("storage_limit", site.storage_limit.as_ref());
+    out.optional("pick_up_every", site.pick_up_every.as_ref());
+    out.yes_no("far_receiver", site.far_receiver);
+    out.optional("deviations", site.deviations.as_ref());
+    out.into()
+}
+
+fn other_waste(other: &OtherWaste) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &other.name);
+    out.text("each_month", &other.each_month);
+    out.optional("months", other.months.as_ref());
+    out.yes_no("acute", other.acute);
     out.into()
 }
 
@@ -136,6 +154,13 @@ fn stream(stream: &Stream) -> Node {
     out.optional("fill", stream.fill.as_ref());
     out.optional("bulk_density", stream.bulk_density.as_ref());
     out.optional("treatment", stream.treatment.as_ref());
+    out.optional("ph", stream.ph.as_ref());
+    out.optional("flash_point", stream.flash_point.as_ref());
+    out.yes_no("unused", stream.unused);
+    out.optional("made_of", stream.made_of.as_ref());
+    out.field("density_mark", stream.density_mark.as_ref());
+    out.optional("area", stream.area.as_ref());
+    out.optional("counted", stream.counted.as_ref());
     out.into()
 }
 
@@ -153,6 +178,7 @@ fn workload(workload: &Workload) -> Node {
     out.yes_no("repeats_bring_controls", workload.repeats_bring_controls);
     out.yes_no("controls_carry_feed", workload.controls_carry_feed);
     out.put("feed", rows(&workload.feed));
+    out.optional("months", workload.months.as_ref());
     out.text("present", &workload.present);
     out.list("routes", &workload.routes, route);
     out.into()
@@ -234,6 +260,7 @@ mod tests {
         Plan {
             title: "t".into(),
             notes: some("n"),
+            seed: Some(Field::Number("7".into())),
             site: Site {
                 name: "s".into(),
                 rules: some("EU"),
@@ -249,7 +276,25 @@ mod tests {
                     fill: some("90 %"),
                     bulk_density: some("1 kg/L"),
                     treatment: some("none"),
+                    ph: some("6 to 8"),
+                    flash_point: some("none"),
+                    unused: Some(false),
+                    made_of: some("glass"),
+                    density_mark: Some(Field::Number("1.2".into())),
+                    area: some("satellite"),
+                    counted: some("reclaimed"),
                 }],
+                activity: some("food"),
+                other_waste: vec![OtherWaste {
+                    name: "o".into(),
+                    each_month: "55 kg".into(),
+                    months: some("1-5"),
+                    acute: Some(false),
+                }],
+                storage_limit: some("365 d"),
+                pick_up_every: some("60 d"),
+                far_receiver: Some(true),
+                deviations: some("d"),
             },
             materials: vec![OwnMaterial { name: "m".into(), fields: vec![("x".into(), Field::YesNo(true))] }],
             workloads: vec![Workload {
@@ -261,6 +306,7 @@ mod tests {
                 repeats_bring_controls: Some(true),
                 controls_carry_feed: Some(false),
                 feed: pair("soil", "10 g"),
+                months: some("2-5"),
                 present: "A".into(),
                 routes: vec![route],
             }],

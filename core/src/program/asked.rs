@@ -3,7 +3,7 @@
 use super::amounts::Amounts;
 use super::materials::MaterialBook;
 use super::resolve::RouteBuilder;
-use super::{Reader, SiteUse};
+use super::{Reader, SiteUse, SiteWaste};
 use crate::plan::{Problem, Step as StepDoc};
 use crate::step::Technique;
 
@@ -31,6 +31,7 @@ pub fn asked(technique: &'static Technique, step: &StepDoc) -> (Vec<&'static str
         as_of: None,
         bench_temperature_k: 293.15,
         streams: Vec::new(),
+        waste: SiteWaste::default(),
     };
     let mut amounts = Amounts::default();
     let mut route = RouteBuilder::new(&mut book, &mut amounts, &site, false, &mut problems);

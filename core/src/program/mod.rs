@@ -8,6 +8,7 @@ mod materials;
 mod reader;
 mod resolve;
 mod run;
+mod waste;
 mod work;
 
 pub use asked::asked;
@@ -16,6 +17,7 @@ pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
 pub use reader::Reader;
 pub use resolve::{Resolved, resolve};
 pub use run::{Desk, Failure};
+pub use waste::{Counted, EVERY_MONTH, Months, OtherWasteUse, SiteWaste, StreamWaste};
 pub use work::{Basis, Runs, Work};
 
 use crate::chance::In;
@@ -28,6 +30,8 @@ use crate::step::{Step, Technique};
 pub struct Program {
     /// What is asked.
     pub title: String,
+    /// What draws of uncertain amounts follow from.
+    pub seed: u64,
     /// The site as the accounts need it.
     pub site: SiteUse,
     /// The pieces of work.
@@ -47,6 +51,8 @@ pub struct SiteUse {
     pub bench_temperature_k: f64,
     /// The waste streams.
     pub streams: Vec<StreamUse>,
+    /// What the waste desk needs to know.
+    pub waste: SiteWaste,
 }
 
 /// A waste stream as the accounts need it.
@@ -64,12 +70,16 @@ pub struct StreamUse {
     pub bulk_density_kg_m3: f64,
     /// What happens to it on site: `none`, `recycling`, `degradation` or `passivation`.
     pub treatment: String,
+    /// What the waste desk needs to know.
+    pub waste: StreamWaste,
 }
 
 /// One piece of work.
 pub struct WorkloadProgram {
     /// Its name.
     pub name: String,
+    /// The months in which it is done.
+    pub months: Months,
     /// The index of the present route.
     pub present: usize,
     /// The routes.

@@ -160,7 +160,13 @@ impl<'r, 'p> Reader<'r, 'p> {
                 origin = Origin::NotKnown;
                 let path = self.at(p.key);
                 self.route.assume(path, p.label, default, source);
-                self.route.amounts.read(default, kind).ok()?
+                let mut amount = self.route.amounts.read(default, kind).ok()?;
+                // Nobody knows where in the usual range it lies: any value there is as likely as another.
+                let (low_si, high_si) = p.usual;
+                if low_si < high_si && low_si.is_finite() && high_si.is_finite() {
+                    amount.spread = Spread::Limits { low_si, high_si };
+                }
+                amount
             }
             Err(e) => {
                 self.error(p.key, format!("\"{}\": {}", text, e.found()), e.need());
@@ -602,9 +608,7 @@ impl<'r, 'p> Reader<'r, 'p> {
         let under = below(&self.path, "measured");
         for (name, text) in &doc.measured {
             let path = below(&under, name);
-            let open = || {
-                self.technique.rules.iter().filter(|r| r.measurable == crate::step::Measurable::MassOrShare)
-            };
+            let open = || self.technique.rules.iter().filter(|r| r.measurable != crate::step::Measurable::No);
             let Some(index) = self.technique.rules.iter().position(|r| r.name == name) else {
                 let names = open().map(|r| r.name);
                 let hint = nearest(name, names.clone()).map_or_else(
@@ -635,6 +639,23 @@ impl<'r, 'p> Reader<'r, 'p> {
                     format!("\"{name}\" cannot be replaced by a measurement"),
                     need,
                 ));
+                continue;
+            }
+            if self.technique.rules[index].measurable == crate::step::Measurable::Energy {
+                match self.route.amounts.read(text, Kind::Energy) {
+                    Ok(amount) => {
+                        measured[index] =
+                            Some(Measured::Energy(self.route.input(path, &amount, Origin::Measured)));
+                        // The meter counts what no power is stated for.
+                        let under = self.path.clone() + ".";
+                        self.route.uncounted.retain(|path| !path.starts_with(&under));
+                    }
+                    Err(e) => {
+                        let need = "the electricity of one run as a meter reads it, such as \"1.2 kWh\"";
+                        let found = format!("\"{text}\": {}", e.found());
+                        self.route.problems.push(Problem::error(path, found, need));
+                    }
+                }
                 continue;
             }
             let mass = self.route.amounts.read(text, Kind::Mass);

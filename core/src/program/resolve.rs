@@ -3,6 +3,7 @@
 use super::amounts::Amounts;
 use super::materials::{MaterialBook, MaterialUse};
 use super::reader::Reader;
+use super::waste;
 use super::{
     Assumption, Basis, Program, RouteProgram, SiteUse, StepProgram, StreamUse, Work, WorkloadProgram,
 };
@@ -34,6 +35,7 @@ pub struct Resolved {
 #[must_use]
 pub fn resolve(plan: &Plan) -> Resolved {
     let mut problems = Vec::new();
+    let seed = seed(plan, &mut problems);
     let site = site(plan, &mut problems);
     let mut book = MaterialBook::read(&plan.materials, &mut problems);
     if plan.workloads.is_empty() {
@@ -63,14 +65,28 @@ pub fn resolve(plan: &Plan) -> Resolved {
             routes.push(builder.build(workload, route, &path, &at));
         }
         let present = workload.routes.iter().position(|r| r.name == workload.present).unwrap_or(0);
-        workloads.push(WorkloadProgram { name: workload.name.clone(), present, routes });
+        let months = waste::months(workload.months.as_deref(), &below(&path, "months"), &mut problems);
+        workloads.push(WorkloadProgram { name: workload.name.clone(), months, present, routes });
     }
     let broken = problems.iter().any(|p| p.severity == Severity::Error);
-    let program = (!broken).then(|| Program { title: plan.title.clone(), site, workloads });
+    let program = (!broken).then(|| Program { title: plan.title.clone(), seed, site, workloads });
     // The same doubt about a shared figure is told once.
     let mut told = std::collections::BTreeSet::new();
     problems.retain(|p| told.insert((p.path.clone(), p.found.clone())));
     Resolved { program, problems }
+}
+
+fn seed(plan: &Plan, problems: &mut Vec<Problem>) -> u64 {
+    let Some(Field::Text(text) | Field::Number(text)) = &plan.seed else { return 1 };
+    text.trim().parse().unwrap_or_else(|_| {
+        let found = format!("{text} is not such a number");
+        problems.push(Problem::error(
+            "seed",
+            found,
+            "a whole number from 0 to 18446744073709551615, such as 1",
+        ));
+        1
+    })
 }
 
 fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
@@ -132,7 +148,8 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         .enumerate()
         .map(|(i, s)| stream(s, &format!("site.streams[{i}]"), problems))
         .collect();
-    SiteUse { name: doc.name.clone(), rules, as_of: doc.as_of.clone(), bench_temperature_k, streams }
+    let waste = waste::site(doc, problems);
+    SiteUse { name: doc.name.clone(), rules, as_of: doc.as_of.clone(), bench_temperature_k, streams, waste }
 }
 
 fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {
@@ -205,10 +222,17 @@ fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {
             "0.6 kg/L is assumed (from memory): weigh a full container",
         ));
     }
-    StreamUse { name: doc.name.clone(), solid, container_m3, fill, bulk_density_kg_m3, treatment }
+    let waste = waste::stream(doc, path, problems);
+    StreamUse { name: doc.name.clone(), solid, container_m3, fill, bulk_density_kg_m3, treatment, waste }
 }
 
-fn amount(text: Option<&str>, default: &str, kind: Kind, path: &str, problems: &mut Vec<Problem>) -> f64 {
+pub(super) fn amount(
+    text: Option<&str>,
+    default: &str,
+    kind: Kind,
+    path: &str,
+    problems: &mut Vec<Problem>,
+) -> f64 {
     match read(text.unwrap_or(default), kind) {
         Ok(amount) => amount.central_si,
         Err(e) => {
@@ -526,7 +550,7 @@ impl<'p> RouteBuilder<'p> {
         }
         let ends = self.ends(doc, path);
         let recovery = self.read_optional(doc.recovery.as_deref(), Kind::Fraction, &below(path, "recovery"));
-        let ph = doc.ph.as_deref().and_then(|text| self.ph(text, &below(path, "ph")));
+        let ph = doc.ph.as_deref().and_then(|text| waste::ph(text, &below(path, "ph"), self.problems));
         if doc.recovery.is_none() && workload.routes.len() > 1 {
             self.problems.push(Problem::warning(
                 below(path, "recovery"),
@@ -730,33 +754,5 @@ impl<'p> RouteBuilder<'p> {
                 },
             }
         })
-    }
-
-    fn ph(&mut self, text: &str, path: &str) -> Option<(f64, f64)> {
-        match read(text, Kind::Number) {
-            Ok(amount) => {
-                let (low, high) = match amount.spread {
-                    Spread::Limits { low_si, high_si } => (low_si, high_si),
-                    Spread::Exact | Spread::Standard { .. } => (amount.central_si, amount.central_si),
-                };
-                if low < -2.0 || high > 16.0 {
-                    self.problems.push(Problem::error(
-                        path,
-                        format!("\"{text}\" is no pH that water reaches"),
-                        "pH between -2 and 16, such as \"2 to 7\"",
-                    ));
-                    return None;
-                }
-                Some((low, high))
-            }
-            Err(e) => {
-                self.problems.push(Problem::error(
-                    path,
-                    format!("\"{text}\": {}", e.found()),
-                    "pH, such as \"2 to 7\"",
-                ));
-                None
-            }
-        }
     }
 }

@@ -7,6 +7,7 @@
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
 //! | [`log_tables`], [`reconciliation_table`], [`solvent_balance_table`] | the site's records, as tables |
+//! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
@@ -16,6 +17,7 @@ mod data_table;
 mod grid;
 mod log;
 mod markdown;
+mod odds;
 mod result;
 mod row;
 mod table;
@@ -26,6 +28,7 @@ pub use csv::{result_csv, text_cell};
 pub use data_table::{DataCell, DataTable, data_csv, data_json, data_markdown, data_text};
 pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown};
+pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
 pub use table::{account_table, comparison_table};

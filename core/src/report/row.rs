@@ -56,3 +56,9 @@ pub(super) const fn key_unit(measure: Measure) -> &'static str {
         Measure::Ratio => "ratio",
     }
 }
+
+/// The unit of a yearly figure as it stands in a key of a document.
+pub(super) fn yearly(measure: Measure) -> String {
+    let unit = key_unit(measure);
+    if measure.extensive() { format!("{unit}_per_year") } else { unit.to_owned() }
+}

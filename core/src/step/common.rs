@@ -1,7 +1,7 @@
 //! Rules that several techniques share.
 
 use crate::chance::{Draw, In};
-use crate::ledger::{Bench, Halt, Material, Place, RuleIx, Utility};
+use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::quantity::Kind;
 
 /// What the sample gives up: a share of each named material moves with the extract.
@@ -34,10 +34,23 @@ pub(super) fn hold_up(b: &mut Bench<'_>, hold_up_m3_kg: f64, marc_kg: f64, rule:
     Ok(())
 }
 
-/// Electrical energy of a steady power over a time.
-pub(super) fn electricity(b: &mut Bench<'_>, power_w: f64, time_s: f64, rule: RuleIx) {
-    b.note(rule, "P", power_w, Kind::Power);
-    b.note(rule, "t", time_s, Kind::Time);
-    // W = P t
-    b.spend(Utility::Electricity, power_w * time_s, rule);
+/// Electricity of a step: power by time where both are stated, against the floor of physics where that is known; J.
+pub(super) fn electricity(
+    x: Draw<'_>,
+    b: &mut Bench<'_>,
+    power: Option<In>,
+    time_s: Option<f64>,
+    floor_j: Option<f64>,
+    rule: RuleIx,
+) {
+    let nominal_j = match (power, time_s) {
+        (Some(power), Some(time_s)) => {
+            b.note(rule, "P", x.get(power), Kind::Power);
+            b.note(rule, "t", time_s, Kind::Time);
+            // W = P t
+            Some(x.get(power) * time_s)
+        }
+        _ => None,
+    };
+    b.electricity(nominal_j, floor_j, rule);
 }

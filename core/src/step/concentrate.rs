@@ -82,7 +82,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         Rule::new("lost past the condenser", "mᵢ = s mᵢ(vapour)", FROM_MEMORY).measurable(),
         Rule::new("condensed", "what is left of the vapour", MASS_BALANCE),
         Rule::new("nitrogen blown through", "m = q t p M / (R T), 25 °C and 1 atm", IDEAL_GAS),
-        Rule::new("heating and pumping", "W = P t", DEFINITION),
+        Rule::new("heating and pumping", "W = P t", DEFINITION).metered(),
     ],
     cautions: &[HEATED_FLAMMABLE, PEROXIDES, EVAPORATED_TO_AIR],
     example: r#"{ "step": "concentrate", "by": "rotary evaporator", "to": "5 mL", "condensate": "elsewhere", "time": "20 min",
@@ -174,9 +174,7 @@ impl Step for Concentrate {
             let kg = x.get(flow) * x.get(time) * NITROGEN_KG_M3;
             b.charge(Place::STORE, self.lost_to, nitrogen, kg, BLOWN)?;
         }
-        if let (Some(power), Some(time)) = (self.power, self.time) {
-            super::electricity(b, x.get(power), x.get(time), HEATED);
-        }
+        super::electricity(x, b, self.power, self.time.map(|t| x.get(t)), None, HEATED);
         Ok(())
     }
 }

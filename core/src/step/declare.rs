@@ -159,6 +159,8 @@ pub enum Measurable {
     No,
     /// By a mass a run, or by a share of what was there.
     MassOrShare,
+    /// By the electricity of a run, as a meter reads it.
+    Energy,
 }
 
 /// One rule by which a technique moves mass or spends a utility.
@@ -185,6 +187,13 @@ impl Rule {
     #[must_use]
     pub const fn measurable(mut self) -> Self {
         self.measurable = Measurable::MassOrShare;
+        self
+    }
+
+    /// The same rule, open to a meter's reading.
+    #[must_use]
+    pub const fn metered(mut self) -> Self {
+        self.measurable = Measurable::Energy;
         self
     }
 }

@@ -119,7 +119,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         Rule::new("extracted", "mᵢ = sᵢ mᵢ(marc)", MASS_BALANCE),
         Rule::new("carried off by the purge", "mᵢ = s mᵢ(liquor)", FROM_MEMORY).measurable(),
         Rule::new("held in the marc", "mᵢ = (h m_marc / V_liquor) mᵢ(liquor)", FROM_MEMORY).measurable(),
-        Rule::new("heating and pumping", "W = P t", DEFINITION),
+        Rule::new("heating and pumping", "W = P t", DEFINITION).metered(),
     ],
     cautions: &[PRESSURE_VESSEL, HEATED_FLAMMABLE],
     example: r#"{ "step": "pressurised-liquid", "solvent": { "n-hexane": "50 %", "acetone": "50 %" }, "cell": "33 mL",
@@ -190,9 +190,7 @@ impl Step for PressurisedLiquid {
         // mᵢ = s mᵢ(liquor)
         b.share_volatile(Place::LIQUOR, self.lost_to, loss, LOST)?;
         super::hold_up(b, x.get(self.hold_up), marc_kg, HELD)?;
-        if let (Some(power), Some(time)) = (self.power, self.time) {
-            super::electricity(b, x.get(power), x.get(time), HEATED);
-        }
+        super::electricity(x, b, self.power, self.time.map(|t| x.get(t)), None, HEATED);
         Ok(())
     }
 }

@@ -75,7 +75,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         Rule::new("extracted", "mᵢ = sᵢ mᵢ(marc)", MASS_BALANCE),
         Rule::new("condenser loss", "mᵢ = s mᵢ(liquor)", FROM_MEMORY).measurable(),
         Rule::new("held in the marc", "mᵢ = (h m_marc / V_liquor) mᵢ(liquor)", FROM_MEMORY).measurable(),
-        Rule::new("heating", "W = P t", DEFINITION),
+        Rule::new("heating", "W = P t", DEFINITION).metered(),
         Rule::new("cooling water", "m = q t · 1000 kg/m³", DEFINITION),
     ],
     cautions: &[HEATED_FLAMMABLE, PEROXIDES],
@@ -123,9 +123,7 @@ impl Step for Soxhlet {
         super::extract(x, b, &self.extracts, Place::MARC, Place::LIQUOR, EXTRACTED)?;
         super::hold_up(b, x.get(self.hold_up), marc_kg, HELD)?;
 
-        if let Some(heater) = self.heater {
-            super::electricity(b, x.get(heater), time_s, HEATED);
-        }
+        super::electricity(x, b, self.heater, Some(time_s), None, HEATED);
         if let Some(flow) = self.cooling_water {
             b.note(COOLED, "q", x.get(flow), Kind::VolumeFlow);
             b.note(COOLED, "t", time_s, Kind::Time);

@@ -77,7 +77,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         Rule::new("extracted", "mᵢ = sᵢ mᵢ(marc)", MASS_BALANCE),
         Rule::new("lost to air", "mᵢ = s mᵢ(liquor)", FROM_MEMORY).measurable(),
         Rule::new("held in the marc", "mᵢ = (h m_marc / V_liquor) mᵢ(liquor)", FROM_MEMORY).measurable(),
-        Rule::new("sonication", "W = P t n", DEFINITION),
+        Rule::new("sonication", "W = P t n", DEFINITION).metered(),
     ],
     cautions: &[HEATED_FLAMMABLE],
     example: r#"{ "step": "ultrasonic", "solvent": { "n-hexane": "50 %", "acetone": "50 %" }, "charge": "100 mL",
@@ -124,10 +124,9 @@ impl Step for Ultrasonic {
         b.share_volatile(Place::LIQUOR, self.lost_to, loss, LOST)?;
         super::extract(x, b, &self.extracts, Place::MARC, Place::LIQUOR, EXTRACTED)?;
         super::hold_up(b, x.get(self.hold_up), marc_kg, HELD)?;
-        if let (Some(power), Some(time)) = (self.power, self.time) {
-            // W = P t n
-            super::electricity(b, x.get(power), x.get(time) * f64::from(self.portions), SONICATED);
-        }
+        // W = P t n
+        let time_s = self.time.map(|t| x.get(t) * f64::from(self.portions));
+        super::electricity(x, b, self.power, time_s, None, SONICATED);
         Ok(())
     }
 }

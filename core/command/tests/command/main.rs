@@ -4,6 +4,8 @@
 mod bad_input;
 mod co2;
 mod files;
+mod log;
+mod odds;
 mod results;
 
 use serde_json::Value;

@@ -2,7 +2,7 @@
 //! as text where it can be, so that it can be shown and mended.
 
 use super::super::document::{
-    Electricity, Field, Log, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
+    Electricity, Field, Log, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
 };
 use super::super::keys::STEP;
 use super::super::tree::Node;
@@ -66,6 +66,7 @@ pub(super) fn plan(node: &Node) -> Plan {
     Plan {
         title: required(node, "title"),
         notes: text(node, "notes"),
+        seed: get(node, "seed").map(field),
         site: get(node, "site").map(site).unwrap_or_default(),
         materials: get(node, "materials").map(materials).unwrap_or_default(),
         workloads: list(node, "workloads", workload),
@@ -103,6 +104,21 @@ fn site(node: &Node) -> Site {
             hood_capture: text(node, "hood_capture"),
         }),
         streams: list(node, "streams", stream),
+        activity: text(node, "activity"),
+        other_waste: list(node, "other_waste", other_waste),
+        storage_limit: text(node, "storage_limit"),
+        pick_up_every: text(node, "pick_up_every"),
+        far_receiver: yes_no(node, "far_receiver"),
+        deviations: text(node, "deviations"),
+    }
+}
+
+fn other_waste(node: &Node) -> OtherWaste {
+    OtherWaste {
+        name: required(node, "name"),
+        each_month: required(node, "each_month"),
+        months: text(node, "months"),
+        acute: yes_no(node, "acute"),
     }
 }
 
@@ -114,6 +130,13 @@ fn stream(node: &Node) -> Stream {
         fill: text(node, "fill"),
         bulk_density: text(node, "bulk_density"),
         treatment: text(node, "treatment"),
+        ph: text(node, "ph"),
+        flash_point: text(node, "flash_point"),
+        unused: yes_no(node, "unused"),
+        made_of: text(node, "made_of"),
+        density_mark: get(node, "density_mark").map(field),
+        area: text(node, "area"),
+        counted: text(node, "counted"),
     }
 }
 
@@ -138,6 +161,7 @@ fn workload(node: &Node) -> Workload {
         repeats_bring_controls: yes_no(node, "repeats_bring_controls"),
         controls_carry_feed: yes_no(node, "controls_carry_feed"),
         feed: get(node, "feed").map(rows).unwrap_or_default(),
+        months: text(node, "months"),
         present: required(node, "present"),
         routes: list(node, "routes", route),
     }

@@ -1,6 +1,6 @@
 //! Figures and differences: flat rows whose keys name the unit.
 
-use super::super::row::{Row, figures, key_unit, written};
+use super::super::row::{Row, figures, key_unit, written, yearly};
 use crate::account::{Figure, Measure, RouteAccount};
 use crate::compare::{Cause, Comparison, Difference};
 use crate::program::WorkloadProgram;
@@ -112,9 +112,4 @@ impl Serialize for CauseRow<'_> {
         map.serialize_entry(&format!("change_{}", yearly(measure)), &written(measure, self.0.change))?;
         map.end()
     }
-}
-
-fn yearly(measure: Measure) -> String {
-    let unit = key_unit(measure);
-    if measure.extensive() { format!("{unit}_per_year") } else { unit.to_owned() }
 }

@@ -149,7 +149,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         ),
         Rule::new("returned to supply", "what the let-down recovers", MASS_BALANCE),
         Rule::new("trap emptied", "all that is there", MASS_BALANCE),
-        Rule::new("pumping, chilling and heating", "W = P t", DEFINITION),
+        Rule::new("pumping, chilling and heating", "W = P t", DEFINITION).metered(),
     ],
     cautions: &[PRESSURE_VESSEL, TRAPPED_LIQUID, DRY_ICE, CO2_IN_ROOM, FLAMMABLE_VENT],
     example: r#"{ "step": "supercritical", "temperature": "80 °C", "pressure": "305 bar", "vessel": "7 mL",
@@ -214,9 +214,8 @@ impl Step for Supercritical {
         }
         self.trap.rinse(x, b, RINSED)?;
         b.sweep(Place::TRAP, Place::LIQUOR, EMPTIED);
-        if let Some((power, time)) = self.power {
-            super::electricity(b, x.get(power), x.get(time), PUMPED);
-        }
+        let (power, time) = self.power.unzip();
+        super::electricity(x, b, power, time.map(|t| x.get(t)), None, PUMPED);
         Ok(())
     }
 }

@@ -1,0 +1,31 @@
+//! How sure the figures are: the whole plan drawn again and again (JCGM 101:2008), every route by the same draws.
+//!
+//! | file | what it holds |
+//! | --- | --- |
+//! | `sampled` | the sampled run of a plan, in slices, followed through edits |
+//! | `column` | the draws of one route: a column for each figure |
+//! | `reading` | what the columns say: intervals, odds, what matters most, first-order propagation beside them |
+//!
+//! Draws in which a route stops are counted by step and kind and left out; with more than [`MOST_STOPPED`] of them no
+//! interval is given.
+
+mod column;
+mod name;
+mod reading;
+mod sampled;
+
+pub use column::{MOST_STOPPED, RouteColumns, Stopped};
+pub use reading::{FigureReading, Matter, Reading, Rival, Spreading};
+pub use sampled::{MOST_CELLS, Sampled, Wish};
+
+use crate::account::{Figure, Group};
+use crate::compare::HEADLINES;
+
+/// Whether a figure is one of those that people decide by: the headline figures, and E-factor and process mass intensity
+/// where there is a product.
+#[must_use]
+pub fn headline(figure: &Figure) -> bool {
+    let id = figure.id.as_str();
+    HEADLINES.iter().any(|(h, _)| *h == id)
+        || figure.group == Group::Metric && matches!(id, "metric.e_factor.net" | "metric.pmi.net")
+}
