@@ -6,6 +6,8 @@
 const LARGEST_FILE = 8 * 1024 * 1024;
 let kept = null;
 let hear = null;
+// How many bytes of the program are unpacked at a time.
+const PIECE = 262144;
 
 function keepPlan(name, text) {
   kept = { name, text };
@@ -157,20 +159,24 @@ function focusOn(id) {
   target.focus();
 }
 
-// Two of 91 signs for every thirteen bits; see web/pack/src/packing.rs.
-function bytesOf(signs) {
-  const bytes = new Uint8Array(Number.parseInt(signs, 10));
-  const value = (i) => {
-    const code = signs.charCodeAt(i);
-    return (code === 33 ? 60 : code === 126 ? 92 : code) - 35;
-  };
+// Seven bits a character, lowest first; one of two bytes has fourteen. See web/pack/src/packing.rs.
+const APART = [0, 10, 13, 34, 60, 92];
+
+function bytesOf([size, signs]) {
+  const bytes = new Uint8Array(size);
   let held = 0;
   let bits = 0;
   let at = 0;
-  for (let i = signs.indexOf(":") + 1; i < signs.length; i += 2) {
-    held |= (value(i) + value(i + 1) * 91) << bits;
-    bits += 13;
-    while (bits >= 8 && at < bytes.length) {
+  for (let i = 0; i < signs.length; i += 1) {
+    const sign = signs.charCodeAt(i);
+    if (sign < 128) {
+      held |= sign << bits;
+      bits += 7;
+    } else {
+      held |= (APART[(sign - 160) >> 7] | (((sign - 160) & 127) << 7)) << bits;
+      bits += 14;
+    }
+    while (bits >= 8) {
       bytes[at] = held;
       at += 1;
       held >>>= 8;
@@ -180,6 +186,7 @@ function bytesOf(signs) {
   return bytes;
 }
 
+// Unpacked a piece a turn, so that the browser compiles what is there while the next is unpacked.
 async function unpacked() {
   const packed = bytesOf(PAYLOAD);
   const from = 65536;
@@ -188,15 +195,23 @@ async function unpacked() {
   new Uint16Array(memory.buffer, 0, 7164).fill(1024);
   new Uint8Array(memory.buffer, from).set(packed);
   const { instance } = await WebAssembly.instantiate(bytesOf(UNPACKER), { "": { memory } });
-  instance.exports.unpack(from, to, SIZE);
-  return new Uint8Array(memory.buffer, to, SIZE);
+  instance.exports.begin(from, to);
+  let at = to;
+  const pull = (pieces) => {
+    const end = instance.exports.unpack(Math.min(at + PIECE, to + SIZE));
+    pieces.enqueue(new Uint8Array(memory.buffer, at, end - at));
+    at = end;
+    if (at >= to + SIZE) pieces.close();
+  };
+  const headers = { "content-type": "application/wasm" };
+  return new Response(new ReadableStream({ pull }), { headers });
 }
 
 async function load() {
   if (typeof WebAssembly !== "object") {
     throw new Error("this browser lacks WebAssembly. A current browser has it");
   }
-  wasm_bindgen.initSync({ module: await WebAssembly.compile(await unpacked()) });
+  wasm_bindgen.initSync({ module: await WebAssembly.compileStreaming(unpacked()) });
   return { account: wasm_bindgen.account };
 }
 

@@ -28,6 +28,7 @@ pub mod metric;
 pub mod mixture;
 pub mod odds;
 pub mod plan;
+pub mod pour;
 pub mod program;
 pub mod quantity;
 pub mod report;

@@ -4,7 +4,7 @@ import { createContext, runInContext } from "node:vm";
 
 /** The script's exports, `{ account }`, once it is unpacked. `file` is `web/dist/page.js`. */
 export function load(file) {
-  const lent = { atob, Blob, console, DecompressionStream, Response, TextDecoder, TextEncoder, WebAssembly };
+  const lent = { console, ReadableStream, Response, TextDecoder, TextEncoder, WebAssembly };
   const context = createContext(lent);
   runInContext(readFileSync(file, "utf8"), context, { filename: file });
   return context.thimbleworth.ready;

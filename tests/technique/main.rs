@@ -9,6 +9,7 @@
 )]
 
 mod cases;
+mod circuit;
 mod declared;
 mod posted;
 mod staged;

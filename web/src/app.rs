@@ -127,9 +127,21 @@ pub(crate) fn App() -> Html {
         use_callback((), move |(item, name): (Item, String), ()| refusal(newest.borrow().plan(), item, &name))
     };
 
+    // The question can be typed into before the first figures stand.
+    let put_up = use_state_eq(|| false);
+    {
+        let put_up = put_up.clone();
+        use_effect_with((), move |()| {
+            let timer = Timeout::new(0, move || put_up.set(true));
+            move || drop(timer)
+        });
+    }
     let last = use_mut_ref(|| None::<Rc<Book>>);
     let reckoned = {
-        use_memo(ByRc(Rc::clone(state.document())), move |document| {
+        use_memo((ByRc(Rc::clone(state.document())), *put_up), move |(document, put_up)| {
+            if !put_up {
+                return Reckoned::pending(&document.plan);
+            }
             let before = last.borrow().clone();
             let reckoned = Reckoned::new(&document.plan, &save(&document.plan), before.as_ref());
             *last.borrow_mut() = Some(Rc::clone(&reckoned.book));
@@ -204,8 +216,8 @@ pub(crate) fn App() -> Html {
         Callback::from(move |event: MouseEvent| delegated(&event, &act))
     };
     let view = View::new(&state, &reckoned, edit, act.clone(), refusal);
-    let finding: Vec<String> =
-        (0..reckoned.book.works.len()).flat_map(|w| reckoned.book.finding(w)).collect();
+    let works = if reckoned.pending { 0 } else { reckoned.book.works.len() };
+    let finding: Vec<String> = (0..works).flat_map(|w| reckoned.book.finding(w)).collect();
     let examples: Vec<AttrValue> = EXAMPLES.iter().map(|e| AttrValue::from(e.title)).collect();
     html! {
         <>
@@ -226,10 +238,12 @@ pub(crate) fn App() -> Html {
                     { report_head(&state, &finding) }
                     <Mend plan={Rc::clone(state.document())} reckoned={ByRc(reckoned.clone())} open={state.view.listed} act={act.clone()} />
                     <Leaves {view} />
-                    <datalist id="catalogue">
-                        { for state.plan().materials.iter().map(|m| html! { <option value={m.name.clone()} /> }) }
-                        { names() }
-                    </datalist>
+                    if !reckoned.pending {
+                        <datalist id="catalogue">
+                            { for state.plan().materials.iter().map(|m| html! { <option value={m.name.clone()} /> }) }
+                            { names() }
+                        </datalist>
+                    }
                 </main>
                 <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} />
             </div>
@@ -406,7 +420,7 @@ fn ReadOut(props: &ReadOutProps) -> Html {
         let said = said.clone();
         use_effect_with(props.text.clone(), move |text| {
             let text = text.clone();
-            let opening = first.replace(false);
+            let opening = if text.is_empty() { true } else { first.replace(false) };
             let timer = (!opening).then(|| Timeout::new(READ_OUT_AFTER_MS, move || said.set(text)));
             move || drop(timer)
         });

@@ -62,6 +62,8 @@ pub struct Reckoned {
     pub book: Rc<Book>,
     /// Whether the figures are those of an earlier state of the plan.
     pub old: bool,
+    /// Whether nothing has been accounted yet, because the page is still being put up.
+    pub pending: bool,
 }
 
 /// The figures of every piece of work.
@@ -112,7 +114,7 @@ impl Reckoned {
         let mut problems = full.problems.clone();
         if full.program.is_some() {
             let book = Rc::new(Book::new(plan, full, &whole(plan), &problems));
-            return Self { problems, book, old: false };
+            return Self { problems, book, old: false, pending: false };
         }
         let kept = whatever_holds(plan, &problems);
         if kept.iter().any(|routes| !routes.is_empty()) {
@@ -126,17 +128,24 @@ impl Reckoned {
                 }
                 problems.sort_by_key(|p| p.severity);
                 let book = Rc::new(Book::new(plan, partial, &kept, &problems));
-                return Self { problems, book, old: false };
+                return Self { problems, book, old: false, pending: false };
             }
         }
         match before {
-            Some(book) if book.fits(plan) => Self { problems, book: Rc::clone(book), old: true },
+            Some(book) if book.fits(plan) => {
+                Self { problems, book: Rc::clone(book), old: true, pending: false }
+            }
             _ => {
-                let none = Account { plan: None, program: None, workloads: Vec::new(), problems: Vec::new() };
-                let book = Rc::new(Book::new(plan, none, &[], &problems));
-                Self { problems, book, old: false }
+                let book = Rc::new(Book::none(plan, &problems));
+                Self { problems, book, old: false, pending: false }
             }
         }
+    }
+
+    /// Nothing yet: what the page begins with, so that it can be typed into before its figures stand.
+    #[must_use]
+    pub fn pending(plan: &Plan) -> Self {
+        Self { problems: Vec::new(), book: Rc::new(Book::none(plan, &[])), old: false, pending: true }
     }
 
     /// As [`new`](Self::new), with nothing to fall back on.
@@ -247,6 +256,12 @@ impl Book {
             works.push(Work { name: workload.name.clone(), present, routes, at, comparison });
         }
         Self { account, works }
+    }
+
+    /// Without any figures.
+    fn none(plan: &Plan, problems: &[Problem]) -> Self {
+        let none = Account { plan: None, program: None, workloads: Vec::new(), problems: Vec::new() };
+        Self::new(plan, none, &[], problems)
     }
 
     /// Whether these figures can stand in for those of `plan`: the same works with as many routes.

@@ -14,10 +14,12 @@ mod log;
 mod materials;
 mod odds;
 mod output;
+mod pour;
 mod schema;
 mod states;
 mod technique;
 mod trace;
+mod waste;
 mod workbook;
 
 use clap::{Parser, Subcommand};
@@ -48,6 +50,10 @@ enum What {
     Odds(odds::Args),
     /// The postings, rules and inputs behind one figure
     Trace(trace::Args),
+    /// Papers of the waste desk: codes, labels, contents, months, pick-ups, load
+    Waste(waste::Args),
+    /// May this go into that container: codes gained, what must not meet, headspace
+    Pour(pour::Args),
     /// All errors and warnings of a plan; exit status 1 if there is an error
     Check(check::Args),
     /// The catalogue of materials, or all figures of one with their sources
@@ -79,6 +85,8 @@ fn main() -> ExitCode {
         Some(What::Compare(args)) => account::run(args, account::What::Comparison),
         Some(What::Odds(args)) => odds::run(args),
         Some(What::Trace(args)) => trace::run(args),
+        Some(What::Waste(args)) => waste::run(args),
+        Some(What::Pour(args)) => pour::run(args),
         Some(What::Check(args)) => check::run(args),
         Some(What::Materials(args)) => materials::run(args),
         Some(What::Schema) => schema::run(),

@@ -146,13 +146,20 @@ pub enum How {
     Sum(Vec<Term>),
     /// A utility spent; a year.
     Spent(Utility),
-    /// Containers filled in a year: the volume of another figure over what one container takes, carried over through
+    /// Containers filled or emptied in a year: the volume or mass of another figure over what one container takes, carried over through
     /// the year and rounded up once.
     Containers {
-        /// The index of the figure with the volume.
-        volume: usize,
-        /// What one container takes; m³.
-        takes_m3: f64,
+        /// The index of the figure with the volume, or the mass.
+        of: usize,
+        /// What one container takes; SI.
+        takes: f64,
+    },
+    /// Another figure times a constant.
+    Times {
+        /// The index of that figure.
+        of: usize,
+        /// What it is multiplied with; SI.
+        factor: f64,
     },
     /// One figure over another.
     Ratio {
@@ -251,7 +258,7 @@ pub fn with_what_they_rest_on(figures: &[Figure], wanted: &[usize]) -> Vec<usize
     for i in (0..figures.len()).rev() {
         if needed[i] {
             match figures[i].how {
-                How::Containers { volume, .. } => needed[volume] = true,
+                How::Containers { of, .. } | How::Times { of, .. } => needed[of] = true,
                 How::Ratio { over, under } => (needed[over], needed[under]) = (true, true),
                 How::Sum(_) | How::Spent(_) => {}
             }
@@ -280,7 +287,8 @@ fn value(figure: &Figure, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
         }
         How::Spent(utility) => desk.spent[*utility as usize],
         // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number
-        How::Containers { volume, takes_m3 } => libm::ceil(out[*volume] / takes_m3 - 1e-9),
+        How::Containers { of, takes } => libm::ceil(out[*of] / takes - 1e-9),
+        How::Times { of, factor } => out[*of] * factor,
         How::Ratio { over, under } => {
             let under = out[*under];
             if under > 0.0 { out[*over] / under } else { 0.0 }

@@ -4,6 +4,7 @@
 //! postings behind it, and the same figure can be evaluated for any draw.
 
 mod carbon_dioxide;
+mod desk;
 mod energy;
 mod figure;
 mod hazard;
@@ -14,6 +15,8 @@ mod poured;
 mod waste;
 mod working;
 
+pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
+pub use energy::{StepEnergy, by_step};
 pub use figure::{
     Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
 };

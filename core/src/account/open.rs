@@ -9,7 +9,7 @@ use crate::ledger::{Direction, Halt, Material, Place, RuleIx, StepIx, Trace};
 use crate::plan::{Plan, Problem, Severity, below, open};
 use crate::program::{BOOK_RULES, Desk, Failure, Program, RouteProgram, Runs, SiteUse, resolve};
 use crate::quantity::{Kind, show};
-use crate::step::{Caution, Rule};
+use crate::step::{Caution, DenseCo2, Rule};
 
 /// The account of a whole plan.
 pub struct Account {
@@ -47,6 +47,8 @@ pub struct RouteAccount {
     pub refusals: Vec<Refusal>,
     /// The usual cautions of its steps.
     pub cautions: Vec<&'static Caution>,
+    /// Steps with dense CO2 as their states are, by their index in the route; central values.
+    pub dense: Vec<(usize, DenseCo2)>,
     /// Product made in a year; kg.
     pub product_kg: f64,
 }
@@ -156,7 +158,8 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     let mut draft = Draft::default();
     mass::draw_up(&mut draft, route, site, &desk);
     waste::draw_up(&mut draft, route, site, &desk);
-    carbon_dioxide::draw_up(&mut draft, route, site, &desk);
+    let dense = energy::dense(route, Draw(&x));
+    carbon_dioxide::draw_up(&mut draft, route, site, &desk, &dense);
     let refusals = metric::draw_up(&mut draft, route, site, &desk);
     energy::draw_up(&mut draft, &desk);
     let assessed = hazard::materials(route, &desk, site);
@@ -183,6 +186,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         trace,
         refusals,
         cautions,
+        dense,
         product_kg,
     })
 }
@@ -253,6 +257,12 @@ fn measured_path(route: &RouteProgram, step: StepIx, rule: RuleIx) -> Option<Str
     step.measured.get(rule.0 as usize).copied().flatten()?;
     let name = step.technique.rules.get(rule.0 as usize)?.name;
     Some(below(&below(&step.path, "measured"), name))
+}
+
+/// The sentence of a state or loop says what would do after its last semicolon.
+pub(super) fn found_and_need(text: &str) -> (String, String) {
+    let (found, need) = text.rsplit_once("; ").unwrap_or((text, "another temperature or pressure"));
+    (found.to_owned(), need.to_owned())
 }
 
 fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
@@ -345,14 +355,8 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
             ),
             "a smaller volume to be left, or no concentration".to_owned(),
         ),
-        Halt::Co2(e) => {
-            // The sentence of a state says what would do after its last semicolon.
-            let text = e.to_string();
-            text.rsplit_once("; ").map_or_else(
-                || (text.clone(), "another temperature or pressure".to_owned()),
-                |(found, need)| (found.to_owned(), need.to_owned()),
-            )
-        }
+        Halt::Co2(e) => found_and_need(&e.to_string()),
+        Halt::Loop(e) => found_and_need(&e.to_string()),
         Halt::NotANumber { rule: r } => (
             format!("\"{}\" comes to an amount that is negative or not a finite number", rule(r)),
             "check the amounts of this step".to_owned(),

@@ -18,6 +18,12 @@ pub struct Pouring<'a> {
     pub account: &'a RouteAccount,
 }
 
+impl std::fmt::Debug for Pouring<'_> {
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        f.write_str(&self.route.name)
+    }
+}
+
 /// What one stream receives in a year.
 #[derive(Clone, Debug)]
 pub struct StreamContents<'a> {

@@ -73,7 +73,7 @@ pub(super) fn draw_up(draft: &mut Draft, route: &RouteProgram, site: &SiteUse, d
                 boundary: "carried over through the year and rounded up once; a storage time limit may ask for more pick-ups".into(),
                 formula: "n = ⌈V / (V_c · fill)⌉",
                 source: COMMON_PRACTICE,
-                how: How::Containers { volume, takes_m3: container_m3 * stream.fill },
+                how: How::Containers { of: volume, takes: container_m3 * stream.fill },
             });
         }
     }

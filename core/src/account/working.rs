@@ -27,8 +27,8 @@ pub enum Contribution {
 
 /// What lies behind a figure, largest first; zeros are left out.
 ///
-/// Behind a number of containers lies what is behind its volume; a ratio has its two figures behind it, named by
-/// [`How::Ratio`], and no entries of its own.
+/// Behind a number of containers lies what is behind its volume; a ratio or a multiple has the figures behind it that
+/// [`How`] names, and no entries of its own.
 #[must_use]
 pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> Vec<Contribution> {
     let mut out = Vec::new();
@@ -66,12 +66,12 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
                 }
             }
         }
-        How::Containers { volume, .. } => {
-            if let Some(volume) = account.figures.get(*volume) {
-                return behind(route, account, volume);
+        How::Containers { of, .. } => {
+            if let Some(of) = account.figures.get(*of) {
+                return behind(route, account, of);
             }
         }
-        How::Ratio { .. } => {}
+        How::Ratio { .. } | How::Times { .. } => {}
     }
     let size = |c: &Contribution| match c {
         Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => amount_si.abs(),

@@ -36,6 +36,7 @@ mod fits;
 mod helmholtz;
 mod inverse;
 mod isotherm;
+mod memo;
 mod start;
 mod viscosity;
 
@@ -47,11 +48,11 @@ pub use coefficients::{
 };
 pub use density::{density_and_phase, density_kg_m3, pressure_pa};
 pub use error::StateError;
-pub(crate) use inverse::enthalpy_from_entropy_near;
 pub use inverse::{
     Equilibrium, Phases, saturation_temperature_k, state_from_enthalpy, state_from_entropy,
     temperature_from_enthalpy_k, temperature_from_entropy_k,
 };
+pub use memo::Memo;
 pub use viscosity::viscosity_pa_s;
 
 /// Highest temperature of the equation of state, K.

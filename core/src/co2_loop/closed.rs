@@ -1,8 +1,8 @@
 //! The closed loop: what the separator gives up as gas is condensed and pumped again.
 use super::error::{above, at};
-use super::machine::pump;
+use super::machine::pump_in;
 use super::{Kind, Loop, LoopError, Point};
-use crate::co2::{TRIPLE_PRESSURE_PA, state};
+use crate::co2::{Memo, TRIPLE_PRESSURE_PA};
 
 /// A closed loop with a condenser.
 ///
@@ -54,17 +54,28 @@ impl ClosedLoop {
     /// assert_eq!(kj, [38.0, 61.0, 0.0, 133.0, -232.0]);
     /// ```
     pub fn energies(&self) -> Result<Loop, LoopError> {
+        let mut legs = Loop::default();
+        self.energies_in(&mut Memo::default(), &mut legs)?;
+        Ok(legs)
+    }
+
+    /// As [`energies`](Self::energies), with states kept, into a loop that is cleared first: a draw allocates nothing.
+    ///
+    /// # Errors
+    /// As for [`energies`](Self::energies).
+    pub fn energies_in(&self, states: &mut Memo, legs: &mut Loop) -> Result<(), LoopError> {
         let low_pa = self.separator_pressure_pa;
         above("extraction pressure", self.extraction_pressure_pa, "separator pressure", low_pa)?;
         // Below it the valve would make solid and gas.
         above("separator pressure", low_pa, "triple pressure", TRIPLE_PRESSURE_PA)?;
-        let liquid = state(self.condenser_temperature_k, low_pa).map_err(at("condenser outlet"))?;
-        let lift = pump(&liquid.into(), self.extraction_pressure_pa, self.pump_efficiency)?;
-        let extractor =
-            state(self.extraction_temperature_k, self.extraction_pressure_pa).map_err(at("extractor"))?;
-        let separator = state(self.separator_temperature_k, low_pa).map_err(at("separator"))?;
+        let liquid = states.state(self.condenser_temperature_k, low_pa).map_err(at("condenser outlet"))?;
+        let lift = pump_in(states, &liquid.into(), self.extraction_pressure_pa, self.pump_efficiency)?;
+        let extractor = states
+            .state(self.extraction_temperature_k, self.extraction_pressure_pa)
+            .map_err(at("extractor"))?;
+        let separator = states.state(self.separator_temperature_k, low_pa).map_err(at("separator"))?;
 
-        let mut legs = Loop::from(Point::at("condenser out", liquid.into()));
+        legs.begin(Point::at("condenser out", liquid.into()));
         legs.work("pump", "pump out", &lift);
         // q = h₂ − h₁ at constant pressure
         legs.thermal("preheat", Point::at("extractor", extractor.into()));
@@ -73,7 +84,7 @@ impl ClosedLoop {
         legs.leg("valve", after, Kind::Throttling, 0.0, None);
         legs.thermal("separator", Point::at("separator", separator.into()));
         legs.close("condense");
-        Ok(legs)
+        Ok(())
     }
 }
 

@@ -1,7 +1,7 @@
 //! Pump and compressor by isentropic efficiency.
 use super::LoopError;
 use super::error::{above, at, efficiency};
-use crate::co2::{Equilibrium, Phase, Phases, enthalpy_from_entropy_near};
+use crate::co2::{Equilibrium, Memo, Phase, Phases};
 
 /// What a machine does to the stream.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -37,12 +37,22 @@ pub fn pump(
     outlet_pressure_pa: f64,
     isentropic_efficiency: f64,
 ) -> Result<Lift, LoopError> {
+    pump_in(&mut Memo::default(), inlet, outlet_pressure_pa, isentropic_efficiency)
+}
+
+/// As [`pump`], with states kept.
+pub(super) fn pump_in(
+    states: &mut Memo,
+    inlet: &Equilibrium,
+    outlet_pressure_pa: f64,
+    isentropic_efficiency: f64,
+) -> Result<Lift, LoopError> {
     if inlet.has_gas() {
         return Err(LoopError::PumpTakesGas { inlet: *inlet });
     }
     // Some 0.7 K for each 10 bar: only where the search starts.
     let warmer = inlet.temperature_k + 7e-7 * (outlet_pressure_pa - inlet.pressure_pa);
-    lift(inlet, outlet_pressure_pa, isentropic_efficiency, warmer, "after a loss-free pump")
+    lift(states, inlet, outlet_pressure_pa, isentropic_efficiency, warmer, "after a loss-free pump")
 }
 
 /// A gas compressor from `inlet` to an absolute pressure, Pa; otherwise as [`pump`].
@@ -60,16 +70,27 @@ pub fn compress(
     outlet_pressure_pa: f64,
     isentropic_efficiency: f64,
 ) -> Result<Lift, LoopError> {
+    compress_in(&mut Memo::default(), inlet, outlet_pressure_pa, isentropic_efficiency)
+}
+
+/// As [`compress`], with states kept.
+pub(super) fn compress_in(
+    states: &mut Memo,
+    inlet: &Equilibrium,
+    outlet_pressure_pa: f64,
+    isentropic_efficiency: f64,
+) -> Result<Lift, LoopError> {
     if matches!(inlet.phases, Phases::LiquidAndVapour { .. } | Phases::Single(Phase::Liquid)) {
         return Err(LoopError::CompressorTakesLiquid { inlet: *inlet });
     }
     // T₂/T₁ = (p₂/p₁)^0.22, near that of the thin gas: only where the search starts.
     let ratio = outlet_pressure_pa / inlet.pressure_pa;
     let warmer = inlet.temperature_k * if ratio > 0.0 { libm::pow(ratio, 0.22) } else { 1.0 };
-    lift(inlet, outlet_pressure_pa, isentropic_efficiency, warmer, "after a loss-free compressor")
+    lift(states, inlet, outlet_pressure_pa, isentropic_efficiency, warmer, "after a loss-free compressor")
 }
 
 fn lift(
+    states: &mut Memo,
     inlet: &Equilibrium,
     outlet_pressure_pa: f64,
     isentropic_efficiency: f64,
@@ -78,8 +99,9 @@ fn lift(
 ) -> Result<Lift, LoopError> {
     let eta = efficiency("isentropic efficiency", isentropic_efficiency)?;
     above("outlet pressure", outlet_pressure_pa, "inlet pressure", inlet.pressure_pa)?;
-    let ideal_end_j_kg =
-        enthalpy_from_entropy_near(inlet.entropy_j_kg_k, outlet_pressure_pa, near_k).map_err(at(name))?;
+    let ideal_end_j_kg = states
+        .enthalpy_from_entropy_near(inlet.entropy_j_kg_k, outlet_pressure_pa, near_k)
+        .map_err(at(name))?;
     // w_s = h(s₁, p₂) − h₁
     let ideal_j_kg = ideal_end_j_kg - inlet.enthalpy_j_kg;
     // w = w_s/η

@@ -42,7 +42,7 @@ pub use open::OpenLoop;
 pub use recompression::Recompression;
 pub use vessel::{Trapped, letdown_left_share, trapped_liquid, vent_kg, void_m3};
 
-use crate::co2::{Equilibrium, StateError, state_from_enthalpy};
+use crate::co2::{Equilibrium, Memo, StateError, state_from_enthalpy};
 use crate::source::{Source, Standing};
 
 /// First law of a steady stream.
@@ -142,8 +142,28 @@ pub struct Leg {
     pub ideal_j_kg: Option<f64>,
 }
 
+/// What a route keeps of carbon dioxide from draw to draw: states met, and room for a loop. Nothing follows from what
+/// stands in it.
+#[derive(Clone, Debug, Default)]
+pub struct Scratch {
+    /// States met.
+    pub states: Memo,
+    /// Room for a loop.
+    pub legs: Loop,
+}
+
+impl Scratch {
+    /// Room for so many calls of a run.
+    #[must_use]
+    pub fn with_room(calls: usize) -> Self {
+        let most = if calls > 0 { 24 } else { 0 };
+        let legs = Loop { points: Vec::with_capacity(most), legs: Vec::with_capacity(most), closed: false };
+        Self { states: Memo::with_room(calls), legs }
+    }
+}
+
 /// The points and legs of a loop, open or closed, per kilogram of carbon dioxide passed through.
-#[derive(Clone, Debug, PartialEq)]
+#[derive(Clone, Debug, Default, PartialEq)]
 pub struct Loop {
     /// The points in the order of flow.
     pub points: Vec<Point>,
@@ -154,8 +174,12 @@ pub struct Loop {
 }
 
 impl Loop {
-    fn from(first: Point) -> Self {
-        Self { points: vec![first], legs: Vec::new(), closed: false }
+    /// Empty but for a first point.
+    fn begin(&mut self, first: Point) {
+        self.points.clear();
+        self.legs.clear();
+        self.closed = false;
+        self.points.push(first);
     }
 
     fn last(&self) -> usize {

@@ -1,8 +1,8 @@
 //! The open loop: from the supply through chiller, pump, heater, extractor and restrictor to the vent.
 use super::error::{above, at};
-use super::machine::pump;
+use super::machine::pump_in;
 use super::{Loop, LoopError, Point};
-use crate::co2::{Equilibrium, saturated_states, state};
+use crate::co2::{Equilibrium, Memo};
 
 /// An open loop: nothing comes back.
 ///
@@ -60,36 +60,50 @@ impl OpenLoop {
     /// assert_eq!(kj, [-44.0, 36.0, 64.0, 192.0]);
     /// ```
     pub fn energies(&self) -> Result<Loop, LoopError> {
+        let mut legs = Loop::default();
+        self.energies_in(&mut Memo::default(), &mut legs)?;
+        Ok(legs)
+    }
+
+    /// As [`energies`](Self::energies), with states kept, into a loop that is cleared first: a draw allocates nothing.
+    ///
+    /// # Errors
+    /// As for [`energies`](Self::energies).
+    pub fn energies_in(&self, states: &mut Memo, legs: &mut Loop) -> Result<(), LoopError> {
         let supply: Equilibrium = match self.supply_pressure_pa {
-            Some(pressure_pa) => state(self.supply_temperature_k, pressure_pa).map_err(at("supply"))?,
-            None => saturated_states(self.supply_temperature_k).map_err(at("supply"))?.0,
+            Some(pressure_pa) => {
+                states.state(self.supply_temperature_k, pressure_pa).map_err(at("supply"))?
+            }
+            None => states.saturated_liquid(self.supply_temperature_k).map_err(at("supply"))?,
         }
         .into();
         let chilled = if self.chill_temperature_k == supply.temperature_k {
             supply
         } else {
-            state(self.chill_temperature_k, supply.pressure_pa).map_err(at("chilled supply"))?.into()
+            states.state(self.chill_temperature_k, supply.pressure_pa).map_err(at("chilled supply"))?.into()
         };
         above("extraction pressure", self.extraction_pressure_pa, "supply pressure", supply.pressure_pa)?;
         above("extraction pressure", self.extraction_pressure_pa, "vent pressure", self.vent_pressure_pa)?;
-        let lift = pump(&chilled, self.extraction_pressure_pa, self.pump_efficiency)?;
-        let extractor =
-            state(self.extraction_temperature_k, self.extraction_pressure_pa).map_err(at("extractor"))?;
-        let vent = state(self.vent_temperature_k, self.vent_pressure_pa).map_err(at("vent"))?;
+        let lift = pump_in(states, &chilled, self.extraction_pressure_pa, self.pump_efficiency)?;
+        let extractor = states
+            .state(self.extraction_temperature_k, self.extraction_pressure_pa)
+            .map_err(at("extractor"))?;
+        let vent = states.state(self.vent_temperature_k, self.vent_pressure_pa).map_err(at("vent"))?;
 
-        let mut legs = Loop::from(Point::at("supply", supply));
+        legs.begin(Point::at("supply", supply));
         // q = h₂ − h₁ at constant pressure
         legs.thermal("chill", Point::at("chilled", chilled));
         legs.work("pump", "pump out", &lift);
         legs.thermal("preheat", Point::at("extractor", extractor.into()));
         legs.thermal("restrictor", Point::at("vent", vent.into()));
-        Ok(legs)
+        Ok(())
     }
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::co2::saturated_states;
 
     #[test]
     fn a_warm_pump_head_is_refused_as_gas() {

@@ -1,8 +1,8 @@
 //! Gas back to a store: compression in stages with cooling between them, and condensing.
 use super::error::{above, at, within};
-use super::machine::compress;
+use super::machine::compress_in;
 use super::{Loop, LoopError, Point};
-use crate::co2::{Equilibrium, state};
+use crate::co2::{Equilibrium, Memo};
 
 /// Recompression of gas in stages of equal pressure ratio.
 ///
@@ -59,12 +59,22 @@ impl Recompression {
     /// assert!((loop_.sum_j_kg(Kind::Work) - 365_578.0).abs() < 1.0);
     /// ```
     pub fn energies(&self) -> Result<Loop, LoopError> {
+        let mut legs = Loop::default();
+        self.energies_in(&mut Memo::default(), &mut legs)?;
+        Ok(legs)
+    }
+
+    /// As [`energies`](Self::energies), with states kept, into a loop that is cleared first: a draw allocates nothing.
+    ///
+    /// # Errors
+    /// As for [`energies`](Self::energies).
+    pub fn energies_in(&self, states: &mut Memo, legs: &mut Loop) -> Result<(), LoopError> {
         above("outlet pressure", self.outlet_pressure_pa, "inlet pressure", self.inlet_pressure_pa)?;
         let stages = f64::from(self.stages);
         within("number of stages", stages, (1.0..=8.0).contains(&stages), "a number from 1 to 8")?;
         let first: Equilibrium =
-            state(self.inlet_temperature_k, self.inlet_pressure_pa).map_err(at("gas"))?.into();
-        let mut legs = Loop::from(Point::at("gas", first));
+            states.state(self.inlet_temperature_k, self.inlet_pressure_pa).map_err(at("gas"))?.into();
+        legs.begin(Point::at("gas", first));
         let mut inlet = first;
         // p_n = p₀ (p_N/p₀)^(n/N)
         let ln_ratio = libm::log(self.outlet_pressure_pa / self.inlet_pressure_pa) / stages;
@@ -76,11 +86,11 @@ impl Recompression {
             } else {
                 self.outlet_pressure_pa
             };
-            let lift = compress(&inlet, pressure_pa, self.stage_efficiency)?;
+            let lift = compress_in(states, &inlet, pressure_pa, self.stage_efficiency)?;
             legs.work(stage, stage, &lift);
             inlet = match self.cooler_temperature_k {
                 Some(cold_k) => {
-                    let cooled: Equilibrium = state(cold_k, pressure_pa).map_err(at(cooler))?.into();
+                    let cooled: Equilibrium = states.state(cold_k, pressure_pa).map_err(at(cooler))?.into();
                     legs.thermal(cooler, Point::at(cooler, cooled));
                     cooled
                 }
@@ -91,10 +101,10 @@ impl Recompression {
             };
         }
         if let Some(liquid_k) = self.condensed_temperature_k {
-            let liquid = state(liquid_k, self.outlet_pressure_pa).map_err(at("condensed"))?;
+            let liquid = states.state(liquid_k, self.outlet_pressure_pa).map_err(at("condensed"))?;
             legs.thermal("condense", Point::at("condensed", liquid.into()));
         }
-        Ok(legs)
+        Ok(())
     }
 }
 

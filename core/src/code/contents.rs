@@ -126,6 +126,52 @@ impl<'a> Contents<'a> {
         (m3 > 0.0).then(|| self.mass_kg() / m3)
     }
 
+    /// Its share of water by mass.
+    #[must_use]
+    pub fn water_share(&self) -> f64 {
+        self.mass_share(&is_water)
+    }
+
+    /// Whether it is a liquid of which water makes up a fifth by volume or more, so that a pH can be measured in it.
+    #[must_use]
+    pub fn aqueous(&self) -> bool {
+        !self.solid && self.volume_share(&is_water) >= AQUEOUS
+    }
+
+    /// Organic halogen as the elements, a share by mass: of solvents whose formula is known.
+    ///
+    /// ```
+    /// use thimbleworth::{code::{Contents, Part}, material::catalogue};
+    /// let dcm = catalogue().find("dichloromethane").unwrap();
+    /// let drum = Contents { parts: vec![Part::new(dcm, 1.0, 1326.0)], ..Contents::default() };
+    /// // 2 · 35.45 / 84.93
+    /// assert!((drum.halogen_share() - 0.8348).abs() < 1e-3);
+    /// ```
+    #[must_use]
+    pub fn halogen_share(&self) -> f64 {
+        let mut kg = 0.0;
+        for p in self.parts.iter().filter(|p| is_solvent(p.substance)) {
+            let Some(Ok(elements)) = p.substance.elements() else { continue };
+            let mut of_halogen = 0.0;
+            for (symbol, molar_mass_kg_mol) in
+                [("F", 0.018_998), ("Cl", 0.035_45), ("Br", 0.079_904), ("I", 0.126_904)]
+            {
+                of_halogen += f64::from(elements.count(symbol)) * molar_mass_kg_mol;
+            }
+            // w = Σ nᵢ Mᵢ / M
+            kg += p.kg * of_halogen / elements.molar_mass_kg_mol();
+        }
+        kg / self.mass_kg()
+    }
+
+    /// Density of its liquids alone, as if they mixed without change; kg/m³.
+    #[must_use]
+    pub fn liquid_density_kg_m3(&self) -> Option<f64> {
+        let m3 = self.volume_m3();
+        let kg = self.parts.iter().filter(|p| p.density_kg_m3.is_some()).fold(0.0, |sum, p| sum + p.kg);
+        (m3 > 0.0).then(|| kg / m3)
+    }
+
     /// The share by mass of the parts for which this holds.
     pub(super) fn mass_share(&self, holds: &dyn Fn(&Substance) -> bool) -> f64 {
         let kg = self.parts.iter().filter(|p| holds(p.substance)).fold(0.0, |sum, p| sum + p.kg);
@@ -144,10 +190,13 @@ impl<'a> Contents<'a> {
     }
 }
 
+/// Share of water by volume from which a pH is measured (SW-846 9040C section 1.1, from memory).
+pub(super) const AQUEOUS: f64 = 0.2;
+
 /// The temperature below which a liquid counts as ignitable or flammable, 60 °C; K.
 pub(super) const FLASH_LIMIT_K: f64 = 333.15;
 
-pub(super) fn is_water(s: &Substance) -> bool {
+pub(crate) fn is_water(s: &Substance) -> bool {
     s.class == Class::Water
 }
 
@@ -176,12 +225,12 @@ fn has_element(s: &Substance, symbols: &[&str]) -> bool {
 }
 
 /// A solvent with fluorine, chlorine, bromine or iodine.
-pub(super) fn is_halogenated(s: &Substance) -> bool {
+pub(crate) fn is_halogenated(s: &Substance) -> bool {
     is_solvent(s) && has_element(s, &["F", "Cl", "Br", "I"])
 }
 
 /// A solvent of carbon and hydrogen alone.
-pub(super) fn is_hydrocarbon(s: &Substance) -> bool {
+pub(crate) fn is_hydrocarbon(s: &Substance) -> bool {
     is_solvent(s) && s.formula.is_some() && !has_element(s, &["F", "Cl", "Br", "I", "O", "N", "S", "P"])
 }
 

@@ -16,6 +16,7 @@ mod us_spent;
 mod verdict;
 
 pub use contents::{Activity, Charge, Contents, Flash, Part};
+pub(crate) use contents::{is_halogenated, is_hydrocarbon, is_water};
 pub use rule::{CAUTION, Rule, rule};
 pub use transport::Description;
 pub use verdict::{Answer, Fact, Verdict};

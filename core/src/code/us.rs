@@ -1,7 +1,7 @@
 //! United States: characteristics, unused products, the notice for land disposal. Spent solvents stand beside.
 
 use super::contents::{
-    Contents, FLASH_LIMIT_K, Flash, is_alcohol, is_flammable, is_solvent, is_unknown, is_water, rcra,
+    AQUEOUS, Contents, FLASH_LIMIT_K, Flash, is_alcohol, is_flammable, is_solvent, is_unknown, is_water, rcra,
 };
 use super::us_spent;
 use super::verdict::{Answer, Desk, Fact, list, share};
@@ -113,10 +113,10 @@ fn ignitable(c: &Contents<'_>, desk: &mut Desk) {
 fn corrosive(c: &Contents<'_>, desk: &mut Desk) {
     let acid = |s: &crate::material::Substance| rcra(s).characteristic.iter().any(|code| code == "D002");
     let water = c.volume_share(&is_water);
-    let mut facts = vec![share("water by volume", water, 0.2)];
+    let mut facts = vec![share("water by volume", water, AQUEOUS)];
     let (answer, why) = if c.solid {
         (Answer::No, "a solid has no pH of its own")
-    } else if water < 0.2 {
+    } else if !c.aqueous() {
         if c.having(&acid).is_empty() {
             (Answer::No, "not aqueous, and no acid or base is in it")
         } else {

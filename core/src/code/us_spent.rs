@@ -1,7 +1,7 @@
 //! Spent solvents, F001 to F005: by what each charge was before use, inherited by everything that it reaches.
 
 use super::contents::{Activity, Charge, Contents, rcra};
-use super::verdict::{Answer, Desk, Fact, list, share};
+use super::verdict::{Answer, Desk, Fact, share};
 use crate::material::Substance;
 
 /// The lists that count together towards the 10 %.
@@ -79,7 +79,7 @@ pub(super) fn read(c: &Contents<'_>, desk: &mut Desk) {
         let mut shown: Option<(bool, &'static str, Vec<Fact>)> = None;
         for charge in &c.charges {
             let Some(found) = held(charge, code, degreasing) else { continue };
-            if found.0 {
+            if found.0 && !bringing.contains(&charge.what.as_str()) {
                 bringing.push(&charge.what);
             }
             if shown.as_ref().is_none_or(|(applies, ..)| found.0 && !applies) {
@@ -88,7 +88,7 @@ pub(super) fn read(c: &Contents<'_>, desk: &mut Desk) {
         }
         let Some((applies, why, facts)) = shown else { continue };
         let mut why = why.to_owned();
-        if applies && (c.solid || c.charges.len() > bringing.len() || c.parts.len() > 1) {
+        if applies && (c.solid || c.charges.len() > 1 || c.parts.len() > 1) {
             why.push_str(
                 "; what it is mixed with or clings to inherits the code (40 CFR 261.3(a)(2)(iv), (c)(2)(i))",
             );
@@ -98,7 +98,7 @@ pub(super) fn read(c: &Contents<'_>, desk: &mut Desk) {
         }
         desk.put(code, if applies { Answer::Yes } else { Answer::No }, why, facts);
         if applies {
-            desk.change(["without ", &list(bringing), " in this container it would not be here"].concat());
+            desk.change(["without ", &bringing.join("; "), ": it would not be on this container"].concat());
         }
     }
 }

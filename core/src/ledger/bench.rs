@@ -2,6 +2,9 @@
 
 use super::{Cells, Doubt, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
 use crate::chance::{Draw, In};
+use crate::co2::Memo;
+use crate::co2_loop::Scratch;
+use crate::heat::Demand;
 use crate::quantity::Kind;
 
 /// A measured figure that takes the place of a computed one.
@@ -33,6 +36,7 @@ pub struct Bench<'a> {
     natures: &'a [Nature],
     cells: &'a mut Cells,
     spent: &'a mut [f64; Utility::COUNT],
+    co2: &'a mut Scratch,
     trace: Option<&'a mut Trace>,
     step: StepIx,
     measured: &'a [Option<Measured>],
@@ -48,15 +52,18 @@ impl<'a> Bench<'a> {
         natures: &'a [Nature],
         cells: &'a mut Cells,
         spent: &'a mut [f64; Utility::COUNT],
+        co2: &'a mut Scratch,
         trace: Option<&'a mut Trace>,
     ) -> Self {
         cells.clear();
         spent.fill(0.0);
+        co2.states.begin();
         Self {
             draw,
             natures,
             cells,
             spent,
+            co2,
             trace,
             step: StepIx::Opening,
             measured: &[],
@@ -438,15 +445,47 @@ impl<'a> Bench<'a> {
         }
     }
 
+    /// Spends heat into a stream, or the heat taken out of it where the amount is negative; J in this run.
+    ///
+    /// Both are posted, one of them as zero, so that the sequence is the same in every draw.
+    pub fn spend_heat(&mut self, heat_j: f64, rule: RuleIx) {
+        let (into_j, out_j) = if heat_j < 0.0 { (0.0, -heat_j) } else { (heat_j, 0.0) };
+        self.spend(Utility::Heat, into_j, rule);
+        self.spend(Utility::Cooling, out_j, rule);
+    }
+
+    /// Spends the electricity of one apparatus, J in this run: what counts, and beside it all that is known.
+    pub fn spend_electricity(&mut self, counted_j: f64, demand: &Demand, rule: RuleIx) {
+        self.spend(Utility::Electricity, counted_j, rule);
+        self.spend(Utility::NominalElectricity, demand.nominal_j, rule);
+        self.spend(Utility::ComputedElectricity, demand.computed_j.unwrap_or(0.0), rule);
+        self.spend(Utility::MeasuredElectricity, demand.measured_j.unwrap_or(0.0), rule);
+    }
+
+    /// States of carbon dioxide that this route has met.
+    pub fn states(&mut self) -> &mut Memo {
+        &mut self.co2.states
+    }
+
+    /// States met, and room for a loop.
+    pub fn co2(&mut self) -> &mut Scratch {
+        self.co2
+    }
+
+    /// A meter's reading for a rule, where the plan gives one; J in this run.
+    pub fn metered_j(&self, rule: RuleIx) -> Option<f64> {
+        match self.measured_for(rule) {
+            Some(Measured::Energy(slot)) => Some(self.draw.get(slot)),
+            _ => None,
+        }
+    }
+
     /// Spends electricity: a meter's reading where the plan gives one, else nominal power by time unless the floor of
     /// thermodynamics lies above it. Spends nothing where nothing is known. `nominal_j` and `floor_j` in J a run.
     ///
     /// What lies below the floor is told as a doubt.
     pub fn electricity(&mut self, nominal_j: Option<f64>, floor_j: Option<f64>, rule: RuleIx) {
-        let metered_j = match self.measured_for(rule) {
-            Some(Measured::Energy(slot)) => Some(self.draw.get(slot)),
-            _ => None,
-        };
+        let metered_j = self.metered_j(rule);
         if let Some(floor_j) = floor_j {
             self.note(rule, "least that physics asks for", floor_j, Kind::Energy);
         }
@@ -454,13 +493,10 @@ impl<'a> Bench<'a> {
             self.note(rule, "computed in its place", nominal_j, Kind::Energy);
             self.note(rule, "meter", metered_j, Kind::Energy);
         }
-        let demand = crate::heat::Demand {
-            nominal_j: nominal_j.unwrap_or(0.0),
-            computed_j: floor_j,
-            measured_j: metered_j,
-        };
+        let demand =
+            Demand { nominal_j: nominal_j.unwrap_or(0.0), computed_j: floor_j, measured_j: metered_j };
         if nominal_j.is_some() || floor_j.is_some() || metered_j.is_some() {
-            self.spend(Utility::Electricity, demand.chosen().0, rule);
+            self.spend_electricity(demand.chosen().0, &demand, rule);
         }
         if let (Some(stated_j), Some(floor_j)) = (metered_j.or(nominal_j), floor_j)
             && stated_j < floor_j

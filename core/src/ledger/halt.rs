@@ -2,6 +2,7 @@
 
 use super::{Material, Place, RuleIx};
 use crate::co2::StateError;
+use crate::co2_loop::LoopError;
 
 /// A run cannot go on. `Copy`, carrying values and no text, so that it costs nothing in a draw.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -82,6 +83,8 @@ pub enum Halt {
     },
     /// The equation of state has no such state of CO2.
     Co2(StateError),
+    /// A loop of CO2 cannot be.
+    Loop(LoopError),
     /// A computed amount is not finite, or negative.
     NotANumber {
         /// The rule.
@@ -89,6 +92,12 @@ pub enum Halt {
     },
     /// The work comes to no runs at all, or to a number that is not finite.
     NoRuns,
+}
+
+impl From<LoopError> for Halt {
+    fn from(e: LoopError) -> Self {
+        Self::Loop(e)
+    }
 }
 
 impl Halt {
@@ -104,6 +113,7 @@ impl Halt {
             Self::DoesNotFit { .. } => "more than fits",
             Self::NotReached { .. } => "less is there than should be left",
             Self::Co2(_) => "no such state of CO2",
+            Self::Loop(_) => "no such circuit of CO2",
             Self::NotANumber { .. } => "an amount below zero or not finite",
             Self::NoRuns => "no work",
         }

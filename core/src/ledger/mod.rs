@@ -33,13 +33,41 @@ pub enum Utility {
     CoolingWater,
     /// Carbon dioxide sent through the vessel, however often the same gram passes; kg. Neither gross nor net input.
     CirculatedCo2,
+    /// Heat into the streams of the work; J. What delivers it may be electricity, which is counted apart.
+    Heat,
+    /// Heat taken out of the streams of the work; J. Likewise.
+    Cooling,
+    /// Work of pumps and compressors on the streams of the work; J. Likewise.
+    Work,
+    /// Electricity by stated power and time, whether or not it is the figure that counts; J.
+    NominalElectricity,
+    /// Electricity by physics and efficiencies, likewise; J.
+    ComputedElectricity,
+    /// Electricity by a meter, likewise; J.
+    MeasuredElectricity,
 }
 
 impl Utility {
     /// How many there are.
-    pub const COUNT: usize = 3;
+    pub const COUNT: usize = 9;
     /// All of them, in the order of their index.
-    pub const ALL: [Self; Self::COUNT] = [Self::Electricity, Self::CoolingWater, Self::CirculatedCo2];
+    pub const ALL: [Self; Self::COUNT] = [
+        Self::Electricity,
+        Self::CoolingWater,
+        Self::CirculatedCo2,
+        Self::Heat,
+        Self::Cooling,
+        Self::Work,
+        Self::NominalElectricity,
+        Self::ComputedElectricity,
+        Self::MeasuredElectricity,
+    ];
+
+    /// Whether it is an energy, J; else a mass, kg.
+    #[must_use]
+    pub const fn is_energy(self) -> bool {
+        !matches!(self, Self::CoolingWater | Self::CirculatedCo2)
+    }
 
     /// The name shown.
     #[must_use]
@@ -48,6 +76,12 @@ impl Utility {
             Self::Electricity => "electricity",
             Self::CoolingWater => "cooling water",
             Self::CirculatedCo2 => "CO2 circulated",
+            Self::Heat => "heat",
+            Self::Cooling => "cooling",
+            Self::Work => "work",
+            Self::NominalElectricity => "electricity, nominal",
+            Self::ComputedElectricity => "electricity, computed",
+            Self::MeasuredElectricity => "electricity, measured",
         }
     }
 }

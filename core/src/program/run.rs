@@ -2,6 +2,7 @@
 
 use super::{PLACED, PLACED_BY_DEFAULT, RouteProgram, Runs, TAKEN_IN};
 use crate::chance::Draw;
+use crate::co2_loop::Scratch;
 use crate::ledger::{BENCH_PLACES, Bench, Cells, Halt, Place, StepIx, Trace, Utility};
 use crate::quantity::Kind;
 
@@ -12,6 +13,8 @@ pub struct Desk {
     pub cells: Cells,
     /// Utilities spent in a year; SI.
     pub spent: [f64; Utility::COUNT],
+    /// States of carbon dioxide met in earlier draws.
+    pub co2: Scratch,
     /// How often things happen in a year.
     pub runs: Runs,
     /// What was placed by default, in the order of [`Place::BENCH`]; kg in a run of the last step's basis.
@@ -34,6 +37,7 @@ impl RouteProgram {
         Desk {
             cells: Cells::new(self.materials.len(), self.streams),
             spent: [0.0; Utility::COUNT],
+            co2: Scratch::with_room(self.steps.iter().fold(0, |sum, s| sum + s.step.co2_states())),
             runs: Runs { results: 0.0, extractions: 0.0, batches: 0.0, feed_share: 0.0 },
             placed_by_default_kg: [0.0; BENCH_PLACES],
         }
@@ -60,7 +64,7 @@ impl RouteProgram {
         let at = |step| move |halt| Failure { step, halt };
         let runs = self.work.runs(x).map_err(at(StepIx::Opening))?;
         desk.runs = runs;
-        let mut b = Bench::new(x, &self.natures, &mut desk.cells, &mut desk.spent, trace);
+        let mut b = Bench::new(x, &self.natures, &mut desk.cells, &mut desk.spent, &mut desk.co2, trace);
         for (i, step) in self.steps.iter().enumerate() {
             if let Some((_, place)) = self.taken_in.filter(|(before, _)| *before == i) {
                 self.take_in(x, &mut b, &runs, place).map_err(at(StepIx::Opening))?;

@@ -1,12 +1,14 @@
 //! A report to read and to print, as Markdown.
 
+use super::energy::energy_sheets;
 use super::row::{MONTHS, PROGRAM, figures};
 use super::words::{amount, cited, editions, hidden, is_detail, work_words};
-use crate::account::{Account, Group, HazardAccount, MaterialHazard, RouteAccount};
+use crate::account::{Account, Group, HazardAccount, MaterialHazard, Pouring, RouteAccount, classified};
+use crate::code::CAUTION;
 use crate::compare::{Comparison, compare};
 use crate::hazard::{chem21, eco_scale, nemi};
 use crate::material::statement_text;
-use crate::program::{RouteProgram, WorkloadProgram};
+use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
 use crate::quantity::significant;
 use std::fmt::Write as _;
 
@@ -35,7 +37,7 @@ pub fn markdown(account: &Account) -> String {
                 let present = if j == work.present { " (present)" } else { "" };
                 let _ = write!(out, "### {}{present}\n\n", escaped(&route.name));
                 match account {
-                    Some(account) => route_account(&mut out, route, account),
+                    Some(account) => route_account(&mut out, &program.site, route, account),
                     None => out.push_str("Its run stopped: see the problems.\n\n"),
                 }
             }
@@ -93,7 +95,7 @@ fn compared(out: &mut String, work: &WorkloadProgram, comparison: &Comparison) {
     }
 }
 
-fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
+fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account: &RouteAccount) {
     let product = account.product_kg > 0.0;
     for group in Group::ALL {
         let rows: Vec<_> = figures(account).filter(|(f, _)| f.group == group).collect();
@@ -126,6 +128,8 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
     for refusal in &account.refusals {
         let _ = write!(out, "Not given: {}: {}.\n\n", refusal.metrics, escaped(&refusal.reason));
     }
+    waste_codes(out, site, Pouring { route, account });
+    energy(out, route, account);
     hazards(out, &account.hazard);
     if !route.assumptions.is_empty() {
         out.push_str("#### Assumed, because the plan does not say\n\n");
@@ -153,6 +157,48 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
         "The book closes to {} of the mass that came in.\n\n",
         significant(account.closure.abs(), 2)
     );
+}
+
+fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
+    let streams = classified(&[pouring], site);
+    if streams.is_empty() {
+        return;
+    }
+    let _ = write!(
+        out,
+        "#### Waste codes\n\n{CAUTION} The papers of the command `waste` show rule, figures and what would change each.\n\n"
+    );
+    out.push_str(
+        "| stream | standing | codes | test, do not assume | transport |\n| --- | --- | --- | --- | --- |\n",
+    );
+    for s in &streams {
+        let name = site.streams.get(s.stream).map_or("", |u| u.name.as_str());
+        let transport = s.transport().map_or("", |v| v.why.as_str());
+        let cells = [name, s.standing().words(), &s.codes().join(", "), &s.open().join(", "), transport];
+        let _ = writeln!(out, "| {} |", cells.map(escaped).join(" | "));
+    }
+    out.push('\n');
+}
+
+fn energy(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
+    for sheet in energy_sheets(route, account) {
+        let _ = write!(out, "#### {}\n\n| {} |\n|", escaped(&sheet.title), sheet.head.join(" | "));
+        for i in 0..sheet.head.len() {
+            out.push_str(if i == 0 { " --- |" } else { " ---: |" });
+        }
+        out.push('\n');
+        for row in &sheet.rows {
+            let cells: Vec<String> = row.iter().map(|cell| escaped(cell)).collect();
+            let _ = writeln!(out, "| {} |", cells.join(" | "));
+        }
+        out.push('\n');
+        for note in &sheet.notes {
+            let _ = writeln!(out, "- {}", escaped(note));
+        }
+        if !sheet.notes.is_empty() {
+            out.push('\n');
+        }
+    }
 }
 
 fn hazards(out: &mut String, hazard: &HazardAccount) {

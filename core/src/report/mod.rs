@@ -6,18 +6,22 @@
 //! | [`result_csv`] | the same figures, flat, for a spreadsheet |
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
+//! | [`energy_sheets`] | energy by step and CO2 by state, tables for all of them |
 //! | [`log_tables`], [`reconciliation_table`], [`solvent_balance_table`] | the site's records, as tables |
 //! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
+//! | [`paper()`] | a paper of the waste desk: codes, labels, contents, months, pick-ups, load |
 //! | [`trace()`] | one figure opened into the postings, rules and inputs behind it |
 //!
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
 mod csv;
 mod data_table;
+mod energy;
 mod grid;
 mod log;
 mod markdown;
 mod odds;
+mod paper;
 mod result;
 mod row;
 mod table;
@@ -26,9 +30,11 @@ mod words;
 
 pub use csv::{result_csv, text_cell};
 pub use data_table::{DataCell, DataTable, data_csv, data_json, data_markdown, data_text};
+pub use energy::{Sheet, dense_words, energy_sheets};
 pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
+pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
 pub use table::{account_table, comparison_table};

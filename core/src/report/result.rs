@@ -1,19 +1,22 @@
 //! The result document.
 
+mod energy;
 mod figure;
 mod hazard;
 mod posting;
+mod waste;
 
 pub(super) use figure::FigureRow;
 pub(super) use posting::{InputDocument, step_and_technique};
 
 use super::row::PROGRAM;
 use super::words::editions;
-use crate::account::{Account, RouteAccount};
+use crate::account::{Account, Pouring, RouteAccount};
 use crate::chance::{Draw, identity_key};
 use crate::compare::compare;
 use crate::plan::{Problem, save};
 use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
+use energy::EnergyDocument;
 use figure::ComparisonDocument;
 use hazard::HazardDocument;
 use posting::{AssumptionDocument, CautionDocument, PostingDocument, SpendingDocument};
@@ -34,6 +37,7 @@ struct Document<'a> {
     as_of: Option<&'a str>,
     data_editions: Vec<EditionDocument>,
     workloads: Vec<WorkloadDocument<'a>>,
+    waste_desk: Option<waste::SiteDocument>,
     problems: Vec<ProblemDocument<'a>>,
 }
 
@@ -75,11 +79,13 @@ struct RouteAccountDocument<'a> {
     figures: Vec<FigureRow<'a>>,
     refused: Vec<RefusalDocument<'a>>,
     hazard: HazardDocument<'a>,
+    waste_codes: Vec<waste::StreamDocument>,
     assumptions: Vec<AssumptionDocument<'a>>,
     cautions: Vec<CautionDocument>,
     closure: f64,
     postings: Vec<PostingDocument<'a>>,
     utilities: Vec<SpendingDocument>,
+    energy: EnergyDocument,
     inputs: Vec<InputDocument<'a>>,
 }
 
@@ -111,6 +117,7 @@ struct ProblemDocument<'a> {
 /// | `title`, `site`, `rules`, `as_of` | from the plan; `null` where it does not say |
 /// | `data_editions` | the sources of the densities, hazards, flash and boiling points and waste codes of all materials on routes, by key, each with `cite` and `standing` |
 /// | `workloads` | the pieces of work in the order of the plan; empty when the plan has an error |
+/// | `waste_desk` | the site with the present route of each workload: `streams` (as `waste_codes`), `months` (what counts, the category under the rules of the United States, days of storage), `headroom` (results that a month takes before the category rises), `pick_ups`, containers begun, breaches; `null` without a program |
 /// | `problems` | everything found on the way, errors first: `severity` (`error`, `warning`, `note`), `path` in the plan, `found`, `need` |
 ///
 /// A workload has `name`, `work` (`results_per_year`, `extractions_per_year` with controls and repeats,
@@ -123,11 +130,13 @@ struct ProblemDocument<'a> {
 /// | `figures` | see below |
 /// | `refused` | metrics that are not given: `metrics`, `reason` |
 /// | `hazard` | `materials` (statements with text where it is known, pictogram codes, signal word, CHEM21 scores 1 to 10 with reasons, or why there are none, source and date), `eco_scale` (Analytical Eco-Scale for one result, its penalty lines), `nemi` (four rules, `met` is `yes`, `no` or `not known`), `not_scored` (materials that reach air or drain without a score) |
+/// | `waste_codes` | for each stream that the route fills: `standing`, `kg_per_year`, `codes` that are put on it, `test` (codes that only a test can clear), `verdicts` (`code`, `answer`, `why`, `figures` held against limits, `rule`, `cite`, `since`, `until`, `in_force`, what would `change` it), transport included |
 /// | `assumptions` | values that stand in for what the plan leaves out: `path`, `label`, `value`, `source`, `standing` |
 /// | `cautions` | what can hurt: `key`, `text`, `source`; local codes and licensed practice decide |
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
 /// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `seconds_per_run` (how long it takes in one run, for what goes to air where the step says so, else `null`), `measured` |
-/// | `utilities` | electricity (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `utilities` | zeros left out: electricity as it counts, and by stated power, physics and meter beside it, heat and cooling of streams (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `energy` | `steps`: what each step takes in a year, electricity with the face that `counts` and all three beside it, heat, cooling and work of streams, cooling water; `co2_circuits`: for each step with dense CO2 its `states` (enthalpy and entropy 0 for the ideal gas at 298.15 K and 1 atm; `null` where the equation has no state) and the `changes` between them in J/kg, what the let-down leaves in the vessel, the pressure of liquid `shut_in` between valves at 25 °C, and the flow as `metered` and as the same volume would be elsewhere |
 /// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
@@ -161,6 +170,7 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
         as_of: plan.and_then(|p| p.site.as_of.as_deref()),
         data_editions: program.map(editions).unwrap_or_default().into_iter().map(edition).collect(),
         workloads: workloads(account, with_comparison),
+        waste_desk: waste::site(account),
         problems: account.problems.iter().map(problem).collect(),
     };
     // Plain data with text keys: writing it to memory cannot fail.
@@ -222,11 +232,19 @@ fn route_account<'a>(
         figures: FigureRow::all(account),
         refused: account.refusals.iter().map(refusal).collect(),
         hazard: HazardDocument::of(&account.hazard),
+        waste_codes: waste::streams(Pouring { route, account }, site),
         assumptions: route.assumptions.iter().map(AssumptionDocument::of).collect(),
         cautions: account.cautions.iter().map(|c| CautionDocument::of(c)).collect(),
         closure: account.closure,
         postings: moved.map(|p| PostingDocument::of(route, site, p)).collect(),
-        utilities: account.trace.spendings.iter().map(|s| SpendingDocument::of(route, s)).collect(),
+        utilities: account
+            .trace
+            .spendings
+            .iter()
+            .filter(|s| s.amount_si != 0.0)
+            .map(|s| SpendingDocument::of(route, s))
+            .collect(),
+        energy: EnergyDocument::of(route, account),
         inputs: route.inputs.iter().map(InputDocument::of).collect(),
     }
 }

@@ -1,11 +1,13 @@
 //! Plain text for a terminal: the accounts of each route, or the routes side by side.
 
+use super::energy::energy_sheets;
 use super::grid::{Grid, paragraph};
 use super::row::figures;
 use super::words::{amount, cited, is_detail, visible, work_words};
-use crate::account::{Account, Group, Measure, RouteAccount};
+use crate::account::{Account, Group, Measure, Pouring, RouteAccount, classified};
+use crate::code::CAUTION;
 use crate::compare::{Comparison, Difference, HEADLINES, RouteComparison, compare};
-use crate::program::{RouteProgram, WorkloadProgram};
+use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
 use crate::quantity::significant;
 
 /// So many routes stand beside the present one before the table starts anew.
@@ -32,7 +34,7 @@ pub fn account_table(account: &Account) -> String {
             out.push('\n');
             paragraph(&mut out, "", &format!("{}: {}{present}", work.name, route.name));
             if let Some(account) = account {
-                route_account(&mut out, route, account);
+                route_account(&mut out, &program.site, route, account);
             } else {
                 paragraph(&mut out, "", "Its run stopped: see the problems.");
             }
@@ -79,7 +81,7 @@ fn heading(out: &mut String, account: &Account) {
     paragraph(out, "", &line);
 }
 
-fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
+fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account: &RouteAccount) {
     let runs = account.runs;
     let number = |value| significant(value, 4);
     paragraph(
@@ -129,6 +131,19 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
     for refusal in &account.refusals {
         paragraph(out, "  ", &format!("Not given: {}: {}.", refusal.metrics, refusal.reason));
     }
+    waste_codes(out, site, Pouring { route, account });
+    for sheet in energy_sheets(route, account) {
+        paragraph(out, "", &sheet.title);
+        let mut grid = Grid::new(24, 8);
+        grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());
+        for row in sheet.rows {
+            grid.row(row.iter().map(|cell| visible(cell)).collect());
+        }
+        grid.print(out);
+        for note in &sheet.notes {
+            paragraph(out, "  ", note);
+        }
+    }
     hazards(out, account);
     if !route.assumptions.is_empty() {
         out.push_str("Assumed, because the plan does not say\n");
@@ -148,6 +163,30 @@ fn route_account(out: &mut String, route: &RouteProgram, account: &RouteAccount)
         "",
         &format!("The book closes to {} of the mass that came in.", significant(account.closure.abs(), 2)),
     );
+}
+
+fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
+    let streams = classified(&[pouring], site);
+    if streams.is_empty() {
+        return;
+    }
+    out.push_str("Waste codes; the papers of \"waste\" show rule and figures\n");
+    for s in &streams {
+        let name = site.streams.get(s.stream).map_or("", |u| u.name.as_str());
+        let mut text = [name, ": ", s.standing().words()].concat();
+        for (what, codes) in [("; ", s.codes()), ("; test, do not assume: ", s.open())] {
+            if !codes.is_empty() {
+                text.push_str(what);
+                text.push_str(&codes.join(" "));
+            }
+        }
+        if let Some(v) = s.transport() {
+            text.push_str("; transport: ");
+            text.push_str(&v.why);
+        }
+        paragraph(out, "  ", &text);
+    }
+    paragraph(out, "  ", CAUTION);
 }
 
 fn hazards(out: &mut String, account: &RouteAccount) {

@@ -95,7 +95,8 @@ pub fn trace<'a>(
     let whole = open(index).ok_or(TraceError::NoAccount)?;
     let parts: Vec<_> = match whole.figure.how {
         How::Ratio { over, under } => vec![("over", open(over)), ("under", open(under))],
-        How::Containers { volume, .. } => vec![("volume", open(volume))],
+        How::Containers { of, .. } => vec![("volume", open(of))],
+        How::Times { of, .. } => vec![("of", open(of))],
         How::Sum(_) | How::Spent(_) => Vec::new(),
     };
     let parts: Vec<_> = parts.into_iter().filter_map(|(name, part)| Some((name, part?))).collect();
@@ -345,6 +346,10 @@ mod tests {
                         let summed = match figure.how {
                             How::Sum(_) | How::Spent(_) => &traced.opened,
                             How::Containers { .. } => &traced.parts[0].1,
+                            How::Times { of, factor } => {
+                                assert!((of_route.values[of] * factor - value).abs() < 1e-9);
+                                continue;
+                            }
                             How::Ratio { .. } => {
                                 assert_eq!(traced.parts.len(), 2);
                                 assert!(

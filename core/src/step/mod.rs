@@ -6,6 +6,7 @@ mod common;
 mod concentrate;
 mod consume;
 mod declare;
+mod dense;
 mod discard;
 mod dry;
 mod liquid_liquid;
@@ -19,6 +20,7 @@ mod ultrasonic;
 
 pub use caution::Caution;
 pub use declare::{Control, Measurable, Need, Param, Rule};
+pub use dense::{DenseCo2, Metered};
 pub use mixture::{LARGEST, Mixture, Part};
 pub use solid_phase::Poured;
 
@@ -35,6 +37,16 @@ pub trait Step {
     /// # Errors
     /// A [`Halt`] where the step cannot go on: something is short, a state does not exist.
     fn run(&self, x: Draw<'_>, b: &mut Bench<'_>) -> Result<(), Halt>;
+
+    /// How many states of CO2 a run of it asks for at most.
+    fn co2_states(&self) -> usize {
+        0
+    }
+
+    /// What is shown of a step with dense CO2 beside its postings; `None` for all others.
+    fn dense(&self, _: Draw<'_>) -> Option<DenseCo2> {
+        None
+    }
 }
 
 /// Under which heading a technique stands on forms and in lists.

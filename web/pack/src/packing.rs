@@ -1,5 +1,5 @@
-//! The program as text: packed with LZMA, which leaves a quarter less than gzip, and written in signs that stand for
-//! themselves in a script. What unpacks it again is a small module of its own, `unpack.wat`, and `web/boot.js`.
+//! The program as text: packed with LZMA, which leaves a quarter less than gzip, and written in characters that come
+//! through as they are in a script in UTF-8. What unpacks it again is a small module, `unpack.wat`, and `web/boot.js`.
 use anyhow::Result;
 use lzma_rust2::{EncodeMode, LzmaOptions, LzmaWriter, MfType};
 use std::io::Write;
@@ -20,35 +20,40 @@ pub(crate) fn pack(bytes: &[u8]) -> Result<Vec<u8>> {
 
 /// The module that unpacks what [`pack`] made.
 pub(crate) fn unpacker() -> Result<Vec<u8>> {
-    Ok(wat::parse_str(include_str!("unpack.wat"))?)
+    Ok(wat::parse_str(include_str!("unpack.wat").replace("BIT\n", include_str!("bit.wat")))?)
 }
 
-/// The bytes in 91 signs: their number, a colon, then two signs for every thirteen bits, lowest first.
-///
-/// The signs are those from '#' on; '!' stands for '<' and '~' for the backslash, which mean something in a script.
+/// The characters that mean something in a text in quotes in a script in a page, or do not come through as they are.
+const APART: [u8; 6] = [0, b'\n', b'\r', b'"', b'<', b'\\'];
+
+/// The bytes as characters: seven bits each, lowest first. One of [`APART`] takes the next seven bits with it into a
+/// character of two bytes, 160 + 128 × its place + these. So eight bytes become just over nine, whatever they are.
 pub(crate) fn signs(bytes: &[u8]) -> String {
-    let mut out = format!("{}:", bytes.len());
+    let mut sevens = Vec::with_capacity(bytes.len() * 8 / 7 + 1);
     let (mut held, mut bits) = (0_u32, 0);
-    let mut put = |thirteen: u32| {
-        for digit in [thirteen % 91, thirteen / 91] {
-            out.push(match b'#' + u8::try_from(digit).unwrap_or(0) {
-                b'<' => '!',
-                b'\\' => '~',
-                sign => char::from(sign),
-            });
-        }
-    };
     for &byte in bytes {
         held |= u32::from(byte) << bits;
         bits += 8;
-        if bits >= 13 {
-            put(held & 0x1fff);
-            held >>= 13;
-            bits -= 13;
+        while bits >= 7 {
+            sevens.push((held & 0x7f) as u8);
+            held >>= 7;
+            bits -= 7;
         }
     }
     if bits > 0 {
-        put(held);
+        sevens.push((held & 0x7f) as u8);
+    }
+    let mut out = String::with_capacity(sevens.len());
+    let mut rest = sevens.into_iter();
+    while let Some(seven) = rest.next() {
+        match APART.iter().position(|apart| *apart == seven) {
+            Some(place) => {
+                let next = u32::from(rest.next().unwrap_or(0));
+                let place = u32::try_from(place).unwrap_or(0);
+                out.extend(char::from_u32(160 + 128 * place + next));
+            }
+            None => out.push(char::from(seven)),
+        }
     }
     out
 }
@@ -58,25 +63,17 @@ mod tests {
     use super::*;
 
     /// The reading of `web/boot.js`, line by line.
-    fn unsigned(text: &str) -> Vec<u8> {
-        let (count, signs) = text.split_once(':').expect("a colon");
-        let count: usize = count.parse().expect("a number");
-        let value = |sign: u8| {
-            u32::from(
-                if sign == b'!' {
-                    b'<'
-                } else if sign == b'~' {
-                    b'\\'
-                } else {
-                    sign
-                } - b'#',
-            )
-        };
+    fn unsigned(text: &str, size: usize) -> Vec<u8> {
         let (mut out, mut held, mut bits) = (Vec::new(), 0_u32, 0);
-        for pair in signs.as_bytes().chunks(2) {
-            held |= (value(pair[0]) + value(pair[1]) * 91) << bits;
-            bits += 13;
-            while bits >= 8 && out.len() < count {
+        for sign in text.chars().map(u32::from) {
+            if sign < 128 {
+                held |= sign << bits;
+                bits += 7;
+            } else {
+                held |= (u32::from(APART[((sign - 160) >> 7) as usize]) | ((sign - 160) & 127) << 7) << bits;
+                bits += 14;
+            }
+            while bits >= 8 && out.len() < size {
                 out.push((held & 0xff) as u8);
                 held >>= 8;
                 bits -= 8;
@@ -87,12 +84,16 @@ mod tests {
 
     #[test]
     fn every_byte_comes_back_from_its_signs() {
-        for length in [0, 1, 2, 12, 13, 14, 1000] {
-            let bytes: Vec<u8> = (0..length).map(|n: usize| (n * 167 % 256) as u8).collect();
+        for length in [0, 1, 2, 6, 7, 8, 13, 1000, 70_000] {
+            let bytes: Vec<u8> = (0..length).map(|n: usize| (n * n / 7 % 256) as u8).collect();
             let text = signs(&bytes);
-            assert!(text.bytes().all(|b| (0x21..0x7f).contains(&b) && !b"\"<\\".contains(&b)), "{text}");
-            assert_eq!(unsigned(&text), bytes);
+            assert!(text.bytes().all(|b| !APART.contains(&b)), "{text}");
+            assert!(text.len() <= length * 8 / 7 + 2, "{length} bytes became {}", text.len());
+            assert_eq!(unsigned(&text, length), bytes);
         }
+        // Whatever stands together: every seven bits before and after every other.
+        let all: Vec<u8> = (0..=255).flat_map(|a| (0..=255).flat_map(move |b| [a, b])).collect();
+        assert_eq!(unsigned(&signs(&all), all.len()), all);
     }
 
     #[test]

@@ -48,11 +48,15 @@ pub(crate) fn lean(text: &str) -> String {
 
 /// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
 pub(crate) fn script(program: &[u8], glue: &str, boot: &str) -> Result<String> {
-    let (packed, unpacker) = (signs(&pack(program)?), signs(&unpacker()?));
+    let (packed, unpacker) = (pack(program)?, unpacker()?);
     let script = format!(
-        "(function () {{\n\"use strict\";\nconst UNPACKER = \"{unpacker}\";\nconst SIZE = {};\n\
-         const PAYLOAD = \"{packed}\";\n{glue}\n{boot}}})();\n",
-        program.len()
+        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZE = {};\n\
+         const PAYLOAD = [{}, \"{}\"];\n{glue}\n{boot}}})();\n",
+        unpacker.len(),
+        signs(&unpacker),
+        program.len(),
+        packed.len(),
+        signs(&packed)
     );
     for (name, text) in [("glue", glue), ("start", boot)] {
         let text = text.to_ascii_lowercase();

@@ -10,6 +10,13 @@
   (global $range (mut i32) (i32.const -1))
   (global $code (mut i32) (i32.const 0))
   (global $next (mut i32) (i32.const 0))
+  (global $start (mut i32) (i32.const 0))
+  (global $to (mut i32) (i32.const 0))
+  (global $state (mut i32) (i32.const 0))
+  (global $r0 (mut i32) (i32.const 0))
+  (global $r1 (mut i32) (i32.const 0))
+  (global $r2 (mut i32) (i32.const 0))
+  (global $r3 (mut i32) (i32.const 0))
 
   (func $byte
     (global.set $code (i32.or (i32.shl (global.get $code) (i32.const 8)) (i32.load8_u (global.get $next))))
@@ -21,31 +28,26 @@
         (global.set $range (i32.shl (global.get $range) (i32.const 8)))
         (call $byte))))
 
-  ;; One bit, by the odds at $i, which follow what was met.
+  ;; BIT: one bit $b by the odds whose address is $i; the odds follow what was met. Written out where it is met, because a call for
+  ;; each bit takes twice the time.
   (func $bit (param $i i32) (result i32)
-    (local $odds i32) (local $bound i32)
+    (local $odds i32) (local $bound i32) (local $mask i32) (local $b i32) (local $range i32) (local $code i32)
     (local.set $i (i32.shl (local.get $i) (i32.const 1)))
-    (local.set $odds (i32.load16_u (local.get $i)))
-    (local.set $bound (i32.mul (i32.shr_u (global.get $range) (i32.const 11)) (local.get $odds)))
-    (if (i32.lt_u (global.get $code) (local.get $bound))
-      (then
-        (global.set $range (local.get $bound))
-        (i32.store16 (local.get $i)
-          (i32.add (local.get $odds) (i32.shr_u (i32.sub (i32.const 2048) (local.get $odds)) (i32.const 5))))
-        (call $refill)
-        (return (i32.const 0))))
-    (global.set $range (i32.sub (global.get $range) (local.get $bound)))
-    (global.set $code (i32.sub (global.get $code) (local.get $bound)))
-    (i32.store16 (local.get $i) (i32.sub (local.get $odds) (i32.shr_u (local.get $odds) (i32.const 5))))
-    (call $refill)
-    (i32.const 1))
+    (local.set $range (global.get $range)) (local.set $code (global.get $code))
+    BIT
+    (global.set $range (local.get $range)) (global.set $code (local.get $code))
+    (local.get $b))
 
   ;; Bits from the highest on, until $m reaches $top; the result still has the one in front.
   (func $tree (param $base i32) (param $m i32) (param $top i32) (result i32)
+    (local $i i32) (local $odds i32) (local $bound i32) (local $mask i32) (local $b i32) (local $range i32) (local $code i32)
+    (local.set $range (global.get $range)) (local.set $code (global.get $code))
     (loop $more
-      (local.set $m (i32.or (i32.shl (local.get $m) (i32.const 1))
-        (call $bit (i32.add (local.get $base) (local.get $m)))))
+      (local.set $i (i32.shl (i32.add (local.get $base) (local.get $m)) (i32.const 1)))
+      BIT
+      (local.set $m (i32.or (i32.shl (local.get $m) (i32.const 1)) (local.get $b)))
       (br_if $more (i32.lt_u (local.get $m) (local.get $top))))
+    (global.set $range (local.get $range)) (global.set $code (local.get $code))
     (local.get $m))
 
   ;; So many bits from the lowest on.
@@ -97,29 +99,42 @@
       (i32.add (i32.shl (local.get $value) (i32.const 4)) (call $reverse (i32.const 456) (i32.const 4)))))
 
   ;; A byte that stands for itself; after a match it is foretold by the byte that would have followed there.
-  (func $literal (param $before i32) (param $foretold i32) (param $matched i32) (result i32)
-    (local $base i32) (local $m i32) (local $x i32) (local $b i32)
-    (local.set $base (i32.add (i32.const 1020) (i32.mul (i32.shr_u (local.get $before) (i32.const 5)) (i32.const 768))))
+  (func $literal (param $base i32) (param $foretold i32) (param $matched i32) (result i32)
+    (local $m i32) (local $x i32)
+    (local $i i32) (local $odds i32) (local $bound i32) (local $mask i32) (local $b i32) (local $range i32) (local $code i32)
     (local.set $m (i32.const 1))
     (if (local.get $matched)
       (then
+        (local.set $range (global.get $range)) (local.set $code (global.get $code))
         (loop $more
           (local.set $foretold (i32.shl (local.get $foretold) (i32.const 1)))
           (local.set $x (i32.and (local.get $foretold) (i32.const 256)))
-          (local.set $b (call $bit
-            (i32.add (i32.add (local.get $base) (i32.const 256)) (i32.add (local.get $x) (local.get $m)))))
+          (local.set $i (i32.shl
+            (i32.add (i32.add (local.get $base) (i32.const 256)) (i32.add (local.get $x) (local.get $m)))
+            (i32.const 1)))
+          BIT
           (local.set $m (i32.or (i32.shl (local.get $m) (i32.const 1)) (local.get $b)))
-          (if (i32.ge_u (local.get $m) (i32.const 256)) (then (return (local.get $m))))
-          (br_if $more (i32.eq (i32.shr_u (local.get $x) (i32.const 8)) (local.get $b))))))
+          (br_if $more (i32.and
+            (i32.lt_u (local.get $m) (i32.const 256))
+            (i32.eq (i32.shr_u (local.get $x) (i32.const 8)) (local.get $b)))))
+        (global.set $range (local.get $range)) (global.set $code (local.get $code))
+        (if (i32.ge_u (local.get $m) (i32.const 256)) (then (return (local.get $m))))))
     (call $tree (local.get $base) (local.get $m) (i32.const 256)))
 
-  (func (export "unpack") (param $from i32) (param $to i32) (param $size i32)
-    (local $end i32) (local $start i32) (local $state i32) (local $length i32) (local $d i32)
-    (local $r0 i32) (local $r1 i32) (local $r2 i32) (local $r3 i32)
-    (local.set $start (local.get $to))
-    (local.set $end (i32.add (local.get $to) (local.get $size)))
+  ;; Begins with the stream at $from, whose result goes to $to.
+  (func (export "begin") (param $from i32) (param $to i32)
+    (global.set $start (local.get $to))
+    (global.set $to (local.get $to))
     (global.set $next (i32.add (local.get $from) (i32.const 1)))
-    (call $byte) (call $byte) (call $byte) (call $byte)
+    (call $byte) (call $byte) (call $byte) (call $byte))
+
+  ;; Goes on until the result reaches $end or a little beyond; gives where it ends.
+  (func (export "unpack") (param $end i32) (result i32)
+    (local $to i32) (local $start i32) (local $state i32) (local $length i32) (local $d i32)
+    (local $r0 i32) (local $r1 i32) (local $r2 i32) (local $r3 i32)
+    (local.set $to (global.get $to)) (local.set $start (global.get $start)) (local.set $state (global.get $state))
+    (local.set $r0 (global.get $r0)) (local.set $r1 (global.get $r1))
+    (local.set $r2 (global.get $r2)) (local.set $r3 (global.get $r3))
     (block $done
       (loop $more
         (br_if $done (i32.ge_u (local.get $to) (local.get $end)))
@@ -127,9 +142,10 @@
           (then
             (i32.store8 (local.get $to)
               (call $literal
-                (if (result i32) (i32.eq (local.get $to) (local.get $start))
-                  (then (i32.const 0))
-                  (else (i32.load8_u (i32.sub (local.get $to) (i32.const 1)))))
+                (i32.add (i32.const 1020) (i32.mul (i32.const 768)
+                  (if (result i32) (i32.eq (local.get $to) (local.get $start))
+                    (then (i32.const 0))
+                    (else (i32.shr_u (i32.load8_u (i32.sub (local.get $to) (i32.const 1))) (i32.const 5))))))
                 (i32.load8_u (i32.sub (i32.sub (local.get $to) (local.get $r0)) (i32.const 1)))
                 (i32.ge_u (local.get $state) (i32.const 7))))
             (local.set $to (i32.add (local.get $to) (i32.const 1)))
@@ -175,4 +191,8 @@
           (local.set $to (i32.add (local.get $to) (i32.const 1)))
           (local.set $length (i32.sub (local.get $length) (i32.const 1)))
           (br_if $copy (local.get $length)))
-        (br $more)))))
+        (br $more)))
+    (global.set $to (local.get $to)) (global.set $state (local.get $state))
+    (global.set $r0 (local.get $r0)) (global.set $r1 (local.get $r1))
+    (global.set $r2 (local.get $r2)) (global.set $r3 (local.get $r3))
+    (local.get $to)))

@@ -66,6 +66,7 @@ pub(crate) fn place_words(plan: &Plan, path: &str) -> String {
 pub(crate) fn Mend(props: &Props) -> Html {
     let (errors, doubts) = (props.reckoned.count(Severity::Error), props.reckoned.count(Severity::Warning));
     let heading = match errors {
+        _ if props.reckoned.pending => "Being added up".to_owned(),
         0 => "Nothing has to be mended".to_owned(),
         n => format!(
             "There {} to mend",
@@ -113,7 +114,7 @@ pub(crate) fn Mend(props: &Props) -> Html {
             <h2 id="mend-heading">
                 if errors > 0 { <span class="sign" aria-hidden="true">{ "✕ " }</span> }
                 { heading }
-                <span class="doubtful">{ format!("; {doubtful}") }</span>
+                if !props.reckoned.pending { <span class="doubtful">{ format!("; {doubtful}") }</span> }
             </h2>
             if errors + doubts > 0 {
                 <button type="button" class="small" aria-expanded={props.open.to_string()} onclick={toggle}>

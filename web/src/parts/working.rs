@@ -127,8 +127,15 @@ fn working(
 fn parts(opened: &Opened, account: &RouteAccount, figure: &Figure) -> Html {
     let (indices, words): (Vec<usize>, String) = match figure.how {
         How::Ratio { over, under } => (vec![over, under], "One figure over another:".to_owned()),
-        How::Containers { volume, takes_m3 } => {
-            (vec![volume], format!("One container takes {} of this volume:", show(takes_m3, Kind::Volume)))
+        How::Containers { of, takes } => {
+            let kind = match account.figures.get(of).map(|f| f.measure) {
+                Some(thimbleworth::account::Measure::Mass) => Kind::Mass,
+                _ => Kind::Volume,
+            };
+            (vec![of], format!("One container takes {} of this:", show(takes, kind)))
+        }
+        How::Times { of, factor } => {
+            (vec![of], format!("{} times this figure:", thimbleworth::quantity::significant(factor, 4)))
         }
         How::Sum(_) | How::Spent(_) => return Html::default(),
     };
@@ -164,7 +171,7 @@ fn postings(
         Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => *amount_si,
     };
     let measure = match figure.how {
-        How::Containers { volume, .. } => account.figures.get(volume).map_or(figure.measure, |f| f.measure),
+        How::Containers { of, .. } => account.figures.get(of).map_or(figure.measure, |f| f.measure),
         _ => figure.measure,
     };
     let scale = Scale::of(measure, found.iter().map(amount_of));
@@ -202,7 +209,7 @@ fn postings(
                             }
                             Contribution::Spending { index, amount_si } => {
                                 let s = account.trace.spendings.get(*index)?;
-                                let kind = if matches!(s.utility, thimbleworth::ledger::Utility::Electricity) { Kind::Energy } else { Kind::Mass };
+                                let kind = if s.utility.is_energy() { Kind::Energy } else { Kind::Mass };
                                 Some(html! { <tr>
                                     <th scope="row">{ rule_of(route, s.step, s.rule).map_or("", |r| r.name) }</th>
                                     <td>{ s.utility.name() }</td><td></td><td></td>

@@ -45,9 +45,10 @@ pub(crate) fn Leaves(props: &LeavesProps) -> Html {
     let stand = use_state_eq(|| 1_usize);
     {
         let stand = stand.clone();
-        use_effect_with(*stand, move |n| {
+        use_effect_with((*stand, props.view.reckoned.pending), move |(n, pending)| {
             let next = n + 1;
-            let timer = (next <= SECTIONS.len()).then(|| Timeout::new(0, move || stand.set(next)));
+            let timer =
+                (!pending && next <= SECTIONS.len()).then(|| Timeout::new(0, move || stand.set(next)));
             move || drop(timer)
         });
     }

@@ -7,6 +7,7 @@ mod files;
 mod log;
 mod odds;
 mod results;
+mod waste;
 
 use serde_json::Value;
 use std::io::Write;

@@ -4,7 +4,7 @@ use super::super::row::written;
 use super::super::words::si_unit;
 use crate::account::{Measure, place_name, rule_of};
 use crate::chance::Input;
-use crate::ledger::{Posting, Spending, StepIx, Utility};
+use crate::ledger::{Posting, Spending, StepIx};
 use crate::program::{Assumption, RouteProgram, SiteUse};
 use crate::quantity::Spread;
 use crate::step::Caution;
@@ -73,7 +73,7 @@ pub(super) struct SpendingDocument {
 impl SpendingDocument {
     pub(super) fn of(route: &RouteProgram, s: &Spending) -> Self {
         let (step, technique) = step_and_technique(route, s.step);
-        let energy = s.utility == Utility::Electricity;
+        let energy = s.utility.is_energy();
         let kwh = |j: f64| energy.then(|| written(Measure::Energy, j));
         let kg = |kg: f64| (!energy).then_some(kg);
         let a_year = s.amount_si * s.runs_a_year;

@@ -68,8 +68,9 @@ fn opened(out: &mut String, o: &Opened<'_>, before: &str) {
     }
     paragraph(out, "  ", &format!("Counted: {}", figure.boundary));
     paragraph(out, "  ", &format!("Formula: {} ({})", figure.formula, cited(figure.source)));
-    if let How::Containers { takes_m3, .. } = figure.how {
-        paragraph(out, "  ", &format!("One container takes {}.", show(takes_m3, Kind::Volume)));
+    if let How::Containers { of, takes } = figure.how {
+        let measure = account.figures.get(of).map_or(figure.measure, |f| f.measure);
+        paragraph(out, "  ", &format!("One container takes {}.", amount(takes, measure)));
     }
     let sums = matches!(figure.how, How::Sum(_) | How::Spent(_));
     if sums && o.entries.is_empty() {

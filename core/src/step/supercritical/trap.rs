@@ -7,48 +7,46 @@ use crate::quantity::Kind;
 use crate::source::{COMMON_PRACTICE, FROM_MEMORY};
 use crate::step::{Control, Mixture, Param};
 
-pub(super) const COSOLVENT: Param = Param::new("cosolvent", "Co-solvent", Control::Mixture)
+const COSOLVENT: Param = Param::new("cosolvent", "Co-solvent", Control::Mixture)
     .hint("One material, or several with shares by volume.");
-pub(super) const COSOLVENT_FLOW: Param =
-    Param::quantity("cosolvent_flow", "Flow of co-solvent", Kind::VolumeFlow)
-        .physical(0.0, 1.0)
-        .with("cosolvent")
-        .hint("As liquid at the bench's temperature, while CO2 flows: 5 % of 4 mL/min is 0.2 mL/min.")
-        .source(COMMON_PRACTICE);
-pub(super) const COSOLVENT_KEPT: Param =
+const COSOLVENT_FLOW: Param = Param::quantity("cosolvent_flow", "Flow of co-solvent", Kind::VolumeFlow)
+    .physical(0.0, 1.0)
+    .with("cosolvent")
+    .hint("As liquid at the bench's temperature, while CO2 flows: 5 % of 4 mL/min is 0.2 mL/min.")
+    .source(COMMON_PRACTICE);
+const COSOLVENT_KEPT: Param =
     Param::quantity("cosolvent_kept", "Share of the co-solvent that the trap keeps", Kind::Fraction)
         .default("90 %", FROM_MEMORY)
         .physical(0.0, 1.0)
         .with("cosolvent")
         .hint("The rest leaves with the gas.")
         .source(FROM_MEMORY);
-pub(super) const TRAP_SOLVENT: Param = Param::new("trap_solvent", "Solvent in the trap", Control::Mixture)
+const TRAP_SOLVENT: Param = Param::new("trap_solvent", "Solvent in the trap", Control::Mixture)
     .hint("Where the extract is collected in liquid; left out for a solid trap or a separator.");
-pub(super) const TRAP_VOLUME: Param = Param::quantity("trap_volume", "Volume in the trap", Kind::Volume)
+const TRAP_VOLUME: Param = Param::quantity("trap_volume", "Volume in the trap", Kind::Volume)
     .physical(0.0, 10.0)
     .usual(1e-6, 1e-4)
     .with("trap_solvent")
     .hint("At the start; 3 to 15 mL is usual.")
     .source(COMMON_PRACTICE);
-pub(super) const TRAP_LOSS: Param = Param::quantity(
-    "trap_loss",
-    "Share of the trap solvent blown off",
-    Kind::Fraction,
-)
-.default("20 %", FROM_MEMORY)
-.physical(0.0, 1.0)
-.usual(0.0, 0.6)
-.with("trap_solvent")
-.hint("Of the trap's own solvent, by the gas that bubbles through. Read the level after the run to know.")
-.source(FROM_MEMORY);
-pub(super) const RINSE: Param = Param::new("rinse", "Solvent that rinses the trap", Control::Mixture)
+const TRAP_LOSS: Param = Param::quantity("trap_loss", "Share of the trap solvent blown off", Kind::Fraction)
+    .default("20 %", FROM_MEMORY)
+    .physical(0.0, 1.0)
+    .usual(0.0, 0.6)
+    .with("trap_solvent")
+    .hint("Of the trap's own solvent, by the gas that bubbles through. Read the level after the run to know.")
+    .source(FROM_MEMORY);
+const RINSE: Param = Param::new("rinse", "Solvent that rinses the trap", Control::Mixture)
     .hint("1 to 2 mL at a time is usual for a solid trap.");
-pub(super) const RINSE_VOLUME: Param = Param::quantity("rinse_volume", "Volume of the rinse", Kind::Volume)
+const RINSE_VOLUME: Param = Param::quantity("rinse_volume", "Volume of the rinse", Kind::Volume)
     .physical(0.0, 10.0)
     .usual(5e-7, 5e-5)
     .with("rinse")
     .hint("All portions together.")
     .source(COMMON_PRACTICE);
+
+pub(super) const COSOLVENTS: [Param; 3] = [COSOLVENT, COSOLVENT_FLOW, COSOLVENT_KEPT];
+pub(super) const TRAPPING: [Param; 5] = [TRAP_SOLVENT, TRAP_VOLUME, TRAP_LOSS, RINSE, RINSE_VOLUME];
 
 /// The trap of one step.
 pub(super) struct Trap {
