@@ -98,7 +98,7 @@ const TENS: [f64; 16] =
     [1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15];
 
 /// A plain number at the start of a cell, and what follows it. `None` for all that needs a closer look.
-fn plain<'c>(cell: &'c [u8], decimals: Decimals) -> Option<(f64, &'c [u8])> {
+fn plain(cell: &[u8], decimals: Decimals) -> Option<(f64, &[u8])> {
     let (negative, digits) = match cell {
         [b'-', rest @ ..] => (true, rest),
         [b'+', rest @ ..] => (false, rest),
@@ -229,13 +229,13 @@ fn close_look(cell: &[u8], decimals: Decimals, beside: Option<&LogUnit>) -> Resu
         return Err(Why::NoAmount);
     }
     // 4 x 2.5 L
-    if let Some((pieces, each)) = text.split_once(['x', '×', 'X']) {
-        if let Ok(pieces) = count(pieces.trim().as_bytes(), decimals) {
-            let mut units = UnitCell::default();
-            let mut value = amount(each.trim().as_bytes(), decimals, &mut units, beside)?;
-            value.si *= pieces;
-            return Ok(value);
-        }
+    if let Some((pieces, each)) = text.split_once(['x', '×', 'X'])
+        && let Ok(pieces) = count(pieces.trim().as_bytes(), decimals)
+    {
+        let mut units = UnitCell::default();
+        let mut value = amount(each.trim().as_bytes(), decimals, &mut units, beside)?;
+        value.si *= pieces;
+        return Ok(value);
     }
     let (sign, number, bracketed) = signed(&text);
     let (number, change) = without_thousands(number, decimals);

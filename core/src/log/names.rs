@@ -178,7 +178,7 @@ impl Names {
                 let index = place.and_then(|p| u16::try_from(p).ok());
                 match index {
                     Some(index) => Found::plain(index),
-                    None => Found::refused(Why::UnknownStream, self.streams.join(", ")),
+                    None => Found::refused(Why::UnknownStream, &self.streams.join(", ")),
                 }
             }
             _ => self.route(name),
@@ -197,7 +197,7 @@ impl Names {
         if name.is_empty() {
             return match self.present.as_slice() {
                 [one] => Found::plain(*one),
-                _ => Found::refused(Why::UnknownRoute, String::new()),
+                _ => Found::refused(Why::UnknownRoute, ""),
             };
         }
         let route = of(&|r| same(&r.label, name))
@@ -211,17 +211,17 @@ impl Names {
                 Some(work)
             });
         let labels = || self.routes.iter().take(6).map(|r| r.label.as_str()).collect::<Vec<_>>().join(", ");
-        route.map_or_else(|| Found::refused(Why::UnknownRoute, labels()), Found::plain)
+        route.map_or_else(|| Found::refused(Why::UnknownRoute, &labels()), Found::plain)
     }
 
     fn material(&mut self, name: &str, cas: &str) -> Found {
         if name.is_empty() && cas.is_empty() {
-            return Found::refused(Why::NoName, String::new());
+            return Found::refused(Why::NoName, "");
         }
         let inside = cas_in(name);
         let number = if cas.is_empty() { inside.unwrap_or_default() } else { cas };
         if !number.is_empty() && !cas_holds(number) {
-            return Found::refused(Why::CasDigit, String::new());
+            return Found::refused(Why::CasDigit, "");
         }
         let by_cas = if number.is_empty() { None } else { self.book.known(number) };
         let whole = self.book.known(name);
@@ -231,7 +231,7 @@ impl Names {
                 let mut detail = named.name.to_string();
                 detail.push_str(" or ");
                 detail.push_str(&cas.name);
-                return Found::refused(Why::CasDiffers, detail);
+                return Found::refused(Why::CasDiffers, &detail);
             }
             (Some(found), _) | (None, Some(found)) => found,
             (None, None) => return self.unknown(name),
@@ -261,11 +261,11 @@ impl Names {
 
     fn unknown(&mut self, name: &str) -> Found {
         if self.suggestions >= MOST_SUGGESTIONS {
-            return Found::refused(Why::UnknownMaterial, String::new());
+            return Found::refused(Why::UnknownMaterial, "");
         }
         self.suggestions += 1;
         let near = crate::material::catalogue().find(name).err().map(|u| u.suggestions.join(", "));
-        Found::refused(Why::UnknownMaterial, near.unwrap_or_default())
+        Found::refused(Why::UnknownMaterial, &near.unwrap_or_default())
     }
 }
 
@@ -280,8 +280,8 @@ impl Found {
         Self { index: Ok(index), change: None, detail: String::new(), told: false }
     }
 
-    fn refused(why: Why, detail: String) -> Self {
-        Self { index: Err(why), change: None, detail: quoted(&detail), told: false }
+    fn refused(why: Why, detail: &str) -> Self {
+        Self { index: Err(why), change: None, detail: quoted(detail), told: false }
     }
 
     /// The change, the first time that it is asked for.

@@ -197,7 +197,7 @@ impl Tally {
     #[must_use]
     pub fn rows(&self) -> u64 {
         let amounts = self.sums.values().chain(self.stock.values()).map(|s| s.rows);
-        amounts.chain(self.done.values().map(|d| d.rows)).fold(0, |all, rows| all + rows)
+        amounts.chain(self.done.values().map(|d| d.rows)).sum()
     }
 
     /// The sum over all keys that fit.
