@@ -37,8 +37,9 @@ fn soxhlet_waste_by_hand() {
     near(a_year(soxhlet, "waste.flammable.volume"), ml * EXTRACTIONS / 1000.0, 1e-3);
     // 622 L in cans of 20 L closed at 18 L: 34.5, so 35.
     near(a_year(soxhlet, "waste.flammable.containers"), (ml * EXTRACTIONS / 1000.0 / 18.0).ceil(), 0.0);
-    // To air: what was weighed, 2 % and 7 % of the above, 4 mL by nitrogen, 5 % of the acetone.
-    let air_g = 8.0 + MIXTURE_G_ML * (60.0 * 0.02 + (before - 5.0) * 0.07 + 4.0) + 0.790 * 40.0 * 0.05;
+    // To air: what was weighed, 2 % and 7 % of the above, 4 mL by nitrogen, 5 % of the acetone. What is left at 5 mL is hexane (0.659 g/mL).
+    let distilled_g = MIXTURE_G_ML * before - 0.659 * 5.0;
+    let air_g = 8.0 + MIXTURE_G_ML * 60.0 * 0.02 + distilled_g * 0.07 + 0.659 * 4.0 + 0.790 * 40.0 * 0.05;
     near(a_year(soxhlet, "air.solvents"), air_g * EXTRACTIONS / 1000.0, 2e-3);
 }
 

@@ -140,11 +140,34 @@ impl Writer {
 
     /// A way of extracting a solid; the last word says how much liquor is left at least, in mL.
     fn extract_a_solid(&mut self) -> (Vec<Value>, u64) {
-        match self.chance.between(0, 4) {
+        match self.chance.between(0, 6) {
+            5 => {
+                let mut step = json!({ "step": "percolate", "solvent": self.solvent(), "charge": self.ml(60, 400),
+                    "time": self.minutes(300, 1400), "power": self.watt(20, 90), "extracts": { "oil": self.percent(20, 80) },
+                    "loss": self.percent(1, 6), "hold_up": self.hold_up() });
+                self.measured(&mut step, &["lost to air", "held in the marc"]);
+                (vec![step], 30)
+            }
+            6 => {
+                let mut step = json!({ "step": "microwave", "solvent": self.solvent(), "charge": self.ml(30, 60), "time": self.minutes(10, 30),
+                    "vessels": self.chance.between(1, 16), "power": self.watt(500, 1800), "rinse": self.ml(3, 8),
+                    "headspace": self.ml(30, 60), "opened_at": self.celsius(18, 30), "extracts": { "oil": self.percent(20, 80) },
+                    "hold_up": self.hold_up() });
+                self.measured(&mut step, &["lost to air", "held in the marc"]);
+                (vec![step], 15)
+            }
             0 => {
                 let mut step = json!({ "step": "soxhlet", "solvent": self.solvent(), "charge": self.ml(150, 400),
                     "time": self.minutes(300, 1400), "heater": self.watt(100, 400), "extracts": { "oil": self.percent(20, 80) },
                     "loss": self.percent(1, 10), "hold_up": self.hold_up() });
+                if self.chance.one_in(2) {
+                    step["coolant"] = json!(self.celsius(2, 18));
+                    step["draught"] = json!(self.mass_of_flow());
+                    step["cycles"] = json!("5 /h");
+                    step["siphon"] = json!(self.ml(50, 90));
+                    step["cooling_water"] = json!("0.5 L/min");
+                    step.as_object_mut().unwrap().remove("loss");
+                }
                 self.measured(&mut step, &["condenser loss", "held in the marc"]);
                 (vec![step], 60)
             }
@@ -152,6 +175,11 @@ impl Writer {
                 let mut step = json!({ "step": "ultrasonic", "solvent": self.solvent(), "charge": self.ml(60, 120),
                     "portions": self.chance.between(1, 4), "time": self.minutes(2, 20), "power": self.watt(100, 900),
                     "extracts": { "oil": self.percent(10, 60) }, "loss": self.percent(1, 8), "hold_up": self.hold_up() });
+                if self.chance.one_in(2) {
+                    step["surface"] = json!("15 cm2");
+                    step["temperature"] = json!(self.celsius(15, 30));
+                    step.as_object_mut().unwrap().remove("loss");
+                }
                 self.measured(&mut step, &["lost to air", "held in the marc"]);
                 (vec![step], 20)
             }
@@ -160,6 +188,12 @@ impl Writer {
                     "void": self.percent(40, 60), "flush": self.percent(50, 80), "lines": self.ml(1, 6),
                     "dispersant": "diatomaceous earth", "dispersant_mass": self.g(2, 10), "extracts": { "oil": self.percent(20, 80) },
                     "loss": self.percent(1, 10), "hold_up": "0.1 mL/g" });
+                if self.chance.one_in(2) {
+                    step["temperature"] = json!(self.celsius(80, 120));
+                    step["purge"] = json!(self.ml(500, 2000));
+                    step["vial"] = json!(self.celsius(15, 25));
+                    step.as_object_mut().unwrap().remove("loss");
+                }
                 self.measured(&mut step, &["carried off by the purge", "held in the marc"]);
                 (vec![step], 15)
             }
@@ -203,6 +237,13 @@ impl Writer {
         self.spread(text[self.style.units].clone())
     }
 
+    /// A stream of gas that can carry away whatever these plans hold.
+    fn stream(&mut self) -> String {
+        let n = self.chance.between(40, 55);
+        let text = [format!("{n} L/min"), format!("{n}000 mL/min"), format!("{n} dm3/min")];
+        self.spread(text[self.style.units].clone())
+    }
+
     fn extract_water(&mut self) -> (Vec<Value>, u64) {
         if self.chance.one_in(2) {
             let mut step = json!({ "step": "liquid-liquid", "solvent": { "dichloromethane": "85 %", "acetone": "15 %" },
@@ -227,7 +268,15 @@ impl Writer {
         if self.chance.one_in(2) {
             let condensate = self.chance.of(&["store", "waste", "elsewhere"]);
             let to = if least_ml > 10 { self.ml(2, 5) } else { "1 mL".to_owned() };
-            let mut step = match self.chance.between(0, 2) {
+            let mut step = match self.chance.between(0, 4) {
+                3 => {
+                    json!({ "step": "concentrate", "by": "rotary evaporator", "to": to, "condensate": condensate, "coolant": self.celsius(1, 8),
+                    "evacuated": self.ml(1000, 4000), "time": self.minutes(5, 30), "power": self.watt(500, 1500) })
+                }
+                4 => {
+                    json!({ "step": "distil", "to": to, "distillate": condensate, "forerun": "1 mL", "forerun_to": "waste", "coolant": self.celsius(1, 8),
+                    "time": self.minutes(60, 120), "power": self.watt(500, 1500) })
+                }
                 0 => {
                     json!({ "step": "concentrate", "by": "rotary evaporator", "to": to, "condensate": condensate,
                     "loss": self.percent(2, 9), "time": self.minutes(5, 30), "power": self.watt(500, 1500) })
@@ -237,8 +286,8 @@ impl Writer {
                     "condensate": condensate })
                 }
                 _ => {
-                    json!({ "step": "concentrate", "by": "nitrogen stream", "to": to, "gas_flow": self.mass_of_flow(),
-                    "time": self.minutes(10, 40), "lost_to": "room" })
+                    json!({ "step": "concentrate", "by": "nitrogen stream", "to": to, "gas_flow": self.stream(),
+                    "time": self.minutes(90, 120), "lost_to": "room" })
                 }
             };
             if step["by"] == "rotary evaporator" && self.chance.one_in(3) {

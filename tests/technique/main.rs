@@ -14,6 +14,7 @@ mod declared;
 mod posted;
 mod staged;
 mod trade;
+mod vapour;
 
 use serde_json::{Value, json};
 use std::path::PathBuf;

@@ -355,6 +355,34 @@ fn explain(route: &RouteProgram, failure: &Failure) -> Problem {
             ),
             "a smaller volume to be left, or no concentration".to_owned(),
         ),
+        Halt::Boils { vapour_pa, pressure_pa, temperature_k } => (
+            format!(
+                "at {} the vapour has {} of the {} that are held: nothing is left to condense it or to carry it",
+                show(temperature_k, Kind::Temperature),
+                show(vapour_pa, Kind::Pressure),
+                show(pressure_pa, Kind::Pressure)
+            ),
+            "a colder coolant or liquid, or a higher pressure".to_owned(),
+        ),
+        Halt::TooShort { given_s, least_s } => (
+            format!(
+                "{} is stated, but a gas that leaves saturated needs at least {}",
+                show(given_s, Kind::Time),
+                show(least_s, Kind::Time)
+            ),
+            "more time, more gas or a warmer bath; a real stream takes several times the least time".to_owned(),
+        ),
+        Halt::NoVapour { temperature_k, low_k, high_k } => (
+            format!("the vapour over the liquid is not known at {}", show(temperature_k, Kind::Temperature)),
+            format!(
+                "a temperature between {} and {}, or a share in place of the physics",
+                show(low_k, Kind::Temperature),
+                show(high_k, Kind::Temperature)
+            ),
+        ),
+        Halt::OutOfRange { of, value, allowed } => {
+            (format!("the {of} comes to {value}"), allowed.to_owned())
+        }
         Halt::Co2(e) => found_and_need(&e.to_string()),
         Halt::Loop(e) => found_and_need(&e.to_string()),
         Halt::NotANumber { rule: r } => (

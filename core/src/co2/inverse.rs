@@ -217,8 +217,8 @@ pub(crate) fn enthalpy_from_entropy_near(
 ) -> Result<f64, StateError> {
     let mut temperature_k = near_k;
     for _ in 0..4 {
-        let Ok(here) = state(temperature_k, pressure_pa) else { break };
-        let (excess, cp) = (entropy_j_kg_k - here.entropy_j_kg_k, here.heat_capacity_j_kg_k);
+        let Ok((here, cp)) = super::equilibrium(temperature_k, pressure_pa) else { break };
+        let excess = entropy_j_kg_k - here.entropy_j_kg_k;
         let step = excess * temperature_k / cp;
         // Near the critical point the heat capacity changes too fast for the series.
         if step.abs() < 1e-4 * temperature_k && cp < 1e4 {

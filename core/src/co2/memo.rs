@@ -3,7 +3,9 @@
 //! A state is a pure function of its temperature and pressure: where the bits of both are those of a draw before, so is the
 //! state, bit for bit. The calls of a run come in the same order in every draw, so each call keeps one state in a place of
 //! its own: what is exact is solved once, what is uncertain takes no other's place.
-use super::{State, StateError, inverse, saturated_states, state};
+use super::{
+    Equilibrium, Phase, StateError, boundary, equilibrium, inverse, saturation_pressure_pa, thermal,
+};
 
 /// Values by the bits of what they follow from, one place for each call of a run.
 #[derive(Clone, Debug)]
@@ -42,20 +44,20 @@ impl<const N: usize, V: Copy> Kept<N, V> {
 
 /// States of carbon dioxide that a route has met, with the bits of what they were asked for.
 ///
-/// Gives what [`state`] and its kin give, to the last bit. It grows where a run makes more calls than it has room for, and allocates nothing else.
+/// Gives what [`state`](super::state) and its kin give, to the last bit. It grows where a run makes more calls than it has room for, and allocates nothing else.
 ///
 /// ```
 /// use thimbleworth::co2::{Memo, state};
 /// let mut memo = Memo::default();
 /// for _ in 0..3 {
 ///     memo.begin();
-///     assert_eq!(memo.state(313.15, 30e6), state(313.15, 30e6));
+///     assert_eq!(memo.state(313.15, 30e6), state(313.15, 30e6).map(Into::into));
 /// }
 /// ```
 #[derive(Clone, Debug, Default)]
 pub struct Memo {
-    states: Kept<2, State>,
-    liquids: Kept<1, State>,
+    states: Kept<2, Equilibrium>,
+    liquids: Kept<1, Equilibrium>,
     lifts: Kept<3, f64>,
 }
 
@@ -77,28 +79,33 @@ impl Memo {
         self.lifts.next = 0;
     }
 
-    /// As [`state`]; temperature in K, absolute pressure in Pa.
+    /// As [`state`](super::state), without heat capacities, speed of sound and viscosity; temperature in K, absolute
+    /// pressure in Pa.
     ///
     /// # Errors
-    /// As for [`state`].
-    pub fn state(&mut self, temperature_k: f64, pressure_pa: f64) -> Result<State, StateError> {
-        self.states.find([temperature_k, pressure_pa], || state(temperature_k, pressure_pa))
+    /// As for [`state`](super::state).
+    pub fn state(&mut self, temperature_k: f64, pressure_pa: f64) -> Result<Equilibrium, StateError> {
+        self.states.find([temperature_k, pressure_pa], || Ok(equilibrium(temperature_k, pressure_pa)?.0))
     }
 
     /// The density there, kg/m³.
     ///
     /// # Errors
-    /// As for [`state`].
+    /// As for [`state`](super::state).
     pub fn density_kg_m3(&mut self, temperature_k: f64, pressure_pa: f64) -> Result<f64, StateError> {
         Ok(self.state(temperature_k, pressure_pa)?.density_kg_m3)
     }
 
-    /// The liquid of [`saturated_states`] at a temperature, K.
+    /// The liquid of [`saturated_states`](super::saturated_states) at a temperature, K.
     ///
     /// # Errors
-    /// As for [`saturated_states`].
-    pub fn saturated_liquid(&mut self, temperature_k: f64) -> Result<State, StateError> {
-        self.liquids.find([temperature_k], || Ok(saturated_states(temperature_k)?.0))
+    /// As for [`saturated_states`](super::saturated_states).
+    pub fn saturated_liquid(&mut self, temperature_k: f64) -> Result<Equilibrium, StateError> {
+        self.liquids.find([temperature_k], || {
+            let pressure_pa = saturation_pressure_pa(temperature_k)?;
+            let liquid = boundary::OnSaturation::new(temperature_k).liquid();
+            Ok(thermal(temperature_k, pressure_pa, liquid, Phase::Liquid)?.0)
+        })
     }
 
     /// The enthalpy at an entropy and a pressure, sought from a temperature, J/kg.
@@ -117,6 +124,7 @@ impl Memo {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::co2::{saturated_states, state};
 
     #[test]
     fn what_is_kept_is_what_is_solved() {
@@ -126,11 +134,11 @@ mod tests {
             let t = 310.0 + f64::from(draw % 3);
             // An exact state between two that change, one of which is asked for twice.
             for (t, p) in [(t, 30e6), (278.15, 6e6), (t, 30e6), (t + 5.0, 5e6)] {
-                assert_eq!(memo.state(t, p), state(t, p));
+                assert_eq!(memo.state(t, p), state(t, p).map(Into::into));
             }
             assert_eq!(
                 memo.saturated_liquid(280.0 + t / 100.0),
-                Ok(saturated_states(280.0 + t / 100.0).unwrap().0)
+                Ok(saturated_states(280.0 + t / 100.0).unwrap().0.into())
             );
         }
         assert!(memo.states.rows.len() == 4 && memo.liquids.rows.len() == 1);
@@ -141,7 +149,7 @@ mod tests {
         let mut memo = Memo::default();
         for _ in 0..2 {
             memo.begin();
-            assert_eq!(memo.state(100.0, 1e5), state(100.0, 1e5));
+            assert_eq!(memo.state(100.0, 1e5), state(100.0, 1e5).map(Into::into));
             assert!(memo.state(300.0, 1e5).is_ok());
         }
     }

@@ -106,27 +106,53 @@ impl State {
     }
 
     fn new(temperature_k: f64, pressure_pa: f64, delta: f64, phase: Phase) -> Result<Self, StateError> {
-        let caloric = helmholtz::Caloric::new(CRITICAL_TEMPERATURE_K / temperature_k, delta);
-        let gas_constant = GAS_CONSTANT_J_MOL_K / MOLAR_MASS_KG_MOL;
-        let thermal = gas_constant * temperature_k;
-        // Where the isotherm is flat to rounding, heat capacity and density are noise.
-        if !(caloric.stiffness > 1e-9 && caloric.isochoric > 0.0) {
-            return Err(StateError::Critical { temperature_k, pressure_pa });
-        }
-        let density_kg_m3 = delta * CRITICAL_DENSITY_KG_M3;
+        let (there, caloric) = thermal(temperature_k, pressure_pa, delta, phase)?;
         Ok(Self {
             temperature_k,
             pressure_pa,
-            density_kg_m3,
+            density_kg_m3: there.density_kg_m3,
             phase,
-            enthalpy_j_kg: thermal * caloric.enthalpy,
-            entropy_j_kg_k: gas_constant * caloric.entropy,
-            heat_capacity_j_kg_k: gas_constant * caloric.isobaric,
-            isochoric_heat_capacity_j_kg_k: gas_constant * caloric.isochoric,
-            sound_speed_m_s: (thermal * caloric.sound_squared).sqrt(),
-            viscosity_pa_s: viscosity::correlation_pa_s(temperature_k, density_kg_m3),
+            enthalpy_j_kg: there.enthalpy_j_kg,
+            entropy_j_kg_k: there.entropy_j_kg_k,
+            heat_capacity_j_kg_k: GAS_CONSTANT * caloric.isobaric,
+            isochoric_heat_capacity_j_kg_k: GAS_CONSTANT * caloric.isochoric,
+            sound_speed_m_s: (GAS_CONSTANT * temperature_k * caloric.sound_squared).sqrt(),
+            viscosity_pa_s: viscosity::correlation_pa_s(temperature_k, there.density_kg_m3),
         })
     }
+}
+
+/// Of carbon dioxide, J/(kg K).
+const GAS_CONSTANT: f64 = GAS_CONSTANT_J_MOL_K / MOLAR_MASS_KG_MOL;
+
+/// What an account of energy needs of a state, without the rest.
+fn thermal(
+    temperature_k: f64,
+    pressure_pa: f64,
+    delta: f64,
+    phase: Phase,
+) -> Result<(Equilibrium, helmholtz::Caloric), StateError> {
+    let caloric = helmholtz::Caloric::new(CRITICAL_TEMPERATURE_K / temperature_k, delta);
+    // Where the isotherm is flat to rounding, heat capacity and density are noise.
+    if !(caloric.stiffness > 1e-9 && caloric.isochoric > 0.0) {
+        return Err(StateError::Critical { temperature_k, pressure_pa });
+    }
+    let there = Equilibrium {
+        temperature_k,
+        pressure_pa,
+        density_kg_m3: delta * CRITICAL_DENSITY_KG_M3,
+        enthalpy_j_kg: GAS_CONSTANT * temperature_k * caloric.enthalpy,
+        entropy_j_kg_k: GAS_CONSTANT * caloric.entropy,
+        phases: Phases::Single(phase),
+    };
+    Ok((there, caloric))
+}
+
+/// As [`state`], with what an account of energy needs of it, and the heat capacity at constant pressure, J/(kg K).
+fn equilibrium(temperature_k: f64, pressure_pa: f64) -> Result<(Equilibrium, f64), StateError> {
+    let (delta, phase) = density::reduced_density(temperature_k, pressure_pa)?;
+    let (there, caloric) = thermal(temperature_k, pressure_pa, delta, phase)?;
+    Ok((there, GAS_CONSTANT * caloric.isobaric))
 }
 
 /// The state at a temperature, K, and an absolute pressure, Pa.

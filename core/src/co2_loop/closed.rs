@@ -69,20 +69,20 @@ impl ClosedLoop {
         // Below it the valve would make solid and gas.
         above("separator pressure", low_pa, "triple pressure", TRIPLE_PRESSURE_PA)?;
         let liquid = states.state(self.condenser_temperature_k, low_pa).map_err(at("condenser outlet"))?;
-        let lift = pump_in(states, &liquid.into(), self.extraction_pressure_pa, self.pump_efficiency)?;
+        let lift = pump_in(states, &liquid, self.extraction_pressure_pa, self.pump_efficiency)?;
         let extractor = states
             .state(self.extraction_temperature_k, self.extraction_pressure_pa)
             .map_err(at("extractor"))?;
         let separator = states.state(self.separator_temperature_k, low_pa).map_err(at("separator"))?;
 
-        legs.begin(Point::at("condenser out", liquid.into()));
+        legs.begin(Point::at("condenser out", liquid));
         legs.work("pump", "pump out", &lift);
         // q = h₂ − h₁ at constant pressure
-        legs.thermal("preheat", Point::at("extractor", extractor.into()));
+        legs.thermal("preheat", Point::at("extractor", extractor));
         // h₂ = h₁ through a valve
         let after = Point::of("after valve", low_pa, extractor.enthalpy_j_kg);
         legs.leg("valve", after, Kind::Throttling, 0.0, None);
-        legs.thermal("separator", Point::at("separator", separator.into()));
+        legs.thermal("separator", Point::at("separator", separator));
         legs.close("condense");
         Ok(())
     }

@@ -75,12 +75,11 @@ impl OpenLoop {
                 states.state(self.supply_temperature_k, pressure_pa).map_err(at("supply"))?
             }
             None => states.saturated_liquid(self.supply_temperature_k).map_err(at("supply"))?,
-        }
-        .into();
+        };
         let chilled = if self.chill_temperature_k == supply.temperature_k {
             supply
         } else {
-            states.state(self.chill_temperature_k, supply.pressure_pa).map_err(at("chilled supply"))?.into()
+            states.state(self.chill_temperature_k, supply.pressure_pa).map_err(at("chilled supply"))?
         };
         above("extraction pressure", self.extraction_pressure_pa, "supply pressure", supply.pressure_pa)?;
         above("extraction pressure", self.extraction_pressure_pa, "vent pressure", self.vent_pressure_pa)?;
@@ -94,8 +93,8 @@ impl OpenLoop {
         // q = h₂ − h₁ at constant pressure
         legs.thermal("chill", Point::at("chilled", chilled));
         legs.work("pump", "pump out", &lift);
-        legs.thermal("preheat", Point::at("extractor", extractor.into()));
-        legs.thermal("restrictor", Point::at("vent", vent.into()));
+        legs.thermal("preheat", Point::at("extractor", extractor));
+        legs.thermal("restrictor", Point::at("vent", vent));
         Ok(())
     }
 }

@@ -73,7 +73,7 @@ impl Recompression {
         let stages = f64::from(self.stages);
         within("number of stages", stages, (1.0..=8.0).contains(&stages), "a number from 1 to 8")?;
         let first: Equilibrium =
-            states.state(self.inlet_temperature_k, self.inlet_pressure_pa).map_err(at("gas"))?.into();
+            states.state(self.inlet_temperature_k, self.inlet_pressure_pa).map_err(at("gas"))?;
         legs.begin(Point::at("gas", first));
         let mut inlet = first;
         // p_n = p₀ (p_N/p₀)^(n/N)
@@ -90,7 +90,7 @@ impl Recompression {
             legs.work(stage, stage, &lift);
             inlet = match self.cooler_temperature_k {
                 Some(cold_k) => {
-                    let cooled: Equilibrium = states.state(cold_k, pressure_pa).map_err(at(cooler))?.into();
+                    let cooled: Equilibrium = states.state(cold_k, pressure_pa).map_err(at(cooler))?;
                     legs.thermal(cooler, Point::at(cooler, cooled));
                     cooled
                 }
@@ -102,7 +102,7 @@ impl Recompression {
         }
         if let Some(liquid_k) = self.condensed_temperature_k {
             let liquid = states.state(liquid_k, self.outlet_pressure_pa).map_err(at("condensed"))?;
-            legs.thermal("condense", Point::at("condensed", liquid.into()));
+            legs.thermal("condense", Point::at("condensed", liquid));
         }
         Ok(())
     }

@@ -155,6 +155,20 @@ impl<'a> Bench<'a> {
         sum
     }
 
+    /// As [`Bench::liquid_volume_m3`], of some materials only; m³.
+    #[must_use]
+    pub fn liquid_volume_of_m3(&self, place: Place, materials: &[Material]) -> f64 {
+        let mut sum = 0.0;
+        for m in materials {
+            let nature = self.natures.get(m.0 as usize);
+            if let Some(density) = nature.filter(|n| n.volatile).and_then(|n| n.density) {
+                // V = Σ mᵢ / ρᵢ
+                sum += self.there(place, *m) / self.draw.get(density);
+            }
+        }
+        sum
+    }
+
     /// How many materials the route has.
     #[must_use]
     pub fn materials(&self) -> usize {
@@ -481,7 +495,7 @@ impl<'a> Bench<'a> {
     }
 
     /// Spends electricity: a meter's reading where the plan gives one, else nominal power by time unless the floor of
-    /// thermodynamics lies above it. Spends nothing where nothing is known. `nominal_j` and `floor_j` in J a run.
+    /// thermodynamics lies above it. A floor alone is noted and not spent. `nominal_j` and `floor_j` in J a run.
     ///
     /// What lies below the floor is told as a doubt.
     pub fn electricity(&mut self, nominal_j: Option<f64>, floor_j: Option<f64>, rule: RuleIx) {
@@ -495,8 +509,11 @@ impl<'a> Bench<'a> {
         }
         let demand =
             Demand { nominal_j: nominal_j.unwrap_or(0.0), computed_j: floor_j, measured_j: metered_j };
-        if nominal_j.is_some() || floor_j.is_some() || metered_j.is_some() {
-            self.spend_electricity(demand.chosen().0, &demand, rule);
+        let stated = nominal_j.is_some() || metered_j.is_some();
+        if stated || floor_j.is_some() {
+            // A floor alone is told and not counted: nobody says what the step draws.
+            let counted_j = if stated { demand.chosen().0 } else { 0.0 };
+            self.spend_electricity(counted_j, &demand, rule);
         }
         if let (Some(stated_j), Some(floor_j)) = (metered_j.or(nominal_j), floor_j)
             && stated_j < floor_j

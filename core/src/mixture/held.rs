@@ -25,7 +25,7 @@ pub struct TakenDown {
 }
 
 /// The volume falls by about this much, in ln V, in one step; and there are at least so many steps.
-const STEP: f64 = 0.7;
+const STEP: f64 = 0.45;
 const LEAST_STEPS: f64 = 4.0;
 /// While the escaping tendencies change by less than this in a step, the next one is twice as long.
 const STEADY: f64 = 4e-3;

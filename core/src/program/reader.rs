@@ -547,6 +547,24 @@ impl<'r, 'p> Reader<'r, 'p> {
         self.route.substance(material)
     }
 
+    /// What the catalogue (or the plan) knows of a material of the route, to be kept by the step.
+    #[must_use]
+    pub fn shared_substance(&self, material: Material) -> Option<std::sync::Arc<crate::material::Substance>> {
+        self.route.materials.get(material.0 as usize).map(|m| std::sync::Arc::clone(&m.substance))
+    }
+
+    /// The density of a material of the route at the bench's temperature, as an input; `None` where it has none.
+    #[must_use]
+    pub fn density_of(&self, material: Material) -> Option<In> {
+        self.route.density(material)
+    }
+
+    /// The temperature at which solvents are measured out, K.
+    #[must_use]
+    pub fn bench_temperature_k(&self) -> f64 {
+        self.route.bench_temperature_k()
+    }
+
     /// The materials that the route has met so far.
     #[must_use]
     pub fn materials_so_far(&self) -> usize {

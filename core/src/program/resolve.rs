@@ -438,6 +438,10 @@ impl<'p> RouteBuilder<'p> {
         Some(self.shared(material, property, kind, figure, "catalogue".to_owned()))
     }
 
+    pub(super) const fn bench_temperature_k(&self) -> f64 {
+        self.site.bench_temperature_k
+    }
+
     pub(super) fn value(&self, slot: In) -> f64 {
         self.inputs.get(slot.0 as usize).map_or(0.0, |i| i.central_si)
     }

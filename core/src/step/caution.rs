@@ -67,3 +67,9 @@ pub(super) const EVAPORATED_TO_AIR: Caution = usual(
     "solvent to air",
     "Solvent sent to air by the method is an emission; evaporating waste to be rid of it is unpermitted treatment in the US and forbidden in most places. Keep containers closed.",
 );
+/// Distilling solvent that has been waste.
+pub(super) const DISTILLED_WASTE: Caution = usual(
+    "solvent distilled for reuse",
+    "Collected solvent may hold what nobody wrote down: peroxides, acids, azeotropes that change the method's blank. Test before and after; \
+     still bottoms are waste of the same codes; whether reclaiming on site needs a permit is the local authority's to say.",
+);

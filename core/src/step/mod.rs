@@ -2,21 +2,27 @@
 //! through a [`Reader`], and runs on the [`Bench`]. Adding one is a new file and one line in [`TECHNIQUES`].
 
 mod caution;
+mod clean;
 mod common;
 mod concentrate;
 mod consume;
 mod declare;
 mod dense;
 mod discard;
+mod distil;
 mod dry;
+mod impregnate;
 mod liquid_liquid;
+mod microwave;
 mod mixture;
+mod percolate;
 mod pressurised_liquid;
 mod rinse;
 mod solid_phase;
 mod soxhlet;
 mod supercritical;
 mod ultrasonic;
+mod vapours;
 
 pub use caution::Caution;
 pub use declare::{Control, Measurable, Need, Param, Rule};
@@ -24,7 +30,7 @@ pub use dense::{DenseCo2, Metered};
 pub use mixture::{LARGEST, Mixture, Part};
 pub use solid_phase::Poured;
 
-use common::{electricity, extract, hold_up};
+use common::{cooling_water, electricity, extract, hold_up};
 
 use crate::chance::Draw;
 use crate::ledger::{Bench, Halt, Place};
@@ -88,11 +94,16 @@ pub struct Technique {
 pub static TECHNIQUES: &[&Technique] = &[
     &soxhlet::TECHNIQUE,
     &ultrasonic::TECHNIQUE,
+    &percolate::TECHNIQUE,
+    &microwave::TECHNIQUE,
     &pressurised_liquid::TECHNIQUE,
     &supercritical::TECHNIQUE,
+    &impregnate::TECHNIQUE,
+    &clean::TECHNIQUE,
     &liquid_liquid::TECHNIQUE,
     &solid_phase::TECHNIQUE,
     &concentrate::TECHNIQUE,
+    &distil::TECHNIQUE,
     &dry::TECHNIQUE,
     &rinse::TECHNIQUE,
     &consume::TECHNIQUE,

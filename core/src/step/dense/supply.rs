@@ -50,62 +50,65 @@ const SNOW_DENSITY: Param = Param::quantity("snow_density", "Density of the loos
     .hint("0.6 to 0.9 g/mL is usual.")
     .source(FROM_MEMORY);
 
-pub(in crate::step) const PARAMS: [Param; 6] =
-    [CYLINDER, HEEL, SNOW, SNOW_SAMPLE, SAMPLE_DENSITY, SNOW_DENSITY];
+pub(in crate::step) const CYLINDERS: [Param; 2] = [CYLINDER, HEEL];
+pub(in crate::step) const SNOWS: [Param; 4] = [SNOW, SNOW_SAMPLE, SAMPLE_DENSITY, SNOW_DENSITY];
 
-/// The supply of one step.
-pub(in crate::step) struct Supply {
-    cylinder: Option<(In, In)>,
-    snow: Option<[In; 4]>,
-}
+/// The cylinders from which a step draws.
+pub(in crate::step) struct Cylinder(Option<(In, In)>);
 
-impl Supply {
+impl Cylinder {
     pub(in crate::step) fn read(r: &mut Reader<'_, '_>) -> Self {
-        let (cylinder, heel) = (r.optional(&CYLINDER), r.optional(&HEEL));
-        let (ratio, sample) = (r.optional(&SNOW), r.optional(&SNOW_SAMPLE));
-        let (bulk, loose) = (r.optional(&SAMPLE_DENSITY), r.optional(&SNOW_DENSITY));
-        if ratio.is_some() && !r.written("snow_sample") {
-            r.problem(
-                "snow_sample",
-                "snow is given without the sample that it grinds",
-                "its mass, such as \"100 g\"",
-            );
-        }
-        let snow = match (ratio, sample, bulk, loose) {
-            (Some(ratio), Some(sample), Some(bulk), Some(loose)) => Some([ratio, sample, bulk, loose]),
-            _ => None,
-        };
-        Self { cylinder: cylinder.zip(heel), snow }
+        let (fill, heel) = (r.optional(&CYLINDER), r.optional(&HEEL));
+        Self(fill.zip(heel))
     }
 
     /// Filling of a cylinder, kg, and the share of it that cannot be used.
-    pub(in crate::step) fn cylinder(&self, x: Draw<'_>) -> Option<(f64, f64)> {
-        self.cylinder.map(|(fill, heel)| (x.get(fill), x.get(heel)))
+    pub(in crate::step) fn of(&self, x: Draw<'_>) -> Option<(f64, f64)> {
+        self.0.map(|(fill, heel)| (x.get(fill), x.get(heel)))
     }
 
-    /// Notes the cylinder, and sends the snow to air.
+    pub(in crate::step) fn note(&self, x: Draw<'_>, b: &mut Bench<'_>, rule: RuleIx) {
+        if let Some((fill, heel)) = self.of(x) {
+            b.note(rule, "m_cylinder", fill, Kind::Mass);
+            b.note(rule, "heel", heel, Kind::Fraction);
+        }
+    }
+}
+
+/// Dry-ice snow that grinds a sample.
+pub(in crate::step) struct Snow(Option<[In; 4]>);
+
+impl Snow {
+    pub(in crate::step) fn read(r: &mut Reader<'_, '_>) -> Self {
+        let (ratio, sample) = (r.optional(&SNOW), r.optional(&SNOW_SAMPLE));
+        let (bulk, loose) = (r.optional(&SAMPLE_DENSITY), r.optional(&SNOW_DENSITY));
+        if ratio.is_some() && !r.written("snow_sample") {
+            let found = "snow is given without the sample that it grinds";
+            r.problem("snow_sample", found, "its mass, such as \"100 g\"");
+        }
+        Self(match (ratio, sample, bulk, loose) {
+            (Some(ratio), Some(sample), Some(bulk), Some(loose)) => Some([ratio, sample, bulk, loose]),
+            _ => None,
+        })
+    }
+
+    /// Sends the snow to air.
     pub(in crate::step) fn run(
         &self,
         x: Draw<'_>,
         b: &mut Bench<'_>,
         co2: Material,
         vent_to: Place,
-        noted: RuleIx,
-        snowed: RuleIx,
+        rule: RuleIx,
     ) -> Result<(), Halt> {
-        if let Some((fill, heel)) = self.cylinder(x) {
-            b.note(noted, "m_cylinder", fill, Kind::Mass);
-            b.note(noted, "heel", heel, Kind::Fraction);
-        }
-        if let Some(slots) = self.snow {
-            let [ratio, sample_kg, bulk_kg_m3, loose_kg_m3] = slots.map(|s| x.get(s));
-            b.note(snowed, "r", ratio, Kind::Number);
-            b.note(snowed, "m_s", sample_kg, Kind::Mass);
-            b.note(snowed, "ρ_s", bulk_kg_m3, Kind::Density);
-            b.note(snowed, "ρ_snow", loose_kg_m3, Kind::Density);
-            let kg = crate::co2_loop::snow_kg(sample_kg, bulk_kg_m3, loose_kg_m3, ratio)?;
-            b.charge(Place::STORE, vent_to, co2, kg, snowed)?;
-        }
+        let Some(slots) = self.0 else { return Ok(()) };
+        let [ratio, sample_kg, bulk_kg_m3, loose_kg_m3] = slots.map(|s| x.get(s));
+        b.note(rule, "r", ratio, Kind::Number);
+        b.note(rule, "m_s", sample_kg, Kind::Mass);
+        b.note(rule, "ρ_s", bulk_kg_m3, Kind::Density);
+        b.note(rule, "ρ_snow", loose_kg_m3, Kind::Density);
+        let kg = crate::co2_loop::snow_kg(sample_kg, bulk_kg_m3, loose_kg_m3, ratio)?;
+        b.charge(Place::STORE, vent_to, co2, kg, rule)?;
         Ok(())
     }
 }

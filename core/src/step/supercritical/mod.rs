@@ -8,7 +8,7 @@ mod trap;
 
 use super::caution::{CO2_IN_ROOM, DRY_ICE, FLAMMABLE_VENT, PRESSURE_VESSEL, TRAPPED_LIQUID};
 use super::dense::circuit::{self, Circuit};
-use super::dense::supply::{self, Supply};
+use super::dense::supply::{self, Cylinder, Snow};
 use super::dense::{self, Chamber, DenseCo2, Rules, SPAN_WAGNER, vessel};
 use super::{Control, Group, Param, Rule, Step, Technique};
 use crate::chance::{Draw, In};
@@ -69,7 +69,8 @@ pub(super) static TECHNIQUE: Technique = Technique {
         &[CHILL],
         &circuit::STATES,
         &circuit::DRAWN,
-        &supply::PARAMS,
+        &supply::CYLINDERS,
+        &supply::SNOWS,
     ]),
     rules: &dense::rules::<22>(&[
         Rule::new("static fill", "m = V_void ρ(T, p) less what is there", SPAN_WAGNER),
@@ -104,7 +105,8 @@ struct Supercritical {
     chamber: Chamber,
     flow: flow::Flow,
     trap: trap::Trap,
-    supply: Supply,
+    cylinder: Cylinder,
+    snow: Snow,
     extracts: Vec<(Material, In)>,
     dissolved: Option<In>,
     in_marc: Option<In>,
@@ -129,7 +131,8 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         chamber: Chamber { co2, state, vessel, circuit, rules },
         flow,
         trap,
-        supply: Supply::read(r),
+        cylinder: Cylinder::read(r),
+        snow: Snow::read(r),
         extracts: r.taken_out(&EXTRACTS),
         dissolved: r.optional(&DISSOLVED),
         in_marc: r.optional(&IN_MARC),
@@ -143,7 +146,8 @@ impl Step for Supercritical {
         let void_m3 = chamber.vessel.void_m3(x, b, marc_kg, FILLED)?;
         let time_s = self.flow.time_s(x);
 
-        self.supply.run(x, b, chamber.co2, vent_to, FILLED, SNOWED)?;
+        self.cylinder.note(x, b, FILLED);
+        self.snow.run(x, b, chamber.co2, vent_to, SNOWED)?;
         b.release_over(time_s);
         let filled_kg = chamber.fill(x, b, void_m3)?;
         self.trap.fill(x, b, TRAP_FILLED)?;
@@ -166,7 +170,7 @@ impl Step for Supercritical {
 
     fn dense(&self, x: Draw<'_>) -> Option<DenseCo2> {
         let mut shown = self.chamber.shown(x)?;
-        shown.cylinder = self.supply.cylinder(x);
+        shown.cylinder = self.cylinder.of(x);
         if let Some((t, p)) = self.flow.head() {
             shown.meter((x.get(t), x.get(p)), self.flow.volume_m3(x));
         }
