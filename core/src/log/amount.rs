@@ -67,21 +67,23 @@ impl LogUnit {
     }
 }
 
-/// The unit that a cell names, kept from row to row because most rows name the same one.
+/// The units that cells name, kept from row to row because a file names few.
 #[derive(Clone, Debug, Default)]
-pub(super) struct UnitCell {
-    spelling: Vec<u8>,
-    unit: Option<LogUnit>,
-}
+pub(super) struct UnitCell(Vec<(Vec<u8>, Option<LogUnit>)>);
+
+/// Spellings that are kept: more are no units of one file.
+const MOST_UNITS: usize = 16;
 
 impl UnitCell {
     pub(super) fn of(&mut self, spelling: &[u8]) -> Option<&LogUnit> {
-        if self.spelling != spelling {
-            self.spelling.clear();
-            self.spelling.extend_from_slice(spelling);
-            self.unit = LogUnit::named(&super::text::decoded(spelling).0);
-        }
-        self.unit.as_ref()
+        let at = self.0.iter().position(|(known, _)| known == spelling).unwrap_or_else(|| {
+            if self.0.len() >= MOST_UNITS {
+                self.0.clear();
+            }
+            self.0.push((spelling.to_vec(), LogUnit::named(&super::text::decoded(spelling).0)));
+            self.0.len() - 1
+        });
+        self.0.get(at)?.1.as_ref()
     }
 }
 
