@@ -10,7 +10,9 @@
 #![deny(missing_docs)]
 
 pub mod account;
+pub mod case;
 pub mod chance;
+pub mod climate;
 pub mod co2;
 pub mod co2_loop;
 pub mod code;
@@ -22,11 +24,14 @@ pub mod generator;
 pub mod hazard;
 pub mod heat;
 pub mod ledger;
+pub mod letter;
 pub mod log;
 pub mod material;
 pub mod metric;
 pub mod mixture;
+pub mod money;
 pub mod odds;
+pub mod order;
 pub mod plan;
 pub mod pour;
 pub mod program;

@@ -104,12 +104,12 @@ fn findings_point_where_they_should() {
     direction(
         &beside(&account, 0, "Ultrasonic"),
         &["solvent to air", "solvents and gases bought", "health-weighted mass to air", "electricity"],
-        &["waste"],
+        &["waste", "running cost"],
     );
     // A seventh of the solvent, but it is blown off instead of condensed.
     direction(
         &beside(&account, 0, "Pressurised liquid"),
-        &["waste", "solvents and gases bought", "electricity"],
+        &["waste", "solvents and gases bought", "electricity", "running cost"],
         &["solvent to air", "health-weighted mass to air"],
     );
     let co2 = beside(&account, 0, "Supercritical CO2");
@@ -121,6 +121,7 @@ fn findings_point_where_they_should() {
             "solvents and gases bought",
             "health-weighted mass to air",
             "electricity",
+            "running cost",
         ],
         &["CO2 vented"],
     );

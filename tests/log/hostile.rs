@@ -125,7 +125,7 @@ fn both_sides_of_every_question() {
 
 #[test]
 fn files_that_are_no_tables_say_what_would_do() {
-    let fails = |text: &[u8]| in_pieces("x", text, 7).0.unwrap_err();
+    let fails = |text: &[u8]| in_pieces("x", text, 7).0.unwrap_err().why;
     assert_eq!(fails(b""), Unreadable::Empty);
     assert_eq!(fails(b"\xef\xbb\xbf  \n"), Unreadable::Empty);
     assert_eq!(fails(b"PK\x03\x04 a workbook"), Unreadable::NotText);

@@ -11,7 +11,7 @@ mod sums;
 
 use thimbleworth::account::{Account, account_text};
 use thimbleworth::example::EXAMPLES;
-use thimbleworth::log::{Names, Reader, Reading, Remark, Unreadable};
+use thimbleworth::log::{Names, Reader, Reading, Remark, Unread};
 
 fn harbour() -> Account {
     let account = account_text(EXAMPLES[0].text);
@@ -24,7 +24,7 @@ fn names(account: &Account) -> Names {
 }
 
 /// Reads a text in pieces of a size.
-fn in_pieces(name: &str, text: &[u8], piece: usize) -> (Result<Reading, Unreadable>, Names, Vec<Remark>) {
+fn in_pieces(name: &str, text: &[u8], piece: usize) -> (Result<Reading, Unread>, Names, Vec<Remark>) {
     let mut reader = Reader::new(name, names(&harbour()), &[]);
     let mut remarks = Vec::new();
     for piece in text.chunks(piece) {

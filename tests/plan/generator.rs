@@ -116,6 +116,8 @@ impl Chance {
             electricity: self.maybe(|c| Electricity {
                 climate: c.maybe(Self::text),
                 price: c.maybe(Self::text),
+                year: c.maybe(Self::field),
+                boundary: c.maybe(Self::text),
                 source: c.maybe(Self::text),
             }),
             room: self.maybe(|c| Room {
@@ -149,6 +151,9 @@ impl Chance {
             pick_up_every: self.maybe(Self::text),
             far_receiver: self.maybe(Self::yes),
             deviations: self.maybe(Self::text),
+            money: self.fields(),
+            hours: self.fields(),
+            climate: self.fields(),
         }
     }
 
@@ -169,6 +174,7 @@ impl Chance {
                 feed: c.maybe(Self::rows),
                 recovery: c.maybe(Self::text),
                 equivalence: c.maybe(Self::text),
+                permission: c.maybe(Self::text),
                 ph: c.maybe(Self::text),
                 steps: c.list(4, |c| Step {
                     technique: c.text(),
@@ -178,6 +184,8 @@ impl Chance {
                     note: c.maybe(Self::text),
                 }),
                 ends: c.rows(),
+                time: c.fields(),
+                money: c.fields(),
             }),
         }
     }

@@ -51,19 +51,20 @@ fn line(problem: &Problem) -> String {
     }
 }
 
-/// The unsaved work as text for the browser's storage.
+/// The unsaved work as text for the browser's storage: the name of its file on a line of its own, empty where it has
+/// none, then the plan.
 #[must_use]
 pub fn recovery(state: &State) -> String {
-    serde_json::json!({ "file": state.file(), "plan": save(state.plan()) }).to_string()
+    let file = state.file().unwrap_or_default();
+    let name: String = file.chars().filter(|c| *c != '\n').collect();
+    name + "\n" + &save(state.plan())
 }
 
 /// Reads what [`recovery`] wrote; nothing where it is damaged or no plan of ours.
 #[must_use]
 pub fn read_recovery(text: &str) -> Option<(Option<String>, Plan)> {
-    let value: serde_json::Value = serde_json::from_str(text).ok()?;
-    let file = value.get("file")?.as_str().map(str::to_owned);
-    let opened = open(value.get("plan")?.as_str()?);
-    Some((file, opened.plan?))
+    let (file, plan) = text.split_once('\n')?;
+    Some(((!file.is_empty()).then(|| file.to_owned()), open(plan).plan?))
 }
 
 #[cfg(test)]
@@ -107,7 +108,7 @@ mod tests {
     fn what_is_kept_is_read_back_and_what_is_damaged_is_not() {
         let state = Rc::new(State::default()).after(Action::Saved("a.json".into()));
         assert_eq!(read_recovery(&recovery(&state)), Some((Some("a.json".into()), blank())));
-        for text in ["", "{", "{}", r#"{ "file": null, "plan": "{" }"#, r#"{ "file": null, "plan": 3 }"#] {
+        for text in ["", "{", "{}", "\n", "\n{", "a.json\n{}", "a.json"] {
             assert_eq!(read_recovery(text), None, "{text}");
         }
     }

@@ -2,6 +2,7 @@
 use crate::edit::step_field;
 use crate::reckon::Book;
 use thimbleworth::ledger::{Place, RuleIx, StepIx};
+use thimbleworth::letter;
 use thimbleworth::plan::{Field, Plan, Problem, Severity, Step, below};
 use thimbleworth::quantity::{Entry, Kind, read_entry, show, units_of};
 use thimbleworth::source::{SITE, Source, Standing};
@@ -155,16 +156,11 @@ pub fn problem_at<'a>(problems: &'a [Problem], path: &str) -> Option<&'a Problem
 /// A problem as sentences.
 #[must_use]
 pub fn sentence(problem: &Problem) -> String {
-    let mut out = capital(&problem.found);
+    let mut out = letter::sentence(&problem.found);
     if !problem.need.is_empty() {
-        out = format!("{out}. {}", capital(&problem.need));
+        out = format!("{out}. {}", letter::sentence(&problem.need));
     }
     if out.ends_with(['.', '?', '!']) { out } else { format!("{out}.") }
-}
-
-fn capital(text: &str) -> String {
-    let mut letters = text.chars();
-    letters.next().map_or(String::new(), |first| format!("{}{}", first.to_uppercase(), letters.as_str()))
 }
 
 /// Where mass may go: the site's streams, then the book's own places.

@@ -2,10 +2,10 @@
 //!
 //! The core gives no figures for a plan with an error. While an amount is half typed, or a route is still being written, the
 //! page leaves that route out and accounts for the others; where nothing is left, the last figures stay, marked as old.
-use std::collections::BTreeMap;
 use std::rc::Rc;
 use thimbleworth::account::{Account, Figure, Measure, RouteAccount, account, account_text};
 use thimbleworth::compare::{Comparison, RouteComparison, compare};
+use thimbleworth::order::{self, Index};
 use thimbleworth::plan::{Plan, Problem, Severity, save};
 use thimbleworth::program::{RouteProgram, SiteUse};
 
@@ -97,7 +97,7 @@ pub struct Column {
     /// Its index in the account of the work.
     at: Option<usize>,
     /// Its figures by id.
-    index: BTreeMap<String, usize>,
+    index: Index<'static>,
 }
 
 impl Reckoned {
@@ -126,7 +126,7 @@ impl Reckoned {
                         problems.push(Problem { path, ..problem.clone() });
                     }
                 }
-                problems.sort_by_key(|p| p.severity);
+                order::sort(&mut problems, &|a, b| a.severity < b.severity);
                 let book = Rc::new(Book::new(plan, partial, &kept, &problems));
                 return Self { problems, book, old: false, pending: false };
             }
@@ -231,9 +231,10 @@ impl Book {
             let columns = workload.routes.iter().enumerate().map(|(r, route)| {
                 let position = routes_kept.iter().position(|kept| *kept == r);
                 let found = position.and_then(|i| accounts?.routes.get(i)?.as_ref());
-                let index = found.map_or_else(BTreeMap::new, |a| {
-                    a.figures.iter().enumerate().map(|(i, f)| (f.id.clone(), i)).collect()
-                });
+                let mut index = Index::default();
+                for (i, figure) in found.iter().flat_map(|a| a.figures.iter().enumerate()) {
+                    index.put(figure.id.clone(), i);
+                }
                 let errors = problems
                     .iter()
                     .filter(|p| p.severity == Severity::Error)
@@ -298,7 +299,7 @@ impl Book {
     #[must_use]
     pub fn figure(&self, w: usize, r: usize, id: &str) -> Option<(&Figure, f64)> {
         let (_, account) = self.route(w, r)?;
-        let i = *self.works.get(w)?.routes.get(r)?.index.get(id)?;
+        let i = self.works.get(w)?.routes.get(r)?.index.get(id)?;
         Some((account.figures.get(i)?, *account.values.get(i)?))
     }
 

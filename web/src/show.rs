@@ -35,7 +35,10 @@ impl Scale {
             Measure::Energy => ("kWh", 1.0 / 3.6e6),
             Measure::Containers => ("containers", 1.0),
             Measure::WeightedMass => ("kg × score", 1.0),
-            Measure::Ratio => ("", 1.0),
+            Measure::Ratio | Measure::Count => ("", 1.0),
+            Measure::Time => ("h", 1.0 / 3600.0),
+            Measure::Money(_) | Measure::MoneyOnce(_) => ("", 1.0),
+            Measure::Climate => ("kg CO2e", 1.0),
         };
         let (mut shown, mut whole) = (largest * factor, 1);
         while shown >= 10.0 && whole < 12 {

@@ -4,6 +4,7 @@ use crate::edit::{Change, Edit, Item};
 use crate::history::History;
 use crate::reckon::Basis;
 use std::rc::Rc;
+use thimbleworth::letter::small;
 use thimbleworth::plan::Plan;
 
 /// What the page knows.
@@ -199,7 +200,7 @@ impl State {
 
     /// The form of the route that a path lies in is opened, so that there is something to go to.
     fn go(&mut self, path: String) {
-        let keys = crate::edit::keys(&path).unwrap_or_default();
+        let keys = thimbleworth::plan::keys(&path).unwrap_or_default();
         if let [workloads, w, routes, r, ..] = keys.as_slice()
             && (workloads.as_str(), routes.as_str()) == ("workloads", "routes")
             && let (Ok(w), Ok(r)) = (w.parse(), r.parse())
@@ -340,7 +341,7 @@ pub fn stem(title: &str) -> String {
     let mut out = String::new();
     for c in title.chars().take(60) {
         if c.is_alphanumeric() {
-            out.extend(c.to_lowercase());
+            out.push(small(c));
         } else if !out.is_empty() && !out.ends_with('-') {
             out.push('-');
         }

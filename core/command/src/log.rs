@@ -96,7 +96,7 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
         match found {
             Ok(reading) => readings.push(reading),
             Err(why) => {
-                let [found, need] = why.words();
+                let [found, need] = why.why.words();
                 complain(&format!("error: {}: {found}; {need}", path.display()));
                 unreadable = true;
             }
@@ -192,7 +192,7 @@ fn tables(
     Ok(out)
 }
 
-type Found = (Result<Reading, thimbleworth::log::Unreadable>, Names);
+type Found = (Result<Reading, thimbleworth::log::Unread>, Names);
 
 /// Reads one file as it comes.
 fn read(

@@ -3,6 +3,7 @@
 use crate::chance::{Draw, In};
 use crate::ledger::{Cells, Direction, Material, Place, Trace, Utility};
 use crate::program::Desk;
+use crate::quantity::{Currency, Kind, show, significant};
 use crate::source::Source;
 
 /// What a figure measures, and so in which unit it is shown.
@@ -20,6 +21,16 @@ pub enum Measure {
     WeightedMass,
     /// A ratio of two figures
     Ratio,
+    /// s in the core; shown in hours
+    Time,
+    /// Whole things
+    Count,
+    /// Money in a currency, a year
+    Money(Currency),
+    /// Money in a currency, once
+    MoneyOnce(Currency),
+    /// kg of CO2-equivalent
+    Climate,
 }
 
 impl Measure {
@@ -33,13 +44,42 @@ impl Measure {
             Self::Containers => ("containers", 1.0),
             Self::WeightedMass => ("kg_score", 1.0),
             Self::Ratio => ("ratio", 1.0),
+            Self::Time => ("h", 1.0 / 3600.0),
+            Self::Count => ("count", 1.0),
+            Self::Money(_) => ("money", 1.0),
+            Self::MoneyOnce(_) => ("money_once", 1.0),
+            Self::Climate => ("kg_co2e", 1.0),
+        }
+    }
+
+    /// An amount for people: four significant digits and a unit that suits its size.
+    ///
+    /// ```
+    /// use thimbleworth::account::Measure;
+    /// use thimbleworth::quantity::Currency;
+    /// assert_eq!(Measure::Mass.shown(0.25), "250 g");
+    /// assert_eq!(Measure::Money(Currency::new("USD").unwrap()).shown(12_345.6), "12350 USD");
+    /// ```
+    #[must_use]
+    pub fn shown(self, value_si: f64) -> String {
+        match self {
+            Self::Mass => show(value_si, Kind::Mass),
+            Self::WeightedMass => show(value_si, Kind::Mass) + "·score",
+            Self::Climate => show(value_si, Kind::Mass) + " CO2e",
+            Self::Volume => show(value_si, Kind::Volume),
+            Self::Energy => show(value_si, Kind::Energy),
+            Self::Time => significant(value_si / 3600.0, 4) + " h",
+            Self::Money(currency) | Self::MoneyOnce(currency) => {
+                significant(value_si, 4) + " " + currency.code()
+            }
+            Self::Containers | Self::Ratio | Self::Count => show(value_si, Kind::Number),
         }
     }
 
     /// Whether a figure grows with the amount of work.
     #[must_use]
     pub const fn extensive(self) -> bool {
-        !matches!(self, Self::Ratio)
+        !matches!(self, Self::Ratio | Self::Count | Self::MoneyOnce(_))
     }
 }
 
@@ -58,12 +98,27 @@ pub enum Group {
     Hazard,
     /// Electricity and water.
     Energy,
+    /// Hours of instruments and people.
+    Time,
+    /// What it costs.
+    Cost,
+    /// What warms the climate.
+    Climate,
 }
 
 impl Group {
     /// All, in the order in which they are shown.
-    pub const ALL: [Self; 6] =
-        [Self::Mass, Self::Waste, Self::CarbonDioxide, Self::Metric, Self::Hazard, Self::Energy];
+    pub const ALL: [Self; 9] = [
+        Self::Mass,
+        Self::Waste,
+        Self::CarbonDioxide,
+        Self::Metric,
+        Self::Hazard,
+        Self::Energy,
+        Self::Time,
+        Self::Cost,
+        Self::Climate,
+    ];
 
     /// The title shown.
     #[must_use]
@@ -75,6 +130,9 @@ impl Group {
             Self::Metric => "Mass metrics",
             Self::Hazard => "Hazard-weighted mass",
             Self::Energy => "Electricity and water",
+            Self::Time => "Time",
+            Self::Cost => "Cost",
+            Self::Climate => "Climate",
         }
     }
 }
@@ -139,6 +197,89 @@ impl Term {
     }
 }
 
+/// What a line takes its amount from.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub enum Entry {
+    /// One.
+    One,
+    /// What has passed an outside place; kg a year.
+    Cell(Place, Direction, Material),
+    /// A utility; a year.
+    Spent(Utility),
+    /// Extractions a year.
+    Extractions,
+    /// Batches a year.
+    Batches,
+    /// An earlier figure, by its index.
+    Figure(usize),
+    /// The product of two earlier figures.
+    Both(usize, usize),
+}
+
+/// An entry times factors: entry · number · Π by / over.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Line {
+    /// The entry.
+    pub of: Entry,
+    /// A constant.
+    pub number: f64,
+    /// Inputs that it is multiplied with.
+    pub by: Vec<In>,
+    /// An input that it is divided by.
+    pub over: Option<In>,
+}
+
+impl Line {
+    /// An entry as it stands.
+    #[must_use]
+    pub const fn of(of: Entry) -> Self {
+        Self { of, number: 1.0, by: Vec::new(), over: None }
+    }
+
+    /// Multiplied with an input.
+    #[must_use]
+    pub fn by(mut self, slot: In) -> Self {
+        self.by.push(slot);
+        self
+    }
+
+    /// Divided by an input.
+    #[must_use]
+    pub const fn over(mut self, slot: In) -> Self {
+        self.over = Some(slot);
+        self
+    }
+
+    /// Multiplied with a constant.
+    #[must_use]
+    pub const fn times(mut self, number: f64) -> Self {
+        self.number *= number;
+        self
+    }
+
+    /// What the entry is multiplied with.
+    pub(super) fn factor(&self, x: Draw<'_>) -> f64 {
+        let mut factor = self.number;
+        for slot in &self.by {
+            factor *= x.get(*slot);
+        }
+        if let Some(slot) = self.over { factor / x.get(slot) } else { factor }
+    }
+
+    fn value(&self, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
+        let entry = match self.of {
+            Entry::One => 1.0,
+            Entry::Cell(place, direction, material) => desk.cells.passed(place, direction, material),
+            Entry::Spent(utility) => desk.spent[utility as usize],
+            Entry::Extractions => desk.runs.extractions,
+            Entry::Batches => desk.runs.batches,
+            Entry::Figure(i) => out[i],
+            Entry::Both(i, j) => out[i] * out[j],
+        };
+        entry * self.factor(x)
+    }
+}
+
 /// How a figure follows from the book.
 #[derive(Clone, Debug, PartialEq)]
 pub enum How {
@@ -161,6 +302,10 @@ pub enum How {
         /// What it is multiplied with; SI.
         factor: f64,
     },
+    /// A sum of entries times factors.
+    Lines(Vec<Line>),
+    /// Another figure rounded up to a whole number, and not below 0.
+    Whole(usize),
     /// One figure over another.
     Ratio {
         /// The index of the figure above the line.
@@ -168,6 +313,26 @@ pub enum How {
         /// The index of the figure below the line.
         under: usize,
     },
+}
+
+impl How {
+    /// The indices of the figures that it follows from, in the order of the formula; none where it follows from the book.
+    #[must_use]
+    pub fn rests_on(&self) -> Vec<usize> {
+        match self {
+            Self::Containers { of, .. } | Self::Times { of, .. } | Self::Whole(of) => vec![*of],
+            Self::Ratio { over, under } => vec![*over, *under],
+            Self::Lines(lines) => {
+                let of = |line: &Line| match line.of {
+                    Entry::Figure(i) => [Some(i), None],
+                    Entry::Both(i, j) => [Some(i), Some(j)],
+                    _ => [None, None],
+                };
+                lines.iter().flat_map(of).flatten().collect()
+            }
+            Self::Sum(_) | Self::Spent(_) => Vec::new(),
+        }
+    }
 }
 
 /// One figure of a route.
@@ -257,10 +422,8 @@ pub fn with_what_they_rest_on(figures: &[Figure], wanted: &[usize]) -> Vec<usize
     // A figure rests on earlier ones only.
     for i in (0..figures.len()).rev() {
         if needed[i] {
-            match figures[i].how {
-                How::Containers { of, .. } | How::Times { of, .. } => needed[of] = true,
-                How::Ratio { over, under } => (needed[over], needed[under]) = (true, true),
-                How::Sum(_) | How::Spent(_) => {}
+            for of in figures[i].how.rests_on() {
+                needed[of] = true;
             }
         }
     }
@@ -284,6 +447,17 @@ fn value(figure: &Figure, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
                 };
             }
             sum
+        }
+        How::Lines(lines) => {
+            let mut sum = 0.0;
+            for line in lines {
+                sum += line.value(desk, x, out);
+            }
+            sum
+        }
+        How::Whole(of) => {
+            let whole = libm::ceil(out[*of] - 1e-9);
+            if whole > 0.0 { whole } else { 0.0 }
         }
         How::Spent(utility) => desk.spent[*utility as usize],
         // n = ⌈V / (V_c · fill)⌉; a hair above a whole number is that number

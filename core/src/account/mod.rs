@@ -4,6 +4,8 @@
 //! postings behind it, and the same figure can be evaluated for any draw.
 
 mod carbon_dioxide;
+mod climate;
+mod cost;
 mod desk;
 mod energy;
 mod figure;
@@ -12,13 +14,15 @@ mod mass;
 mod metric;
 mod open;
 mod poured;
+mod time;
 mod waste;
 mod working;
 
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
 pub use energy::{StepEnergy, by_step};
 pub use figure::{
-    Draft, Factor, Figure, Group, How, Measure, Term, evaluate, evaluate_these, with_what_they_rest_on,
+    Draft, Entry, Factor, Figure, Group, How, Line, Measure, Term, evaluate, evaluate_these,
+    with_what_they_rest_on,
 };
 pub use hazard::{HazardAccount, MaterialHazard};
 pub use mass::place_name;

@@ -3,7 +3,7 @@
 use super::figure::{Draft, Figure, evaluate};
 use super::hazard::HazardAccount;
 use super::metric::Refusal;
-use super::{carbon_dioxide, energy, hazard, mass, metric, waste};
+use super::{carbon_dioxide, climate, cost, energy, hazard, mass, metric, time, waste};
 use crate::chance::Draw;
 use crate::ledger::{Direction, Halt, Material, Place, RuleIx, StepIx, Trace};
 use crate::plan::{Plan, Problem, Severity, below, open};
@@ -51,6 +51,8 @@ pub struct RouteAccount {
     pub dense: Vec<(usize, DenseCo2)>,
     /// Product made in a year; kg.
     pub product_kg: f64,
+    /// What cost and climate leave open: what it is, and the path at which the plan could say it.
+    pub open: Vec<(String, String)>,
 }
 
 impl Account {
@@ -140,8 +142,14 @@ fn drawn_up(plan: &Plan) -> (Option<Program>, Vec<WorkloadAccount>, Vec<Problem>
 }
 
 /// Worst first; among equals in the order of the document.
-fn sort(problems: &mut [Problem]) {
-    problems.sort_by_key(|p| p.severity);
+fn sort(problems: &mut Vec<Problem>) {
+    let mut milder = std::mem::take(problems);
+    for severity in [Severity::Error, Severity::Warning] {
+        let (these, others) = milder.into_iter().partition(|p| p.severity == severity);
+        problems.extend::<Vec<_>>(these);
+        milder = others;
+    }
+    problems.append(&mut milder);
 }
 
 fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Problem>) -> Option<RouteAccount> {
@@ -162,8 +170,12 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     carbon_dioxide::draw_up(&mut draft, route, site, &desk, &dense);
     let refusals = metric::draw_up(&mut draft, route, site, &desk);
     energy::draw_up(&mut draft, &desk);
+    let hours = time::draw_up(&mut draft, route);
+    let mut open = cost::draw_up(&mut draft, route, site, &desk, hours);
+    open.extend(climate::draw_up(&mut draft, route, site, &desk));
     let assessed = hazard::materials(route, &desk, site);
     hazard::draw_up(&mut draft, route, &desk, &assessed);
+    left_open(route, &open, problems);
     let figures = draft.kept_to(&trace, &desk.cells);
     let mut values = vec![0.0; figures.len()];
     evaluate(&figures, &desk, Draw(&x), &mut values);
@@ -188,7 +200,24 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         cautions,
         dense,
         product_kg,
+        open,
     })
+}
+
+/// What cost and climate leave open, because the plan does not say it: each is told once, whatever the number of routes.
+fn left_open(route: &RouteProgram, open: &[(String, String)], problems: &mut Vec<Problem>) {
+    for (what, path) in open {
+        let found = format!("{what} is not known, so neither is what rests on it");
+        if problems.iter().any(|p| p.path == *path && p.found == found) {
+            continue;
+        }
+        let need = if path.starts_with("site.") {
+            "its figure, with its limits".to_owned()
+        } else {
+            format!("its figure for {}", route.name)
+        };
+        problems.push(Problem::warning(path.clone(), found, need));
+    }
 }
 
 fn doubted(route: &RouteProgram, trace: &Trace, problems: &mut Vec<Problem>) {

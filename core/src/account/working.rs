@@ -1,9 +1,11 @@
 //! Opening a figure: the postings and utilities behind it.
 
-use super::figure::{Factor, Figure, How};
+use super::figure::{Entry, Factor, Figure, How};
 use super::mass::place_name;
 use super::open::{RouteAccount, rule_of};
+use crate::chance::Draw;
 use crate::ledger::{Direction, Place, Posting, StepIx};
+use crate::order;
 use crate::program::{RouteProgram, SiteUse};
 
 /// What one entry of the book adds to a figure.
@@ -31,6 +33,9 @@ pub enum Contribution {
 /// [`How`] names, and no entries of its own.
 #[must_use]
 pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> Vec<Contribution> {
+    let size = |c: &Contribution| match c {
+        Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => amount_si.abs(),
+    };
     let mut out = Vec::new();
     match &figure.how {
         How::Sum(terms) => {
@@ -66,6 +71,61 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
                 }
             }
         }
+        How::Lines(lines) => {
+            let central = route.central();
+            for line in lines {
+                let factor = line.factor(Draw(&central));
+                match line.of {
+                    Entry::Cell(place, direction, material) => {
+                        for (index, p) in account.trace.postings.iter().enumerate() {
+                            let here = if direction == Direction::Into { p.to } else { p.from };
+                            if here == place && p.material == material && p.kg != 0.0 {
+                                let amount_si = p.kg_a_year() * factor;
+                                out.push(Contribution::Posting { index, amount_si });
+                            }
+                        }
+                    }
+                    Entry::Spent(utility) => {
+                        for (index, s) in account.trace.spendings.iter().enumerate() {
+                            if s.utility == utility && s.amount_si != 0.0 {
+                                let amount_si = s.amount_si * s.runs_a_year * factor;
+                                out.push(Contribution::Spending { index, amount_si });
+                            }
+                        }
+                    }
+                    // What stands behind a figure stands there, with this line's factor.
+                    Entry::Figure(i) => {
+                        let Some(figure) = account.figures.get(i) else { continue };
+                        let parts = behind(route, account, figure);
+                        // Whole things are shared out over what fills them.
+                        let mut factor = factor;
+                        if matches!(figure.how, How::Containers { .. } | How::Whole(_)) {
+                            let mut sum = 0.0;
+                            for part in &parts {
+                                sum += size(part);
+                            }
+                            factor *= if sum > 0.0 { account.values[i] / sum } else { 0.0 };
+                        }
+                        for c in parts {
+                            out.push(match c {
+                                Contribution::Posting { index, amount_si } => {
+                                    Contribution::Posting { index, amount_si: amount_si * factor }
+                                }
+                                Contribution::Spending { index, amount_si } => {
+                                    Contribution::Spending { index, amount_si: amount_si * factor }
+                                }
+                            });
+                        }
+                    }
+                    Entry::One | Entry::Extractions | Entry::Batches | Entry::Both(..) => {}
+                }
+            }
+        }
+        How::Whole(of) => {
+            if let Some(figure) = account.figures.get(*of) {
+                return behind(route, account, figure);
+            }
+        }
         How::Containers { of, .. } => {
             if let Some(of) = account.figures.get(*of) {
                 return behind(route, account, of);
@@ -73,10 +133,7 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
         }
         How::Ratio { .. } | How::Times { .. } => {}
     }
-    let size = |c: &Contribution| match c {
-        Contribution::Posting { amount_si, .. } | Contribution::Spending { amount_si, .. } => amount_si.abs(),
-    };
-    out.sort_by(|a, b| size(b).total_cmp(&size(a)));
+    order::sort(&mut out, &|a, b| size(a) > size(b));
     out
 }
 

@@ -149,7 +149,7 @@ mod tests {
                     })
                     .collect();
                 let mut sorted = values.clone();
-                sorted.sort_by(f64::total_cmp);
+                sorted.sort_unstable_by(f64::total_cmp);
                 let found = summary(&mut values, coverage).unwrap();
                 let q = (coverage * count as f64 + 0.5).floor() as usize;
                 let r = (count - q).div_ceil(2);

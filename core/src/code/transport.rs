@@ -5,6 +5,7 @@ use super::us::burns;
 use super::verdict::{Answer, Desk, Fact, list, share};
 use super::{Rules, us};
 use crate::material::Substance;
+use crate::order;
 use crate::quantity::Kind;
 
 /// Share by mass from which a toxic or corrosive substance is named in the class without a calculation; our own, cautious.
@@ -74,7 +75,7 @@ fn stricter(a: &'static str, b: &str) -> &'static str {
 /// The largest of the parts for which this holds, at most two.
 fn two(c: &Contents<'_>, holds: &dyn Fn(&Substance) -> bool) -> String {
     let mut parts: Vec<_> = c.parts.iter().filter(|p| p.kg > 0.0 && holds(p.substance)).collect();
-    parts.sort_by(|a, b| b.kg.total_cmp(&a.kg));
+    order::sort(&mut parts, &|a, b| a.kg > b.kg);
     list(parts.iter().take(2).map(|p| &*p.substance.name))
 }
 

@@ -3,6 +3,7 @@
 use super::finding;
 use crate::account::{Account, Contribution, Figure, Group, Measure, RouteAccount, behind};
 use crate::ledger::StepIx;
+use crate::order;
 use crate::program::{RouteProgram, WorkloadProgram};
 
 /// The comparison of one workload.
@@ -131,12 +132,16 @@ fn beside(
 /// Whether a route that has no such figure has none of what it counts.
 ///
 /// Nothing of a thing is zero of it; a ratio that is not given is not zero, nor is a cooling water flow that is not
-/// stated, nor the electricity of a route that leaves a power out.
+/// stated, nor the electricity of a route that leaves a power out, nor time, cost and climate of which the plan says too
+/// little.
 #[must_use]
 pub fn absent_is_zero(route: &RouteProgram, figure: &Figure) -> bool {
     match figure.id.as_str() {
         "energy.electricity" => route.uncounted.is_empty(),
-        _ => figure.measure.extensive() && figure.group != Group::Energy,
+        _ => {
+            figure.measure.extensive()
+                && !matches!(figure.group, Group::Energy | Group::Time | Group::Cost | Group::Climate)
+        }
     }
 }
 
@@ -166,7 +171,7 @@ fn causes(
         }
     }
     found.retain(|c| c.change != 0.0);
-    found.sort_by(|a, b| b.change.abs().total_cmp(&a.change.abs()));
+    order::sort(&mut found, &|a, b| a.change.abs() > b.change.abs());
     found.truncate(5);
     found
 }

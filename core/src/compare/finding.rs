@@ -2,16 +2,17 @@
 
 use super::Difference;
 use crate::account::Measure;
-use crate::quantity::{Kind, show, significant};
+use crate::quantity::significant;
 
 /// The figures that a finding speaks of: id, and how the sentence names it. Less of each is better.
-pub const HEADLINES: [(&str, &str); 6] = [
+pub const HEADLINES: [(&str, &str); 7] = [
     ("waste.total.mass", "waste"),
     ("air.solvents", "solvent to air"),
     ("input.solvent.net", "solvents and gases bought"),
     ("co2.vented", "CO2 vented"),
     ("hazard.air_health", "health-weighted mass to air"),
     ("energy.electricity", "electricity"),
+    ("cost.year", "running cost"),
 ];
 
 /// A change below this share of the larger value is no change.
@@ -65,7 +66,7 @@ pub(super) fn judge(present: &str, other: &str, differences: &[Difference], elec
 }
 
 fn clause(name: &str, before: f64, after: f64, measure: Measure) -> String {
-    let (after_text, before_text) = (amount(after, measure), amount(before, measure));
+    let (after_text, before_text) = (measure.shown(after), measure.shown(before));
     if before <= 0.0 {
         format!("{after_text} of {name} where there was none")
     } else if after <= 0.0 {
@@ -83,15 +84,6 @@ fn clause(name: &str, before: f64, after: f64, measure: Measure) -> String {
             "{after_text} of {name} instead of {before_text} ({} times as much)",
             significant(after / before, 2)
         )
-    }
-}
-
-fn amount(value_si: f64, measure: Measure) -> String {
-    match measure {
-        Measure::Mass | Measure::WeightedMass => show(value_si, Kind::Mass),
-        Measure::Volume => show(value_si, Kind::Volume),
-        Measure::Energy => show(value_si, Kind::Energy),
-        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
     }
 }
 

@@ -1,7 +1,7 @@
 //! Amounts in the cells of a table: a number, with its unit in the cell, in a column of its own or in the heading.
 
 use super::{Change, Why};
-use crate::quantity::{AmountError, Kind, Spread, read, unit};
+use crate::quantity::{AmountError, Kind, Spread, known_unit, read};
 
 /// Which sign is the decimal one.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -43,6 +43,9 @@ pub struct LogUnit {
     pub factor: f64,
 }
 
+/// No unit is longer.
+const LONGEST_UNIT: usize = 24;
+
 impl LogUnit {
     /// The unit of mass or volume of this spelling.
     ///
@@ -54,6 +57,9 @@ impl LogUnit {
     #[must_use]
     pub fn named(spelling: &str) -> Option<Self> {
         // `Kg` and `ML` are typed in purchase ledgers; the latter is refused by the units, as it could be megalitres.
+        if spelling.len() > LONGEST_UNIT {
+            return None;
+        }
         let spelling = match spelling.trim() {
             "Kg" | "KG" | "kgs" => "kg",
             "G" => "g",
@@ -61,7 +67,7 @@ impl LogUnit {
             other => other,
         };
         [Kind::Mass, Kind::Volume].into_iter().find_map(|kind| {
-            let found = unit(spelling, kind).ok()?;
+            let found = known_unit(spelling, kind)?;
             Some(Self { written: spelling.to_owned(), kind, factor: found.to_si(1.0) })
         })
     }
@@ -149,7 +155,16 @@ pub(super) fn amount(
         Some((number, [])) => (number, beside.ok_or(Why::NoUnit)?),
         Some((number, spelling)) => match units.of(spelling) {
             Some(unit) => (number, unit),
-            None => return close_look(cell, decimals, beside),
+            // 4 x 2.5 L, 245 to 255 mL, 250 u 2 mL; all else is no unit, and saying so at once keeps long files quick.
+            None if spelling.starts_with(b"x")
+                || spelling.starts_with(b"X")
+                || spelling.starts_with(b"to ")
+                || spelling.starts_with(b"u ")
+                || spelling.first().is_some_and(|b| *b >= 0x80) =>
+            {
+                return close_look(cell, decimals, beside);
+            }
+            None => return Err(Why::OtherUnit),
         },
         None => return close_look(cell, decimals, beside),
     };

@@ -492,7 +492,13 @@ pub fn guess(name: &str, headings: &[&str]) -> Option<Mapping> {
             }
         }
     }
-    let register = best.filter(|(_, votes)| *votes > 0 && !even)?.0;
+    best.filter(|(_, votes)| *votes > 0 && !even).map(|(register, _)| guess_as(name, headings, register))
+}
+
+/// The mapping that headings suggest for a register.
+#[must_use]
+pub fn guess_as(name: &str, headings: &[&str], register: Register) -> Mapping {
+    let apart: Vec<(Vec<String>, Option<LogUnit>)> = headings.iter().map(|h| taken_apart(h)).collect();
     // The best fit of all takes its column first, so that "Waste stream" beside "Waste code" is the stream.
     let mut columns: Vec<Option<Role>> = vec![None; headings.len()];
     loop {
@@ -528,7 +534,7 @@ pub fn guess(name: &str, headings: &[&str]) -> Option<Mapping> {
             (heading.trim().to_owned(), Column { role, unit: unit.filter(|_| role.has_unit()) })
         })
         .collect();
-    Some(Mapping {
+    Mapping {
         name: name.to_owned(),
         register,
         columns,
@@ -536,7 +542,7 @@ pub fn guess(name: &str, headings: &[&str]) -> Option<Mapping> {
         decimals: Decimals::Ask,
         uncertainty: None,
         means: Vec::new(),
-    })
+    }
 }
 
 /// Whether a register has a use for the role.

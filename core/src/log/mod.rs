@@ -21,11 +21,11 @@ mod why;
 
 pub use amount::{Decimals, LogUnit};
 pub use balance::{OUTPUTS, SOLVENT_BALANCE, SolventBalance, solvent_balance};
-pub use column::{Column, Mapping, Register, Role, guess};
+pub use column::{Column, Mapping, Register, Role, guess, guess_as};
 pub use day::{Day, DayOrder};
 pub use names::{LogMaterial, LogRoute, NONE, Names, RECLAIMED};
 pub use posted::Posted;
-pub use read::{Reader, Reading, Rows, Unreadable};
+pub use read::{Reader, Reading, Rows, Unread, Unreadable};
 pub use reconcile::{Line, Reconciliation, SolventAccount, UNCERTAINTY, USUAL_LIMITS, reconcile};
 pub use tally::{Done, Key, Sum, Tally};
 pub use why::{Change, Remark, Verdict, Why};

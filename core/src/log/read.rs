@@ -1,7 +1,7 @@
 //! Reading a file: bytes of any size in, sums and remarks out.
 
 use super::amount::{self, UnitCell, Value};
-use super::column::{Mapping, Register, Role, guess, recognised};
+use super::column::{Mapping, Register, Role, guess, guess_as, recognised};
 use super::day::{day, order_of};
 use super::names::{MATERIAL, NONE, Names, ROUTE, STREAM};
 use super::tally::{Key, Tally};
@@ -53,6 +53,15 @@ impl Unreadable {
             Self::Missing(what) => ["a column is missing", what],
         }
     }
+}
+
+/// A file that cannot be read, with what its headings suggest, for the user to say the rest.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Unread {
+    /// Why.
+    pub why: Unreadable,
+    /// The mapping as far as the headings go; `None` where there are none.
+    pub draft: Option<Mapping>,
 }
 
 /// How many rows there were, and what became of them. Used and refused rows together are all rows.
@@ -151,7 +160,7 @@ pub struct Reader {
     beginning: Vec<u8>,
     names: Names,
     reading: Option<(Splitter, u8, State)>,
-    failed: Option<Unreadable>,
+    failed: Option<Unread>,
     bytes: u64,
 }
 
@@ -210,13 +219,17 @@ impl Reader {
     ///
     /// Gives back what was read or why the file cannot be read, the names with the materials that were met, and the
     /// remarks that were not taken yet.
-    pub fn finish(mut self) -> (Result<Reading, Unreadable>, Names, Vec<Remark>) {
+    pub fn finish(mut self) -> (Result<Reading, Unread>, Names, Vec<Remark>) {
         if self.reading.is_none() && self.failed.is_none() {
             self.begin(true);
         }
         let names = &mut self.names;
         let Some((mut splitter, separator, mut state)) = self.reading else {
-            return (Err(self.failed.unwrap_or(Unreadable::Empty)), self.names, Vec::new());
+            return (
+                Err(self.failed.unwrap_or(Unread { why: Unreadable::Empty, draft: None })),
+                self.names,
+                Vec::new(),
+            );
         };
         splitter.finish(&mut |record| state.row(record, names));
         state.close();
@@ -236,24 +249,30 @@ impl Reader {
         let beginning = std::mem::take(&mut self.beginning);
         let text = beginning.strip_prefix(b"\xef\xbb\xbf").unwrap_or(&beginning);
         if let Err(why) = is_text(text) {
-            self.failed = Some(why);
+            self.failed = Some(Unread { why, draft: None });
             return;
         }
         let head = find_headings(text, &self.known);
         let Some((separator, line, cells)) = head else {
-            self.failed =
-                Some(if text.trim_ascii().is_empty() { Unreadable::Empty } else { Unreadable::NoHeadings });
+            let empty = text.trim_ascii().is_empty();
+            let why = if empty { Unreadable::Empty } else { Unreadable::NoHeadings };
+            self.failed = Some(Unread { why, draft: None });
             return;
         };
         let headings: Vec<&str> = cells.iter().map(String::as_str).collect();
-        let kept = self.known.iter().find_map(|m| m.over(&headings));
+        // The mapping of this very file first: another one may have the same headings.
+        let own = self.known.iter().filter(|m| m.name == self.name);
+        let others = self.known.iter().filter(|m| m.name != self.name);
+        let kept = own.chain(others).find_map(|m| m.over(&headings));
+        let kept = kept.map(|m| Mapping { name: self.name.clone(), ..m });
         let Some(mapping) = kept.or_else(|| guess(&self.name, &headings)) else {
-            self.failed = Some(Unreadable::WhichRegister);
+            let draft = Some(guess_as(&self.name, &headings, Register::Purchases));
+            self.failed = Some(Unread { why: Unreadable::WhichRegister, draft });
             return;
         };
         let missing = mapping.missing();
         if !missing.is_empty() {
-            self.failed = Some(Unreadable::Missing(missing));
+            self.failed = Some(Unread { why: Unreadable::Missing(missing), draft: Some(mapping) });
             return;
         }
         let names = &mut self.names;

@@ -2,6 +2,7 @@
 use super::substance::{EuLow, Gwp100, Hazard, Rcra, Transport};
 use super::table::Table;
 use super::{Class, Figure, FlashPoint, Registration, Solubility, Substance, Text, parse_formula};
+use crate::order;
 use crate::source::{Source, Standing};
 
 macro_rules! tables {
@@ -73,7 +74,7 @@ fn sources(faults: &mut Vec<String>) -> Vec<(&'static str, Source)> {
             sources.push((key.trim_end_matches('`'), Source::new(cite, standing)));
         }
     }
-    sources.sort_unstable_by_key(|&(key, _)| key);
+    order::sort(&mut sources, &|a, b| a.0 < b.0);
     sources
 }
 

@@ -156,12 +156,12 @@ impl RouteColumns {
     }
 
     /// Every draw of a figure, 0 where the run stopped.
-    pub(super) fn column(&self, id: &str) -> Option<&[f64]> {
+    pub(crate) fn column(&self, id: &str) -> Option<&[f64]> {
         self.columns.iter().find(|c| c.id == id).map(|c| c.values.as_slice())
     }
 
     /// The numbers of the draws that ran, up to `until`, on this route and on another one.
-    pub(super) fn kept<'a>(&'a self, other: &'a Self, until: u32) -> impl Iterator<Item = u32> + 'a {
+    pub(crate) fn kept<'a>(&'a self, other: &'a Self, until: u32) -> impl Iterator<Item = u32> + 'a {
         let (mut mine, mut theirs) = (self.stopped.iter().peekable(), other.stopped.iter().peekable());
         let ends = [self.done, other.done, until].into_iter().min().unwrap_or(0);
         (0..ends).filter(move |draw| {

@@ -21,11 +21,13 @@ pub use sampled::{MOST_CELLS, Sampled, Wish};
 use crate::account::{Figure, Group};
 use crate::compare::HEADLINES;
 
-/// Whether a figure is one of those that people decide by: the headline figures, and E-factor and process mass intensity
-/// where there is a product.
+/// Whether a figure is one of those that people decide by: the headline figures, what a case rests on, the lines of climate,
+/// and E-factor and process mass intensity where there is a product.
 #[must_use]
 pub fn headline(figure: &Figure) -> bool {
     let id = figure.id.as_str();
     HEADLINES.iter().any(|(h, _)| *h == id)
+        || matches!(id, "cost.year" | "cost.once" | "cost.back")
+        || figure.group == Group::Climate
         || figure.group == Group::Metric && matches!(id, "metric.e_factor.net" | "metric.pmi.net")
 }

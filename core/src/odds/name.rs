@@ -16,7 +16,7 @@ pub(super) fn input_words(work: &WorkloadProgram, identity: &str) -> String {
             if let Some(rest) = identity.strip_prefix(step.path.as_str()) {
                 let key = rest.trim_start_matches('.');
                 let param = step.technique.params.iter().find(|p| p.key == key);
-                let what = param.map_or_else(|| plain(key), |p| p.label.to_lowercase());
+                let what = param.map_or_else(|| plain(key), |p| crate::letter::small_text(p.label));
                 return format!("{}, step {} ({}): {what}", route.name, i + 1, step.technique.title);
             }
         }

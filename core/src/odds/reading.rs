@@ -6,6 +6,7 @@ use super::sampled::Sampled;
 use crate::account::{Account, Figure, Measure, RouteAccount};
 use crate::chance::{Input, Summary, combined_uncertainty, summary, variance_share};
 use crate::compare::absent_is_zero;
+use crate::order;
 use crate::program::{RouteProgram, WorkloadProgram};
 use crate::quantity::{Origin, Spread};
 
@@ -254,7 +255,7 @@ impl<'a> Reading<'a> {
                 out.push(Matter { identity: input.identity.clone(), words, share, origin: input.origin });
             }
         }
-        out.sort_by(|a, b| b.share.total_cmp(&a.share));
+        order::sort(&mut out, &|a, b| a.share > b.share);
         out
     }
 }

@@ -86,6 +86,12 @@ pub struct Site {
     pub far_receiver: Option<bool>,
     /// Where state or nation deviate from the rules read.
     pub deviations: Option<String>,
+    /// Currency, prices of materials, disposal, labour and water, discount rate and years, in the order written.
+    pub money: Vec<(String, Field)>,
+    /// Hours in which instruments can run, in the order written.
+    pub hours: Vec<(String, Field)>,
+    /// Edition of warming potentials, origin of CO2, what is burnt, factors of production, in the order written.
+    pub climate: Vec<(String, Field)>,
 }
 
 /// Hazardous waste that a site makes beside the work of the plan.
@@ -108,6 +114,10 @@ pub struct Electricity {
     pub climate: Option<String>,
     /// Price per energy.
     pub price: Option<String>,
+    /// The year for which the climate figure holds.
+    pub year: Option<Field>,
+    /// What the climate figure counts.
+    pub boundary: Option<String>,
     /// Where these figures come from.
     pub source: Option<String>,
 }
@@ -201,12 +211,18 @@ pub struct Route {
     pub recovery: Option<String>,
     /// On what the claim of equal work rests.
     pub equivalence: Option<String>,
+    /// By which method, permit or agreement results of this route may be reported.
+    pub permission: Option<String>,
     /// The lowest and highest pH on the way, `2 to 7`; for the pH rule of the NEMI criteria.
     pub ph: Option<String>,
     /// The steps in order.
     pub steps: Vec<Step>,
     /// Where what is left on the bench goes: `liquor`, `second phase`, `marc`, `trap`, `vapour` to a place.
     pub ends: Vec<(String, String)>,
+    /// How long a run takes, how many run at once, how long people attend, in the order written.
+    pub time: Vec<(String, Field)>,
+    /// Instrument, validation, service and the like, in the order written.
+    pub money: Vec<(String, Field)>,
 }
 
 /// One step of a route.

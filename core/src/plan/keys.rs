@@ -180,6 +180,24 @@ pub(super) static SITE: Object = Object {
             r#""the state counts satellite containers of all rooms together""#,
             "where state or nation deviate from these rules; prints with every paper",
         ),
+        may(
+            "money",
+            Shape::Object(&MONEY),
+            r#"{ "currency": "USD", "prices": { "n-hexane": "95 USD for 2.5 L" } }"#,
+            "what things cost; without it there is no account of cost",
+        ),
+        may(
+            "hours",
+            Shape::Object(&HOURS),
+            r#"{ "attended": "1300 h" }"#,
+            "the hours of a year in which instruments can run",
+        ),
+        may(
+            "climate",
+            Shape::Object(&CLIMATE),
+            r#"{ "gwp": "AR6", "co2_origin": "fossil by-product" }"#,
+            "what the account of climate rests on beside electricity",
+        ),
     ],
     fields_after: None,
 };
@@ -244,7 +262,132 @@ static ELECTRICITY: Object = Object {
     keys: &[
         may("climate", Shape::Amount, r#""0.37 kg/kWh""#, "the CO2-equivalent for each unit of energy"),
         may("price", Shape::Amount, r#""0.14 USD/kWh""#, "the price of each unit of energy"),
+        may("year", Shape::Count, "2025", "the year for which the climate figure holds"),
+        may("boundary", Shape::Text, r#""generation only""#, "what the climate figure counts"),
         may("source", Shape::Text, r#""the site's own figure""#, "where these figures come from"),
+    ],
+    fields_after: None,
+};
+
+pub(super) static MONEY: Object = Object {
+    title: "money",
+    keys: &[
+        must("currency", Shape::Name, r#""USD""#, "the currency of every price, by its three letters"),
+        may(
+            "prices",
+            Shape::Rows,
+            r#"{ "n-hexane": "95 USD for 2.5 L", "acetone": "12 ± 2 USD/L", "nitrile glove": "18 USD for 100" }"#,
+            "the price of each material: by mass, by volume, or of a pack",
+        ),
+        may(
+            "disposal",
+            Shape::Rows,
+            r#"{ "flammable": "85 USD/container + 140 USD/pick-up", "solids": "1.9 USD/kg" }"#,
+            "what the removal of each stream costs: by kg, L, container or pick-up, or several of them",
+        ),
+        may("pick_ups", Shape::Count, "6", "the pick-ups of waste in a year"),
+        may("labour_hour", Shape::Amount, r#""48 ± 6 USD""#, "what an hour of labour costs"),
+        may(
+            "cooling_water",
+            Shape::Amount,
+            r#""2.8 USD/m3""#,
+            "the price of cooling water, sewerage included",
+        ),
+        may("discount", Shape::Amount, r#""6 ± 2 %""#, "the yearly rate at which later money counts less"),
+        may("years", Shape::Count, "8", "how many years the case is drawn up for"),
+        may("source", Shape::Text, r#""purchase ledger 2025""#, "where these figures come from"),
+    ],
+    fields_after: None,
+};
+
+pub(super) static HOURS: Object = Object {
+    title: "hours",
+    keys: &[
+        may("attended", Shape::Amount, r#""1300 h""#, "the hours of a year in which someone is there"),
+        may(
+            "unattended",
+            Shape::Amount,
+            r#""4000 h""#,
+            "the further hours of a year in which instruments may run alone",
+        ),
+    ],
+    fields_after: None,
+};
+
+pub(super) static CLIMATE: Object = Object {
+    title: "climate",
+    keys: &[
+        may(
+            "gwp",
+            Shape::Word(&["AR4", "AR5", "AR6"]),
+            r#""AR6""#,
+            "the assessment report whose 100-year warming potentials are read; AR6 when left out",
+        ),
+        may(
+            "co2_origin",
+            Shape::Word(&["fossil by-product", "biogenic", "natural well", "air capture"]),
+            r#""fossil by-product""#,
+            "where bought CO2 comes from",
+        ),
+        may(
+            "incinerated",
+            Shape::Rows,
+            r#"{ "flammable": "100 %" }"#,
+            "the share of each stream that is burnt",
+        ),
+        may(
+            "upstream",
+            Shape::Rows,
+            r#"{ "n-hexane": "0.9 ± 0.2 kg/kg" }"#,
+            "the CO2-equivalent of making a kilogram of a material; needs source",
+        ),
+        may("source", Shape::Text, r#""supplier's declaration, 2025""#, "where the factors come from"),
+    ],
+    fields_after: None,
+};
+
+pub(super) static TIME: Object = Object {
+    title: "time",
+    keys: &[
+        may("run", Shape::Amount, r#""1.2 h""#, "how long the instrument is taken by one run"),
+        may(
+            "at_once",
+            Shape::Count,
+            "6",
+            "how many extractions one run of one instrument holds; 1 when left out",
+        ),
+        may("attended", Shape::Amount, r#""15 min""#, "the working time of people for each extraction"),
+        may(
+            "attended_batch",
+            Shape::Amount,
+            r#""40 min""#,
+            "the working time of people for each batch, beside it",
+        ),
+        may(
+            "unattended",
+            Shape::YesNo,
+            "true",
+            "whether it may run with nobody there; it may not when left out",
+        ),
+        may("instruments", Shape::Count, "1", "how many such instruments are there; none when left out"),
+    ],
+    fields_after: None,
+};
+
+pub(super) static ROUTE_MONEY: Object = Object {
+    title: "the money of a route",
+    keys: &[
+        may("instrument", Shape::Amount, r#""62000 USD""#, "the price of one more instrument, installed"),
+        may(
+            "validation",
+            Shape::Amount,
+            r#""18000 ± 5000 USD""#,
+            "what it costs once to show that the route works",
+        ),
+        may("residual", Shape::Amount, r#""5000 USD""#, "what each bought instrument is worth at the end"),
+        may("service", Shape::Amount, r#""4200 USD""#, "service and spare parts of all instruments, a year"),
+        may("rent", Shape::Amount, r#""360 USD""#, "rent of cylinders and the like, a year"),
+        may("other", Shape::Amount, r#""900 USD""#, "other cost, a year"),
     ],
     fields_after: None,
 };
@@ -374,6 +517,12 @@ static ROUTE: Object = Object {
             "the recovery of what is sought, as this route reaches it",
         ),
         may("equivalence", Shape::Text, r#""paired samples, 2026""#, "what the claim of equal work rests on"),
+        may(
+            "permission",
+            Shape::Text,
+            r#""the permit names no method""#,
+            "by which method, permit or agreement results of this route may be reported",
+        ),
         may("ph", Shape::Amount, r#""2 to 7""#, "the lowest and the highest pH on the way"),
         must("steps", Shape::List(&STEP, 0), "", "the steps in their order"),
         may(
@@ -381,6 +530,18 @@ static ROUTE: Object = Object {
             Shape::Rows,
             r#"{ "liquor": "flammable", "marc": "solids" }"#,
             "where what is left on the bench goes",
+        ),
+        may(
+            "time",
+            Shape::Object(&TIME),
+            r#"{ "run": "1.2 h", "attended": "15 min" }"#,
+            "time that a run takes",
+        ),
+        may(
+            "money",
+            Shape::Object(&ROUTE_MONEY),
+            r#"{ "instrument": "62000 USD", "service": "4200 USD" }"#,
+            "what this route costs beside its materials, energy and labour",
         ),
     ],
     fields_after: None,
@@ -418,7 +579,7 @@ pub(super) static STEP: Object = Object {
 };
 
 #[cfg(test)]
-pub(super) static ALL: [&Object; 12] = [
+pub(super) static ALL: [&Object; 17] = [
     &PLAN,
     &LOG,
     &SITE,
@@ -431,4 +592,9 @@ pub(super) static ALL: [&Object; 12] = [
     &BATCH,
     &ROUTE,
     &STEP,
+    &MONEY,
+    &HOURS,
+    &CLIMATE,
+    &TIME,
+    &ROUTE_MONEY,
 ];

@@ -7,6 +7,7 @@ mod document;
 mod keys;
 mod migrate;
 mod nearest;
+mod parse;
 mod path;
 mod print;
 mod problem;
@@ -20,8 +21,10 @@ pub use document::{
     Workload,
 };
 pub(crate) use nearest::nearest;
-pub use path::{Path, below};
+pub use path::{Path, below, keys};
+pub(crate) use print::quote;
 pub use problem::{Problem, Severity};
 pub use read::{Opened, open, open_bytes};
 pub use schema::{TechniqueShape, schema};
+pub use tree::is_number;
 pub use write::save;

@@ -1,5 +1,7 @@
 //! The known word that someone most likely meant.
 
+use crate::letter::small;
+
 /// The known word nearest to `word`, if any is near enough to be worth suggesting; of equally near ones the first.
 /// Case does not count, nor whether words are joined by a space, `-` or `_`.
 pub(crate) fn nearest<'a>(word: &str, known: impl IntoIterator<Item = &'a str>) -> Option<&'a str> {
@@ -25,11 +27,7 @@ pub(crate) fn nearest<'a>(word: &str, known: impl IntoIterator<Item = &'a str>) 
 }
 
 fn letters(word: &str) -> Vec<char> {
-    word.trim()
-        .chars()
-        .flat_map(char::to_lowercase)
-        .map(|c| if matches!(c, ' ' | '-') { '_' } else { c })
-        .collect()
+    word.trim().chars().map(|c| if matches!(c, ' ' | '-') { '_' } else { small(c) }).collect()
 }
 
 /// The number of letters to put in, leave out, replace, or swap with their neighbour (each letter touched once).

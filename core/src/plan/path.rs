@@ -2,6 +2,7 @@
 
 use std::fmt::{self, Write as _};
 
+use super::parse::leading_text;
 use super::print::quoted;
 
 /// A key longer than this many characters is cut in a path: a file of one endless key must not make a list of
@@ -53,6 +54,42 @@ impl<'a> Path<'a> {
 #[must_use]
 pub fn below(path: &str, key: &str) -> String {
     Path::At(path).key(key).to_string()
+}
+
+/// The keys and positions of a path that has been written out, or nothing where it is no path.
+///
+/// ```
+/// use thimbleworth::plan::keys;
+/// assert_eq!(keys(r#"steps[2].measured["condenser loss"]"#).unwrap(), ["steps", "2", "measured", "condenser loss"]);
+/// assert_eq!(keys("steps["), None);
+/// ```
+#[must_use]
+pub fn keys(path: &str) -> Option<Vec<String>> {
+    let mut out = Vec::new();
+    let mut rest = path;
+    while !rest.is_empty() {
+        if let Some(inside) = rest.strip_prefix('[') {
+            if let Some((key, after)) = leading_text(inside) {
+                out.push(key);
+                rest = after.strip_prefix(']')?;
+            } else {
+                let (position, after) = inside.split_once(']')?;
+                position.parse::<usize>().ok()?;
+                out.push(position.to_owned());
+                rest = after;
+            }
+        } else {
+            rest = rest.strip_prefix('.').unwrap_or(rest);
+            let end = rest.find(['.', '[']).unwrap_or(rest.len());
+            let (key, after) = rest.split_at_checked(end)?;
+            if key.is_empty() {
+                return None;
+            }
+            out.push(key.to_owned());
+            rest = after;
+        }
+    }
+    Some(out)
 }
 
 impl fmt::Display for Path<'_> {
@@ -130,5 +167,19 @@ mod tests {
     #[test]
     fn an_endless_key_is_cut() {
         assert!(Path::Root.key(&"x".repeat(5_000_000)).to_string().len() < 1100);
+    }
+
+    #[test]
+    fn what_is_written_is_read_back() {
+        for key in ["charge", "n-hexane", "2-propanol", "", "a.b", "x\"]", "Δ\n", "[0]", "condenser loss"] {
+            let steps = Path::Root.key("steps");
+            let step = steps.index(2);
+            let path = below(&step.key("measured").to_string(), key);
+            assert_eq!(keys(&path).unwrap(), ["steps", "2", "measured", key]);
+        }
+        assert_eq!(keys(""), Some(Vec::new()));
+        for bad in ["a[", "a[x]", "a[\"b]", "..", "a[\"b\"x"] {
+            assert_eq!(keys(bad), None, "{bad}");
+        }
     }
 }

@@ -23,7 +23,8 @@ pub(super) fn quoted(text: &str) -> String {
     out
 }
 
-fn quote(text: &str, out: &mut String) {
+/// Writes a text as JSON writes it, with its quotes.
+pub(crate) fn quote(text: &str, out: &mut String) {
     out.push('"');
     for c in text.chars() {
         match c {

@@ -1,10 +1,7 @@
 //! The document before it has a meaning: JSON text as a tree that keeps the order of keys, duplicate keys, and numbers
 //! as they were written.
 
-use std::fmt;
-
-use serde::de::{DeserializeSeed, MapAccess, SeqAccess, Visitor};
-use serde_json::error::Category;
+use super::parse::{Fault, parse};
 
 /// A JSON value.
 #[derive(Clone, Debug, PartialEq, Eq)]
@@ -37,117 +34,19 @@ pub(crate) struct Malformed {
 
 /// Reads JSON text as a tree.
 pub(crate) fn read(text: &str) -> Result<Node, Malformed> {
-    let mut numbers = Numbers { rest: text };
-    let mut reader = serde_json::Deserializer::from_str(text);
-    let seed = Seed { numbers: &mut numbers, depth: 0 };
-    let node = seed.deserialize(&mut reader).and_then(|node| reader.end().map(|()| node));
-    node.map_err(|error| malformed(text, &error))
+    parse(text).map_err(|fault| malformed(text, fault))
 }
 
-/// The numbers of a JSON text in the order written. The reader below takes one whenever serde_json reports a number,
-/// so that `0.10` stays `0.10`: serde_json itself hands over only the value, and by default not always the nearest
-/// one.
-struct Numbers<'t> {
-    rest: &'t str,
-}
-
-impl<'t> Numbers<'t> {
-    fn next(&mut self) -> &'t str {
-        let mut in_text = false;
-        let mut escaped = false;
-        let start = self.rest.bytes().position(|b| {
-            if in_text {
-                in_text = escaped || b != b'"';
-                escaped = !escaped && b == b'\\';
-                return false;
-            }
-            in_text = b == b'"';
-            b == b'-' || b.is_ascii_digit()
-        });
-        let number = start.and_then(|start| self.rest.get(start..)).unwrap_or("");
-        let end = number.bytes().position(|b| !matches!(b, b'0'..=b'9' | b'+' | b'-' | b'.' | b'e' | b'E'));
-        let (number, rest) = number.split_at_checked(end.unwrap_or(number.len())).unwrap_or(("", ""));
-        self.rest = rest;
-        number
-    }
-}
-
-struct Seed<'a, 't> {
-    numbers: &'a mut Numbers<'t>,
-    depth: usize,
-}
-
-impl Seed<'_, '_> {
-    fn number<E>(self) -> Result<Node, E> {
-        Ok(Node::Number(self.numbers.next().to_owned()))
-    }
-
-    fn deeper<E: serde::de::Error>(&self) -> Result<usize, E> {
-        if self.depth < DEEPEST { Ok(self.depth + 1) } else { Err(E::custom("too deep")) }
-    }
-}
-
-impl<'de> DeserializeSeed<'de> for Seed<'_, '_> {
-    type Value = Node;
-
-    fn deserialize<D: serde::Deserializer<'de>>(self, reader: D) -> Result<Node, D::Error> {
-        reader.deserialize_any(self)
-    }
-}
-
-impl<'de> Visitor<'de> for Seed<'_, '_> {
-    type Value = Node;
-
-    fn expecting(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        f.write_str("a JSON value")
-    }
-
-    fn visit_unit<E>(self) -> Result<Node, E> {
-        Ok(Node::Null)
-    }
-
-    fn visit_bool<E>(self, yes: bool) -> Result<Node, E> {
-        Ok(Node::YesNo(yes))
-    }
-
-    fn visit_u64<E>(self, _: u64) -> Result<Node, E> {
-        self.number()
-    }
-
-    fn visit_i64<E>(self, _: i64) -> Result<Node, E> {
-        self.number()
-    }
-
-    fn visit_f64<E>(self, _: f64) -> Result<Node, E> {
-        self.number()
-    }
-
-    fn visit_str<E>(self, text: &str) -> Result<Node, E> {
-        Ok(Node::Text(text.to_owned()))
-    }
-
-    fn visit_string<E>(self, text: String) -> Result<Node, E> {
-        Ok(Node::Text(text))
-    }
-
-    fn visit_seq<A: SeqAccess<'de>>(self, mut list: A) -> Result<Node, A::Error> {
-        let depth = self.deeper()?;
-        let mut items = Vec::new();
-        while let Some(item) = list.next_element_seed(Seed { numbers: &mut *self.numbers, depth })? {
-            items.push(item);
-        }
-        Ok(Node::List(items))
-    }
-
-    fn visit_map<A: MapAccess<'de>>(self, mut map: A) -> Result<Node, A::Error> {
-        let depth = self.deeper()?;
-        let mut entries = Vec::new();
-        while let Some(key) = map.next_key::<String>()? {
-            let value = map.next_value_seed(Seed { numbers: &mut *self.numbers, depth })?;
-            entries.push((key, value));
-        }
-        Ok(Node::Map(entries))
-    }
+/// Whether a text is a number as JSON writes it, with no white space around it, and within what a double can hold.
+///
+/// ```
+/// use thimbleworth::plan::is_number;
+/// assert!(is_number("-0.10e+2") && !is_number("05") && !is_number(" 5") && !is_number("1e999"));
+/// ```
+#[must_use]
+pub fn is_number(text: &str) -> bool {
+    // Compared, because white space around a number is not part of it.
+    matches!(parse(text), Ok(Node::Number(read)) if read == text)
 }
 
 /// What surrounds the place of an error.
@@ -192,19 +91,16 @@ impl Context {
     }
 }
 
-/// The error in our own words, from what stands at its place and before it: the wording does not depend on the
-/// version of serde_json.
-fn malformed(text: &str, error: &serde_json::Error) -> Malformed {
-    let ended = error.classify() == Category::Eof;
-    let mut at = if ended { text.len() } else { offset(text, error.line(), error.column()) };
+/// The error in words, from what stands at its place and before it.
+fn malformed(text: &str, fault: Fault) -> Malformed {
+    let (Fault::At(mut at) | Fault::Deep(mut at)) = fault;
     while !text.is_char_boundary(at) {
         at = at.saturating_sub(1);
     }
     let (before, after) = text.split_at_checked(at).unwrap_or((text, ""));
     let here = Context::of(before);
     let (found, need) = match after.chars().next() {
-        // Our own refusal is the only error of this class.
-        _ if error.classify() == Category::Data => (
+        _ if matches!(fault, Fault::Deep(_)) => (
             format!("more than {DEEPEST} lists and objects within one another"),
             "a plan as documented, which needs eight".to_owned(),
         ),
@@ -226,13 +122,6 @@ fn malformed(text: &str, error: &serde_json::Error) -> Malformed {
         Some(c) => (format!("{} where it cannot stand in JSON", character(c)), remedy(c, &here).to_owned()),
     };
     Malformed { line: here.line, column: here.column, found, need }
-}
-
-/// The byte at a line and column as serde_json counts them: the column is that of the offending byte, counted from 1;
-/// 0 is the line break before.
-fn offset(text: &str, line: usize, column: usize) -> usize {
-    let start: usize = text.split_inclusive('\n').take(line.saturating_sub(1)).map(str::len).sum();
-    (start + column).saturating_sub(1)
 }
 
 fn character(c: char) -> String {

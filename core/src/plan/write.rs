@@ -3,7 +3,7 @@
 use super::document::{Field, Log, OtherWaste, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
 use super::keys::VERSION_KEY;
 use super::print::print;
-use super::tree::{self, Node};
+use super::tree::{Node, is_number};
 
 /// The plan as a JSON document: keys in their declared order, two spaces a level, LF, a final newline, every amount as
 /// it was written. An object of plain values stands on one line where it fits.
@@ -52,6 +52,13 @@ impl Entries {
     fn field(&mut self, key: &str, value: Option<&Field>) {
         if let Some(value) = value {
             self.put(key, field(value));
+        }
+    }
+
+    fn fields(&mut self, key: &str, fields: &[(String, Field)]) {
+        if !fields.is_empty() {
+            let inner = fields.iter().map(|(key, value)| (key.clone(), field(value)));
+            self.put(key, Node::Map(inner.collect()));
         }
     }
 
@@ -115,6 +122,8 @@ fn site(site: &Site) -> Node {
         let mut inner = Entries::default();
         inner.optional("climate", electricity.climate.as_ref());
         inner.optional("price", electricity.price.as_ref());
+        inner.field("year", electricity.year.as_ref());
+        inner.optional("boundary", electricity.boundary.as_ref());
         inner.optional("source", electricity.source.as_ref());
         out.put("electricity", inner.into());
     }
@@ -134,6 +143,9 @@ fn site(site: &Site) -> Node {
     out.optional("pick_up_every", site.pick_up_every.as_ref());
     out.yes_no("far_receiver", site.far_receiver);
     out.optional("deviations", site.deviations.as_ref());
+    out.fields("money", &site.money);
+    out.fields("hours", &site.hours);
+    out.fields("climate", &site.climate);
     out.into()
 }
 
@@ -192,11 +204,14 @@ fn route(route: &Route) -> Node {
     }
     out.optional("recovery", route.recovery.as_ref());
     out.optional("equivalence", route.equivalence.as_ref());
+    out.optional("permission", route.permission.as_ref());
     out.optional("ph", route.ph.as_ref());
     out.list("steps", &route.steps, step);
     if !route.ends.is_empty() {
         out.put("ends", rows(&route.ends));
     }
+    out.fields("time", &route.time);
+    out.fields("money", &route.money);
     out.into()
 }
 
@@ -217,11 +232,8 @@ fn step(step: &Step) -> Node {
 fn field(field: &Field) -> Node {
     match field {
         Field::Text(text) => Node::Text(text.clone()),
-        Field::Number(number) => match tree::read(number) {
-            // Compared, because white space around a number is not part of it.
-            Ok(Node::Number(read)) if read == *number => Node::Number(read),
-            _ => Node::Text(number.clone()),
-        },
+        Field::Number(number) if is_number(number) => Node::Number(number.clone()),
+        Field::Number(number) => Node::Text(number.clone()),
         Field::YesNo(yes) => Node::YesNo(*yes),
         Field::Rows(list) => rows(list),
     }
@@ -233,9 +245,20 @@ fn rows(list: &[(String, String)]) -> Node {
 
 #[cfg(test)]
 mod tests {
-    use super::super::keys::{Object, PLAN, Shape};
+    use super::super::keys::{CLIMATE, HOURS, MONEY, Object, PLAN, ROUTE_MONEY, Shape, TIME};
     use super::super::{Electricity, OwnMaterial, Room, open};
     use super::*;
+
+    /// A field at every key of an object that is kept as it is written.
+    fn every(table: &Object) -> Vec<(String, Field)> {
+        let value = |shape| match shape {
+            Shape::Rows => Field::Rows(vec![("a".into(), "b".into())]),
+            Shape::YesNo => Field::YesNo(true),
+            Shape::Word(words) => Field::Text((*words.first().unwrap()).into()),
+            _ => Field::Text("c".into()),
+        };
+        table.keys.iter().map(|key| (key.name.to_owned(), value(key.shape))).collect()
+    }
 
     /// A plan in which every key is used.
     fn full() -> Plan {
@@ -253,9 +276,12 @@ mod tests {
             feed: Some(pair("soil", "3 g")),
             recovery: some("94 %"),
             equivalence: some("paired"),
+            permission: some("p"),
             ph: some("2 to 7"),
             steps: vec![step],
             ends: pair("liquor", "flammable"),
+            time: every(&TIME),
+            money: every(&ROUTE_MONEY),
         };
         Plan {
             title: "t".into(),
@@ -267,7 +293,13 @@ mod tests {
                 as_of: some("2026-12-01"),
                 bench_temperature: some("20 °C"),
                 drain_permit: some("p"),
-                electricity: Some(Electricity { climate: some("c"), price: some("p"), source: some("s") }),
+                electricity: Some(Electricity {
+                    climate: some("c"),
+                    price: some("p"),
+                    year: Some(Field::Number("2025".into())),
+                    boundary: some("b"),
+                    source: some("s"),
+                }),
                 room: Some(Room { volume: some("v"), air_changes: some("a"), hood_capture: some("h") }),
                 streams: vec![Stream {
                     name: "flammable".into(),
@@ -295,6 +327,9 @@ mod tests {
                 pick_up_every: some("60 d"),
                 far_receiver: Some(true),
                 deviations: some("d"),
+                money: every(&MONEY),
+                hours: every(&HOURS),
+                climate: every(&CLIMATE),
             },
             materials: vec![OwnMaterial { name: "m".into(), fields: vec![("x".into(), Field::YesNo(true))] }],
             workloads: vec![Workload {

@@ -4,6 +4,7 @@ use super::meet::{belongs, met};
 use crate::code::{Contents, Part, Rules, Verdict, classify, is_halogenated};
 use crate::material::Substance;
 use crate::metric::container::adr_fill_by_boiling_point;
+use crate::order;
 use crate::quantity::{Kind, show};
 use crate::room::Day;
 use crate::source::{COMMON_PRACTICE, Source, Standing};
@@ -150,7 +151,7 @@ pub fn into_vessel(
         let what = "water saturated with a volatile halogenated solvent has almost the vapour pressure of the solvent (dichloromethane about 47 kPa at 20 °C): vented cap, no warm store";
         put(Severity::Mind, what.to_owned(), COMMON_PRACTICE);
     }
-    findings.sort_by_key(|f| f.severity);
+    order::sort(&mut findings, &|a, b| a.severity < b.severity);
     let before = classify(into, rules, as_of);
     let after = classify(&all, rules, as_of);
     let gained = |holds: fn(&Verdict) -> bool| {

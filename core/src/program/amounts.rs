@@ -1,7 +1,7 @@
 //! Amounts read once for a whole plan: a plan of many workloads writes the same few texts again and again.
 
+use crate::order::Index;
 use crate::quantity::{Amount, AmountError, Entry, Kind, read_entry};
-use std::collections::BTreeMap;
 
 /// The most texts that are kept.
 const MOST: usize = 4096;
@@ -9,21 +9,31 @@ const MOST: usize = 4096;
 /// What has been read so far.
 #[derive(Default)]
 pub(super) struct Amounts {
-    known: BTreeMap<Kind, BTreeMap<String, Amount>>,
-    count: usize,
+    known: Vec<(Kind, Index<'static>)>,
+    amounts: Vec<Amount>,
 }
 
 impl Amounts {
     /// As [`crate::quantity::read_entry`].
     pub(super) fn entry(&mut self, text: &str, kind: Kind) -> Result<Entry, AmountError> {
-        let known = self.known.entry(kind).or_default();
-        if let Some(amount) = known.get(text) {
+        let known = self.known.iter_mut().find(|(of, _)| *of == kind);
+        if let Some(amount) = known.as_ref().and_then(|(_, texts)| self.amounts.get(texts.get(text)?)) {
             return Ok(Entry::Known(amount.clone()));
         }
         let entry = read_entry(text, kind)?;
-        if let (Entry::Known(amount), true) = (&entry, self.count < MOST) {
-            known.insert(text.to_owned(), amount.clone());
-            self.count += 1;
+        if let (Entry::Known(amount), true) = (&entry, self.amounts.len() < MOST) {
+            let place = self.amounts.len();
+            self.amounts.push(amount.clone());
+            match known {
+                Some((_, texts)) => {
+                    texts.put(text.to_owned(), place);
+                }
+                None => {
+                    let mut texts = Index::default();
+                    texts.put(text.to_owned(), place);
+                    self.known.push((kind, texts));
+                }
+            }
         }
         Ok(entry)
     }
@@ -53,6 +63,6 @@ mod tests {
                 }
             }
         }
-        assert!(amounts.count > 3);
+        assert!(amounts.amounts.len() > 3);
     }
 }

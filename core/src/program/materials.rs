@@ -1,11 +1,11 @@
 //! The materials of a plan: the catalogue's, with the plan's own beside and over them.
 
 use crate::material::{Class, Figure, FlashPoint, Law, Solubility, Substance, catalogue};
+use crate::order::Index;
 use crate::plan::{Field, OwnMaterial, Problem, below, nearest};
 use crate::quantity::{Amount, Kind, Spread, read};
 use crate::source::{SITE, Standing};
 use crate::step::{Control, Param};
-use std::collections::BTreeMap;
 use std::sync::Arc;
 
 /// A material of one route.
@@ -43,19 +43,23 @@ pub static OWN_FIELDS: &[Param] = &[
 
 /// Resolves names once for a whole plan.
 pub struct MaterialBook {
-    own: BTreeMap<String, Arc<Substance>>,
-    met: BTreeMap<String, Arc<Substance>>,
+    /// The plan's own, by their names.
+    own: Index<'static>,
+    /// What the plan calls the catalogue's.
+    met: Index<'static>,
+    substances: Vec<Arc<Substance>>,
 }
 
 impl MaterialBook {
     /// Reads the plan's own materials.
     #[must_use]
     pub fn read(own: &[OwnMaterial], problems: &mut Vec<Problem>) -> Self {
-        let mut book = Self { own: BTreeMap::new(), met: BTreeMap::new() };
+        let mut book = Self { own: Index::default(), met: Index::default(), substances: Vec::new() };
         for material in own {
             let path = below("materials", &material.name);
             let substance = own_substance(material, &path, problems);
-            book.own.insert(material.name.clone(), Arc::new(substance));
+            book.own.put(material.name.clone(), book.substances.len());
+            book.substances.push(Arc::new(substance));
         }
         book
     }
@@ -64,17 +68,19 @@ impl MaterialBook {
     /// lists of names.
     #[must_use]
     pub fn known(&self, name: &str) -> Option<Arc<Substance>> {
-        if let Some(own) = self.own.get(name) {
-            return Some(Arc::clone(own));
+        let own =
+            |name: &str| self.own.get(name).and_then(|place| self.substances.get(place)).map(Arc::clone);
+        if let Some(own) = own(name) {
+            return Some(own);
         }
         if let Some(known) = catalogue().known(name) {
-            let own = self.own.get(&*known.name);
-            return Some(own.map_or_else(|| Arc::new(known.clone()), Arc::clone));
+            return Some(own(&known.name).unwrap_or_else(|| Arc::new(known.clone())));
         }
         let same = |own: &&Arc<Substance>| {
             own.name.eq_ignore_ascii_case(name) || own.cas.as_deref().is_some_and(|cas| cas == name)
         };
-        self.own.values().find(same).map(Arc::clone)
+        // What stands behind them was met under another name.
+        self.substances.iter().take(self.own.len()).find(same).map(Arc::clone)
     }
 
     /// The material of this name: the plan's own first, then the catalogue's by name, synonym or CAS number.
@@ -82,19 +88,21 @@ impl MaterialBook {
     /// # Errors
     /// What was found and what would do, when nobody knows the name.
     pub fn find(&mut self, name: &str) -> Result<MaterialUse, (String, String)> {
-        if let Some(own) = self.own.get(name).or_else(|| self.met.get(name)) {
+        let place = self.own.get(name).or_else(|| self.met.get(name));
+        if let Some(own) = place.and_then(|place| self.substances.get(place)) {
             return Ok(MaterialUse { name: own.name.to_string(), substance: Arc::clone(own) });
         }
         match catalogue().find(name) {
             Ok(known) => {
                 // A synonym of a material that the plan overrides is that material too.
-                let substance =
-                    self.own.get(&*known.name).map_or_else(|| Arc::new(known.clone()), Arc::clone);
-                self.met.insert(name.to_owned(), Arc::clone(&substance));
+                let own = self.own.get(&known.name).and_then(|place| self.substances.get(place));
+                let substance = own.map_or_else(|| Arc::new(known.clone()), Arc::clone);
+                self.met.put(name.to_owned(), self.substances.len());
+                self.substances.push(Arc::clone(&substance));
                 Ok(MaterialUse { name: substance.name.to_string(), substance })
             }
             Err(unknown) => {
-                let own = nearest(name, self.own.keys().map(String::as_str)).map(str::to_owned);
+                let own = nearest(name, self.own.iter().map(|(own, _)| own)).map(str::to_owned);
                 let mut suggestions: Vec<_> = own.into_iter().chain(unknown.suggestions).collect();
                 suggestions.truncate(3);
                 let need = if suggestions.is_empty() {

@@ -4,19 +4,25 @@
 mod amounts;
 mod asked;
 mod book;
+mod climate;
 mod materials;
+mod money;
 mod reader;
 mod resolve;
 mod run;
+mod time;
 mod waste;
 mod work;
 
 pub use asked::asked;
 pub use book::{BOOK_RULES, PLACED, PLACED_BY_DEFAULT, TAKEN_IN};
+pub use climate::ClimateUse;
 pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
+pub use money::{MoneyUse, Price, Removal};
 pub use reader::Reader;
 pub use resolve::{Resolved, resolve};
 pub use run::{Desk, Failure};
+pub use time::TimeUse;
 pub use waste::{Counted, EVERY_MONTH, Months, OtherWasteUse, SiteWaste, StreamWaste};
 pub use work::{Basis, Runs, Work};
 
@@ -112,6 +118,14 @@ pub struct RouteProgram {
     pub recovery: Option<In>,
     /// On what the claim of equal work rests.
     pub equivalence: Option<String>,
+    /// By which method, permit or agreement its results may be reported.
+    pub permission: Option<String>,
+    /// What it takes of instruments and people.
+    pub time: TimeUse,
+    /// What it costs; `None` where the site says nothing of money.
+    pub money: Option<MoneyUse>,
+    /// What the account of climate rests on.
+    pub climate: ClimateUse,
     /// The lowest and highest pH on the way.
     pub ph: Option<(f64, f64)>,
     /// What was assumed because the plan does not say.

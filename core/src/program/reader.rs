@@ -6,6 +6,7 @@
 use super::resolve::RouteBuilder;
 use crate::chance::In;
 use crate::ledger::{Material, Measured, Place};
+use crate::letter::small_text;
 use crate::plan::{Field, Problem, Step as StepDoc, below, nearest};
 use crate::quantity::{Amount, Entry, Kind, Origin, ShareBy, Spread, show};
 use crate::step::{Control, Mixture, Need, Param, Part, Poured, Technique};
@@ -116,7 +117,7 @@ impl<'r, 'p> Reader<'r, 'p> {
             (None, Need::Optional) => Found::Nothing,
             (None, Need::Required) => {
                 let need = format!("give {}: {}", p.key, expectation(p));
-                self.error(p.key, format!("{} is missing", p.label.to_lowercase()), need);
+                self.error(p.key, format!("{} is missing", small_text(p.label)), need);
                 Found::Nothing
             }
         }
@@ -190,7 +191,7 @@ impl<'r, 'p> Reader<'r, 'p> {
             let found = format!("{} is outside what is possible", amount.understood());
             self.error(p.key, found, limits(p.physical));
         } else if amount.central_si < p.usual.0 || amount.central_si > p.usual.1 {
-            let found = format!("{} is unusual for {}", amount.understood(), p.label.to_lowercase());
+            let found = format!("{} is unusual for {}", amount.understood(), small_text(p.label));
             let need = format!("{} is usual ({}); leave it if it is right", limits(p.usual), p.source.cite);
             self.doubt(p.key, found, need);
         }

@@ -10,11 +10,11 @@ use super::{
 use crate::chance::{In, Input, continued_key, identity_key};
 use crate::ledger::{BENCH_PLACES, Material, Nature, Place};
 use crate::material::{Class, Substance};
-use crate::plan::{Field, Plan, Problem, Route, Severity, Stream, Workload, below, nearest};
+use crate::order::Index;
+use crate::plan::{Field, Plan, Problem, Route, Severity, Site, Stream, Workload, below, nearest};
 use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
 use crate::step::{TECHNIQUES, technique};
-use std::collections::BTreeMap;
 
 /// The most materials that one route may use: an index fits in 16 bits, and a plan with more has gone wrong.
 const MOST_MATERIALS: usize = 500;
@@ -62,7 +62,7 @@ pub fn resolve(plan: &Plan) -> Resolved {
             let mut builder = RouteBuilder::new(&mut book, &mut amounts, &site, permit, &mut problems);
             let at = format!("{path}.routes[{j}]");
             builder.name_paths((&path, &workload.name), (&at, &route.name));
-            routes.push(builder.build(workload, route, &path, &at));
+            routes.push(builder.build(workload, route, &plan.site, &path, &at));
         }
         let present = workload.routes.iter().position(|r| r.name == workload.present).unwrap_or(0);
         let months = waste::months(workload.months.as_deref(), &below(&path, "months"), &mut problems);
@@ -71,8 +71,8 @@ pub fn resolve(plan: &Plan) -> Resolved {
     let broken = problems.iter().any(|p| p.severity == Severity::Error);
     let program = (!broken).then(|| Program { title: plan.title.clone(), seed, site, workloads });
     // The same doubt about a shared figure is told once.
-    let mut told = std::collections::BTreeSet::new();
-    problems.retain(|p| told.insert((p.path.clone(), p.found.clone())));
+    let mut told = Index::default();
+    problems.retain(|p| told.put(format!("{}\n{}", p.path, p.found), 0).is_none());
     Resolved { program, problems }
 }
 
@@ -127,7 +127,6 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
     if let Some(e) = &doc.electricity {
         check(e.climate.as_deref(), Kind::ClimatePerEnergy, "site.electricity.climate", problems);
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
-        problems.push(Problem::note("site.electricity", "kept; no figure of this version uses it yet"));
     }
     if let Some(r) = &doc.room {
         check(r.volume.as_deref(), Kind::Volume, "site.room.volume", problems);
@@ -291,7 +290,8 @@ pub(super) struct RouteBuilder<'p> {
     permit: bool,
     pub(super) problems: &'p mut Vec<Problem>,
     inputs: Vec<Input>,
-    slots: BTreeMap<u64, In>,
+    /// The keys of the inputs in order, each with where it stands.
+    slots: Vec<(u64, In)>,
     pub(super) materials: Vec<MaterialUse>,
     densities: Vec<Option<In>>,
     assumptions: Vec<Assumption>,
@@ -318,7 +318,7 @@ impl<'p> RouteBuilder<'p> {
             permit,
             problems,
             inputs: Vec::new(),
-            slots: BTreeMap::new(),
+            slots: Vec::new(),
             materials: Vec::new(),
             densities: Vec::new(),
             assumptions: Vec::new(),
@@ -346,11 +346,12 @@ impl<'p> RouteBuilder<'p> {
 
     pub(super) fn input(&mut self, identity: String, amount: &Amount, origin: Origin) -> In {
         let key = self.key(&identity);
-        if let Some(&slot) = self.slots.get(&key) {
+        let place = self.slots.partition_point(|(known, _)| *known < key);
+        if let Some(&(_, slot)) = self.slots.get(place).filter(|(known, _)| *known == key) {
             return slot;
         }
         let slot = In(u32::try_from(self.inputs.len()).unwrap_or(u32::MAX));
-        self.slots.insert(key, slot);
+        self.slots.insert(place, (key, slot));
         self.inputs.push(Input {
             identity,
             key,
@@ -497,7 +498,14 @@ impl<'p> RouteBuilder<'p> {
         }
     }
 
-    fn build(mut self, workload: &'p Workload, doc: &'p Route, above: &str, path: &str) -> RouteProgram {
+    fn build(
+        mut self,
+        workload: &'p Workload,
+        doc: &'p Route,
+        site: &Site,
+        above: &str,
+        path: &str,
+    ) -> RouteProgram {
         let work = self.work(workload, above);
         let feed = self.feed(workload, doc, above, path);
         self.fed = feed.iter().map(|(m, _)| *m).collect();
@@ -562,6 +570,9 @@ impl<'p> RouteBuilder<'p> {
                 "recovery, and equivalence with what the claim rests on",
             ));
         }
+        let time = self.time(site, doc, path);
+        let money = self.money(site, doc, path);
+        let climate = self.climate(site);
         let natures = self
             .materials
             .iter()
@@ -584,6 +595,10 @@ impl<'p> RouteBuilder<'p> {
             ends,
             recovery,
             equivalence: doc.equivalence.clone(),
+            permission: doc.permission.clone(),
+            time,
+            money,
+            climate,
             ph,
             assumptions: self.assumptions,
             uncounted: self.uncounted,
@@ -591,7 +606,12 @@ impl<'p> RouteBuilder<'p> {
         }
     }
 
-    fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
+    /// The name under which the book shows a material.
+    pub(super) fn known_name(&mut self, name: &str) -> Result<String, (String, String)> {
+        self.book.find(name).map(|found| found.name)
+    }
+
+    pub(super) fn read_optional(&mut self, text: Option<&str>, kind: Kind, path: &str) -> Option<In> {
         match self.amounts.read(text?, kind) {
             Ok(amount) => Some(self.input(path.to_owned(), &amount, Origin::Entered)),
             Err(e) => {

@@ -1,6 +1,7 @@
 //! What is wrong with an amount: what was found, and what would do.
 
 use super::{Bound, Kind, show};
+use crate::letter::sentence;
 use std::fmt;
 
 /// Why a text could not be read as an amount. Every value carries what was found; `at` is the place in the text in
@@ -333,7 +334,7 @@ impl AmountError {
             }
             Self::SpreadWithoutUnit { found, unit, .. } => format!("{found} {unit} or {found} %?"),
             Self::UnknownUnit { kind, suggestion, .. } => match suggestion {
-                Some(unit) => format!("is “{unit}” meant? {}", capital(&accepted(*kind))),
+                Some(unit) => format!("is “{unit}” meant? {}", sentence(&accepted(*kind))),
                 None => accepted(*kind),
             },
             Self::RefusedUnit { reply, .. } => (*reply).to_owned(),
@@ -374,11 +375,6 @@ fn accepted(kind: Kind) -> String {
     }
     let listed: Vec<&str> = units.iter().copied().filter(|unit| !unit.is_empty()).collect();
     format!("{} is written in {}", kind.words(), listed.join(", "))
-}
-
-fn capital(sentence: &str) -> String {
-    let mut characters = sentence.chars();
-    characters.next().map_or_else(String::new, |first| first.to_uppercase().chain(characters).collect())
 }
 
 impl fmt::Display for AmountError {

@@ -5,6 +5,7 @@ use super::refuse::{CO2_ALONE, refused};
 use super::scan::{is_minus, is_space};
 use super::units::{UNITS, UnitRow};
 use super::{AmountError, Currency, Kind, ShareBy};
+use crate::letter::small_text;
 
 /// A unit that was understood: a row of the table, or a quotient of two.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -186,6 +187,11 @@ pub fn unit(spelling: &str, kind: Kind) -> Result<Unit, AmountError> {
     unit_at(spelling, kind, 0)
 }
 
+/// As [`unit`], without looking for what is wrong with a spelling: for long lists.
+pub(crate) fn known_unit(spelling: &str, kind: Kind) -> Option<Unit> {
+    resolve(spelling, kind).or_else(|| resolve(&normal(spelling), kind))
+}
+
 pub(super) fn unit_at(spelling: &str, kind: Kind, at: usize) -> Result<Unit, AmountError> {
     // Most are written as they stand in the table.
     if let Some(unit) = resolve(spelling, kind) {
@@ -321,13 +327,13 @@ fn alike(text: &str, kind: Kind) -> Option<String> {
     if text.is_empty() {
         return None;
     }
-    let small = text.to_lowercase();
+    let small = small_text(text);
     if kind == Kind::Money && small.len() == 3 && small.chars().all(|c| c.is_ascii_lowercase()) {
-        return Some(text.to_uppercase());
+        return Some(text.to_ascii_uppercase());
     }
     let same = |row: &&UnitRow| {
         let mut spellings = std::iter::once(row.symbol).chain(row.aliases.iter().copied());
-        row.kind == kind && spellings.any(|spelling| normal(spelling).to_lowercase() == small)
+        row.kind == kind && spellings.any(|spelling| small_text(&normal(spelling)) == small)
     };
     UNITS.iter().find(same).map(|row| row.symbol.to_owned())
 }

@@ -1,6 +1,7 @@
 //! Tables of text and numbers, the same for a terminal, Markdown, CSV, JSON and a workbook.
 
 use super::csv::text_cell;
+use super::json::{Json, Value};
 use super::markdown::escaped;
 use super::words::visible;
 use crate::quantity::{shortest, significant};
@@ -195,31 +196,31 @@ fn laid_out(out: &mut String, table: &DataTable) {
 /// What is not known is `null`.
 #[must_use]
 pub fn data_json(tables: &[DataTable]) -> String {
-    let quoted = |text: &str| serde_json::to_string(text).unwrap_or_default();
-    let mut out = String::from("{\n  \"thimbleworth_log\": 1,\n  \"tables\": {");
-    for (t, table) in tables.iter().enumerate() {
-        out.push_str(if t > 0 { ",\n    " } else { "\n    " });
-        out.push_str(&quoted(table.key));
-        out.push_str(": {\n      \"rows\": [");
-        for (r, row) in table.rows.iter().enumerate() {
-            out.push_str(if r > 0 { ",\n        {" } else { "\n        {" });
-            for (c, (cell, [key, _])) in row.iter().zip(&table.head).enumerate() {
-                out.push_str(if c > 0 { ", " } else { " " });
-                out.push_str(&quoted(key));
-                out.push_str(": ");
-                match cell {
-                    DataCell::Text(text) => out.push_str(&quoted(text)),
-                    DataCell::Number(value) if value.is_finite() => out.push_str(&shortest(*value)),
-                    DataCell::Number(_) | DataCell::Empty => out.push_str("null"),
-                }
+    Json::document(|json| {
+        json.put("thimbleworth_log", 1_u64);
+        json.object("tables", |json| {
+            for table in tables {
+                json.object(table.key, |json| {
+                    json.list("rows", |json| {
+                        for row in &table.rows {
+                            json.row(|json| {
+                                for (cell, [key, _]) in row.iter().zip(&table.head) {
+                                    match cell {
+                                        DataCell::Text(text) => json.put(key, text),
+                                        DataCell::Number(value) => {
+                                            json.put(key, Some(*value).filter(|v| v.is_finite()))
+                                        }
+                                        DataCell::Empty => json.put(key, Value::Null),
+                                    }
+                                }
+                            });
+                        }
+                    });
+                    json.texts("notes", &table.notes);
+                });
             }
-            out.push_str(" }");
-        }
-        let notes: Vec<String> = table.notes.iter().map(|n| quoted(n)).collect();
-        out.push_str(&["\n      ],\n      \"notes\": [", &notes.join(", "), "]\n    }"].concat());
-    }
-    out.push_str("\n  }\n}\n");
-    out
+        });
+    })
 }
 
 /// Which columns hold numbers.

@@ -18,6 +18,7 @@ mod csv;
 mod data_table;
 mod energy;
 mod grid;
+mod json;
 mod log;
 mod markdown;
 mod odds;

@@ -1,17 +1,16 @@
 //! How sure the figures are: the sampled run as text and as a document.
 
 use super::grid::{Grid, paragraph};
+use super::json::Json;
 use super::row::{PROGRAM, written, yearly};
 use super::words::{amount, visible};
 use crate::account::{Account, Measure};
 use crate::chance::{Summary, identity_key};
 use crate::ledger::StepIx;
-use crate::odds::{FigureReading, MOST_STOPPED, Matter, Reading, Sampled, Stopped};
+use crate::odds::{FigureReading, MOST_STOPPED, Matter, Reading, Sampled};
 use crate::plan::save;
 use crate::program::{RouteProgram, WorkloadProgram};
 use crate::quantity::{Origin, significant};
-use serde::Serialize;
-use serde::ser::{SerializeMap, Serializer};
 
 /// The version of the document of odds. Keys may be added under the same version.
 pub const ODDS_VERSION: u64 = 1;
@@ -214,48 +213,6 @@ fn percent(share: f64) -> String {
     format!("{} %", significant(share * 100.0, 2))
 }
 
-#[derive(Serialize)]
-struct Document<'a> {
-    thimbleworth_odds: u64,
-    program: &'static str,
-    plan_digest: Option<String>,
-    seed: u64,
-    draws: u32,
-    asked: u32,
-    coverage: f64,
-    workloads: Vec<Work<'a>>,
-}
-
-#[derive(Serialize)]
-struct Work<'a> {
-    name: &'a str,
-    present: &'a str,
-    routes: Vec<Route<'a>>,
-    figures: Vec<FigureDocument<'a>>,
-}
-
-#[derive(Serialize)]
-struct Route<'a> {
-    name: &'a str,
-    draws: u32,
-    stopped: Vec<StoppedDocument>,
-}
-
-#[derive(Serialize)]
-struct StoppedDocument {
-    step: Option<u16>,
-    why: &'static str,
-    draws: u32,
-}
-
-struct FigureDocument<'a> {
-    work: &'a WorkloadProgram,
-    coverage: f64,
-    figure: FigureReading,
-    /// For each rival.
-    matters: Vec<Vec<Matter>>,
-}
-
 /// The document of odds: JSON for other programs, the same bytes from the command and from the page.
 ///
 /// | key | what it holds |
@@ -273,158 +230,114 @@ struct FigureDocument<'a> {
 /// the variance and `origin` of each input, largest first.
 #[must_use]
 pub fn odds_json(account: &Account, sampled: &Sampled, coverage: f64) -> String {
-    let mut text = serde_json::to_string_pretty(&document(account, sampled, coverage)).unwrap_or_default();
-    text.push('\n');
-    text
-}
-
-fn document<'a>(account: &'a Account, sampled: &'a Sampled, coverage: f64) -> Document<'a> {
-    let works = account.program.iter().flat_map(|p| &p.workloads).enumerate();
-    Document {
-        thimbleworth_odds: ODDS_VERSION,
-        program: PROGRAM,
-        plan_digest: account.plan.as_ref().map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p)))),
-        seed: sampled.seed(),
-        draws: sampled.done(),
-        asked: sampled.asked(),
-        coverage,
-        workloads: works.filter_map(|(w, work)| workload(account, sampled, coverage, w, work)).collect(),
-    }
-}
-
-fn workload<'a>(
-    account: &'a Account,
-    sampled: &'a Sampled,
-    coverage: f64,
-    w: usize,
-    work: &'a WorkloadProgram,
-) -> Option<Work<'a>> {
-    let reading = Reading::new(account, sampled, w, coverage)?;
-    let name = |r: usize| work.routes.get(r).map_or("", |r| r.name.as_str());
-    let figures = reading.ids().into_iter().filter_map(|id| reading.figure(id));
-    let stopped = |s: &Stopped| StoppedDocument {
-        step: if let StepIx::Step(i) = s.step { Some(i) } else { None },
-        why: s.why,
-        draws: s.draws,
-    };
-    Some(Work {
-        name: &work.name,
-        present: name(work.present),
-        routes: (0..work.routes.len())
-            .filter_map(|r| {
-                let columns = reading.columns(r)?;
-                let stopped = columns.stopped().iter().map(stopped).collect();
-                Some(Route { name: name(r), draws: columns.done(), stopped })
-            })
-            .collect(),
-        figures: figures
-            .map(|figure| FigureDocument {
-                work,
-                coverage,
-                matters: figure
-                    .rivals
-                    .iter()
-                    .map(|rival| reading.matters(&figure.id, rival.route, Some(work.present)))
-                    .collect(),
-                figure,
-            })
-            .collect(),
+    Json::document(|json| {
+        json.put("thimbleworth_odds", ODDS_VERSION);
+        json.put("program", PROGRAM);
+        let digest = account.plan.as_ref().map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p))));
+        json.put("plan_digest", digest.as_deref());
+        json.put("seed", sampled.seed());
+        json.put("draws", sampled.done());
+        json.put("asked", sampled.asked());
+        json.put("coverage", coverage);
+        json.list("workloads", |json| {
+            let works = account.program.iter().flat_map(|p| &p.workloads).enumerate();
+            for (w, work) in works {
+                if let Some(reading) = Reading::new(account, sampled, w, coverage) {
+                    json.row(|json| workload(json, &reading, coverage, work));
+                }
+            }
+        });
     })
 }
 
-impl Serialize for FigureDocument<'_> {
-    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        let Self { work, figure, .. } = self;
-        let named = |r: usize| work.routes.get(r).map_or("", |r| r.name.as_str());
-        let routes = figure.routes.iter().enumerate().filter_map(|(r, spread)| {
-            let spread = (*spread)?;
-            let mut row = NumberRow::new(named(r), figure.measure);
-            row.number("central", Some(spread.central));
-            row.summary(spread.drawn, spread.first_order_u);
-            row.agrees = Some(spread.agrees(self.coverage));
-            Some(row)
-        });
-        let rivals = figure.rivals.iter().zip(&self.matters).map(|(rival, matters)| {
-            let mut row = NumberRow::new(named(rival.route), figure.measure);
-            row.odds = Some((rival.draws, rival.less, rival.same));
-            row.summary(rival.difference, rival.first_order_u);
-            row.matters = Some(matters);
-            row
-        });
-        let mut map = serializer.serialize_map(None)?;
-        map.serialize_entry("id", &figure.id)?;
-        map.serialize_entry("title", &figure.title)?;
-        map.serialize_entry("routes", &routes.collect::<Vec<_>>())?;
-        map.serialize_entry("rivals", &rivals.collect::<Vec<_>>())?;
-        map.end()
-    }
-}
-
-/// Numbers under keys that name their unit.
-struct NumberRow<'a> {
-    name: &'a str,
-    measure: Measure,
-    odds: Option<(usize, f64, f64)>,
-    numbers: Vec<(&'static str, Option<f64>)>,
-    agrees: Option<Option<bool>>,
-    matters: Option<&'a [Matter]>,
-}
-
-impl<'a> NumberRow<'a> {
-    const fn new(name: &'a str, measure: Measure) -> Self {
-        Self { name, measure, odds: None, numbers: Vec::new(), agrees: None, matters: None }
-    }
-
-    fn number(&mut self, key: &'static str, value_si: Option<f64>) {
-        self.numbers.push((key, value_si));
-    }
-
-    fn summary(&mut self, said: Option<Summary>, first_order_u: Option<f64>) {
-        self.number("mean", said.map(|s| s.mean));
-        self.number("u", said.map(|s| s.u));
-        self.number("median", said.map(|s| s.median));
-        self.number("low", said.map(|s| s.symmetric.low));
-        self.number("high", said.map(|s| s.symmetric.high));
-        self.number("shortest_low", said.map(|s| s.shortest.low));
-        self.number("shortest_high", said.map(|s| s.shortest.high));
-        self.number("first_order_u", first_order_u);
-    }
-}
-
-impl Serialize for NumberRow<'_> {
-    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        let unit = yearly(self.measure);
-        let mut map = serializer.serialize_map(None)?;
-        map.serialize_entry("name", self.name)?;
-        if let Some((draws, less, same)) = self.odds {
-            map.serialize_entry("draws", &draws)?;
-            map.serialize_entry("less", &less)?;
-            map.serialize_entry("same", &same)?;
+fn workload(json: &mut Json, reading: &Reading<'_>, coverage: f64, work: &WorkloadProgram) {
+    let name = |r: usize| work.routes.get(r).map_or("", |r| r.name.as_str());
+    json.put("name", &work.name);
+    json.put("present", name(work.present));
+    json.list("routes", |json| {
+        for (r, columns) in (0..work.routes.len()).filter_map(|r| Some((r, reading.columns(r)?))) {
+            json.row(|json| {
+                json.put("name", name(r));
+                json.put("draws", columns.done());
+                json.list("stopped", |json| {
+                    for s in columns.stopped() {
+                        json.row(|json| {
+                            json.put("step", if let StepIx::Step(i) = s.step { Some(i) } else { None });
+                            json.put("why", s.why);
+                            json.put("draws", s.draws);
+                        });
+                    }
+                });
+            });
         }
-        for (key, value) in &self.numbers {
-            map.serialize_entry(&format!("{key}_{unit}"), &value.map(|v| written(self.measure, v)))?;
+    });
+    json.list("figures", |json| {
+        for figure in reading.ids().into_iter().filter_map(|id| reading.figure(id)) {
+            json.row(|json| of_figure(json, reading, coverage, work, &figure));
         }
-        if let Some(agrees) = self.agrees {
-            map.serialize_entry("first_order_agrees", &agrees)?;
-        }
-        if let Some(matters) = self.matters {
-            let rows: Vec<_> = matters.iter().map(MatterDocument::of).collect();
-            map.serialize_entry("matters", &rows)?;
-        }
-        map.end()
-    }
+    });
 }
 
-#[derive(Serialize)]
-struct MatterDocument<'a> {
-    identity: &'a str,
-    words: &'a str,
-    share: f64,
-    origin: &'static str,
+fn of_figure(
+    json: &mut Json,
+    reading: &Reading<'_>,
+    coverage: f64,
+    work: &WorkloadProgram,
+    figure: &FigureReading,
+) {
+    let name = |r: usize| work.routes.get(r).map_or("", |r| r.name.as_str());
+    json.put("id", &figure.id);
+    json.put("title", &figure.title);
+    json.list("routes", |json| {
+        for (r, spread) in figure.routes.iter().enumerate() {
+            let Some(spread) = spread else { continue };
+            json.row(|json| {
+                json.put("name", name(r));
+                number(json, "central", figure.measure, Some(spread.central));
+                summary(json, figure.measure, spread.drawn, spread.first_order_u);
+                json.put("first_order_agrees", spread.agrees(coverage));
+            });
+        }
+    });
+    json.list("rivals", |json| {
+        for rival in &figure.rivals {
+            json.row(|json| {
+                json.put("name", name(rival.route));
+                json.put("draws", rival.draws);
+                json.put("less", rival.less);
+                json.put("same", rival.same);
+                summary(json, figure.measure, rival.difference, rival.first_order_u);
+                json.list("matters", |json| {
+                    for m in reading.matters(&figure.id, rival.route, Some(work.present)) {
+                        json.row(|json| {
+                            json.put("identity", &m.identity);
+                            json.put("words", &m.words);
+                            json.put("share", m.share);
+                            json.put("origin", m.origin.word());
+                        });
+                    }
+                });
+            });
+        }
+    });
 }
 
-impl<'a> MatterDocument<'a> {
-    fn of(m: &'a Matter) -> Self {
-        Self { identity: &m.identity, words: &m.words, share: m.share, origin: m.origin.word() }
+/// A number under a key that names its unit.
+fn number(json: &mut Json, key: &str, measure: Measure, value_si: Option<f64>) {
+    json.put(&format!("{key}_{}", yearly(measure)), value_si.map(|v| written(measure, v)));
+}
+
+fn summary(json: &mut Json, measure: Measure, said: Option<Summary>, first_order_u: Option<f64>) {
+    for (key, value) in [
+        ("mean", said.map(|s| s.mean)),
+        ("u", said.map(|s| s.u)),
+        ("median", said.map(|s| s.median)),
+        ("low", said.map(|s| s.symmetric.low)),
+        ("high", said.map(|s| s.symmetric.high)),
+        ("shortest_low", said.map(|s| s.shortest.low)),
+        ("shortest_high", said.map(|s| s.shortest.high)),
+        ("first_order_u", first_order_u),
+    ] {
+        number(json, key, measure, value);
     }
 }

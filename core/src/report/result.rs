@@ -6,102 +6,21 @@ mod hazard;
 mod posting;
 mod waste;
 
-pub(super) use figure::FigureRow;
-pub(super) use posting::{InputDocument, step_and_technique};
+pub(super) use figure::figure;
+pub(super) use posting::{inputs, step_and_technique};
 
-use super::row::PROGRAM;
+use super::json::{Json, Value};
+use super::row::{PROGRAM, figures};
 use super::words::editions;
 use crate::account::{Account, Pouring, RouteAccount};
 use crate::chance::{Draw, identity_key};
 use crate::compare::compare;
-use crate::plan::{Problem, save};
+use crate::plan::save;
 use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
-use energy::EnergyDocument;
-use figure::ComparisonDocument;
-use hazard::HazardDocument;
-use posting::{AssumptionDocument, CautionDocument, PostingDocument, SpendingDocument};
-use serde::Serialize;
 
 /// The version of the result document. Keys may be added under the same version; a key that goes or changes its meaning
 /// brings a new one.
 pub const RESULT_VERSION: u64 = 1;
-
-#[derive(Serialize)]
-struct Document<'a> {
-    thimbleworth_result: u64,
-    program: &'static str,
-    plan_digest: Option<String>,
-    title: Option<&'a str>,
-    site: Option<&'a str>,
-    rules: Option<&'a str>,
-    as_of: Option<&'a str>,
-    data_editions: Vec<EditionDocument>,
-    workloads: Vec<WorkloadDocument<'a>>,
-    waste_desk: Option<waste::SiteDocument>,
-    problems: Vec<ProblemDocument<'a>>,
-}
-
-#[derive(Serialize)]
-struct EditionDocument {
-    key: String,
-    cite: String,
-    standing: &'static str,
-}
-
-#[derive(Serialize)]
-struct WorkloadDocument<'a> {
-    name: &'a str,
-    work: Option<WorkDocument>,
-    present: &'a str,
-    routes: Vec<RouteDocument<'a>>,
-    #[serde(skip_serializing_if = "Option::is_none")]
-    comparison: Option<Option<ComparisonDocument<'a>>>,
-}
-
-#[derive(Serialize)]
-struct WorkDocument {
-    results_per_year: f64,
-    extractions_per_year: f64,
-    batches_per_year: f64,
-}
-
-#[derive(Serialize)]
-struct RouteDocument<'a> {
-    name: &'a str,
-    accounted: bool,
-    #[serde(flatten)]
-    account: Option<RouteAccountDocument<'a>>,
-}
-
-#[derive(Serialize)]
-struct RouteAccountDocument<'a> {
-    kg_product_per_year: f64,
-    figures: Vec<FigureRow<'a>>,
-    refused: Vec<RefusalDocument<'a>>,
-    hazard: HazardDocument<'a>,
-    waste_codes: Vec<waste::StreamDocument>,
-    assumptions: Vec<AssumptionDocument<'a>>,
-    cautions: Vec<CautionDocument>,
-    closure: f64,
-    postings: Vec<PostingDocument<'a>>,
-    utilities: Vec<SpendingDocument>,
-    energy: EnergyDocument,
-    inputs: Vec<InputDocument<'a>>,
-}
-
-#[derive(Serialize)]
-struct RefusalDocument<'a> {
-    metrics: &'static str,
-    reason: &'a str,
-}
-
-#[derive(Serialize)]
-struct ProblemDocument<'a> {
-    severity: &'static str,
-    path: &'a str,
-    found: &'a str,
-    need: &'a str,
-}
 
 /// The result document of an account: JSON for other programs, the same bytes from the command and from the page.
 ///
@@ -141,9 +60,9 @@ struct ProblemDocument<'a> {
 ///
 /// **Figures.** Each has `id` (never reused for another meaning), `title`, `group`, `boundary` (what is counted),
 /// `formula`, `source`, `standing`, and its values under keys that name the unit: `kg`, `l` (litres), `kwh`, `containers`
-/// or `kg_score` (mass times a score) with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
+/// `kg_score` (mass times a score), `h`, `money` (in the `currency` of the site) or `kg_co2e` with `_per_result`, `_per_batch`, `_per_month`, `_per_year` and `_per_kg_product`
 /// (`null` without a product). A month is a twelfth of the year. Containers are whole in a year, and the other values are
-/// shares of that number. A ratio has only `ratio`. All are central values; gross and net stand as figures of their own.
+/// shares of that number. A ratio has only `ratio`, a number of things `count`, money paid once `money_once`. All are central values; gross and net stand as figures of their own.
 ///
 /// **Comparison.** `comparison` is `null` where the present route has no account, else `present` and `routes`, one for
 /// each other route with an account: `name`, `finding`, `better`, `worse`, `doubts`, and `differences`: `id`, `title`,
@@ -160,93 +79,126 @@ struct ProblemDocument<'a> {
 pub fn result_json(account: &Account, with_comparison: bool) -> String {
     let plan = account.plan.as_ref();
     let program = account.program.as_ref();
-    let document = Document {
-        thimbleworth_result: RESULT_VERSION,
-        program: PROGRAM,
-        plan_digest: plan.map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p)))),
-        title: plan.map(|p| p.title.as_str()),
-        site: plan.map(|p| p.site.name.as_str()),
-        rules: plan.and_then(|p| p.site.rules.as_deref()),
-        as_of: plan.and_then(|p| p.site.as_of.as_deref()),
-        data_editions: program.map(editions).unwrap_or_default().into_iter().map(edition).collect(),
-        workloads: workloads(account, with_comparison),
-        waste_desk: waste::site(account),
-        problems: account.problems.iter().map(problem).collect(),
-    };
-    // Plain data with text keys: writing it to memory cannot fail.
-    let mut text = serde_json::to_string_pretty(&document).unwrap_or_default();
-    text.push('\n');
-    text
-}
-
-fn edition(e: super::words::Edition) -> EditionDocument {
-    EditionDocument { key: e.key, cite: e.cite, standing: e.standing }
-}
-
-fn problem(p: &Problem) -> ProblemDocument<'_> {
-    ProblemDocument { severity: p.severity.word(), path: &p.path, found: &p.found, need: &p.need }
-}
-
-fn workloads(account: &Account, with_comparison: bool) -> Vec<WorkloadDocument<'_>> {
-    let Some(program) = &account.program else { return Vec::new() };
-    let pairs = program.workloads.iter().zip(&account.workloads).enumerate();
-    pairs
-        .map(|(i, (work, accounts))| WorkloadDocument {
-            name: &work.name,
-            work: runs(work),
-            present: work.routes.get(work.present).map_or("", |r| r.name.as_str()),
-            routes: work
-                .routes
-                .iter()
-                .zip(&accounts.routes)
-                .map(|(route, account)| RouteDocument {
-                    name: &route.name,
-                    accounted: account.is_some(),
-                    account: account.as_ref().map(|a| route_account(route, &program.site, a)),
-                })
-                .collect(),
-            comparison: with_comparison.then(|| compare(account, i).map(|c| ComparisonDocument::of(work, c))),
-        })
-        .collect()
-}
-
-fn runs(work: &WorkloadProgram) -> Option<WorkDocument> {
-    let route = work.routes.first()?;
-    let runs = route.work.runs(Draw(&route.central())).ok()?;
-    Some(WorkDocument {
-        results_per_year: runs.results,
-        extractions_per_year: runs.extractions,
-        batches_per_year: runs.batches,
+    Json::document(|json| {
+        json.put("thimbleworth_result", RESULT_VERSION);
+        json.put("program", PROGRAM);
+        let digest = plan.map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p))));
+        json.put("plan_digest", digest.as_deref());
+        json.put("title", plan.map(|p| p.title.as_str()));
+        json.put("site", plan.map(|p| p.site.name.as_str()));
+        json.put("rules", plan.and_then(|p| p.site.rules.as_deref()));
+        json.put("as_of", plan.and_then(|p| p.site.as_of.as_deref()));
+        json.list("data_editions", |json| {
+            for edition in program.map(editions).unwrap_or_default() {
+                json.row(|json| {
+                    json.put("key", &edition.key);
+                    json.put("cite", &edition.cite);
+                    json.put("standing", edition.standing);
+                });
+            }
+        });
+        json.list("workloads", |json| {
+            let Some(program) = program else { return };
+            for (i, work) in program.workloads.iter().enumerate() {
+                json.row(|json| workload(json, account, &program.site, work, i, with_comparison));
+            }
+        });
+        waste::site(json, account);
+        json.list("problems", |json| {
+            for problem in &account.problems {
+                json.row(|json| {
+                    json.put("severity", problem.severity.word());
+                    json.put("path", &problem.path);
+                    json.put("found", &problem.found);
+                    json.put("need", &problem.need);
+                });
+            }
+        });
     })
 }
 
-fn route_account<'a>(
-    route: &'a RouteProgram,
+fn workload(
+    json: &mut Json,
+    account: &Account,
     site: &SiteUse,
-    account: &'a RouteAccount,
-) -> RouteAccountDocument<'a> {
-    let refusal = |r: &'a crate::account::Refusal| RefusalDocument { metrics: r.metrics, reason: &r.reason };
-    let moved = account.trace.postings.iter().filter(|p| p.kg != 0.0);
-    RouteAccountDocument {
-        kg_product_per_year: account.product_kg,
-        figures: FigureRow::all(account),
-        refused: account.refusals.iter().map(refusal).collect(),
-        hazard: HazardDocument::of(&account.hazard),
-        waste_codes: waste::streams(Pouring { route, account }, site),
-        assumptions: route.assumptions.iter().map(AssumptionDocument::of).collect(),
-        cautions: account.cautions.iter().map(|c| CautionDocument::of(c)).collect(),
-        closure: account.closure,
-        postings: moved.map(|p| PostingDocument::of(route, site, p)).collect(),
-        utilities: account
-            .trace
-            .spendings
-            .iter()
-            .filter(|s| s.amount_si != 0.0)
-            .map(|s| SpendingDocument::of(route, s))
-            .collect(),
-        energy: EnergyDocument::of(route, account),
-        inputs: route.inputs.iter().map(InputDocument::of).collect(),
+    work: &WorkloadProgram,
+    index: usize,
+    with_comparison: bool,
+) {
+    json.put("name", &work.name);
+    match work.routes.first().and_then(|route| route.work.runs(Draw(&route.central())).ok()) {
+        Some(runs) => json.object("work", |json| {
+            json.put("results_per_year", runs.results);
+            json.put("extractions_per_year", runs.extractions);
+            json.put("batches_per_year", runs.batches);
+        }),
+        None => json.put("work", Value::Null),
     }
+    json.put("present", work.routes.get(work.present).map_or("", |r| r.name.as_str()));
+    json.list("routes", |json| {
+        let Some(accounts) = account.workloads.get(index) else { return };
+        for (route, account) in work.routes.iter().zip(&accounts.routes) {
+            json.row(|json| {
+                json.put("name", &route.name);
+                json.put("accounted", account.is_some());
+                if let Some(account) = account {
+                    route_account(json, route, site, account);
+                }
+            });
+        }
+    });
+    if with_comparison {
+        match compare(account, index) {
+            Some(comparison) => json.object("comparison", |json| figure::comparison(json, work, &comparison)),
+            None => json.put("comparison", Value::Null),
+        }
+    }
+}
+
+fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account: &RouteAccount) {
+    json.put("kg_product_per_year", account.product_kg);
+    json.list("figures", |json| {
+        for (of, value_si) in figures(account) {
+            json.row(|json| figure(json, account, of, value_si));
+        }
+    });
+    json.list("refused", |json| {
+        for refusal in &account.refusals {
+            json.row(|json| {
+                json.put("metrics", refusal.metrics);
+                json.put("reason", &refusal.reason);
+            });
+        }
+    });
+    json.object("hazard", |json| hazard::hazard(json, &account.hazard));
+    json.list("waste_codes", |json| waste::streams(json, Pouring { route, account }, site));
+    json.list("assumptions", |json| {
+        for assumption in &route.assumptions {
+            json.row(|json| posting::assumption(json, assumption));
+        }
+    });
+    json.list("cautions", |json| {
+        for caution in &account.cautions {
+            json.row(|json| {
+                json.put("key", caution.key);
+                json.put("text", caution.text);
+                json.put("source", caution.source.cite);
+            });
+        }
+    });
+    json.put("closure", account.closure);
+    json.list("postings", |json| {
+        for moved in account.trace.postings.iter().filter(|p| p.kg != 0.0) {
+            json.row(|json| posting::posting(json, route, site, moved));
+        }
+    });
+    json.list("utilities", |json| {
+        for spent in account.trace.spendings.iter().filter(|s| s.amount_si != 0.0) {
+            json.row(|json| posting::spending(json, route, spent));
+        }
+    });
+    json.object("energy", |json| energy::energy(json, route, account));
+    inputs(json, &mut route.inputs.iter());
 }
 
 #[cfg(test)]
@@ -254,9 +206,9 @@ mod tests {
     use super::*;
     use crate::account::account_text;
     use crate::example::EXAMPLES;
-    use serde_json::Value;
+    use serde_json::Value as Read;
 
-    fn read(text: &str, compared: bool) -> Value {
+    fn read(text: &str, compared: bool) -> Read {
         serde_json::from_str(&result_json(&account_text(text), compared)).unwrap()
     }
 
@@ -271,11 +223,11 @@ mod tests {
                     assert_eq!(route["accounted"], true, "{}", example.key);
                     for figure in route["figures"].as_array().unwrap() {
                         let keys: Vec<&String> = figure.as_object().unwrap().keys().collect();
-                        if figure.get("ratio").is_some() {
+                        if ["ratio", "count", "money_once"].iter().any(|k| figure.get(k).is_some()) {
                             assert_eq!(keys.len(), 8, "{keys:?}");
                             continue;
                         }
-                        let unit = ["kg", "l", "kwh", "containers", "kg_score"]
+                        let unit = ["kg", "l", "kwh", "containers", "kg_score", "h", "money", "kg_co2e"]
                             .into_iter()
                             .find(|u| figure.get(format!("{u}_per_year")).is_some())
                             .unwrap();

@@ -54,6 +54,11 @@ pub(super) const fn key_unit(measure: Measure) -> &'static str {
         Measure::Containers => "containers",
         Measure::WeightedMass => "kg_score",
         Measure::Ratio => "ratio",
+        Measure::Time => "h",
+        Measure::Count => "count",
+        Measure::Money(_) => "money",
+        Measure::MoneyOnce(_) => "money_once",
+        Measure::Climate => "kg_co2e",
     }
 }
 

@@ -370,6 +370,9 @@ fn group_of(d: &Difference) -> Group {
         "input" | "metric" => Group::Metric,
         "hazard" => Group::Hazard,
         "energy" => Group::Energy,
+        "time" => Group::Time,
+        "cost" => Group::Cost,
+        "climate" => Group::Climate,
         _ => Group::Mass,
     }
 }

@@ -5,11 +5,12 @@ mod text;
 
 pub use error::TraceError;
 
-use super::result::{FigureRow, InputDocument, step_and_technique};
+use super::json::Json;
+use super::result::{figure, inputs, step_and_technique};
 use super::row::{key_unit, written};
 use super::words::si_unit;
 use crate::account::{
-    Account, Contribution, Figure, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
+    Account, Contribution, Figure, Group, How, Measure, RouteAccount, behind, describe, place_name, rule_of,
 };
 use crate::chance::Input;
 use crate::ledger::{Note, Posting, RuleIx, Spending, StepIx};
@@ -17,8 +18,6 @@ use crate::plan::below;
 use crate::program::{Program, RouteProgram, SiteUse};
 use crate::quantity::show;
 use crate::step::Rule;
-use serde::Serialize;
-use serde::ser::{SerializeMap, Serializer};
 
 /// Which route's figure is meant.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -93,14 +92,17 @@ pub fn trace<'a>(
     };
     let open = |index: usize| opened(route, &program.site, of_route, index);
     let whole = open(index).ok_or(TraceError::NoAccount)?;
-    let parts: Vec<_> = match whole.figure.how {
-        How::Ratio { over, under } => vec![("over", open(over)), ("under", open(under))],
-        How::Containers { of, .. } => vec![("volume", open(of))],
-        How::Times { of, .. } => vec![("of", open(of))],
-        How::Sum(_) | How::Spent(_) => Vec::new(),
+    let priced = matches!(whole.figure.group, Group::Time | Group::Cost | Group::Climate);
+    let names: &[&str] = match whole.figure.how {
+        How::Ratio { .. } => &["over", "under"],
+        How::Containers { .. } => &["volume"],
+        How::Times { .. } | How::Whole(_) => &["of"],
+        How::Lines(_) | How::Sum(_) | How::Spent(_) => &[],
     };
-    let parts: Vec<_> = parts.into_iter().filter_map(|(name, part)| Some((name, part?))).collect();
-    let inputs = inputs_behind(route, std::iter::once(&whole).chain(parts.iter().map(|p| &p.1)));
+    let names = names.iter().copied().chain(std::iter::repeat("part"));
+    let parts = names.zip(whole.figure.how.rests_on().into_iter().map(open));
+    let parts: Vec<_> = parts.filter_map(|(name, part)| Some((name, part?))).collect();
+    let inputs = inputs_behind(route, priced, std::iter::once(&whole).chain(parts.iter().map(|p| &p.1)));
     Ok(TracedFigure { workload: &work.name, route: &route.name, opened: whole, parts, inputs })
 }
 
@@ -204,6 +206,7 @@ fn entry<'a>(
 /// the last that made an entry.
 fn inputs_behind<'a, 'o>(
     route: &'a RouteProgram,
+    priced: bool,
     parts: impl Iterator<Item = &'o Opened<'a>>,
 ) -> Vec<&'a Input>
 where
@@ -223,22 +226,35 @@ where
     let steps = below(&route.path, "steps") + "[";
     let step_of = |i: &Input| i.identity.strip_prefix(&steps)?.split_once(']')?.0.parse::<usize>().ok();
     let later = |i: &Input| step_of(i).is_some_and(|step| step >= after);
-    route.inputs.iter().filter(|i| !later(i)).collect()
+    // Prices, hours and factors of climate stand behind figures of theirs alone.
+    let apart = [below(&route.path, "money"), below(&route.path, "time")];
+    let own = |i: &Input| {
+        ["site.money", "site.hours", "site.climate", "site.electricity", apart[0].as_str(), apart[1].as_str()]
+            .iter()
+            .any(|start| i.identity.starts_with(start))
+    };
+    route.inputs.iter().filter(|i| !later(i) && (priced || !own(i))).collect()
 }
 
 impl TracedFigure<'_> {
     /// The figure as JSON: `workload`, `route`, `figure` (as in the result document), `entries` (largest first), `over`
-    /// and `under` for a ratio, `volume` for containers (each with its own `figure` and `entries`), `inputs`.
+    /// and `under` for a ratio, `volume` for containers, `of` for whole
+    /// things and multiples, `part` for each figure in a sum of lines (each with its own `figure` and `entries`), `inputs`.
     ///
     /// An entry has `what`, `step`, `technique`, `rule`, `equation`, `source`, `standing`, `working` (symbol, `value_si`,
     /// `unit`), for a posting `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year` and `measured`, for a utility what a run takes and
     /// `runs_per_year`, and what it adds to the figure, as in `adds_kg_per_year`.
     #[must_use]
     pub fn json(&self) -> String {
-        // Plain data with text keys: writing it to memory cannot fail.
-        let mut text = serde_json::to_string_pretty(self).unwrap_or_default();
-        text.push('\n');
-        text
+        Json::document(|json| {
+            json.put("workload", self.workload);
+            json.put("route", self.route);
+            self.opened.write(json);
+            for (name, part) in &self.parts {
+                json.object(name, |json| part.write(json));
+            }
+            inputs(json, &mut self.inputs.iter().copied());
+        })
     }
 
     /// The figure in words and numbers for a terminal.
@@ -248,75 +264,52 @@ impl TracedFigure<'_> {
     }
 }
 
-impl Serialize for TracedFigure<'_> {
-    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        let mut map = serializer.serialize_map(None)?;
-        map.serialize_entry("workload", self.workload)?;
-        map.serialize_entry("route", self.route)?;
-        map.serialize_entry("figure", &self.opened.row())?;
-        map.serialize_entry("entries", &self.opened.entries)?;
-        for (name, part) in &self.parts {
-            map.serialize_entry(name, part)?;
-        }
-        let inputs: Vec<_> = self.inputs.iter().map(|i| InputDocument::of(i)).collect();
-        map.serialize_entry("inputs", &inputs)?;
-        map.end()
-    }
-}
-
 impl Opened<'_> {
-    fn row(&self) -> FigureRow<'_> {
-        FigureRow::of(self.account, self.figure, self.value_si)
+    fn write(&self, json: &mut Json) {
+        json.object("figure", |json| figure(json, self.account, self.figure, self.value_si));
+        json.list("entries", |json| {
+            for entry in &self.entries {
+                json.row(|json| entry.write(json));
+            }
+        });
     }
 }
 
-impl Serialize for Opened<'_> {
-    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        let mut map = serializer.serialize_map(None)?;
-        map.serialize_entry("figure", &self.row())?;
-        map.serialize_entry("entries", &self.entries)?;
-        map.end()
-    }
-}
-
-#[derive(Serialize)]
-struct Working {
-    symbol: &'static str,
-    value_si: f64,
-    unit: &'static str,
-}
-
-impl Serialize for Entry<'_> {
-    fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
-        let mut map = serializer.serialize_map(None)?;
-        map.serialize_entry("what", &self.what)?;
-        map.serialize_entry("step", &self.by.0)?;
-        map.serialize_entry("technique", self.by.1)?;
-        map.serialize_entry("rule", &self.rule.map(|r| r.name))?;
-        map.serialize_entry("equation", &self.rule.map(|r| r.equation))?;
-        map.serialize_entry("source", &self.rule.map(|r| r.source.cite))?;
-        map.serialize_entry("standing", &self.rule.map(|r| r.source.standing.words()))?;
-        let working = |n: &&Note| Working { symbol: n.symbol, value_si: n.value_si, unit: si_unit(n.kind) };
-        map.serialize_entry("working", &self.working.iter().map(working).collect::<Vec<_>>())?;
+impl Entry<'_> {
+    fn write(&self, json: &mut Json) {
+        json.put("what", &self.what);
+        json.put("step", self.by.0);
+        json.put("technique", self.by.1);
+        json.put("rule", self.rule.map(|r| r.name));
+        json.put("equation", self.rule.map(|r| r.equation));
+        json.put("source", self.rule.map(|r| r.source.cite));
+        json.put("standing", self.rule.map(|r| r.source.standing.words()));
+        json.list("working", |json| {
+            for note in &self.working {
+                json.row(|json| {
+                    json.put("symbol", note.symbol);
+                    json.put("value_si", note.value_si);
+                    json.put("unit", si_unit(note.kind));
+                });
+            }
+        });
+        let unit = key_unit(self.measure);
         match &self.moved {
             Moved::Mass { posting, from, to, material } => {
-                map.serialize_entry("from", from)?;
-                map.serialize_entry("to", to)?;
-                map.serialize_entry("material", material)?;
-                map.serialize_entry("kg_per_run", &posting.kg)?;
-                map.serialize_entry("runs_per_year", &posting.runs_a_year)?;
-                map.serialize_entry("kg_per_year", &posting.kg_a_year())?;
-                map.serialize_entry("measured", &posting.measured)?;
+                json.put("from", from);
+                json.put("to", to);
+                json.put("material", *material);
+                json.put("kg_per_run", posting.kg);
+                json.put("runs_per_year", posting.runs_a_year);
+                json.put("kg_per_year", posting.kg_a_year());
+                json.put("measured", posting.measured);
             }
             Moved::Utility(spending) => {
-                let a_run = format!("{}_per_run", key_unit(self.measure));
-                map.serialize_entry(&a_run, &written(self.measure, spending.amount_si))?;
-                map.serialize_entry("runs_per_year", &spending.runs_a_year)?;
+                json.put(&format!("{unit}_per_run"), written(self.measure, spending.amount_si));
+                json.put("runs_per_year", spending.runs_a_year);
             }
         }
-        let adds = format!("adds_{}_per_year", key_unit(self.measure));
-        map.serialize_entry(&adds, &written(self.measure, self.adds_si))?;
-        map.end()
+        json.put(&format!("adds_{unit}_per_year"), written(self.measure, self.adds_si));
     }
 }
 
@@ -350,6 +343,8 @@ mod tests {
                                 assert!((of_route.values[of] * factor - value).abs() < 1e-9);
                                 continue;
                             }
+                            // What is behind a line is in the tests of cost.
+                            How::Lines(_) | How::Whole(_) => continue,
                             How::Ratio { .. } => {
                                 assert_eq!(traced.parts.len(), 2);
                                 assert!(

@@ -3,11 +3,11 @@
 use crate::account::Measure;
 use crate::chance::Draw;
 use crate::material::{FlashPoint, Law, Solubility, Substance, catalogue};
+use crate::order::Index;
 use crate::plan::Problem;
 use crate::program::{Program, WorkloadProgram};
-use crate::quantity::{Kind, show, significant};
+use crate::quantity::{Kind, significant};
 use crate::source::{Source, Standing};
-use std::collections::BTreeSet;
 
 /// The SI unit in which an amount of this kind is held.
 pub(super) const fn si_unit(kind: Kind) -> &'static str {
@@ -48,31 +48,33 @@ pub(super) struct Edition {
 
 /// The sources of the figures that the materials on all routes bring along, by key.
 pub(super) fn editions(program: &Program) -> Vec<Edition> {
-    let mut keys = BTreeSet::new();
-    let routes = program.workloads.iter().flat_map(|w| &w.routes);
-    for used in routes.flat_map(|r| &r.materials) {
-        keys.extend(sources(&used.substance));
+    let mut keys = Index::default();
+    for work in &program.workloads {
+        for route in &work.routes {
+            for used in &route.materials {
+                sources(&used.substance, &mut keys);
+            }
+        }
     }
-    let edition = |key: String| match catalogue().source(&key) {
-        Some(source) => Edition { cite: source.cite.to_owned(), standing: source.standing.words(), key },
-        // The plan's own words stand for themselves.
-        None => Edition { cite: key.clone(), standing: Standing::Site.words(), key },
-    };
-    keys.into_iter().map(edition).collect()
+    let mut out = Vec::with_capacity(keys.len());
+    for (key, _) in keys.iter().filter(|(key, _)| !key.is_empty()) {
+        let (cite, standing) = match catalogue().source(key) {
+            Some(source) => (source.cite, source.standing),
+            // The plan's own words stand for themselves.
+            None => (key, Standing::Site),
+        };
+        out.push(Edition { key: key.to_owned(), cite: cite.to_owned(), standing: standing.words() });
+    }
+    out
 }
 
 /// The sources behind what the accounts ask of a material: density, hazards, and what scores and lists rest on.
-fn sources(s: &Substance) -> BTreeSet<String> {
-    let mut out = BTreeSet::new();
-    match &s.density {
-        Law::NotKnown => {}
-        Law::Constant(figure) => {
-            out.insert(figure.source.to_string());
-        }
-        Law::Equation(equation) => {
-            out.insert(equation.source.to_string());
-        }
-    }
+fn sources<'s>(s: &'s Substance, keys: &mut Index<'s>) {
+    let density = match &s.density {
+        Law::NotKnown => "",
+        Law::Constant(figure) => &figure.source,
+        Law::Equation(equation) => &equation.source,
+    };
     let flash = match &s.flash_point_k {
         FlashPoint::Known(figure) => Some(figure),
         FlashPoint::None | FlashPoint::NotKnown => None,
@@ -89,21 +91,17 @@ fn sources(s: &Substance) -> BTreeSet<String> {
         s.unit_mass_kg.as_ref(),
         s.water_capacity_kg_kg.as_ref(),
     ];
-    out.extend(figures.into_iter().flatten().map(|f| f.source.to_string()));
-    out.extend([s.hazard.source.to_string(), s.rcra.source.to_string()]);
-    out.remove("");
-    out
+    for figure in figures.into_iter().flatten() {
+        keys.put(&*figure.source, 0);
+    }
+    for source in [density, &s.hazard.source, &s.rcra.source] {
+        keys.put(source, 0);
+    }
 }
 
 /// An amount for people: four significant digits and a unit that suits its size.
 pub(super) fn amount(value_si: f64, measure: Measure) -> String {
-    match measure {
-        Measure::Mass => show(value_si, Kind::Mass),
-        Measure::Volume => show(value_si, Kind::Volume),
-        Measure::Energy => show(value_si, Kind::Energy),
-        Measure::WeightedMass => format!("{}·score", show(value_si, Kind::Mass)),
-        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
-    }
+    measure.shown(value_si)
 }
 
 /// How much work there is, in words.

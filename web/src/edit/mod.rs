@@ -5,11 +5,12 @@ mod rename;
 mod set;
 
 pub use list::name_of;
-pub use path::{dom_id, keys};
+pub use path::dom_id;
 pub use rename::refusal;
 pub use set::{new_step, number, step_field, text};
 
 use crate::document::Document;
+use thimbleworth::letter;
 use thimbleworth::plan::Field;
 
 /// One entry of one of the plan's lists.
@@ -189,8 +190,8 @@ impl Edit {
 pub fn lowered(label: &str) -> String {
     let mut letters = label.chars();
     match (letters.next(), letters.next()) {
-        (Some(first), Some(second)) if second.is_lowercase() || second == ' ' => {
-            format!("{}{}", first.to_lowercase(), &label[first.len_utf8()..])
+        (Some(first), Some(second)) if letter::capital(second) != second || second == ' ' => {
+            format!("{}{}", letter::small(first), &label[first.len_utf8()..])
         }
         _ => label.to_owned(),
     }

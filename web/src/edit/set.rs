@@ -1,6 +1,5 @@
 //! Setting one field of a plan by its path.
-use super::path::keys;
-use thimbleworth::plan::{Electricity, Field, Plan, Room, Route, Site, Step, Workload};
+use thimbleworth::plan::{Electricity, Field, Plan, Room, Route, Site, Step, Workload, is_number, keys};
 use thimbleworth::step::{TECHNIQUES, technique};
 
 /// Sets the field at `path`, or clears it; returns whether there is such a field.
@@ -17,10 +16,7 @@ pub fn number(text: &str) -> Option<Field> {
     if text.is_empty() {
         return None;
     }
-    Some(match serde_json::from_str::<serde_json::Number>(text) {
-        Ok(_) => Field::Number(text.to_owned()),
-        Err(_) => Field::Text(text.to_owned()),
-    })
+    Some(if is_number(text) { Field::Number(text.to_owned()) } else { Field::Text(text.to_owned()) })
 }
 
 /// A text; nothing where it is empty.

@@ -1,5 +1,6 @@
 //! The buttons of an entry in a list: copy, move, take away. All of them work by key as well as by pointer.
 use crate::edit::{Change, Edit, Item, dom_id};
+use thimbleworth::letter::small_text;
 use yew::prelude::*;
 
 /// Buttons for `item` at `path`, which is called `name` and has `count` entries in its list.
@@ -12,7 +13,7 @@ pub(crate) fn tools(item: Item, path: &str, name: &str, count: usize, edit: &Cal
             }
         });
         html! {
-            <button type="button" class="small" id={dom_id(&format!("{path}-{}", words.replace(' ', "-").to_lowercase()))} aria-disabled={idle.then_some("true")} {onclick}
+            <button type="button" class="small" id={dom_id(&format!("{path}-{}", small_text(words).replace(' ', "-")))} aria-disabled={idle.then_some("true")} {onclick}
                 aria-label={format!("{words}: {name}")}>{ words }</button>
         }
     };

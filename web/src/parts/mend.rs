@@ -1,11 +1,11 @@
 //! What is to be mended: a line that always stands at the top, and the list behind it, with a link to every field.
 use super::ByRc;
 use super::field::value_of;
-use crate::edit::{dom_id, keys};
+use crate::edit::dom_id;
 use crate::form::sentence;
 use crate::reckon::{Reckoned, things};
 use crate::state::Action;
-use thimbleworth::plan::{Plan, Severity};
+use thimbleworth::plan::{Plan, Severity, keys};
 use thimbleworth::step::technique;
 use yew::prelude::*;
 

@@ -137,7 +137,11 @@ fn parts(opened: &Opened, account: &RouteAccount, figure: &Figure) -> Html {
         How::Times { of, factor } => {
             (vec![of], format!("{} times this figure:", thimbleworth::quantity::significant(factor, 4)))
         }
-        How::Sum(_) | How::Spent(_) => return Html::default(),
+        How::Whole(of) => (vec![of], "This, rounded up:".to_owned()),
+        How::Lines(ref lines) if !figure.how.rests_on().is_empty() => {
+            (figure.how.rests_on(), format!("A sum of {} lines, with:", lines.len()))
+        }
+        How::Lines(_) | How::Sum(_) | How::Spent(_) => return Html::default(),
     };
     html! {
         <>

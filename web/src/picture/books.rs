@@ -4,6 +4,7 @@ use super::Hatch;
 use super::letter::written;
 use thimbleworth::account::RouteAccount;
 use thimbleworth::ledger::{Material, Place};
+use thimbleworth::letter::sentence;
 use thimbleworth::program::{RouteProgram, SiteUse};
 
 /// For what amounts are given.
@@ -106,8 +107,7 @@ pub(super) fn fills(ends: &[End]) -> String {
     .filter_map(|(end, words)| ends.contains(&end).then_some(words))
     .collect();
     let text = said.join("; ");
-    let mut letters = text.chars();
-    letters.next().map_or_else(String::new, |first| format!("{}{}.", first.to_uppercase(), letters.as_str()))
+    if text.is_empty() { text } else { sentence(&text) + "." }
 }
 
 /// The first few of a list in words; a sentence with more of them would not be read.

@@ -4,6 +4,7 @@
 use thimbleworth::co2::{
     CRITICAL_TEMPERATURE_K, StateError, TRIPLE_TEMPERATURE_K, pressure_pa, saturated_densities_kg_m3,
 };
+use thimbleworth::order;
 
 /// What the map shows; °C and bar.
 #[derive(Clone, Copy, Debug, PartialEq)]
@@ -37,7 +38,7 @@ fn rows(frame: Frame) -> Vec<f64> {
     let leave = LEVELS_KG_M3.iter().map(|density| saturated_at_k(*density) - 273.15);
     let mut rows: Vec<f64> =
         even.chain(leave.filter(|c| *c > frame.low_c)).chain([CRITICAL_TEMPERATURE_K - 273.15]).collect();
-    rows.sort_by(f64::total_cmp);
+    order::sort(&mut rows, &|a, b| a < b);
     rows
 }
 

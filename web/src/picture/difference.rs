@@ -66,7 +66,7 @@ fn amount(value_si: f64, measure: Measure) -> String {
         Measure::WeightedMass => format!("{} kg·score", super::letter::written(value_si, 3)),
         Measure::Volume => show(value_si, Kind::Volume),
         Measure::Energy => show(value_si, Kind::Energy),
-        Measure::Containers | Measure::Ratio => show(value_si, Kind::Number),
+        other => other.shown(value_si),
     };
     text.replace(' ', "\u{a0}").replace('-', "−")
 }

@@ -9,6 +9,7 @@ use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
 use super::{Drawing, Head, Picture, Size, Table};
 use thimbleworth::account::Account;
 use thimbleworth::ledger::{Material, Place};
+use thimbleworth::order;
 
 /// What flows; masses in kg.
 pub(super) struct Flow {
@@ -44,11 +45,10 @@ pub fn flow(key: &str, account: &Account, workload: usize, route: usize, per: Pe
             None => came.push((p.material, fed, drawn)),
         }
     }
-    came.sort_by(|a, b| (b.1 + b.2).total_cmp(&(a.1 + a.2)).then(a.0.cmp(&b.0)));
+    // The largest first, then in the order of the book.
+    order::sort(&mut came, &|a, b| (b.1 + b.2, a.0) < (a.1 + a.2, b.0));
     let mut places = into_places(book);
-    places.sort_by(|a, b| {
-        (a.0 == Place::STORE).cmp(&(b.0 == Place::STORE)).then(b.1.total_cmp(&a.1)).then(a.0.cmp(&b.0))
-    });
+    order::sort(&mut places, &|a, b| (a.0 == Place::STORE, b.1, a.0) < (b.0 == Place::STORE, a.1, b.0));
     let mut links = Vec::new();
     for (s, (material, ..)) in came.iter().enumerate() {
         for (e, (place, _)) in places.iter().enumerate() {
@@ -281,7 +281,7 @@ fn draw(flow: &Flow, total: f64, unit: (&'static str, f64), size: Size) -> Drawi
     }
     let mut bands = bands(flow, &left, &right, scale);
     // The thin ones on top.
-    bands.sort_by(|a, b| b.width.total_cmp(&a.width));
+    order::sort(&mut bands, &|a, b| a.width > b.width);
     for band in bands {
         let kind = flow.ends.get(band.end).map_or(End::Other, |e| e.1);
         shapes.push(band_shape(&band, kind, x_left + STOP, x_right));

@@ -7,6 +7,7 @@ use super::shape::{Anchor, Shape, line, text};
 use super::{Drawing, Head, Picture, Size, Table};
 use thimbleworth::account::Account;
 use thimbleworth::ledger::Place;
+use thimbleworth::order;
 
 /// The masses of some routes, all over the same places.
 pub(super) struct Masses {
@@ -41,7 +42,7 @@ pub fn mass_by_place(key: &str, account: &Account, workload: usize, per: Per) ->
         }
         routes.push((&route.name, here));
     }
-    places.sort_by(|a, b| b.1.total_cmp(&a.1).then(a.0.cmp(&b.0)));
+    order::sort(&mut places, &|a, b| (b.1, a.0) < (a.1, b.0));
     let at = |here: &[(Place, f64)], place| here.iter().find(|(p, _)| *p == place).map_or(0.0, |(_, kg)| *kg);
     let masses = Masses {
         routes: routes

@@ -2,8 +2,8 @@
 use super::{Section, View, When};
 use crate::form::{cited, sentence, word};
 use crate::reckon::Book;
-use std::collections::BTreeSet;
 use thimbleworth::material::catalogue;
+use thimbleworth::order::Index;
 use thimbleworth::plan::Severity;
 use thimbleworth::step::Caution;
 use yew::prelude::*;
@@ -83,27 +83,29 @@ fn assumptions(book: &Book, w: usize) -> Html {
 
 /// Every citation that the figures rest on: formulas, rules, figures of materials.
 fn sources(book: &Book) -> Html {
-    let mut cites: BTreeSet<String> = BTreeSet::new();
+    let mut cites = Index::default();
+    let mut cite = |text: String| {
+        cites.put(text, 0);
+    };
     for (w, r) in each_route(book) {
         let Some((route, account)) = book.route(w, r) else { continue };
-        cites.extend(account.figures.iter().map(|f| cited(&f.source)));
-        for step in &route.steps {
-            cites.extend(step.technique.rules.iter().map(|rule| cited(&rule.source)));
-            cites.extend(step.technique.params.iter().map(|p| cited(&p.source)));
+        let rules = route.steps.iter().flat_map(|s| s.technique.rules.iter().map(|rule| &rule.source));
+        let params = route.steps.iter().flat_map(|s| s.technique.params.iter().map(|p| &p.source));
+        let assumed = route.assumptions.iter().map(|a| &a.source);
+        for source in account.figures.iter().map(|f| &f.source).chain(rules).chain(params).chain(assumed) {
+            cite(cited(source));
         }
-        cites.extend(route.assumptions.iter().map(|a| cited(&a.source)));
         for input in route.inputs.iter().filter(|i| i.identity.starts_with("material/")) {
-            let cite = catalogue().source(&input.basis).map_or(input.basis.clone(), |s| s.cite.to_owned());
-            cites.insert(cite);
+            cite(catalogue().source(&input.basis).map_or(input.basis.clone(), |s| s.cite.to_owned()));
         }
         for material in &account.hazard.materials {
             if let Some(source) = catalogue().source(&material.source) {
-                cites.insert(source.cite.to_owned());
+                cite(source.cite.to_owned());
             }
         }
     }
     if cites.is_empty() {
         return html! { <p class="empty">{ "No figure stands yet." }</p> };
     }
-    html! { <ul class="sources">{ for cites.into_iter().filter(|c| !c.is_empty()).map(|c| html! { <li>{ c }</li> }) }</ul> }
+    html! { <ul class="sources">{ for cites.iter().filter(|(c, _)| !c.is_empty()).map(|(c, _)| html! { <li>{ c.to_owned() }</li> }) }</ul> }
 }

@@ -1,9 +1,10 @@
 //! Section "CO₂": drawn, returned, made up, vented.
-use super::places::{lines, sentence_case};
+use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
 use crate::parts::Sheet;
 use thimbleworth::account::Group;
+use thimbleworth::letter::sentence;
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -21,7 +22,7 @@ fn draw(view: &View) -> Html {
             return html! { <p class="empty">{ "No route that can be accounted works with carbon dioxide." }</p> };
         }
         for line in &mut lines {
-            line.label = sentence_case(&line.label);
+            line.label = sentence(&line.label);
         }
         html! {
             <>

@@ -1,11 +1,12 @@
 //! Section "The comparison": the figures that decide, better and worse, doubts, and what makes the difference.
-use super::places::{lines, sentence_case};
+use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
 use crate::parts::Sheet;
 use crate::show::Scale;
 use thimbleworth::account::{Figure, Group};
 use thimbleworth::compare::{HEADLINES, RouteComparison};
+use thimbleworth::letter::sentence;
 use yew::prelude::*;
 
 /// Up to so many routes each difference is drawn; beyond, the table alone can be read.
@@ -26,7 +27,7 @@ fn draw(view: &View) -> Html {
             return html! { <p class="empty">{ "Nothing can be compared yet." }</p> };
         }
         for line in &mut lines {
-            line.label = sentence_case(&line.label);
+            line.label = sentence(&line.label);
         }
         let routes = view.book().works.get(w).map_or(0, |work| work.routes.len());
         let drawn =
@@ -59,7 +60,9 @@ fn decides(figure: &Figure) -> bool {
         Group::Mass => figure.id == "mass.in" || figure.id == "mass.bought" || figure.id == "air.solvents",
         Group::Waste => !figure.id.ends_with(".volume"),
         Group::CarbonDioxide => figure.id == "co2.vented" || figure.id == "co2.make_up",
-        Group::Metric | Group::Hazard | Group::Energy => true,
+        Group::Metric | Group::Hazard | Group::Energy | Group::Climate => true,
+        Group::Time => figure.id == "time.attended" || figure.id == "time.instruments",
+        Group::Cost => figure.id == "cost.year" || figure.id == "cost.known" || figure.id == "cost.once",
     }
 }
 
@@ -77,7 +80,7 @@ fn one(name: &str, beside: &RouteComparison, drawn: Html) -> Html {
         .map(|d| {
             let scale = Scale::of(d.measure, d.causes.iter().map(|c| c.change));
             html! {
-                <li>{ sentence_case(&d.title) }
+                <li>{ sentence(&d.title) }
                     <ul>
                         { for d.causes.iter().map(|c| html! {
                             <li>{ format!("{}{} {} a year: {}", if c.change > 0.0 { "+" } else { "" }, scale.write(c.change), scale.unit, c.what) }</li>

@@ -1,10 +1,11 @@
 //! Section "Hazard": hazard-weighted mass, statements in words, CHEM21 numbers with their reasons, the Eco-Scale line by
 //! line, the NEMI criteria as yes or no. No published pictogram is drawn.
-use super::places::{lines, sentence_case};
+use super::places::lines;
 use super::{Section, View, When};
 use crate::parts::Sheet;
 use thimbleworth::account::{Group, HazardAccount, MaterialHazard};
 use thimbleworth::hazard::chem21::{Assessment, Score};
+use thimbleworth::letter::sentence;
 use thimbleworth::material::{catalogue, statement_text};
 use yew::prelude::*;
 
@@ -20,7 +21,7 @@ fn draw(view: &View) -> Html {
     view.works(|w| {
         let mut lines = lines(view.book(), w, |f| f.group == Group::Hazard);
         for line in &mut lines {
-            line.label = sentence_case(&line.label);
+            line.label = sentence(&line.label);
         }
         let routes = view.book().works.get(w).map_or(0, |work| work.routes.len());
         let accounts = || (0..routes).filter_map(|r| Some((r, &view.book().route(w, r)?.1.hazard)));
@@ -131,7 +132,7 @@ fn scores(name: &str, hazard: &HazardAccount) -> Html {
             <p>{ "NEMI criteria:" }</p>
             <ul>
                 { for hazard.nemi.iter().map(|criterion| html! {
-                    <li>{ format!("{}: ", criterion.rule) }<b>{ criterion.met.word() }</b>{ format!(". {}", sentence_case(&criterion.why)) }</li>
+                    <li>{ format!("{}: ", criterion.rule) }<b>{ criterion.met.word() }</b>{ format!(". {}", sentence(&criterion.why)) }</li>
                 }) }
             </ul>
             if !hazard.not_scored.is_empty() {

@@ -5,6 +5,8 @@ use crate::parts::{Line, Sheet};
 use crate::reckon::Book;
 use thimbleworth::account::{Figure, How, Measure};
 use thimbleworth::ledger::Place;
+use thimbleworth::letter;
+use thimbleworth::order;
 use thimbleworth::quantity::significant;
 use yew::prelude::*;
 
@@ -99,17 +101,13 @@ fn going(book: &Book, w: usize) -> Vec<Line> {
         let lines = &mut groups[group].1;
         if !lines.iter().any(|line| line.id == figure.id) {
             let part = !lines.is_empty();
-            let label = if part { figure.title.clone() } else { sentence_case(&figure.title) };
+            let label = if part { figure.title.clone() } else { letter::sentence(&figure.title) };
             lines.push(Line { label, id: figure.id.clone(), measure: Measure::Mass, part });
         }
     }
-    groups.sort_by_key(|(place, _)| (place.stream_index().is_none(), *place));
+    let rank = |place: Place| (place.stream_index().is_none(), place);
+    order::sort(&mut groups, &|a, b| rank(a.0) < rank(b.0));
     groups.into_iter().flat_map(|(_, lines)| lines).collect()
-}
-
-pub(super) fn sentence_case(text: &str) -> String {
-    let mut letters = text.chars();
-    letters.next().map_or(String::new(), |first| format!("{}{}", first.to_uppercase(), letters.as_str()))
 }
 
 fn closure(book: &Book, w: usize) -> Html {

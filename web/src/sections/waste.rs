@@ -1,8 +1,10 @@
 //! Section "Waste": mass, volume and containers of every stream.
-use super::places::{lines, sentence_case};
+use super::places::lines;
 use super::{Section, View, When};
-use crate::parts::Sheet;
+use crate::parts::{Line, Sheet};
 use thimbleworth::account::Group;
+use thimbleworth::letter::sentence;
+use thimbleworth::order;
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -21,11 +23,12 @@ fn draw(view: &View) -> Html {
                 if lines.is_empty() {
                     return html! { <p class="empty">{ "No waste can be accounted yet." }</p> };
                 }
-                lines.sort_by_key(|line| line.id.rsplit_once('.').map_or(String::new(), |(stream, _)| stream.to_owned()));
-                // The total of all streams stands first.
-                lines.sort_by_key(|line| !line.id.starts_with("waste.total."));
+                // The total of all streams stands first, then stream by stream.
+                let rank = |line: &Line| !line.id.starts_with("waste.total.");
+                let stream = |line: &Line| line.id.rfind('.').unwrap_or(0);
+                order::sort(&mut lines, &|a, b| (rank(a), &a.id[..stream(a)]) < (rank(b), &b.id[..stream(b)]));
                 for line in &mut lines {
-                    line.label = sentence_case(&line.label);
+                    line.label = sentence(&line.label);
                 }
                 Sheet {
                     id: format!("waste-{w}"),

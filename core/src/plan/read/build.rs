@@ -51,6 +51,12 @@ fn field(node: &Node) -> Field {
     }
 }
 
+/// The fields of an object that is kept as it is written.
+fn fields(node: &Node, key: &str) -> Vec<(String, Field)> {
+    let inner = get(node, key).map(entries).unwrap_or_default();
+    inner.iter().map(|(key, value)| (key.clone(), field(value))).collect()
+}
+
 fn rows(node: &Node) -> Vec<(String, String)> {
     entries(node).iter().map(|(name, value)| (name.clone(), plain(value).unwrap_or_default())).collect()
 }
@@ -96,6 +102,8 @@ fn site(node: &Node) -> Site {
         electricity: get(node, "electricity").map(|node| Electricity {
             climate: text(node, "climate"),
             price: text(node, "price"),
+            year: get(node, "year").map(field),
+            boundary: text(node, "boundary"),
             source: text(node, "source"),
         }),
         room: get(node, "room").map(|node| Room {
@@ -110,6 +118,9 @@ fn site(node: &Node) -> Site {
         pick_up_every: text(node, "pick_up_every"),
         far_receiver: yes_no(node, "far_receiver"),
         deviations: text(node, "deviations"),
+        money: fields(node, "money"),
+        hours: fields(node, "hours"),
+        climate: fields(node, "climate"),
     }
 }
 
@@ -173,9 +184,12 @@ fn route(node: &Node) -> Route {
         feed: get(node, "feed").map(rows),
         recovery: text(node, "recovery"),
         equivalence: text(node, "equivalence"),
+        permission: text(node, "permission"),
         ph: text(node, "ph"),
         steps: list(node, "steps", step),
         ends: get(node, "ends").map(rows).unwrap_or_default(),
+        time: fields(node, "time"),
+        money: fields(node, "money"),
     }
 }
 

@@ -1,13 +1,12 @@
 //! The check of a tree against the tables of keys: it walks everything and stops at nothing.
 
-use std::collections::BTreeMap;
-
 use super::super::PLAN_VERSION;
 use super::super::keys::{Key, Object, PLAN, Shape, VERSION_KEY};
 use super::super::nearest::nearest;
 use super::super::path::Path;
 use super::super::tree::Node;
 use super::Problems;
+use crate::order::Index;
 
 /// Longer texts are cut where a sentence quotes them.
 const LONGEST_QUOTE: usize = 40;
@@ -55,7 +54,7 @@ fn object(node: &Node, table: &Object, path: &Path<'_>, problems: &mut Problems)
         return;
     };
     let seen = repeated(entries, path, problems);
-    for key in table.keys.iter().filter(|key| key.required && !seen.contains_key(key.name)) {
+    for key in table.keys.iter().filter(|key| key.required && seen.get(key.name).is_none()) {
         // That one has been said, in words of its own.
         if key.name != VERSION_KEY {
             problems.error(&path.key(key.name), format!("`{}` is missing", key.name), wanted(key));
@@ -76,16 +75,12 @@ fn object(node: &Node, table: &Object, path: &Path<'_>, problems: &mut Problems)
 }
 
 /// How often each key is written; more than once is an error.
-fn repeated<'n>(
-    entries: &'n [(String, Node)],
-    path: &Path<'_>,
-    problems: &mut Problems,
-) -> BTreeMap<&'n str, usize> {
-    let mut seen = BTreeMap::new();
+fn repeated<'n>(entries: &'n [(String, Node)], path: &Path<'_>, problems: &mut Problems) -> Index<'n> {
+    let mut seen = Index::default();
     for (name, _) in entries {
-        let times = seen.entry(name.as_str()).or_insert(0_usize);
-        *times += 1;
-        if *times == 2 {
+        let times = seen.get(name).unwrap_or(0) + 1;
+        seen.put(name.as_str(), times);
+        if times == 2 {
             problems.error(
                 &path.key(name),
                 format!("the key {} is written more than once", named(name)),

@@ -1,12 +1,11 @@
 //! The names by which parts of a plan refer to one another: each its own, each reference to one that is there.
 
-use std::collections::BTreeMap;
-
 use super::super::document::Plan;
 use super::super::nearest::nearest;
 use super::super::path::Path;
 use super::Problems;
 use super::check::quote;
+use crate::order::Index;
 
 /// At most this many names are listed in a sentence.
 const MOST_NAMES: usize = 6;
@@ -48,7 +47,7 @@ pub(super) fn check(plan: &Plan, problems: &mut Problems) {
 }
 
 fn own<'a>(names: impl Iterator<Item = &'a str>, what: &str, list: &Path<'_>, problems: &mut Problems) {
-    let mut first = BTreeMap::new();
+    let mut first = Index::default();
     for (position, name) in names.enumerate() {
         // An empty name has been reported.
         if name.trim().is_empty() {
@@ -56,9 +55,9 @@ fn own<'a>(names: impl Iterator<Item = &'a str>, what: &str, list: &Path<'_>, pr
         }
         match first.get(name) {
             None => {
-                first.insert(name, position);
+                first.put(name, position);
             }
-            Some(&earlier) => {
+            Some(earlier) => {
                 let found = format!("{} is already the name of {}", quote(name), list.index(earlier));
                 let need = format!(
                     "a name of its own for each {what}, because other parts of the plan refer to it by name"

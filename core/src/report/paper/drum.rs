@@ -3,6 +3,7 @@
 use super::{Paper, PaperTable, Sheet, mass, percent, volume};
 use crate::account::StreamDesk;
 use crate::code::Flash;
+use crate::order;
 use crate::quantity::{Kind, show, significant};
 
 pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
@@ -51,7 +52,7 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>) -> PaperTable {
     put("codes", s.codes().join(" "), String::new());
     put("open until tested", s.open().join(" "), String::new());
     let mut charges: Vec<&str> = s.contents.charges.iter().map(|c| c.what.as_str()).collect();
-    charges.sort_unstable();
+    order::sort(&mut charges, &|a, b| a < b);
     charges.dedup();
     put("solvents come from", charges.join("; "), String::new());
     let size = sheet.stream(s).and_then(|u| Some((u.container_m3?, u.fill)));

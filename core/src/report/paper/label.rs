@@ -4,6 +4,7 @@ use super::{Paper, PaperTable, Sheet, mass, rests_on, volume};
 use crate::account::StreamDesk;
 use crate::code::Rules;
 use crate::hazard::label;
+use crate::order;
 use crate::source::{Source, Standing};
 
 /// Below this share a substance does not stand on a label; our own.
@@ -44,7 +45,7 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>, us: bool) -> PaperTable {
     };
     let kg = s.contents.mass_kg();
     let mut parts: Vec<_> = s.contents.parts.iter().filter(|p| p.kg / kg >= NAMED).collect();
-    parts.sort_by(|a, b| b.kg.total_cmp(&a.kg));
+    order::sort(&mut parts, &|a, b| a.kg > b.kg);
     let contents: Vec<String> =
         parts.iter().map(|p| [&*p.substance.name, " ", &super::percent(p.kg / kg)].concat()).collect();
     let plain = s.standing() == crate::account::Standing::NotKnownHazardous;
@@ -56,7 +57,7 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>, us: bool) -> PaperTable {
             parts.iter().flat_map(|p| p.substance.hazard.statements.iter().map(String::as_str)).collect();
         let label = label(&statements);
         let mut codes: Vec<&str> = statements;
-        codes.sort_unstable();
+        order::sort(&mut codes, &|a, b| a < b);
         codes.dedup();
         let pictograms: Vec<&str> = label.pictograms.iter().map(|p| p.code()).collect();
         put("Signal word, pictograms", [label.signal_word.word(), " ", &pictograms.join(" ")].concat());

@@ -1,163 +1,109 @@
 //! The waste desk in the result document.
 
-use crate::account::{Account, Pouring, SiteDesk, StreamDesk, classified, site_desk};
-use crate::code::{CAUTION, Fact, Verdict};
+use super::super::json::{Json, Value};
+use crate::account::{Account, Pouring, StreamDesk, classified, site_desk};
+use crate::code::{CAUTION, Verdict};
 use crate::generator::{MONTH_NAMES, date_of};
 use crate::program::SiteUse;
 use crate::report::words::si_unit;
-use serde::Serialize;
 
-#[derive(Serialize)]
-pub(super) struct StreamDocument {
-    stream: String,
-    standing: &'static str,
-    kg_per_year: f64,
-    codes: Vec<String>,
-    test: Vec<String>,
-    verdicts: Vec<VerdictDocument>,
-}
-
-#[derive(Serialize)]
-struct VerdictDocument {
-    code: String,
-    answer: &'static str,
-    in_force: bool,
-    why: String,
-    figures: Vec<FactDocument>,
-    rule: &'static str,
-    cite: &'static str,
-    standing: &'static str,
-    since: Option<String>,
-    until: Option<String>,
-    change: String,
-}
-
-#[derive(Serialize)]
-struct FactDocument {
-    what: String,
-    value_si: f64,
-    limit_si: Option<f64>,
-    unit: &'static str,
-}
-
-/// The site with the present route of each workload.
-#[derive(Serialize)]
-pub(super) struct SiteDocument {
-    streams: Vec<StreamDocument>,
-    months: Vec<MonthDocument>,
-    headroom: Vec<HeadroomDocument>,
-    pick_ups: Vec<PickUpDocument>,
-    containers_begun: usize,
-    stayed_too_long: usize,
-    days_with_too_much: usize,
-    caution: &'static str,
-}
-
-#[derive(Serialize)]
-struct MonthDocument {
-    month: &'static str,
-    counted_kg: f64,
-    counted_acute_kg: f64,
-    category: Option<&'static str>,
-    storage_days: Option<u16>,
-}
-
-#[derive(Serialize)]
-struct HeadroomDocument {
-    workload: String,
-    month: &'static str,
-    results_planned: f64,
-    kg_each: f64,
-    results_as_vsqg: Option<u64>,
-    results_before_lqg: Option<u64>,
-}
-
-#[derive(Serialize)]
-struct PickUpDocument {
-    date: String,
-    containers: usize,
-    kg: f64,
-}
-
-fn fact(f: &Fact) -> FactDocument {
-    FactDocument { what: f.what.clone(), value_si: f.value_si, limit_si: f.limit_si, unit: si_unit(f.kind) }
-}
-
-fn verdict(v: &Verdict) -> VerdictDocument {
+fn verdict(json: &mut Json, v: &Verdict) {
     let cited = v.rule.citation();
-    VerdictDocument {
-        code: v.code.to_string(),
-        answer: v.answer.words(),
-        in_force: v.in_force,
-        why: v.why.clone(),
-        figures: v.facts.iter().map(fact).collect(),
-        rule: v.rule.title,
-        cite: cited.cite,
-        standing: cited.standing.words(),
-        since: v.rule.from.map(|d| d.to_string()),
-        until: v.rule.until.map(|d| d.to_string()),
-        change: v.change.to_string(),
-    }
+    json.put("code", &v.code.to_string());
+    json.put("answer", v.answer.words());
+    json.put("in_force", v.in_force);
+    json.put("why", &v.why);
+    json.list("figures", |json| {
+        for fact in &v.facts {
+            json.row(|json| {
+                json.put("what", &fact.what);
+                json.put("value_si", fact.value_si);
+                json.put("limit_si", fact.limit_si);
+                json.put("unit", si_unit(fact.kind));
+            });
+        }
+    });
+    json.put("rule", v.rule.title);
+    json.put("cite", cited.cite);
+    json.put("standing", cited.standing.words());
+    json.put("since", v.rule.from.map(|d| d.to_string()).as_deref());
+    json.put("until", v.rule.until.map(|d| d.to_string()).as_deref());
+    json.put("change", &v.change.to_string());
 }
 
-fn stream(s: &StreamDesk<'_>, site: &SiteUse) -> StreamDocument {
-    let text = |codes: Vec<&str>| codes.into_iter().map(str::to_owned).collect();
-    StreamDocument {
-        stream: site.streams.get(s.stream).map_or_else(String::new, |u| u.name.clone()),
-        standing: s.standing().words(),
-        kg_per_year: s.contents.mass_kg(),
-        codes: text(s.codes()),
-        test: text(s.open()),
-        verdicts: s.verdicts.iter().map(verdict).collect(),
+fn stream(json: &mut Json, s: &StreamDesk<'_>, site: &SiteUse) {
+    json.put("stream", site.streams.get(s.stream).map_or("", |u| u.name.as_str()));
+    json.put("standing", s.standing().words());
+    json.put("kg_per_year", s.contents.mass_kg());
+    for (key, codes) in [("codes", s.codes()), ("test", s.open())] {
+        json.list(key, |json| {
+            for code in codes {
+                json.item(code);
+            }
+        });
     }
+    json.list("verdicts", |json| {
+        for v in &s.verdicts {
+            json.row(|json| verdict(json, v));
+        }
+    });
 }
 
 /// What one route by itself brings to each stream.
-pub(super) fn streams(pouring: Pouring<'_>, site: &SiteUse) -> Vec<StreamDocument> {
-    classified(&[pouring], site).iter().map(|s| stream(s, site)).collect()
+pub(super) fn streams(json: &mut Json, pouring: Pouring<'_>, site: &SiteUse) {
+    for s in classified(&[pouring], site) {
+        json.row(|json| stream(json, &s, site));
+    }
 }
 
-/// The whole site; `None` where the plan has no program.
-pub(super) fn site(account: &Account) -> Option<SiteDocument> {
-    let program = account.program.as_ref()?;
-    let desk: SiteDesk<'_> = site_desk(account, &[])?;
-    let name = |w: usize| program.workloads.get(w).map_or_else(String::new, |w| w.name.clone());
+/// The whole site with the present route of each workload, under `waste_desk`; `null` where the plan has no program.
+pub(super) fn site(json: &mut Json, account: &Account) {
+    let (Some(program), Some(desk)) = (account.program.as_ref(), site_desk(account, &[])) else {
+        json.put("waste_desk", Value::Null);
+        return;
+    };
     let month = |m: usize| MONTH_NAMES.get(m).copied().unwrap_or_default();
-    Some(SiteDocument {
-        streams: desk.streams.iter().map(|s| stream(s, &program.site)).collect(),
-        months: desk
-            .made
-            .iter()
-            .enumerate()
-            .map(|(m, made)| MonthDocument {
-                month: month(m),
-                counted_kg: made.kg,
-                counted_acute_kg: made.acute_kg,
-                category: desk.categories.and_then(|c| c.get(m).map(|c| c.word())),
-                storage_days: desk.storage.days.get(m).copied().flatten(),
-            })
-            .collect(),
-        headroom: desk
-            .headroom
-            .iter()
-            .map(|h| HeadroomDocument {
-                workload: name(h.workload),
-                month: month(h.month),
-                results_planned: h.planned,
-                kg_each: h.kg_each,
-                results_as_vsqg: h.as_vsqg,
-                results_before_lqg: h.as_sqg,
-            })
-            .collect(),
-        pick_ups: desk
-            .calendar
-            .pick_ups
-            .iter()
-            .map(|p| PickUpDocument { date: date_of(p.day), containers: p.containers, kg: p.kg })
-            .collect(),
-        containers_begun: desk.calendar.containers.len(),
-        stayed_too_long: desk.calendar.too_long.len(),
-        days_with_too_much: desk.calendar.too_much.len(),
-        caution: CAUTION,
-    })
+    json.object("waste_desk", |json| {
+        json.list("streams", |json| {
+            for s in &desk.streams {
+                json.row(|json| stream(json, s, &program.site));
+            }
+        });
+        json.list("months", |json| {
+            for (m, made) in desk.made.iter().enumerate() {
+                json.row(|json| {
+                    json.put("month", month(m));
+                    json.put("counted_kg", made.kg);
+                    json.put("counted_acute_kg", made.acute_kg);
+                    json.put("category", desk.categories.and_then(|c| c.get(m).map(|c| c.word())));
+                    json.put("storage_days", desk.storage.days.get(m).copied().flatten());
+                });
+            }
+        });
+        json.list("headroom", |json| {
+            for h in &desk.headroom {
+                json.row(|json| {
+                    json.put("workload", program.workloads.get(h.workload).map_or("", |w| w.name.as_str()));
+                    json.put("month", month(h.month));
+                    json.put("results_planned", h.planned);
+                    json.put("kg_each", h.kg_each);
+                    json.put("results_as_vsqg", h.as_vsqg);
+                    json.put("results_before_lqg", h.as_sqg);
+                });
+            }
+        });
+        json.list("pick_ups", |json| {
+            for p in &desk.calendar.pick_ups {
+                json.row(|json| {
+                    json.put("date", &date_of(p.day));
+                    json.put("containers", p.containers);
+                    json.put("kg", p.kg);
+                });
+            }
+        });
+        json.put("containers_begun", desk.calendar.containers.len());
+        json.put("stayed_too_long", desk.calendar.too_long.len());
+        json.put("days_with_too_much", desk.calendar.too_much.len());
+        json.put("caution", CAUTION);
+    });
 }
