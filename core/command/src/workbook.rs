@@ -37,6 +37,10 @@ fn build(tables: &[DataTable]) -> Result<Vec<u8>, XlsxError> {
                     DataCell::Number(value) if value.is_finite() => {
                         sheet.write_number(at, column, *value)?;
                     }
+                    // Exact up to 2^53, which no count here reaches.
+                    DataCell::Count(count) => {
+                        sheet.write_number(at, column, *count as f64)?;
+                    }
                     DataCell::Number(_) | DataCell::Empty => {}
                 }
             }

@@ -11,6 +11,8 @@ use crate::quantity::{shortest, significant};
 pub enum DataCell {
     /// Text, which is never a formula.
     Text(String),
+    /// How many, or which line.
+    Count(u64),
     /// A number in the unit that the heading names.
     Number(f64),
     /// Nothing: not known, or without meaning here.
@@ -38,13 +40,16 @@ impl DataCell {
     pub fn shown(&self) -> String {
         match self {
             Self::Text(text) => text.clone(),
-            Self::Number(value) => {
-                // Whole numbers are counts or lines, which are exact.
-                let digits = if libm::floor(*value) == *value { 15 } else { 4 };
-                significant(*value, digits)
-            }
+            Self::Number(value) => significant(*value, 4),
+            Self::Count(count) => count.to_string(),
             Self::Empty => String::new(),
         }
+    }
+
+    /// Whether it is a number.
+    #[must_use]
+    pub const fn is_number(&self) -> bool {
+        matches!(self, Self::Count(_) | Self::Number(_))
     }
 }
 
@@ -74,6 +79,7 @@ pub fn data_csv(table: &DataTable) -> String {
             match cell {
                 DataCell::Text(text) => out.push_str(&text_cell(text)),
                 DataCell::Number(value) if value.is_finite() => out.push_str(&shortest(*value)),
+                DataCell::Count(count) => out.push_str(&count.to_string()),
                 DataCell::Number(_) | DataCell::Empty => {}
             }
         }
@@ -207,6 +213,7 @@ pub fn data_json(tables: &[DataTable]) -> String {
                                 for (cell, [key, _]) in row.iter().zip(&table.head) {
                                     match cell {
                                         DataCell::Text(text) => json.put(key, text),
+                                        DataCell::Count(count) => json.put(key, *count),
                                         DataCell::Number(value) => {
                                             json.put(key, Some(*value).filter(|v| v.is_finite()))
                                         }
@@ -228,7 +235,7 @@ fn numeric(table: &DataTable) -> Vec<bool> {
     (0..table.head.len())
         .map(|i| {
             let mut cells = table.rows.iter().filter_map(|row| row.get(i));
-            cells.any(|c| matches!(c, DataCell::Number(_)))
+            cells.any(|c| c.is_number())
         })
         .collect()
 }

@@ -13,7 +13,7 @@ fn text(text: &str) -> DataCell {
 }
 
 fn count(count: u64) -> DataCell {
-    Number(count as f64)
+    DataCell::Count(count)
 }
 
 /// A number of two digits behind a hyphen.
