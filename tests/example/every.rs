@@ -56,11 +56,23 @@ fn warnings_are_those_that_are_meant() {
         found.extend(told.map(|p| format!("{}: {}", e.key, p.path)));
     }
     let meant = [
+        // A cylinder of CO2 in 160 and in 30 m³ is immediately dangerous, whatever the averages say.
+        "harbour-sediment: site.room.cylinder",
+        "harbour-sediment: site.room.cylinder",
         // What is left of the extract is heptane with a little of the co-solvent, methanol: the two do not mix.
         "harbour-sediment: workloads[0].routes[3].steps[6]",
         // An extractor of 150 L is no laboratory flask.
         "botanical-pilot: workloads[0].routes[0].steps[0].charge",
         "botanical-pilot: workloads[0].routes[0].steps[0].heater",
+        // Plants are larger than the laboratories for which the usual ranges are.
+        "decaffeination: workloads[0].routes[0].steps[1].power",
+        "decaffeination: workloads[0].routes[1].steps[1].power",
+        "decaffeination: workloads[0].routes[2].steps[1].charge",
+        "textile-dyeing: workloads[0].routes[0].steps[0].power",
+        "textile-dyeing: workloads[0].routes[0].steps[4].charge",
+        "garment-cleaning: workloads[0].routes[0].steps[1].power",
+        "implant-cleaning: workloads[0].routes[0].steps[0].charge",
+        "timber-preservation: workloads[0].routes[0].steps[0].power",
     ];
     assert_eq!(found, meant);
 }

@@ -8,6 +8,7 @@
 #![allow(clippy::unwrap_used, clippy::panic)]
 
 mod botanical;
+mod dense;
 mod every;
 mod harbour;
 mod prose;

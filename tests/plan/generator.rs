@@ -120,10 +120,13 @@ impl Chance {
                 boundary: c.maybe(Self::text),
                 source: c.maybe(Self::text),
             }),
-            room: self.maybe(|c| Room {
-                volume: c.maybe(Self::text),
-                air_changes: c.maybe(Self::text),
-                hood_capture: c.maybe(Self::text),
+            room: self.maybe(|c| {
+                let mut room = Room::default();
+                for key in ["volume", "air_changes", "hood_capture", "setback", "low_spaces", "cylinder"] {
+                    let text = c.maybe(Self::text);
+                    assert!(room.set(key, text));
+                }
+                room
             }),
             streams: self.list(3, |c| Stream {
                 name: c.text(),

@@ -6,6 +6,7 @@ mod cylinder;
 mod integration;
 mod laboratory;
 mod limits;
+mod plan;
 mod printed;
 
 use thimbleworth::room::HOUR_S;

@@ -223,3 +223,48 @@ fn a_meter_counts_before_a_power_and_a_power_before_the_states() {
         (9.0, false)
     );
 }
+
+/// Solubility and curve against what a plan passes through: doubted where it is too little, and outside the range of the
+/// correlation, which is not extrapolated. 135 kg of CO2 for a kilogram of oil at 40 °C and 300 bar (del Valle and Aguilera 1988,
+/// recomputed).
+#[test]
+fn more_than_the_co2_can_dissolve_is_doubted() {
+    let with = |flow: &str, pressure: &str| {
+        let text = json!({
+            "thimbleworth": 1, "title": "Oil", "site": { "name": "Heron Sluice pilot hall", "streams": [
+                { "name": "solvent" }, { "name": "solids", "holds": "solid" } ] },
+            "materials": { "oil": { "class": "solute", "source": "made up for this test" } },
+            "workloads": [{ "name": "seed", "results_per_year": 1, "batch": { "samples": 1 },
+                "feed": { "plant material": "10 kg", "oil": "2 kg" }, "present": "CO2",
+                "routes": [{ "name": "CO2", "ends": { "liquor": "product", "marc": "solids" }, "steps": [
+                    { "step": "supercritical", "temperature": "40 °C", "pressure": pressure, "vessel": "20 L", "void": "5 L",
+                      "metered": "mass", "mass_flow": flow, "time": "4 h", "extracts": { "oil": "90 %" },
+                      "solubility": "vegetable oil", "sought": "oil", "intact": "30 %", "fast": "2", "slow": "0.2",
+                      "rated_pressure": "450 bar", "rated_temperature": "70 °C" }] }] }]
+        });
+        sound(&text.to_string())
+    };
+    let doubt = |account: &Account, words: &str| account.problems.iter().any(|p| p.found.contains(words));
+    let short = with("50 kg/h", "300 bar");
+    assert!(doubt(&short, "can dissolve"), "{:#?}", short.problems);
+    let ample = with("100 kg/h", "300 bar");
+    assert!(!doubt(&ample, "can dissolve"));
+    let note = |account: &Account, symbol: &str| {
+        let (_, found) = route(account);
+        found.trace.notes.iter().find(|n| n.symbol == symbol).unwrap().value_si
+    };
+    let least = note(&ample, "m_CO2, saturated");
+    assert!((least / 1.8 - 135.0).abs() < 0.5, "{least}");
+    assert!(note(&ample, "m_CO2, by the curve") > 1.1 * least);
+    assert!(doubt(&with("100 kg/h", "120 bar"), "not extrapolated"));
+    // The best state within the ratings stands beside it.
+    let (program, found) = route(&ample);
+    let sheets = thimbleworth::report::energy_sheets(program, found);
+    let sheet = sheets.iter().find(|s| s.title.starts_with("CO2 for the recovery")).unwrap();
+    assert_eq!(sheet.rows.len(), 3);
+    assert!(sheet.rows[1][2].contains("450 bar"), "{sheet:?}");
+    // A state above the rating is refused.
+    let text = with("100 kg/h", "300 bar").plan.map(|p| thimbleworth::plan::save(&p)).unwrap();
+    let account = account_text(&text.replace("\"450 bar\"", "\"250 bar\""));
+    assert!(account.program.is_none() && doubt(&account, "above rated_pressure"), "{:#?}", account.problems);
+}

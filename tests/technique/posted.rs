@@ -139,7 +139,8 @@ fn nothing_that_is_given_is_dropped_in_silence() {
 /// The equation of a rule and the numbers noted for it name the same things: a rule that computes says with what.
 #[test]
 fn every_rule_that_computes_shows_its_working() {
-    let plain = ["all that is there", "what is left", "what the let-down recovers", "what flowed"];
+    let plain =
+        ["all that is there", "what is left", "what the let-down recovers", "what flowed", "what the vessel"];
     for (name, account) in &examples() {
         let route = only_route(account);
         let trace = traced(route, &route.central()).unwrap();

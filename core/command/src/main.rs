@@ -5,6 +5,7 @@
 #![forbid(unsafe_code)]
 
 mod account;
+mod case;
 mod check;
 mod co2;
 mod demo;
@@ -12,6 +13,7 @@ mod example;
 mod input;
 mod log;
 mod materials;
+mod need;
 mod odds;
 mod output;
 mod pour;
@@ -46,6 +48,8 @@ enum What {
     Account(account::Args),
     /// Every route beside the present one, with a finding
     Compare(account::Args),
+    /// The case for switching on one page, with an annex; or what differs from an older plan
+    Case(case::Args),
     /// How sure the figures are: intervals, odds against the present route, what matters most
     Odds(odds::Args),
     /// The postings, rules and inputs behind one figure
@@ -66,6 +70,8 @@ enum What {
     Co2(co2::Args),
     /// The site's own records beside its plan: sums, reconciliation, solvent balance
     Log(log::Args),
+    /// The CO2 that a recovery takes, and the state that takes least
+    Need(need::Args),
     /// The example plans, or the text of one to begin from
     Example(example::Args),
 }
@@ -83,6 +89,7 @@ fn main() -> ExitCode {
         None => demo::run(),
         Some(What::Account(args)) => account::run(args, account::What::Account),
         Some(What::Compare(args)) => account::run(args, account::What::Comparison),
+        Some(What::Case(args)) => case::run(args),
         Some(What::Odds(args)) => odds::run(args),
         Some(What::Trace(args)) => trace::run(args),
         Some(What::Waste(args)) => waste::run(args),
@@ -93,6 +100,7 @@ fn main() -> ExitCode {
         Some(What::Technique(args)) => technique::run(args),
         Some(What::Co2(args)) => co2::run(args),
         Some(What::Log(args)) => log::run(args),
+        Some(What::Need(args)) => need::run(args),
         Some(What::Example(args)) => example::run(args),
     };
     match done {

@@ -48,8 +48,10 @@ enum Which {
     Months,
     /// Containers and pick-ups
     PickUps,
-    /// The load of a year by stream, month and code
+    /// The load of a year by stream, month, code and alternative
     Load,
+    /// What registers and lists may ask for
+    Reporting,
 }
 
 impl Which {
@@ -62,6 +64,7 @@ impl Which {
             Self::Months => PaperKind::Months,
             Self::PickUps => PaperKind::PickUps,
             Self::Load => PaperKind::Load,
+            Self::Reporting => PaperKind::Reporting,
         }
     }
 }

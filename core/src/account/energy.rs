@@ -7,7 +7,7 @@ use super::figure::{Draft, Figure, Group, How, Measure};
 use crate::chance::Draw;
 use crate::co2_loop;
 use crate::heat::Basis;
-use crate::ledger::{StepIx, Trace, Utility};
+use crate::ledger::{Note, StepIx, Trace, Utility};
 use crate::program::{Desk, RouteProgram};
 use crate::source::{SITE, Source};
 use crate::step::DenseCo2;
@@ -169,6 +169,24 @@ pub fn by_step(trace: &Trace) -> Vec<StepEnergy> {
 }
 
 /// The steps with dense CO2, by their index in the route.
-pub(super) fn dense(route: &RouteProgram, x: Draw<'_>) -> Vec<(usize, DenseCo2)> {
-    route.steps.iter().enumerate().filter_map(|(i, s)| Some((i, s.step.dense(x)?))).collect()
+pub(super) fn dense(route: &RouteProgram, x: Draw<'_>, trace: &Trace) -> Vec<(usize, DenseCo2)> {
+    let mut all = Vec::new();
+    for (i, step) in route.steps.iter().enumerate() {
+        let Some(mut dense) = step.step.dense(x) else { continue };
+        let noted = |symbol: &str| {
+            let here = |n: &&Note| {
+                n.symbol == symbol && n.step == StepIx::Step(u16::try_from(i).unwrap_or(u16::MAX))
+            };
+            trace.notes.iter().find(here).map(|n| n.value_si)
+        };
+        // What the sample holds is known on the bench alone.
+        if let (Some(study), Some(solute), Some(recovery)) = (&mut dense.study, noted("x₀"), noted("R")) {
+            study.target.solute_kg_kg = solute;
+            study.target.recovery = recovery;
+        } else {
+            dense.study = None;
+        }
+        all.push((i, dense));
+    }
+    all
 }

@@ -3,6 +3,7 @@
 //! A figure is data: a sum over cells of the book, a ratio of two figures, a number of containers. So each opens into the
 //! postings behind it, and the same figure can be evaluated for any draw.
 
+mod air;
 mod carbon_dioxide;
 mod climate;
 mod cost;
@@ -18,6 +19,7 @@ mod time;
 mod waste;
 mod working;
 
+pub use air::{AirAccount, AirRelease, Clears, GasInRoom, Held, SHIFT_S, SuddenInRoom};
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
 pub use energy::{StepEnergy, by_step};
 pub use figure::{

@@ -1,5 +1,6 @@
 //! From a plan to the account of every route.
 
+use super::air::{self, AirAccount};
 use super::figure::{Draft, Figure, evaluate};
 use super::hazard::HazardAccount;
 use super::metric::Refusal;
@@ -49,6 +50,8 @@ pub struct RouteAccount {
     pub cautions: Vec<&'static Caution>,
     /// Steps with dense CO2 as their states are, by their index in the route; central values.
     pub dense: Vec<(usize, DenseCo2)>,
+    /// The air of the room, where the site gives one.
+    pub air: Option<AirAccount>,
     /// Product made in a year; kg.
     pub product_kg: f64,
     /// What cost and climate leave open: what it is, and the path at which the plan could say it.
@@ -166,7 +169,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
     let mut draft = Draft::default();
     mass::draw_up(&mut draft, route, site, &desk);
     waste::draw_up(&mut draft, route, site, &desk);
-    let dense = energy::dense(route, Draw(&x));
+    let dense = energy::dense(route, Draw(&x), &trace);
     carbon_dioxide::draw_up(&mut draft, route, site, &desk, &dense);
     let refusals = metric::draw_up(&mut draft, route, site, &desk);
     energy::draw_up(&mut draft, &desk);
@@ -189,6 +192,10 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
             cautions.push(caution);
         }
     }
+    let air = air::air(route, site, &trace);
+    if let Some(air) = &air {
+        air::tell(air, &route.name, problems);
+    }
     Some(RouteAccount {
         runs: desk.runs,
         closure: mass::closure(route, site, &desk),
@@ -199,6 +206,7 @@ fn account_route(route: &RouteProgram, site: &SiteUse, problems: &mut Vec<Proble
         refusals,
         cautions,
         dense,
+        air,
         product_kg,
         open,
     })

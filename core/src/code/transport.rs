@@ -81,7 +81,7 @@ fn two(c: &Contents<'_>, holds: &dyn Fn(&Substance) -> bool) -> String {
 
 /// Packing group of class 3: I where it boils at 35 °C or below, else II where it flashes below 23 °C, else III.
 fn packing_group(c: &Contents<'_>, facts: &mut Vec<Fact>) -> &'static str {
-    let mut least = |what: &str, limit: f64, of: &dyn Fn(&Substance) -> Option<f64>| {
+    let mut least = |what: &'static str, limit: f64, of: &dyn Fn(&Substance) -> Option<f64>| {
         let mut found: Option<f64> = None;
         for s in c.having(&is_flammable) {
             if let Some(k) = of(s)
@@ -117,7 +117,7 @@ pub(super) fn read(c: &Contents<'_>, rules: Rules, desk: &mut Desk) {
         asks.push("its pH asks for the corrosion test of class 8");
     }
     let mut weigh =
-        |what: &str, holds: &dyn Fn(&Substance) -> bool, ask: &'static str, facts: &mut Vec<Fact>| {
+        |what: &'static str, holds: &dyn Fn(&Substance) -> bool, ask: &'static str, facts: &mut Vec<Fact>| {
             let found = c.mass_share(holds);
             if found >= ASKED {
                 facts.push(share(what, found, NAMED));

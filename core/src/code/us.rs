@@ -5,6 +5,7 @@ use super::contents::{
 };
 use super::us_spent;
 use super::verdict::{Answer, Desk, Fact, list, share};
+use crate::material::Text;
 use crate::material::table::Table;
 use crate::quantity::Kind;
 use std::sync::OnceLock;
@@ -25,7 +26,7 @@ pub(super) fn read(c: &Contents<'_>, desk: &mut Desk) {
 }
 
 /// What is known of ignition without a test; shared with the rules of the Union and of transport.
-pub(super) fn burns(c: &Contents<'_>) -> (Answer, String, Vec<Fact>) {
+pub(super) fn burns(c: &Contents<'_>) -> (Answer, Text, Vec<Fact>) {
     let degrees = |value_si| Fact {
         what: "flash point by test".into(),
         value_si,
@@ -46,7 +47,7 @@ pub(super) fn burns(c: &Contents<'_>) -> (Answer, String, Vec<Fact>) {
     for p in c.parts.iter().filter(|p| p.kg > 0.0 && is_flammable(p.substance)) {
         if let Some(f) = p.substance.flash_point_k.figure() {
             facts.push(Fact {
-                what: ["flash point of ", &p.substance.name].concat(),
+                what: ["flash point of ", &p.substance.name].concat().into(),
                 value_si: f.value,
                 kind: Kind::Temperature,
                 limit_si: Some(FLASH_LIMIT_K),
@@ -67,7 +68,7 @@ pub(super) fn burns(c: &Contents<'_>) -> (Answer, String, Vec<Fact>) {
     if facts.is_empty() {
         return (
             Answer::Test,
-            ["no flash point is known of ", &list(unknown.iter().map(|s| &*s.name))].concat(),
+            ["no flash point is known of ", &list(unknown.iter().map(|s| &*s.name))].concat().into(),
             facts,
         );
     }
@@ -126,7 +127,7 @@ fn corrosive(c: &Contents<'_>, desk: &mut Desk) {
             )
         }
     } else if let Some((low, high)) = c.ph {
-        let number = |what: &str, value_si, limit| Fact {
+        let number = |what: &'static str, value_si, limit| Fact {
             what: what.into(),
             value_si,
             kind: Kind::Number,

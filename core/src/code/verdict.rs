@@ -35,7 +35,7 @@ impl Answer {
 #[derive(Clone, Debug, PartialEq)]
 pub struct Fact {
     /// What it is.
-    pub what: String,
+    pub what: Text,
     /// Its value; SI.
     pub value_si: f64,
     /// What it measures.
@@ -48,7 +48,7 @@ impl Fact {
     /// The figure in words: `dichloromethane 1.526 % (limit 1 %)`.
     #[must_use]
     pub fn words(&self) -> String {
-        let mut out = self.what.clone();
+        let mut out = self.what.to_string();
         out.push(' ');
         out.push_str(&show(self.value_si, self.kind));
         if let Some(limit) = self.limit_si {
@@ -72,7 +72,7 @@ pub struct Verdict {
     /// Whether the rule is in force on the day of the plan; true without a day.
     pub in_force: bool,
     /// Why, in a sentence without its full stop.
-    pub why: String,
+    pub why: Text,
     /// The figures used.
     pub facts: Vec<Fact>,
     /// What would change it.
@@ -101,14 +101,19 @@ pub(super) struct Desk {
 
 impl Desk {
     /// A verdict by the rule of this key, under its own code and with its own change.
-    pub(super) fn put(&mut self, key: &str, answer: Answer, why: impl Into<String>, facts: Vec<Fact>) {
+    pub(super) fn put(&mut self, key: &str, answer: Answer, why: impl Into<Text>, facts: Vec<Fact>) {
+        self.put_text(key, answer, why.into(), facts);
+    }
+
+    #[inline(never)]
+    fn put_text(&mut self, key: &str, answer: Answer, why: Text, facts: Vec<Fact>) {
         let Some(rule) = rule(key) else { return };
         self.verdicts.push(Verdict {
             code: rule.code.into(),
             answer,
             rule,
             in_force: self.as_of.is_none_or(|day| rule.in_force(day)),
-            why: why.into(),
+            why,
             facts,
             change: rule.change.into(),
         });
@@ -147,6 +152,6 @@ pub(super) fn list<'a>(names: impl IntoIterator<Item = &'a str>) -> String {
 }
 
 /// A share as a figure with its limit.
-pub(super) fn share(what: impl Into<String>, value: f64, limit: f64) -> Fact {
+pub(super) fn share(what: impl Into<Text>, value: f64, limit: f64) -> Fact {
     Fact { what: what.into(), value_si: value, kind: Kind::Fraction, limit_si: Some(limit) }
 }

@@ -8,6 +8,7 @@
 //! | `hot_ball` | extraction curve of a sphere by diffusion (Bartle and others) |
 //! | `sovova` | extraction curve with broken and intact cells (Sovová) |
 //! | `need` | carbon dioxide that a target recovery takes |
+//! | `study` | an extraction as a question: solubility, target, circuit and machines together |
 //! | `search` | pressure and temperature of least need or least energy within a vessel's rating |
 //!
 //! **No constants of solutes are shipped.** Chrastil's constants printed for the same solute disagree widely; they are
@@ -22,6 +23,7 @@ pub mod need;
 pub mod search;
 pub mod sovova;
 pub mod strength;
+pub mod study;
 pub mod vegetable_oil;
 
 pub use error::DenseGasError;

@@ -32,6 +32,30 @@ pub enum Side {
     HighestPressure,
 }
 
+impl Side {
+    /// As a report names it.
+    #[must_use]
+    pub const fn words(self) -> &'static str {
+        match self {
+            Self::LowestTemperature => "lowest temperature",
+            Self::HighestTemperature => "highest temperature",
+            Self::LowestPressure => "lowest pressure",
+            Self::HighestPressure => "highest pressure",
+        }
+    }
+}
+
+impl Limit {
+    /// What a report says of it.
+    #[must_use]
+    pub const fn words(self) -> &'static str {
+        match self {
+            Self::Window => "the window ends there, and beyond it there may be less",
+            Self::Range => "next to it the solubility or the equation of state is out of its range",
+        }
+    }
+}
+
 /// What ends the search on a side.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
 pub enum Limit {

@@ -40,6 +40,36 @@ pub static EXAMPLES: &[Example] = &[
                 that E-factor and process mass intensity appear gross and net of recovery.",
         text: include_str!("../../plans/botanical-pilot.json"),
     },
+    Example {
+        key: "decaffeination",
+        title: "Decaffeinated beans: residue or emission?",
+        about: "A coffee works: dichloromethane, ethyl acetate and CO2 in a closed circuit, with what stays in the beans beside what goes to air.",
+        text: include_str!("../../plans/decaffeination.json"),
+    },
+    Example {
+        key: "textile-dyeing",
+        title: "Polyester: dye from water or from CO2?",
+        about: "A dye house: a water bath with its effluent beside CO2 that gives up its dye to the cloth; uptake and heat.",
+        text: include_str!("../../plans/textile-dyeing.json"),
+    },
+    Example {
+        key: "garment-cleaning",
+        title: "Garments: tetrachloroethylene or CO2?",
+        about: "A cleaner's: a closed machine with tetrachloroethylene beside baths of liquid CO2 with a still.",
+        text: include_str!("../../plans/garment-cleaning.json"),
+    },
+    Example {
+        key: "implant-cleaning",
+        title: "Titanium implants: last traces of oil by solvent or by CO2?",
+        about: "Medical metal parts: three rinses in 2-propanol beside three fillings of vented CO2 from cylinders.",
+        text: include_str!("../../plans/implant-cleaning.json"),
+    },
+    Example {
+        key: "timber-preservation",
+        title: "Window timber: preservative from white spirit or from CO2?",
+        about: "A joinery: white spirit that dries off the stack beside CO2 that leaves nothing behind but must be pumped and condensed.",
+        text: include_str!("../../plans/timber-preservation.json"),
+    },
 ];
 
 /// The example of this key.

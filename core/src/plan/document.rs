@@ -70,7 +70,7 @@ pub struct Site {
     pub drain_permit: Option<String>,
     /// Kept for the accounts of energy, climate and cost.
     pub electricity: Option<Electricity>,
-    /// Kept for the account of room air.
+    /// The room, for the account of its air.
     pub room: Option<Room>,
     /// The waste streams that the site keeps apart.
     pub streams: Vec<Stream>,
@@ -122,15 +122,43 @@ pub struct Electricity {
     pub source: Option<String>,
 }
 
-/// The room in which the work happens.
+/// The room in which the work happens: what the plan gives, as text, by key.
 #[derive(Clone, Debug, Default, PartialEq, Eq)]
 pub struct Room {
-    /// Volume of air.
-    pub volume: Option<String>,
-    /// Air changes per time.
-    pub air_changes: Option<String>,
-    /// Share of a release at the hood that the hood captures.
-    pub hood_capture: Option<String>,
+    given: Vec<(&'static str, String)>,
+}
+
+impl Room {
+    /// What the plan gives under a key.
+    #[must_use]
+    pub fn get(&self, key: &str) -> Option<&str> {
+        self.given.iter().find(|(k, _)| *k == key).map(|(_, text)| text.as_str())
+    }
+
+    /// Gives a text under a key, or takes it away; false where the room has no such key. The keys keep their order.
+    ///
+    /// ```
+    /// use thimbleworth::plan::Room;
+    /// let mut room = Room::default();
+    /// assert!(room.set("air_changes", Some("8 /h".to_owned())) && room.set("volume", Some("140 m3".to_owned())));
+    /// assert_eq!(room.given().next(), Some(("volume", "140 m3")));
+    /// assert!(!room.set("windows", None));
+    /// ```
+    pub fn set(&mut self, key: &str, text: Option<String>) -> bool {
+        let rank = |key: &str| super::keys::ROOM.keys.iter().position(|k| k.name == key);
+        let Some(at) = rank(key) else { return false };
+        self.given.retain(|(k, _)| *k != key);
+        if let Some(text) = text {
+            let place = self.given.iter().position(|(k, _)| rank(k) > Some(at)).unwrap_or(self.given.len());
+            self.given.insert(place, (super::keys::ROOM.keys[at].name, text));
+        }
+        true
+    }
+
+    /// All that is given, in the order of the keys.
+    pub fn given(&self) -> impl Iterator<Item = (&'static str, &str)> {
+        self.given.iter().map(|(k, text)| (*k, text.as_str()))
+    }
 }
 
 /// A waste stream that the site keeps apart.

@@ -392,17 +392,63 @@ pub(super) static ROUTE_MONEY: Object = Object {
     fields_after: None,
 };
 
-static ROOM: Object = Object {
+pub(super) static ROOM: Object = Object {
     title: "a room",
     keys: &[
         may("volume", Shape::Amount, r#""140 m3""#, "the volume of its air"),
-        may("air_changes", Shape::Amount, r#""8 /h""#, "how often its air is changed"),
+        may("air_changes", Shape::Amount, r#""8 /h""#, "how often its air is changed by day"),
         may(
             "hood_capture",
             Shape::Amount,
             r#""95 to 99 %""#,
-            "the share of a release at the hood that the hood captures",
+            "the share of a release at the hood that the hood captures; all of it when left out",
         ),
+        may(
+            "setback",
+            Shape::Amount,
+            r#""0.3 /h""#,
+            "how often its air is changed while ventilation is set back",
+        ),
+        may(
+            "day_from",
+            Shape::Amount,
+            r#""7 h""#,
+            "from which hour of the day it is ventilated in full; 7 h when left out",
+        ),
+        may("day_until", Shape::Amount, r#""19 h""#, "until which hour; 19 h when left out"),
+        may(
+            "work_from",
+            Shape::Amount,
+            r#""8 h""#,
+            "at which hour of the day the work starts; 8 h when left out",
+        ),
+        may(
+            "work_days",
+            Shape::Amount,
+            r#""230""#,
+            "on how many days a year there is work; 230 when left out",
+        ),
+        may(
+            "at_once",
+            Shape::Amount,
+            r#""3""#,
+            "how many runs of a step go on side by side; 1 when left out",
+        ),
+        may(
+            "mixing",
+            Shape::Amount,
+            r#""0.5""#,
+            "the mixing factor, 0.1 to 1: how much of the air change reaches the air that people breathe; 1 when left out",
+        ),
+        may(
+            "low_spaces",
+            Shape::Text,
+            r#""cable duct under the bench""#,
+            "pits, ducts, cellars and cold rooms where heavy gas gathers",
+        ),
+        may("cylinder", Shape::Amount, r#""22.7 kg""#, "the largest cylinder that could let go"),
+        may("cylinder_of", Shape::Text, r#""carbon dioxide""#, "what is in it; carbon dioxide when left out"),
+        may("store", Shape::Amount, r#""30 m3""#, "the volume of the store in which cylinders stand"),
     ],
     fields_after: None,
 };

@@ -73,7 +73,7 @@ impl From<Entries> for Node {
     }
 }
 
-fn tree(plan: &Plan) -> Node {
+pub(super) fn tree(plan: &Plan) -> Node {
     let mut out = Entries::default();
     out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
     out.text("title", &plan.title);
@@ -129,9 +129,9 @@ fn site(site: &Site) -> Node {
     }
     if let Some(room) = &site.room {
         let mut inner = Entries::default();
-        inner.optional("volume", room.volume.as_ref());
-        inner.optional("air_changes", room.air_changes.as_ref());
-        inner.optional("hood_capture", room.hood_capture.as_ref());
+        for (key, text) in room.given() {
+            inner.text(key, text);
+        }
         out.put("room", inner.into());
     }
     out.list("streams", &site.streams, stream);
@@ -300,7 +300,13 @@ mod tests {
                     boundary: some("b"),
                     source: some("s"),
                 }),
-                room: Some(Room { volume: some("v"), air_changes: some("a"), hood_capture: some("h") }),
+                room: Some({
+                    let mut room = Room::default();
+                    for key in ["store", "volume", "air_changes", "hood_capture"] {
+                        assert!(room.set(key, Some(key.to_owned())));
+                    }
+                    room
+                }),
                 streams: vec![Stream {
                     name: "flammable".into(),
                     holds: some("liquid"),

@@ -32,6 +32,7 @@ pub fn asked(technique: &'static Technique, step: &StepDoc) -> (Vec<&'static str
         bench_temperature_k: 293.15,
         streams: Vec::new(),
         waste: SiteWaste::default(),
+        room: None,
     };
     let mut amounts = Amounts::default();
     let mut route = RouteBuilder::new(&mut book, &mut amounts, &site, false, &mut problems);

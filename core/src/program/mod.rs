@@ -9,6 +9,7 @@ mod materials;
 mod money;
 mod reader;
 mod resolve;
+mod room;
 mod run;
 mod time;
 mod waste;
@@ -21,6 +22,7 @@ pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
 pub use money::{MoneyUse, Price, Removal};
 pub use reader::Reader;
 pub use resolve::{Resolved, resolve};
+pub use room::{ROOM_FIELDS, RoomUse};
 pub use run::{Desk, Failure};
 pub use time::TimeUse;
 pub use waste::{Counted, EVERY_MONTH, Months, OtherWasteUse, SiteWaste, StreamWaste};
@@ -59,6 +61,8 @@ pub struct SiteUse {
     pub streams: Vec<StreamUse>,
     /// What the waste desk needs to know.
     pub waste: SiteWaste,
+    /// The room, where the plan gives its volume and its air changes.
+    pub room: Option<RoomUse>,
 }
 
 /// A waste stream as the accounts need it.

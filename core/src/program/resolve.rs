@@ -128,12 +128,7 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         check(e.climate.as_deref(), Kind::ClimatePerEnergy, "site.electricity.climate", problems);
         check(e.price.as_deref(), Kind::PricePerEnergy, "site.electricity.price", problems);
     }
-    if let Some(r) = &doc.room {
-        check(r.volume.as_deref(), Kind::Volume, "site.room.volume", problems);
-        check(r.air_changes.as_deref(), Kind::Frequency, "site.room.air_changes", problems);
-        check(r.hood_capture.as_deref(), Kind::Fraction, "site.room.hood_capture", problems);
-        problems.push(Problem::note("site.room", "kept; no figure of this version uses it yet"));
-    }
+    let room = doc.room.as_ref().and_then(|r| super::room::room(r, problems));
     if doc.streams.len() > MOST_STREAMS {
         problems.push(Problem::error(
             "site.streams",
@@ -148,7 +143,15 @@ fn site(plan: &Plan, problems: &mut Vec<Problem>) -> SiteUse {
         .map(|(i, s)| stream(s, &format!("site.streams[{i}]"), problems))
         .collect();
     let waste = waste::site(doc, problems);
-    SiteUse { name: doc.name.clone(), rules, as_of: doc.as_of.clone(), bench_temperature_k, streams, waste }
+    SiteUse {
+        name: doc.name.clone(),
+        rules,
+        as_of: doc.as_of.clone(),
+        bench_temperature_k,
+        streams,
+        waste,
+        room,
+    }
 }
 
 fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {

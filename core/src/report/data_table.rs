@@ -215,7 +215,7 @@ pub fn data_json(tables: &[DataTable]) -> String {
                                         DataCell::Text(text) => json.put(key, text),
                                         DataCell::Count(count) => json.put(key, *count),
                                         DataCell::Number(value) => {
-                                            json.put(key, Some(*value).filter(|v| v.is_finite()))
+                                            json.put(key, Some(*value).filter(|v| v.is_finite()));
                                         }
                                         DataCell::Empty => json.put(key, Value::Null),
                                     }

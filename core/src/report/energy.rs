@@ -4,7 +4,10 @@ use super::words::amount;
 use crate::account::{Measure, RouteAccount, by_step};
 use crate::co2::Phases;
 use crate::co2_loop::{Leg, SOURCE};
+use crate::dense_gas::need::Curve;
+use crate::dense_gas::search::Window;
 use crate::dense_gas::strength::{GIDDINGS, hildebrand_of};
+use crate::dense_gas::study::{Needed, Study};
 use crate::heat::Basis;
 use crate::ledger::Utility;
 use crate::material::catalogue;
@@ -26,7 +29,7 @@ pub struct Sheet {
 }
 
 impl Sheet {
-    fn without_empty_columns(&mut self) {
+    pub(super) fn without_empty_columns(&mut self) {
         for column in (1..self.head.len()).rev() {
             if self.rows.iter().all(|row| row.get(column).is_none_or(String::is_empty)) {
                 self.head.remove(column);
@@ -102,9 +105,87 @@ pub fn energy_sheets(route: &RouteProgram, account: &RouteAccount) -> Vec<Sheet>
         sheets.push(sheet);
     }
     for (step, dense) in &account.dense {
-        sheets.push(circuit(&step_name(route, *step), dense));
+        let name = step_name(route, *step);
+        sheets.push(circuit(&name, dense));
+        if let Some(study) = &dense.study {
+            let here = (dense.temperature_k, dense.pressure_pa);
+            let title = format!("CO2 for the recovery: {name}");
+            sheets.push(need_sheet(title, study, Some(here), dense.window.as_ref()));
+        }
     }
     sheets
+}
+
+/// What a recovery takes at a state, and where it takes least carbon dioxide and least electricity within a window; `here` is a
+/// temperature, K, and an absolute pressure, Pa.
+///
+/// The searches try some 3000 states each. A state that is refused is told in a note.
+#[must_use]
+pub fn need_sheet(title: String, study: &Study, here: Option<(f64, f64)>, window: Option<&Window>) -> Sheet {
+    let mut sheet = Sheet {
+        title,
+        head: vec![
+            "state",
+            "temperature",
+            "pressure",
+            "density",
+            "strength, MPa^½",
+            "dissolved in 1 kg",
+            "CO2 for 1 kg of solid",
+            "electricity for it",
+        ],
+        rows: Vec::new(),
+        notes: vec![format!(
+            "{} of {} in 1 kg of solid free of it{}. Solid, CO2 and electricity are those of the extraction alone.",
+            show(study.target.recovery, Kind::Fraction),
+            show(study.target.solute_kg_kg, Kind::Mass),
+            match study.target.curve {
+                Curve::Saturated =>
+                    ", the CO2 saturated to the end: the least that solubility allows, which no bed does",
+                Curve::BrokenAndIntact { .. } =>
+                    ", by the curve of Sovová with Z and W kept, which holds near the state of its fit",
+            }
+        )],
+    };
+    if let Some((temperature_k, pressure_pa)) = here {
+        match study.at(temperature_k, pressure_pa) {
+            Ok(needed) => sheet.rows.push(need_row("as stated", &needed)),
+            Err(why) => sheet.notes.push(format!("The stated state is refused: {why}.")),
+        }
+    }
+    let Some(window) = window else { return sheet };
+    for (what, found) in
+        [("least CO2", study.least_solvent(window)), ("least electricity", study.least_electricity(window))]
+    {
+        match found {
+            Ok((optimum, needed)) => {
+                sheet.rows.push(need_row(what, &needed));
+                for (side, limit) in &optimum.on {
+                    sheet.notes.push(format!("{what} lies on the {}: {}.", side.words(), limit.words()));
+                }
+            }
+            Err(why) => sheet.notes.push(format!("{what} is not found: {why}.")),
+        }
+    }
+    sheet.notes.push(
+        "Searched from lowest to highest pressure and temperature of the window alone; ratings, relief and interlocks are a matter \
+         of local codes and licensed practice."
+            .to_owned(),
+    );
+    sheet
+}
+
+fn need_row(what: &str, n: &Needed) -> Vec<String> {
+    vec![
+        what.to_owned(),
+        show(n.temperature_k, Kind::Temperature),
+        show(n.pressure_pa, Kind::Pressure),
+        show(n.density_kg_m3, Kind::Density),
+        significant(n.strength_mpa_half, 3),
+        show(n.loading_kg_kg, Kind::Mass),
+        show(n.solvent_kg_kg, Kind::Mass),
+        show(n.electricity_j_kg, Kind::Energy),
+    ]
 }
 
 const COLUMNS: [Utility; 7] = [

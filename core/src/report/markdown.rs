@@ -1,6 +1,7 @@
 //! A report to read and to print, as Markdown.
 
-use super::energy::energy_sheets;
+use super::air::air_sheets;
+use super::energy::{Sheet, energy_sheets};
 use super::row::{MONTHS, PROGRAM, figures};
 use super::words::{amount, cited, editions, hidden, is_detail, work_words};
 use crate::account::{Account, Group, HazardAccount, MaterialHazard, Pouring, RouteAccount, classified};
@@ -129,7 +130,8 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         let _ = write!(out, "Not given: {}: {}.\n\n", refusal.metrics, escaped(&refusal.reason));
     }
     waste_codes(out, site, Pouring { route, account });
-    energy(out, route, account);
+    sheets(out, &energy_sheets(route, account));
+    sheets(out, &air_sheets(site, route, account));
     hazards(out, &account.hazard);
     if !route.assumptions.is_empty() {
         out.push_str("#### Assumed, because the plan does not say\n\n");
@@ -173,15 +175,15 @@ fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
     );
     for s in &streams {
         let name = site.streams.get(s.stream).map_or("", |u| u.name.as_str());
-        let transport = s.transport().map_or("", |v| v.why.as_str());
+        let transport = s.transport().map_or("", |v| &*v.why);
         let cells = [name, s.standing().words(), &s.codes().join(", "), &s.open().join(", "), transport];
         let _ = writeln!(out, "| {} |", cells.map(escaped).join(" | "));
     }
     out.push('\n');
 }
 
-fn energy(out: &mut String, route: &RouteProgram, account: &RouteAccount) {
-    for sheet in energy_sheets(route, account) {
+fn sheets(out: &mut String, all: &[Sheet]) {
+    for sheet in all {
         let _ = write!(out, "#### {}\n\n| {} |\n|", escaped(&sheet.title), sheet.head.join(" | "));
         for i in 0..sheet.head.len() {
             out.push_str(if i == 0 { " --- |" } else { " ---: |" });

@@ -1,5 +1,6 @@
 //! The result document.
 
+mod air;
 mod energy;
 mod figure;
 mod hazard;
@@ -55,6 +56,7 @@ pub const RESULT_VERSION: u64 = 1;
 /// | `closure` | (mass in − mass out) / mass in: rounding only |
 /// | `postings` | every mass moved, zeros left out: `step` (counted from 0 as in paths; `null` for the feed taken in and for what is placed at the end), `technique`, `rule`, `from`, `to`, `material`, `kg_per_run`, `runs_per_year`, `kg_per_year`, `seconds_per_run` (how long it takes in one run, for what goes to air where the step says so, else `null`), `measured` |
 /// | `utilities` | zeros left out: electricity as it counts, and by stated power, physics and meter beside it, heat and cooling of streams (`kwh_per_run`, `kwh_per_year`), cooling water and CO2 sent round (`kg_per_run`, `kg_per_year`) |
+/// | `air` | `null` without a room; else `gases`: what each step lets into the room on a day of work, the time course `as_ventilated` and `on_setback` (mean of the first 8 h, worst 8 h and 15 min, highest, every quarter of an hour), `limits` that hold on the plan's date with the verdict, `other_limits` with the reason, the `sensor` and which ones are `blind`; and `sudden`: a cylinder that lets go, at once and mixed, never averaged |
 /// | `energy` | `steps`: what each step takes in a year, electricity with the face that `counts` and all three beside it, heat, cooling and work of streams, cooling water; `co2_circuits`: for each step with dense CO2 its `states` (enthalpy and entropy 0 for the ideal gas at 298.15 K and 1 atm; `null` where the equation has no state) and the `changes` between them in J/kg, what the let-down leaves in the vessel, the pressure of liquid `shut_in` between valves at 25 °C, and the flow as `metered` and as the same volume would be elsewhere |
 /// | `inputs` | every number that the route rests on: `identity` (the path in the plan, or `material/NAME/PROPERTY`), `value_si`, `unit`, `low_si` and `high_si` (limits) or `standard_uncertainty_si` where it has a spread, `origin` (`entered`, `computed`, `measured`, `assumed`, `not known`), `basis` (the text that was read, or the source) |
 ///
@@ -198,6 +200,7 @@ fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account:
         }
     });
     json.object("energy", |json| energy::energy(json, route, account));
+    air::air(json, route, account);
     inputs(json, &mut route.inputs.iter());
 }
 

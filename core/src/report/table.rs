@@ -1,5 +1,6 @@
 //! Plain text for a terminal: the accounts of each route, or the routes side by side.
 
+use super::air::air_sheets;
 use super::energy::energy_sheets;
 use super::grid::{Grid, paragraph};
 use super::row::figures;
@@ -132,7 +133,7 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         paragraph(out, "  ", &format!("Not given: {}: {}.", refusal.metrics, refusal.reason));
     }
     waste_codes(out, site, Pouring { route, account });
-    for sheet in energy_sheets(route, account) {
+    for sheet in energy_sheets(route, account).into_iter().chain(air_sheets(site, route, account)) {
         paragraph(out, "", &sheet.title);
         let mut grid = Grid::new(24, 8);
         grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());

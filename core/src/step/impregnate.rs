@@ -6,7 +6,7 @@ use super::dense::supply::{self, Cylinder};
 use super::dense::{self, Chamber, DenseCo2, Rules, SPAN_WAGNER, vessel};
 use super::{Control, Group, Param, Rule, Step, Technique};
 use crate::chance::{Draw, In};
-use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
+use crate::ledger::{Bench, Halt, Material, Place, RuleIx, Utility};
 use crate::program::Reader;
 use crate::quantity::Kind;
 use crate::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY, MASS_BALANCE};
@@ -15,7 +15,7 @@ const CIRCULATION: Param =
     Param::quantity("circulation", "Mass flow of CO2 through the goods", Kind::MassFlow)
         .required()
         .physical(0.0, 1e4)
-        .hint("Sent round by pump or blower; \"0 kg/h\" where it stands still.")
+        .hint("Turned round at pressure, without being let down; \"0 kg/h\" where it stands still.")
         .source(COMMON_PRACTICE);
 const TIME: Param = Param::quantity("time", "Time under pressure", Kind::Time)
     .required()
@@ -75,7 +75,8 @@ pub(super) static TECHNIQUE: Technique = Technique {
     key: "impregnate",
     title: "Impregnation from dense CO2",
     about: "Goods in a vessel take up something that is dissolved in dense CO2: dyeing of cloth, preservation of timber. The share \
-            taken up is yours; what is not comes out as solid when the vessel is let down. A co-solvent is not counted here.",
+            taken up is yours; what is not comes out as solid when the vessel is let down. The filling goes round the circuit once; what turns it \
+            round at pressure meanwhile is in the electricity only where you state a power. A co-solvent is not counted.",
     group: Group::Extraction,
     takes_feed: Some(Place::MARC),
     params: &dense::params::<38>(&[
@@ -91,8 +92,8 @@ pub(super) static TECHNIQUE: Technique = Technique {
     ]),
     rules: &dense::rules::<19>(&[
         Rule::new("static fill", "m = V_void ρ(T, p) less what is there", SPAN_WAGNER),
-        Rule::new("sent round", "m = q_m t", DEFINITION),
-        Rule::new("passed through", "what flowed, and what the vessel no longer holds", MASS_BALANCE),
+        Rule::new("turned round", "m = q_m t", DEFINITION),
+        Rule::new("passed on", "what the vessel no longer holds", MASS_BALANCE),
         Rule::new("leaks", "m = s m_flow", FROM_MEMORY),
         Rule::new("put in", "m", MASS_BALANCE),
         Rule::new("taken up", "m = u m_agent", MASS_BALANCE).measurable(),
@@ -170,7 +171,9 @@ impl Step for Impregnate {
         b.note(FLOWED, "t", time_s, Kind::Time);
         // m = q_m t
         let passed_kg = flow_kg_s * time_s;
-        chamber.pass(x, b, passed_kg)?;
+        // Turned round at pressure: nothing of it is let down before the end.
+        b.spend(Utility::CirculatedCo2, passed_kg, FLOWED);
+        chamber.leak(x, b, passed_kg)?;
 
         let (agent_kg, uptake) = (x.get(self.agent_mass), x.get(self.uptake));
         b.charge(Place::STORE, Place::VAPOUR, self.agent, agent_kg, PUT_IN)?;
@@ -197,7 +200,7 @@ impl Step for Impregnate {
         b.all(Place::VAPOUR, self.rest_to, self.agent, REST);
         let recovered = if chamber.vessel.let_down { chamber.let_down(x, b, void_m3)? } else { None };
         b.sweep(Place::TRAP, Place::LIQUOR, EMPTIED);
-        chamber.circuit.spend(x, b, filled_kg + passed_kg, recovered)
+        chamber.circuit.spend(x, b, filled_kg, recovered)
     }
 
     fn co2_states(&self) -> usize {

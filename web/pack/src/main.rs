@@ -1,4 +1,4 @@
-//! Packs the page into one HTML file: `cargo page`.
+//! Packs the page into one HTML file: `cargo page`. With `--empty`, a page with nothing in it, to measure beside it.
 //!
 //! The app is compiled for WebAssembly, the glue is made in process by the library behind the wasm-bindgen tool, and
 //! everything is inlined into the shell, which is the root `index.html`. No bundler and no installed tool is needed.
@@ -7,8 +7,8 @@ mod packing;
 mod parts;
 mod shell;
 
-use anyhow::{Context, Result, ensure};
-use compile::Workspace;
+use anyhow::{Context, Result, bail, ensure};
+use compile::{What, Workspace};
 use parts::Parts;
 use std::fs;
 
@@ -16,9 +16,13 @@ use std::fs;
 const LIMIT_BYTES: usize = 600_000;
 
 fn main() -> Result<()> {
-    ensure!(std::env::args().len() == 1, "the packer takes no arguments: run `cargo page`");
+    let what = match std::env::args().skip(1).collect::<Vec<_>>().as_slice() {
+        [] => What::Page,
+        [only] if only == "--empty" => What::Empty,
+        _ => bail!("run `cargo page`, or `cargo page --empty` for an empty page to measure beside it"),
+    };
     let workspace = Workspace::find()?;
-    let program = compile::program(&workspace)?;
+    let program = compile::program(&workspace, what)?;
     let read = |path: &str| {
         let path = workspace.root.join(path);
         fs::read_to_string(&path).with_context(|| format!("cannot read {}", path.display()))
@@ -32,6 +36,15 @@ fn main() -> Result<()> {
 
     let dist = workspace.root.join("web/dist");
     fs::create_dir_all(&dist)?;
+    if what == What::Empty {
+        fs::write(dist.join("empty.html"), &html)?;
+        println!(
+            "web/dist/empty.html: {} bytes, of that the program {} packed",
+            html.len(),
+            packing::pack(&program.wasm)?.len()
+        );
+        return Ok(());
+    }
     fs::write(dist.join("page.js"), &script)?;
     fs::write(dist.join("thimbleworth.html"), &html)?;
 

@@ -1,5 +1,7 @@
 //! Setting one field of a plan by its path.
-use thimbleworth::plan::{Electricity, Field, Plan, Room, Route, Site, Step, Workload, is_number, keys};
+use thimbleworth::plan::{
+    Electricity, Field, OtherWaste, Plan, Room, Route, Site, Step, Workload, is_number, keys,
+};
 use thimbleworth::step::{TECHNIQUES, technique};
 
 /// Sets the field at `path`, or clears it; returns whether there is such a field.
@@ -79,6 +81,19 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
         ["as_of"] => site.as_of = words(value),
         ["bench_temperature"] => site.bench_temperature = words(value),
         ["drain_permit"] => site.drain_permit = words(value),
+        ["activity"] => site.activity = words(value),
+        ["storage_limit"] => site.storage_limit = words(value),
+        ["pick_up_every"] => site.pick_up_every = words(value),
+        ["far_receiver"] => site.far_receiver = yes(value.as_ref()),
+        ["deviations"] => site.deviations = words(value),
+        ["other_waste"] => {
+            let mut before = std::mem::take(&mut site.other_waste);
+            for (i, (name, each_month)) in rows(value).into_iter().enumerate() {
+                // Months and kind stay with the row.
+                let old = before.get_mut(i).map(std::mem::take).unwrap_or_default();
+                site.other_waste.push(OtherWaste { name, each_month, ..old });
+            }
+        }
         ["electricity", key] => {
             let mut of = site.electricity.take().unwrap_or_default();
             match *key {
@@ -91,11 +106,8 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
         }
         ["room", key] => {
             let mut of = site.room.take().unwrap_or_default();
-            match *key {
-                "volume" => of.volume = words(value),
-                "air_changes" => of.air_changes = words(value),
-                "hood_capture" => of.hood_capture = words(value),
-                _ => return None,
+            if !of.set(key, words(value)) {
+                return None;
             }
             site.room = (of != Room::default()).then_some(of);
         }
@@ -107,6 +119,13 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
                 "fill" => stream.fill = words(value),
                 "bulk_density" => stream.bulk_density = words(value),
                 "treatment" => stream.treatment = words(value),
+                "ph" => stream.ph = words(value),
+                "flash_point" => stream.flash_point = words(value),
+                "unused" => stream.unused = yes(value.as_ref()),
+                "made_of" => stream.made_of = words(value),
+                "density_mark" => stream.density_mark = value,
+                "area" => stream.area = words(value),
+                "counted" => stream.counted = words(value),
                 _ => return None,
             }
         }
@@ -124,6 +143,7 @@ fn at_workload(work: &mut Workload, keys: &[&str], value: Option<Field>) -> Opti
         ["repeats_bring_controls"] => work.repeats_bring_controls = yes(value.as_ref()),
         ["controls_carry_feed"] => work.controls_carry_feed = yes(value.as_ref()),
         ["feed"] => work.feed = rows(value),
+        ["months"] => work.months = words(value),
         ["present"] => work.present = words(value).unwrap_or_default(),
         _ => return None,
     }
@@ -220,6 +240,17 @@ mod tests {
             "site.streams[0].fill",
             "site.streams[0].bulk_density",
             "site.streams[0].treatment",
+            "site.streams[0].ph",
+            "site.streams[0].flash_point",
+            "site.streams[0].made_of",
+            "site.streams[0].density_mark",
+            "site.streams[0].area",
+            "site.streams[0].counted",
+            "site.activity",
+            "site.storage_limit",
+            "site.pick_up_every",
+            "site.deviations",
+            "workloads[0].months",
             r#"materials["sorbent mix"].density"#,
             "workloads[0].results_per_year",
             "workloads[0].batch.controls",

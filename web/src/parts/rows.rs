@@ -3,6 +3,7 @@ use super::field::{Patience, Said, message, value_of};
 use crate::browser;
 use crate::edit::{Edit, dom_id};
 use crate::form::understood;
+use crate::show::unbroken;
 use thimbleworth::plan::{Field as Value, Severity, below};
 use thimbleworth::quantity::Kind;
 use thimbleworth::step::Need;
@@ -31,6 +32,9 @@ pub(crate) struct Props {
     pub(crate) show_all: bool,
     #[prop_or_default]
     pub(crate) optional: bool,
+    /// What a row names.
+    #[prop_or(AttrValue::Static("Material"))]
+    pub(crate) names: AttrValue,
     pub(crate) rows: Vec<(String, String)>,
     pub(crate) edit: Callback<Edit>,
 }
@@ -127,12 +131,12 @@ pub(crate) fn Rows(props: &Props) -> Html {
                 if props.optional { <span class="optional">{ " (optional)" }</span> }
             </legend>
             <div class="ask">
-                if !props.hint.is_empty() { <p class="hint" id={hint}>{ &props.hint }</p> }
+                if !props.hint.is_empty() { <p class="hint" id={hint}>{ unbroken(&props.hint) }</p> }
                 if !props.rows.is_empty() {
                     <table class="inputs">
                         <thead>
                             <tr>
-                                <th scope="col">{ "Material" }</th>
+                                <th scope="col">{ &props.names }</th>
                                 <th scope="col">{ format!("{} ({})", props.amount, props.units) }</th>
                                 <th><span class="unseen">{ "Remove" }</span></th>
                             </tr>
@@ -145,8 +149,8 @@ pub(crate) fn Rows(props: &Props) -> Html {
                                 html! {
                                     <tr key={i}>
                                         <td>
-                                            <input id={row} type="text" autocomplete="off" spellcheck="false" list="catalogue"
-                                                aria-label={format!("{}, row {number}, material", props.label)}
+                                            <input id={row} type="text" autocomplete="off" spellcheck="false" list={(props.names == "Material").then_some("catalogue")}
+                                                aria-label={format!("{}, row {number}, {}", props.label, props.names.to_lowercase())}
                                                 value={name.clone()} oninput={typed(i, false)} onblur={&onblur} />
                                         </td>
                                         <td>
@@ -168,12 +172,12 @@ pub(crate) fn Rows(props: &Props) -> Html {
                     </table>
                 }
                 <button type="button" class="small" id={format!("{id}-add")} onclick={add}
-                    aria-label={format!("Add a material to {}", props.label)}>{ "Add a material" }</button>
+                    aria-label={format!("Add a {} to {}", props.names.to_lowercase(), props.label)}>{ format!("Add a {}", props.names.to_lowercase()) }</button>
             </div>
             <div class="beside">
                 { message(note, shown) }
-                <p class="echo">{ &props.echo }</p>
-                if !props.margin.is_empty() { <p class="margin">{ &props.margin }</p> }
+                <p class="echo">{ unbroken(&props.echo) }</p>
+                if !props.margin.is_empty() { <p class="margin">{ unbroken(&props.margin) }</p> }
             </div>
         </fieldset>
     }

@@ -20,6 +20,7 @@ mod scale;
 mod shape;
 #[cfg(test)]
 mod tests;
+mod year;
 
 pub use books::Per;
 pub use co2_map::co2_map;
@@ -28,6 +29,7 @@ pub use draw::{Node, plate, to_html, to_svg_text};
 pub use flow::flow;
 pub use mass_by_place::mass_by_place;
 pub use shape::{Anchor, Hatch, Shape, Trail};
+pub use year::{load, stock};
 
 /// A picture.
 #[derive(Clone, Debug, PartialEq)]

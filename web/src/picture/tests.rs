@@ -5,7 +5,7 @@ use super::letter::class_width;
 use super::*;
 use std::fs;
 use std::path::Path;
-use thimbleworth::account::{Account, account_text};
+use thimbleworth::account::{Account, account_text, site_desk};
 use thimbleworth::compare::compare;
 
 const PLAN: &str = include_str!("fixture/plan.json");
@@ -24,6 +24,9 @@ fn pictures(account: &Account) -> Vec<Picture> {
         out.extend(difference(&format!("difference-{}", beside.route), program, 0, &beside));
     }
     out.extend(co2_map("co2", account, 0));
+    let desk = site_desk(account, &[]).unwrap();
+    out.extend(stock("stock", &desk));
+    out.extend(load("load", account, &desk));
     out
 }
 
@@ -83,7 +86,7 @@ fn drawings_are_what_they_were() {
 #[test]
 fn the_plan_gives_every_picture() {
     let keys: Vec<String> = of(PLAN).into_iter().map(|p| p.key).collect();
-    assert_eq!(keys, ["places-0", "places-1", "flow-0", "flow-1", "difference-1", "co2"]);
+    assert_eq!(keys, ["places-0", "places-1", "flow-0", "flow-1", "difference-1", "co2", "stock", "load"]);
 }
 
 #[test]

@@ -3,6 +3,7 @@
 mod assumptions;
 mod carbon_dioxide;
 mod comparison;
+mod desk;
 mod finding;
 mod hazard;
 mod leaf;
@@ -10,6 +11,7 @@ mod places;
 mod plates;
 mod question;
 mod routes;
+mod site;
 mod view;
 mod waste;
 
@@ -25,6 +27,8 @@ static SECTIONS: &[&Section] = &[
     &finding::SECTION,
     &places::SECTION,
     &waste::SECTION,
+    &desk::SECTION,
+    &site::SECTION,
     &carbon_dioxide::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,

@@ -3,9 +3,11 @@ use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item};
 use crate::form::{text_of, understood};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
+use crate::show::unbroken;
 use std::rc::Rc;
+use thimbleworth::code::Activity;
 use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
-use thimbleworth::program::OWN_FIELDS;
+use thimbleworth::program::{OWN_FIELDS, ROOM_FIELDS};
 use thimbleworth::quantity::Kind;
 use thimbleworth::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY};
 use thimbleworth::step::{Control, Need};
@@ -22,11 +24,9 @@ pub(super) static SECTION: Section = Section {
 fn draw(view: &View) -> Html {
     html! {
         <>
-            <div class="form">
-                { about(view) }
-                { streams(view) }
-                { works(view) }
-                { more(view) }
+            <div class="form halves">
+                <div>{ about(view) }{ streams(view) }{ more(view) }</div>
+                <div>{ works(view) }</div>
             </div>
             { printed(view) }
         </>
@@ -166,8 +166,59 @@ fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
             { Asked::text(at("treatment"), "Treatment on site", stream.treatment.clone().unwrap_or_default())
                 .need(Need::Default("none", DEFINITION))
                 .ask(Ask::Choice(options("none (left out)", &["recycling", "degradation", "passivation", "none"]))).draw(view) }
+            { for stream_waste(view, &path, stream) }
         </details>
     }
+}
+
+/// What the waste desk asks of a stream: key, label, hint, words to choose from.
+const STREAM_WASTE: [(&str, &str, &str, &[&str]); 7] = [
+    ("ph", "pH in its containers", "Lowest to highest as measured, such as 6 to 8.", &[]),
+    ("flash_point", "Flash point by test", "Closed cup, such as 26 °C, or none.", &[]),
+    ("unused", "Takes unused product", "Expired stock, not used solvent.", &["true", "false"]),
+    (
+        "made_of",
+        "Containers are made of",
+        "",
+        &["polyethylene", "glass", "stainless steel", "steel", "lined steel"],
+    ),
+    (
+        "density_mark",
+        "Mark for density",
+        "The relative density up to which its mark allows a liquid, such as 1.2.",
+        &[],
+    ),
+    (
+        "area",
+        "Fills in",
+        "Satellite: at the bench, under the rules of the United States.",
+        &["central", "satellite"],
+    ),
+    ("counted", "Counts towards the month", "", &["when made", "reclaimed", "treated at once"]),
+];
+
+fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl Iterator<Item = Html> + 'a {
+    STREAM_WASTE.iter().map(move |(key, label, hint, choice)| {
+        let value = match *key {
+            "ph" => stream.ph.clone(),
+            "flash_point" => stream.flash_point.clone(),
+            "unused" => stream.unused.map(|yes| yes.to_string()),
+            "made_of" => stream.made_of.clone(),
+            "density_mark" => Some(text_of(stream.density_mark.as_ref())),
+            "area" => stream.area.clone(),
+            _ => stream.counted.clone(),
+        };
+        let ask = match *key {
+            "unused" => Ask::YesNo("no (left out)".into()),
+            "density_mark" => Ask::Number,
+            _ if choice.is_empty() => Ask::Text,
+            _ => Ask::Choice(options("not said", choice)),
+        };
+        Asked::text([path, ".", key].concat(), label, value.unwrap_or_default())
+            .hint(hint)
+            .ask(ask)
+            .draw(view)
+    })
 }
 
 /// A stream in one line.
@@ -177,7 +228,12 @@ fn stream_words(stream: &Stream) -> String {
     parts.extend(stream.fill.as_ref().map(|f| format!("filled to {f}")));
     parts.extend(stream.bulk_density.as_ref().map(|d| format!("bulk density {d}")));
     parts.extend(stream.treatment.as_ref().map(|t| format!("treatment {t}")));
-    parts.join(", ")
+    parts.extend(stream.ph.as_ref().map(|p| format!("pH {p}")));
+    parts.extend(stream.flash_point.as_ref().map(|f| format!("flash point {f}")));
+    parts.extend(stream.made_of.clone());
+    parts.extend(stream.area.clone());
+    parts.extend(stream.counted.as_ref().map(|c| format!("counted {c}")));
+    unbroken(&parts.join(", "))
 }
 
 fn works(view: &View) -> Html {
@@ -224,6 +280,8 @@ fn one_work(view: &View, w: usize, work: &Workload, count: usize) -> Html {
                 .need(Need::Default("0 %", DEFINITION)).draw(view) }
             { yes("repeats_bring_controls", "Repeats bring their own controls", work.repeats_bring_controls).draw(view) }
             { yes("controls_carry_feed", "Controls carry feed as a sample does", work.controls_carry_feed).draw(view) }
+            { Asked::text(at("months"), "Months of the work", work.months.clone().unwrap_or_default())
+                .hint("Such as 5, or 9-12, 2; all when left out.").draw(view) }
             <Rows label="What one sample brings" kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L" rows={work.feed.clone()}
                 hint="Or one product batch. A route may say that it takes another amount."
                 said={said(&view.reckoned.problems, &feed)} show_all={view.show_all} path={feed} edit={view.edit.clone()} />
@@ -253,15 +311,38 @@ fn more(view: &View) -> Html {
                 </section>
             </details>
             <details class="more">
+                <summary>{ "Waste of the whole site" }</summary>
+                { Asked::text("site.activity", "Kind of work", site.activity.clone().unwrap_or_default())
+                    .need(Need::Default("laboratory", DEFINITION)).hint("It decides the chapter of the List of Waste.")
+                    .ask(Ask::Choice(options("laboratory (left out)", Activity::WORDS))).draw(view) }
+                <Rows label="Other hazardous waste of the site" names="Source" kind={Kind::Mass} amount="each month" units="kg" optional={true}
+                    rows={site.other_waste.iter().map(|o| (o.name.clone(), o.each_month.clone())).collect::<Vec<_>>()}
+                    hint="Made beside this work; without it no category holds." path="site.other_waste"
+                    said={said(&view.reckoned.problems, "site.other_waste")} show_all={view.show_all} edit={view.edit.clone()} />
+                { Asked::amount("site.storage_limit", "Longest storage", Kind::Time, site.storage_limit.as_ref())
+                    .hint("As nation or permit say; the rules of the United States bring their own.").draw(view) }
+                { Asked::amount("site.pick_up_every", "Picked up every", Kind::Time, site.pick_up_every.as_ref())
+                    .hint("Left out, the fewest pick-ups that keep every limit are sought.").draw(view) }
+                { Asked::text("site.far_receiver", "Receiver more than 200 miles away", site.far_receiver.map_or(String::new(), |yes| yes.to_string()))
+                    .ask(Ask::YesNo("no (left out)".into())).draw(view) }
+                { Asked::text("site.deviations", "State or national deviations", site.deviations.clone().unwrap_or_default())
+                    .hint("They print with every paper.").ask(Ask::Area).draw(view) }
+            </details>
+            <details class="more">
                 <summary>{ "Drain, electricity and room" }</summary>
                 { Asked::text("site.drain_permit", "Permit for the drain", site.drain_permit.clone().unwrap_or_default())
                     .hint("The drain is closed until a permit is named; never by dilution.").draw(view) }
                 { Asked::amount("site.electricity.climate", "CO2-equivalent of electricity", Kind::ClimatePerEnergy, electricity.climate.as_ref()).hint(kept).draw(view) }
                 { Asked::amount("site.electricity.price", "Price of electricity", Kind::PricePerEnergy, electricity.price.as_ref()).hint(kept).draw(view) }
                 { Asked::text("site.electricity.source", "Source of these figures", electricity.source.unwrap_or_default()).draw(view) }
-                { Asked::amount("site.room.volume", "Volume of the room", Kind::Volume, room.volume.as_ref()).hint(kept).draw(view) }
-                { Asked::amount("site.room.air_changes", "Air changes", Kind::Frequency, room.air_changes.as_ref()).hint(kept).draw(view) }
-                { Asked::amount("site.room.hood_capture", "Share that the hood captures", Kind::Fraction, room.hood_capture.as_ref()).hint(kept).draw(view) }
+                { for ROOM_FIELDS.iter().map(|p| {
+                    let path = format!("site.room.{}", p.key);
+                    let given = room.get(p.key).map(str::to_owned);
+                    match p.control {
+                        Control::Quantity(kind) => Asked::amount(&path, p.label, kind, given.as_ref()).hint(p.hint).draw(view),
+                        _ => Asked::text(&path, p.label, given.unwrap_or_default()).hint(p.hint).draw(view),
+                    }
+                }) }
             </details>
         </>
     }
@@ -300,7 +381,7 @@ fn printed(view: &View) -> Html {
     let plan = view.plan();
     let line = |label: &str, value: Option<String>| {
         let value = value.filter(|v| !v.is_empty())?;
-        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ value }</dd></> })
+        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ unbroken(&value) }</dd></> })
     };
     let site = &plan.site;
     let rows = |rows: &[(String, String)]| {
@@ -312,6 +393,16 @@ fn printed(view: &View) -> Html {
         line("Date of the plan", site.as_of.clone()),
         line("Temperature of the bench", site.bench_temperature.clone()),
         line("Permit for the drain", site.drain_permit.clone()),
+        line("Kind of work", site.activity.clone()),
+        line(
+            "Other hazardous waste",
+            Some(rows(
+                &site.other_waste.iter().map(|o| (o.name.clone(), o.each_month.clone())).collect::<Vec<_>>(),
+            )),
+        ),
+        line("Longest storage", site.storage_limit.clone()),
+        line("Picked up every", site.pick_up_every.clone()),
+        line("State or national deviations", site.deviations.clone()),
         line("Notes", plan.notes.clone()),
     ];
     for stream in &site.streams {
@@ -333,6 +424,7 @@ fn printed(view: &View) -> Html {
         parts.push(format!("batches of {samples} samples and {controls} controls"));
         parts.extend(work.repeats.as_ref().map(|r| format!("{r} done again")));
         parts.push(format!("one sample brings {}", rows(&work.feed)));
+        parts.extend(work.months.as_ref().map(|m| format!("months {m}")));
         parts.push(format!("present route {}", work.present));
         lines.push(line(&format!("Work {}", work.name), Some(parts.join("; "))));
     }

@@ -2,9 +2,11 @@
 #![allow(clippy::unwrap_used, clippy::expect_used, clippy::panic)]
 
 mod bad_input;
+mod case;
 mod co2;
 mod files;
 mod log;
+mod need;
 mod odds;
 mod results;
 mod waste;

@@ -11,7 +11,7 @@ fn plan() -> String {
 #[test]
 fn every_paper_is_written_in_both_formats() {
     let plan = plan();
-    for paper in ["codes", "run", "label", "drum", "months", "pick-ups", "load"] {
+    for paper in ["codes", "run", "label", "drum", "months", "pick-ups", "load", "reporting"] {
         let markdown = run_on(plan.as_bytes(), &["waste", "-", "--paper", paper]);
         assert_eq!(markdown.status, 0, "{}", markdown.complaints);
         assert!(markdown.out.starts_with("# ") && markdown.out.matches("\n# ").count() == 0, "{paper}");
@@ -27,7 +27,7 @@ fn every_paper_is_written_in_both_formats() {
         assert!(lines > 1, "{paper}");
     }
     let all = run_on(plan.as_bytes(), &["waste", "-"]);
-    assert_eq!(all.out.lines().filter(|l| l.starts_with("# ")).count(), 7);
+    assert_eq!(all.out.lines().filter(|l| l.starts_with("# ")).count(), 8);
 }
 
 #[test]

@@ -4,7 +4,7 @@
 use super::super::document::{
     Electricity, Field, Log, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
 };
-use super::super::keys::STEP;
+use super::super::keys::{ROOM, STEP};
 use super::super::tree::Node;
 
 /// The value of a key; of a key written twice the first.
@@ -106,10 +106,12 @@ fn site(node: &Node) -> Site {
             boundary: text(node, "boundary"),
             source: text(node, "source"),
         }),
-        room: get(node, "room").map(|node| Room {
-            volume: text(node, "volume"),
-            air_changes: text(node, "air_changes"),
-            hood_capture: text(node, "hood_capture"),
+        room: get(node, "room").map(|node| {
+            let mut room = Room::default();
+            for key in ROOM.keys {
+                room.set(key.name, text(node, key.name));
+            }
+            room
         }),
         streams: list(node, "streams", stream),
         activity: text(node, "activity"),

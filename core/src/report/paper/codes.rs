@@ -11,15 +11,36 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     let table = |s: &crate::account::StreamDesk<'_>| PaperTable {
         title: [sheet.name(s), ": ", s.standing().words(), ", ", &mass(s.contents.mass_kg()), " a year"]
             .concat(),
-        head: HEAD.to_vec(),
+        head: &HEAD,
         rows: s.verdicts.iter().map(row).collect(),
+    };
+    let glance = PaperTable {
+        title: "At a glance".into(),
+        head: &["Stream", "Standing", "Codes", "Test, do not assume", "Transport", "kg a year"],
+        rows: sheet
+            .desk
+            .streams
+            .iter()
+            .map(|s| {
+                let transport = s.transport().map_or_else(String::new, |v| v.why.to_string());
+                let kg = super::kilograms(s.contents.mass_kg());
+                vec![
+                    sheet.name(s).into(),
+                    s.standing().words().into(),
+                    s.codes().join(", "),
+                    s.open().join(", "),
+                    transport,
+                    kg,
+                ]
+            })
+            .collect(),
     };
     Paper {
         title: "Waste codes by container".into(),
         lead: vec![
             "By everything poured in; marc, drying agents, filters and disposables inherit from the solvent that wets them.".into(),
         ],
-        tables: sheet.desk.streams.iter().map(table).collect(),
+        tables: std::iter::once(glance).chain(sheet.desk.streams.iter().map(table)).collect(),
         foot: Vec::new(),
     }
 }
@@ -33,7 +54,7 @@ pub(super) fn row(v: &Verdict) -> Vec<String> {
         figures.push_str(&fact.words());
     }
     let rule = [v.rule.title, ": ", &cited(v.rule.citation()), "; ", &rule_dates(v)].concat();
-    vec![v.code.to_string(), v.answer.words().into(), v.why.clone(), figures, rule, v.change.to_string()]
+    vec![v.code.to_string(), v.answer.words().into(), v.why.to_string(), figures, rule, v.change.to_string()]
 }
 
 fn rule_dates(v: &Verdict) -> String {

@@ -60,5 +60,5 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>) -> PaperTable {
         || [sheet.name(s), ", shares only: the plan gives no size"].concat(),
         |(m3, fill)| [sheet.name(s), ", ", &volume(m3), " filled to ", &percent(fill)].concat(),
     );
-    PaperTable { title, head: vec!["What", "Amount", "Share by mass"], rows }
+    PaperTable { title, head: &["What", "Amount", "Share by mass"], rows }
 }

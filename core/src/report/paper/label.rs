@@ -66,7 +66,7 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>, us: bool) -> PaperTable {
     put(if us { "Codes before transport" } else { "Codes" }, s.codes().join(" "));
     put("Open until tested", s.open().join(" "));
     if let Some(v) = s.transport() {
-        put("Transport", v.why.clone());
+        put("Transport", v.why.to_string());
     }
     if us {
         put("Reportable quantity", reportable(sheet, s));
@@ -81,7 +81,7 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>, us: bool) -> PaperTable {
     }
     let size =
         stream.and_then(|u| u.container_m3).map_or_else(String::new, |m3| [", ", &volume(m3)].concat());
-    PaperTable { title: [sheet.name(s), &size].concat(), head: vec!["", ""], rows }
+    PaperTable { title: [sheet.name(s), &size].concat(), head: &["", ""], rows }
 }
 
 /// The hazards in words.

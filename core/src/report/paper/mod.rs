@@ -9,6 +9,7 @@ mod load;
 mod months;
 mod pick_ups;
 mod pour;
+mod reporting;
 mod run;
 
 pub use pour::{Asked, pour_paper};
@@ -41,7 +42,7 @@ pub struct PaperTable {
     /// Its title.
     pub title: String,
     /// Headings.
-    pub head: Vec<&'static str>,
+    pub head: &'static [&'static str],
     /// Rows, each as long as the headings.
     pub rows: Vec<Vec<String>>,
 }
@@ -61,14 +62,24 @@ pub enum PaperKind {
     Months,
     /// Containers and pick-ups.
     PickUps,
-    /// The load of a year by stream, month and code.
+    /// The load of a year by stream, month, code and alternative.
     Load,
+    /// What registers and lists may ask for.
+    Reporting,
 }
 
 impl PaperKind {
     /// All of them, in the order of a report.
-    pub const ALL: [Self; 7] =
-        [Self::Codes, Self::Run, Self::Label, Self::Drum, Self::Months, Self::PickUps, Self::Load];
+    pub const ALL: [Self; 8] = [
+        Self::Codes,
+        Self::Run,
+        Self::Label,
+        Self::Drum,
+        Self::Months,
+        Self::PickUps,
+        Self::Load,
+        Self::Reporting,
+    ];
 
     /// The word by which the command knows it.
     #[must_use]
@@ -81,6 +92,7 @@ impl PaperKind {
             Self::Months => "months",
             Self::PickUps => "pick-ups",
             Self::Load => "load",
+            Self::Reporting => "reporting",
         }
     }
 }
@@ -92,12 +104,12 @@ impl PaperKind {
 /// let account = account_text(EXAMPLES[1].text);
 /// let desk = site_desk(&account, &[]).unwrap();
 /// let codes = paper(&account, &desk, PaperKind::Codes).unwrap();
-/// assert!(codes.tables[0].title.contains("halogenated"));
+/// assert!(codes.tables[1].title.contains("halogenated"));
 /// ```
 #[must_use]
 pub fn paper(account: &Account, desk: &SiteDesk<'_>, kind: PaperKind) -> Option<Paper> {
     let program = account.program.as_ref()?;
-    let sheet = Sheet { program, site: &program.site, desk };
+    let sheet = Sheet { account, program, site: &program.site, desk };
     let mut paper = match kind {
         PaperKind::Codes => codes::paper(&sheet),
         PaperKind::Run => run::paper(&sheet),
@@ -106,6 +118,7 @@ pub fn paper(account: &Account, desk: &SiteDesk<'_>, kind: PaperKind) -> Option<
         PaperKind::Months => months::paper(&sheet),
         PaperKind::PickUps => pick_ups::paper(&sheet),
         PaperKind::Load => load::paper(&sheet),
+        PaperKind::Reporting => reporting::paper(&sheet),
     };
     paper.lead.insert(0, sheet.heading());
     sheet.foot(&mut paper.foot);
@@ -114,6 +127,7 @@ pub fn paper(account: &Account, desk: &SiteDesk<'_>, kind: PaperKind) -> Option<
 
 /// What every paper is drawn up from.
 struct Sheet<'a> {
+    account: &'a Account,
     program: &'a Program,
     site: &'a SiteUse,
     desk: &'a SiteDesk<'a>,

@@ -48,7 +48,7 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
         ]);
         rows.push(row);
     }
-    let mut tables = vec![PaperTable { title: "Made in each month, kg".into(), head: HEAD.to_vec(), rows }];
+    let mut tables = vec![PaperTable { title: "Made in each month, kg".into(), head: &HEAD, rows }];
     if !desk.headroom.is_empty() {
         tables.push(headroom(sheet));
     }
@@ -81,7 +81,7 @@ fn headroom(sheet: &Sheet<'_>) -> PaperTable {
     }
     PaperTable {
         title: "Results that a month takes before the category rises".into(),
-        head: vec!["Work", "Month", "Planned", "Each adds", "As VSQG at most", "Before LQG at most"],
+        head: &["Work", "Month", "Planned", "Each adds", "As VSQG at most", "Before LQG at most"],
         rows,
     }
 }

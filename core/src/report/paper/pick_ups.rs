@@ -86,12 +86,12 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
         tables: vec![
             PaperTable {
                 title: "Pick-ups".into(),
-                head: vec!["Date", "Containers", "kg"],
+                head: &["Date", "Containers", "kg"],
                 rows: pick_ups.collect(),
             },
             PaperTable {
                 title: "Containers".into(),
-                head: vec![
+                head: &[
                     "Stream",
                     "First drop",
                     "Full",

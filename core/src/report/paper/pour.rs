@@ -39,7 +39,7 @@ pub fn pour_paper(account: &Account, desk: &SiteDesk<'_>, asked: &Asked<'_>) -> 
     let (Some(program), Some(plan)) = (&account.program, &account.plan) else {
         return Err("the plan has no program".to_owned());
     };
-    let sheet = Sheet { program, site: &program.site, desk };
+    let sheet = Sheet { account, program, site: &program.site, desk };
     let known = materials(plan, asked.parts)?;
     let poured = poured(&sheet, asked.parts, &known)?;
     let mut paper = if asked.into == "drain" {
@@ -147,7 +147,7 @@ fn stream(sheet: &Sheet<'_>, asked: &Asked<'_>, poured: &Contents<'_>) -> Result
     }
     let codes = PaperTable {
         title: "Codes afterwards".into(),
-        head: codes::HEAD.to_vec(),
+        head: &codes::HEAD,
         rows: check.after.iter().map(codes::row).collect(),
     };
     Ok(Paper {
@@ -167,7 +167,7 @@ fn table(findings: &[Finding]) -> PaperTable {
     let row = |f: &Finding| vec![f.severity.words().to_owned(), f.what.clone(), cited(f.source)];
     PaperTable {
         title: "Found".into(),
-        head: vec!["", "What", "Source"],
+        head: &["", "What", "Source"],
         rows: findings.iter().map(row).collect(),
     }
 }

@@ -54,7 +54,7 @@ fn streams(sheet: &Sheet<'_>, work: &str, pouring: &Pouring<'_>, tables: &mut Ve
         }
         tables.push(PaperTable {
             title,
-            head: vec!["Material", "In a batch", "For a result", "In a year", "Share by mass"],
+            head: &["Material", "In a batch", "For a result", "In a year", "Share by mass"],
             rows,
         });
     }
@@ -73,7 +73,7 @@ fn elsewhere(work: &str, pouring: &Pouring<'_>, tables: &mut Vec<PaperTable>) {
         }
     }
     if !rows.is_empty() {
-        let head = vec!["Place", "In a batch", "For a result", "In a year"];
+        let head = &["Place", "In a batch", "For a result", "In a year"];
         tables.push(PaperTable {
             title: [work, ", ", &pouring.route.name, ": elsewhere"].concat(),
             head,

@@ -9,14 +9,14 @@ use crate::report::words::si_unit;
 
 fn verdict(json: &mut Json, v: &Verdict) {
     let cited = v.rule.citation();
-    json.put("code", &v.code.to_string());
+    json.put("code", &*v.code);
     json.put("answer", v.answer.words());
     json.put("in_force", v.in_force);
-    json.put("why", &v.why);
+    json.put("why", &*v.why);
     json.list("figures", |json| {
         for fact in &v.facts {
             json.row(|json| {
-                json.put("what", &fact.what);
+                json.put("what", &*fact.what);
                 json.put("value_si", fact.value_si);
                 json.put("limit_si", fact.limit_si);
                 json.put("unit", si_unit(fact.kind));
@@ -28,7 +28,7 @@ fn verdict(json: &mut Json, v: &Verdict) {
     json.put("standing", cited.standing.words());
     json.put("since", v.rule.from.map(|d| d.to_string()).as_deref());
     json.put("until", v.rule.until.map(|d| d.to_string()).as_deref());
-    json.put("change", &v.change.to_string());
+    json.put("change", &*v.change);
 }
 
 fn stream(json: &mut Json, s: &StreamDesk<'_>, site: &SiteUse) {

@@ -4,7 +4,11 @@
 //! again. Energies are differences of enthalpy by the equation of state, see [`co2_loop`](crate::co2_loop).
 
 use crate::chance::{Draw, In};
-use crate::co2_loop::{ClosedLoop, Kind as Leg, Loop, LoopError, OpenLoop, Recompression, SOURCE};
+use crate::co2::Memo;
+use crate::co2_loop::{
+    ClosedLoop, Heating, Kind as Leg, Loop, LoopError, OpenLoop, Recompression, SOURCE, Scratch, Utilities,
+};
+use crate::dense_gas::study::Circuit as Around;
 use crate::heat::Demand;
 use crate::ledger::{Bench, Halt, Place, RuleIx};
 use crate::program::Reader;
@@ -293,25 +297,19 @@ impl Circuit {
         }
     }
 
-    /// The legs of the circuit, per kilogram passed through, into a loop that is cleared first.
-    pub(in crate::step) fn legs(
-        &self,
-        x: Draw<'_>,
-        scratch: &mut crate::co2_loop::Scratch,
-    ) -> Result<(), LoopError> {
-        let crate::co2_loop::Scratch { states, legs } = scratch;
+    /// The circuit with its numbers.
+    fn around_with(&self, x: Draw<'_>, states: &mut Memo) -> Result<Around, LoopError> {
         let (extraction_temperature_k, extraction_pressure_pa) = (x.get(self.state.0), x.get(self.state.1));
         let (pump_efficiency, cold_k) = (x.get(self.efficiency), self.pump_temperature_k(x));
         if let Some((t, p)) = self.separator {
-            return ClosedLoop {
+            return Ok(Around::Closed(ClosedLoop {
                 condenser_temperature_k: cold_k,
                 pump_efficiency,
                 extraction_pressure_pa,
                 extraction_temperature_k,
                 separator_pressure_pa: x.get(p),
                 separator_temperature_k: x.get(t),
-            }
-            .energies_in(states, legs);
+            }));
         }
         let supply_temperature_k = self.supply.map_or(f64::NAN, |t| x.get(t));
         let supply_pressure_pa = match (self.supply_pressure, self.head) {
@@ -324,7 +322,7 @@ impl Circuit {
             }
             (None, _) => None,
         };
-        OpenLoop {
+        Ok(Around::Open(OpenLoop {
             supply_temperature_k,
             supply_pressure_pa,
             chill_temperature_k: cold_k,
@@ -333,8 +331,30 @@ impl Circuit {
             extraction_temperature_k,
             vent_pressure_pa: ATMOSPHERE_PA,
             vent_temperature_k: self.vent.map_or(f64::NAN, |t| x.get(t)),
+        }))
+    }
+
+    /// The circuit with its numbers, for a single run.
+    pub(in crate::step) fn around(&self, x: Draw<'_>) -> Option<Around> {
+        self.around_with(x, &mut Memo::default()).ok()
+    }
+
+    /// The machines around it.
+    pub(in crate::step) fn machines(&self, x: Draw<'_>) -> Utilities {
+        Utilities {
+            drive_efficiency: x.get(self.drive),
+            cooling_cop: x.get(self.cop),
+            heating: if self.electric { Heating::Electric { ratio: 1.0 } } else { Heating::NotElectric },
         }
-        .energies_in(states, legs)
+    }
+
+    /// The legs of the circuit, per kilogram passed through, into a loop that is cleared first.
+    pub(in crate::step) fn legs(&self, x: Draw<'_>, scratch: &mut Scratch) -> Result<(), LoopError> {
+        let Scratch { states, legs } = scratch;
+        match self.around_with(x, states)? {
+            Around::Open(open) => open.energies_in(states, legs),
+            Around::Closed(closed) => closed.energies_in(states, legs),
+        }
     }
 
     /// The compressor's legs from a state up to the receiver, per kilogram.

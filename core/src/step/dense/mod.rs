@@ -101,17 +101,21 @@ impl Chamber {
     /// Passes CO2 through the vessel: drawn and vented, or sent round with its leaks.
     pub(super) fn pass(&self, x: Draw<'_>, b: &mut Bench<'_>, passed_kg: f64) -> Result<(), Halt> {
         b.spend(Utility::CirculatedCo2, passed_kg, self.rules.flowed);
-        let vent_to = self.circuit.vent_to;
         if self.circuit.recycled {
-            let share = self.circuit.leak.map_or(0.0, |s| x.get(s));
-            b.note(self.rules.leaked, "s", share, Kind::Fraction);
-            b.note(self.rules.leaked, "m_flow", passed_kg, Kind::Mass);
-            // m = s m_flow
-            b.charge(Place::STORE, vent_to, self.co2, share * passed_kg, self.rules.leaked)?;
-        } else {
-            b.charge(Place::STORE, Place::VAPOUR, self.co2, passed_kg, self.rules.flowed)?;
-            b.take(Place::VAPOUR, vent_to, self.co2, passed_kg, self.rules.swept)?;
+            return self.leak(x, b, passed_kg);
         }
+        b.charge(Place::STORE, Place::VAPOUR, self.co2, passed_kg, self.rules.flowed)?;
+        b.take(Place::VAPOUR, self.circuit.vent_to, self.co2, passed_kg, self.rules.swept)?;
+        Ok(())
+    }
+
+    /// What leaks of a flow, made up from the supply.
+    pub(super) fn leak(&self, x: Draw<'_>, b: &mut Bench<'_>, flow_kg: f64) -> Result<(), Halt> {
+        let share = self.circuit.leak.map_or(0.0, |s| x.get(s));
+        b.note(self.rules.leaked, "s", share, Kind::Fraction);
+        b.note(self.rules.leaked, "m_flow", flow_kg, Kind::Mass);
+        // m = s m_flow
+        b.charge(Place::STORE, self.circuit.vent_to, self.co2, share * flow_kg, self.rules.leaked)?;
         Ok(())
     }
 

@@ -2,7 +2,9 @@
 
 use crate::co2::density_kg_m3;
 use crate::co2_loop::{Loop, Trapped, letdown_left_share, trapped_liquid};
+use crate::dense_gas::search::Window;
 use crate::dense_gas::strength::giddings_mpa_half;
+use crate::dense_gas::study::Study;
 
 /// To this a length of line warms in a room, K.
 const WARM_K: f64 = 298.15;
@@ -43,6 +45,10 @@ pub struct DenseCo2 {
     pub trapped: Option<Trapped>,
     /// The flow as it is metered, and as the same volume would be elsewhere; empty unless it is metered as liquid.
     pub metered: Vec<Metered>,
+    /// Solubility and target, where the plan states a solubility and takes something out.
+    pub study: Option<Study>,
+    /// Where a better state may be sought, where the plan states the ratings.
+    pub window: Option<Window>,
     /// Filling of a cylinder, kg, and the share of it that cannot be used, where the plan says.
     pub cylinder: Option<(f64, f64)>,
 }
@@ -67,6 +73,8 @@ impl DenseCo2 {
             trapped: trapped_liquid(cold.temperature_k, cold.pressure_pa, WARM_K, None).ok(),
             legs,
             metered: Vec::new(),
+            study: None,
+            window: None,
             cylinder: None,
         })
     }

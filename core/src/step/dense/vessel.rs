@@ -21,9 +21,9 @@ const VOID: Param = Param::quantity("void", "Void of the filled vessel", Kind::V
 const SOLID_DENSITY: Param = Param::quantity("solid_density", "Density of the solid itself", Kind::Density)
     .default("2.6 g/mL", FROM_MEMORY)
     .physical(100.0, 25_000.0)
-    .usual(900.0, 3000.0)
+    .usual(900.0, 8000.0)
     .without("void")
-    .hint("Not the bulk density: quartz 2.6, plant tissue about 1.3 to 1.5 g/mL.")
+    .hint("Not the bulk density: quartz 2.6, plant tissue about 1.3 to 1.5, metals 2.7 to 8 g/mL.")
     .source(FROM_MEMORY);
 const FILLER: Param = Param::quantity("filler", "Volume of inert filler", Kind::Volume)
     .default("0 mL", DEFINITION)

@@ -4,6 +4,7 @@
 //! it is metered, what the let-down vents from the void at let-down state.
 
 mod flow;
+mod soluble;
 mod trap;
 
 use super::caution::{CO2_IN_ROOM, DRY_ICE, FLAMMABLE_VENT, PRESSURE_VESSEL, TRAPPED_LIQUID};
@@ -12,6 +13,8 @@ use super::dense::supply::{self, Cylinder, Snow};
 use super::dense::{self, Chamber, DenseCo2, Rules, SPAN_WAGNER, vessel};
 use super::{Control, Group, Param, Rule, Step, Technique};
 use crate::chance::{Draw, In};
+use crate::dense_gas::need::Target;
+use crate::dense_gas::study::Study;
 use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::program::Reader;
 use crate::quantity::Kind;
@@ -57,7 +60,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             and what stays dissolved are lost. Stages follow as several steps, with let_down false for all but the last.",
     group: Group::Extraction,
     takes_feed: Some(Place::MARC),
-    params: &dense::params::<50>(&[
+    params: &dense::params::<60>(&[
         &[dense::TEMPERATURE, dense::PRESSURE],
         &vessel::PARAMS,
         &flow::PARAMS,
@@ -71,6 +74,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         &circuit::DRAWN,
         &supply::CYLINDERS,
         &supply::SNOWS,
+        &soluble::PARAMS,
     ]),
     rules: &dense::rules::<22>(&[
         Rule::new("static fill", "m = V_void ρ(T, p) less what is there", SPAN_WAGNER),
@@ -105,6 +109,7 @@ struct Supercritical {
     chamber: Chamber,
     flow: flow::Flow,
     trap: trap::Trap,
+    soluble: soluble::Soluble,
     cylinder: Cylinder,
     snow: Snow,
     extracts: Vec<(Material, In)>,
@@ -131,6 +136,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
         chamber: Chamber { co2, state, vessel, circuit, rules },
         flow,
         trap,
+        soluble: soluble::Soluble::read(r, state),
         cylinder: Cylinder::read(r),
         snow: Snow::read(r),
         extracts: r.taken_out(&EXTRACTS),
@@ -154,6 +160,8 @@ impl Step for Supercritical {
         let passed_kg = self.flow.mass_kg(x, b, FLOWED)?;
         chamber.pass(x, b, passed_kg)?;
         self.trap.cosolvent(x, b, time_s, vent_to, COSOLVENT)?;
+        let here = (x.get(chamber.state.0), x.get(chamber.state.1));
+        self.soluble.hold(x, b, &self.extracts, here, filled_kg + passed_kg, EXTRACTED);
         super::extract(x, b, &self.extracts, Place::MARC, Place::TRAP, EXTRACTED)?;
         self.trap.blow_off(x, b, vent_to, BLOWN_OFF)?;
         chamber.keep(x, b, self.dissolved, Place::TRAP, DRAWN_OFF)?;
@@ -173,6 +181,15 @@ impl Step for Supercritical {
         shown.cylinder = self.cylinder.of(x);
         if let Some((t, p)) = self.flow.head() {
             shown.meter((x.get(t), x.get(p)), self.flow.volume_m3(x));
+        }
+        let here = (shown.temperature_k, shown.pressure_pa);
+        shown.window = self.soluble.window(x, here);
+        if let (Some((solubility, curve)), Some(circuit)) =
+            (self.soluble.target(x), self.chamber.circuit.around(x))
+        {
+            let machines = self.chamber.circuit.machines(x);
+            let target = Target { solute_kg_kg: f64::NAN, recovery: f64::NAN, curve };
+            shown.study = Some(Study { solubility, target, circuit, machines });
         }
         Some(shown)
     }
