@@ -30,9 +30,10 @@ fn main() -> Result<()> {
     let styles = shell::with_imports(&read("web/page.css")?, |name| read(&format!("web/{name}")))?;
     let (styles, glue, boot) =
         (shell::lean(&styles), shell::lean(&program.glue), shell::lean(&read("web/boot.js")?));
+    let with = shell::packed_script(&glue, &shell::lean(&read("web/lend.js")?));
     let page = read("index.html")?;
-    let script = shell::script(&program.wasm, &glue, &boot)?;
-    let html = shell::inline(&page, &styles, &script)?;
+    let script = shell::script(&program.wasm, &with, &boot)?;
+    let html = shell::inline(&page, &styles, &script, &with)?;
 
     let dist = workspace.root.join("web/dist");
     fs::create_dir_all(&dist)?;
@@ -55,8 +56,8 @@ fn main() -> Result<()> {
     row("  of that code", parts.code);
     row("  of that data", parts.data);
     row("program, packed", packing::pack(&program.wasm)?.len());
-    row("program, as text", script.len() - glue.len() - boot.len());
-    row("glue", glue.len());
+    row("glue and borrowed", with.len());
+    row("both packed, as text", script.len() - boot.len());
     row("start", boot.len());
     row("styles", styles.len());
     row("shell", page.len());

@@ -46,32 +46,38 @@ pub(crate) fn lean(text: &str) -> String {
     out
 }
 
-/// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
-pub(crate) fn script(program: &[u8], glue: &str, boot: &str) -> Result<String> {
-    let (packed, unpacker) = (pack(program)?, unpacker()?);
+/// The script that is packed with the program: its glue and what it borrows from the browser, hidden from the global scope.
+pub(crate) fn packed_script(glue: &str, lend: &str) -> String {
+    format!(
+        "(function () {{\n\"use strict\";\n{lend}\n{glue}\nthimbleworth.program = wasm_bindgen;\n}})();\n"
+    )
+}
+
+/// The one script that stands in the page: program and script, packed, and the start.
+pub(crate) fn script(program: &[u8], with: &str, boot: &str) -> Result<String> {
+    let (packed, unpacker) = (pack(&[program, with.as_bytes()].concat())?, unpacker()?);
     let script = format!(
-        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZE = {};\n\
-         const PAYLOAD = [{}, \"{}\"];\n{glue}\n{boot}}})();\n",
+        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}];\n\
+         const PAYLOAD = [{}, \"{}\"];\n{boot}}})();\n",
         unpacker.len(),
         signs(&unpacker),
         program.len(),
+        with.len(),
         packed.len(),
         signs(&packed)
     );
-    for (name, text) in [("glue", glue), ("start", boot)] {
-        let text = text.to_ascii_lowercase();
-        for bad in ["</script", "<script", "<!--"] {
-            ensure!(
-                !text.contains(bad),
-                "the {name} holds {bad:?}, which would end or confuse the script element"
-            );
-        }
+    let text = boot.to_ascii_lowercase();
+    for bad in ["</script", "<script", "<!--"] {
+        ensure!(
+            !text.contains(bad),
+            "the start holds {bad:?}, which would end or confuse the script element"
+        );
     }
     Ok(script)
 }
 
-/// The shell with styles, script and a policy that admits these two and nothing else.
-pub(crate) fn inline(shell: &str, styles: &str, script: &str) -> Result<String> {
+/// The shell with styles, script and a policy that admits these two, the script that is packed, and nothing else.
+pub(crate) fn inline(shell: &str, styles: &str, script: &str, packed: &str) -> Result<String> {
     ensure!(!styles.to_ascii_lowercase().contains("</style"), "the styles hold \"</style\"");
     for mark in [CHARSET, STYLES, SCRIPT_START] {
         ensure!(shell.matches(mark).count() == 1, "index.html must hold {mark} exactly once");
@@ -79,9 +85,10 @@ pub(crate) fn inline(shell: &str, styles: &str, script: &str) -> Result<String> 
     ensure!(shell.matches("<script").count() == 1, "index.html may hold one script only");
     ensure!(shell.matches("<style").count() == 0, "index.html may hold no styles of its own");
     let policy = format!(
-        "default-src 'none'; script-src {} 'wasm-unsafe-eval'; style-src {}; img-src data: blob:; \
+        "default-src 'none'; script-src {} {} 'wasm-unsafe-eval'; style-src {}; img-src data: blob:; \
          base-uri 'none'; form-action 'none'",
         hash(script),
+        hash(packed),
         hash(styles)
     );
     let meta = format!("{CHARSET}\n<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
@@ -108,7 +115,7 @@ mod tests {
 
     #[test]
     fn the_root_shell_takes_styles_script_and_policy() {
-        let page = inline(SHELL, "p{color:red}", "run();").expect("a page");
+        let page = inline(SHELL, "p{color:red}", "run();", "glue();").expect("a page");
         assert!(page.contains("<style>p{color:red}</style>"));
         assert!(page.contains("<script>run();</script>\n</body>"));
         assert!(!page.contains("src=\"web/") && !page.contains("href=\"web/") && !page.contains("onerror"));
@@ -123,10 +130,10 @@ mod tests {
     fn the_policy_names_the_hash_of_exactly_what_is_inlined() {
         // The example of Content Security Policy Level 3, section on hash usage: the hash of `alert('Hello, world.');`.
         assert_eq!(hash("alert('Hello, world.');"), "'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='");
-        let page = inline(SHELL, "", "alert('Hello, world.');").expect("a page");
+        let page = inline(SHELL, "", "alert('Hello, world.');", "glue();").expect("a page");
         assert!(
             page.contains(
-                "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng=' 'wasm-unsafe-eval'"
+                "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng=' 'sha256-keBnXVhOaGUGIEp2PYdksxtoNPr9wBG2YBI1E5vQrRg=' 'wasm-unsafe-eval'"
             )
         );
     }
@@ -134,18 +141,17 @@ mod tests {
     #[test]
     fn text_that_would_end_its_element_is_refused() {
         for bad in ["a = '</SCRIPT>';", "a = '<script>';", "a = '<!-- ';"] {
-            assert!(script(b"", bad, "").is_err(), "{bad} in the glue");
             assert!(script(b"", "", bad).is_err(), "{bad} in the start");
         }
         assert!(script(b"", "let a = 1 < 2;", "").is_ok());
-        assert!(inline(SHELL, "</Style>", "").is_err());
+        assert!(inline(SHELL, "</Style>", "", "").is_err());
     }
 
     #[test]
     fn a_shell_that_changed_its_marks_is_refused() {
-        assert!(inline(&SHELL.replace(STYLES, ""), "", "").is_err());
-        assert!(inline(&SHELL.replace("</body>", "<script>more()</script></body>"), "", "").is_err());
-        assert!(inline(&SHELL.replace("web/dist/page.js", "page.js"), "", "").is_err());
+        assert!(inline(&SHELL.replace(STYLES, ""), "", "", "").is_err());
+        assert!(inline(&SHELL.replace("</body>", "<script>more()</script></body>"), "", "", "").is_err());
+        assert!(inline(&SHELL.replace("web/dist/page.js", "page.js"), "", "", "").is_err());
     }
 
     #[test]
