@@ -154,3 +154,11 @@ function focusOn(id) {
   }
   target.focus();
 }
+
+// The styles of what the program draws. Where the shell has its own sheets beside it, they are there already.
+function wear(styles) {
+  if (typeof document === "undefined" || document.querySelector("link[rel=stylesheet]")) return;
+  const style = document.createElement("style");
+  style.textContent = styles;
+  document.head.append(style);
+}

@@ -10,6 +10,7 @@ mod shell;
 use anyhow::{Context, Result, bail, ensure};
 use compile::{What, Workspace};
 use parts::Parts;
+use shell::Inlined;
 use std::fs;
 
 /// The most that the file to mail may weigh.
@@ -27,13 +28,20 @@ fn main() -> Result<()> {
         let path = workspace.root.join(path);
         fs::read_to_string(&path).with_context(|| format!("cannot read {}", path.display()))
     };
-    let styles = shell::with_imports(&read("web/page.css")?, |name| read(&format!("web/{name}")))?;
-    let (styles, glue, boot) =
-        (shell::lean(&styles), shell::lean(&program.glue), shell::lean(&read("web/boot.js")?));
-    let with = shell::packed_script(&glue, &shell::lean(&read("web/lend.js")?));
+    let list = read("web/page.css")?;
+    let (first, others) = shell::first_sheet(&list)?;
+    let sheets = |list: &str| {
+        shell::with_imports(list, |name| read(&format!("web/{name}"))).map(|styles| shell::lean(&styles))
+    };
+    let (styles, packed_styles) = (sheets(first)?, sheets(others)?);
+    let (glue, boot) = (shell::lean(&program.glue), shell::lean(&read("web/boot.js")?));
+    let with = shell::packed_script(&packed_styles, &glue, &shell::lean(&read("web/lend.js")?))?;
     let page = read("index.html")?;
     let script = shell::script(&program.wasm, &with, &boot)?;
-    let html = shell::inline(&page, &styles, &script, &with)?;
+    let html = shell::inline(
+        &page,
+        &Inlined { styles: &styles, script: &script, packed_styles: &packed_styles, packed_script: &with },
+    )?;
 
     let dist = workspace.root.join("web/dist");
     fs::create_dir_all(&dist)?;
@@ -56,10 +64,10 @@ fn main() -> Result<()> {
     row("  of that code", parts.code);
     row("  of that data", parts.data);
     row("program, packed", packing::pack(&program.wasm)?.len());
-    row("glue and borrowed", with.len());
+    row("glue, borrowed, styles", with.len());
     row("both packed, as text", script.len() - boot.len());
     row("start", boot.len());
-    row("styles", styles.len());
+    row("styles of the shell", styles.len());
     row("shell", page.len());
     row("web/dist/page.js", script.len());
     row("web/dist/thimbleworth.html", html.len());
