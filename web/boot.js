@@ -1,94 +1,169 @@
-// The page's one script that is not packed; before it stand UNPACKER, SIZES and PAYLOAD (see web/pack/src/packing.rs).
+// What the program asks of the browser, packed with it and unpacked by start.js; before it stands `wasm_bindgen`.
 // With a document it starts the page; without one (a test that computes) it only makes `account` ready.
+// The functions below are called by the program, through src/browser.rs.
 
-// How many bytes of the program are unpacked at a time.
-const PIECE = 262144;
+const LARGEST_FILE = 8 * 1024 * 1024;
+let kept = null;
+let hear = null;
 
-// Seven bits a character, lowest first; one of two bytes has fourteen. See web/pack/src/packing.rs.
-const APART = [0, 10, 13, 34, 60, 92];
-
-function bytesOf([size, signs]) {
-  const bytes = new Uint8Array(size);
-  let held = 0;
-  let bits = 0;
-  let at = 0;
-  for (let i = 0; i < signs.length; i += 1) {
-    const sign = signs.charCodeAt(i);
-    if (sign < 128) {
-      held |= sign << bits;
-      bits += 7;
-    } else {
-      held |= (APART[(sign - 160) >> 7] | (((sign - 160) & 127) << 7)) << bits;
-      bits += 14;
-    }
-    while (bits >= 8) {
-      bytes[at] = held;
-      at += 1;
-      held >>>= 8;
-      bits -= 8;
-    }
-  }
-  return bytes;
+function keepPlan(name, text) {
+  kept = { name, text };
 }
 
-// The program and the script that goes with it. Unpacked a piece a turn, so that the browser compiles what is there while the
-// next is unpacked.
-async function unpacked() {
-  const packed = bytesOf(PAYLOAD);
-  const from = 65536;
-  const to = from + packed.length;
-  const [programSize, scriptSize] = SIZES;
-  const programEnd = to + programSize;
-  const memory = new WebAssembly.Memory({ initial: Math.ceil((programEnd + scriptSize) / 65536) });
-  new Uint16Array(memory.buffer, 0, 7164).fill(1024);
-  new Uint8Array(memory.buffer, from).set(packed);
-  const { instance } = await WebAssembly.instantiate(bytesOf(UNPACKER), { "": { memory } });
-  const { begin, unpack } = instance.exports;
-  begin(from, to);
-  let at = to;
-  const pull = (pieces) => {
-    const end = Math.min(unpack(Math.min(at + PIECE, programEnd)), programEnd);
-    pieces.enqueue(new Uint8Array(memory.buffer, at, end - at));
-    at = end;
-    if (at === programEnd) pieces.close();
-  };
-  const headers = { "content-type": "application/wasm" };
-  const module = await WebAssembly.compileStreaming(new Response(new ReadableStream({ pull }), { headers }));
-  unpack(programEnd + scriptSize);
-  return { module, script: new TextDecoder().decode(new Uint8Array(memory.buffer, programEnd, scriptSize)) };
+// The program has stopped, so nothing of it may be called here.
+function showStopped() {
+  const notice = document.getElementById("stopped");
+  if (!notice || !notice.hidden) return;
+  if (kept) {
+    const button = document.createElement("button");
+    button.type = "button";
+    button.textContent = "Save the plan as it was last seen";
+    button.addEventListener("click", () => download(kept.name, kept.text, "application/json"));
+    notice.append(" ", button);
+  }
+  notice.hidden = false;
+  notice.scrollIntoView();
 }
 
-// The policy of the page knows the hash of this script. Where there is no document, a test lends what runs it.
-function run(text) {
-  if (typeof document === "undefined") {
-    globalThis.runScript(text);
-    return;
+async function read(file) {
+  const fits = file.size <= LARGEST_FILE;
+  hear(file.name, file.size, fits ? new Uint8Array(await file.arrayBuffer()) : new Uint8Array());
+}
+
+function watchFiles(callback) {
+  hear = callback;
+  const carries = (event) => event.dataTransfer && [...event.dataTransfer.types].includes("Files");
+  document.addEventListener("dragover", (event) => {
+    if (!carries(event)) return;
+    event.preventDefault();
+    document.body.classList.add("dropping");
+  });
+  document.addEventListener("dragleave", (event) => {
+    if (!event.relatedTarget) document.body.classList.remove("dropping");
+  });
+  document.addEventListener("drop", (event) => {
+    if (!carries(event)) return;
+    event.preventDefault();
+    document.body.classList.remove("dropping");
+    if (event.dataTransfer.files[0]) read(event.dataTransfer.files[0]);
+  });
+}
+
+function chooseFile() {
+  const input = document.createElement("input");
+  input.type = "file";
+  input.accept = ".json,application/json";
+  input.hidden = true;
+  input.addEventListener("change", () => {
+    if (input.files[0]) read(input.files[0]);
+    input.remove();
+  });
+  document.body.append(input);
+  input.click();
+}
+
+function download(name, text, type) {
+  const url = URL.createObjectURL(new Blob([text], { type }));
+  const link = document.createElement("a");
+  link.href = url;
+  link.download = name;
+  link.hidden = true;
+  document.body.append(link);
+  link.click();
+  link.remove();
+  setTimeout(() => URL.revokeObjectURL(url), 60000);
+}
+
+async function saveFile(name, text, type, callback) {
+  if (typeof showSaveFilePicker === "function") {
+    try {
+      const handle = await showSaveFilePicker({ suggestedName: name });
+      const stream = await handle.createWritable();
+      await stream.write(text);
+      await stream.close();
+      callback(handle.name);
+      return;
+    } catch (error) {
+      if (error && error.name === "AbortError") {
+        callback(undefined);
+        return;
+      }
+    }
   }
-  const script = document.createElement("script");
-  script.textContent = text;
-  document.head.append(script);
+  download(name, text, type);
+  callback(name);
+}
+
+// A cell that a spreadsheet would take for a formula is marked as text.
+function cellText(cell) {
+  if (cell.dataset.value !== undefined) return cell.dataset.value;
+  const text = cell.innerText.replace(/\s+/g, " ").trim();
+  return /^[=+\-@\t\r]/.test(text) ? `'${text}` : text;
+}
+
+async function copyTable(id, callback) {
+  try {
+    const rows = [...document.getElementById(id).rows];
+    const text = rows.map((row) => [...row.cells].map(cellText).join("\t")).join("\n");
+    await navigator.clipboard.writeText(text);
+    callback("");
+  } catch (error) {
+    callback(String((error && error.message) || error));
+  }
+}
+
+function askBeforeLeaving(event) {
+  event.preventDefault();
+  event.returnValue = "";
+}
+
+function guardLeaving(unsaved) {
+  const change = unsaved ? "addEventListener" : "removeEventListener";
+  window[change]("beforeunload", askBeforeLeaving);
+}
+
+function storeGet(key) {
+  try {
+    return localStorage.getItem(key) ?? undefined;
+  } catch {
+    return undefined;
+  }
+}
+
+function storePut(key, text) {
+  try {
+    if (text === undefined) localStorage.removeItem(key);
+    else localStorage.setItem(key, text);
+    return "";
+  } catch (error) {
+    return String((error && error.message) || error || "no storage");
+  }
+}
+
+function focusOn(id) {
+  let path = id;
+  let place = document.getElementById(path);
+  while (!place && path) {
+    path = path.slice(0, Math.max(path.lastIndexOf("."), path.lastIndexOf("["), 0));
+    place = document.getElementById(path);
+  }
+  if (!place) return;
+  const field = place.matches("input, select, textarea") ? place : place.querySelector("input, select, textarea");
+  const target = field || (place.hasAttribute("tabindex") ? place : place.querySelector("button") || place);
+  for (let fold = target.closest("details:not([open])"); fold; fold = fold.parentElement.closest("details:not([open])")) {
+    fold.open = true;
+  }
+  target.focus();
 }
 
 async function load() {
-  if (typeof WebAssembly !== "object") {
-    throw new Error("this browser lacks WebAssembly. A current browser has it");
-  }
-  const { module, script } = await unpacked();
-  run(script);
-  const { program } = globalThis.thimbleworth;
-  program.initSync({ module });
-  return { account: program.account, start: program.start_page };
-}
-
-function showFailure(error) {
-  const place = document.getElementById("boot");
-  place.textContent = `The page could not start: ${error && error.message ? error.message : error}.`;
-  place.hidden = false;
-  console.error(error);
+  wasm_bindgen.initSync({ module: await WebAssembly.compileStreaming(globalThis.thimbleworth.program()) });
+  return { account: wasm_bindgen.account };
 }
 
 const ready = load();
+const { showFailure } = globalThis.thimbleworth;
 globalThis.thimbleworth = { ready };
 if (typeof document !== "undefined") {
-  ready.then(({ start }) => start()).catch(showFailure);
+  ready.then(() => wasm_bindgen.start_page()).catch(showFailure);
 }

@@ -6,8 +6,6 @@ import { createContext, runInContext } from "node:vm";
 export function load(file) {
   const lent = { console, ReadableStream, Response, TextDecoder, TextEncoder, WebAssembly };
   const context = createContext(lent);
-  // The glue comes out of the packed program and is run where the program is.
-  lent.runScript = (text) => runInContext(text, context, { filename: `${file}, unpacked` });
   runInContext(readFileSync(file, "utf8"), context, { filename: file });
   return context.thimbleworth.ready;
 }

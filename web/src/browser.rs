@@ -1,4 +1,4 @@
-//! What only the browser can do: files, the clipboard, storage, dialogs. The other side stands in `lend.js`.
+//! What only the browser can do: files, the clipboard, storage, dialogs. The other side stands in `boot.js`.
 use wasm_bindgen::prelude::{Closure, JsValue, wasm_bindgen};
 
 #[wasm_bindgen]

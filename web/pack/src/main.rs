@@ -10,11 +10,14 @@ mod shell;
 use anyhow::{Context, Result, bail, ensure};
 use compile::{What, Workspace};
 use parts::Parts;
-use shell::Inlined;
+use shell::Load;
 use std::fs;
 
 /// The most that the file to mail may weigh.
 const LIMIT_BYTES: usize = 600_000;
+
+/// The sheet that the first sight needs; the others are packed with the program.
+const FIRST_SHEET: &str = "web/style/paper.css";
 
 fn main() -> Result<()> {
     let what = match std::env::args().skip(1).collect::<Vec<_>>().as_slice() {
@@ -28,20 +31,19 @@ fn main() -> Result<()> {
         let path = workspace.root.join(path);
         fs::read_to_string(&path).with_context(|| format!("cannot read {}", path.display()))
     };
-    let list = read("web/page.css")?;
-    let (first, others) = shell::first_sheet(&list)?;
-    let sheets = |list: &str| {
-        shell::with_imports(list, |name| read(&format!("web/{name}"))).map(|styles| shell::lean(&styles))
-    };
-    let (styles, packed_styles) = (sheets(first)?, sheets(others)?);
+    let styles =
+        shell::lean(&shell::with_imports(&read("web/page.css")?, |name| read(&format!("web/{name}")))?);
+    let first_styles = shell::lean(&read(FIRST_SHEET)?);
+    let late_styles = styles
+        .strip_prefix(&first_styles)
+        .with_context(|| format!("web/page.css does not begin with {FIRST_SHEET}"))?;
     let (glue, boot) = (shell::lean(&program.glue), shell::lean(&read("web/boot.js")?));
-    let with = shell::packed_script(&packed_styles, &glue, &shell::lean(&read("web/lend.js")?))?;
+    let second_script = shell::second_script(&glue, &boot);
+    let load = Load { styles: late_styles, script: &second_script, program: &program.wasm };
+    let start = shell::lean(&read("web/start.js")?);
     let page = read("index.html")?;
-    let script = shell::script(&program.wasm, &with, &boot)?;
-    let html = shell::inline(
-        &page,
-        &Inlined { styles: &styles, script: &script, packed_styles: &packed_styles, packed_script: &with },
-    )?;
+    let script = shell::first_script(&load, &start)?;
+    let html = packing::in_utf16(&shell::inline(&page, &first_styles, &script, &load)?);
 
     let dist = workspace.root.join("web/dist");
     fs::create_dir_all(&dist)?;
@@ -63,11 +65,12 @@ fn main() -> Result<()> {
     row("program", program.wasm.len());
     row("  of that code", parts.code);
     row("  of that data", parts.data);
-    row("program, packed", packing::pack(&program.wasm)?.len());
-    row("glue, borrowed, styles", with.len());
-    row("both packed, as text", script.len() - boot.len());
-    row("start", boot.len());
-    row("styles of the shell", styles.len());
+    row("program, packed alone", packing::pack(&program.wasm)?.len());
+    row("glue", glue.len());
+    row("the browser's side", boot.len());
+    row("styles", styles.len());
+    row("  of that at once", first_styles.len());
+    row("start", start.len());
     row("shell", page.len());
     row("web/dist/page.js", script.len());
     row("web/dist/thimbleworth.html", html.len());

@@ -1,6 +1,6 @@
 //! The shell and what is inlined into it: pure functions from text to text.
 use crate::packing::{pack, signs, unpacker};
-use anyhow::{Context, Result, ensure};
+use anyhow::{Result, ensure};
 use base64::Engine;
 use base64::engine::general_purpose::STANDARD as BASE64;
 use sha2::{Digest, Sha256};
@@ -12,12 +12,6 @@ const SCRIPT_END: &str = "</script>";
 const STYLES: &str = r#"<link rel="stylesheet" href="web/page.css">"#;
 /// The policy goes behind this element: it must stand before anything that it governs.
 const CHARSET: &str = r#"<meta charset="utf-8">"#;
-
-/// The list of sheets in two: the first, which the shell needs, and the others.
-pub(crate) fn first_sheet(list: &str) -> Result<(&str, &str)> {
-    let at = list.find("@import").and_then(|from| Some(from + list.get(from..)?.find('\n')? + 1));
-    at.map(|at| list.split_at(at)).context("web/page.css imports nothing")
-}
 
 /// The styles with every sheet that they import in its place: in one file there is nothing to import from.
 pub(crate) fn with_imports(styles: &str, read: impl Fn(&str) -> Result<String>) -> Result<String> {
@@ -52,51 +46,47 @@ pub(crate) fn lean(text: &str) -> String {
     out
 }
 
-/// The script that is packed with the program: the styles of what the program draws, what it borrows from the browser, and
-/// its glue, hidden from the global scope.
-pub(crate) fn packed_script(styles: &str, glue: &str, lend: &str) -> Result<String> {
-    let styles = serde_json::to_string(styles)?;
-    Ok(format!(
-        "(function () {{\n\"use strict\";\n{lend}\nwear({styles});\n{glue}\nthimbleworth.program = wasm_bindgen;\n}})();\n"
-    ))
+/// What is packed, in the order in which it is unpacked.
+pub(crate) struct Load<'a> {
+    /// The styles that are not needed for the first sight.
+    pub(crate) styles: &'a str,
+    /// The glue and what the program asks of the browser.
+    pub(crate) script: &'a str,
+    pub(crate) program: &'a [u8],
 }
 
-/// The one script that stands in the page: program and script, packed, and the start.
-pub(crate) fn script(program: &[u8], with: &str, boot: &str) -> Result<String> {
-    let (packed, unpacker) = (pack(&[program, with.as_bytes()].concat())?, unpacker()?);
-    let script = format!(
-        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}];\n\
-         const PAYLOAD = [{}, \"{}\"];\n{boot}}})();\n",
-        unpacker.len(),
-        signs(&unpacker),
-        program.len(),
-        with.len(),
-        packed.len(),
-        signs(&packed)
-    );
-    let text = boot.to_ascii_lowercase();
+/// The glue and the other side of the program in one, hidden from the global scope.
+pub(crate) fn second_script(glue: &str, boot: &str) -> String {
+    format!("(function () {{\n\"use strict\";\n{glue}\n{boot}}})();\n")
+}
+
+/// The script that stands in the page: the packed load and what unpacks it.
+pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<String> {
+    let whole = [load.styles.as_bytes(), load.script.as_bytes(), load.program].concat();
+    let (packed, unpacker) = (pack(&whole)?, unpacker()?);
+    let lowered = start.to_ascii_lowercase();
     for bad in ["</script", "<script", "<!--"] {
         ensure!(
-            !text.contains(bad),
+            !lowered.contains(bad),
             "the start holds {bad:?}, which would end or confuse the script element"
         );
     }
-    Ok(script)
+    Ok(format!(
+        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}, {}];\n\
+         const LOAD = [{}, \"{}\"];\n{start}}})();\n",
+        unpacker.len(),
+        signs(&unpacker),
+        load.styles.len(),
+        load.script.len(),
+        load.program.len(),
+        packed.len(),
+        signs(&packed)
+    ))
 }
 
-/// What is put into the shell, and what is packed; the policy admits these and nothing else.
-pub(crate) struct Inlined<'a> {
-    /// The styles of the shell itself.
-    pub(crate) styles: &'a str,
-    pub(crate) script: &'a str,
-    /// The styles and the script that come out of the packed program.
-    pub(crate) packed_styles: &'a str,
-    pub(crate) packed_script: &'a str,
-}
-
-/// The shell with styles, script and policy.
-pub(crate) fn inline(shell: &str, parts: &Inlined<'_>) -> Result<String> {
-    let Inlined { styles, script, .. } = *parts;
+/// The shell with the styles of the first sight, the script and a policy that admits these, what the script unpacks and
+/// nothing else.
+pub(crate) fn inline(shell: &str, styles: &str, script: &str, load: &Load<'_>) -> Result<String> {
     ensure!(!styles.to_ascii_lowercase().contains("</style"), "the styles hold \"</style\"");
     for mark in [CHARSET, STYLES, SCRIPT_START] {
         ensure!(shell.matches(mark).count() == 1, "index.html must hold {mark} exactly once");
@@ -107,11 +97,12 @@ pub(crate) fn inline(shell: &str, parts: &Inlined<'_>) -> Result<String> {
         "default-src 'none'; script-src {} {} 'wasm-unsafe-eval'; style-src {} {}; img-src data: blob:; \
          base-uri 'none'; form-action 'none'",
         hash(script),
-        hash(parts.packed_script),
+        hash(load.script),
         hash(styles),
-        hash(parts.packed_styles)
+        hash(load.styles)
     );
-    let meta = format!("{CHARSET}\n<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
+    // The file says by its first bytes how it is written; a second word on it could only be wrong.
+    let meta = format!("<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
     let page = shell.replace(CHARSET, &meta).replace(STYLES, &format!("<style>{styles}</style>"));
     let Some((before, rest)) = page.split_once(SCRIPT_START) else {
         anyhow::bail!("index.html lost its script");
@@ -132,14 +123,11 @@ mod tests {
     use super::*;
 
     const SHELL: &str = include_str!("../../../index.html");
-
-    fn inlined(shell: &str, styles: &str, script: &str) -> Result<String> {
-        inline(shell, &Inlined { styles, script, packed_styles: "", packed_script: "glue();" })
-    }
+    const NOTHING: Load<'static> = Load { styles: "", script: "", program: b"" };
 
     #[test]
     fn the_root_shell_takes_styles_script_and_policy() {
-        let page = inlined(SHELL, "p{color:red}", "run();").expect("a page");
+        let page = inline(SHELL, "p{color:red}", "run();", &NOTHING).expect("a page");
         assert!(page.contains("<style>p{color:red}</style>"));
         assert!(page.contains("<script>run();</script>\n</body>"));
         assert!(!page.contains("src=\"web/") && !page.contains("href=\"web/") && !page.contains("onerror"));
@@ -154,28 +142,31 @@ mod tests {
     fn the_policy_names_the_hash_of_exactly_what_is_inlined() {
         // The example of Content Security Policy Level 3, section on hash usage: the hash of `alert('Hello, world.');`.
         assert_eq!(hash("alert('Hello, world.');"), "'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='");
-        let page = inlined(SHELL, "", "alert('Hello, world.');").expect("a page");
-        assert!(
-            page.contains(
-                "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng=' 'sha256-keBnXVhOaGUGIEp2PYdksxtoNPr9wBG2YBI1E5vQrRg=' 'wasm-unsafe-eval'"
-            )
-        );
+        let load = Load { styles: "b{}", script: "let second;", program: b"" };
+        let page = inline(SHELL, "a{}", "alert('Hello, world.');", &load).expect("a page");
+        let scripts = "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='";
+        assert!(page.contains(&format!("{scripts} {} 'wasm-unsafe-eval';", hash("let second;"))));
+        assert!(page.contains(&format!("style-src {} {};", hash("a{}"), hash("b{}"))));
     }
 
     #[test]
     fn text_that_would_end_its_element_is_refused() {
         for bad in ["a = '</SCRIPT>';", "a = '<script>';", "a = '<!-- ';"] {
-            assert!(script(b"", "", bad).is_err(), "{bad} in the start");
+            assert!(first_script(&NOTHING, bad).is_err(), "{bad} in the start");
         }
-        assert!(script(b"", "let a = 1 < 2;", "").is_ok());
-        assert!(inlined(SHELL, "</Style>", "").is_err());
+        assert!(first_script(&NOTHING, "let a = 1 < 2;").is_ok());
+        assert!(inline(SHELL, "</Style>", "", &NOTHING).is_err());
     }
 
     #[test]
     fn a_shell_that_changed_its_marks_is_refused() {
-        assert!(inlined(&SHELL.replace(STYLES, ""), "", "").is_err());
-        assert!(inlined(&SHELL.replace("</body>", "<script>more()</script></body>"), "", "").is_err());
-        assert!(inlined(&SHELL.replace("web/dist/page.js", "page.js"), "", "").is_err());
+        for shell in [
+            SHELL.replace(STYLES, ""),
+            SHELL.replace("</body>", "<script>more()</script></body>"),
+            SHELL.replace("web/dist/page.js", "page.js"),
+        ] {
+            assert!(inline(&shell, "", "", &NOTHING).is_err());
+        }
     }
 
     #[test]
@@ -197,17 +188,6 @@ mod tests {
             sheets += 1;
         }
         assert_eq!(list.matches("@import").count(), sheets);
-    }
-
-    #[test]
-    fn the_shell_takes_the_first_sheet_alone() {
-        let (first, rest) =
-            first_sheet("/* a */\n\n@import \"a.css\";\n@import \"b.css\";\n").expect("two parts");
-        assert!(first.ends_with("@import \"a.css\";\n"));
-        assert_eq!(rest, "@import \"b.css\";\n");
-        assert!(first_sheet("a {}").is_err());
-        let (first, _) = first_sheet(include_str!("../../page.css")).expect("two parts");
-        assert!(first.contains("paper.css"), "the shell's own looks");
     }
 
     #[test]
