@@ -8,6 +8,8 @@
 //! All bars and bands are to scale from zero. What would be thinner than a pixel is a hairline, with its amount beside it.
 
 mod books;
+mod chart;
+mod circuit;
 mod co2_lines;
 mod co2_map;
 mod difference;
@@ -23,6 +25,7 @@ mod tests;
 mod year;
 
 pub use books::Per;
+pub use circuit::{circuit, extraction};
 pub use co2_map::co2_map;
 pub use difference::difference;
 pub use draw::{Node, plate, to_html, to_svg_text};

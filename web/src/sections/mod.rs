@@ -4,6 +4,7 @@ mod assumptions;
 mod carbon_dioxide;
 mod comparison;
 mod desk;
+mod energy;
 mod finding;
 mod hazard;
 mod leaf;
@@ -30,6 +31,7 @@ static SECTIONS: &[&Section] = &[
     &desk::SECTION,
     &site::SECTION,
     &carbon_dioxide::SECTION,
+    &energy::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,
     &assumptions::SECTION,
