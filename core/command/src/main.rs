@@ -5,6 +5,7 @@
 #![forbid(unsafe_code)]
 
 mod account;
+mod case;
 mod check;
 mod co2;
 mod demo;
@@ -45,6 +46,8 @@ enum What {
     Account(account::Args),
     /// Every route beside the present one, with a finding
     Compare(account::Args),
+    /// The case for switching on one page, with an annex; or what differs from an older plan
+    Case(case::Args),
     /// How sure the figures are: intervals, odds against the present route, what matters most
     Odds(odds::Args),
     /// The postings, rules and inputs behind one figure
@@ -82,6 +85,7 @@ fn main() -> ExitCode {
         None => demo::run(),
         Some(What::Account(args)) => account::run(args, account::What::Account),
         Some(What::Compare(args)) => account::run(args, account::What::Comparison),
+        Some(What::Case(args)) => case::run(args),
         Some(What::Odds(args)) => odds::run(args),
         Some(What::Trace(args)) => trace::run(args),
         Some(What::Waste(args)) => waste::run(args),

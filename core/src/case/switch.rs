@@ -107,14 +107,14 @@ fn conditions(
             let there = other.value("time.there").unwrap_or(0.0) / 3600.0;
             let mode = if new.time.unattended { "attended and unattended" } else { "attended" };
             let mut text = format!(
-                "{} instruments for {}: {} h of runs a year, {} {mode} h in which one can run",
-                significant(needed, 4),
+                "instruments of {}: {} needed, for {} h of runs a year where one can run {} {mode} h",
                 new.name,
+                significant(needed, 4),
                 significant(hours, 4),
                 significant(there, 4)
             );
             if to_buy > 0.0 {
-                text.push_str(&format!("; {} of them are not there and are bought", significant(to_buy, 4)));
+                text.push_str(&format!("; {} not there and to be bought", significant(to_buy, 4)));
             }
             out.push(text);
         }

@@ -15,6 +15,7 @@ mod reading;
 mod sampled;
 
 pub use column::{MOST_STOPPED, RouteColumns, Stopped};
+pub use name::input_words;
 pub use reading::{FigureReading, Matter, Reading, Rival, Spreading};
 pub use sampled::{MOST_CELLS, Sampled, Wish};
 

@@ -2,13 +2,19 @@
 
 use crate::program::WorkloadProgram;
 
-/// The input of this identity in words: `density of n-hexane`, `Soxhlet, step 3 (Soxhlet): charge`.
+/// The input of this identity in words: `density of n-hexane`, `Soxhlet, step 3 (Soxhlet extraction): charge`, `price of
+/// acetone`.
 #[must_use]
-pub(super) fn input_words(work: &WorkloadProgram, identity: &str) -> String {
+pub fn input_words(work: &WorkloadProgram, identity: &str) -> String {
     let plain =
-        |path: &str| path.trim_start_matches('.').replace(['_', '[', ']', '"'], " ").trim().to_owned();
+        |path: &str| path.trim_start_matches('.').replace(['_', '[', ']', '"', '.'], " ").trim().to_owned();
     if let Some((name, property)) = identity.strip_prefix("material/").and_then(|r| r.rsplit_once('/')) {
         return format!("{} of {name}", property.replace('_', " "));
+    }
+    for (under, words) in [("site.money.prices", "price of"), ("site.money.disposal", "removal of")] {
+        if let Some(name) = identity.strip_prefix(under) {
+            return format!("{words} {}", name.trim_start_matches('.').replace(['[', ']', '"'], ""));
+        }
     }
     for route in &work.routes {
         let Some(rest) = identity.strip_prefix(route.path.as_str()) else { continue };

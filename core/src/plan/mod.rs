@@ -3,6 +3,7 @@
 //! [`open`] reads it strictly and [`save`] writes it back byte for byte; [`schema`] describes it to other programs.
 //! This room knows the form of the document and nothing of what it means: techniques, units, bounds and places are
 //! checked where they are known.
+mod differences;
 mod document;
 mod keys;
 mod migrate;
@@ -16,6 +17,7 @@ mod schema;
 mod tree;
 mod write;
 
+pub use differences::{Change, differences};
 pub use document::{
     Electricity, Field, OtherWaste, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream,
     Workload,

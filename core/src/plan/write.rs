@@ -73,7 +73,7 @@ impl From<Entries> for Node {
     }
 }
 
-fn tree(plan: &Plan) -> Node {
+pub(super) fn tree(plan: &Plan) -> Node {
     let mut out = Entries::default();
     out.put(VERSION_KEY, Node::Number(PLAN_VERSION.to_string()));
     out.text("title", &plan.title);

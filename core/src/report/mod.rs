@@ -7,6 +7,7 @@
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
 //! | [`energy_sheets`] | energy by step and CO2 by state, tables for all of them |
+//! | [`case_markdown`], [`since_markdown`] | the paper for finance and quality; what differs from an older plan |
 //! | [`air_sheets`] | the air of the room, its limits, a cylinder that lets go |
 //! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
 //! | [`paper()`] | a paper of the waste desk: codes, labels, contents, months, pick-ups, load |
@@ -15,6 +16,7 @@
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
 mod air;
+mod case;
 mod csv;
 mod energy;
 mod grid;
@@ -29,6 +31,7 @@ mod trace;
 mod words;
 
 pub use air::{air_sheets, by_volume};
+pub use case::{case_markdown, money_words, payback_words, since_markdown, turn_words};
 pub use csv::{result_csv, text_cell};
 pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
 pub use markdown::{escaped, markdown};
