@@ -1,7 +1,7 @@
 //! A circuit of CO2 on the plane of pressure and enthalpy with its saturation dome, and the extraction curve of a step.
 use super::chart::{Axis, Mark, chart};
 use super::letter::written;
-use super::{Picture, Size};
+use super::{Head, Picture, Size, Table};
 use thimbleworth::co2::{CRITICAL_TEMPERATURE_K, TRIPLE_TEMPERATURE_K, saturated_states};
 use thimbleworth::step::DenseCo2;
 
@@ -81,6 +81,8 @@ pub fn extraction(key: &str, route: &str, dense: &DenseCo2) -> Option<Picture> {
     // The least that solubility allows, up to all there is.
     let full = start / needed.loading_kg_kg;
     let least = vec![(0.0, 0.0), if full < far { (full, start) } else { (far, far * needed.loading_kg_kg) }];
+    let rows =
+        points.iter().step_by(6).map(|(q, e)| vec![written(*q, 3), written(100.0 * e / start, 3)]).collect();
     let share = |points: Vec<(f64, f64)>| points.into_iter().map(|(q, e)| (q, 100.0 * e / start)).collect();
     let marks = [
         curve(share(least), "level"),
@@ -102,8 +104,63 @@ pub fn extraction(key: &str, route: &str, dense: &DenseCo2) -> Option<Picture> {
         ),
         description: format!("The CO₂ holds {}\u{a0}g in a kilogram where it is saturated.", written(1e3 * needed.loading_kg_kg, 3)),
         notes: vec!["The thin line is CO₂ saturated to the end, the least that solubility allows; the thick one the plan's curve.".to_owned()],
-        tables: Vec::new(),
+        tables: vec![Table {
+            caption: "Extraction curve".into(),
+            head: vec![Head::number("CO₂ for each kg of solid (kg)"), Head::number("Out of the solid (%)")],
+            rows,
+        }],
         wide: chart(&x, &y, &marks, Size::Wide),
         narrow: chart(&x, &y, &marks, Size::Narrow),
     })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::picture::Shape;
+    use thimbleworth::account::account_text;
+    use thimbleworth::example::example;
+
+    fn dense(text: &str) -> DenseCo2 {
+        let account = account_text(text);
+        account.workloads[0].routes.iter().flatten().find_map(|r| r.dense.first()).unwrap().1.clone()
+    }
+
+    #[test]
+    fn every_state_of_the_circuit_stands_in_the_frame() {
+        for key in ["botanical-pilot", "harbour-sediment", "garment-cleaning", "textile-dyeing"] {
+            let dense = dense(example(key).unwrap().text);
+            let picture = circuit("k", "A", &dense);
+            for drawing in [&picture.wide, &picture.narrow] {
+                let mut marks = 0;
+                for shape in &drawing.shapes {
+                    let Shape::Path { d, class: "mark", .. } = shape else { continue };
+                    let (x, y) = d.as_str()[1..].split_once('A').unwrap().0.split_once(' ').unwrap();
+                    let (x, y): (f64, f64) = (x.parse().unwrap(), y.parse().unwrap());
+                    assert!(
+                        (30.0..drawing.width).contains(&x) && (20.0..drawing.height - 40.0).contains(&y),
+                        "{key} {x} {y}"
+                    );
+                    marks += 1;
+                }
+                assert_eq!(marks, dense.legs.points.len(), "{key}");
+            }
+        }
+    }
+
+    #[test]
+    fn a_curve_is_drawn_where_a_solubility_is_stated() {
+        let text = example("botanical-pilot").unwrap().text;
+        assert!(extraction("k", "A", &dense(text)).is_none());
+        let oil = text.replace(
+            "\"in_marc\": \"0.01 g/g\",",
+            "\"in_marc\": \"0.01 g/g\", \"solubility\": \"vegetable oil\", \"sought\": \"hop resin and oil\",",
+        );
+        let picture = extraction("k", "A", &dense(&oil)).unwrap();
+        assert!(
+            picture.title.contains("94\u{a0}%") && picture.tables[0].rows.len() == 11,
+            "{}",
+            picture.title
+        );
+    }
 }
