@@ -7,6 +7,7 @@
 //!
 //! All bars and bands are to scale from zero. What would be thinner than a pixel is a hairline, with its amount beside it.
 
+mod air_course;
 mod books;
 mod chart;
 mod circuit;
@@ -24,6 +25,7 @@ mod shape;
 mod tests;
 mod year;
 
+pub use air_course::air_course;
 pub use books::Per;
 pub use circuit::{circuit, extraction};
 pub use co2_map::co2_map;

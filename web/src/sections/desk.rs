@@ -1,11 +1,12 @@
 //! Section "Waste desk": codes of every stream, labels, contents, and whether something may be poured.
 use super::{Section, View, When};
-use crate::parts::{ByRc, folded, unfolded, words_table};
+use crate::edit::{Change, Edit};
+use crate::form::text_of;
+use crate::parts::{Ask, ByRc, Field, folded, unfolded, words_table};
 use crate::reckon::Book;
 use std::rc::Rc;
 use thimbleworth::account::site_desk;
 use thimbleworth::report::{Asked, PaperKind, paper, pour_paper};
-use web_sys::{HtmlInputElement, HtmlSelectElement};
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -48,26 +49,26 @@ struct Props {
     book: ByRc<Book>,
 }
 
-/// What is asked of a pour: into which stream, what, and how full the container is.
+/// What is asked of a pour: into which stream, what, and how full the container is. It is no part of the plan.
 #[component]
 fn Pour(props: &Props) -> Html {
     let asked = use_state_eq(|| [String::new(), String::new(), String::new()]);
-    let put = |i: usize| {
+    let put = {
         let asked = asked.clone();
-        Callback::from(move |event: Event| {
-            let value = match event.target_dyn_into::<HtmlSelectElement>() {
-                Some(select) => select.value(),
-                None => event.target_dyn_into::<HtmlInputElement>().map(|i| i.value()).unwrap_or_default(),
-            };
+        Callback::from(move |edit: Edit| {
+            let Change::Set(path, value) = edit.change else { return };
             let mut next = (*asked).clone();
-            next[i] = value;
+            if let Some(slot) = PATHS.iter().position(|p| *p == path).and_then(|i| next.get_mut(i)) {
+                *slot = text_of(value.as_ref());
+            }
             asked.set(next);
         })
     };
     let account = &props.book.account;
     let streams = account.program.as_ref().map_or(&[][..], |p| &p.site.streams);
     let [into, what, held] = &*asked;
-    let into = if into.is_empty() { streams.first().map_or("drain", |s| s.name.as_str()) } else { into };
+    let names: Vec<&str> = streams.iter().map(|s| s.name.as_str()).chain(["drain"]).collect();
+    let into = names.iter().find(|n| *n == into).or(names.first()).copied().unwrap_or_default();
     let parts: Vec<(String, String)> = what
         .split(';')
         .filter(|p| !p.trim().is_empty())
@@ -80,18 +81,17 @@ fn Pour(props: &Props) -> Html {
         let held = Some(held.trim()).filter(|h| !h.is_empty());
         pour_paper(account, &desk, &Asked { into, parts: &parts, held })
     });
+    let choice =
+        names.iter().map(|n| (AttrValue::from((*n).to_owned()), AttrValue::from((*n).to_owned()))).collect();
+    let field = |i: usize, label: &'static str, hint: &'static str, value: &str, ask: Ask| {
+        html! { <Field path={PATHS[i]} {label} {hint} value={value.to_owned()} {ask} edit={put.clone()} /> }
+    };
     html! {
         <section aria-labelledby="pour-heading">
             <h3 id="pour-heading">{ "May this go into that container?" }</h3>
-            <p class="tools">
-                <label>{ "Container " }<select onchange={put(0)}>
-                    { for streams.iter().map(|s| s.name.as_str()).chain(["drain"]).map(|name| html! {
-                        <option value={name.to_owned()} selected={name == into}>{ name }</option>
-                    }) }
-                </select></label>
-                <label>{ "Poured, as one mixture " }<input type="text" value={what.clone()} placeholder="acetone = 40 mL; water = 1 L" onchange={put(1)} /></label>
-                <label>{ "In it already " }<input type="text" value={held.clone()} placeholder="12 L" onchange={put(2)} /></label>
-            </p>
+            { field(0, "Container", "A stream of the site, or the drain.", into, Ask::Choice(choice)) }
+            { field(1, "Poured, as one mixture", "Such as acetone = 40 mL; water = 1 L.", what, Ask::Text) }
+            { field(2, "In the container already", "Such as 12 L; half of what it may hold when left out.", held, Ask::Text) }
             <div aria-live="polite">
                 { match &found {
                     None => Html::default(),
@@ -102,3 +102,6 @@ fn Pour(props: &Props) -> Html {
         </section>
     }
 }
+
+/// The paths of its fields, which no plan has.
+const PATHS: [&str; 3] = ["pour.into", "pour.what", "pour.held"];

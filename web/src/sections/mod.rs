@@ -1,5 +1,6 @@
 //! The numbered sections of the page. A section is a file of its own, which declares it as `SECTION`, and two lines below:
 //! its `mod` and its place in [`SECTIONS`], from which number and contents entry follow.
+mod air;
 mod assumptions;
 mod carbon_dioxide;
 mod comparison;
@@ -32,6 +33,7 @@ static SECTIONS: &[&Section] = &[
     &site::SECTION,
     &carbon_dioxide::SECTION,
     &energy::SECTION,
+    &air::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,
     &assumptions::SECTION,

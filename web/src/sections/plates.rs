@@ -19,6 +19,8 @@ pub(super) enum What {
     Circuit(usize),
     /// The first extraction curve of one route.
     Extraction(usize),
+    /// The air of the room on one route.
+    Air(usize),
 }
 
 #[derive(Properties, PartialEq)]
@@ -65,6 +67,10 @@ fn draw(props: &Props) -> Option<Picture> {
             picture::extraction(&format!("extraction-{w}-{r}"), name, dense)
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
+        What::Air(r) => {
+            let (route, account) = book.route(w, r)?;
+            picture::air_course(&format!("air-course-{w}-{r}"), &route.name, account.air.as_ref()?)
+        }
     }
 }
 

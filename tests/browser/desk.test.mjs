@@ -1,0 +1,66 @@
+// The waste desk and the year of the site, as an environmental officer meets them.
+import { after, before, test } from "node:test";
+import assert from "node:assert/strict";
+import { assertQuiet, axeFindings, launch, open, settled } from "./vocabulary.mjs";
+
+let browser;
+before(async () => {
+  browser = await launch();
+});
+after(() => browser?.close());
+
+const glance = (page) => page.locator("#desk-glance").innerText();
+
+test("codes follow the rules of the site, and say what only a test can clear", async () => {
+  const { page, seen, close } = await open(browser);
+  // The neat rinse brings F003 on the drum; the wet solids are not cleared without a test.
+  assert.match(await glance(page), /flammable\s+hazardous\s+D001, F003/);
+  assert.match(await glance(page), /solids\s+hazardous until tested\s+D001/);
+  await page.getByLabel("Waste rules read").selectOption("EU");
+  await settled(page);
+  assert.match(await glance(page), /14 06 03\*/);
+  assert.doesNotMatch(await glance(page), /F003/);
+  assertQuiet(seen);
+  await close();
+});
+
+test("a pour is stopped, or brings codes", async () => {
+  const { page, seen, close } = await open(browser);
+  const desk = page.locator("#waste-desk");
+  const poured = desk.getByLabel("Poured, as one mixture");
+  await poured.fill("nitric acid = 10 mL");
+  await poured.press("Tab");
+  await desk.getByText("Pour into flammable: do not pour").waitFor();
+  await poured.fill("dichloromethane = 40 mL");
+  await poured.press("Tab");
+  await desk.getByText("The container gains: F002.").waitFor();
+  await desk.getByLabel("Container", { exact: true }).selectOption("drain");
+  await desk.getByText("Pour into the drain: do not pour").waitFor();
+  await poured.fill("acetine = 1 mL");
+  await poured.press("Tab");
+  await desk.getByText("did you mean acetone").waitFor();
+  assert.deepEqual(await axeFindings(page), []);
+  assertQuiet(seen);
+  await close();
+});
+
+test("the year of the site has its pictures, each with its table, and unfolds into papers", async () => {
+  const { page, seen, close } = await open(browser);
+  const site = page.locator("#site-year");
+  for (const title of [/^At most .* lie on site/, /^The largest load of a year is flammable/]) {
+    const figure = site.locator("figure", { has: page.getByText(title) });
+    await figure.locator("summary").click();
+    assert.ok((await figure.locator("tbody tr").count()) > 1);
+  }
+  await site.getByText("Waste month by month", { exact: true }).click();
+  assert.match(await site.locator("#site-months-0").innerText(), /category\s+VSQG/);
+  await site.getByText("Pick-up calendar", { exact: true }).click();
+  assert.ok((await site.locator("#site-pick-ups-1 tbody tr").count()) > 10);
+  // Other waste of the site raises the category.
+  await page.getByText("Waste of the whole site").click();
+  await page.getByLabel(/^Other hazardous waste of the site, row 1, each month/).fill("90 kg");
+  await settled(page);
+  assert.match(await site.locator("#site-months-0").innerText(), /category\s+SQG/);
+  assertQuiet(seen);
+  await close();
+});
