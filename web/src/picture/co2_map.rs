@@ -65,7 +65,7 @@ pub fn co2_map(key: &str, account: &Account, workload: usize) -> Option<Picture>
     for (route, account) in work.routes.iter().zip(accounts) {
         let Some(account) = account else { continue };
         for (i, step) in route.steps.iter().enumerate() {
-            if step.technique.key != "supercritical" {
+            if step.step.co2_states() == 0 {
                 continue;
             }
             let ix = StepIx::Step(u16::try_from(i).unwrap_or(u16::MAX));
@@ -365,12 +365,12 @@ fn scales(axes: &Axes, frame: Frame, size: Size) -> Vec<Shape> {
     shapes
 }
 
-fn around((x, y): (f64, f64), r: f64) -> Area {
+pub(super) fn around((x, y): (f64, f64), r: f64) -> Area {
     Area { left: x - r, top: y - r, right: x + r, bottom: y + r }
 }
 
 /// A text beside a point, wherever there is room.
-fn beside(
+pub(super) fn beside(
     (x, y): (f64, f64),
     words: &str,
     class: &'static str,

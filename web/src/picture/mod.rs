@@ -9,6 +9,8 @@
 
 mod air_course;
 mod books;
+mod chart;
+mod circuit;
 mod co2_lines;
 mod co2_map;
 mod difference;
@@ -25,6 +27,7 @@ mod year;
 
 pub use air_course::air_course;
 pub use books::Per;
+pub use circuit::{circuit, extraction};
 pub use co2_map::co2_map;
 pub use difference::difference;
 pub use draw::{Node, plate, to_html, to_svg_text};

@@ -5,6 +5,7 @@ mod assumptions;
 mod carbon_dioxide;
 mod comparison;
 mod desk;
+mod energy;
 mod finding;
 mod hazard;
 mod leaf;
@@ -31,6 +32,7 @@ static SECTIONS: &[&Section] = &[
     &desk::SECTION,
     &site::SECTION,
     &carbon_dioxide::SECTION,
+    &energy::SECTION,
     &air::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,

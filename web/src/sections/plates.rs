@@ -15,6 +15,10 @@ pub(super) enum What {
     Difference(usize),
     /// The states of CO2 that the plan uses.
     Co2,
+    /// The first circuit of CO2 of one route.
+    Circuit(usize),
+    /// The first extraction curve of one route.
+    Extraction(usize),
     /// The air of the room on one route.
     Air(usize),
 }
@@ -50,6 +54,17 @@ fn draw(props: &Props) -> Option<Picture> {
         What::Difference(r) => {
             let program = book.account.program.as_ref()?;
             picture::difference(&format!("difference-{w}-{r}"), program, at, book.beside(w, r)?)
+        }
+        What::Circuit(r) | What::Extraction(r) => {
+            let (at, route) = book.in_account(w, r)?;
+            let account = book.account.workloads.get(at)?.routes.get(route)?.as_ref()?;
+            let name = &book.account.program.as_ref()?.workloads.get(at)?.routes.get(route)?.name;
+            if let What::Circuit(_) = props.what {
+                let (_, dense) = account.dense.first()?;
+                return Some(picture::circuit(&format!("circuit-{w}-{r}"), name, dense));
+            }
+            let dense = account.dense.iter().map(|(_, d)| d).find(|d| d.study.is_some())?;
+            picture::extraction(&format!("extraction-{w}-{r}"), name, dense)
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
         What::Air(r) => {
