@@ -2,7 +2,9 @@
 //! its `mod` and its place in [`SECTIONS`], from which number and contents entry follow.
 mod assumptions;
 mod carbon_dioxide;
+mod climate;
 mod comparison;
+mod cost;
 mod desk;
 mod finding;
 mod hazard;
@@ -12,6 +14,7 @@ mod plates;
 mod question;
 mod routes;
 mod site;
+mod sure;
 mod view;
 mod waste;
 
@@ -32,6 +35,9 @@ static SECTIONS: &[&Section] = &[
     &carbon_dioxide::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,
+    &cost::SECTION,
+    &climate::SECTION,
+    &sure::SECTION,
     &assumptions::SECTION,
 ];
 
