@@ -1,13 +1,10 @@
-// The last part of the page's one script; before it stand UNPACKER, SIZE and PAYLOAD (see web/pack/src/packing.rs) and
-// `wasm_bindgen`.
+// What the program asks of the browser, packed with it and unpacked by start.js; before it stands `wasm_bindgen`.
 // With a document it starts the page; without one (a test that computes) it only makes `account` ready.
 // The functions below are called by the program, through src/browser.rs.
 
 const LARGEST_FILE = 8 * 1024 * 1024;
 let kept = null;
 let hear = null;
-// How many bytes of the program are unpacked at a time.
-const PIECE = 262144;
 
 function keepPlan(name, text) {
   kept = { name, text };
@@ -159,70 +156,13 @@ function focusOn(id) {
   target.focus();
 }
 
-// Seven bits a character, lowest first; one of two bytes has fourteen. See web/pack/src/packing.rs.
-const APART = [0, 10, 13, 34, 60, 92];
-
-function bytesOf([size, signs]) {
-  const bytes = new Uint8Array(size);
-  let held = 0;
-  let bits = 0;
-  let at = 0;
-  for (let i = 0; i < signs.length; i += 1) {
-    const sign = signs.charCodeAt(i);
-    if (sign < 128) {
-      held |= sign << bits;
-      bits += 7;
-    } else {
-      held |= (APART[(sign - 160) >> 7] | (((sign - 160) & 127) << 7)) << bits;
-      bits += 14;
-    }
-    while (bits >= 8) {
-      bytes[at] = held;
-      at += 1;
-      held >>>= 8;
-      bits -= 8;
-    }
-  }
-  return bytes;
-}
-
-// Unpacked a piece a turn, so that the browser compiles what is there while the next is unpacked.
-async function unpacked() {
-  const packed = bytesOf(PAYLOAD);
-  const from = 65536;
-  const to = from + packed.length;
-  const memory = new WebAssembly.Memory({ initial: Math.ceil((to + SIZE) / 65536) });
-  new Uint16Array(memory.buffer, 0, 7164).fill(1024);
-  new Uint8Array(memory.buffer, from).set(packed);
-  const { instance } = await WebAssembly.instantiate(bytesOf(UNPACKER), { "": { memory } });
-  instance.exports.begin(from, to);
-  let at = to;
-  const pull = (pieces) => {
-    const end = instance.exports.unpack(Math.min(at + PIECE, to + SIZE));
-    pieces.enqueue(new Uint8Array(memory.buffer, at, end - at));
-    at = end;
-    if (at >= to + SIZE) pieces.close();
-  };
-  const headers = { "content-type": "application/wasm" };
-  return new Response(new ReadableStream({ pull }), { headers });
-}
-
 async function load() {
-  if (typeof WebAssembly !== "object") {
-    throw new Error("this browser lacks WebAssembly. A current browser has it");
-  }
-  wasm_bindgen.initSync({ module: await WebAssembly.compileStreaming(unpacked()) });
+  wasm_bindgen.initSync({ module: await WebAssembly.compileStreaming(globalThis.thimbleworth.program()) });
   return { account: wasm_bindgen.account };
 }
 
-function showFailure(error) {
-  const place = document.getElementById("boot");
-  place.textContent = `The page could not start: ${error && error.message ? error.message : error}.`;
-  place.hidden = false;
-  console.error(error);
-}
-
 const ready = load();
+const { showFailure } = globalThis.thimbleworth;
 globalThis.thimbleworth = { ready };
 if (typeof document !== "undefined") {
   ready.then(() => wasm_bindgen.start_page()).catch(showFailure);

@@ -82,11 +82,11 @@ test("14: not known is an answer of its own, and says what stands in for it", as
   const { page, close } = await openWith(browser, smallPlan());
   const loss = page.getByLabel(/^Share lost past the condenser/);
   const echo = page.locator(".field", { has: loss }).locator(".echo");
-  assert.equal(await echo.innerText(), "5 % is assumed: from memory.");
+  assert.equal(await echo.innerText(), "5\u202f% is assumed: from memory.");
   await loss.fill("not known");
-  assert.equal(await echo.innerText(), "Not known: 5 % stands in for it, from memory.");
+  assert.equal(await echo.innerText(), "Not known: 5\u202f% stands in for it, from memory.");
   await loss.fill("0 %");
-  assert.equal(await echo.innerText(), "Read as 0 %.");
+  assert.equal(await echo.innerText(), "Read as 0\u202f%.");
   await close();
 });
 

@@ -1,33 +1,66 @@
-// How fast the page is; no test, because a number depends on the machine. `node tests/browser/measure.mjs`
-import { give, launch, open, openRaw, packed, smallPlan } from "./vocabulary.mjs";
+// How fast the page is; no test, because a number depends on the machine and on what else it does.
+//   cargo page && cargo page --empty && node tests/browser/measure.mjs
+// Times are told twice: by the clock, which other work on the machine lengthens, and as processor time of the page's main
+// thread, which it hardly does.
+import { give, launch, open, openRaw, packed, root, settled, smallPlan } from "./vocabulary.mjs";
+import { existsSync } from "node:fs";
+import { cpus, loadavg } from "node:os";
+import { join } from "node:path";
 import { pathToFileURL } from "node:url";
 
+const RUNS = 10;
+const empty = join(root, "web/dist/empty.html");
 const median = (list) => [...list].sort((a, b) => a - b)[Math.floor(list.length / 2)];
 const browser = await launch();
+const load = () => `load ${loadavg().map((l) => l.toFixed(1)).join(" ")}`;
+console.log(`${cpus().length} processors, ${cpus()[0].model.trim()}, Chromium ${browser.version()}, ${load()}`);
 
-const renders = [];
-const beside = process.argv[2];
-const empty = [];
-for (let i = 0; i < 10; i += 1) {
-  for (const [file, list] of [[packed, renders], ...(beside ? [[beside, empty]] : [])]) {
-    const { page, close } = await openRaw(browser, null, {
-      prepare: () => {
-        new MutationObserver((_, observer) => {
-          if (document.querySelector("#question, #drawn")) {
-            globalThis.drawn = performance.now();
-            observer.disconnect();
-          }
-        }).observe(document, { childList: true, subtree: true });
-      },
-    });
-    await page.goto(pathToFileURL(file).href);
-    await page.waitForFunction(() => globalThis.drawn);
-    list.push(await page.evaluate(() => globalThis.drawn));
-    await close();
+/** Marks when the first section (of an empty page: anything) is drawn, when the finding stands, and when all is there. */
+const watch = () => {
+  performance.mark("begins");
+  for (const [name, wanted] of [["drawn", "#question, #drawn"], ["finding", ".insight p:nth-child(2), #drawn"], ["whole", "#assumptions, #drawn"]]) {
+    new MutationObserver((_, observer) => {
+      if (document.querySelector(wanted)) {
+        performance.mark(name);
+        observer.disconnect();
+      }
+    }).observe(document, { childList: true, subtree: true });
   }
+};
+
+/** Opens `file` once: milliseconds since the navigation began, and processor time since the document was there. */
+async function opened(file) {
+  const { page, close } = await openRaw(browser, null, { prepare: watch, folded: true });
+  await browser.startTracing(page, { categories: ["blink.user_timing"] });
+  await page.goto(pathToFileURL(file).href);
+  await page.waitForFunction(() => performance.getEntriesByName("whole").length);
+  const clock = await page.evaluate(() => Object.fromEntries(performance.getEntriesByType("mark").map((m) => [m.name, m.startTime])));
+  const events = JSON.parse((await browser.stopTracing()).toString()).traceEvents;
+  await close();
+  const begins = events.findLast((e) => e.name === "begins" && e.tts);
+  const processor = Object.fromEntries(
+    events.filter((e) => e.pid === begins.pid && e.tts && e.ts >= begins.ts).map((e) => [e.name, (e.tts - begins.tts) / 1000]),
+  );
+  return { clock, processor };
 }
-console.log(`first render: median of ten ${median(renders).toFixed(0)} ms`);
-if (beside) console.log(`beside an empty page: ${median(empty).toFixed(0)} ms, ratio ${(median(renders) / median(empty)).toFixed(1)}`);
+
+const files = existsSync(empty) ? { page: packed, empty } : { page: packed };
+const found = Object.fromEntries(Object.keys(files).map((name) => [name, []]));
+for (let i = 0; i < RUNS; i += 1) {
+  for (const [name, file] of Object.entries(files)) found[name].push(await opened(file));
+}
+const of = (name, kind, mark) => median(found[name].map((run) => run[kind][mark]));
+for (const [mark, words] of [["drawn", "first section drawn"], ["finding", "finding drawn"], ["whole", "all sections drawn"]]) {
+  console.log(`${words}: median of ${RUNS} ${of("page", "clock", mark).toFixed(0)} ms by the clock, ${of("page", "processor", mark).toFixed(0)} ms of the main thread`);
+}
+if (found.empty) {
+  const ratio = (kind) => (of("page", kind, "drawn") / of("empty", kind, "drawn")).toFixed(1);
+  console.log(
+    `an empty page packed in the same way, beside it in turn: ${of("empty", "clock", "drawn").toFixed(0)} ms, ${of("empty", "processor", "drawn").toFixed(0)} ms; ratio ${ratio("clock")} by the clock, ${ratio("processor")} of the main thread`,
+  );
+} else {
+  console.log("no web/dist/empty.html: run `cargo page --empty` for the ratio");
+}
 
 for (const routes of [4, 50]) {
   const { page, close } = await open(browser);
@@ -43,25 +76,45 @@ for (const routes of [4, 50]) {
   });
   await give(page, "plan.json", plan);
   await page.getByText("plan.json is open.").waitFor();
+  await settled(page);
   const times = await page.evaluate(async () => {
     const input = [...document.querySelectorAll("label")].find((l) => l.innerText.startsWith("Solvent in the flask")).control;
     const set = Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, "value").set;
-    const figure = () => document.querySelector(".insight").textContent;
-    const out = { script: [], layout: [] };
+    // Resolves as soon as the figures beside the account are others; not by turning round in one turn, which nothing else could use.
+    const changed = () => new Promise((done) => {
+      const observer = new MutationObserver(() => {
+        observer.disconnect();
+        done();
+      });
+      observer.observe(document.querySelector(".insight"), { subtree: true, childList: true, characterData: true });
+    });
+    const out = { script: [], layout: [], follow: [] };
     for (let i = 0; i < 60; i += 1) {
       await new Promise((done) => setTimeout(done, 20));
-      const before = figure();
+      const drawn = changed();
       const start = performance.now();
       set.call(input, `${200 + (i % 7) * 13} mL`);
       input.dispatchEvent(new InputEvent("input", { bubbles: true }));
-      while (figure() === before && performance.now() - start < 500) await Promise.resolve();
+      await drawn;
       out.script.push(performance.now() - start);
       document.body.getBoundingClientRect();
       out.layout.push(performance.now() - start);
     }
+    // The sections with figures follow once nobody types: the longest task among them is what a stroke may have to wait for.
+    for (let i = 0; i < 5; i += 1) {
+      set.call(input, `${300 + i} mL`);
+      const tasks = [];
+      const observer = new PerformanceObserver((list) => tasks.push(...list.getEntries().map((e) => e.duration)));
+      observer.observe({ type: "longtask" });
+      input.dispatchEvent(new InputEvent("input", { bubbles: true }));
+      await new Promise((done) => setTimeout(done, 1500));
+      observer.disconnect();
+      out.follow.push(Math.max(0, ...tasks));
+    }
     return out;
   });
-  console.log(`${routes} routes of 8 steps: keystroke to figures, median ${median(times.script).toFixed(1)} ms, with layout ${median(times.layout).toFixed(1)} ms, worst ${Math.max(...times.layout).toFixed(1)} ms`);
+  console.log(`${routes} routes of 8 steps: key stroke to figures, median ${median(times.script).toFixed(1)} ms, with layout ${median(times.layout).toFixed(1)} ms, worst ${Math.max(...times.layout).toFixed(1)} ms; longest task of the sections that follow ${median(times.follow).toFixed(0)} ms (0: none above 50 ms)`);
   await close();
 }
+console.log(load());
 await browser.close();

@@ -1,10 +1,11 @@
 // The page opens from a file, and says what is missing where it cannot.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { copyFileSync, cpSync, mkdirSync, mkdtempSync, rmSync } from "node:fs";
+import { createServer } from "node:http";
+import { copyFileSync, cpSync, createReadStream, mkdirSync, mkdtempSync, rmSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
-import { assertQuiet, launch, open, openRaw, packed, picture, root, shell } from "./vocabulary.mjs";
+import { assertQuiet, launch, open, openRaw, packed, picture, root, settled, shell } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -29,6 +30,21 @@ for (const [name, file] of [["the file to mail", packed], ["the root index.html 
     await close();
   });
 }
+
+test("the file opens from a server that says UTF-8, as one reads it from a web page", async () => {
+  const server = createServer((_, answer) => {
+    answer.setHeader("content-type", "text/html; charset=utf-8");
+    createReadStream(packed).pipe(answer);
+  });
+  await new Promise((done) => server.listen(0, "127.0.0.1", done));
+  const { page, seen, close } = await openRaw(browser);
+  await page.goto(`http://127.0.0.1:${server.address().port}/`);
+  await settled(page);
+  assert.equal(seen.requests.length, 1, "the page itself");
+  assert.deepEqual(seen.errors, []);
+  await close();
+  server.close();
+});
 
 test("every entry of the contents list leads to its section", async () => {
   const { page, close } = await open(browser);

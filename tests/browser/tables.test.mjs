@@ -78,6 +78,8 @@ test("40, 41: no minus zero, no hyphen for a minus, a space before every unit, o
     for (const figure of figures) assert.match(figure, /^(< )?\u2212?\d{1,3}(\d|(\u202f\d{3})+)?(\.\d+)?$/, figure);
     assert.doesNotMatch(text, /(^|\s)[-\u2212]0(\.0+)?\s/m, name);
     assert.doesNotMatch(text, /\d(mL|kg|°C|%|bar|kWh)\b/, name);
+    assert.match(text, /\d\u202f%/, name);
+    assert.doesNotMatch(text, /.*\d[ \u00a0]%.*/, `${name}: a per cent sign that can stand on a line of its own`);
     assert.doesNotMatch(text, /\u03bc|NaN|undefined|\[object/, name);
     assert.doesNotMatch(text, /\binf\b/, name);
   }

@@ -25,7 +25,7 @@ function examples() {
 }
 
 test("the file to mail holds exactly the script that the evidence loads", () => {
-  const mailed = readFileSync(join(root, "web/dist/thimbleworth.html"), "utf8");
+  const mailed = readFileSync(join(root, "web/dist/thimbleworth.html"), "utf16le");
   assert.ok(mailed.includes(`<script>${readFileSync(script, "utf8")}</script>`));
 });
 

@@ -245,10 +245,10 @@ pub fn summary(technique: Option<&Technique>, step: &Step) -> Vec<(String, Strin
             }
             other => word(&text_of(Some(other))).to_owned(),
         };
-        out.push((label, value));
+        out.push((label, crate::show::unbroken(&value)));
     }
     for (rule, value) in &step.measured {
-        out.push((format!("measured {rule}"), value.clone()));
+        out.push((format!("measured {rule}"), crate::show::unbroken(value)));
     }
     if let Some(note) = &step.note {
         out.push(("note".to_owned(), note.clone()));

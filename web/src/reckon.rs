@@ -2,6 +2,7 @@
 //!
 //! The core gives no figures for a plan with an error. While an amount is half typed, or a route is still being written, the
 //! page leaves that route out and accounts for the others; where nothing is left, the last figures stay, marked as old.
+use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::account::{Account, Figure, Measure, RouteAccount, account, account_text};
 use thimbleworth::compare::{Comparison, RouteComparison, compare};
@@ -342,7 +343,7 @@ impl Book {
                     out.push(format!("{} is left out: {} to mend.", column.name, things(column.errors)));
                 }
             } else if let Some(beside) = self.beside(w, r) {
-                out.push(beside.finding.clone());
+                out.push(unbroken(&beside.finding));
             }
         }
         if out.is_empty() {

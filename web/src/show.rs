@@ -108,6 +108,12 @@ pub fn grouped(text: &str) -> String {
     out
 }
 
+/// A text as it is shown: a number and its per cent sign never stand on two lines.
+#[must_use]
+pub fn unbroken(text: &str) -> String {
+    text.replace(" %", "\u{202f}%")
+}
+
 /// A change in per cent of what was there, as text with its sign; nothing where there was nothing.
 #[must_use]
 pub fn change(before: f64, after: f64) -> Option<String> {
@@ -119,8 +125,8 @@ pub fn change(before: f64, after: f64) -> Option<String> {
     Some(match shown.as_str() {
         "0" => "no change".to_owned(),
         _ if percent > 900.0 => format!("{:.0} times as much", after / before),
-        _ if percent < 0.0 => format!("{shown}\u{a0}% less"),
-        _ => format!("{shown}\u{a0}% more"),
+        _ if percent < 0.0 => format!("{shown}\u{202f}% less"),
+        _ => format!("{shown}\u{202f}% more"),
     })
 }
 
@@ -157,8 +163,8 @@ mod tests {
 
     #[test]
     fn a_change_is_said_in_words() {
-        assert_eq!(change(100.0, 18.0).as_deref(), Some("82\u{a0}% less"));
-        assert_eq!(change(100.0, 150.0).as_deref(), Some("50\u{a0}% more"));
+        assert_eq!(change(100.0, 18.0).as_deref(), Some("82\u{202f}% less"));
+        assert_eq!(change(100.0, 150.0).as_deref(), Some("50\u{202f}% more"));
         assert_eq!(change(1.0, 20.0).as_deref(), Some("20 times as much"));
         assert_eq!(change(1.0, 1.0001).as_deref(), Some("no change"));
         assert_eq!(change(0.0, 2.0), None);

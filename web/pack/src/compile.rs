@@ -9,6 +9,25 @@ use wasm_bindgen_cli_support::Bindgen;
 const TARGET: &str = "wasm32-unknown-unknown";
 const PROFILE: &str = "page";
 
+/// What is packed.
+#[derive(Clone, Copy, PartialEq, Eq)]
+pub(crate) enum What {
+    /// The page.
+    Page,
+    /// An empty page, to measure beside it.
+    Empty,
+}
+
+impl What {
+    /// How cargo is told what to build, and the name of the file that it makes.
+    const fn target(self) -> (&'static [&'static str], &'static str) {
+        match self {
+            Self::Page => (&["--lib"], "thimbleworth_web.wasm"),
+            Self::Empty => (&["--example", "empty_page"], "examples/empty_page.wasm"),
+        }
+    }
+}
+
 /// Where things are on this machine. Found at run time: a packer built in one checkout may be run in another.
 pub(crate) struct Workspace {
     pub(crate) root: PathBuf,
@@ -71,7 +90,8 @@ impl Workspace {
 }
 
 /// Compiles the app, adding the WebAssembly target to the toolchain if it is missing, and makes the glue.
-pub(crate) fn program(workspace: &Workspace) -> Result<Program> {
+pub(crate) fn program(workspace: &Workspace, what: What) -> Result<Program> {
+    let (built, file) = what.target();
     if !workspace.sysroot.join("lib/rustlib").join(TARGET).is_dir() {
         let status =
             Command::new("rustup").args(["target", "add", TARGET]).current_dir(&workspace.root).status();
@@ -87,7 +107,8 @@ pub(crate) fn program(workspace: &Workspace) -> Result<Program> {
         remaps.iter().map(|(from, to)| format!("--remap-path-prefix={}={to}", from.display())).collect();
     run(
         Command::new(&workspace.cargo)
-            .args(["build", "--locked", "--package", "thimbleworth-web", "--lib"])
+            .args(["build", "--locked", "--package", "thimbleworth-web"])
+            .args(built)
             .args(["--profile", PROFILE, "--target", TARGET, "--target-dir"])
             .arg(&workspace.target)
             .env_remove("RUSTFLAGS")
@@ -95,7 +116,7 @@ pub(crate) fn program(workspace: &Workspace) -> Result<Program> {
             .env("CARGO_ENCODED_RUSTFLAGS", flags.join("\u{1f}")),
         workspace,
     )?;
-    let program = glue(&workspace.target.join(TARGET).join(PROFILE).join("thimbleworth_web.wasm"))?;
+    let program = glue(&workspace.target.join(TARGET).join(PROFILE).join(file))?;
     for (path, _) in &remaps {
         ensure!(
             !holds(&program.wasm, path) && !holds(program.glue.as_bytes(), path),

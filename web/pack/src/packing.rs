@@ -1,5 +1,5 @@
 //! The program as text: packed with LZMA, which leaves a quarter less than gzip, and written in characters that come
-//! through as they are in a script in UTF-8. What unpacks it again is a small module, `unpack.wat`, and `web/boot.js`.
+//! through as they are in a script. What unpacks it again is a small module, `unpack.wat`, and `web/start.js`.
 use anyhow::Result;
 use lzma_rust2::{EncodeMode, LzmaOptions, LzmaWriter, MfType};
 use std::io::Write;
@@ -23,77 +23,80 @@ pub(crate) fn unpacker() -> Result<Vec<u8>> {
     Ok(wat::parse_str(include_str!("unpack.wat").replace("BIT\n", include_str!("bit.wat")))?)
 }
 
-/// The characters that mean something in a text in quotes in a script in a page, or do not come through as they are.
-const APART: [u8; 6] = [0, b'\n', b'\r', b'"', b'<', b'\\'];
+/// The first sign, and how many there are: all of one unit in UTF-16, none that means anything in a script or a page, none
+/// that turns the direction of writing, none that stands for half a character.
+const FIRST: u32 = 0x2100;
+const SIGNS: u32 = 46_341;
 
-/// The bytes as characters: seven bits each, lowest first. One of [`APART`] takes the next seven bits with it into a
-/// character of two bytes, 160 + 128 × its place + these. So eight bytes become just over nine, whatever they are.
+/// The bytes as characters: 31 bits in two signs, lowest bits first, the higher part in the first sign (46 341² > 2³¹). In UTF-16
+/// that is 32 bytes for 31; UTF-8 has no better than eight for seven.
 pub(crate) fn signs(bytes: &[u8]) -> String {
-    let mut sevens = Vec::with_capacity(bytes.len() * 8 / 7 + 1);
-    let (mut held, mut bits) = (0_u32, 0);
+    let mut out = String::with_capacity(bytes.len() * 2);
+    let mut put = |value: u64| {
+        let value = (value & 0x7fff_ffff) as u32;
+        out.extend(char::from_u32(FIRST + value / SIGNS));
+        out.extend(char::from_u32(FIRST + value % SIGNS));
+    };
+    let (mut held, mut bits) = (0_u64, 0);
     for &byte in bytes {
-        held |= u32::from(byte) << bits;
+        held |= u64::from(byte) << bits;
         bits += 8;
-        while bits >= 7 {
-            sevens.push((held & 0x7f) as u8);
-            held >>= 7;
-            bits -= 7;
+        if bits >= 31 {
+            put(held);
+            held >>= 31;
+            bits -= 31;
         }
     }
     if bits > 0 {
-        sevens.push((held & 0x7f) as u8);
-    }
-    let mut out = String::with_capacity(sevens.len());
-    let mut rest = sevens.into_iter();
-    while let Some(seven) = rest.next() {
-        match APART.iter().position(|apart| *apart == seven) {
-            Some(place) => {
-                let next = u32::from(rest.next().unwrap_or(0));
-                let place = u32::try_from(place).unwrap_or(0);
-                out.extend(char::from_u32(160 + 128 * place + next));
-            }
-            None => out.push(char::from(seven)),
-        }
+        put(held);
     }
     out
+}
+
+/// A page in UTF-16 with the mark of its order in front, by which every browser knows it, whatever a server says.
+pub(crate) fn in_utf16(page: &str) -> Vec<u8> {
+    std::iter::once(0xfeff).chain(page.encode_utf16()).flat_map(u16::to_le_bytes).collect()
 }
 
 #[cfg(test)]
 mod tests {
     use super::*;
 
-    /// The reading of `web/boot.js`, line by line.
+    /// The reading of `web/start.js`, line by line.
     fn unsigned(text: &str, size: usize) -> Vec<u8> {
         let (mut out, mut held, mut bits) = (Vec::new(), 0_u32, 0);
-        for sign in text.chars().map(u32::from) {
-            if sign < 128 {
-                held |= sign << bits;
-                bits += 7;
-            } else {
-                held |= (u32::from(APART[((sign - 160) >> 7) as usize]) | ((sign - 160) & 127) << 7) << bits;
-                bits += 14;
-            }
-            while bits >= 8 && out.len() < size {
-                out.push((held & 0xff) as u8);
-                held >>= 8;
-                bits -= 8;
+        let signs: Vec<u32> = text.chars().map(|sign| u32::from(sign) - FIRST).collect();
+        for pair in signs.chunks(2) {
+            let value = pair[0] * SIGNS + pair[1];
+            for (part, more) in [(value & 0xffff, 16), (value >> 16, 15)] {
+                held |= part << bits;
+                bits += more;
+                while bits >= 8 {
+                    out.push((held & 0xff) as u8);
+                    held >>= 8;
+                    bits -= 8;
+                }
             }
         }
+        out.truncate(size);
         out
     }
 
     #[test]
     fn every_byte_comes_back_from_its_signs() {
-        for length in [0, 1, 2, 6, 7, 8, 13, 1000, 70_000] {
+        for length in [0, 1, 2, 3, 4, 5, 30, 31, 32, 1000, 70_000] {
             let bytes: Vec<u8> = (0..length).map(|n: usize| (n * n / 7 % 256) as u8).collect();
             let text = signs(&bytes);
-            assert!(text.bytes().all(|b| !APART.contains(&b)), "{text}");
-            assert!(text.len() <= length * 8 / 7 + 2, "{length} bytes became {}", text.len());
+            assert!(text.chars().all(|c| (0x2100..0xd800).contains(&u32::from(c))), "{text}");
+            assert!(text.encode_utf16().count() * 31 <= length * 16 + 62, "{length} bytes");
             assert_eq!(unsigned(&text, length), bytes);
         }
-        // Whatever stands together: every seven bits before and after every other.
-        let all: Vec<u8> = (0..=255).flat_map(|a| (0..=255).flat_map(move |b| [a, b])).collect();
-        assert_eq!(unsigned(&signs(&all), all.len()), all);
+        assert_eq!(unsigned(&signs(&[0xff; 62]), 62), [0xff; 62]);
+    }
+
+    #[test]
+    fn the_page_begins_with_the_mark_of_its_order() {
+        assert_eq!(in_utf16("<\u{2100}"), [0xff, 0xfe, b'<', 0, 0, 0x21]);
     }
 
     #[test]

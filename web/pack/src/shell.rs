@@ -46,32 +46,47 @@ pub(crate) fn lean(text: &str) -> String {
     out
 }
 
-/// The one script of the page: the packed program, its glue and the start, hidden from the global scope.
-pub(crate) fn script(program: &[u8], glue: &str, boot: &str) -> Result<String> {
-    let (packed, unpacker) = (pack(program)?, unpacker()?);
-    let script = format!(
-        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZE = {};\n\
-         const PAYLOAD = [{}, \"{}\"];\n{glue}\n{boot}}})();\n",
-        unpacker.len(),
-        signs(&unpacker),
-        program.len(),
-        packed.len(),
-        signs(&packed)
-    );
-    for (name, text) in [("glue", glue), ("start", boot)] {
-        let text = text.to_ascii_lowercase();
-        for bad in ["</script", "<script", "<!--"] {
-            ensure!(
-                !text.contains(bad),
-                "the {name} holds {bad:?}, which would end or confuse the script element"
-            );
-        }
-    }
-    Ok(script)
+/// What is packed, in the order in which it is unpacked.
+pub(crate) struct Load<'a> {
+    /// The styles that are not needed for the first sight.
+    pub(crate) styles: &'a str,
+    /// The glue and what the program asks of the browser.
+    pub(crate) script: &'a str,
+    pub(crate) program: &'a [u8],
 }
 
-/// The shell with styles, script and a policy that admits these two and nothing else.
-pub(crate) fn inline(shell: &str, styles: &str, script: &str) -> Result<String> {
+/// The glue and the other side of the program in one, hidden from the global scope.
+pub(crate) fn second_script(glue: &str, boot: &str) -> String {
+    format!("(function () {{\n\"use strict\";\n{glue}\n{boot}}})();\n")
+}
+
+/// The script that stands in the page: the packed load and what unpacks it.
+pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<String> {
+    let whole = [load.styles.as_bytes(), load.script.as_bytes(), load.program].concat();
+    let (packed, unpacker) = (pack(&whole)?, unpacker()?);
+    let lowered = start.to_ascii_lowercase();
+    for bad in ["</script", "<script", "<!--"] {
+        ensure!(
+            !lowered.contains(bad),
+            "the start holds {bad:?}, which would end or confuse the script element"
+        );
+    }
+    Ok(format!(
+        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}, {}];\n\
+         const LOAD = [{}, \"{}\"];\n{start}}})();\n",
+        unpacker.len(),
+        signs(&unpacker),
+        load.styles.len(),
+        load.script.len(),
+        load.program.len(),
+        packed.len(),
+        signs(&packed)
+    ))
+}
+
+/// The shell with the styles of the first sight, the script and a policy that admits these, what the script unpacks and
+/// nothing else.
+pub(crate) fn inline(shell: &str, styles: &str, script: &str, load: &Load<'_>) -> Result<String> {
     ensure!(!styles.to_ascii_lowercase().contains("</style"), "the styles hold \"</style\"");
     for mark in [CHARSET, STYLES, SCRIPT_START] {
         ensure!(shell.matches(mark).count() == 1, "index.html must hold {mark} exactly once");
@@ -79,12 +94,15 @@ pub(crate) fn inline(shell: &str, styles: &str, script: &str) -> Result<String> 
     ensure!(shell.matches("<script").count() == 1, "index.html may hold one script only");
     ensure!(shell.matches("<style").count() == 0, "index.html may hold no styles of its own");
     let policy = format!(
-        "default-src 'none'; script-src {} 'wasm-unsafe-eval'; style-src {}; img-src data: blob:; \
+        "default-src 'none'; script-src {} {} 'wasm-unsafe-eval'; style-src {} {}; img-src data: blob:; \
          base-uri 'none'; form-action 'none'",
         hash(script),
-        hash(styles)
+        hash(load.script),
+        hash(styles),
+        hash(load.styles)
     );
-    let meta = format!("{CHARSET}\n<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
+    // The file says by its first bytes how it is written; a second word on it could only be wrong.
+    let meta = format!("<meta http-equiv=\"Content-Security-Policy\" content=\"{policy}\">");
     let page = shell.replace(CHARSET, &meta).replace(STYLES, &format!("<style>{styles}</style>"));
     let Some((before, rest)) = page.split_once(SCRIPT_START) else {
         anyhow::bail!("index.html lost its script");
@@ -105,10 +123,11 @@ mod tests {
     use super::*;
 
     const SHELL: &str = include_str!("../../../index.html");
+    const NOTHING: Load<'static> = Load { styles: "", script: "", program: b"" };
 
     #[test]
     fn the_root_shell_takes_styles_script_and_policy() {
-        let page = inline(SHELL, "p{color:red}", "run();").expect("a page");
+        let page = inline(SHELL, "p{color:red}", "run();", &NOTHING).expect("a page");
         assert!(page.contains("<style>p{color:red}</style>"));
         assert!(page.contains("<script>run();</script>\n</body>"));
         assert!(!page.contains("src=\"web/") && !page.contains("href=\"web/") && !page.contains("onerror"));
@@ -123,29 +142,31 @@ mod tests {
     fn the_policy_names_the_hash_of_exactly_what_is_inlined() {
         // The example of Content Security Policy Level 3, section on hash usage: the hash of `alert('Hello, world.');`.
         assert_eq!(hash("alert('Hello, world.');"), "'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='");
-        let page = inline(SHELL, "", "alert('Hello, world.');").expect("a page");
-        assert!(
-            page.contains(
-                "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng=' 'wasm-unsafe-eval'"
-            )
-        );
+        let load = Load { styles: "b{}", script: "let second;", program: b"" };
+        let page = inline(SHELL, "a{}", "alert('Hello, world.');", &load).expect("a page");
+        let scripts = "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='";
+        assert!(page.contains(&format!("{scripts} {} 'wasm-unsafe-eval';", hash("let second;"))));
+        assert!(page.contains(&format!("style-src {} {};", hash("a{}"), hash("b{}"))));
     }
 
     #[test]
     fn text_that_would_end_its_element_is_refused() {
         for bad in ["a = '</SCRIPT>';", "a = '<script>';", "a = '<!-- ';"] {
-            assert!(script(b"", bad, "").is_err(), "{bad} in the glue");
-            assert!(script(b"", "", bad).is_err(), "{bad} in the start");
+            assert!(first_script(&NOTHING, bad).is_err(), "{bad} in the start");
         }
-        assert!(script(b"", "let a = 1 < 2;", "").is_ok());
-        assert!(inline(SHELL, "</Style>", "").is_err());
+        assert!(first_script(&NOTHING, "let a = 1 < 2;").is_ok());
+        assert!(inline(SHELL, "</Style>", "", &NOTHING).is_err());
     }
 
     #[test]
     fn a_shell_that_changed_its_marks_is_refused() {
-        assert!(inline(&SHELL.replace(STYLES, ""), "", "").is_err());
-        assert!(inline(&SHELL.replace("</body>", "<script>more()</script></body>"), "", "").is_err());
-        assert!(inline(&SHELL.replace("web/dist/page.js", "page.js"), "", "").is_err());
+        for shell in [
+            SHELL.replace(STYLES, ""),
+            SHELL.replace("</body>", "<script>more()</script></body>"),
+            SHELL.replace("web/dist/page.js", "page.js"),
+        ] {
+            assert!(inline(&shell, "", "", &NOTHING).is_err());
+        }
     }
 
     #[test]

@@ -2,6 +2,7 @@
 //! range comes from. The margin beside the control has room for all of it, so that nothing moves while someone types.
 use crate::edit::{Edit, dom_id, number, text};
 use crate::form::{problem_at, sentence};
+use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::plan::{Field as Value, Problem, Severity};
 use yew::prelude::*;
@@ -99,7 +100,7 @@ pub(crate) fn message(id: String, said: Option<&Said>) -> Html {
                 } else {
                     <span class="sign" aria-hidden="true">{ "?" }</span><span class="unseen">{ "Warning: " }</span>
                 }
-                { &said.text }
+                { unbroken(&said.text) }
             }
         </p>
     }
@@ -204,13 +205,13 @@ pub(crate) fn Field(props: &Props) -> Html {
                     if !props.units.is_empty() { <span class="unit">{ format!(" ({})", props.units) }</span> }
                     if props.optional { <span class="optional">{ " (optional)" }</span> }
                 </label>
-                if !props.hint.is_empty() { <p class="hint" id={hint}>{ &props.hint }</p> }
+                if !props.hint.is_empty() { <p class="hint" id={hint}>{ unbroken(&props.hint) }</p> }
                 { control }
             </div>
             <div class="beside">
                 { message(note, shown) }
-                <p class="echo">{ &props.echo }</p>
-                if !props.margin.is_empty() { <p class="margin">{ &props.margin }</p> }
+                <p class="echo">{ unbroken(&props.echo) }</p>
+                if !props.margin.is_empty() { <p class="margin">{ unbroken(&props.margin) }</p> }
             </div>
         </div>
     }

@@ -4,6 +4,7 @@ use super::field::value_of;
 use crate::edit::dom_id;
 use crate::form::sentence;
 use crate::reckon::{Reckoned, things};
+use crate::show::unbroken;
 use crate::state::Action;
 use thimbleworth::plan::{Plan, Severity, keys};
 use thimbleworth::step::technique;
@@ -100,7 +101,7 @@ pub(crate) fn Mend(props: &Props) -> Html {
                         let place = place_words(&props.plan.plan, &problem.path);
                         html! {
                             <li>
-                                <a href={format!("#{}", dom_id(&problem.path))} {onclick}>{ sentence(problem) }</a>
+                                <a href={format!("#{}", dom_id(&problem.path))} {onclick}>{ unbroken(&sentence(problem)) }</a>
                                 if !place.is_empty() { <span class="place">{ format!(" {place}") }</span> }
                             </li>
                         }

@@ -7,17 +7,22 @@ const MOST: usize = 200;
 
 /// A table of words.
 pub(crate) fn words_table(id: String, table: &PaperTable) -> Html {
+    words(id, &table.title, table.head, &table.rows)
+}
+
+/// The same, of what is no paper.
+pub(crate) fn words(id: String, title: &str, head: &[&'static str], rows: &[Vec<String>]) -> Html {
     let caption = [&id, "-caption"].concat();
-    let left = table.rows.len().saturating_sub(MOST);
+    let left = rows.len().saturating_sub(MOST);
     html! {
         <div class="sheet">
             <div class="scroll" role="region" tabindex="0" aria-labelledby={caption.clone()}>
                 <table id={id.clone()} class="figures words">
-                    <caption id={caption}><span>{ &table.title }</span></caption>
-                    if table.head.iter().any(|h| !h.is_empty()) {
-                        <thead><tr>{ for table.head.iter().map(|h| html! { <th scope="col">{ *h }</th> }) }</tr></thead>
+                    <caption id={caption}><span>{ title.to_owned() }</span></caption>
+                    if head.iter().any(|h| !h.is_empty()) {
+                        <thead><tr>{ for head.iter().map(|h| html! { <th scope="col">{ *h }</th> }) }</tr></thead>
                     }
-                    <tbody>{ for table.rows.iter().take(MOST).map(|row| html! {
+                    <tbody>{ for rows.iter().take(MOST).map(|row| html! {
                         <tr>{ for row.iter().enumerate().map(|(i, cell)| if i == 0 {
                             html! { <th scope="row">{ cell }</th> }
                         } else {
@@ -28,7 +33,7 @@ pub(crate) fn words_table(id: String, table: &PaperTable) -> Html {
             </div>
             if left > 0 { <p class="hint">{ left }{ " more rows are in the file." }</p> }
             <p class="tools"><button type="button" class="small" data-copy={id}
-                aria-label={["Copy as columns: ", &table.title].concat()}>{ "Copy as columns" }</button></p>
+                aria-label={["Copy as columns: ", title].concat()}>{ "Copy as columns" }</button></p>
         </div>
     }
 }

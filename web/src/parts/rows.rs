@@ -3,6 +3,7 @@ use super::field::{Patience, Said, message, value_of};
 use crate::browser;
 use crate::edit::{Edit, dom_id};
 use crate::form::understood;
+use crate::show::unbroken;
 use thimbleworth::plan::{Field as Value, Severity, below};
 use thimbleworth::quantity::Kind;
 use thimbleworth::step::Need;
@@ -130,7 +131,7 @@ pub(crate) fn Rows(props: &Props) -> Html {
                 if props.optional { <span class="optional">{ " (optional)" }</span> }
             </legend>
             <div class="ask">
-                if !props.hint.is_empty() { <p class="hint" id={hint}>{ &props.hint }</p> }
+                if !props.hint.is_empty() { <p class="hint" id={hint}>{ unbroken(&props.hint) }</p> }
                 if !props.rows.is_empty() {
                     <table class="inputs">
                         <thead>
@@ -175,8 +176,8 @@ pub(crate) fn Rows(props: &Props) -> Html {
             </div>
             <div class="beside">
                 { message(note, shown) }
-                <p class="echo">{ &props.echo }</p>
-                if !props.margin.is_empty() { <p class="margin">{ &props.margin }</p> }
+                <p class="echo">{ unbroken(&props.echo) }</p>
+                if !props.margin.is_empty() { <p class="margin">{ unbroken(&props.margin) }</p> }
             </div>
         </fieldset>
     }

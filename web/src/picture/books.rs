@@ -170,7 +170,7 @@ pub(super) fn mass_with_unit(kg: f64, unit: (&'static str, f64)) -> String {
 
 /// A share in per cent.
 pub(super) fn percent(share: f64) -> String {
-    format!("{}\u{a0}%", written(share * 100.0, if share >= 0.995 { 3 } else { 2 }))
+    format!("{}\u{202f}%", written(share * 100.0, if share >= 0.995 { 3 } else { 2 }))
 }
 
 #[cfg(test)]

@@ -404,7 +404,7 @@ mod tests {
         let picture = picture("k", &sample()).unwrap();
         let hairs = |s: &&Shape| matches!(s, Shape::Path { class: "hair", .. });
         assert_eq!(picture.wide.shapes.iter().filter(hairs).count(), 1);
-        assert!(picture.title.contains("50\u{a0}%"));
+        assert!(picture.title.contains("50\u{202f}%"));
         let nothing = Flow { sources: Vec::new(), ends: Vec::new(), links: Vec::new(), ..sample() };
         assert!(super::picture("k", &nothing).is_none());
     }

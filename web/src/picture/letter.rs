@@ -132,7 +132,7 @@ pub(super) fn signed_percent(share: f64) -> String {
     let percent = share * 100.0;
     let digits = if percent.abs() >= 99.5 { 3 } else { 2 };
     let plus = if percent > 0.0 { "+" } else { "" };
-    format!("{plus}{}\u{a0}%", written(percent, digits))
+    format!("{plus}{}\u{202f}%", written(percent, digits))
 }
 
 #[cfg(test)]
@@ -189,10 +189,10 @@ mod tests {
         ] {
             assert_eq!(written(value, 3), text);
         }
-        assert_eq!(signed_percent(-0.9812), "−98\u{a0}%");
-        assert_eq!(signed_percent(-1.0), "−100\u{a0}%");
-        assert_eq!(signed_percent(0.034), "+3.4\u{a0}%");
-        assert_eq!(signed_percent(12.34), "+1230\u{a0}%");
-        assert_eq!(signed_percent(0.0), "0\u{a0}%");
+        assert_eq!(signed_percent(-0.9812), "−98\u{202f}%");
+        assert_eq!(signed_percent(-1.0), "−100\u{202f}%");
+        assert_eq!(signed_percent(0.034), "+3.4\u{202f}%");
+        assert_eq!(signed_percent(12.34), "+1230\u{202f}%");
+        assert_eq!(signed_percent(0.0), "0\u{202f}%");
     }
 }

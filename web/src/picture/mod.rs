@@ -7,6 +7,7 @@
 //!
 //! All bars and bands are to scale from zero. What would be thinner than a pixel is a hairline, with its amount beside it.
 
+mod air_course;
 mod books;
 mod co2_lines;
 mod co2_map;
@@ -22,6 +23,7 @@ mod shape;
 mod tests;
 mod year;
 
+pub use air_course::air_course;
 pub use books::Per;
 pub use co2_map::co2_map;
 pub use difference::difference;

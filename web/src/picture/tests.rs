@@ -24,6 +24,10 @@ fn pictures(account: &Account) -> Vec<Picture> {
         out.extend(difference(&format!("difference-{}", beside.route), program, 0, &beside));
     }
     out.extend(co2_map("co2", account, 0));
+    let air = account.workloads[0].routes.iter().flatten().zip(&program.workloads[0].routes).enumerate();
+    for (r, (route, named)) in air.filter_map(|(r, (a, named))| Some((r, (a.air.as_ref()?, named)))) {
+        out.extend(air_course(&format!("air-{r}"), &named.name, route));
+    }
     let desk = site_desk(account, &[]).unwrap();
     out.extend(stock("stock", &desk));
     out.extend(load("load", account, &desk));
@@ -86,7 +90,21 @@ fn drawings_are_what_they_were() {
 #[test]
 fn the_plan_gives_every_picture() {
     let keys: Vec<String> = of(PLAN).into_iter().map(|p| p.key).collect();
-    assert_eq!(keys, ["places-0", "places-1", "flow-0", "flow-1", "difference-1", "co2", "stock", "load"]);
+    assert_eq!(
+        keys,
+        [
+            "places-0",
+            "places-1",
+            "flow-0",
+            "flow-1",
+            "difference-1",
+            "co2",
+            "air-0",
+            "air-1",
+            "stock",
+            "load"
+        ]
+    );
 }
 
 #[test]

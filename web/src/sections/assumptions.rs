@@ -2,6 +2,7 @@
 use super::{Section, View, When};
 use crate::form::{cited, sentence, word};
 use crate::reckon::Book;
+use crate::show::unbroken;
 use thimbleworth::material::catalogue;
 use thimbleworth::order::Index;
 use thimbleworth::plan::Severity;
@@ -25,7 +26,7 @@ fn draw(view: &View) -> Html {
             { view.works(|w| assumptions(view.book(), w)) }
             if !notes.is_empty() {
                 <h3>{ "Worth knowing" }</h3>
-                <ul>{ for notes.into_iter().map(|p| html! { <li>{ sentence(p) }</li> }) }</ul>
+                <ul>{ for notes.into_iter().map(|p| html! { <li>{ unbroken(&sentence(p)) }</li> }) }</ul>
             }
             <h3>{ "Methods and sources" }</h3>
             { sources(view.book()) }
@@ -68,7 +69,8 @@ fn assumptions(book: &Book, w: usize) -> Html {
                     let step = a.path.rsplit_once("steps[").and_then(|(_, rest)| rest.split_once(']'))
                         .and_then(|(s, _)| s.parse::<usize>().ok())
                         .map_or(String::new(), |s| format!("step {}, ", s + 1));
-                    html! { <li>{ format!("{step}{}: {} ({})", crate::edit::lowered(&a.label), word(&a.value), cited(&a.source)) }</li> }
+                    let said = format!("{step}{}: {} ({})", crate::edit::lowered(&a.label), word(&a.value), cited(&a.source));
+                    html! { <li>{ unbroken(&said) }</li> }
                 }).collect();
                 Some(html! {
                     <>

@@ -3,7 +3,7 @@ use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
 use crate::parts::Sheet;
-use crate::show::Scale;
+use crate::show::{Scale, unbroken};
 use thimbleworth::account::{Figure, Group};
 use thimbleworth::compare::{HEADLINES, RouteComparison};
 use thimbleworth::letter::sentence;
@@ -71,7 +71,7 @@ fn one(name: &str, beside: &RouteComparison, drawn: Html) -> Html {
         if items.is_empty() {
             return Html::default();
         }
-        html! { <><dt>{ title }</dt><dd>{ items.join("; ") }</dd></> }
+        html! { <><dt>{ title }</dt><dd>{ unbroken(&items.join("; ")) }</dd></> }
     };
     let causes: Vec<Html> = beside
         .differences

@@ -1,5 +1,6 @@
 //! The numbered sections of the page. A section is a file of its own, which declares it as `SECTION`, and two lines below:
 //! its `mod` and its place in [`SECTIONS`], from which number and contents entry follow.
+mod air;
 mod assumptions;
 mod carbon_dioxide;
 mod climate;
@@ -33,6 +34,7 @@ static SECTIONS: &[&Section] = &[
     &desk::SECTION,
     &site::SECTION,
     &carbon_dioxide::SECTION,
+    &air::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,
     &cost::SECTION,

@@ -15,6 +15,8 @@ pub(super) enum What {
     Difference(usize),
     /// The states of CO2 that the plan uses.
     Co2,
+    /// The air of the room on one route.
+    Air(usize),
 }
 
 #[derive(Properties, PartialEq)]
@@ -50,6 +52,10 @@ fn draw(props: &Props) -> Option<Picture> {
             picture::difference(&format!("difference-{w}-{r}"), program, at, book.beside(w, r)?)
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
+        What::Air(r) => {
+            let (route, account) = book.route(w, r)?;
+            picture::air_course(&format!("air-course-{w}-{r}"), &route.name, account.air.as_ref()?)
+        }
     }
 }
 

@@ -3,6 +3,7 @@ use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item};
 use crate::form::{text_of, understood};
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
+use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::code::Activity;
 use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
@@ -23,11 +24,9 @@ pub(super) static SECTION: Section = Section {
 fn draw(view: &View) -> Html {
     html! {
         <>
-            <div class="form">
-                { about(view) }
-                { streams(view) }
-                { works(view) }
-                { more(view) }
+            <div class="form halves">
+                <div>{ about(view) }{ streams(view) }{ more(view) }</div>
+                <div>{ works(view) }</div>
             </div>
             { printed(view) }
         </>
@@ -234,7 +233,7 @@ fn stream_words(stream: &Stream) -> String {
     parts.extend(stream.made_of.clone());
     parts.extend(stream.area.clone());
     parts.extend(stream.counted.as_ref().map(|c| format!("counted {c}")));
-    parts.join(", ")
+    unbroken(&parts.join(", "))
 }
 
 fn works(view: &View) -> Html {
@@ -382,7 +381,7 @@ fn printed(view: &View) -> Html {
     let plan = view.plan();
     let line = |label: &str, value: Option<String>| {
         let value = value.filter(|v| !v.is_empty())?;
-        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ value }</dd></> })
+        Some(html! { <><dt>{ label.to_owned() }</dt><dd>{ unbroken(&value) }</dd></> })
     };
     let site = &plan.site;
     let rows = |rows: &[(String, String)]| {

@@ -7,6 +7,7 @@ use crate::form::{
 };
 use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
 use crate::reckon::things;
+use crate::show::unbroken;
 use crate::state::Action;
 use thimbleworth::ledger::Place;
 use thimbleworth::plan::{Route, Severity, Step, below};
@@ -120,7 +121,7 @@ fn Summary(props: &SummaryProps) -> Html {
                     }
                 }) }
             </ol>
-            if !terms.is_empty() { <p>{ terms.join(" ") }</p> }
+            if !terms.is_empty() { <p>{ unbroken(&terms.join(" ")) }</p> }
         </div>
     }
 }
