@@ -35,7 +35,7 @@ test("the shipped program answers in Node, under the version of the workspace", 
   const answer = JSON.parse(account("{}", "json"));
   assert.equal(answer.program, `Thimbleworth ${version}`);
   assert.equal(answer.problems[0].severity, "error");
-  assert.match(account("{}", "pdf"), /^no format "pdf"; there are: json, compare, csv, markdown$/);
+  assert.match(account("{}", "pdf"), /^no format "pdf"; there are: json, compare, csv, odds, markdown$/);
 });
 
 for (const [name, profile] of [["debug", []], ["release", ["--release"]]]) {
@@ -47,6 +47,7 @@ for (const [name, profile] of [["debug", []], ["release", ["--release"]]]) {
         ["csv", ["account", "-", "--format", "csv"]],
         ["markdown", ["account", "-", "--format", "markdown"]],
         ["compare", ["compare", "-", "--format", "json"]],
+        ["odds", ["odds", "-", "--draws", "2000", "--format", "json"]],
       ]) {
         const written = command(profile, args, plan);
         assert.ok(written.length > 1000, `${key} ${format}: ${written.length} characters`);

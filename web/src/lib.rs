@@ -18,7 +18,8 @@ pub mod show;
 pub mod state;
 
 use thimbleworth::account::{Account, account_text};
-use thimbleworth::report::{markdown, result_csv, result_json};
+use thimbleworth::odds::{MOST_CELLS, Sampled, Wish, headline};
+use thimbleworth::report::{markdown, odds_json, result_csv, result_json};
 use wasm_bindgen::prelude::wasm_bindgen;
 
 /// Name and version, as the page and its documents show them.
@@ -41,7 +42,7 @@ pub fn start_page() {
 }
 
 /// The account of a plan as a document, the same bytes as the command writes: `json`, `csv` or `markdown` as
-/// `thimbleworth account PLAN --format …`, and `compare` as `thimbleworth compare PLAN --format json`.
+/// `thimbleworth account PLAN --format …`, `compare` as `thimbleworth compare PLAN --format json`, `odds` as `thimbleworth odds PLAN --draws 2000 --format json`.
 ///
 /// A plan with errors gives a JSON document without workloads, with the problems in it. An unknown format is answered with
 /// a sentence.
@@ -52,8 +53,14 @@ pub fn account(plan_json: &str, format: &str) -> String {
         "json" => |account| result_json(account, false),
         "compare" => |account| result_json(account, true),
         "csv" => result_csv,
+        "odds" => |account| {
+            let mut sampled = Sampled::default();
+            sampled.follow(account, Wish { draws: 2000, most_cells: MOST_CELLS, wanted: &headline });
+            while sampled.advance(account, 2000) > 0 {}
+            odds_json(account, &sampled, 0.95)
+        },
         "markdown" => markdown,
-        _ => return format!("no format \"{format}\"; there are: json, compare, csv, markdown"),
+        _ => return format!("no format \"{format}\"; there are: json, compare, csv, odds, markdown"),
     };
     write(&account_text(plan_json))
 }

@@ -3,7 +3,9 @@
 mod air;
 mod assumptions;
 mod carbon_dioxide;
+mod climate;
 mod comparison;
+mod cost;
 mod desk;
 mod energy;
 mod finding;
@@ -14,6 +16,7 @@ mod plates;
 mod question;
 mod routes;
 mod site;
+mod sure;
 mod view;
 mod waste;
 
@@ -36,6 +39,9 @@ static SECTIONS: &[&Section] = &[
     &air::SECTION,
     &hazard::SECTION,
     &comparison::SECTION,
+    &cost::SECTION,
+    &climate::SECTION,
+    &sure::SECTION,
     &assumptions::SECTION,
 ];
 
