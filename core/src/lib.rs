@@ -25,6 +25,7 @@ pub mod hazard;
 pub mod heat;
 pub mod ledger;
 pub mod letter;
+pub mod log;
 pub mod material;
 pub mod metric;
 pub mod mixture;

@@ -1,8 +1,6 @@
-//! How long a sampled run takes, and how many times longer the same model takes as a vectorised NumPy script:
-//! `cargo bench -p thimbleworth-tests --bench odds`.
+//! How long a sampled run takes: `cargo bench -p thimbleworth-tests --bench odds`.
 //!
-//! With `python3` and NumPy at hand, `numpy_model.py` draws the same routes in the same run, and the ratio is printed. It
-//! judges nothing: load on a machine is no fault of the code.
+//! It judges nothing: load on a machine is no fault of the code.
 #![allow(clippy::unwrap_used, clippy::panic, reason = "a program for people who measure")]
 
 use std::time::Instant;

@@ -1,7 +1,7 @@
 //! Plans made by chance, the same ones every time.
 
 use thimbleworth::plan::{
-    Electricity, Field, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
+    Electricity, Field, Log, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
 };
 
 /// SplitMix64 (Steele, Lea and Flood 2014; constants from memory). Any generator would do; nothing rests on its
@@ -94,6 +94,15 @@ impl Chance {
             site: self.site(),
             materials: self.list(3, |c| OwnMaterial { name: c.text(), fields: c.fields() }),
             workloads: self.list(3, Self::workload),
+            logs: self.list(2, |c| Log {
+                name: c.text(),
+                register: c.text(),
+                columns: c.rows(),
+                dates: c.maybe(Self::text),
+                decimals: c.maybe(Self::text),
+                uncertainty: c.maybe(Self::text),
+                means: c.rows(),
+            }),
         }
     }
 

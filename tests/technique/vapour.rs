@@ -277,3 +277,21 @@ fn a_percolator_is_charged_by_the_mass_of_its_bed() {
     let account = account_text(&text(&json!({ "plant material": "200 g" }), &neither));
     assert!(account.problems.iter().any(|p| p.found.contains("how much solvent runs through")));
 }
+
+/// A wet sample: its water is asked for, and goes where the plan says, so that the waste stream holds it.
+#[test]
+fn a_wet_sample_brings_its_water_along() {
+    let feed = json!({ "soil": "8 g", "water": "2 g" });
+    let mut steps = json!([{ "step": "ultrasonic", "solvent": "acetone", "charge": "60 mL" }]);
+    assert!(warned(&sound(&text(&feed, &steps)), "the sample brings water"));
+    steps[0]["extracts"] = json!({ "water": "90 %" });
+    steps[0]["hold_up"] = json!("0 mL/g");
+    let account = sound(&text(&feed, &steps));
+    assert!(!warned(&account, "the sample brings water"));
+    let (_, found) = route(&account, "r");
+    // 2 % of the liquor goes to air, as the technique's own share has it
+    near(found.value("mass.to.waste.water").unwrap(), 2e-3 * 0.9, 0.03);
+    // water as the sample itself is another matter
+    let water = json!([{ "step": "liquid-liquid", "solvent": "n-heptane", "charge": "50 mL" }]);
+    assert!(!warned(&sound(&text(&json!({ "water": "1 L" }), &water)), "the sample brings water"));
+}

@@ -11,6 +11,7 @@ mod co2;
 mod demo;
 mod example;
 mod input;
+mod log;
 mod materials;
 mod need;
 mod odds;
@@ -21,6 +22,7 @@ mod states;
 mod technique;
 mod trace;
 mod waste;
+mod workbook;
 
 use clap::{Parser, Subcommand};
 use output::Refusal;
@@ -66,6 +68,8 @@ enum What {
     Technique(technique::Args),
     /// A state of carbon dioxide, or a file of states
     Co2(co2::Args),
+    /// The site's own records beside its plan: sums, reconciliation, solvent balance
+    Log(log::Args),
     /// The CO2 that a recovery takes, and the state that takes least
     Need(need::Args),
     /// The example plans, or the text of one to begin from
@@ -95,6 +99,7 @@ fn main() -> ExitCode {
         Some(What::Schema) => schema::run(),
         Some(What::Technique(args)) => technique::run(args),
         Some(What::Co2(args)) => co2::run(args),
+        Some(What::Log(args)) => log::run(args),
         Some(What::Need(args)) => need::run(args),
         Some(What::Example(args)) => example::run(args),
     };

@@ -49,7 +49,12 @@ pub(crate) fn print(text: &str) -> Result<(), Refusal> {
 
 /// The result into a file, or on to the standard output where there is none.
 pub(crate) fn deliver(text: &str, to: Option<&Path>, read_from: &Path) -> Result<(), Refusal> {
-    let Some(path) = to else { return print(text) };
+    if to.is_none() { print(text) } else { deliver_bytes(text.as_bytes(), to, read_from) }
+}
+
+/// As [`deliver`], for what is no text; it goes into a file.
+pub(crate) fn deliver_bytes(bytes: &[u8], to: Option<&Path>, read_from: &Path) -> Result<(), Refusal> {
+    let Some(path) = to else { return Ok(()) };
     let same = |a: &Path, b: &Path| matches!((a.canonicalize(), b.canonicalize()), (Ok(a), Ok(b)) if a == b);
     if same(path, read_from) {
         return Err(Refusal::because(format!(
@@ -57,26 +62,26 @@ pub(crate) fn deliver(text: &str, to: Option<&Path>, read_from: &Path) -> Result
             path.display()
         )));
     }
-    write(text, path).map_err(|error| {
+    write(bytes, path).map_err(|error| {
         Refusal::because(format!("{} cannot be written: {}", path.display(), reason(&error)))
     })
 }
 
 /// Writes a file as a whole: into a new one beside it, which then takes its place, so that nobody ever finds half of it.
-fn write(text: &str, path: &Path) -> io::Result<()> {
+fn write(bytes: &[u8], path: &Path) -> io::Result<()> {
     let path = path.canonicalize().unwrap_or_else(|_| path.to_path_buf());
     match fs::metadata(&path) {
         Ok(found) if found.is_dir() => return Err(ErrorKind::IsADirectory.into()),
         // A device or a pipe has no other side that could take its place.
         Ok(found) if !found.is_file() => {
-            return OpenOptions::new().write(true).open(&path)?.write_all(text.as_bytes());
+            return OpenOptions::new().write(true).open(&path)?.write_all(bytes);
         }
         Ok(found) if found.permissions().readonly() => return Err(ErrorKind::PermissionDenied.into()),
         Ok(_) | Err(_) => {}
     }
     let (beside, mut file) = beside(&path)?;
     let written = file
-        .write_all(text.as_bytes())
+        .write_all(bytes)
         .and_then(|()| file.sync_all())
         .and_then(|()| {
             fs::metadata(&path).map_or(Ok(()), |old| fs::set_permissions(&beside, old.permissions()))

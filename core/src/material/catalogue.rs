@@ -62,11 +62,20 @@ impl Catalogue {
     pub fn find(&self, name: &str) -> Result<&Substance, UnknownMaterial> {
         let short = name.len() <= LONGEST_NAME;
         let key = if short { fold(name) } else { String::new() };
-        let substance = self.index.get(&key).and_then(|place| self.substances.get(place));
-        substance.ok_or_else(|| UnknownMaterial {
+        self.at(&key).ok_or_else(|| UnknownMaterial {
             asked: name.chars().take(LONGEST_NAME).collect(),
             suggestions: if key.is_empty() { Vec::new() } else { self.suggest(&key) },
         })
+    }
+
+    /// As [`Catalogue::find`], without looking for names that come close: for long lists.
+    #[must_use]
+    pub fn known(&self, name: &str) -> Option<&Substance> {
+        if name.len() <= LONGEST_NAME { self.at(&fold(name)) } else { None }
+    }
+
+    fn at(&self, key: &str) -> Option<&Substance> {
+        self.index.get(key).and_then(|place| self.substances.get(place))
     }
 
     /// Every material, in the order of the tables.

@@ -32,6 +32,27 @@ pub struct Plan {
     pub materials: Vec<OwnMaterial>,
     /// The pieces of work.
     pub workloads: Vec<Workload>,
+    /// How the site's own records are read: one entry a file.
+    pub logs: Vec<Log>,
+}
+
+/// How one of the site's records is read: a preparation log, a purchase ledger, a stock count and so on.
+#[derive(Clone, Debug, Default, PartialEq, Eq)]
+pub struct Log {
+    /// Its name, as a rule that of the file.
+    pub name: String,
+    /// Which register it is, in a word of [`log::Register`](crate::log::Register).
+    pub register: String,
+    /// Headings with what stands below them, `amount in mL`.
+    pub columns: Vec<(String, String)>,
+    /// `day first` or `month first`, for dates with strokes.
+    pub dates: Option<String>,
+    /// `point` or `comma`.
+    pub decimals: Option<String>,
+    /// How far the amounts can be off, as a share.
+    pub uncertainty: Option<String>,
+    /// Names in the file with the names in the plan that they mean.
+    pub means: Vec<(String, String)>,
 }
 
 /// The site whose work it is.

@@ -98,6 +98,12 @@ pub(super) static PLAN: Object = Object {
             "materials that the plan adds to the catalogue or overrides, each with its source",
         ),
         must("workloads", Shape::List(&WORKLOAD, 1), "", "the pieces of work, at least one"),
+        may(
+            "logs",
+            Shape::List(&LOG, 0),
+            r#"[{ "name": "purchases.csv", "register": "purchases", "columns": { "Volume (L)": "amount in L" } }]"#,
+            "how the site's own records are read, one entry a file",
+        ),
     ],
     fields_after: None,
 };
@@ -207,6 +213,45 @@ static OTHER_WASTE: Object = Object {
             Shape::YesNo,
             "false",
             "whether it is acutely hazardous (P list); it is not when left out",
+        ),
+    ],
+    fields_after: None,
+};
+
+static LOG: Object = Object {
+    title: "a log",
+    keys: &[
+        must("name", Shape::Name, r#""purchases.csv""#, "the name of the file"),
+        must(
+            "register",
+            Shape::Word(&crate::log::Register::WORDS),
+            r#""purchases""#,
+            "which of the site's records it is",
+        ),
+        may(
+            "columns",
+            Shape::Rows,
+            r#"{ "Date": "date", "Solvent": "material", "Volume (L)": "amount in L" }"#,
+            "its headings with what stands below them",
+        ),
+        may(
+            "dates",
+            Shape::Word(&crate::log::DayOrder::WORDS),
+            r#""day first""#,
+            "which number is the day in dates with strokes",
+        ),
+        may(
+            "decimals",
+            Shape::Word(&crate::log::Decimals::WORDS),
+            r#""comma""#,
+            "which sign stands before decimals",
+        ),
+        may("uncertainty", Shape::Amount, r#""2 %""#, "how far its amounts can be off, as half a width"),
+        may(
+            "means",
+            Shape::Rows,
+            r#"{ "SOX-PAH": "PAH in sediment / Soxhlet", "Hexanes": "n-hexane" }"#,
+            "names in the file with the names in the plan that they mean",
         ),
     ],
     fields_after: None,
@@ -580,8 +625,9 @@ pub(super) static STEP: Object = Object {
 };
 
 #[cfg(test)]
-pub(super) static ALL: [&Object; 16] = [
+pub(super) static ALL: [&Object; 17] = [
     &PLAN,
+    &LOG,
     &SITE,
     &ELECTRICITY,
     &ROOM,

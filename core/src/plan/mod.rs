@@ -19,7 +19,7 @@ mod write;
 
 pub use differences::{Change, differences};
 pub use document::{
-    Electricity, Field, OtherWaste, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream,
+    Electricity, Field, Log, OtherWaste, OwnMaterial, PLAN_VERSION, Plan, Room, Route, Site, Step, Stream,
     Workload,
 };
 pub(crate) use nearest::nearest;

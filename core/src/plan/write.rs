@@ -1,6 +1,6 @@
 //! Saving a plan: the same plan always gives the same bytes.
 
-use super::document::{Field, OtherWaste, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
+use super::document::{Field, Log, OtherWaste, PLAN_VERSION, Plan, Route, Site, Step, Stream, Workload};
 use super::keys::VERSION_KEY;
 use super::print::print;
 use super::tree::{Node, is_number};
@@ -89,6 +89,25 @@ pub(super) fn tree(plan: &Plan) -> Node {
         out.put("materials", materials.into());
     }
     out.list("workloads", &plan.workloads, workload);
+    if !plan.logs.is_empty() {
+        out.list("logs", &plan.logs, log);
+    }
+    out.into()
+}
+
+fn log(log: &Log) -> Node {
+    let mut out = Entries::default();
+    out.text("name", &log.name);
+    out.text("register", &log.register);
+    if !log.columns.is_empty() {
+        out.put("columns", rows(&log.columns));
+    }
+    out.optional("dates", log.dates.as_ref());
+    out.optional("decimals", log.decimals.as_ref());
+    out.optional("uncertainty", log.uncertainty.as_ref());
+    if !log.means.is_empty() {
+        out.put("means", rows(&log.means));
+    }
     out.into()
 }
 
@@ -331,6 +350,15 @@ mod tests {
                 months: some("2-5"),
                 present: "A".into(),
                 routes: vec![route],
+            }],
+            logs: vec![Log {
+                name: "purchases.csv".into(),
+                register: "purchases".into(),
+                columns: pair("Volume (L)", "amount in L"),
+                dates: some("day first"),
+                decimals: some("comma"),
+                uncertainty: some("2 %"),
+                means: pair("Hexanes", "n-hexane"),
             }],
         }
     }

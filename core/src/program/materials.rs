@@ -64,6 +64,25 @@ impl MaterialBook {
         book
     }
 
+    /// As [`MaterialBook::find`], without suggestions, and by the CAS number of the plan's own materials too: for long
+    /// lists of names.
+    #[must_use]
+    pub fn known(&self, name: &str) -> Option<Arc<Substance>> {
+        let own =
+            |name: &str| self.own.get(name).and_then(|place| self.substances.get(place)).map(Arc::clone);
+        if let Some(own) = own(name) {
+            return Some(own);
+        }
+        if let Some(known) = catalogue().known(name) {
+            return Some(own(&known.name).unwrap_or_else(|| Arc::new(known.clone())));
+        }
+        let same = |own: &&Arc<Substance>| {
+            own.name.eq_ignore_ascii_case(name) || own.cas.as_deref().is_some_and(|cas| cas == name)
+        };
+        // What stands behind them was met under another name.
+        self.substances.iter().take(self.own.len()).find(same).map(Arc::clone)
+    }
+
     /// The material of this name: the plan's own first, then the catalogue's by name, synonym or CAS number.
     ///
     /// # Errors

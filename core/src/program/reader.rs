@@ -448,6 +448,24 @@ impl<'r, 'p> Reader<'r, 'p> {
     /// Materials of the feed with the share that is taken out of each.
     pub fn taken_out(&mut self, p: &'static Param) -> Vec<(Material, In)> {
         let rows = self.per_material(p);
+        // A wet solid: its water goes along with what mixes with it.
+        let mixes = |m: &super::MaterialUse| {
+            m.substance.solubility_in_water == crate::material::Solubility::Miscible
+                && m.substance.class == crate::material::Class::Solvent
+        };
+        if self.technique.takes_feed == Some(Place::MARC) && self.route.materials.iter().any(mixes) {
+            let water =
+                |m: &&Material| self.substance(**m).is_some_and(|s| s.class == crate::material::Class::Water);
+            let wet = self.route.fed.iter().find(water).copied();
+            if let Some(wet) = wet.filter(|m| !rows.iter().any(|(taken, _)| taken == m)) {
+                let name = self.name_of(wet).to_owned();
+                self.doubt(
+                    p.key,
+                    format!("the sample brings {name}, and nothing says how much of it goes with the extract: all of it stays in the marc"),
+                    format!("its share, as \"{name}\": \"90 %\" with a solvent that mixes with water, or a drying agent before the step; \"0 %\" if it is right"),
+                );
+            }
+        }
         for &(material, _) in &rows {
             if !self.route.fed.contains(&material) {
                 let name = self.name_of(material).to_owned();

@@ -43,5 +43,6 @@ pub use kind::Kind;
 pub use number::{shortest, significant};
 pub use read::{LONGEST, read, read_entry};
 pub use show::{show, show_in, show_money};
+pub(crate) use unit::known_unit;
 pub use unit::{Unit, unit};
 pub use units::{Factor, UNITS, UnitRow, preferred_unit, units_of};

@@ -187,6 +187,11 @@ pub fn unit(spelling: &str, kind: Kind) -> Result<Unit, AmountError> {
     unit_at(spelling, kind, 0)
 }
 
+/// As [`unit`], without looking for what is wrong with a spelling: for long lists.
+pub(crate) fn known_unit(spelling: &str, kind: Kind) -> Option<Unit> {
+    resolve(spelling, kind).or_else(|| resolve(&normal(spelling), kind))
+}
+
 pub(super) fn unit_at(spelling: &str, kind: Kind, at: usize) -> Result<Unit, AmountError> {
     // Most are written as they stand in the table.
     if let Some(unit) = resolve(spelling, kind) {

@@ -7,6 +7,7 @@
 //! | [`markdown()`] | a report to read and to print |
 //! | [`account_table`], [`comparison_table`] | plain text for a terminal |
 //! | [`energy_sheets`] | energy by step and CO2 by state, tables for all of them |
+//! | [`log_tables`], [`reconciliation_table`], [`solvent_balance_table`] | the site's records, as tables |
 //! | [`case_markdown`], [`since_markdown`] | the paper for finance and quality; what differs from an older plan |
 //! | [`air_sheets`] | the air of the room, its limits, a cylinder that lets go |
 //! | [`odds_table`], [`odds_json`] | what the draws say: intervals, odds, what matters most |
@@ -18,9 +19,11 @@
 mod air;
 mod case;
 mod csv;
+mod data_table;
 mod energy;
 mod grid;
 mod json;
+mod log;
 mod markdown;
 mod odds;
 mod paper;
@@ -33,7 +36,9 @@ mod words;
 pub use air::{air_sheets, by_volume};
 pub use case::{case_markdown, money_words, payback_words, since_markdown, turn_words};
 pub use csv::{result_csv, text_cell};
+pub use data_table::{DataCell, DataTable, data_csv, data_json, data_markdown, data_text};
 pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
+pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
 pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};

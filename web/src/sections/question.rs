@@ -210,7 +210,6 @@ fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl I
         };
         let ask = match *key {
             "unused" => Ask::YesNo("no (left out)".into()),
-            "density_mark" => Ask::Number,
             _ if choice.is_empty() => Ask::Text,
             _ => Ask::Choice(options("not said", choice)),
         };

@@ -5,6 +5,7 @@ mod bad_input;
 mod case;
 mod co2;
 mod files;
+mod log;
 mod need;
 mod odds;
 mod results;

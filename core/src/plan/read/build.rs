@@ -2,7 +2,7 @@
 //! as text where it can be, so that it can be shown and mended.
 
 use super::super::document::{
-    Electricity, Field, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
+    Electricity, Field, Log, OtherWaste, OwnMaterial, Plan, Room, Route, Site, Step, Stream, Workload,
 };
 use super::super::keys::{ROOM, STEP};
 use super::super::tree::Node;
@@ -76,6 +76,19 @@ pub(super) fn plan(node: &Node) -> Plan {
         site: get(node, "site").map(site).unwrap_or_default(),
         materials: get(node, "materials").map(materials).unwrap_or_default(),
         workloads: list(node, "workloads", workload),
+        logs: list(node, "logs", log),
+    }
+}
+
+fn log(node: &Node) -> Log {
+    Log {
+        name: required(node, "name"),
+        register: required(node, "register"),
+        columns: get(node, "columns").map(rows).unwrap_or_default(),
+        dates: text(node, "dates"),
+        decimals: text(node, "decimals"),
+        uncertainty: text(node, "uncertainty"),
+        means: get(node, "means").map(rows).unwrap_or_default(),
     }
 }
 
