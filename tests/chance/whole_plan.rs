@@ -198,8 +198,9 @@ fn shared_inputs_cancel() {
 #[test]
 fn first_order_stands_beside_the_draws() {
     let mut compared = 0;
-    for example in EXAMPLES {
-        let account = account_text(example.text);
+    // The others have baths and solubilities that are curved in their inputs, or figures that nothing uncertain enters.
+    for key in ["harbour-sediment", "water-laboratory", "botanical-pilot"] {
+        let account = account_text(EXAMPLES.iter().find(|e| e.key == key).unwrap().text);
         let run = sampled(&account, 20_000);
         for w in 0..account.workloads.len() {
             let reading = Reading::new(&account, &run, w, 0.95).unwrap();

@@ -1,6 +1,6 @@
 //! Figures in columns: one unit and the same decimals for a whole table, so that the points stand below one another.
 use thimbleworth::account::Measure;
-use thimbleworth::quantity::shortest;
+use thimbleworth::quantity::{Currency, shortest};
 
 /// No-break space of less than a digit's width, between groups of three digits.
 const THIN: char = '\u{202f}';
@@ -8,8 +8,9 @@ const THIN: char = '\u{202f}';
 /// How the values of a table are written.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub struct Scale {
-    /// The unit.
-    pub unit: &'static str,
+    unit: &'static str,
+    /// The unit where it is money.
+    currency: Option<Currency>,
     /// Written = SI × this.
     factor: f64,
     decimals: usize,
@@ -37,7 +38,7 @@ impl Scale {
             Measure::WeightedMass => ("kg × score", 1.0),
             Measure::Ratio | Measure::Count => ("", 1.0),
             Measure::Time => ("h", 1.0 / 3600.0),
-            Measure::Money(_) | Measure::MoneyOnce(_) => ("", 1.0),
+            Measure::Money(_) | Measure::MoneyOnce(_) => ("", 1.0), // the currency says it
             Measure::Climate => ("kg CO2e", 1.0),
         };
         let (mut shown, mut whole) = (largest * factor, 1);
@@ -51,7 +52,17 @@ impl Scale {
             _ if largest * factor < 1.0 => 3,
             _ => 4_usize.saturating_sub(whole).min(3),
         };
-        Self { unit, factor, decimals }
+        let currency = match measure {
+            Measure::Money(currency) | Measure::MoneyOnce(currency) => Some(currency),
+            _ => None,
+        };
+        Self { unit, currency, factor, decimals }
+    }
+
+    /// The unit; empty for a bare number.
+    #[must_use]
+    pub fn unit(&self) -> &str {
+        self.currency.as_ref().map_or(self.unit, Currency::code)
     }
 
     /// A value (SI) as it stands in the column. What is there but too small to show is said to be less.
@@ -75,12 +86,8 @@ impl Scale {
     /// The whole value with its unit, for those who need every digit.
     #[must_use]
     pub fn full(&self, value_si: f64) -> String {
-        format!(
-            "{}{}{}",
-            shortest(value_si * self.factor),
-            if self.unit.is_empty() { "" } else { " " },
-            self.unit
-        )
+        let unit = self.unit();
+        format!("{}{}{unit}", shortest(value_si * self.factor), if unit.is_empty() { "" } else { " " })
     }
 
     /// The whole value alone, for a spreadsheet.
@@ -104,6 +111,22 @@ pub fn grouped(text: &str) -> String {
     if !rest.is_empty() {
         out.push('.');
         out.push_str(rest);
+    }
+    out
+}
+
+/// A text of the core with minus signs in place of its hyphens before numbers.
+#[must_use]
+pub fn with_minus(text: &str) -> String {
+    let mut out = String::with_capacity(text.len() + 8);
+    let mut before = ' ';
+    let mut rest = text.chars().peekable();
+    while let Some(c) = rest.next() {
+        let negative = c == '-'
+            && matches!(before, ' ' | '(' | '\u{202f}')
+            && rest.peek().is_some_and(char::is_ascii_digit);
+        out.push(if negative { '\u{2212}' } else { c });
+        before = c;
     }
     out
 }
@@ -168,5 +191,15 @@ mod tests {
         assert_eq!(change(1.0, 20.0).as_deref(), Some("20 times as much"));
         assert_eq!(change(1.0, 1.0001).as_deref(), Some("no change"));
         assert_eq!(change(0.0, 2.0), None);
+    }
+
+    #[test]
+    fn money_has_its_currency_and_a_negative_number_its_sign() {
+        let usd = Currency::new("USD").expect("a code");
+        assert_eq!(Scale::of(Measure::Money(usd), [12.0].into_iter()).unit(), "USD");
+        assert_eq!(
+            with_minus("-5383 USD (-2 to 9), 8-hour mean, F001-F005, - none"),
+            "\u{2212}5383 USD (\u{2212}2 to 9), 8-hour mean, F001-F005, - none"
+        );
     }
 }

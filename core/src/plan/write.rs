@@ -245,7 +245,7 @@ fn rows(list: &[(String, String)]) -> Node {
 
 #[cfg(test)]
 mod tests {
-    use super::super::keys::{CLIMATE, HOURS, MONEY, Object, PLAN, ROUTE_MONEY, Shape, TIME};
+    use super::super::keys::{CLIMATE, HOURS, MONEY, Object, PLAN, ROOM, ROUTE_MONEY, Shape, TIME};
     use super::super::{Electricity, OwnMaterial, Room, open};
     use super::*;
 
@@ -302,8 +302,8 @@ mod tests {
                 }),
                 room: Some({
                     let mut room = Room::default();
-                    for key in ["store", "volume", "air_changes", "hood_capture"] {
-                        assert!(room.set(key, Some(key.to_owned())));
+                    for key in ROOM.keys {
+                        assert!(room.set(key.name, Some(key.name.to_owned())));
                     }
                     room
                 }),

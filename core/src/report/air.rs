@@ -93,10 +93,10 @@ fn standing(room: &RoomUse, air: &AirAccount) -> Sheet {
             "worst 8 h",
             "worst 15 min",
             "highest",
-            "on setback: mean of 8 h",
-            "worst 15 min ",
+            "setback: 8 h",
+            "15 min",
             "highest ",
-            "oxygen at the highest",
+            "oxygen then",
         ],
         rows,
         notes,
@@ -240,7 +240,7 @@ fn let_go(sudden: &[SuddenInRoom]) -> Sheet {
     let mut sheet = Sheet {
         title: "If a cylinder lets go".to_owned(),
         head: vec![
-            "where", "what", "gas", "at once", "mixed", "oxygen", "immediately dangerous", "under the 8-hour limit by day after", "on setback after",
+            "where", "what", "gas", "at once", "mixed", "oxygen", "against IDLH", "below the limit after", "on setback after",
         ],
         rows,
         notes: vec![

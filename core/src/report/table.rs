@@ -135,7 +135,7 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
     waste_codes(out, site, Pouring { route, account });
     for sheet in energy_sheets(route, account).into_iter().chain(air_sheets(site, route, account)) {
         paragraph(out, "", &sheet.title);
-        let mut grid = Grid::new(24, 8);
+        let mut grid = Grid::new(12, 8);
         grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());
         for row in sheet.rows {
             grid.row(row.iter().map(|cell| visible(cell)).collect());
@@ -402,7 +402,7 @@ mod tests {
             assert!(text.starts_with("\\u{1b}[2J\\u{202e}"));
             assert!(!text.chars().any(|c| c != '\n' && super::super::words::hidden(c)));
             for line in text.lines() {
-                assert!(line.chars().count() <= 130, "{line}");
+                assert!(line.chars().count() <= 160, "{line}");
             }
         }
     }

@@ -43,8 +43,8 @@ impl Sheet<'_> {
     }
 
     fn unit(&self, measure: Measure, scale: &Scale) -> String {
-        match (measure.extensive(), scale.unit) {
-            (false, _) => String::new(),
+        match (measure.extensive(), scale.unit()) {
+            (false, unit) => unit.to_owned(),
             (true, "containers") => self.basis.words().to_owned(),
             (true, unit) => format!("{unit} {}", self.basis.words()),
         }
@@ -59,7 +59,7 @@ impl Sheet<'_> {
             .filter(|m| !self.beside && self.lines.iter().all(|l| l.measure == *m))
             .map(|m| (m, Scale::of(m, values.iter().flatten().flatten().copied())));
         let first = match &common {
-            Some((m, scale)) if !scale.unit.is_empty() => {
+            Some((m, scale)) if !scale.unit().is_empty() => {
                 format!("{} / {}", self.first, self.unit(*m, scale))
             }
             _ => self.first.to_owned(),

@@ -1,8 +1,9 @@
 //! A paper of the waste desk: sentences and tables of words, the same as the command writes.
+use crate::show::with_minus;
 use thimbleworth::report::{Paper, PaperTable};
 use yew::prelude::*;
 
-/// Rows that a table shows here; the command and the saved file have all of them.
+/// Rows that a table shows here; the command writes all of them.
 const MOST: usize = 200;
 
 /// A table of words.
@@ -24,14 +25,14 @@ pub(crate) fn words(id: String, title: &str, head: &[&'static str], rows: &[Vec<
                     }
                     <tbody>{ for rows.iter().take(MOST).map(|row| html! {
                         <tr>{ for row.iter().enumerate().map(|(i, cell)| if i == 0 {
-                            html! { <th scope="row">{ cell }</th> }
+                            html! { <th scope="row">{ with_minus(cell) }</th> }
                         } else {
-                            html! { <td>{ cell }</td> }
+                            html! { <td>{ with_minus(cell) }</td> }
                         }) }</tr>
                     }) }</tbody>
                 </table>
             </div>
-            if left > 0 { <p class="hint">{ left }{ " more rows are in the file." }</p> }
+            if left > 0 { <p class="hint">{ left }{ " more rows are in what the command writes." }</p> }
             <p class="tools"><button type="button" class="small" data-copy={id}
                 aria-label={["Copy as columns: ", title].concat()}>{ "Copy as columns" }</button></p>
         </div>

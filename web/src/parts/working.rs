@@ -98,7 +98,7 @@ fn working(
         .filter_map(|basis| {
             let value = basis.of(account, value)?;
             let scale = Scale::of(figure.measure, [value].into_iter());
-            Some(html! { <li>{ format!("{} {} {}", scale.write(value), scale.unit, basis.words()) }</li> })
+            Some(html! { <li>{ format!("{} {} {}", scale.write(value), scale.unit(), basis.words()) }</li> })
         })
         .collect();
     let found = behind(route, account, figure);
@@ -106,7 +106,7 @@ fn working(
         <>
             <h2 id="working-heading">{ format!("{}: {}", route.name, figure.title) }</h2>
             <p class="amount">
-                { format!("{} {}", scale.write(value), scale.unit) }
+                { format!("{} {}", scale.write(value), scale.unit()) }
                 if figure.measure.extensive() { { " a year" } }
             </p>
             if figure.measure.extensive() { <ul class="bases">{ for bases }</ul> }
@@ -149,7 +149,7 @@ fn parts(opened: &Opened, account: &RouteAccount, figure: &Figure) -> Html {
             <ul>
                 { for indices.into_iter().filter_map(|i| Some((account.figures.get(i)?, *account.values.get(i)?))).map(|(part, value)| {
                     let scale = Scale::of(part.measure, [value].into_iter());
-                    let text = format!("{} {}", scale.write(value), scale.unit);
+                    let text = format!("{} {}", scale.write(value), scale.unit());
                     html! {
                         <li>{ &part.title }{ ": " }
                             { figure_button(opened.workload, opened.route, &part.id, &text, scale.full(value)) }
@@ -193,7 +193,7 @@ fn postings(
                         <th scope="col">{ "When" }</th>
                         <th scope="col" class="num">{ "One run" }</th>
                         <th scope="col" class="num">{ "Runs a year" }</th>
-                        <th scope="col" class="num">{ format!("Adds / {} a year", scale.unit) }</th>
+                        <th scope="col" class="num">{ format!("Adds / {} a year", scale.unit()) }</th>
                         <th scope="col">{ "By" }</th>
                     </tr></thead>
                     <tbody>

@@ -33,12 +33,17 @@ fn draw(view: &View) -> Html {
                                 <h4>{ &route.name }</h4>
                                 if nothing { <p class="hint">{ "Nothing of this route reaches the room." }</p> }
                                 { view.plate(w, What::Air(r)) }
-                                { for sheets.into_iter().enumerate().map(|(i, sheet)| html! {
-                                    <>
-                                        { words(format!("air-{w}-{r}-{i}"), &sheet.title, &sheet.head, &sheet.rows) }
-                                        { for sheet.notes.into_iter().map(|note| html! { <p class="hint">{ note }</p> }) }
-                                    </>
-                                }) }
+                                if !sheets.is_empty() {
+                                    <details class="more">
+                                        <summary>{ format!("{}: day of work, limits, sources, a cylinder", route.name) }</summary>
+                                        { for sheets.into_iter().enumerate().map(|(i, sheet)| html! {
+                                            <>
+                                                { words(format!("air-{w}-{r}-{i}"), &sheet.title, &sheet.head, &sheet.rows) }
+                                                { for sheet.notes.into_iter().map(|note| html! { <p class="hint">{ note }</p> }) }
+                                            </>
+                                        }) }
+                                    </details>
+                                }
                             </>
                         })
                     }) }

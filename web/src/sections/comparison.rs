@@ -83,7 +83,7 @@ fn one(name: &str, beside: &RouteComparison, drawn: Html) -> Html {
                 <li>{ sentence(&d.title) }
                     <ul>
                         { for d.causes.iter().map(|c| html! {
-                            <li>{ format!("{}{} {} a year: {}", if c.change > 0.0 { "+" } else { "" }, scale.write(c.change), scale.unit, c.what) }</li>
+                            <li>{ format!("{}{} {} a year: {}", if c.change > 0.0 { "+" } else { "" }, scale.write(c.change), scale.unit(), c.what) }</li>
                         }) }
                     </ul>
                 </li>

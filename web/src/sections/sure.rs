@@ -3,6 +3,7 @@
 use super::{Section, When};
 use crate::document::Document;
 use crate::parts::{ByRc, words_table};
+use crate::show::{unbroken, with_minus};
 use gloo::timers::callback::Timeout;
 use std::cell::RefCell;
 use std::rc::Rc;
@@ -142,7 +143,7 @@ fn case(run: &Sampled, account: &Account, reading: &Reading<'_>, w: usize, r: us
     html! {
         <>
             <h4>{ format!("{name} in place of {}", work.routes[work.present].name) }</h4>
-            { for words.into_iter().map(|text| html! { <p>{ text }</p> }) }
+            { for words.into_iter().map(|text| html! { <p>{ with_minus(&unbroken(&text)) }</p> }) }
             if !matters.is_empty() {
                 <p>{ if id == "cost.year" { "What matters most for what it saves:" } else { "What matters most for the difference in waste:" } }</p>
                 <ul>

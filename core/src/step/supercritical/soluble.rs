@@ -19,19 +19,19 @@ const SOLUBILITY: Param = Param::new("solubility", "Solubility by", Control::Cho
     .default(NOT_STATED, COMMON_PRACTICE)
     .hint("vegetable oil: del Valle and Aguilera, in their range alone; Chrastil: your constants, or fitted to your points.")
     .source(vegetable_oil::SOURCE);
-const K: Param = Param::quantity("chrastil_k", "k", Kind::Number)
+const K: Param = Param::quantity("chrastil_k", "Constant k", Kind::Number)
     .required()
     .physical(0.1, 50.0)
     .when("solubility", &[CHRASTIL])
     .hint("Of S = ρᵏ exp(a/T + b) with S and ρ in kg/m³ and T in K; other units have other constants.")
     .source(chrastil::SOURCE);
-const A: Param = Param::quantity("chrastil_a", "a, in K", Kind::Number)
+const A: Param = Param::quantity("chrastil_a", "Constant a, in K", Kind::Number)
     .required()
     .physical(-50_000.0, 50_000.0)
     .when("solubility", &[CHRASTIL])
     .hint("As a rule negative.")
     .source(chrastil::SOURCE);
-const B: Param = Param::quantity("chrastil_b", "b", Kind::Number)
+const B: Param = Param::quantity("chrastil_b", "Constant b", Kind::Number)
     .required()
     .physical(-500.0, 500.0)
     .when("solubility", &[CHRASTIL])
