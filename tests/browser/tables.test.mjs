@@ -13,9 +13,9 @@ test("31, 32: tables have captions, scoped headers with units, and columns of fi
   const { page, close } = await openWith(browser, smallPlan());
   const tables = await page.evaluate(() =>
     [...document.querySelectorAll("main table.figures")].map((table) => ({
-      caption: table.caption?.innerText ?? "",
+      caption: table.caption?.textContent ?? "",
       scoped: [...table.querySelectorAll("th")].every((th) => ["row", "col"].includes(th.scope)),
-      head: table.rows[0].cells[0].innerText,
+      head: table.rows[0].cells[0].textContent,
       align: [...table.querySelectorAll("td.num")].every((td) => getComputedStyle(td).textAlign === "right"),
       tabular: getComputedStyle(table).fontVariantNumeric,
       decimals: [...table.querySelectorAll("td.num button")].map((b) => (b.innerText.split(".")[1] ?? "").length),

@@ -134,7 +134,7 @@ pub fn with_minus(text: &str) -> String {
 /// A text as it is shown: a number and its per cent sign never stand on two lines.
 #[must_use]
 pub fn unbroken(text: &str) -> String {
-    text.replace(" %", "\u{202f}%")
+    text.replace(" %", "\u{202f}%").replace("\u{a0}%", "\u{202f}%")
 }
 
 /// A change in per cent of what was there, as text with its sign; nothing where there was nothing.

@@ -1,5 +1,5 @@
 //! A paper of the waste desk: sentences and tables of words, the same as the command writes.
-use crate::show::with_minus;
+use crate::show::{unbroken, with_minus};
 use thimbleworth::report::{Paper, PaperTable};
 use yew::prelude::*;
 
@@ -25,9 +25,9 @@ pub(crate) fn words(id: String, title: &str, head: &[&'static str], rows: &[Vec<
                     }
                     <tbody>{ for rows.iter().take(MOST).map(|row| html! {
                         <tr>{ for row.iter().enumerate().map(|(i, cell)| if i == 0 {
-                            html! { <th scope="row">{ with_minus(cell) }</th> }
+                            html! { <th scope="row">{ with_minus(&unbroken(cell)) }</th> }
                         } else {
-                            html! { <td>{ with_minus(cell) }</td> }
+                            html! { <td>{ with_minus(&unbroken(cell)) }</td> }
                         }) }</tr>
                     }) }</tbody>
                 </table>
@@ -53,9 +53,9 @@ pub(crate) fn folded(key: &str, paper: &Paper) -> Html {
 pub(crate) fn unfolded(key: &str, paper: &Paper) -> Html {
     html! {
         <>
-            { for paper.lead.iter().map(|line| html! { <p>{ line }</p> }) }
+            { for paper.lead.iter().map(|line| html! { <p>{ unbroken(line) }</p> }) }
             { for paper.tables.iter().enumerate().map(|(i, t)| words_table([key, "-", &i.to_string()].concat(), t)) }
-            <ul class="foot">{ for paper.foot.iter().map(|line| html! { <li>{ line }</li> }) }</ul>
+            <ul class="foot">{ for paper.foot.iter().map(|line| html! { <li>{ unbroken(line) }</li> }) }</ul>
         </>
     }
 }

@@ -34,7 +34,7 @@ pub fn air_course(key: &str, route: &str, air: &AirAccount) -> Option<Picture> {
     let beyond: Vec<String> =
         limits.iter().filter(|(x, _)| *x > shown).map(|(x, name)| format!("{name} {}", spaced(*x))).collect();
     if !beyond.is_empty() {
-        notes.push(format!("Limits above the frame: {}.", beyond.join("; ")));
+        notes.push(crate::show::unbroken(&format!("Limits above the frame: {}.", beyond.join("; "))));
     }
     Some(Picture {
         key: key.to_owned(),

@@ -31,7 +31,7 @@ fn dome() -> Vec<(f64, f64)> {
     liquid
 }
 
-/// The circuit of a step; its table stands beside it in the section.
+/// The circuit of a step, state by state.
 #[must_use]
 pub fn circuit(key: &str, route: &str, dense: &DenseCo2) -> Picture {
     let legs = &dense.legs;
@@ -64,7 +64,15 @@ pub fn circuit(key: &str, route: &str, dense: &DenseCo2) -> Picture {
         title: format!("{route}: the CO₂ circuit on the plane of pressure and enthalpy"),
         description: format!("For each kilogram that goes round: {}; below zero is taken out.", steps.join(", ")),
         notes: vec!["Under the thick line liquid and vapour exist side by side. A level line is heat or cooling, a steep one a pump, an upright one a valve. An expansion to the vent passes through dry ice, which the equation of state does not describe: only its two ends are states.".to_owned()],
-        tables: Vec::new(),
+        tables: vec![Table {
+            caption: "States of the circuit".into(),
+            head: vec![Head::words("State"), Head::number("Pressure (bar)"), Head::number("Enthalpy (kJ/kg)")],
+            rows: legs
+                .points
+                .iter()
+                .map(|p| vec![p.name.to_owned(), written(p.pressure_pa / 1e5, 4), written(p.enthalpy_j_kg / 1e3, 4)])
+                .collect(),
+        }],
         wide: chart(&x, &y, &marks, Size::Wide),
         narrow: chart(&x, &y, &marks, Size::Narrow),
     }
@@ -98,7 +106,7 @@ pub fn extraction(key: &str, route: &str, dense: &DenseCo2) -> Option<Picture> {
     Some(Picture {
         key: key.to_owned(),
         title: format!(
-            "{route}: {}\u{a0}% take {}\u{a0}kg of CO₂ for each kilogram of solid",
+            "{route}: {}\u{202f}% take {}\u{a0}kg of CO₂ for each kilogram of solid",
             written(100.0 * study.target.recovery, 3),
             written(needed.solvent_kg_kg, 3)
         ),
@@ -158,7 +166,7 @@ mod tests {
         );
         let picture = extraction("k", "A", &dense(&oil)).unwrap();
         assert!(
-            picture.title.contains("94\u{a0}%") && picture.tables[0].rows.len() == 11,
+            picture.title.contains("94\u{202f}%") && picture.tables[0].rows.len() == 11,
             "{}",
             picture.title
         );

@@ -3,6 +3,7 @@
 use super::plates::What;
 use super::{Section, View, When};
 use crate::parts::words;
+use crate::show::unbroken;
 use thimbleworth::report::air_sheets;
 use yew::prelude::*;
 
@@ -39,7 +40,7 @@ fn draw(view: &View) -> Html {
                                         { for sheets.into_iter().enumerate().map(|(i, sheet)| html! {
                                             <>
                                                 { words(format!("air-{w}-{r}-{i}"), &sheet.title, &sheet.head, &sheet.rows) }
-                                                { for sheet.notes.into_iter().map(|note| html! { <p class="hint">{ note }</p> }) }
+                                                { for sheet.notes.into_iter().map(|note| html! { <p class="hint">{ unbroken(&note) }</p> }) }
                                             </>
                                         }) }
                                     </details>

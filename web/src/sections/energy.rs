@@ -3,7 +3,7 @@ use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
 use crate::parts::Sheet;
-use crate::show::with_minus;
+use crate::show::{unbroken, with_minus};
 use thimbleworth::account::Group;
 use thimbleworth::letter::sentence;
 use thimbleworth::report::energy_sheets;
@@ -58,12 +58,12 @@ fn by_step(view: &View, w: usize, r: usize) -> Html {
                         <caption>{ &sheet.title }</caption>
                         <thead><tr>{ for sheet.head.iter().map(|h| html! { <th scope="col">{ h }</th> }) }</tr></thead>
                         <tbody>{ for sheet.rows.iter().map(|row| html! { <tr>{ for row.iter().enumerate().map(|(i, cell)| if i == 0 {
-                            html! { <th scope="row">{ with_minus(cell) }</th> }
+                            html! { <th scope="row">{ with_minus(&unbroken(cell)) }</th> }
                         } else {
-                            html! { <td>{ with_minus(cell) }</td> }
+                            html! { <td>{ with_minus(&unbroken(cell)) }</td> }
                         }) }</tr> }) }</tbody>
                     </table></div>
-                    { for sheet.notes.iter().map(|note| html! { <p class="picture-note">{ with_minus(note) }</p> }) }
+                    { for sheet.notes.iter().map(|note| html! { <p class="picture-note">{ with_minus(&unbroken(note)) }</p> }) }
                 </>
             }) }
             if !account.dense.is_empty() {

@@ -18,7 +18,7 @@ use yew::prelude::*;
 pub(super) static SECTION: Section = Section {
     id: "sure",
     title: "How sure",
-    lead: "Every uncertain amount drawn 10,000 times, by the same numbers for all routes; intervals hold 95 % of the draws.",
+    lead: "Every uncertain amount drawn 10,000 times, by the same numbers for all routes; intervals hold 95\u{202f}% of the draws.",
     when: When::Follows,
     body: |view| html! { <Sure document={view.document.clone()} /> },
 };
@@ -149,7 +149,7 @@ fn case(run: &Sampled, account: &Account, reading: &Reading<'_>, w: usize, r: us
                 <ul>
                     { for matters.iter().take(5).map(|m| {
                         let percent = format!("{} %", thimbleworth::quantity::significant(m.share * 100.0, 2));
-                        html! { <li><meter value={m.share.to_string()} aria-label={m.words.clone()}>{ &percent }</meter>{ format!(" {percent} {}", m.words) }</li> }
+                        html! { <li><meter value={m.share.to_string()} aria-label={m.words.clone()}>{ &percent }</meter>{ unbroken(&format!(" {percent} {}", m.words)) }</li> }
                     }) }
                 </ul>
             }
