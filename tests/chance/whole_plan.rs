@@ -198,20 +198,24 @@ fn shared_inputs_cancel() {
 #[test]
 fn first_order_stands_beside_the_draws() {
     let mut compared = 0;
-    // The others have baths and solubilities that are curved in their inputs, or figures that nothing uncertain enters.
-    for key in ["harbour-sediment", "water-laboratory", "botanical-pilot"] {
-        let account = account_text(EXAMPLES.iter().find(|e| e.key == key).unwrap().text);
+    for example in EXAMPLES {
+        let account = account_text(example.text);
         let run = sampled(&account, 20_000);
+        // The neighbours of extraction have baths and solubilities, which are curved in their inputs: there only u is held.
+        let nearly_linear =
+            ["harbour-sediment", "water-laboratory", "botanical-pilot"].contains(&example.key);
         for w in 0..account.workloads.len() {
             let reading = Reading::new(&account, &run, w, 0.95).unwrap();
             for spread in reading.figure("waste.total.mass").unwrap().routes.iter().flatten() {
                 let (Some(drawn), Some(u)) = (spread.drawn, spread.first_order_u) else { continue };
-                compared += 1;
                 near(u, drawn.u, 0.03 * drawn.u);
-                near(drawn.mean, spread.central, 0.1 * drawn.u);
-                let width = drawn.symmetric.high - drawn.symmetric.low;
-                let normal = 2.0 * normal_quantile(0.975) * u;
-                assert!(width < 1.05 * normal, "{width} {normal}");
+                if nearly_linear {
+                    compared += 1;
+                    near(drawn.mean, spread.central, 0.1 * drawn.u);
+                    let width = drawn.symmetric.high - drawn.symmetric.low;
+                    let normal = 2.0 * normal_quantile(0.975) * u;
+                    assert!(width < 1.05 * normal, "{width} {normal}");
+                }
             }
         }
     }

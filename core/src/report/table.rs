@@ -1,7 +1,7 @@
 //! Plain text for a terminal: the accounts of each route, or the routes side by side.
 
 use super::air::air_sheets;
-use super::energy::energy_sheets;
+use super::energy::{Sheet, energy_sheets};
 use super::grid::{Grid, paragraph};
 use super::row::figures;
 use super::words::{amount, cited, is_detail, visible, work_words};
@@ -134,16 +134,7 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
     }
     waste_codes(out, site, Pouring { route, account });
     for sheet in energy_sheets(route, account).into_iter().chain(air_sheets(site, route, account)) {
-        paragraph(out, "", &sheet.title);
-        let mut grid = Grid::new(12, 8);
-        grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());
-        for row in sheet.rows {
-            grid.row(row.iter().map(|cell| visible(cell)).collect());
-        }
-        grid.print(out);
-        for note in &sheet.notes {
-            paragraph(out, "  ", note);
-        }
+        sheet_of_words(out, &sheet);
     }
     hazards(out, account);
     if !route.assumptions.is_empty() {
@@ -164,6 +155,40 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         "",
         &format!("The book closes to {} of the mass that came in.", significant(account.closure.abs(), 2)),
     );
+}
+
+/// The widest that a table may be: beyond it a terminal breaks its lines, and the columns are lost.
+const WIDEST: usize = 130;
+
+/// A table with its notes; where it would be too wide, a paragraph a row, each cell behind the word for its column.
+fn sheet_of_words(out: &mut String, sheet: &Sheet) {
+    paragraph(out, "", &sheet.title);
+    let mut grid = Grid::new(12, 8);
+    grid.row(sheet.head.iter().map(|h| (*h).to_owned()).collect());
+    for row in &sheet.rows {
+        grid.row(row.iter().map(|cell| visible(cell)).collect());
+    }
+    let mut table = String::new();
+    grid.print(&mut table);
+    if table.lines().all(|line| line.chars().count() <= WIDEST) {
+        out.push_str(&table);
+    } else {
+        for row in &sheet.rows {
+            let mut text = String::new();
+            for (i, (head, cell)) in
+                sheet.head.iter().zip(row).filter(|(_, cell)| !cell.is_empty()).enumerate()
+            {
+                match i {
+                    0 => text.push_str(cell),
+                    _ => text.extend([if i == 1 { ": " } else { "; " }, head.trim_end(), " ", cell]),
+                }
+            }
+            paragraph(out, "  ", &text);
+        }
+    }
+    for note in &sheet.notes {
+        paragraph(out, "  ", note);
+    }
 }
 
 fn waste_codes(out: &mut String, site: &SiteUse, pouring: Pouring<'_>) {
@@ -402,7 +427,7 @@ mod tests {
             assert!(text.starts_with("\\u{1b}[2J\\u{202e}"));
             assert!(!text.chars().any(|c| c != '\n' && super::super::words::hidden(c)));
             for line in text.lines() {
-                assert!(line.chars().count() <= 160, "{line}");
+                assert!(line.chars().count() <= WIDEST, "{line}");
             }
         }
     }
