@@ -11,6 +11,7 @@ mod energy;
 mod finding;
 mod hazard;
 mod leaf;
+mod logs;
 mod places;
 mod plates;
 mod question;
@@ -34,6 +35,7 @@ static SECTIONS: &[&Section] = &[
     &waste::SECTION,
     &desk::SECTION,
     &site::SECTION,
+    &logs::SECTION,
     &carbon_dioxide::SECTION,
     &energy::SECTION,
     &air::SECTION,
