@@ -122,6 +122,29 @@ fn water_treated_at_once_is_not_counted() {
     assert!(samples.abs_diff(3996) <= 1, "{samples}");
 }
 
+/// 40 CFR 262.13(c) and (d), read in a secondary source: what is stored and then reclaimed counts once in a calendar month; what is
+/// reclaimed without having been stored does not count.
+#[test]
+fn reclaimed_solvent_counts_once_in_a_month() {
+    let made = |counted: &str| {
+        let account = account(&plan(BASE, MAY, counted, "US"));
+        assert!(!account.broken(), "{:?}", account.problems);
+        let desk = site_desk(&account, &[]).unwrap();
+        let own: f64 = desk.lines.iter().filter(|l| l.work.is_some()).map(|l| l.counts_kg[4]).sum();
+        (desk.made[4].kg, own, desk.lines.iter().any(|l| l.counted && l.counts_kg != l.kg))
+    };
+    let (all, _, part) = made("reclaimed");
+    within(all, 1240.5, 0.005);
+    assert!(!part);
+    // The water is 1240.5 − 298.8 = 941.7 kg; 50 kg of it go round.
+    let (once, _, part) = made("reclaimed\", \"goes_round\": \"50 kg");
+    within(once, 298.8 + 50.0, 0.005);
+    assert!(part);
+    // More than is made in the month changes nothing.
+    within(made("reclaimed\", \"goes_round\": \"5000 kg").0, 1240.5, 0.005);
+    within(made("reclaimed at once").0, 298.8, 0.005);
+}
+
 #[test]
 fn a_contract_spread_over_four_months() {
     let account = account(&plan(BASE, r#""results_per_year": 900, "months": "5-8","#, "when made", "US"));

@@ -1,10 +1,11 @@
 //! Reading in slices: no turn of the page waits for a long file.
 use crate::parts::ByRc;
+use crate::picture::{Picture, reconciled};
 use crate::reckon::Book;
 use gloo::timers::callback::Timeout;
 use std::cell::Cell;
 use std::rc::Rc;
-use thimbleworth::log::{Mapping, Names, Reader, Reading, Register, Remark, Unread, mappings, reconcile};
+use thimbleworth::log::{Mapping, Names, Reader, Reading, Reconciling, Register, Remark, mappings};
 use thimbleworth::plan::Plan;
 use thimbleworth::report::{
     DataTable, log_tables, reconciliation_table, remark_table, solvent_balance_table,
@@ -14,50 +15,28 @@ use thimbleworth::report::{
 const SLICE_MS: f64 = 8.0;
 /// Bytes between two looks at the clock: about a millisecond of work.
 const PIECE: usize = 16 * 1024;
-/// Remarks that are kept to be shown.
-const MOST_REMARKS: usize = 200;
+/// Remarks that are kept.
+const MOST_REMARKS: usize = 50_000;
 
 /// Rows that were pasted, or a file.
-#[derive(Clone, PartialEq)]
+#[derive(Clone)]
 pub(super) struct Source {
     pub(super) name: String,
-    pub(super) bytes: ByRc<Vec<u8>>,
+    pub(super) bytes: Rc<Vec<u8>>,
 }
 
 /// What became of a file.
 pub(super) struct Read {
-    pub(super) name: String,
-    pub(super) read: Result<Reading, Unread>,
-}
-
-impl Read {
-    pub(super) fn mapping(&self) -> Option<&Mapping> {
-        match &self.read {
-            Ok(reading) => Some(&reading.mapping),
-            Err(unread) => unread.draft.as_ref(),
-        }
-    }
-
-    pub(super) fn words(&self) -> String {
-        match &self.read {
-            Ok(reading) => {
-                let rows = &reading.rows;
-                format!(
-                    "{} rows: {} used, {} of them with a change; {} refused.",
-                    rows.used + rows.refused,
-                    rows.used,
-                    rows.changed,
-                    rows.refused
-                )
-            }
-            Err(unread) => unread.why.words().join("; ") + ".",
-        }
-    }
+    pub(super) source: String,
+    pub(super) words: String,
+    pub(super) failed: bool,
+    pub(super) mapping: Option<Mapping>,
 }
 
 /// What all files hold.
 pub(super) struct Outcome {
     pub(super) files: Vec<Read>,
+    pub(super) picture: Option<Picture>,
     pub(super) tables: Vec<DataTable>,
 }
 
@@ -71,73 +50,123 @@ pub(super) struct Job {
     /// Bytes of the present file that are read.
     at: usize,
     files: Vec<Read>,
+    readings: Vec<Reading>,
     remarks: Vec<(String, Remark)>,
+    reconciling: Option<Reconciling>,
+    /// Tables that stand on the sums alone.
+    sums: Vec<DataTable>,
 }
 
 impl Job {
     /// `None` where there is nothing to read, or no plan that runs to read it by.
     pub(super) fn begin(plan: &Plan, book: ByRc<Book>, sources: Vec<Source>) -> Option<Self> {
         let names = Names::of(plan, book.account.program.as_ref()?);
-        let known = mappings(plan, &mut Vec::new());
         (!sources.is_empty()).then_some(Self {
             book,
             sources,
-            known,
+            known: mappings(plan, &mut Vec::new()),
             names: Some(names),
             reader: None,
             at: 0,
             files: Vec::new(),
+            readings: Vec::new(),
             remarks: Vec::new(),
+            reconciling: None,
+            sums: Vec::new(),
         })
     }
 
-    /// Reads on until `over` says that the slice is over; what was found when all is read.
+    /// Goes on until `over` says that the slice is over; what was found when all is done.
     pub(super) fn slice(&mut self, over: &dyn Fn() -> bool) -> Option<Outcome> {
         loop {
-            let Some(source) = self.sources.get(self.files.len()) else { return Some(self.end()) };
-            let names = &mut self.names;
-            let reader = match &mut self.reader {
-                Some(reader) => reader,
-                empty => empty.insert(Reader::new(&source.name, names.take()?, &self.known)),
-            };
-            let end = if self.at + PIECE < source.bytes.len() { self.at + PIECE } else { source.bytes.len() };
-            reader.feed(source.bytes.get(self.at..end).unwrap_or_default());
-            self.at = end;
-            let mut new = reader.take_remarks();
-            if end == source.bytes.len()
-                && let Some(reader) = self.reader.take()
-            {
-                let (read, names, rest) = reader.finish();
-                new.extend(rest);
-                self.files.push(Read { name: source.name.clone(), read });
-                self.names = Some(names);
-                self.at = 0;
+            if self.files.len() < self.sources.len() {
+                self.piece();
+            } else if self.step() {
+                return Some(self.end());
             }
-            let room = MOST_REMARKS.saturating_sub(self.remarks.len());
-            self.remarks.extend(new.into_iter().take(room).map(|remark| (source.name.clone(), remark)));
             if over() {
                 return None;
             }
         }
     }
 
+    /// Reads the next bytes.
+    fn piece(&mut self) -> Option<()> {
+        let source = self.sources.get(self.files.len())?;
+        if self.reader.is_none() {
+            self.reader = Some(Reader::new(&source.name, self.names.take()?, &self.known));
+        }
+        let reader = self.reader.as_mut()?;
+        let size = source.bytes.len();
+        let end = if self.at + PIECE < size { self.at + PIECE } else { size };
+        reader.feed(source.bytes.get(self.at..end).unwrap_or_default());
+        self.at = end;
+        let mut new = reader.take_remarks();
+        if end == size {
+            let (read, names, rest) = self.reader.take()?.finish();
+            new.extend(rest);
+            let failed = read.is_err();
+            let (words, mapping) = match read {
+                Ok(reading) => {
+                    let rows = &reading.rows;
+                    let words = [
+                        &(rows.used + rows.refused).to_string(),
+                        " rows: ",
+                        &rows.used.to_string(),
+                        " used, ",
+                        &rows.changed.to_string(),
+                        " of them with a change; ",
+                        &rows.refused.to_string(),
+                        " refused.",
+                    ];
+                    let found = (words.concat(), Some(reading.mapping.clone()));
+                    self.readings.push(reading);
+                    found
+                }
+                Err(unread) => (unread.why.words().join("; ") + ".", unread.draft),
+            };
+            self.files.push(Read { source: source.name.clone(), words, failed, mapping });
+            self.names = Some(names);
+            self.at = 0;
+        }
+        let room = MOST_REMARKS.saturating_sub(self.remarks.len());
+        let name = &source.name;
+        self.remarks.extend(new.into_iter().take(room).map(|remark| (name.clone(), remark)));
+        Some(())
+    }
+
+    /// Goes on with the reconciliation; `true` once there is nothing more to do.
+    fn step(&mut self) -> bool {
+        let (Some(names), Some(program)) = (&mut self.names, &self.book.account.program) else { return true };
+        match &mut self.reconciling {
+            _ if self.readings.iter().all(|r| r.mapping.register == Register::Preparation) => true,
+            Some(reconciling) => reconciling.step(program),
+            None => {
+                self.reconciling = Some(Reconciling::begin(&self.readings, program, names));
+                self.sums = log_tables(&self.readings, names);
+                false
+            }
+        }
+    }
+
     fn end(&mut self) -> Outcome {
-        let files = std::mem::take(&mut self.files);
-        // A second call finds nothing more to do.
-        self.sources.clear();
         let mut tables = Vec::new();
-        if let (Some(names), Some(program)) = (&mut self.names, &self.book.account.program) {
-            let readings: Vec<Reading> = files.iter().filter_map(|f| f.read.as_ref().ok()).cloned().collect();
-            if readings.iter().any(|r| r.mapping.register != Register::Preparation) {
-                let found = reconcile(&readings, program, names);
-                tables.push(reconciliation_table(&found, names));
-                tables.push(solvent_balance_table(&found, names));
+        let mut picture = None;
+        if let Some(names) = &self.names {
+            match self.reconciling.take() {
+                Some(reconciling) => {
+                    let found = reconciling.end(&self.readings, names);
+                    let table = reconciliation_table(&found, names);
+                    picture = reconciled("reconciled", &table);
+                    tables.extend([table, solvent_balance_table(&found, names)]);
+                }
+                None => self.sums = log_tables(&self.readings, names),
             }
             tables.extend([remark_table(&self.remarks, true), remark_table(&self.remarks, false)]);
-            tables.extend(log_tables(&readings, names));
+            tables.append(&mut self.sums);
             tables.retain(|t| !t.rows.is_empty() && t.key != "columns");
         }
-        Outcome { files, tables }
+        Outcome { files: std::mem::take(&mut self.files), picture, tables }
     }
 }
 
@@ -188,8 +217,7 @@ mod tests {
             for i in 0..50_000 {
                 text.push_str(&format!("2026-{:02}-01,acetone,{}\n", i % 12 + 1, i % 9));
             }
-            let source =
-                |name: &str, text: &str| Source { name: name.into(), bytes: ByRc(Rc::new(text.into())) };
+            let source = |name: &str, text: &str| Source { name: name.into(), bytes: Rc::new(text.into()) };
             Job::begin(&plan, book, vec![source("a.csv", &text), source("b", "nonsense")]).unwrap()
         };
         let whole = begin().slice(&|| false).unwrap();
@@ -203,7 +231,7 @@ mod tests {
         };
         assert!(turns > 50, "{turns}");
         assert_eq!(found.tables, whole.tables);
-        assert_eq!(found.files[0].words(), "50000 rows: 50000 used, 0 of them with a change; 0 refused.");
-        assert!(found.files[1].words().starts_with("none of the first lines looks like headings"));
+        assert_eq!(found.files[0].words, "50000 rows: 50000 used, 0 of them with a change; 0 refused.");
+        assert!(found.files[1].words.starts_with("none of the first lines looks like headings"));
     }
 }
