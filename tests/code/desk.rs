@@ -223,3 +223,51 @@ fn papers_hold_the_figures_of_the_desk() {
         }
     }
 }
+
+/// Regulation (EC) 166/2006 Article 5(1)(b), 2 t of hazardous waste; Directive 2010/75/EU Annex VII Part 2; 40 CFR 262.41: all from
+/// memory. Both sides of each line, which is read with its scope and never as a duty.
+#[test]
+fn registers_that_hang_on_waste_and_consumption_are_asked_about_on_both_sides_of_their_lines() {
+    let row = |rules: &str, activity: &str, results: u32, list: &str| {
+        let site = format!(r#""activity": "{activity}","#);
+        let work = format!(r#""results_per_year": {results},"#);
+        let account = account(&plan(&site, &work, "when made", rules));
+        let desk = site_desk(&account, &[]).unwrap();
+        let paper = paper(&account, &desk, PaperKind::Reporting).unwrap();
+        let row = paper.tables[0].rows.iter().find(|r| r[1].contains(list)).cloned();
+        (row, paper.lead.join(" "))
+    };
+    // 1.0505 kg of water with what dissolves and 0.222 kg of the organic phase leave for each sample: 1571 samples make 2 t.
+    for (results, side) in [(1560, "at or below"), (1590, "above")] {
+        let (found, _) = row("EU", "laboratory", results, "transfers");
+        let found = found.unwrap();
+        assert!(found[4].starts_with(side) && found[4].ends_with("is this one?"), "{found:?}");
+    }
+    // 0.2747 kg of both solvents are bought for each: 50 t for 182 000.
+    for (results, side) in [(180_000, "at or below"), (184_000, "above")] {
+        let (found, lead) = row("EU", "pharmaceuticals", results, "solvent balance");
+        let found = found.unwrap();
+        assert!(found[4].starts_with(side), "{found:?}");
+        assert!(!lead.contains("is no activity"));
+    }
+    let (none, lead) = row("EU", "laboratory", 184_000, "solvent balance");
+    assert!(none.is_none() && lead.contains("A laboratory is no activity of Directive 2010/75/EU"));
+    // 1.27275 kg a sample: 1000 kg in a month with 785 samples.
+    for (results, says) in [(9400, "No month as a large"), (9500, "Large quantity generator in 12 months")] {
+        let (_, lead) = row("US", "laboratory", results, "transfers");
+        assert!(lead.contains(says), "{results}: {lead}");
+    }
+}
+
+/// A full container holds so many batches: of the aqueous phase 200 L at 90 %.
+#[test]
+fn a_full_drum_is_told_in_batches() {
+    let account = account(&plan("", r#""results_per_year": 1200,"#, "when made", "US"));
+    let desk = site_desk(&account, &[]).unwrap();
+    let drum = paper(&account, &desk, PaperKind::Drum).unwrap();
+    let table = drum.tables.iter().find(|t| t.title.starts_with("aqueous")).unwrap();
+    let batches: f64 =
+        table.rows.iter().find(|r| r[0] == "batches of Contract, Funnel").unwrap()[1].parse().unwrap();
+    // About 1.05 L a sample into 180 L.
+    within(batches, 171.0, 0.03);
+}

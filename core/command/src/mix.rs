@@ -19,7 +19,7 @@ pub(crate) struct Args {
     #[arg(long, value_name = "MONEY", allow_negative_numbers = true, conflicts_with = "price")]
     budget: Option<f64>,
     /// What each unit (kg, kWh ...) less of the figure is worth
-    #[arg(long, value_name = "MONEY")]
+    #[arg(long, value_name = "MONEY", allow_negative_numbers = true)]
     price: Option<f64>,
     /// What to write
     #[arg(long, value_enum, default_value_t = Format::Markdown)]

@@ -67,6 +67,8 @@ pub struct Names {
     pub streams: Vec<String>,
     /// The routes of the work.
     pub routes: Vec<LogRoute>,
+    /// The site and the date of the plan, as a paper says them.
+    pub heading: String,
     /// The present routes, a workload each, as indices of `routes`.
     present: Vec<u16>,
     kept: Places,
@@ -98,6 +100,14 @@ impl Names {
             materials: Vec::new(),
             streams: program.site.streams.iter().map(|s| s.name.clone()).collect(),
             routes,
+            heading: [
+                "Site: ",
+                &program.site.name,
+                "; as of ",
+                program.site.as_of.as_deref().unwrap_or("no date"),
+                ". Help for a licensed person; local codes and licensed practice decide.",
+            ]
+            .concat(),
             present,
             kept: Places::default(),
             keys: Vec::new(),

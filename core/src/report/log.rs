@@ -378,6 +378,7 @@ pub fn reconciliation_table(found: &Reconciliation, names: &Names) -> DataTable 
         put(&mut table.rows, &[name, &quarters(account.quarters)], &numbers);
     }
     table.notes = vec![
+        names.heading.clone(),
         "used = bought − returned + stock at the start − at the end; unexplained = used − consigned − reclaimed − what the plan posts to air, drain, product and the like. Air is what the plan posts, never the remainder.".to_owned(),
         "\"in containers\" is what the plan posts into streams less what was consigned; it waits to be collected, or the plan or a record is wrong.".to_owned(),
         ["± is the expanded uncertainty, k = 2 (", &cited(UNCERTAINTY), "), of limits of 1 % for purchases, 2 % for consignments and cylinders and 10 % for stock counts (common practice, no source) where the plan states no other, and of the plan's own inputs."].concat(),
@@ -416,6 +417,7 @@ pub fn solvent_balance_table(found: &Reconciliation, names: &Names) -> DataTable
     }
     let span = found.whole.first().or(found.quarters.first()).map(|a| a.quarters);
     table.notes = vec![
+        names.heading.clone(),
         [&span.map(quarters).unwrap_or_default(), "; ", &cited(SOLVENT_BALANCE)].concat(),
         "I1, O6 and O8 are the site's records, the others postings of the plan. Whether the directive applies to the site, and to which activity, is for the competent authority; Annex VII names no laboratories.".to_owned(),
         "O8 counts what was consigned as \"reclaimed off site\"; what is kept in apparatus stands in O9; what goes off site outside of the streams in O6.".to_owned(),

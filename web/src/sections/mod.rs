@@ -12,7 +12,6 @@ mod finding;
 mod hazard;
 mod labels;
 mod leaf;
-mod logs;
 mod places;
 mod plates;
 mod question;
@@ -36,7 +35,6 @@ static SECTIONS: &[&Section] = &[
     &waste::SECTION,
     &desk::SECTION,
     &site::SECTION,
-    &logs::SECTION,
     &carbon_dioxide::SECTION,
     &energy::SECTION,
     &air::SECTION,

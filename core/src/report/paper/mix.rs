@@ -119,8 +119,8 @@ impl Words {
         .concat();
         if self.currency.is_some() {
             let more = mix.cost - present.cost;
-            let way = if more < 0.0 { " less a year" } else { " more a year" };
-            out.push_str(&[", for ", &self.money(more.abs()), way].concat());
+            let (how, way) = if more < 0.0 { (", and ", " less a year") } else { (", for ", " more a year") };
+            out.push_str(&[how, &self.money(more.abs()), way].concat());
         }
         out.push('.');
         out
