@@ -19,6 +19,7 @@ mod flow;
 mod label;
 mod letter;
 mod mass_by_place;
+mod reconciled;
 mod scale;
 mod shape;
 #[cfg(test)]
@@ -34,6 +35,7 @@ pub use draw::{Node, plate, to_html, to_svg_text};
 pub use flow::flow;
 pub use letter::text_width;
 pub use mass_by_place::mass_by_place;
+pub use reconciled::reconciled;
 pub use shape::{Anchor, Hatch, Shape, Trail};
 pub use year::{load, stock};
 

@@ -12,6 +12,7 @@ mod finding;
 mod hazard;
 mod labels;
 mod leaf;
+mod logs;
 mod places;
 mod plates;
 mod question;
@@ -35,6 +36,7 @@ static SECTIONS: &[&Section] = &[
     &waste::SECTION,
     &desk::SECTION,
     &site::SECTION,
+    &logs::SECTION,
     &carbon_dioxide::SECTION,
     &energy::SECTION,
     &air::SECTION,
