@@ -45,18 +45,23 @@ pub fn small_text(text: &str) -> String {
     text.chars().map(small).collect()
 }
 
-/// The text with a capital first letter, as a sentence begins.
+/// The text with a capital first letter, as a sentence begins; in the name of a compound the capital goes behind
+/// what says where its parts sit.
 ///
 /// ```
-/// assert_eq!(thimbleworth::letter::sentence("by-product"), "By-product");
+/// use thimbleworth::letter::sentence;
+/// assert_eq!(sentence("by-product"), "By-product");
+/// assert_eq!(sentence("n-hexane bought"), "n-Hexane bought");
+/// assert_eq!(sentence("1,4-dioxane"), "1,4-Dioxane");
 /// ```
 #[must_use]
 pub fn sentence(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for (place, c) in text.chars().enumerate() {
-        out.push(if place == 0 { capital(c) } else { c });
-    }
-    out
+    let behind = text.split_once('-').filter(|(before, _)| {
+        matches!(*before, "n" | "o" | "m" | "p" | "sec" | "tert")
+            || before.contains(',') && before.bytes().all(|b| b.is_ascii_digit() || b == b',')
+    });
+    let first = behind.map_or(0, |(before, _)| before.len() + 1);
+    text.char_indices().map(|(place, c)| if place == first { capital(c) } else { c }).collect()
 }
 
 const fn moved(c: char, apart: i32) -> char {
