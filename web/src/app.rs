@@ -137,6 +137,7 @@ pub(crate) fn App() -> Html {
     };
 
     let put = use_state_eq(|| Put::First);
+    let begun = *put != Put::First;
     let kept = use_state(|| None::<(Option<String>, Plan)>);
     {
         let (put, kept, act, newest) = (put.clone(), kept.clone(), act.clone(), newest.clone());
@@ -151,6 +152,9 @@ pub(crate) fn App() -> Html {
                     if let Some(notice) = notice {
                         act.emit(Action::Say(notice));
                     }
+                    browser::watch_files(move |name, size, bytes| {
+                        act.emit(files::opened(&name, size, &bytes, newest.borrow().plan()));
+                    });
                     put.set(Put::Question);
                 }
                 Put::Question => put.set(Put::Figures),
@@ -174,25 +178,19 @@ pub(crate) fn App() -> Html {
     let errors = reckoned.count(Severity::Error);
 
     let wish = {
-        let (act, newest) = (act.clone(), newest.clone());
+        let act = act.clone();
         use_callback(errors, move |wish: Wish, errors| grant(wish, *errors, &newest.borrow(), &act))
     };
 
-    use_effect_with(window_title(state, errors), |title| document().set_title(title));
-    use_effect_with(state.is_unsaved(), |unsaved| browser::guard_leaving(*unsaved));
+    use_effect_with((window_title(state, errors), state.is_unsaved()), |(title, unsaved)| {
+        document().set_title(title);
+        browser::guard_leaving(*unsaved);
+    });
     use_effect_with(state.view.focus.clone(), |focus| {
         if let Some((_, path)) = focus {
             browser::focus_on(&dom_id(path));
         }
     });
-    {
-        let (act, newest) = (act.clone(), newest);
-        use_effect_with((), move |()| {
-            browser::watch_files(move |name, size, bytes| {
-                act.emit(files::opened(&name, size, &bytes, newest.borrow().plan()));
-            });
-        });
-    }
     {
         let act = act.clone();
         let state = handle.clone();
@@ -232,10 +230,11 @@ pub(crate) fn App() -> Html {
         let act = act.clone();
         Callback::from(move |event: MouseEvent| delegated(&event, &act))
     };
-    let view = View::new(state, &reckoned, *put != Put::First, edit, act.clone(), refusal);
+    let view = View::new(state, &reckoned, begun, edit, act.clone(), refusal);
     let works = if reckoned.pending { 0 } else { reckoned.book.works.len() };
     let finding: Vec<String> = (0..works).flat_map(|w| reckoned.book.finding(w)).collect();
-    let examples: Vec<AttrValue> = EXAMPLES.iter().map(|e| AttrValue::from(e.title)).collect();
+    let examples: Vec<AttrValue> =
+        EXAMPLES.iter().filter(|_| begun).map(|e| AttrValue::from(e.title)).collect();
     html! {
         <>
             <Toolbar undo={state.undo_name().map(|name| AttrValue::from(name.to_owned()))}
@@ -252,7 +251,7 @@ pub(crate) fn App() -> Html {
                     </div>
                 </aside>
                 <main id="main" tabindex="-1">
-                    if *put != Put::First { { report_head(state, &finding) } }
+                    if begun { { report_head(state, &finding) } }
                     <Mend plan={Rc::clone(state.document())} reckoned={ByRc(reckoned.clone())} open={state.view.listed} act={act.clone()} />
                     <Leaves {view} />
                     if !reckoned.pending {
@@ -262,9 +261,9 @@ pub(crate) fn App() -> Html {
                         </datalist>
                     }
                 </main>
-                if *put != Put::First { <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} /> }
+                if begun { <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} /> }
             </div>
-            <ReadOut text={finding.join(" ")} />
+            if begun { <ReadOut text={finding.join(" ")} /> }
             <footer class="foot">
                 <p>
                     { format!("{} reads and writes plans of version {PLAN_VERSION}. ", crate::PROGRAM) }
