@@ -138,7 +138,7 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                 { for route.steps.iter().enumerate().map(|(s, step)| one_step(view, (w, r, s), step, route)) }
                 <AddStep edit={view.edit.clone()} {w} {r} />
             </section>
-            <section aria-label="What is left at the end">
+            <section class="halves" aria-label="What is left at the end">
                 <h5>{ "What is left at the end goes to" }</h5>
                 { for Place::BENCH.into_iter().filter_map(Place::name).map(|name| {
                     let value = route.ends.iter().find(|(k, _)| k == name).map_or(String::new(), |(_, v)| v.clone());
@@ -146,7 +146,7 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                         .ask(Ask::Choice(places.clone())).draw(view)
                 }) }
             </section>
-            <section aria-label="Terms of equal work">
+            <section class="halves" aria-label="Terms of equal work">
                 <h5>{ "Terms of equal work" }</h5>
                 { Asked::amount(at("recovery"), "Recovery of what is sought", Kind::Fraction, route.recovery.as_ref())
                     .hint("As this route reaches it.").draw(view) }
@@ -279,7 +279,7 @@ fn param(view: &View, step: &Step, path: &str, p: &'static Param) -> Html {
                     {rows} {said} {show_all} {optional} path={at} edit={view.edit.clone()} />
             };
         }
-        Control::Quantity(kind) => (Ask::Amount, units(kind), understood(&value, kind, p.need)),
+        Control::Quantity(kind) => (Ask::Amount(kind), units(kind), understood(&value, kind, p.need)),
         Control::Count => (Ask::Number, String::new(), blank),
         Control::Choice(words) => (Ask::Choice(options(&first, words)), String::new(), blank),
         Control::Place => (Ask::Choice(choices(view, &first)), String::new(), blank),
@@ -322,7 +322,7 @@ fn measured(
             { for lines.into_iter().map(|line| html! {
                 <Field key={line.rule} label={format!("Measured: {}", line.rule)} units="g in one run, or %" optional={true}
                     echo={line.computed} said={said(&view.reckoned.problems, &line.path)} show_all={view.show_all}
-                    value={line.value} ask={Ask::Amount} path={line.path} edit={view.edit.clone()}
+                    value={line.value} path={line.path} edit={view.edit.clone()}
                     margin={rule_source(technique, line.rule)} />
             }) }
         </section>
