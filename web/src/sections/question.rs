@@ -184,7 +184,7 @@ fn stream_fields(view: &View, i: usize, stream: &Stream, count: usize, path: &st
 }
 
 /// What the waste desk asks of a stream: key, label, hint, words to choose from.
-const STREAM_WASTE: [(&str, &str, &str, &[&str]); 7] = [
+const STREAM_WASTE: [(&str, &str, &str, &[&str]); 8] = [
     ("ph", "pH in its containers", "Lowest to highest as measured, such as 6 to 8.", &[]),
     ("flash_point", "Flash point by test", "Closed cup, such as 26 °C, or none.", &[]),
     ("unused", "Takes unused product", "Expired stock, not used solvent.", &["true", "false"]),
@@ -206,7 +206,13 @@ const STREAM_WASTE: [(&str, &str, &str, &[&str]); 7] = [
         "Satellite: at the bench, under the rules of the United States.",
         &["central", "satellite"],
     ),
-    ("counted", "Counts towards the month", "", &["when made", "reclaimed", "treated at once"]),
+    (
+        "counted",
+        "Counts towards the month",
+        "",
+        &["when made", "reclaimed", "reclaimed at once", "treated at once"],
+    ),
+    ("goes_round", "Goes round, where it is reclaimed", "Counts once a month, such as 20 kg.", &[]),
 ];
 
 fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl Iterator<Item = Html> + 'a {
@@ -218,7 +224,8 @@ fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl I
             "made_of" => stream.made_of.clone(),
             "density_mark" => Some(text_of(stream.density_mark.as_ref())),
             "area" => stream.area.clone(),
-            _ => stream.counted.clone(),
+            "counted" => stream.counted.clone(),
+            _ => stream.goes_round.clone(),
         };
         let ask = match *key {
             "unused" => Ask::YesNo("no (left out)".into()),
