@@ -67,6 +67,7 @@ test("purchases and consignments stand beside the plan's postings, as bars and a
   await figure.locator("strong", { hasText: "cannot be explained" }).waitFor();
   await figure.locator("summary").click();
   assert.match(await figure.locator("tbody").innerText(), /acetone, 2026 Q1\s+200/);
+  await logs.locator("summary", { hasText: "Reconciliation by solvent" }).click();
   const table = page.locator("#logs-reconciliation");
   assert.match(await table.innerText(), /acetone\s+2026 Q1\s+200/);
   assert.match(await table.innerText(), /not explained; stock not counted/);

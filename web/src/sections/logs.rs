@@ -77,7 +77,7 @@ impl Component for Logs {
     type Properties = Props;
 
     fn create(_: &Context<Self>) -> Self {
-        Self { open: vec!["reconciliation"], ..Self::default() }
+        Self::default()
     }
 
     fn changed(&mut self, ctx: &Context<Self>, before: &Props) -> bool {

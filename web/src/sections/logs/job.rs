@@ -42,6 +42,8 @@ pub(super) struct Outcome {
 
 /// Files under way.
 pub(super) struct Job {
+    /// Until the first slice: naming all that a plan holds takes a turn of its own.
+    plan: Option<Plan>,
     book: ByRc<Book>,
     sources: Vec<Source>,
     known: Vec<Mapping>,
@@ -60,12 +62,13 @@ pub(super) struct Job {
 impl Job {
     /// `None` where there is nothing to read, or no plan that runs to read it by.
     pub(super) fn begin(plan: &Plan, book: ByRc<Book>, sources: Vec<Source>) -> Option<Self> {
-        let names = Names::of(plan, book.account.program.as_ref()?);
-        (!sources.is_empty()).then_some(Self {
+        book.account.program.as_ref()?;
+        (!sources.is_empty()).then(|| Self {
+            plan: Some(plan.clone()),
             book,
             sources,
-            known: mappings(plan, &mut Vec::new()),
-            names: Some(names),
+            known: Vec::new(),
+            names: None,
             reader: None,
             at: 0,
             files: Vec::new(),
@@ -79,7 +82,10 @@ impl Job {
     /// Goes on until `over` says that the slice is over; what was found when all is done.
     pub(super) fn slice(&mut self, over: &dyn Fn() -> bool) -> Option<Outcome> {
         loop {
-            if self.files.len() < self.sources.len() {
+            if let Some(plan) = self.plan.take() {
+                self.known = mappings(&plan, &mut Vec::new());
+                self.names = self.book.account.program.as_ref().map(|program| Names::of(&plan, program));
+            } else if self.files.len() < self.sources.len() {
                 self.piece();
             } else if self.step() {
                 return Some(self.end());
@@ -194,7 +200,15 @@ fn turn(mut job: Job, done: Box<dyn FnOnce(Outcome)>, goes: Rc<Cell<bool>>) {
         let now = || web_sys::window().and_then(|w| w.performance()).map_or(0.0, |p| p.now());
         let begun = now();
         match job.slice(&|| now() - begun >= SLICE_MS) {
-            Some(found) => done(found),
+            // What is drawn has a turn of its own.
+            Some(found) => {
+                Timeout::new(0, move || {
+                    if goes.get() {
+                        done(found);
+                    }
+                })
+                .forget();
+            }
             None => turn(job, done, goes),
         }
     })
