@@ -39,6 +39,27 @@ pub const fn capital(c: char) -> char {
     moved(c, apart)
 }
 
+/// Whether this is a letter: an ASCII one, or anything beyond ASCII that is no space, mark or sign of Latin-1.
+///
+/// ```
+/// use thimbleworth::letter::is_letter;
+/// assert_eq!("ä Ω-7 µ≥溶".chars().filter(|c| is_letter(*c)).collect::<String>(), "äΩµ溶");
+/// ```
+#[must_use]
+pub const fn is_letter(c: char) -> bool {
+    match c {
+        'µ' | 'ª' | 'º' => true,
+        // Signs of Latin-1, punctuation and mathematical signs, spaces and marks of East Asian scripts.
+        '\u{80}'..='\u{bf}'
+        | '×'
+        | '÷'
+        | '\u{2000}'..='\u{2bff}'
+        | '\u{3000}'..='\u{303f}'
+        | '\u{fe00}'..='\u{feff}' => false,
+        _ => c.is_ascii_alphabetic() || c as u32 >= 0xc0,
+    }
+}
+
 /// The text in small letters.
 #[must_use]
 pub fn small_text(text: &str) -> String {

@@ -113,9 +113,9 @@ fn of_big(mut above: Big, exponent: i64) -> f64 {
     // above / below = quotient × 2^-shift, and the quotient has 64 or 65 bits.
     let shift = below.bits() - above.bits() + 64;
     if shift > 0 {
-        above.double(shift)
+        above.double(shift);
     } else {
-        below.double(-shift)
+        below.double(-shift);
     }
     below.double(65);
     let mut quotient = 0_u128;

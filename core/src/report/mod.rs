@@ -41,7 +41,9 @@ pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
 pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words};
-pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
+pub use paper::{
+    Asked, Paper, PaperKind, PaperTable, mix_paper, paper, paper_csv, paper_markdown, pour_paper, words_csv,
+};
 pub use result::{RESULT_VERSION, result_json};
 pub use row::PROGRAM;
 pub use table::{account_table, comparison_table};

@@ -32,6 +32,7 @@ pub use co2_map::co2_map;
 pub use difference::difference;
 pub use draw::{Node, plate, to_html, to_svg_text};
 pub use flow::flow;
+pub use letter::text_width;
 pub use mass_by_place::mass_by_place;
 pub use shape::{Anchor, Hatch, Shape, Trail};
 pub use year::{load, stock};
