@@ -6,6 +6,7 @@
 mod app;
 mod browser;
 pub mod document;
+mod draws;
 pub mod edit;
 pub mod files;
 pub mod form;

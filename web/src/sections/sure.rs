@@ -1,18 +1,16 @@
-//! Section "How sure": intervals, odds, what matters most, and the case in every draw. Drawn in slices, so that no key
-//! stroke waits for it; only routes that were edited are drawn again; dimmed until it has caught up.
-use super::{Section, When};
+//! Section "How sure": intervals, odds, what matters most, and the case in every draw.
+use super::{Section, View, When};
 use crate::document::Document;
+use crate::draws::{COVERAGE, Drawn, follows};
 use crate::parts::{ByRc, words_table};
+use crate::picture::{intervals, to_html};
 use crate::show::{unbroken, with_minus};
-use gloo::timers::callback::Timeout;
-use std::cell::RefCell;
-use std::rc::Rc;
-use thimbleworth::account::{Account, account};
+use thimbleworth::account::Account;
 use thimbleworth::case::{drawn, switch, turning_results};
 use thimbleworth::letter::sentence;
-use thimbleworth::odds::{MOST_CELLS, Reading, Sampled, Wish, headline};
+use thimbleworth::odds::{Reading, Sampled};
 use thimbleworth::program::WorkloadProgram;
-use thimbleworth::report::{PaperTable, money_words, odds_words, turn_words};
+use thimbleworth::report::{PaperTable, money_words, odds_words, stopped_words, turn_words};
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -20,80 +18,76 @@ pub(super) static SECTION: Section = Section {
     title: "How sure",
     lead: "Every uncertain amount drawn 10,000 times, by the same numbers for all routes; intervals hold 95\u{202f}% of the draws.",
     when: When::Follows,
-    body: |view| html! { <Sure document={view.document.clone()} /> },
+    body: draw,
 };
 
-const DRAWS: u32 = 10_000;
-const COVERAGE: f64 = 0.95;
-/// So many draws of a route are made in a turn: a few milliseconds.
-const SLICE: u32 = 1_000;
-/// The figures wait 150 ms after the last change, and this so much more.
-const AFTER_MS: u32 = 50;
-
-/// One run, kept through edits.
-type Run = Rc<RefCell<Sampled>>;
+fn draw(view: &View) -> Html {
+    let works = 0..view.plan().workloads.len();
+    works.map(|w| html! { <Sure key={w} document={view.document.clone()} {w} /> }).collect()
+}
 
 #[derive(Properties, PartialEq)]
 struct SureProps {
     document: ByRc<Document>,
-}
-
-/// What stands there, and for which plan.
-#[derive(Clone, PartialEq)]
-struct Shown {
-    document: ByRc<Document>,
-    html: Html,
+    w: usize,
 }
 
 #[component]
 fn Sure(props: &SureProps) -> Html {
-    let run: Run = use_memo((), |()| RefCell::new(Sampled::default()));
-    let shown = use_state_eq(|| None::<Shown>);
-    {
-        let shown = shown.clone();
-        use_effect_with(props.document.clone(), move |document| {
-            let document = document.clone();
-            let timer = Timeout::new(AFTER_MS, move || {
-                let account = Rc::new(account(&document.plan));
-                run.borrow_mut()
-                    .follow(&account, Wish { draws: DRAWS, most_cells: MOST_CELLS, wanted: &headline });
-                let generation = run.borrow().generation();
-                slice(
-                    run,
-                    account,
-                    generation,
-                    Callback::from(move |html| {
-                        shown.set(Some(Shown { document: document.clone(), html }));
-                    }),
-                );
-            });
-            move || drop(timer)
+    let w = props.w;
+    let drawn = use_context::<Drawn>().flatten();
+    let chosen = use_state_eq(String::new);
+    // A run that has turned to another plan leaves what stands.
+    let last = use_mut_ref(Html::default);
+    let html = use_memo((drawn.clone(), (*chosen).clone()), |(drawn, id)| {
+        let chosen = chosen.clone();
+        let found = drawn.as_ref().and_then(|d| {
+            d.read(|run, account| {
+                let work = account.program.as_ref()?.workloads.get(w)?;
+                let reading = Reading::new(account, run, w, COVERAGE)?;
+                Some(html! { <>{ picture(&reading, work, w, id, chosen) }{ read(run, account, &reading, w, work) }</> })
+            })
         });
-    }
-    let Some(shown) = &*shown else { return html! { <p class="hint">{ "Being drawn …" }</p> } };
-    let behind = shown.document != props.document;
+        if let Some(found) = found {
+            *last.borrow_mut() = found;
+        }
+        last.borrow().clone()
+    });
+    follows(&drawn, &props.document, (*html).clone())
+}
+
+/// The picture of one figure, and the choice of it.
+fn picture(
+    reading: &Reading<'_>,
+    work: &WorkloadProgram,
+    w: usize,
+    id: &str,
+    chosen: UseStateHandle<String>,
+) -> Html {
+    let figures: Vec<_> = reading.ids().into_iter().filter_map(|id| reading.figure(id)).collect();
+    let Some(shown) = figures.iter().find(|f| f.id == id).or_else(|| figures.first()) else {
+        return Html::default();
+    };
+    let onchange = Callback::from(move |event: Event| {
+        if let Some(select) = event.target_dyn_into::<web_sys::HtmlSelectElement>() {
+            chosen.set(select.value());
+        }
+    });
+    let field = format!("sure-figure-{w}");
     html! {
-        <div class={classes!("works", behind.then_some("old"))} aria-busy={behind.then_some("true")}>
-            { shown.html.clone() }
-        </div>
+        <>
+            <div class="field">
+                <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
+                <select id={field} {onchange}>
+                    { for figures.iter().map(|f| html! { <option value={f.id.clone()} selected={f.id == shown.id}>{ sentence(&f.title) }</option> }) }
+                </select>
+            </div>
+            { for intervals(&format!("intervals-{w}"), work, shown, COVERAGE).map(|p| to_html(&p)) }
+        </>
     }
 }
 
-/// A slice, and then the next; a run that turned to another plan meanwhile lets it drop.
-fn slice(run: Run, account: Rc<Account>, generation: u64, then: Callback<Html>) {
-    if run.borrow().generation() != generation {
-        return;
-    }
-    if run.borrow_mut().advance(&account, SLICE) > 0 {
-        Timeout::new(0, move || slice(run, account, generation, then)).forget();
-    } else {
-        let works = account.program.iter().flat_map(|p| &p.workloads).enumerate();
-        then.emit(works.map(|(w, work)| read(&run.borrow(), &account, w, work)).collect());
-    }
-}
-
-fn read(run: &Sampled, account: &Account, w: usize, work: &WorkloadProgram) -> Html {
-    let Some(reading) = Reading::new(account, run, w, COVERAGE) else { return Html::default() };
+fn read(run: &Sampled, account: &Account, reading: &Reading<'_>, w: usize, work: &WorkloadProgram) -> Html {
     let mut rows: Vec<Vec<String>> = Vec::new();
     for figure in reading.ids().into_iter().filter_map(|id| reading.figure(id)) {
         for (r, spread) in figure.routes.iter().enumerate() {
@@ -118,8 +112,9 @@ fn read(run: &Sampled, account: &Account, w: usize, work: &WorkloadProgram) -> H
     let table = PaperTable { title: "Intervals and odds".to_owned(), head, rows };
     html! {
         <>
+            { for stopped_words(work, reading).into_iter().map(|text| html! { <p>{ unbroken(&text) }</p> }) }
             { words_table(format!("sure-{w}"), &table) }
-            { for (0..work.routes.len()).filter(|r| *r != work.present).map(|r| case(run, account, &reading, w, r)) }
+            { for (0..work.routes.len()).filter(|r| *r != work.present).map(|r| case(run, account, reading, w, r)) }
         </>
     }
 }

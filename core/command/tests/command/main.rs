@@ -3,6 +3,7 @@
 
 mod bad_input;
 mod case;
+mod drawn;
 mod co2;
 mod files;
 mod log;

@@ -1,0 +1,188 @@
+//! One figure on every route as the draws have it: the interval with its median, and below it how often a route has less of it
+//! than the present one.
+
+use super::books::{few, percent};
+use super::letter::{fit, text_width};
+use super::scale::Linear;
+use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
+use super::{Drawing, Head, Picture, Size, Table};
+use crate::show::{grouped, unbroken, with_minus};
+use thimbleworth::letter::sentence;
+use thimbleworth::odds::FigureReading;
+use thimbleworth::program::WorkloadProgram;
+use thimbleworth::report::odds_words;
+
+/// One line of the picture.
+struct Row {
+    name: String,
+    words: String,
+    mark: Mark,
+}
+
+#[derive(Clone, Copy)]
+enum Mark {
+    /// Low, median, high.
+    Interval(f64, f64, f64),
+    /// The share of draws with less, and that with the same.
+    Odds(f64, f64),
+    /// There is none.
+    None,
+}
+
+/// The picture of a figure; `None` where no route has draws of it.
+#[must_use]
+pub fn intervals(
+    key: &str,
+    work: &WorkloadProgram,
+    figure: &FigureReading,
+    coverage: f64,
+) -> Option<Picture> {
+    let name = |r: usize| work.routes.get(r).map_or(String::new(), |route| route.name.clone());
+    let show = |v: f64| with_minus(&unbroken(&figure.measure.shown(v))).replace(' ', "\u{a0}");
+    let (mut rows, mut table, mut said, mut draws) = (Vec::new(), Vec::new(), Vec::new(), 0);
+    for (r, spread) in figure.routes.iter().enumerate() {
+        let Some(spread) = spread else { continue };
+        let rival = figure.rivals.iter().find(|x| x.route == r);
+        let odds = rival.map_or(String::new(), |x| unbroken(&odds_words(x.less, x.same)));
+        let (words, mark, cells) = match spread.drawn {
+            Some(s) => {
+                draws = s.draws;
+                let (low, middle, high) = (s.symmetric.low, s.median, s.symmetric.high);
+                let words = format!("{}, from {} to {}", show(middle), show(low), show(high));
+                (words, Mark::Interval(low, middle, high), [show(middle), show(low), show(high)])
+            }
+            None => {
+                let none = "no interval: too few draws ran".to_owned();
+                (none, Mark::None, [show(spread.central), "not known".to_owned(), String::new()])
+            }
+        };
+        said.push(format!("{} {words}", name(r)));
+        table.push([name(r)].into_iter().chain(cells).chain([odds]).collect());
+        rows.push(Row { name: name(r), words, mark });
+    }
+    if draws == 0 {
+        return None;
+    }
+    let title = sentence(&figure.title);
+    let mut heading = title.clone();
+    let mut best = -1.0;
+    for rival in &figure.rivals {
+        let words = unbroken(&odds_words(rival.less, rival.same));
+        if rival.less > best {
+            best = rival.less;
+            heading = format!("{title}: {} has {words} than {}", name(rival.route), name(work.present));
+        }
+        rows.push(Row { name: name(rival.route), words, mark: Mark::Odds(rival.less, rival.same) });
+    }
+    Some(Picture {
+        key: key.to_owned(),
+        title: heading,
+        description: format!(
+            "{title}, a year, median and {} coverage interval, {} draws: {}.",
+            percent(coverage),
+            grouped(&draws.to_string()),
+            few(&said)
+        ),
+        notes: vec!["A line is the interval, its diamond the median, all on one scale from zero. Below, of all draws: plain, those with less than the present route; dots, the same; slanting lines, more.".to_owned()],
+        tables: vec![Table {
+            caption: format!("{title}, a year"),
+            head: ["Median", "From", "To", "Than the present"].iter().fold(vec![Head::words("Route")], |mut head, words| {
+                head.push(Head { text: (*words).to_owned(), number: head.len() < 4 });
+                head
+            }),
+            rows: table,
+        }],
+        wide: draw(&rows, Size::Wide),
+        narrow: draw(&rows, Size::Narrow),
+    })
+}
+
+fn draw(rows: &[Row], size: Size) -> Drawing {
+    let (width, type_size) = (size.width(), size.text());
+    let wider = |a: f64, b: f64| if b > a { b } else { a };
+    let names = rows.iter().map(|r| text_width(&r.name, type_size)).fold(0.0, wider);
+    let names = if names > 170.0 { 170.0 } else { names };
+    let widest = rows.iter().map(|r| text_width(&r.words, type_size)).fold(0.0, wider);
+    let widest = if widest > 270.0 { 270.0 } else { widest };
+    let (left, right, row_height) = match size {
+        Size::Wide => (names + 14.0, width - widest - 16.0, 30.0),
+        Size::Narrow => (6.0, width - 6.0, 54.0),
+    };
+    let (mut low, mut high) = (0.0, 0.0);
+    for row in rows {
+        if let Mark::Interval(from, _, to) = row.mark {
+            low = if from < low { from } else { low };
+            high = if to > high { to } else { high };
+        }
+    }
+    let scale = Linear::new((low, high), (left, right));
+    let odds = Linear::new((0.0, 1.0), (left, right));
+    let mut shapes = Vec::new();
+    let (mut y, mut first) = (1.0, true);
+    for row in rows {
+        if matches!(row.mark, Mark::Odds(..)) && first {
+            first = false;
+            shapes.push(line((scale.at(0.0), 1.0), (scale.at(0.0), y), "axis"));
+            shapes.push(text((0.0, y + 24.0), Anchor::Start, type_size, "soft", "than the present route"));
+            y += 32.0;
+        }
+        shapes.push(line((0.0, y), (width, y), "rule"));
+        let room = if size.narrow() { width } else { names };
+        shapes.push(text((0.0, y + 19.0), Anchor::Start, type_size, "", fit(&row.name, room, type_size)));
+        let (at, anchor, below, middle) = match size {
+            Size::Wide => (width - 2.0, Anchor::End, 19.0, y + 15.0),
+            Size::Narrow => (0.0, Anchor::Start, 33.0, y + 44.0),
+        };
+        let room = if size.narrow() { width } else { widest + 1.0 };
+        shapes.push(text(
+            (at, y + below),
+            anchor,
+            type_size,
+            "soft amount",
+            fit(&row.words, room, type_size),
+        ));
+        match row.mark {
+            Mark::None => {}
+            Mark::Interval(from, at, to) => {
+                let (from, at, to) = (scale.at(from), scale.at(at), scale.at(to));
+                shapes.push(line((from, middle), (to, middle), "course"));
+                for end in [from, to] {
+                    shapes.push(line((end, middle - 5.0), (end, middle + 5.0), "course"));
+                }
+                let d = Trail::from(at - 5.0, middle)
+                    .to(at, middle - 5.0)
+                    .to(at + 5.0, middle)
+                    .to(at, middle + 5.0);
+                shapes.push(Shape::Path { d: d.closed(), class: "mark", hatch: Hatch::No });
+            }
+            Mark::Odds(less, same) => {
+                let parts = [
+                    (less, "fill-less", Hatch::No),
+                    (same, "fill-other", Hatch::Dots),
+                    (1.0 - less - same, "fill-more", Hatch::Lines),
+                ];
+                let mut x = left;
+                for (share, class, hatch) in parts {
+                    let length = odds.length(share);
+                    if length >= 0.5 {
+                        shapes.push(Shape::Rect {
+                            x,
+                            y: middle - 6.0,
+                            width: length,
+                            height: 12.0,
+                            class,
+                            hatch,
+                        });
+                    }
+                    x += length;
+                }
+            }
+        }
+        y += row_height;
+    }
+    if first {
+        shapes.push(line((scale.at(0.0), 1.0), (scale.at(0.0), y), "axis"));
+    }
+    shapes.push(line((0.0, y), (width, y), "rule"));
+    Drawing { width, height: y + 1.0, shapes }
+}
