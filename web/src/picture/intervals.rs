@@ -16,6 +16,8 @@ use thimbleworth::report::odds_words;
 struct Row {
     name: String,
     words: String,
+    /// The limits of an interval; a second line where it is narrow.
+    limits: String,
     mark: Mark,
 }
 
@@ -44,21 +46,31 @@ pub fn intervals(
         let Some(spread) = spread else { continue };
         let rival = figure.rivals.iter().find(|x| x.route == r);
         let odds = rival.map_or(String::new(), |x| unbroken(&odds_words(x.less, x.same)));
-        let (words, mark, cells) = match spread.drawn {
+        let (words, limits, mark, cells) = match spread.drawn {
             Some(s) => {
                 draws = s.draws;
                 let (low, middle, high) = (s.symmetric.low, s.median, s.symmetric.high);
-                let words = format!("{}, from {} to {}", show(middle), show(low), show(high));
-                (words, Mark::Interval(low, middle, high), [show(middle), show(low), show(high)])
+                let limits = format!("from {} to {}", show(low), show(high));
+                (
+                    show(middle),
+                    limits,
+                    Mark::Interval(low, middle, high),
+                    [show(middle), show(low), show(high)],
+                )
             }
             None => {
                 let none = "no interval: too few draws ran".to_owned();
-                (none, Mark::None, [show(spread.central), "not known".to_owned(), String::new()])
+                (
+                    none,
+                    String::new(),
+                    Mark::None,
+                    [show(spread.central), "not known".to_owned(), String::new()],
+                )
             }
         };
-        said.push(format!("{} {words}", name(r)));
+        said.push(format!("{} {words} {limits}", name(r)).trim_end().to_owned());
         table.push([name(r)].into_iter().chain(cells).chain([odds]).collect());
-        rows.push(Row { name: name(r), words, mark });
+        rows.push(Row { name: name(r), words, limits, mark });
     }
     if draws == 0 {
         return None;
@@ -72,7 +84,12 @@ pub fn intervals(
             best = rival.less;
             heading = format!("{title}: {} has {words} than {}", name(rival.route), name(work.present));
         }
-        rows.push(Row { name: name(rival.route), words, mark: Mark::Odds(rival.less, rival.same) });
+        rows.push(Row {
+            name: name(rival.route),
+            words,
+            limits: String::new(),
+            mark: Mark::Odds(rival.less, rival.same),
+        });
     }
     Some(Picture {
         key: key.to_owned(),
@@ -102,11 +119,13 @@ fn draw(rows: &[Row], size: Size) -> Drawing {
     let wider = |a: f64, b: f64| if b > a { b } else { a };
     let names = rows.iter().map(|r| text_width(&r.name, type_size)).fold(0.0, wider);
     let names = if names > 170.0 { 170.0 } else { names };
-    let widest = rows.iter().map(|r| text_width(&r.words, type_size)).fold(0.0, wider);
-    let widest = if widest > 270.0 { 270.0 } else { widest };
+    let joined =
+        |row: &Row| [&row.words, if row.limits.is_empty() { "" } else { ", " }, &row.limits].concat();
+    let widest = rows.iter().map(|r| text_width(&joined(r), type_size)).fold(0.0, wider);
+    let widest = if widest > 310.0 { 310.0 } else { widest };
     let (left, right, row_height) = match size {
         Size::Wide => (names + 14.0, width - widest - 16.0, 30.0),
-        Size::Narrow => (6.0, width - 6.0, 54.0),
+        Size::Narrow => (6.0, width - 6.0, 68.0),
     };
     let (mut low, mut high) = (0.0, 0.0);
     for row in rows {
@@ -122,29 +141,32 @@ fn draw(rows: &[Row], size: Size) -> Drawing {
     for row in rows {
         if matches!(row.mark, Mark::Odds(..)) && first {
             first = false;
-            shapes.push(line((scale.at(0.0), 1.0), (scale.at(0.0), y), "axis"));
             shapes.push(text((0.0, y + 24.0), Anchor::Start, type_size, "soft", "than the present route"));
             y += 32.0;
         }
         shapes.push(line((0.0, y), (width, y), "rule"));
         let room = if size.narrow() { width } else { names };
         shapes.push(text((0.0, y + 19.0), Anchor::Start, type_size, "", fit(&row.name, room, type_size)));
-        let (at, anchor, below, middle) = match size {
-            Size::Wide => (width - 2.0, Anchor::End, 19.0, y + 15.0),
-            Size::Narrow => (0.0, Anchor::Start, 33.0, y + 44.0),
+        let mut lines = vec![];
+        let (at, anchor, middle) = match size {
+            Size::Wide => {
+                lines.push((19.0, fit(&joined(row), widest + 1.0, type_size)));
+                (width - 2.0, Anchor::End, y + 15.0)
+            }
+            Size::Narrow => {
+                lines.push((33.0, fit(&row.words, width, type_size)));
+                lines.push((47.0, fit(&row.limits, width, type_size)));
+                (0.0, Anchor::Start, y + 58.0)
+            }
         };
-        let room = if size.narrow() { width } else { widest + 1.0 };
-        shapes.push(text(
-            (at, y + below),
-            anchor,
-            type_size,
-            "soft amount",
-            fit(&row.words, room, type_size),
-        ));
+        for (below, words) in lines.into_iter().filter(|l| !l.1.is_empty()) {
+            shapes.push(text((at, y + below), anchor, type_size, "soft amount", words));
+        }
         match row.mark {
             Mark::None => {}
             Mark::Interval(from, at, to) => {
-                let (from, at, to) = (scale.at(from), scale.at(at), scale.at(to));
+                let (from, at, to, zero) = (scale.at(from), scale.at(at), scale.at(to), scale.at(0.0));
+                shapes.push(line((zero, middle - 9.0), (zero, middle + 9.0), "axis"));
                 shapes.push(line((from, middle), (to, middle), "course"));
                 for end in [from, to] {
                     shapes.push(line((end, middle - 5.0), (end, middle + 5.0), "course"));
@@ -179,9 +201,6 @@ fn draw(rows: &[Row], size: Size) -> Drawing {
             }
         }
         y += row_height;
-    }
-    if first {
-        shapes.push(line((scale.at(0.0), 1.0), (scale.at(0.0), y), "axis"));
     }
     shapes.push(line((0.0, y), (width, y), "rule"));
     Drawing { width, height: y + 1.0, shapes }

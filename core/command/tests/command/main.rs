@@ -3,8 +3,8 @@
 
 mod bad_input;
 mod case;
-mod drawn;
 mod co2;
+mod drawn;
 mod files;
 mod log;
 mod need;
