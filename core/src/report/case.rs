@@ -1,7 +1,7 @@
 //! The paper for finance and quality: one page, an annex, and what differs from another version of the plan.
 
 use super::markdown::escaped;
-use super::odds::{draws_words, named, odds_words};
+use super::odds::{draws_words, named, odds_words, stopped_words};
 use super::row::PROGRAM;
 use super::words::{cited, work_words};
 use crate::account::{Account, Group};
@@ -144,6 +144,9 @@ fn page(
                 let _ = writeln!(out, "- No case for {name} without {}.", escaped(what));
             }),
         }
+    }
+    for text in reading.iter().flat_map(|reading| stopped_words(work, reading)) {
+        let _ = writeln!(out, "- {}", escaped(&text));
     }
     out.push_str("\n### What else changes\n\n");
     if let (Some(reading), Some(row)) = (&reading, first.or_else(|| rows.first())) {

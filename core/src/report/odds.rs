@@ -135,7 +135,7 @@ pub fn odds_words(less: f64, same: f64) -> String {
     }
 }
 
-/// What is to be said of draws that stopped, a sentence for each step and kind.
+/// What is to be said of draws that stopped, and of those in which a step takes longer: a sentence for each step and kind.
 #[must_use]
 pub fn stopped_words(work: &WorkloadProgram, reading: &Reading<'_>) -> Vec<String> {
     let mut out = Vec::new();
@@ -154,6 +154,14 @@ pub fn stopped_words(work: &WorkloadProgram, reading: &Reading<'_>) -> Vec<Strin
                 kind.draws,
                 step_words(route, kind.step),
                 kind.why
+            ));
+        }
+        for (step, draws) in columns.longer() {
+            out.push(format!(
+                "{}: in {draws} of {} draws the run {} takes longer than the plan says, as long as its gas stream needs; they count with the longer time.",
+                route.name,
+                columns.done(),
+                step_words(route, *step)
             ));
         }
     }
@@ -223,7 +231,7 @@ fn percent(share: f64) -> String {
 /// | `thimbleworth_odds` | [`ODDS_VERSION`] |
 /// | `program`, `plan_digest` | as in the result document |
 /// | `seed`, `draws`, `asked`, `coverage` | what the draws follow from; how many every route has, and how many were asked for; the probability that an interval holds |
-/// | `workloads` | `name`, `present`, `routes` (`name`, `draws`, `stopped`: `step`, `why`, `draws`), `figures` |
+/// | `workloads` | `name`, `present`, `routes` (`name`, `draws`, `stopped`: `step`, `why`, `draws`; `longer`: `step`, `draws` in which it takes longer than the plan says), `figures` |
 ///
 /// A figure has `id`, `title`, `routes` and `rivals`. Of a route: `name`, `central_U`, `mean_U`, `u_U`, `median_U`,
 /// `low_U` and `high_U` (probabilistically symmetric), `shortest_low_U`, `shortest_high_U`, `first_order_u_U`,
@@ -268,6 +276,14 @@ fn workload(json: &mut Json, reading: &Reading<'_>, coverage: f64, work: &Worklo
                             json.put("step", if let StepIx::Step(i) = s.step { Some(i) } else { None });
                             json.put("why", s.why);
                             json.put("draws", s.draws);
+                        });
+                    }
+                });
+                json.list("longer", |json| {
+                    for (step, draws) in columns.longer() {
+                        json.row(|json| {
+                            json.put("step", if let StepIx::Step(i) = step { Some(*i) } else { None });
+                            json.put("draws", *draws);
                         });
                     }
                 });
