@@ -228,7 +228,7 @@ fn parameter(param: &Param) -> Entry {
             out.push(number_or_text());
         }
         Control::Quantity(_) | Control::Material | Control::Place | Control::Text => {
-            out.push(typed("string"))
+            out.push(typed("string"));
         }
         Control::Choice(words) => out.push(entry("enum", texts(words.iter().copied()))),
         Control::Mixture => {

@@ -4,7 +4,7 @@ use super::markdown::escaped;
 use super::odds::{draws_words, named, odds_words, stopped_words};
 use super::row::PROGRAM;
 use super::words::{cited, work_words};
-use crate::account::{Account, Group};
+use crate::account::{Account, Group, RouteAccount};
 use crate::case::{DrawnCase, Switch, Turn, drawn, not_ranked, switch, turning_prices, turning_results};
 use crate::chance::Summary;
 use crate::compare::{HEADLINES, compare};
@@ -103,9 +103,9 @@ fn page(
     }
     let _ = writeln!(out, "### In place of {}\n", escaped(present));
     out.push_str(
-        "| route | paid at once | saved a year | present value | from | to | gains in | payback | ranked |\n",
+        "| route | instruments to buy | paid at once | saved a year | present value | from | to | gains in | payback | ranked |\n",
     );
-    out.push_str("| --- | ---: | ---: | ---: | ---: | ---: | ---: | --- | --- |\n");
+    out.push_str("| --- | ---: | ---: | ---: | ---: | ---: | ---: | ---: | --- | --- |\n");
     for row in &rows {
         match &row.case {
             Ok(case) => {
@@ -118,8 +118,9 @@ fn page(
                 let ranked = if case.not_ranked.is_empty() { "yes" } else { "no" };
                 let _ = writeln!(
                     out,
-                    "| {} | {} | {} | {} | {} | {} | {gains} | {} | {ranked} |",
+                    "| {} | {} | {} | {} | {} | {} | {} | {gains} | {} | {ranked} |",
                     escaped(row.name),
+                    case.to_buy.map_or_else(|| "not known".to_owned(), |n| significant(n, 4)),
                     money(case.investment.paid),
                     money(case.investment.saved_a_year),
                     money(case.investment.net_present_value()),
@@ -129,7 +130,7 @@ fn page(
                 );
             }
             Err(_) => {
-                let _ = writeln!(out, "| {} | not known | | | | | | | no |", escaped(row.name));
+                let _ = writeln!(out, "| {} | | not known | | | | | | | no |", escaped(row.name));
             }
         }
     }
@@ -150,7 +151,8 @@ fn page(
     }
     out.push_str("\n### What else changes\n\n");
     if let (Some(reading), Some(row)) = (&reading, first.or_else(|| rows.first())) {
-        headlines(out, work, reading, row.route);
+        let accounts = account.workloads.get(w).map(|w| w.routes.as_slice()).unwrap_or_default();
+        headlines(out, work, reading, row.route, accounts);
     }
     let Some(row) = first else {
         out.push_str("No route is ranked, so that nothing is recommended.\n\n");
@@ -200,7 +202,13 @@ fn page(
 }
 
 /// The headline figures and the lines of climate: the present route, another one with its interval, and the odds.
-fn headlines(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>, route: usize) {
+fn headlines(
+    out: &mut String,
+    work: &WorkloadProgram,
+    reading: &Reading<'_>,
+    route: usize,
+    accounts: &[Option<RouteAccount>],
+) {
     let name = |r: usize| work.routes.get(r).map_or(String::new(), |r| escaped(&r.name));
     let ids: Vec<&str> = reading.ids();
     let headline = HEADLINES.iter().map(|(id, _)| *id).filter(|id| ids.contains(id) && *id != "cost.year");
@@ -225,12 +233,24 @@ fn headlines(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>, ro
             .iter()
             .find(|x| x.route == route)
             .map_or(String::new(), |x| odds_words(x.less, x.same));
-        let climate = if figure.id.starts_with("climate.") { "climate: " } else { "" };
+        let climate = if figure.id.starts_with("climate.") { scope(accounts, &figure.id) } else { "" };
         let (a, b) = (central(before), central(after));
         let _ =
             writeln!(out, "| {climate}{} | {a} | {b} | {low} | {high} | {odds} |", escaped(&figure.title));
     }
     out.push_str("\nLines of climate are never added up: each has its own scope (annex).\n\n");
+}
+
+/// Which scope a line of climate belongs to, as its boundary says.
+fn scope(accounts: &[Option<RouteAccount>], id: &str) -> &'static str {
+    let figures = accounts.iter().flatten().flat_map(|a| &a.figures);
+    let boundary = figures.into_iter().find(|f| f.id == id).map_or("", |f| f.boundary.as_str());
+    match boundary.get(..7) {
+        Some("scope 1") => "climate, scope 1: ",
+        Some("scope 2") => "climate, scope 2: ",
+        Some("scope 3") => "climate, scope 3: ",
+        _ => "climate, no scope: ",
+    }
 }
 
 fn annex(
@@ -378,9 +398,13 @@ pub fn turn_words(turn: Turn) -> String {
 pub fn money_words(name: &str, case: &Switch, drawn: &DrawnCase, coverage: f64) -> String {
     let i = case.investment;
     let mut text = format!(
-        "{name} costs {} at once and saves {} a year: over {} years at {} % a present value of {}",
+        "{name} costs {} at once and {} a year: over {} years at {} % a present value of {}",
         money(i.paid, case),
-        money(i.saved_a_year, case),
+        if i.saved_a_year < 0.0 {
+            format!("{} more", money(-i.saved_a_year, case))
+        } else {
+            ["saves ", &money(i.saved_a_year, case)].concat()
+        },
         i.years,
         significant(i.discount * 100.0, 3),
         money(i.net_present_value(), case)
@@ -449,6 +473,23 @@ pub fn since_markdown(old: &Account, new: &Account) -> String {
                 let i = account.figures.iter().position(|f| f.id == id)?;
                 Some((account.figures[i].measure.shown(account.values[i]), account.values[i]))
             };
+            let value = |a: &Account, w: usize, r: usize| {
+                let case = switch(a, w, r).ok()?;
+                Some((money(case.investment.net_present_value(), &case), case.investment.net_present_value()))
+            };
+            let (a, b) = (value(old, before, at), value(new, w, r));
+            let changed = a.as_ref().map(|v| v.1) != b.as_ref().map(|v| v.1);
+            if changed && r != work.present {
+                let said = |v: Option<(String, f64)>| v.map_or_else(|| "no case".to_owned(), |v| v.0);
+                let _ = writeln!(
+                    out,
+                    "| {} | {} | present value of the case | {} | {} |",
+                    escaped(&work.name),
+                    escaped(&route.name),
+                    said(a),
+                    said(b)
+                );
+            }
             for (id, title) in HEADLINES {
                 let (a, b) = (found(old, before, at, id), found(new, w, r, id));
                 if a.as_ref().map(|v| v.1) != b.as_ref().map(|v| v.1) {

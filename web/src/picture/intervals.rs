@@ -120,7 +120,7 @@ fn draw(rows: &[Row], size: Size) -> Drawing {
     let names = rows.iter().map(|r| text_width(&r.name, type_size)).fold(0.0, wider);
     let names = if names > 170.0 { 170.0 } else { names };
     let joined =
-        |row: &Row| [&row.words, if row.limits.is_empty() { "" } else { ", " }, &row.limits].concat();
+        |row: &Row| [row.words.as_str(), if row.limits.is_empty() { "" } else { ", " }, &row.limits].concat();
     let widest = rows.iter().map(|r| text_width(&joined(r), type_size)).fold(0.0, wider);
     let widest = if widest > 310.0 { 310.0 } else { widest };
     let (left, right, row_height) = match size {
