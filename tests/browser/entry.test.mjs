@@ -50,6 +50,24 @@ test("7, 8, 9, 13: fields are plain text with a label above, the unit in the nam
   await close();
 });
 
+test("12: another unit writes the amount again and says so; undo gives back what was typed", async () => {
+  const { page, seen, close } = await openWith(browser, smallPlan());
+  const unit = page.getByLabel("Unit of solvent in the flask");
+  await charge(page).fill("250 ± 5 mL");
+  assert.equal(await unit.inputValue(), "mL");
+  await unit.selectOption("L");
+  assert.equal(await charge(page).inputValue(), "0.25 ± 0.005 L");
+  assert.equal(await page.locator(".field", { has: charge(page) }).locator("[aria-live]").innerText(), "250 ± 5 mL is 0.25 ± 0.005 L.");
+  assert.match(await beside(page).innerText(), /^Read as 250 mL, between 245 and 255 mL \(limits\)\./);
+  await page.getByRole("button", { name: "Undo: change unit of solvent in the flask" }).click();
+  assert.equal(await charge(page).inputValue(), "250 ± 5 mL");
+  // What is no amount has no unit to change.
+  await charge(page).fill("a flask");
+  assert.equal(await unit.count(), 0);
+  assertQuiet(seen);
+  await close();
+});
+
 test("10, 11: amounts are read as people write them, and the reading is given back", async () => {
   const { page, seen, close } = await openWith(browser, smallPlan());
   for (const [text, echo] of [

@@ -8,6 +8,7 @@
 //! band exactly 10 and 100 g (mL) fall in, whether water and inert gases count, and whether amounts and waste are
 //! those of a sample or of the whole procedure. They are [`Options`], and the result carries them.
 use super::pictogram::SignalWord;
+use crate::quantity::{Kind, show, significant};
 use crate::source::{Source, Standing};
 use std::fmt;
 
@@ -35,10 +36,10 @@ impl Amount {
 
 impl fmt::Display for Amount {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
-        let unit = if matches!(self, Self::MassKg(_)) { "g" } else { "mL" };
-        // Six significant figures: the shift from SI must not show as 9.999999999999998 mL.
-        let shown = format!("{:.5e}", self.g_or_ml()).parse::<f64>().unwrap_or_else(|_| self.g_or_ml());
-        write!(f, "{} {unit}", shown + 0.0)
+        f.write_str(&match *self {
+            Self::MassKg(kg) => show(kg, Kind::Mass),
+            Self::VolumeM3(m3) => show(m3, Kind::Volume),
+        })
     }
 }
 
@@ -367,7 +368,7 @@ fn energy_line(energy_j: f64) -> Result<Line, EcoScaleError> {
     Ok(Line {
         block: Block::Energy,
         what: "energy".to_owned(),
-        amount: format!("{kwh:.3} kWh"),
+        amount: significant(kwh, 4) + " kWh",
         penalty,
         why: why.to_owned(),
     })

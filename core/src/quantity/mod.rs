@@ -22,6 +22,7 @@
 //! `1,234 mL` is refused with a question; so are units that differ from place to place.
 mod amount;
 mod bounds;
+mod convert;
 mod currency;
 mod decimal;
 mod error;
@@ -37,6 +38,7 @@ mod unit;
 mod units;
 pub use amount::{Amount, Entry, Origin, ShareBy, Spread};
 pub use bounds::{BOUNDS, Bound, bound, check};
+pub use convert::in_unit;
 pub use currency::Currency;
 pub use error::{AmountError, Which};
 pub use kind::Kind;

@@ -1,10 +1,11 @@
 //! One field: label with its unit, hint, control, and beside it what was understood, what is wrong, and where the usual
 //! range comes from. The margin beside the control has room for all of it, so that nothing moves while someone types.
-use crate::edit::{Edit, dom_id, number, text};
+use crate::edit::{Edit, dom_id, lowered, number, text};
 use crate::form::{problem_at, sentence};
 use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::plan::{Field as Value, Problem, Severity};
+use thimbleworth::quantity::{Kind, in_unit};
 use yew::prelude::*;
 
 /// The words of a choice: value and what is shown.
@@ -16,7 +17,7 @@ pub(crate) enum Ask {
     /// Any text.
     Text,
     /// An amount with its unit. No keypad is asked for: it would have no letters for the unit.
-    Amount,
+    Amount(Kind),
     /// A plain number, held bare in the plan where it can be.
     Number,
     /// Several lines.
@@ -125,7 +126,39 @@ fn read(ask: &Ask, value: &str) -> Option<Value> {
             "false" => Some(Value::YesNo(false)),
             _ => None,
         },
-        Ask::Text | Ask::Amount | Ask::Area | Ask::Material | Ask::Choice(_) => text(value),
+        Ask::Text | Ask::Amount(_) | Ask::Area | Ask::Material | Ask::Choice(_) => text(value),
+    }
+}
+
+/// The unit in which an amount is written, and the others that its label lists: choosing one writes the amount again in
+/// it and says so. Nothing where there is no amount to write again.
+fn unit_choice(props: &Props, kind: Kind, converted: &UseStateHandle<AttrValue>) -> Html {
+    let units: Vec<&str> = props.units.split(", ").collect();
+    let written = units.iter().filter(|u| props.value.trim_end().ends_with(**u)).max_by_key(|u| u.len());
+    let Some(written) = written.filter(|u| units.len() > 1 && in_unit(&props.value, kind, u).is_some())
+    else {
+        return Html::default();
+    };
+    let onchange = {
+        let (edit, path, label) = (props.edit.clone(), props.path.clone(), props.label.clone());
+        let (value, converted) = (props.value.clone(), converted.clone());
+        Callback::from(move |event: Event| {
+            let Some(text) = value_of(&event).and_then(|unit| in_unit(&value, kind, &unit)) else { return };
+            converted.set(format!("{value} is {text}.").into());
+            // An action of its own, so that undo gives back what was typed.
+            edit.emit(Edit {
+                place: None,
+                ..Edit::set(&path, &format!("unit of {}", lowered(&label)), Some(Value::Text(text)))
+            });
+        })
+    };
+    html! {
+        <>
+            <select class="unit" aria-label={format!("Unit of {}", lowered(&props.label))} {onchange}>
+                { for units.iter().map(|u| html! { <option value={(*u).to_owned()} selected={u == written}>{ *u }</option> }) }
+            </select>
+            <span class="unseen" aria-live="polite">{ &**converted }</span>
+        </>
     }
 }
 
@@ -157,6 +190,7 @@ pub(crate) fn Field(props: &Props) -> Html {
         }
     });
     let onblur = Callback::from(move |_: FocusEvent| patience.set(patience.gone()));
+    let converted = use_state_eq(AttrValue::default);
 
     let id = dom_id(&props.path);
     let (hint, note) = (format!("{id}-hint"), format!("{id}-said"));
@@ -190,15 +224,19 @@ pub(crate) fn Field(props: &Props) -> Html {
         Ask::YesNo(left_out) => select(
             [("", &**left_out), ("true", "yes"), ("false", "no")].iter().map(|(w, s)| option(w, s)).collect(),
         ),
-        Ask::Text | Ask::Amount | Ask::Number | Ask::Material => html! {
+        Ask::Text | Ask::Amount(_) | Ask::Number | Ask::Material => html! {
             <input id={id.clone()} type="text" autocomplete="off" spellcheck="false"
                 inputmode={(props.ask == Ask::Number).then_some("decimal")}
                 list={(props.ask == Ask::Material).then_some("catalogue")}
                 aria-describedby={described} aria-invalid={invalid} {value} {oninput} {onblur} />
         },
     };
+    let unit = match props.ask {
+        Ask::Amount(kind) => unit_choice(props, kind, &converted),
+        _ => Html::default(),
+    };
     html! {
-        <div class={classes!("field", (props.ask == Ask::Amount).then_some("reads"), wrong.then_some("wrong"))}>
+        <div class={classes!("field", (!props.units.is_empty()).then_some("reads"), wrong.then_some("wrong"))}>
             <div class="ask">
                 <label for={id.clone()}>
                     { &props.label }
@@ -206,7 +244,7 @@ pub(crate) fn Field(props: &Props) -> Html {
                     if props.optional { <span class="optional">{ " (optional)" }</span> }
                 </label>
                 if !props.hint.is_empty() { <p class="hint" id={hint}>{ unbroken(&props.hint) }</p> }
-                { control }
+                <div class="control">{ control }{ unit }</div>
             </div>
             <div class="beside">
                 { message(note, shown) }

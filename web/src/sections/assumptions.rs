@@ -1,7 +1,7 @@
 //! Section "Assumptions, cautions and sources".
 use super::{Section, View, When};
 use crate::form::{cited, sentence, word};
-use crate::reckon::Book;
+use crate::reckon::{Book, things};
 use crate::show::unbroken;
 use thimbleworth::material::catalogue;
 use thimbleworth::order::Index;
@@ -73,10 +73,10 @@ fn assumptions(book: &Book, w: usize) -> Html {
                     html! { <li>{ unbroken(&said) }</li> }
                 }).collect();
                 Some(html! {
-                    <>
-                        <h4>{ &column.name }</h4>
-                        if items.is_empty() { <p class="empty">{ "Nothing." }</p> } else { <ul>{ for items }</ul> }
-                    </>
+                    <details class="more">
+                        <summary>{ format!("{}: {}", column.name, if items.is_empty() { "nothing".to_owned() } else { things(items.len()) }) }</summary>
+                        if !items.is_empty() { <ul>{ for items }</ul> }
+                    </details>
                 })
             }) }
         </>

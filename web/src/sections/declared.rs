@@ -67,7 +67,9 @@ pub(super) fn field(view: &View, path: &str, p: &'static Param, field: Option<&V
         Control::Quantity(Kind::Number) => {
             (Ask::Number, String::new(), understood(&value, Kind::Number, p.need))
         }
-        Control::Quantity(kind) => (Ask::Amount, named_units(view, kind), understood(&value, kind, p.need)),
+        Control::Quantity(kind) => {
+            (Ask::Amount(kind), named_units(view, kind), understood(&value, kind, p.need))
+        }
         Control::Count => (Ask::Number, String::new(), blank),
         Control::Choice(words) => (Ask::Choice(options(&first, words)), String::new(), blank),
         Control::Place => (Ask::Choice(choices(view, &first)), String::new(), blank),

@@ -87,11 +87,13 @@ fn Pour(props: &Props) -> Html {
         html! { <Field path={PATHS[i]} {label} {hint} value={value.to_owned()} {ask} edit={put.clone()} /> }
     };
     html! {
-        <section aria-labelledby="pour-heading">
+        <section class={(!matches!(found, Some(Ok(_)))).then_some("controls")} aria-labelledby="pour-heading">
             <h3 id="pour-heading">{ "May this go into that container?" }</h3>
-            { field(0, "Container", "A stream of the site, or the drain.", into, Ask::Choice(choice)) }
-            { field(1, "Poured, as one mixture", "Such as acetone = 40 mL; water = 1 L.", what, Ask::Text) }
-            { field(2, "In the container already", "Such as 12 L; half of what it may hold when left out.", held, Ask::Text) }
+            <div class="controls">
+                { field(0, "Container", "A stream of the site, or the drain.", into, Ask::Choice(choice)) }
+                { field(1, "Poured, as one mixture", "Such as acetone = 40 mL; water = 1 L.", what, Ask::Text) }
+                { field(2, "In the container already", "Such as 12 L; half of what it may hold when left out.", held, Ask::Text) }
+            </div>
             <div aria-live="polite">
                 { match &found {
                     None => Html::default(),

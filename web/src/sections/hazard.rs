@@ -112,23 +112,25 @@ fn chem21(assessment: &Assessment) -> Html {
 }
 
 fn scores(name: &str, hazard: &HazardAccount) -> Html {
+    let nemi: Vec<&str> = hazard.nemi.iter().map(|criterion| criterion.met.word()).collect();
     html! {
-        <div class="besides">
-            <h5>{ name }</h5>
-            { match &hazard.eco_scale {
-                Ok(eco) => html! {
-                    <>
-                        <p>{ format!("Analytical Eco-Scale: {} of 100, {}. Penalty points for one reported result:", eco.score, eco.verdict.word()) }</p>
-                        <ul>
-                            { for eco.lines.iter().map(|line| {
-                                let amount = if line.amount.is_empty() { String::new() } else { format!(", {}", line.amount) };
-                                html! { <li>{ format!("{} for {}{amount}: {}", line.penalty, line.what, line.why) }</li> }
-                            }) }
-                        </ul>
-                    </>
-                },
-                Err(why) => html! { <p>{ format!("Analytical Eco-Scale: not given: {why}") }</p> },
-            } }
+        <details class="more">
+            <summary>{ name }{ ": Analytical Eco-Scale " }
+                { match &hazard.eco_scale {
+                    Ok(eco) => format!("{} of 100, {}", eco.score, eco.verdict.word()),
+                    Err(why) => format!("not given: {why}"),
+                } }
+                { "; NEMI " }{ nemi.join(", ") }
+            </summary>
+            if let Ok(eco) = &hazard.eco_scale {
+                <p>{ "Penalty points for one reported result:" }</p>
+                <ul>
+                    { for eco.lines.iter().map(|line| {
+                        let amount = if line.amount.is_empty() { String::new() } else { format!(", {}", line.amount) };
+                        html! { <li>{ format!("{} for {}{amount}: {}", line.penalty, line.what, line.why) }</li> }
+                    }) }
+                </ul>
+            }
             <p>{ "NEMI criteria:" }</p>
             <ul>
                 { for hazard.nemi.iter().map(|criterion| html! {
@@ -138,6 +140,6 @@ fn scores(name: &str, hazard: &HazardAccount) -> Html {
             if !hazard.not_scored.is_empty() {
                 <p>{ format!("Reaches air or drain without a score, so that the weighted mass leaves it out: {}.", hazard.not_scored.join(", ")) }</p>
             }
-        </div>
+        </details>
     }
 }

@@ -59,7 +59,7 @@ impl<'a> Asked<'a> {
         value: Option<&String>,
     ) -> Self {
         let value = value.cloned().unwrap_or_default();
-        Self { kind: Some(kind), ask: Ask::Amount, ..Self::text(path, label, value) }
+        Self { kind: Some(kind), ask: Ask::Amount(kind), ..Self::text(path, label, value) }
     }
 
     pub(super) fn hint(mut self, hint: &'a str) -> Self {

@@ -144,7 +144,7 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                 { for route.steps.iter().enumerate().map(|(s, step)| one_step(view, (w, r, s), step, route)) }
                 <AddStep edit={view.edit.clone()} {w} {r} />
             </section>
-            <section aria-label="What is left at the end">
+            <section class="halves" aria-label="What is left at the end">
                 <h5>{ "What is left at the end goes to" }</h5>
                 { for Place::BENCH.into_iter().filter_map(Place::name).map(|name| {
                     let value = route.ends.iter().find(|(k, _)| k == name).map_or(String::new(), |(_, v)| v.clone());
@@ -153,7 +153,7 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                 }) }
             </section>
             { for ROUTE_FIELDS.iter().enumerate().map(|(i, fields)| html! {
-                <section aria-label={fields.1}>
+                <section class="halves" aria-label={fields.1}>
                     <h5>{ fields.1 }</h5>
                     { group(view, path, fields, &|key| of_route(route, fields.0, key)) }
                     if i == 0 {
@@ -286,7 +286,7 @@ fn measured(
             { for lines.into_iter().map(|line| html! {
                 <Field key={line.rule} label={format!("Measured: {}", line.rule)} units="g in one run, or %" optional={true}
                     echo={line.computed} said={said(&view.reckoned.problems, &line.path)} show_all={view.show_all}
-                    value={line.value} ask={Ask::Amount} path={line.path} edit={view.edit.clone()}
+                    value={line.value} path={line.path} edit={view.edit.clone()}
                     margin={rule_source(technique, line.rule)} />
             }) }
         </section>
