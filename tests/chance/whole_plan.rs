@@ -72,18 +72,18 @@ fn a_draw_in_which_the_gas_needs_longer_counts_and_is_told() {
     let text = example("water-laboratory").unwrap().text;
     let account = account_text(text);
     let run = sampled(&account, 1000);
-    let routes = &account.program.as_ref().unwrap().workloads[0].routes;
-    let (r, route) = routes.iter().enumerate().find(|(_, r)| r.name == "Solid-phase").unwrap();
-    let columns = run.route(0, r).unwrap();
+    let routes = &account.program.as_ref().unwrap().workloads[1].routes;
+    let (r, route) = routes.iter().enumerate().find(|(_, r)| r.name == "Solid-phase disk").unwrap();
+    let columns = run.route(1, r).unwrap();
     assert!(columns.stopped().is_empty() && columns.stopped_share() == 0.0);
     assert!(columns.summary("waste.total.mass", 0.95).is_some());
     let [(step, longer)] = *columns.longer() else { panic!("{:?}", columns.longer()) };
     assert!((100..250).contains(&longer), "{longer}");
     let StepIx::Step(at) = step else { panic!() };
     assert_eq!(route.steps[usize::from(at)].technique.key, "concentrate");
-    // By hand: 1.5 L/min of nitrogen over 20 min, or over more of them.
+    // By hand: 1.5 L/min of nitrogen over 45 min, or over more of them.
     let nitrogen = route.materials.iter().position(|m| m.name == "nitrogen").unwrap();
-    let kg = 1.5e-3 / 60.0 * 1200.0 * 101_325.0 * 0.028_013_4 / (8.314_462_618 * 298.15);
+    let kg = 1.5e-3 / 60.0 * 2700.0 * 101_325.0 * 0.028_013_4 / (8.314_462_618 * 298.15);
     let (mut more, mut desk) = (0, route.desk());
     for draw in 0..1000 {
         let x: Vec<f64> = route.inputs.iter().map(|i| i.draw(1, draw)).collect();
@@ -96,16 +96,16 @@ fn a_draw_in_which_the_gas_needs_longer_counts_and_is_told() {
     }
     assert_eq!(more, longer);
     let said = stopped_words(
-        &account.program.as_ref().unwrap().workloads[0],
-        &Reading::new(&account, &run, 0, 0.95).unwrap(),
+        &account.program.as_ref().unwrap().workloads[1],
+        &Reading::new(&account, &run, 1, 0.95).unwrap(),
     );
     assert!(
         said.iter()
-            .any(|s| s.starts_with(&format!("Solid-phase: in {longer} of 1000 draws the run at step 5"))),
+            .any(|s| s.starts_with(&format!("Solid-phase disk: in {longer} of 1000 draws the run at step 5"))),
         "{said:?}"
     );
     let short = text.replacen(
-        "\"gas_flow\": \"1.5 L/min\",\n              \"time\": \"20 min\"",
+        "\"gas_flow\": \"1.5 L/min\",\n              \"time\": \"45 min\"",
         "\"gas_flow\": \"1.5 L/min\",\n              \"time\": \"5 min\"",
         1,
     );

@@ -167,14 +167,20 @@ fn page(
     if let Some(turn) = turning_results(account, w, row.route) {
         let _ = writeln!(out, "- {}", turn_words(turn));
     }
-    for price in turning_prices(account, w, row.route).iter().take(NAMED) {
-        let _ = writeln!(
-            out,
-            "- it turns where {} ({}) is {} times what it is",
-            escaped(&input_words(work, &price.identity)),
-            escaped(&price.written),
-            significant(price.over_central, 3)
-        );
+    let prices: Vec<String> = turning_prices(account, w, row.route)
+        .iter()
+        .take(NAMED)
+        .map(|price| {
+            format!(
+                "{} is {} times what it is ({})",
+                escaped(&input_words(work, &price.identity)),
+                significant(price.over_central, 3),
+                escaped(&price.written)
+            )
+        })
+        .collect();
+    if !prices.is_empty() {
+        let _ = writeln!(out, "- it turns where {}", prices.join(", or "));
     }
     if let Some(reading) = &reading {
         let matters = reading.matters("cost.year", row.route, Some(work.present));
@@ -184,11 +190,15 @@ fn page(
     }
     let routes = account.workloads.get(w).map(|w| &w.routes);
     let found = routes.and_then(|r| r.get(row.route)).and_then(Option::as_ref);
-    out.push_str("\n### Cautions\n\n");
-    for caution in found.iter().flat_map(|a| &a.cautions) {
-        let _ = writeln!(out, "- {}", escaped(caution.text));
+    // What it is about; what to do stands in the annex, so that this stays one page.
+    let about = |text: &'static str| text.split([':', ';', '.']).next().unwrap_or_default();
+    let cautions: Vec<String> =
+        found.iter().flat_map(|a| &a.cautions).map(|c| escaped(about(c.text))).collect();
+    if !cautions.is_empty() {
+        let _ = write!(out, "\n### Cautions\n\n{}. In full in the annex.", cautions.join(". "));
     }
-    out.push_str("\nLocal codes, limits and licensed practice decide.\n\n### Points of change control\n\n");
+    out.push_str(if cautions.is_empty() { "\n" } else { " " });
+    out.push_str("Local codes, limits and licensed practice decide.\n\n### Points of change control\n\n");
     for point in [
         "equivalence shown on own samples and a reference material, with detection limits and recovery",
         "permission of whoever prescribes the method, in writing",
@@ -284,6 +294,12 @@ fn annex(
         }
         for why in not_ranked(route) {
             let _ = writeln!(out, "\nNot ranked: {}.", escaped(&why));
+        }
+        if !found.cautions.is_empty() {
+            out.push_str("\nCautions; local codes, limits and licensed practice decide:\n\n");
+            for caution in &found.cautions {
+                let _ = writeln!(out, "- {}", escaped(caution.text));
+            }
         }
         out.push_str("\nAssumed, because the plan does not say:\n\n");
         for a in &route.assumptions {
