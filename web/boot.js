@@ -112,6 +112,14 @@ async function copyTable(id, callback) {
   }
 }
 
+// Prints the labels and nothing else.
+function printLabels() {
+  const { classList } = document.documentElement;
+  addEventListener("afterprint", () => classList.remove("labels-only"), { once: true });
+  classList.add("labels-only");
+  print();
+}
+
 function askBeforeLeaving(event) {
   event.preventDefault();
   event.returnValue = "";

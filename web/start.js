@@ -40,7 +40,6 @@ function unpack() {
   const program = script + SCRIPT;
   const end = program + PROGRAM;
   const memory = new WebAssembly.Memory({ initial: Math.ceil(end / 65536) });
-  new Uint16Array(memory.buffer, 0, 7164).fill(1024);
   new Uint8Array(memory.buffer, from).set(packed);
   const { exports } = new WebAssembly.Instance(new WebAssembly.Module(bytesOf(UNPACKER)), { "": { memory } });
   exports.begin(from, to);

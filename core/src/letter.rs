@@ -39,24 +39,50 @@ pub const fn capital(c: char) -> char {
     moved(c, apart)
 }
 
+/// Whether this is a letter: an ASCII one, or anything beyond ASCII that is no space, mark or sign of Latin-1.
+///
+/// ```
+/// use thimbleworth::letter::is_letter;
+/// assert_eq!("ä Ω-7 µ≥溶".chars().filter(|c| is_letter(*c)).collect::<String>(), "äΩµ溶");
+/// ```
+#[must_use]
+pub const fn is_letter(c: char) -> bool {
+    match c {
+        'µ' | 'ª' | 'º' => true,
+        // Signs of Latin-1, punctuation and mathematical signs, spaces and marks of East Asian scripts.
+        '\u{80}'..='\u{bf}'
+        | '×'
+        | '÷'
+        | '\u{2000}'..='\u{2bff}'
+        | '\u{3000}'..='\u{303f}'
+        | '\u{fe00}'..='\u{feff}' => false,
+        _ => c.is_ascii_alphabetic() || c as u32 >= 0xc0,
+    }
+}
+
 /// The text in small letters.
 #[must_use]
 pub fn small_text(text: &str) -> String {
     text.chars().map(small).collect()
 }
 
-/// The text with a capital first letter, as a sentence begins.
+/// The text with a capital first letter, as a sentence begins; in the name of a compound the capital goes behind
+/// what says where its parts sit.
 ///
 /// ```
-/// assert_eq!(thimbleworth::letter::sentence("by-product"), "By-product");
+/// use thimbleworth::letter::sentence;
+/// assert_eq!(sentence("by-product"), "By-product");
+/// assert_eq!(sentence("n-hexane bought"), "n-Hexane bought");
+/// assert_eq!(sentence("1,4-dioxane"), "1,4-Dioxane");
 /// ```
 #[must_use]
 pub fn sentence(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for (place, c) in text.chars().enumerate() {
-        out.push(if place == 0 { capital(c) } else { c });
-    }
-    out
+    let behind = text.split_once('-').filter(|(before, _)| {
+        matches!(*before, "n" | "o" | "m" | "p" | "sec" | "tert")
+            || before.contains(',') && before.bytes().all(|b| b.is_ascii_digit() || b == b',')
+    });
+    let first = behind.map_or(0, |(before, _)| before.len() + 1);
+    text.char_indices().map(|(place, c)| if place == first { capital(c) } else { c }).collect()
 }
 
 const fn moved(c: char, apart: i32) -> char {

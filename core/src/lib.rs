@@ -20,6 +20,7 @@ pub mod compare;
 pub mod dense_gas;
 pub mod emission;
 pub mod example;
+mod exponential;
 pub mod generator;
 pub mod hazard;
 pub mod heat;

@@ -1,6 +1,6 @@
 //! How long draws, openings and whole sites take: `cargo bench -p thimbleworth-tests --bench ledger`.
 //!
-//! Prints each time and its ratio to what is wanted, and to a yardstick of plain arithmetic measured in the same run, so
+//! `-- draws` stops after the draws. Prints each time and its ratio to what is wanted, and to a yardstick of plain arithmetic measured in the same run, so
 //! that figures of different machines can be held side by side. It judges nothing: load on a machine is no fault of the code.
 #![allow(clippy::unwrap_used, clippy::panic, reason = "a program for people who measure")]
 
@@ -50,11 +50,26 @@ fn line(what: &str, ns: f64, wanted_ns: Option<f64>, yard_ns: f64) {
     println!("{what:<58} {time:>12}  {:>10.2} yards  {wanted}", ns / yard_ns);
 }
 
+/// By what a route extracts.
+#[derive(Clone, Copy, PartialEq)]
+enum By {
+    Solvent,
+    OpenCo2,
+    ClosedCo2,
+}
+
 /// A route of eight steps over the bench, every amount with limits.
-fn route(i: u64, co2: bool) -> Value {
+fn route(i: u64, by: By) -> Value {
     let solvent = json!({ "n-hexane": "50 %", "acetone": "50 %" });
     let extraction = match i {
-        _ if co2 => {
+        _ if by == By::ClosedCo2 => {
+            json!({ "step": "supercritical", "temperature": "60 ± 1 °C", "pressure": "300 bar ± 3 bar", "vessel": "7 mL ± 2 %",
+            "filler": "1 mL ± 5 %", "metered": "mass", "mass_flow": "2.3 g/min ± 2 %", "time": "40 min ± 1 %",
+            "circuit": "recycled", "leak": "0.5 % ± 0.2 %", "chill": "5 ± 2 °C", "separator_temperature": "25 ± 1 °C",
+            "separator_pressure": "50 bar ± 1 bar", "let_down_temperature": "40 ± 2 °C", "let_down_pressure": "55 bar ± 1 bar",
+            "rinse": "n-heptane", "rinse_volume": "9 mL ± 5 %" })
+        }
+        _ if by == By::OpenCo2 => {
             json!({ "step": "supercritical", "temperature": "80 ± 1 °C", "pressure": "305 bar ± 3 bar", "vessel": "7 mL ± 2 %",
             "filler": "1 mL ± 5 %", "metered": "pump head", "flow": "2.5 mL/min ± 2 %", "meter_temperature": "4 ± 2 °C",
             "meter_pressure": "60 bar ± 1 bar", "time": "40 min ± 1 %", "rinse": "n-heptane", "rinse_volume": "9 mL ± 5 %" })
@@ -90,8 +105,8 @@ fn route(i: u64, co2: bool) -> Value {
     ], "ends": { "liquor": "flammable" } })
 }
 
-fn workload(name: &str, co2: &[bool]) -> Value {
-    let routes: Vec<Value> = (0..4).zip(co2).map(|(i, co2)| route(i, *co2)).collect();
+fn workload(name: &str, by: &[By]) -> Value {
+    let routes: Vec<Value> = (0..4).zip(by).map(|(i, by)| route(i, *by)).collect();
     json!({ "name": name, "results_per_year": 1400, "batch": { "samples": 13, "controls": 4 }, "repeats": "3 % ± 1 %",
         "feed": { "sediment": "3 g ± 1 %" }, "present": "route 0", "routes": routes })
 }
@@ -178,10 +193,15 @@ fn main() {
     });
     println!("a yard is {yard_ns:.0} ns");
 
-    let bench = plan(&[workload("bench", &[false; 4])]);
-    let co2 = plan(&[workload("CO2", &[false, false, true, true])]);
-    draws("without CO2", &bench, Some(5e3), yard_ns);
-    draws("two of four routes with CO2", &co2, None, yard_ns);
+    let bench = plan(&[workload("bench", &[By::Solvent; 4])]);
+    let open_co2 = plan(&[workload("open", &[By::Solvent, By::Solvent, By::OpenCo2, By::OpenCo2])]);
+    let closed_co2 = plan(&[workload("closed", &[By::Solvent, By::Solvent, By::ClosedCo2, By::ClosedCo2])]);
+    draws("without CO2", &bench, Some(20e3), yard_ns);
+    draws("two of four routes with open loops of CO2", &open_co2, Some(20e3), yard_ns);
+    draws("two of four routes with closed loops of CO2", &closed_co2, Some(20e3), yard_ns);
+    if std::env::args().any(|a| a == "draws") {
+        return;
+    }
 
     println!("from text, {} bytes", bench.len());
     line("  open", ns(|| drop(black_box(open(&bench)))), None, yard_ns);
@@ -191,14 +211,18 @@ fn main() {
     line("  open and account", ns(|| drop(black_box(account_text(&bench)))), Some(1e6), yard_ns);
     line(
         "  open and account, two routes with CO2",
-        ns(|| drop(black_box(account_text(&co2)))),
+        ns(|| drop(black_box(account_text(&open_co2)))),
         Some(1e6),
         yard_ns,
     );
 
     let names: Vec<String> = (0..1000).map(|i| format!("work {i}")).collect();
-    let site =
-        plan(&names.iter().map(|name| workload(name, &[false, false, false, true])).collect::<Vec<_>>());
+    let site = plan(
+        &names
+            .iter()
+            .map(|name| workload(name, &[By::Solvent, By::Solvent, By::Solvent, By::OpenCo2]))
+            .collect::<Vec<_>>(),
+    );
     println!("a site of 1,000 workloads of 4 routes, {} bytes", site.len());
     line("  open", ns(|| drop(black_box(open(&site)))), None, yard_ns);
     // What is made is freed outside of the time: a command answers before it tidies up.

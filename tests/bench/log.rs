@@ -88,8 +88,9 @@ fn sums(reading: &Reading, names: &Names) -> Vec<(String, f64)> {
         let name = &names.materials[usize::from(key.material)].name;
         out.push((format!("{}-{:02} {name}", key.month / 12, key.month % 12 + 1), sum.kg));
     }
-    for ((month, route), done) in &reading.tally.done {
-        let route = names.routes[usize::from(*route)].label.rsplit(" / ").next().unwrap().to_owned();
+    for (key, done) in &reading.tally.done {
+        let (month, route) = (key.month, key.material);
+        let route = names.routes[usize::from(route)].label.rsplit(" / ").next().unwrap().to_owned();
         let at = format!("{}-{:02} {route}", month / 12, month % 12 + 1);
         out.push((format!("{at} extractions"), done.extractions));
         out.push((format!("{at} controls"), done.controls));

@@ -1,7 +1,11 @@
 // The waste desk and the year of the site, as an environmental officer meets them.
 import { after, before, test } from "node:test";
 import assert from "node:assert/strict";
-import { assertQuiet, axeFindings, launch, open, settled } from "./vocabulary.mjs";
+import { execFileSync } from "node:child_process";
+import { mkdtempSync, readFileSync, rmSync } from "node:fs";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { assertQuiet, axeFindings, launch, open, printed, settled } from "./vocabulary.mjs";
 
 let browser;
 before(async () => {
@@ -64,3 +68,48 @@ test("the year of the site has its pictures, each with its table, and unfolds in
   assertQuiet(seen);
   await close();
 });
+
+test("labels print at the size of the label, one a page, and nothing else with them", async () => {
+  const { page, seen, close } = await open(browser);
+  const desk = page.locator("#waste-desk");
+  await desk.getByText("Labels to print").click();
+  await page.evaluate(() => (globalThis.print = () => {}));
+  for (const [size, width, height] of [["4 × 6 in", 288, 432], ["A6", 298, 420]]) {
+    await desk.getByLabel("Size of the labels").selectOption(size);
+    const labels = await desk.locator(".labels .label").count();
+    assert.ok(labels >= 2);
+    await desk.getByRole("button", { name: "Print the labels" }).click();
+    const { text, pages } = await sheets(page);
+    // PostScript points, 72 to the inch.
+    assert.equal(pages.length, labels, `${pages}`);
+    for (const [w, h] of pages) assert.ok(Math.abs(w - width) < 1 && Math.abs(h - height) < 1, `${w} × ${h}`);
+    assert.match(text, /HAZARDOUS WASTE/);
+    assert.doesNotMatch(text, /Thimbleworth|Waste desk|may this go/i);
+    await page.evaluate(() => dispatchEvent(new Event("afterprint")));
+  }
+  // Four places on a sheet.
+  await desk.getByLabel("Size of the labels").selectOption("A4, four of 105 × 148 mm");
+  await desk.getByRole("button", { name: "Print the labels" }).click();
+  const sheet = await sheets(page);
+  assert.equal(sheet.pages.length, 1);
+  assert.ok(Math.abs(sheet.pages[0][0] - 595) < 1, `${sheet.pages[0]}`);
+  await page.evaluate(() => dispatchEvent(new Event("afterprint")));
+  assert.match(await printed(page, "desk-after-labels"), /Waste desk/);
+  assertQuiet(seen);
+  await close();
+});
+
+/** What the page would print on the sheets that it asks for: its text, and the size of each sheet. */
+async function sheets(page) {
+  const folder = mkdtempSync(join(tmpdir(), "thimbleworth-"));
+  try {
+    const file = join(folder, "labels.pdf");
+    await page.pdf({ path: file, preferCSSPageSize: true });
+    execFileSync("pdftotext", ["-layout", file, join(folder, "text.txt")]);
+    const told = execFileSync("pdfinfo", ["-l", "99", file], { encoding: "utf8" });
+    const pages = [...told.matchAll(/^Page +\d+ size: +([\d.]+) x ([\d.]+)/gm)].map((m) => [Number(m[1]), Number(m[2])]);
+    return { text: readFileSync(join(folder, "text.txt"), "utf8"), pages };
+  } finally {
+    rmSync(folder, { recursive: true });
+  }
+}

@@ -122,6 +122,29 @@ fn water_treated_at_once_is_not_counted() {
     assert!(samples.abs_diff(3996) <= 1, "{samples}");
 }
 
+/// 40 CFR 262.13(c) and (d), read in a secondary source: what is stored and then reclaimed counts once in a calendar month; what is
+/// reclaimed without having been stored does not count.
+#[test]
+fn reclaimed_solvent_counts_once_in_a_month() {
+    let made = |counted: &str| {
+        let account = account(&plan(BASE, MAY, counted, "US"));
+        assert!(!account.broken(), "{:?}", account.problems);
+        let desk = site_desk(&account, &[]).unwrap();
+        let own: f64 = desk.lines.iter().filter(|l| l.work.is_some()).map(|l| l.counts_kg[4]).sum();
+        (desk.made[4].kg, own, desk.lines.iter().any(|l| l.counted && l.counts_kg != l.kg))
+    };
+    let (all, _, part) = made("reclaimed");
+    within(all, 1240.5, 0.005);
+    assert!(!part);
+    // The water is 1240.5 − 298.8 = 941.7 kg; 50 kg of it go round.
+    let (once, _, part) = made("reclaimed\", \"goes_round\": \"50 kg");
+    within(once, 298.8 + 50.0, 0.005);
+    assert!(part);
+    // More than is made in the month changes nothing.
+    within(made("reclaimed\", \"goes_round\": \"5000 kg").0, 1240.5, 0.005);
+    within(made("reclaimed at once").0, 298.8, 0.005);
+}
+
 #[test]
 fn a_contract_spread_over_four_months() {
     let account = account(&plan(BASE, r#""results_per_year": 900, "months": "5-8","#, "when made", "US"));
@@ -199,4 +222,52 @@ fn papers_hold_the_figures_of_the_desk() {
             );
         }
     }
+}
+
+/// Regulation (EC) 166/2006 Article 5(1)(b), 2 t of hazardous waste; Directive 2010/75/EU Annex VII Part 2; 40 CFR 262.41: all from
+/// memory. Both sides of each line, which is read with its scope and never as a duty.
+#[test]
+fn registers_that_hang_on_waste_and_consumption_are_asked_about_on_both_sides_of_their_lines() {
+    let row = |rules: &str, activity: &str, results: u32, list: &str| {
+        let site = format!(r#""activity": "{activity}","#);
+        let work = format!(r#""results_per_year": {results},"#);
+        let account = account(&plan(&site, &work, "when made", rules));
+        let desk = site_desk(&account, &[]).unwrap();
+        let paper = paper(&account, &desk, PaperKind::Reporting).unwrap();
+        let row = paper.tables[0].rows.iter().find(|r| r[1].contains(list)).cloned();
+        (row, paper.lead.join(" "))
+    };
+    // 1.0505 kg of water with what dissolves and 0.222 kg of the organic phase leave for each sample: 1571 samples make 2 t.
+    for (results, side) in [(1560, "at or below"), (1590, "above")] {
+        let (found, _) = row("EU", "laboratory", results, "transfers");
+        let found = found.unwrap();
+        assert!(found[4].starts_with(side) && found[4].ends_with("is this one?"), "{found:?}");
+    }
+    // 0.2747 kg of both solvents are bought for each: 50 t for 182 000.
+    for (results, side) in [(180_000, "at or below"), (184_000, "above")] {
+        let (found, lead) = row("EU", "pharmaceuticals", results, "solvent balance");
+        let found = found.unwrap();
+        assert!(found[4].starts_with(side), "{found:?}");
+        assert!(!lead.contains("is no activity"));
+    }
+    let (none, lead) = row("EU", "laboratory", 184_000, "solvent balance");
+    assert!(none.is_none() && lead.contains("A laboratory is no activity of Directive 2010/75/EU"));
+    // 1.27275 kg a sample: 1000 kg in a month with 785 samples.
+    for (results, says) in [(9400, "No month as a large"), (9500, "Large quantity generator in 12 months")] {
+        let (_, lead) = row("US", "laboratory", results, "transfers");
+        assert!(lead.contains(says), "{results}: {lead}");
+    }
+}
+
+/// A full container holds so many batches: of the aqueous phase 200 L at 90 %.
+#[test]
+fn a_full_drum_is_told_in_batches() {
+    let account = account(&plan("", r#""results_per_year": 1200,"#, "when made", "US"));
+    let desk = site_desk(&account, &[]).unwrap();
+    let drum = paper(&account, &desk, PaperKind::Drum).unwrap();
+    let table = drum.tables.iter().find(|t| t.title.starts_with("aqueous")).unwrap();
+    let batches: f64 =
+        table.rows.iter().find(|r| r[0] == "batches of Contract, Funnel").unwrap()[1].parse().unwrap();
+    // About 1.05 L a sample into 180 L.
+    within(batches, 171.0, 0.03);
 }

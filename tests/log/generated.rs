@@ -36,13 +36,13 @@ fn sums_of_many_rows_are_those_of_whole_numbers() {
     assert_eq!((reading.rows.used, reading.rows.refused, remarks.len()), (ROWS, 0, 0));
     for (name, grams) in MATERIALS.iter().zip(expected) {
         let at = names.materials.iter().position(|m| m.name == *name).unwrap();
-        let sum = reading.tally.over(|k| usize::from(k.material) == at);
+        let sum = reading.tally.over(&|k| usize::from(k.material) == at);
         let expected_kg = grams as f64 / 1000.0;
         assert!((sum.kg - expected_kg).abs() < 1e-9 * expected_kg, "{name}: {} {expected_kg}", sum.kg);
         assert_eq!(sum.rows, ROWS / 4);
     }
     assert_eq!(reading.tally.by(|k| k.month).len(), 12);
-    assert_eq!(reading.tally.over(|_| true).negative, ROWS / 100);
+    assert_eq!(reading.tally.over(&|_| true).negative, ROWS / 100);
 }
 
 /// Feeds copies of a piece until so many bytes are in.

@@ -42,12 +42,12 @@ fn a_german_ledger_with_everything_that_goes_wrong() {
     );
     // 2.5 − 2.5 − 2.5 + 2.5 L of acetone are none, on four rows of which two are negative.
     let acetone = names.materials.iter().position(|m| m.name == "acetone").unwrap();
-    let sum = reading.tally.over(|k| usize::from(k.material) == acetone);
+    let sum = reading.tally.over(&|k| usize::from(k.material) == acetone);
     assert!(sum.kg.abs() < 1e-12);
     assert_eq!((sum.rows, sum.negative), (4, 2));
     // 1.250,0 L of hexane; density of the catalogue at 20 °C.
     let hexane = names.materials.iter().position(|m| m.name == "n-hexane").unwrap();
-    let sum = reading.tally.over(|k| usize::from(k.material) == hexane);
+    let sum = reading.tally.over(&|k| usize::from(k.material) == hexane);
     let density = names.materials[hexane].density_kg_m3.unwrap().0;
     assert!((sum.kg - 1.25 * density).abs() < 1e-9);
     let changes: Vec<Change> = remarks

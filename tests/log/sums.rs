@@ -42,8 +42,8 @@ fn a_log_counts_extractions_controls_repeats_and_batches() {
         .tally
         .done
         .iter()
-        .map(|((month, route), d)| {
-            let label = names.routes[usize::from(*route)].label.as_str();
+        .map(|(key, d)| {
+            let (month, label) = (key.month, names.routes[usize::from(key.material)].label.as_str());
             (month % 12 + 1, label, d.extractions, d.controls, d.repeats, d.batches)
         })
         .collect();
@@ -81,7 +81,7 @@ fn a_mapping_that_the_plan_keeps_reads_the_next_file_with_its_columns_shuffled()
     let (reading, names, _) = reader.finish();
     let reading = reading.unwrap();
     // 1.234 mL with decimal commas are 1234 mL.
-    let sum = reading.tally.over(|_| true);
+    let sum = reading.tally.over(&|_| true);
     let density = names.materials[0].density_kg_m3.unwrap().0;
     assert!((sum.kg - 1.234e-3 * density).abs() < 1e-12, "{sum:?}");
     assert_eq!(reading.mapping.columns[3].1.text(), "date");

@@ -142,6 +142,7 @@ impl Chance {
                 density_mark: c.maybe(Self::field),
                 area: c.maybe(Self::text),
                 counted: c.maybe(Self::text),
+                goes_round: c.maybe(Self::text),
             }),
             activity: self.maybe(Self::text),
             other_waste: self.list(3, |c| OtherWaste {

@@ -22,6 +22,9 @@ extern "C" {
     /// Copies a table as columns for a spreadsheet.
     #[wasm_bindgen(js_name = copyTable)]
     fn copy_table_js(id: &str, callback: &JsValue);
+    /// Prints the labels and nothing else.
+    #[wasm_bindgen(js_name = printLabels)]
+    pub(crate) fn print_labels();
     /// Asks before the page is left.
     #[wasm_bindgen(js_name = guardLeaving)]
     pub(crate) fn guard_leaving(unsaved: bool);

@@ -20,8 +20,9 @@ impl Scale {
     /// A scale on which the largest of `values` (SI) shows five digits and the others as many decimals.
     #[must_use]
     pub fn of(measure: Measure, values: impl Iterator<Item = f64>) -> Self {
-        let mut largest = 0.0_f64;
+        let (mut largest, mut whole_numbers) = (0.0_f64, true);
         for value in values.filter(|v| v.is_finite()) {
+            whole_numbers &= value.fract() == 0.0;
             if value.abs() > largest {
                 largest = value.abs();
             }
@@ -47,7 +48,7 @@ impl Scale {
             whole += 1;
         }
         let decimals = match measure {
-            Measure::Containers if largest.fract() == 0.0 => 0,
+            Measure::Containers | Measure::Count if whole_numbers => 0,
             _ if largest <= 0.0 => 0,
             _ if largest * factor < 1.0 => 3,
             _ => 4_usize.saturating_sub(whole).min(3),
@@ -170,6 +171,8 @@ mod tests {
         assert_eq!(written(Measure::Mass, &[0.0047, 0.0001]), ("g", vec!["4.700".into(), "0.100".into()]));
         assert_eq!(written(Measure::Mass, &[12_345.6]), ("kg", vec!["12\u{202f}346".into()]));
         assert_eq!(written(Measure::Containers, &[48.0, 3.0]), ("containers", vec!["48".into(), "3".into()]));
+        assert_eq!(written(Measure::Count, &[2.0, 0.0]).1, ["2", "0"]);
+        assert_eq!(written(Measure::Count, &[2.0, 1.056]).1, ["2.000", "1.056"]);
     }
 
     #[test]

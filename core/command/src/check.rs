@@ -4,6 +4,7 @@ use crate::input;
 use crate::output::{Refusal, print};
 use std::path::PathBuf;
 use std::process::ExitCode;
+use thimbleworth::log::checked;
 use thimbleworth::plan::Severity;
 use thimbleworth::report::problem_line;
 
@@ -14,7 +15,11 @@ pub(crate) struct Args {
 }
 
 pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
-    let account = input::account(&args.plan)?;
+    let mut account = input::account(&args.plan)?;
+    if let Some(plan) = &account.plan {
+        let logs = checked(plan, account.program.as_ref());
+        account.problems.extend(logs);
+    }
     let mut text = String::new();
     for problem in &account.problems {
         text.push_str(&problem_line(problem));

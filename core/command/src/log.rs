@@ -64,7 +64,7 @@ enum Format {
 
 pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
     if args.format == Format::Xlsx && args.output.is_none() {
-        return Err(Refusal::because("a workbook is no text for a terminal; name a file with --output"));
+        return Err(Refusal::because(workbook::NEEDS_FILE));
     }
     let account = input::account(&args.plan)?;
     let mut problems = Vec::new();

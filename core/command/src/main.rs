@@ -13,6 +13,7 @@ mod example;
 mod input;
 mod log;
 mod materials;
+mod mix;
 mod need;
 mod odds;
 mod output;
@@ -58,6 +59,8 @@ enum What {
     Waste(waste::Args),
     /// May this go into that container: codes gained, what must not meet, headspace
     Pour(pour::Args),
+    /// The mix of routes that lowers a figure most for what it costs
+    Mix(mix::Args),
     /// All errors and warnings of a plan; exit status 1 if there is an error
     Check(check::Args),
     /// The catalogue of materials, or all figures of one with their sources
@@ -94,6 +97,7 @@ fn main() -> ExitCode {
         Some(What::Trace(args)) => trace::run(args),
         Some(What::Waste(args)) => waste::run(args),
         Some(What::Pour(args)) => pour::run(args),
+        Some(What::Mix(args)) => mix::run(args),
         Some(What::Check(args)) => check::run(args),
         Some(What::Materials(args)) => materials::run(args),
         Some(What::Schema) => schema::run(),

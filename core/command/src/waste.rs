@@ -1,12 +1,13 @@
 //! `waste`: the papers of the waste desk.
 
 use crate::input;
-use crate::output::{Refusal, complain_of, deliver};
+use crate::output::{Refusal, complain_of, deliver, deliver_bytes};
+use crate::workbook;
 use clap::ValueEnum;
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use thimbleworth::account::{Account, site_desk};
-use thimbleworth::report::{PaperKind, paper, paper_csv, paper_markdown};
+use thimbleworth::report::{Paper, PaperKind, paper, paper_csv, paper_markdown};
 
 #[derive(clap::Args)]
 pub(crate) struct Args {
@@ -26,12 +27,14 @@ pub(crate) struct Args {
     output: Option<PathBuf>,
 }
 
-#[derive(Clone, Copy, ValueEnum)]
-enum Format {
+#[derive(Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum Format {
     /// Papers to read and to print
     Markdown,
     /// Their tables, for a spreadsheet
     Csv,
+    /// A workbook with a sheet a paper
+    Xlsx,
 }
 
 #[derive(Clone, Copy, PartialEq, Eq, ValueEnum)]
@@ -78,20 +81,32 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
     let routes = chosen(&account, &args.route)?;
     let desk = site_desk(&account, &routes).ok_or_else(|| Refusal::because("the plan has no program"))?;
     let asked = |k: &PaperKind| args.paper.is_empty() || args.paper.iter().any(|w| w.kind() == *k);
-    let papers = PaperKind::ALL.iter().filter(|k| asked(k)).filter_map(|k| paper(&account, &desk, *k));
-    let text: Vec<String> = papers
-        .map(|p| match args.format {
-            Format::Markdown => paper_markdown(&p),
-            Format::Csv => paper_csv(&p),
-        })
+    let papers: Vec<(&str, Paper)> = PaperKind::ALL
+        .iter()
+        .filter(|k| asked(k))
+        .filter_map(|k| Some((k.word(), paper(&account, &desk, *k)?)))
         .collect();
-    let between = match args.format {
-        Format::Markdown => "\n",
-        Format::Csv => "\r\n",
-    };
-    deliver(&text.join(between), args.output.as_deref(), &args.plan)?;
+    hand_over(&papers, args.format, args.output.as_deref(), &args.plan)?;
     complain_of(&account.problems);
     Ok(ExitCode::SUCCESS)
+}
+
+/// Papers in a format, each with the name of its sheet.
+pub(crate) fn hand_over(
+    papers: &[(&str, Paper)],
+    format: Format,
+    output: Option<&Path>,
+    plan: &Path,
+) -> Result<(), Refusal> {
+    let joined = |write: fn(&Paper) -> String, between: &str| {
+        papers.iter().map(|(_, paper)| write(paper)).collect::<Vec<_>>().join(between)
+    };
+    match format {
+        Format::Markdown => deliver(&joined(paper_markdown, "\n"), output, plan),
+        Format::Csv => deliver(&joined(paper_csv, "\r\n"), output, plan),
+        Format::Xlsx if output.is_none() => Err(Refusal::because(workbook::NEEDS_FILE)),
+        Format::Xlsx => deliver_bytes(&workbook::papers(papers).map_err(Refusal::because)?, output, plan),
+    }
 }
 
 /// The routes named on the command line, by workload.

@@ -118,6 +118,8 @@ pub struct MonthLine {
     pub kg: [f64; 12],
     /// Whether it counts towards the category.
     pub counted: bool,
+    /// What counts of it.
+    pub counts_kg: [f64; 12],
     /// Whether it is acutely hazardous.
     pub acute: bool,
     /// Why it counts or does not.
@@ -213,6 +215,7 @@ pub fn site_desk<'a>(account: &'a Account, routes: &[Option<usize>]) -> Option<S
                 work: Some((w, own.stream)),
                 kg: [0.0; 12],
                 counted,
+                counts_kg: [0.0; 12],
                 acute: desk.is_some_and(StreamDesk::acute),
                 why,
             };
@@ -226,12 +229,14 @@ pub fn site_desk<'a>(account: &'a Account, routes: &[Option<usize>]) -> Option<S
             work: None,
             kg: [0.0; 12],
             counted: true,
+            counts_kg: [0.0; 12],
             acute: other.acute,
             why: "as the plan says",
         };
         spread(&mut line.kg, &other.months, other.kg_each_month);
         lines.push(line);
     }
+    count(&mut lines, site);
     let made = made(&lines, None);
     let categories = (Rules::of(&site.rules) == Rules::Us).then(|| made.map(category));
     let room = if categories.is_some() { rooms(account, &chosen, &lines) } else { Vec::new() };
@@ -269,13 +274,41 @@ fn counting(desk: Option<&StreamDesk<'_>>, counted: Counted) -> (bool, &'static 
         (_, Counted::TreatedAtOnce) => {
             (false, "treated at once in a permitted unit and never stored: not counted (40 CFR 262.13(c))")
         }
+        (_, Counted::ReclaimedAtOnce) => (
+            false,
+            "reclaimed here without having been stored: not counted; its bottoms are, where they go (40 CFR 262.13(c))",
+        ),
         (_, Counted::Reclaimed) => (
             true,
-            "stored, then reclaimed here: the same solvent counts once in a calendar month, its bottoms not again (262.13(d)); without the stock that goes round, all of it is counted",
+            "stored, then reclaimed here: the same solvent counts once in a calendar month, its bottoms not again (262.13(d)); where the plan does not say how much goes round (goes_round), all of it is counted",
         ),
         (Some(Standing::UntilTested), _) => (true, "counted until a test clears it"),
         (Some(Standing::Hazardous), _) => {
             (true, "counted in the month in which it is made, satellite containers included, not at pick-up")
+        }
+    }
+}
+
+/// Says how much of each line counts: all of it, but of a reclaimed stream at most what goes round, each month once.
+fn count(lines: &mut [MonthLine], site: &SiteUse) {
+    for line in lines.iter_mut().filter(|l| l.counted) {
+        line.counts_kg = line.kg;
+    }
+    for (s, stream) in site.streams.iter().enumerate() {
+        let (Some(most), Counted::Reclaimed) = (stream.waste.goes_round_kg, stream.waste.counted) else {
+            continue;
+        };
+        let of = |l: &MonthLine| l.counted && l.work.is_some_and(|(_, stream)| stream == s);
+        for month in 0..12 {
+            let at = |kg: &[f64; 12]| kg.get(month).copied().unwrap_or(0.0);
+            let all = lines.iter().filter(|l| of(l)).fold(0.0, |sum, l| sum + at(&l.kg));
+            for line in lines.iter_mut().filter(|l| of(l) && all > most) {
+                // Each workload its part: mᵢ M / Σ m
+                let part = at(&line.kg) * most / all;
+                if let Some(kg) = line.counts_kg.get_mut(month) {
+                    *kg = part;
+                }
+            }
         }
     }
 }
@@ -285,7 +318,7 @@ fn made(lines: &[MonthLine], without: Option<usize>) -> [Made; 12] {
     let mut out = [Made::default(); 12];
     let own = |l: &MonthLine| without.is_some() && l.work.map(|(w, _)| w) == without;
     for line in lines.iter().filter(|l| l.counted && !own(l)) {
-        for (month, kg) in out.iter_mut().zip(line.kg) {
+        for (month, kg) in out.iter_mut().zip(line.counts_kg) {
             if line.acute {
                 month.acute_kg += kg;
             } else {
@@ -310,7 +343,7 @@ fn rooms(account: &Account, chosen: &[Option<Pouring<'_>>], lines: &[MonthLine])
             for line in
                 lines.iter().filter(|l| l.counted && !l.acute && l.work.map(|(own, _)| own) == Some(w))
             {
-                kg += line.kg.get(month).copied().unwrap_or(0.0);
+                kg += line.counts_kg.get(month).copied().unwrap_or(0.0);
             }
             let kg_each = kg / planned;
             if kg_each > 0.0 {
@@ -349,7 +382,7 @@ fn calendar_lines(site: &SiteUse, streams: &[StreamDesk<'_>], m3: &[[f64; 12]]) 
     for s in streams {
         let (Some(stream), Some(m3)) = (site.streams.get(s.stream), m3.get(s.stream)) else { continue };
         let Some(container_m3) = stream.container_m3 else { continue };
-        if stream.waste.counted == Counted::TreatedAtOnce {
+        if matches!(stream.waste.counted, Counted::TreatedAtOnce | Counted::ReclaimedAtOnce) {
             continue;
         }
         let density = if stream.solid { Some(stream.bulk_density_kg_m3) } else { s.contents.density_kg_m3() };

@@ -7,6 +7,7 @@ use super::coefficients::{
 use super::error::StateError;
 use super::fits::{LIQUID, LN_PRESSURE, PIECE, PIECE_ENDS, VAPOUR};
 use super::{HIGHEST_PRESSURE_PA, HIGHEST_TEMPERATURE_K};
+use crate::exponential::exp;
 
 /// Which fluid phase.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -79,7 +80,7 @@ impl OnSaturation {
 
     #[inline]
     pub(super) fn pressure_pa(&self) -> f64 {
-        CRITICAL_PRESSURE_PA * libm::exp(self.value(&LN_PRESSURE) * self.nearness)
+        CRITICAL_PRESSURE_PA * exp(self.value(&LN_PRESSURE) * self.nearness)
     }
 
     /// δ of the liquid.

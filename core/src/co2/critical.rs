@@ -3,25 +3,18 @@
 use super::coefficients::{CRITICAL_A, CRITICAL_B_SEVENTH, CRITICAL_B_SIXTH, CRITICAL_D, CRITICAL_TERMS};
 use super::helmholtz::Derivatives;
 use super::isotherm::DensityDerivatives;
+use crate::exponential::exp;
 
 /// Below this Δ its powers have vanished, and its logarithm is not taken.
 const VANISHED: f64 = 1e-200;
 
 /// What the terms need of the temperature.
 pub(super) struct CriticalIsotherm {
-    tau: f64,
+    pub(super) tau: f64,
     /// D (τ − 1)²
     pub(super) reach: f64,
     /// exp(−D (τ − 1)²)
-    temperature_part: f64,
-}
-
-impl CriticalIsotherm {
-    #[inline(always)]
-    pub(super) fn new(tau: f64) -> Self {
-        let reach = CRITICAL_D * (tau - 1.0) * (tau - 1.0);
-        Self { tau, reach, temperature_part: libm::exp(-reach) }
-    }
+    pub(super) temperature_part: f64,
 }
 
 /// θ and its first three derivatives in s = δ − 1.
@@ -29,7 +22,7 @@ impl CriticalIsotherm {
 fn theta(tau: f64, s: f64) -> [f64; 4] {
     // θ = (1 − τ) + A |s|^(10/3); the cube root of libm would cost a software fused multiply-add in WebAssembly
     let u = s * s;
-    let four_thirds = if u == 0.0 { 0.0 } else { libm::exp(2.0 / 3.0 * libm::log(u)) };
+    let four_thirds = if u == 0.0 { 0.0 } else { exp(2.0 / 3.0 * libm::log(u)) };
     let over_s = if u == 0.0 { 0.0 } else { four_thirds / s };
     [
         (1.0 - tau) + CRITICAL_A * four_thirds * u,
@@ -84,7 +77,7 @@ fn seven_eighths(x: f64) -> f64 {
 fn powers(distance: &[[f64; 4]; 2]) -> [f64; 3] {
     let first = seven_eighths(distance[0][0]);
     // Δ^0.925 = Δ^0.875 exp(0.05 ln Δ)
-    [first, first * libm::exp(0.05 * libm::log(distance[0][0])), seven_eighths(distance[1][0])]
+    [first, first * exp(0.05 * libm::log(distance[0][0])), seven_eighths(distance[1][0])]
 }
 
 /// First three derivatives of ln x, from x and its derivatives.
@@ -124,8 +117,20 @@ pub(super) fn add_to_isotherm(
     }
 }
 
-/// Adds the terms with their derivatives in both variables.
-pub(super) fn add_to_helmholtz(tau: f64, delta: f64, sum: &mut Derivatives) {
+/// D (τ − 1)²: how far away the critical point is in temperature.
+pub(super) fn reach(tau: f64) -> f64 {
+    CRITICAL_D * (tau - 1.0) * (tau - 1.0)
+}
+
+/// Adds the terms with their derivatives in both variables; `narrow` and `wide` are exp(−10 s²) and exp(−12.5 s²).
+pub(super) fn add_to_helmholtz(
+    at: &CriticalIsotherm,
+    delta: f64,
+    narrow: f64,
+    wide: f64,
+    sum: &mut Derivatives,
+) {
+    let tau = at.tau;
     let s = delta - 1.0;
     let t = tau - 1.0;
     let th = theta(tau, s);
@@ -134,9 +139,10 @@ pub(super) fn add_to_helmholtz(tau: f64, delta: f64, sum: &mut Derivatives) {
         return;
     }
     let power = powers(&distance);
-    for ((term, power), x) in CRITICAL_TERMS.iter().zip(power).zip([&distance[0], &distance[0], &distance[1]])
-    {
-        let value = term.factor * delta * power * libm::exp(-term.width * s * s - CRITICAL_D * t * t);
+    let common = delta * at.temperature_part;
+    let shapes = [(&distance[0], narrow), (&distance[0], narrow), (&distance[1], wide)];
+    for ((term, power), (x, shape)) in CRITICAL_TERMS.iter().zip(power).zip(shapes) {
+        let value = term.factor * common * power * shape;
         let inverse = 1.0 / x[0];
         let b = term.exponent;
         // Δ_τ = −2θ, Δ_ττ = 2, Δ_sτ = −2θ′

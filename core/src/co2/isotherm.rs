@@ -4,6 +4,7 @@ use super::coefficients::{
     CRITICAL_TEMPERATURE_K, GAS_CONSTANT_J_MOL_K, GAUSSIAN_TERMS, POWER_TERMS, REDUCING_DENSITY_MOL_M3,
 };
 use super::critical::{self, CriticalIsotherm};
+use crate::exponential::decays;
 
 /// Powers of the reduced temperature that the terms use, by multiplication only so that every machine rounds alike.
 pub(super) struct TauPowers {
@@ -84,20 +85,6 @@ fn moments<const N: usize>(terms: [(f64, f64, f64); N]) -> [f64; 4] {
     m
 }
 
-/// exp(−y) for y ≥ 0, by its series or as zero where that is exact to rounding: half of the calls, at a fraction of
-/// the time.
-#[inline(always)]
-fn decay(y: f64) -> f64 {
-    if y < 0.01 {
-        // The next term, y⁷/5040, is below 2e-18.
-        1.0 - y * (1.0 - y / 2.0 * (1.0 - y / 3.0 * (1.0 - y / 4.0 * (1.0 - y / 5.0 * (1.0 - y / 6.0)))))
-    } else if y < NEGLIGIBLE + 14.0 {
-        libm::exp(-y)
-    } else {
-        0.0
-    }
-}
-
 /// An isotherm.
 pub(super) struct Isotherm {
     /// ρ_c R T, the pressure by which pressures are reduced, Pa.
@@ -132,13 +119,13 @@ impl Isotherm {
         // n τᵗ of the term at `i`. The numbers are written out so that the compiler folds the table away; that they
         // name the right terms shows in the comparison with a term-by-term evaluation.
         let n = |i: usize| POWER_TERMS[i].factor * powers.at(POWER_TERMS[i].tau, POWER_TERMS[i].tau_quarters);
-        // exp(−β (τ − γ)²) of the Gaussian term at `i`
-        let bell = |i: usize| {
+        // exp(−β (τ − γ)²) of the Gaussian terms, of which the second and the third share β and γ, and of the critical ones
+        let exponent = |i: usize| {
             let away = tau - GAUSSIAN_TERMS[i].gamma;
-            let exponent = GAUSSIAN_TERMS[i].beta * away * away;
-            // The largest factor, 2.7e4, is worth 10 in the exponent.
-            if exponent < NEGLIGIBLE + 10.0 { libm::exp(-exponent) } else { 0.0 }
+            GAUSSIAN_TERMS[i].beta * away * away
         };
+        let reach = critical::reach(tau);
+        let bells = decays([exponent(0), exponent(1), exponent(3), exponent(4), reach]);
         let g = |i: usize| GAUSSIAN_TERMS[i].factor * powers.at(GAUSSIAN_TERMS[i].tau, 0);
         Self {
             unit_pa: REDUCING_DENSITY_MOL_M3 * GAS_CONSTANT_J_MOL_K * temperature_k,
@@ -149,9 +136,8 @@ impl Isotherm {
             fourth: [n(26) + n(27), n(28), n(29), n(30), n(31)],
             fifth: n(32),
             sixth: n(33),
-            // The second and third term share β and γ.
-            gaussians: [g(0) * bell(0) + (g(1) + g(2)) * bell(1), g(3) * bell(3), g(4) * bell(4)],
-            critical: CriticalIsotherm::new(tau),
+            gaussians: [g(0) * bells[0] + (g(1) + g(2)) * bells[1], g(3) * bells[2], g(4) * bells[3]],
+            critical: CriticalIsotherm { tau, reach, temperature_part: bells[4] },
         }
     }
 
@@ -165,28 +151,28 @@ impl Isotherm {
         let d6 = d3 * d3;
         let (d7, d8, d10) = (d4 * d3, d4 * d4, d5 * d5);
 
+        let s = delta - 1.0;
+        let u = s * s;
+        let [e1, e2, e3, e4, e5, e6, w] = decays([delta, d2, d3, d4, d5, d6, 2.5 * u]);
         let c = &self.plain;
         let m = moments([(c[0], 1.0, delta), (c[1], 2.0, d2), (c[2], 3.0, d3)]);
         let mut sum = DensityDerivatives { first: m[1], second: m[2], third: m[3] };
         let c = &self.first;
         let terms = [(c[0], 1.0, delta), (c[1], 2.0, d2), (c[2], 4.0, d4), (c[3], 5.0, d5), (c[4], 6.0, d6)];
-        sum.add_block(1.0, delta, decay(delta), moments(terms));
+        sum.add_block(1.0, delta, e1, moments(terms));
         let c = &self.second;
         let terms = [(c[0], 1.0, delta), (c[1], 4.0, d4), (c[2], 7.0, d7), (c[3], 8.0, d8)];
-        sum.add_block(2.0, d2, decay(d2), moments(terms));
+        sum.add_block(2.0, d2, e2, moments(terms));
         let c = &self.third;
-        sum.add_block(3.0, d3, decay(d3), moments([(c[0], 2.0, d2), (c[1], 3.0, d3)]));
+        sum.add_block(3.0, d3, e3, moments([(c[0], 2.0, d2), (c[1], 3.0, d3)]));
         let c = &self.fourth;
         let terms = [(c[0], 5.0, d5), (c[1], 6.0, d6), (c[2], 7.0, d7), (c[3], 8.0, d8), (c[4], 10.0, d10)];
-        sum.add_block(4.0, d4, decay(d4), moments(terms));
-        sum.add_block(5.0, d5, decay(d5), moments([(self.fifth, 4.0, d4)]));
-        sum.add_block(6.0, d6, decay(d6), moments([(self.sixth, 8.0, d8)]));
+        sum.add_block(4.0, d4, e4, moments(terms));
+        sum.add_block(5.0, d5, e5, moments([(self.fifth, 4.0, d4)]));
+        sum.add_block(6.0, d6, e6, moments([(self.sixth, 8.0, d8)]));
 
-        let s = delta - 1.0;
-        let u = s * s;
         if self.critical.reach + 10.0 * u < NEGLIGIBLE + 20.0 {
             // η = 25, 15, 20 and C = 10, 12.5 are the 10th, 6th, 8th, 4th and 5th power of one exponential.
-            let w = libm::exp(-2.5 * u);
             let w2 = w * w;
             let w4 = w2 * w2;
             let w6 = w4 * w2;
@@ -221,14 +207,6 @@ impl Isotherm {
 #[cfg(test)]
 mod tests {
     use super::*;
-
-    #[test]
-    fn the_series_of_the_exponential_meets_it() {
-        for y in [0.0, 1e-9, 1e-4, 0.005, 0.009_999, 0.01, 1.0, 59.0] {
-            assert!((decay(y) - libm::exp(-y)).abs() <= 2.3e-16, "{y}");
-        }
-        assert!(libm::exp(-60.0) < 1e-26 && decay(60.0) == 0.0);
-    }
 
     #[test]
     fn every_power_that_a_term_asks_for_is_there() {

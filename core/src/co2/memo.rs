@@ -4,7 +4,8 @@
 //! state, bit for bit. The calls of a run come in the same order in every draw, so each call keeps one state in a place of
 //! its own: what is exact is solved once, what is uncertain takes no other's place.
 use super::{
-    Equilibrium, Phase, StateError, boundary, equilibrium, inverse, saturation_pressure_pa, thermal,
+    Equilibrium, Phase, StateError, boundary, density_kg_m3, equilibrium, inverse, saturation_pressure_pa,
+    thermal,
 };
 
 /// Values by the bits of what they follow from, one place for each call of a run.
@@ -56,6 +57,7 @@ impl<const N: usize, V: Copy> Kept<N, V> {
 /// ```
 #[derive(Clone, Debug, Default)]
 pub struct Memo {
+    densities: Kept<2, f64>,
     states: Kept<2, Equilibrium>,
     liquids: Kept<1, Equilibrium>,
     lifts: Kept<3, f64>,
@@ -66,6 +68,7 @@ impl Memo {
     #[must_use]
     pub fn with_room(calls: usize) -> Self {
         let mut memo = Self::default();
+        memo.densities.rows.resize(calls, None);
         memo.states.rows.resize(calls, None);
         memo.liquids.rows.resize(calls, None);
         memo.lifts.rows.resize(calls, None);
@@ -74,6 +77,7 @@ impl Memo {
 
     /// Begins a run: the next call is its first.
     pub fn begin(&mut self) {
+        self.densities.next = 0;
         self.states.next = 0;
         self.liquids.next = 0;
         self.lifts.next = 0;
@@ -88,12 +92,12 @@ impl Memo {
         self.states.find([temperature_k, pressure_pa], || Ok(equilibrium(temperature_k, pressure_pa)?.0))
     }
 
-    /// The density there, kg/m³.
+    /// The density there, kg/m³: for a state of which nothing else is asked, at half the cost of [`Memo::state`].
     ///
     /// # Errors
     /// As for [`state`](super::state).
     pub fn density_kg_m3(&mut self, temperature_k: f64, pressure_pa: f64) -> Result<f64, StateError> {
-        Ok(self.state(temperature_k, pressure_pa)?.density_kg_m3)
+        self.densities.find([temperature_k, pressure_pa], || density_kg_m3(temperature_k, pressure_pa))
     }
 
     /// The liquid of [`saturated_states`](super::saturated_states) at a temperature, K.
@@ -135,6 +139,7 @@ mod tests {
             // An exact state between two that change, one of which is asked for twice.
             for (t, p) in [(t, 30e6), (278.15, 6e6), (t, 30e6), (t + 5.0, 5e6)] {
                 assert_eq!(memo.state(t, p), state(t, p).map(Into::into));
+                assert_eq!(memo.density_kg_m3(t, p), density_kg_m3(t, p));
             }
             assert_eq!(
                 memo.saturated_liquid(280.0 + t / 100.0),

@@ -96,15 +96,18 @@ fn basis(x: f64) -> [f64; SHEET] {
 #[inline]
 fn sheet(coefficients: &[[f64; SHEET]; SHEET], a: f64, y: f64) -> f64 {
     let (across, along) = (basis(a), basis(y));
-    let mut sum = 0.0;
+    // Row by row into ten sums, which do not wait for one another.
+    let mut sums = [0.0; SHEET];
     for (row, t) in coefficients.iter().zip(across) {
-        let mut part = 0.0;
-        for (c, u) in row.iter().zip(along) {
-            part += c * u;
+        for (sum, c) in sums.iter_mut().zip(row) {
+            *sum += c * t;
         }
-        sum += part * t;
     }
-    sum
+    let mut whole = 0.0;
+    for (sum, u) in sums.iter().zip(along) {
+        whole += sum * u;
+    }
+    whole
 }
 
 #[cfg(test)]

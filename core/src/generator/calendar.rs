@@ -4,6 +4,11 @@ use super::days::{MONTHS, month_of};
 
 /// Days simulated.
 const YEAR: u16 = 365;
+/// What a satellite area may hold, all of its streams together: 55 gal of 3.785 411 784 L (NIST SP 811); m³. An area of
+/// acutely hazardous waste holds a quart, which is not kept here.
+pub const SATELLITE_M3: f64 = 55.0 * 3.785_411_784e-3;
+/// Days in which what is above that is moved.
+pub const SATELLITE_DAYS: u16 = 3;
 /// A container fuller than this share of its content counts as full: what is missing is rounding.
 const FULL: f64 = 1.0 - 1e-9;
 /// No stream fills more containers in a year: beyond that the plan has gone wrong.
@@ -94,6 +99,9 @@ pub struct Calendar {
     pub too_much: Vec<u16>,
     /// Indices of containers that stayed longer than allowed.
     pub too_long: Vec<usize>,
+    /// Containers that left the satellite area before they were full, because the area held too much: the day, which is marked
+    /// on them, and their indices. They are gone from it three days later at the latest.
+    pub excess: Vec<(u16, usize)>,
 }
 
 /// Runs a year.
@@ -133,6 +141,7 @@ pub fn simulate(lines: &[Line], storage: &Storage, pick_ups: PickUps) -> Calenda
         for (l, line) in lines.iter().enumerate() {
             fill(&mut out, (l, line), storage, &mut open, day);
         }
+        excess(&mut out, lines, storage, &mut open, day);
         let kg = on_hand(&out, lines);
         out.on_hand_kg.push(kg);
         if storage.kg.get(month).copied().flatten().is_some_and(|most| kg > most) {
@@ -145,6 +154,29 @@ pub fn simulate(lines: &[Line], storage: &Storage, pick_ups: PickUps) -> Calenda
         }
     }
     out
+}
+
+/// Moves the fullest containers out of a satellite area that holds more than it may: their time counts from this day.
+fn excess(year: &mut Calendar, lines: &[Line], storage: &Storage, open: &mut [Option<usize>], day: u16) {
+    loop {
+        let (mut all, mut fullest): (f64, Option<(usize, f64)>) = (0.0, None);
+        for (line, slot) in lines.iter().zip(open.iter()) {
+            let Some(at) = slot.filter(|_| line.clock == Clock::WhenFull) else { continue };
+            let m3 = year.containers.get(at).map_or(0.0, |c| c.m3);
+            all += m3;
+            if fullest.is_none_or(|(_, most)| m3 > most) {
+                fullest = Some((at, m3));
+            }
+        }
+        let Some((at, _)) = fullest.filter(|_| all > SATELLITE_M3 * (1.0 + 1e-9)) else { return };
+        let Some(c) = year.containers.get_mut(at) else { return };
+        (c.closed, c.from) = (Some(day), Some(day));
+        c.until = storage.days.get(month_of(day).0).copied().flatten().map(|days| day.saturating_add(days));
+        if let Some(slot) = open.get_mut(c.line) {
+            *slot = None;
+        }
+        year.excess.push((day, at));
+    }
 }
 
 fn rate(line: &Line, day: u16) -> f64 {
@@ -291,6 +323,42 @@ mod tests {
         let first = &year.containers[0];
         assert_eq!((first.opened, first.from, first.until), (0, first.closed, first.closed.map(|d| d + 180)));
         assert_eq!(year.pick_ups[0].day, first.until.unwrap());
+    }
+
+    /// Three streams, none of which fills its 200 L drum before together they hold 55 gal = 208.2 L: the fullest leaves then.
+    #[test]
+    fn more_than_55_gallons_leave_the_satellite_area() {
+        let storage = Storage { days: [Some(180); 12], kg: [None; 12] };
+        let lines = [0.03, 0.02, 0.01].map(|m3| line(m3, 0.19, Clock::WhenFull));
+        let year = simulate(&lines, &storage, PickUps::Fewest);
+        // 0.06 m³ a month: 0.2082 m³ are there after about 3.5 months, day 105
+        let (day, at) = year.excess[0];
+        assert!((102..=108).contains(&day), "{day}");
+        let first = &year.containers[at];
+        assert_eq!((first.line, first.from, first.until), (0, Some(day), Some(day + 180)));
+        // On no day do open containers hold more at its end.
+        for day in 0..YEAR {
+            let mut open = 0.0;
+            for c in year
+                .containers
+                .iter()
+                .filter(|c| c.closed.is_none_or(|closed| closed > day) && c.opened <= day)
+            {
+                // What it holds by then, in equal parts of a month.
+                let (mut m3, mut d) = (0.0, c.opened);
+                while d <= day {
+                    m3 += rate(&lines[c.line], d);
+                    d += 1;
+                }
+                open += if m3 < 0.19 { m3 } else { 0.19 };
+            }
+            assert!(open <= SATELLITE_M3 + 2e-3, "{open} on day {day}");
+        }
+        // One drum alone is full before: nothing is in excess.
+        assert_eq!(simulate(&lines[..1], &storage, PickUps::Fewest).excess, []);
+        // At first drop there is no satellite area.
+        let central = lines.map(|l| Line { clock: Clock::FirstDrop, ..l });
+        assert_eq!(simulate(&central, &storage, PickUps::Fewest).excess, []);
     }
 
     /// 1000 kg on site at 300 kg a month is reached in the fourth month, whatever the time.

@@ -7,6 +7,8 @@ mod calendar;
 mod category;
 mod days;
 
-pub use calendar::{Calendar, Clock, Container, Line, PickUp, PickUps, Storage, simulate};
+pub use calendar::{
+    Calendar, Clock, Container, Line, PickUp, PickUps, SATELLITE_DAYS, SATELLITE_M3, Storage, simulate,
+};
 pub use category::{CATEGORY, Category, Made, SATELLITE, STORAGE, category, headroom};
 pub use days::{MONTH_NAMES, MONTHS, date_of, month_of};

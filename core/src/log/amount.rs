@@ -1,6 +1,7 @@
 //! Amounts in the cells of a table: a number, with its unit in the cell, in a column of its own or in the heading.
 
 use super::{Change, Why};
+use crate::letter::is_letter;
 use crate::quantity::{AmountError, Kind, Spread, known_unit, read};
 
 /// Which sign is the decimal one.
@@ -256,7 +257,7 @@ fn close_look(cell: &[u8], decimals: Decimals, beside: Option<&LogUnit>) -> Resu
     }
     let (sign, number, bracketed) = signed(&text);
     let (number, change) = without_thousands(number, decimals);
-    let bare = !number.contains(|c: char| c.is_alphabetic() && c != 'e' && c != 'E');
+    let bare = !number.contains(|c: char| is_letter(c) && c != 'e' && c != 'E');
     let number = match beside {
         Some(unit) if bare => {
             let mut with = number;

@@ -1,6 +1,7 @@
 //! What stands in which column: guessed from the headings, shown, changed by the user, kept in the plan.
 
 use super::{DayOrder, Decimals, LogUnit};
+use crate::letter::{is_letter, small, small_text};
 use crate::plan::{Log, Problem, below};
 use crate::quantity::{Kind, Spread, read};
 
@@ -443,7 +444,7 @@ fn taken_apart(heading: &str) -> (Vec<String>, Option<LogUnit>) {
         match LogUnit::named(word) {
             // The first word says what it is: "g" alone is no heading.
             Some(found) if !words.is_empty() => unit = Some(found),
-            _ => words.push(word.to_lowercase().replace('-', "")),
+            _ => words.push(word.chars().filter(|c| *c != '-').map(small).collect()),
         }
     }
     (words, unit)
@@ -475,8 +476,11 @@ pub(super) fn recognised(cells: &[&str]) -> usize {
 #[must_use]
 pub fn guess(name: &str, headings: &[&str]) -> Option<Mapping> {
     let apart: Vec<(Vec<String>, Option<LogUnit>)> = headings.iter().map(|h| taken_apart(h)).collect();
-    let named: Vec<String> =
-        name.split(|c: char| !c.is_alphanumeric()).filter(|w| !w.is_empty()).map(str::to_lowercase).collect();
+    let named: Vec<String> = name
+        .split(|c: char| !(is_letter(c) || c.is_ascii_digit()))
+        .filter(|w| !w.is_empty())
+        .map(small_text)
+        .collect();
     let mut best: Option<(Register, usize)> = None;
     let mut even = false;
     for register in Register::ALL {

@@ -1,6 +1,7 @@
 //! Calendar days as people and programs write them.
 
 use super::{Change, Why};
+use crate::letter::{is_letter, small_text};
 
 /// A day of the Gregorian calendar between 1990 and 2099; ordered as time goes.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
@@ -159,8 +160,8 @@ pub(super) fn day(text: &str, order: DayOrder) -> Result<(Day, Option<Change>), 
             rest = rest.get(digits..).unwrap_or_default();
             Part::Number(number, u8::try_from(digits).unwrap_or(u8::MAX))
         } else {
-            let letters: usize = rest.chars().take_while(|c| c.is_alphabetic()).map(char::len_utf8).sum();
-            let name = rest.get(..letters).unwrap_or_default().to_lowercase();
+            let letters: usize = rest.chars().take_while(|c| is_letter(*c)).map(char::len_utf8).sum();
+            let name = small_text(rest.get(..letters).unwrap_or_default());
             let month = MONTHS.iter().position(|names| names.iter().any(|n| name.starts_with(n)));
             rest = rest.get(letters..).unwrap_or_default();
             Part::Month(u8::try_from(month.ok_or(Why::NotADate)? + 1).unwrap_or(0))

@@ -1,11 +1,12 @@
 //! What the names in a file mean: materials of the plan and the catalogue, streams of the site, routes of the work.
 
+use super::places::{Places, hash};
 use super::why::quoted;
 use super::{Change, Why};
+use crate::letter::{is_letter, small};
 use crate::material::{Class, Substance};
 use crate::plan::Plan;
 use crate::program::{MaterialBook, Program};
-use std::collections::BTreeMap;
 use std::sync::Arc;
 
 /// Names kept so that they are looked up once.
@@ -66,9 +67,13 @@ pub struct Names {
     pub streams: Vec<String>,
     /// The routes of the work.
     pub routes: Vec<LogRoute>,
+    /// The site and the date of the plan, as a paper says them.
+    pub heading: String,
     /// The present routes, a workload each, as indices of `routes`.
     present: Vec<u16>,
-    kept: BTreeMap<Vec<u8>, usize>,
+    kept: Places,
+    /// The keys of what was looked up.
+    keys: Vec<Vec<u8>>,
     found: Vec<Found>,
     suggestions: u32,
 }
@@ -95,8 +100,17 @@ impl Names {
             materials: Vec::new(),
             streams: program.site.streams.iter().map(|s| s.name.clone()).collect(),
             routes,
+            heading: [
+                "Site: ",
+                &program.site.name,
+                "; as of ",
+                program.site.as_of.as_deref().unwrap_or("no date"),
+                ". Help for a licensed person; local codes and licensed practice decide.",
+            ]
+            .concat(),
             present,
-            kept: BTreeMap::new(),
+            kept: Places::default(),
+            keys: Vec::new(),
             found: Vec::new(),
             suggestions: 0,
         }
@@ -134,19 +148,23 @@ impl Names {
         key.extend_from_slice(first);
         key.push(0);
         key.extend_from_slice(second);
-        let at = match self.kept.get(key.as_slice()) {
-            Some(at) => *at,
-            None => {
-                let found = self.resolve(ask, first, second, means);
-                if self.found.len() >= MOST_KEPT {
-                    self.turn_page();
-                }
-                self.found.push(found);
-                self.kept.insert(key.clone(), self.found.len() - 1);
-                self.found.len() - 1
+        let hash = hash(key, &[]);
+        let at = self.kept.find(hash, &|at| self.keys.get(at) == Some(key)).unwrap_or_else(|| {
+            let found = self.resolve(ask, first, second, means);
+            if self.found.len() >= MOST_KEPT {
+                self.turn_page();
             }
-        };
+            self.found.push(found);
+            self.keys.push(key.clone());
+            self.kept.add(hash)
+        });
         &mut self.found[at]
+    }
+
+    /// Whether anything in the plan or the catalogue has this name.
+    pub(super) fn has(&mut self, name: &str) -> bool {
+        let name = name.as_bytes();
+        [MATERIAL, STREAM, ROUTE].iter().any(|ask| self.resolve(*ask, name, b"", &[]).index.is_ok())
     }
 
     /// The present routes, a workload each.
@@ -157,6 +175,7 @@ impl Names {
     /// Forgets what names mean in the file that was read: the next one has its own mapping.
     pub(super) fn turn_page(&mut self) {
         self.kept.clear();
+        self.keys.clear();
         self.found.clear();
     }
 
@@ -260,6 +279,10 @@ impl Names {
     }
 
     fn unknown(&mut self, name: &str) -> Found {
+        // What names several things is never guessed, nor answered with what is merely spelt alike.
+        if let Some((_, several)) = SEVERAL.iter().find(|(word, _)| same(word, name)) {
+            return Found { detail: (*several).to_owned(), ..Found::refused(Why::UnknownMaterial, "") };
+        }
         if self.suggestions >= MOST_SUGGESTIONS {
             return Found::refused(Why::UnknownMaterial, "");
         }
@@ -268,6 +291,25 @@ impl Names {
         Found::refused(Why::UnknownMaterial, &near.unwrap_or_default())
     }
 }
+
+/// Words of ledgers that stand for several materials, with those that may be meant (common practice, no source). German
+/// "Benzin" is petrol, and no benzene.
+const SEVERAL: [(&str, &str); 14] = [
+    ("benzin", "petroleum ether, n-hexane or n-heptane"),
+    ("benzine", "petroleum ether, n-hexane or n-heptane"),
+    ("waschbenzin", "petroleum ether, n-hexane or n-heptane"),
+    ("naphtha", "petroleum ether, n-hexane or n-heptane"),
+    ("white spirit", "a material of your own: it is a boiling range"),
+    ("alcohol", "ethanol, methanol or 2-propanol"),
+    ("alkohol", "ethanol, methanol or 2-propanol"),
+    ("spiritus", "ethanol, or a material of your own where it is denatured"),
+    ("propanol", "1-propanol or 2-propanol"),
+    ("butanol", "1-butanol, 2-butanol, isobutanol or tert-butanol"),
+    ("tri", "trichloroethylene or 1,1,1-trichloroethane"),
+    ("per", "tetrachloroethylene"),
+    ("dichloroethane", "1,2-dichloroethane, or 1,1-dichloroethane as a material of your own"),
+    ("glycol", "ethylene glycol, or another one as a material of your own"),
+];
 
 fn is_voc(substance: &Substance) -> bool {
     let carbon = substance.elements().is_none_or(|e| e.is_ok_and(|e| e.count("C") > 0));
@@ -299,7 +341,7 @@ pub(super) const ROUTE: u8 = b'r';
 /// Whether two names are the same but for case, spaces and marks.
 fn same(a: &str, b: &str) -> bool {
     let letters = |text: &str| -> String {
-        text.chars().filter(|c| c.is_alphanumeric()).flat_map(char::to_lowercase).collect()
+        text.chars().filter(|c| is_letter(*c) || c.is_ascii_digit()).map(small).collect()
     };
     let a = letters(a);
     !a.is_empty() && a == letters(b)
@@ -343,7 +385,7 @@ fn is_grade(word: &str) -> bool {
         "drum",
         "uhplc",
     ];
-    let letters: String = word.chars().filter(|c| c.is_alphabetic()).flat_map(char::to_lowercase).collect();
+    let letters: String = word.chars().filter(|c| is_letter(*c)).map(small).collect();
     letters.is_empty()
         || GRADES.contains(&letters.as_str())
         || (word.contains(|c: char| c.is_ascii_digit()) && super::LogUnit::named(&letters).is_some())
@@ -403,6 +445,11 @@ mod tests {
             ("", "67-64-1", "acetone", None),
             ("DCM", "", "dichloromethane", Some(Change::Synonym)),
             ("Acetone HPLC grade, 2.5 L", "", "acetone", Some(Change::NameRead)),
+            ("Dichlormethan", "", "dichloromethane", Some(Change::Synonym)),
+            ("Essigsäureethylester zur Analyse", "", "ethyl acetate", Some(Change::NameRead)),
+            ("n-Hexan", "", "n-hexane", Some(Change::Synonym)),
+            ("Toluol", "", "toluene", Some(Change::Synonym)),
+            ("Isopropanol", "", "2-propanol", Some(Change::Synonym)),
             ("Dichloromethane (75-09-2) for residue analysis", "", "dichloromethane", Some(Change::NameRead)),
             ("n-Hexane >=99% GC", "", "n-hexane", Some(Change::NameRead)),
             ("Toluol p.a.", "108-88-3", "toluene", Some(Change::NameRead)),
@@ -432,6 +479,18 @@ mod tests {
         }
         assert!(count > 40);
         assert!(!cas_holds("67-64-2") && !cas_holds("67641") && !cas_holds("1-2-3-4") && !cas_holds(""));
+    }
+
+    #[test]
+    fn a_word_for_several_things_is_asked_and_never_guessed() {
+        let mut names = names();
+        for (word, several) in SEVERAL {
+            // The catalogue must not know it, or it would be taken before.
+            let found = names.look_up(MATERIAL, (word.as_bytes(), b""), &[], &mut Vec::new()).clone();
+            assert_eq!((found.index, found.detail.as_str()), (Err(Why::UnknownMaterial), several));
+        }
+        let petrol = names.look_up(MATERIAL, ("Benzin".as_bytes(), b""), &[], &mut Vec::new()).detail.clone();
+        assert!(!petrol.contains("benzene"), "{petrol}");
     }
 
     #[test]

@@ -1,6 +1,6 @@
 //! What the plan's routes post for the work that was really done, with the spread of its inputs.
 
-use super::{Done, Names};
+use super::{Done, LogRoute, Names};
 use crate::chance::Draw;
 use crate::ledger::{Direction, Material, Place};
 use crate::program::{Desk, Program, RouteProgram};
@@ -96,8 +96,9 @@ impl PeriodPostings {
 }
 
 /// One route of the plan with its desk and the materials of [`Names`] that its own stand for.
-struct Route<'p> {
-    program: &'p RouteProgram,
+struct Route {
+    workload: usize,
+    route: usize,
     desk: Desk,
     x: Vec<f64>,
     index: Vec<usize>,
@@ -111,60 +112,82 @@ pub(super) enum Work {
     Planned(f64),
 }
 
-/// What the routes of a plan post in several periods and in all of them together.
-///
-/// `work` says for each period how much of each route (an index of [`Names::routes`]) was done. Returned are the
-/// postings of each period, then those of all; routes that cannot run are told by their index.
-pub(super) fn postings(
-    program: &Program,
-    names: &mut Names,
-    work: &[Vec<(u16, Work)>],
-) -> (Vec<PeriodPostings>, Vec<u16>) {
-    let mut routes: Vec<Option<Route<'_>>> = Vec::new();
-    for i in 0..names.routes.len() {
-        let place = &names.routes[i];
-        let route = program.workloads.get(place.workload).and_then(|w| w.routes.get(place.route));
-        routes.push(route.map(|program| Route {
-            index: program.materials.iter().map(|m| usize::from(names.add(&m.substance))).collect(),
-            desk: program.desk(),
-            x: program.central(),
-            program,
-        }));
+/// What the routes of a plan post in several periods and in all of them together, draw by draw, so that no caller has to
+/// wait for all of them.
+pub(super) struct Postings {
+    materials: usize,
+    streams: usize,
+    routes: Vec<Option<Route>>,
+    work: Vec<Vec<(u16, Work)>>,
+    draw: u64,
+    /// The postings of each period, then those of all.
+    pub(super) periods: Vec<PeriodPostings>,
+    /// Routes that cannot run, by their index.
+    pub(super) stopped: Vec<u16>,
+}
+
+impl Postings {
+    /// `work` says for each period how much of each route (an index of [`Names::routes`]) was done.
+    pub(super) fn begin(program: &Program, names: &mut Names, work: Vec<Vec<(u16, Work)>>) -> Self {
+        let mut routes: Vec<Option<Route>> = Vec::new();
+        for i in 0..names.routes.len() {
+            let LogRoute { workload, route, .. } = names.routes[i];
+            let found = program.workloads.get(workload).and_then(|w| w.routes.get(route));
+            routes.push(found.map(|program| Route {
+                workload,
+                route,
+                index: program.materials.iter().map(|m| usize::from(names.add(&m.substance))).collect(),
+                desk: program.desk(),
+                x: Vec::new(),
+            }));
+        }
+        let (materials, streams) = (names.materials.len(), names.streams.len());
+        let empty = || PeriodPostings {
+            materials,
+            runs: vec![Run::default(); materials * Posted::COUNT],
+            shares: vec![Run::default(); materials * streams],
+        };
+        let periods = (0..=work.len()).map(|_| empty()).collect();
+        Self { materials, streams, routes, work, draw: 0, periods, stopped: Vec::new() }
     }
-    let (materials, streams) = (names.materials.len(), names.streams.len());
-    let empty = || PeriodPostings {
-        materials,
-        runs: vec![Run::default(); materials * Posted::COUNT],
-        shares: vec![Run::default(); materials * streams],
-    };
-    let mut out: Vec<PeriodPostings> = (0..=work.len()).map(|_| empty()).collect();
-    let mut stopped: Vec<u16> = Vec::new();
-    let cells = materials * Posted::COUNT;
-    for draw in 0..=DRAWS {
+
+    /// The next draw; `true` once there is none left.
+    pub(super) fn step(&mut self, program: &Program) -> bool {
+        let (materials, streams, draw) = (self.materials, self.streams, self.draw);
+        if draw > DRAWS {
+            return true;
+        }
+        let cells = materials * Posted::COUNT + materials * streams;
         // The last row is for all periods together.
-        let mut all = vec![0.0; cells + materials * streams];
-        for (period, done) in work.iter().enumerate() {
-            let mut here = vec![0.0; cells + materials * streams];
+        let mut all = vec![0.0; cells];
+        for (period, done) in self.work.iter().enumerate() {
+            let mut here = vec![0.0; cells];
             for (place, work) in done {
-                let Some(Some(route)) = routes.get_mut(usize::from(*place)) else { continue };
-                match route.run(draw, work) {
+                let Some(Some(route)) = self.routes.get_mut(usize::from(*place)) else { continue };
+                match route.run(program, draw, work) {
                     Some(years) => route.add(years, &mut here, materials, streams),
-                    None if draw == 0 && !stopped.contains(place) => stopped.push(*place),
+                    None if draw == 0 && !self.stopped.contains(place) => self.stopped.push(*place),
                     None => {}
                 }
             }
             for (sum, part) in all.iter_mut().zip(&here) {
                 *sum += part;
             }
-            if let Some(period) = out.get_mut(period) {
+            if let Some(period) = self.periods.get_mut(period) {
                 period.take(draw, &here, streams);
             }
         }
-        if let Some(last) = out.last_mut() {
+        if let Some(last) = self.periods.last_mut() {
             last.take(draw, &all, streams);
         }
+        self.draw += 1;
+        self.draw > DRAWS
     }
-    (out, stopped)
+
+    /// How many periods there are beside the whole.
+    pub(super) fn count(&self) -> usize {
+        self.work.len()
+    }
 }
 
 impl PeriodPostings {
@@ -191,29 +214,31 @@ impl PeriodPostings {
     }
 }
 
-impl Route<'_> {
+impl Route {
     /// Runs one draw; the years of work for which its yearly figures stand, or `None` where it stops.
-    fn run(&mut self, draw: u64, work: &Work) -> Option<f64> {
-        if draw == 0 {
-            self.x = self.program.central();
-        } else {
-            self.program.draw_into(SEED, draw, &mut self.x);
+    fn run(&mut self, program: &Program, draw: u64, work: &Work) -> Option<f64> {
+        let program = program.workloads.get(self.workload)?.routes.get(self.route)?;
+        if draw == 0 || self.x.is_empty() {
+            self.x = program.central();
+        }
+        if draw > 0 {
+            program.draw_into(SEED, draw, &mut self.x);
         }
         let years = match work {
             Work::Planned(years) => *years,
             Work::Logged(done, years) => {
-                self.as_logged(done, *years)?;
+                self.as_logged(program, done, *years)?;
                 *years
             }
         };
-        self.program.run(Draw(&self.x), &mut self.desk, None).ok()?;
+        program.run(Draw(&self.x), &mut self.desk, None).ok()?;
         Some(years)
     }
 
     /// Puts the logged work in place of the plan's, as a rate a year. Repeats are extractions like others: they stand
     /// in the log.
-    fn as_logged(&mut self, done: &Done, years: f64) -> Option<()> {
-        let work = self.program.work;
+    fn as_logged(&mut self, program: &RouteProgram, done: &Done, years: f64) -> Option<()> {
+        let work = program.work;
         let get = |x: &[f64], slot: crate::chance::In| x.get(slot.0 as usize).copied();
         let (samples, controls) = (get(&self.x, work.batch_samples)?, get(&self.x, work.batch_controls)?);
         let extractions = done.extractions / years;

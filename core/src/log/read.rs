@@ -490,9 +490,11 @@ impl State {
                     return Err((Why::Negative, self.places.amount, String::new()));
                 }
                 let (kg, m3) = as_mass(names, index.0, value);
-                let key = Key { month: date.month_index(), material: index.0, stream: index.1 };
-                if register == Register::Stock {
-                    self.tally.shelf(index.0, date, kg, m3);
+                let stock = register == Register::Stock;
+                let day = if stock { date.day } else { 0 };
+                let key = Key { month: date.month_index(), day, material: index.0, stream: index.1 };
+                if stock {
+                    self.tally.shelf(key, kg, m3);
                 } else {
                     self.tally.amount(key, kg, m3);
                 }
@@ -642,7 +644,7 @@ impl State {
     fn close(&mut self) {
         let mut again: Vec<(u32, u32)> = Vec::new();
         let mut count = 0;
-        self.tally.close(|line, earlier| {
+        self.tally.close(&mut |line, earlier| {
             count += 1;
             if count <= MOST_TOLD {
                 again.push((line, earlier));

@@ -11,12 +11,11 @@
 //! consigned shows how much that may be.
 
 use super::names::{NONE, RECLAIMED};
-use super::posted::{PeriodPostings, Posted, Work, postings};
+use super::posted::{PeriodPostings, Posted, Postings, Work};
 use super::{Day, Done, Names, Reading, Register, Sum};
 use crate::material::Class;
 use crate::program::Program;
 use crate::source::{COMMON_PRACTICE, Source, Standing};
-use std::collections::BTreeMap;
 
 /// A stock count stands for a day this near to it.
 const NEAR_DAYS: u32 = 15;
@@ -208,56 +207,88 @@ struct Books<'r> {
 /// ```
 #[must_use]
 pub fn reconcile(readings: &[Reading], program: &Program, names: &mut Names) -> Reconciliation {
-    let mut out = Reconciliation::default();
-    let days: Vec<(Day, Day)> = readings.iter().filter_map(|r| r.tally.days).collect();
-    // A count on the last day of a year or the first of the next one closes the year: it opens no quarter.
-    let moving = |r: &&Reading| r.mapping.register != Register::Stock;
-    let months = readings.iter().filter(moving).filter_map(|r| r.tally.days);
-    let mut span: Option<(u16, u16)> = None;
-    for (first, last) in months.chain(days.first().copied().filter(|_| !readings.iter().any(|r| moving(&r))))
-    {
-        let (a, b) = (quarter(first.month_index()), quarter(last.month_index()));
-        span = Some(span.map_or((a, b), |(x, y)| (if a < x { a } else { x }, if b > y { b } else { y })));
-    }
-    let Some((first, last)) = span else {
-        out.doubts.push("no row of any file counts".to_owned());
-        return out;
-    };
-    if last - first > 400 {
-        out.doubts.push("the files span more than a hundred years: a date is wrong".to_owned());
-        return out;
-    }
-    let work = work(readings, names, first, last, &mut out.doubts);
-    let (posted, stopped) = postings(program, names, &work);
-    for route in stopped {
-        let label = names.routes.get(usize::from(route)).map_or("", |r| r.label.as_str());
-        out.doubts.push(["the route ", label, " stops and posts nothing: see the plan's problems"].concat());
-    }
-    let books = Books { readings, names };
-    let mut stocks = 0_u32;
-    for (i, period) in posted.iter().enumerate() {
-        let whole = i == work.len();
-        if whole && work.len() == 1 {
-            break;
+    let mut under_way = Reconciling::begin(readings, program, names);
+    while !under_way.step(program) {}
+    under_way.end(readings, names)
+}
+
+/// A reconciliation under way: it takes a draw of the plan's inputs at each step, so that no caller has to wait for all of
+/// them. Each call needs the same readings, program and names.
+pub struct Reconciling {
+    span: (u16, u16),
+    /// `None` where there is nothing to hold against the plan.
+    postings: Option<Postings>,
+    doubts: Vec<String>,
+}
+
+impl Reconciling {
+    /// Finds the quarters and what was done in each.
+    #[must_use]
+    pub fn begin(readings: &[Reading], program: &Program, names: &mut Names) -> Self {
+        let days: Vec<(Day, Day)> = readings.iter().filter_map(|r| r.tally.days).collect();
+        // A count on the last day of a year or the first of the next one closes the year: it opens no quarter.
+        let moving = |r: &&Reading| r.mapping.register != Register::Stock;
+        let months = readings.iter().filter(moving).filter_map(|r| r.tally.days);
+        let mut span: Option<(u16, u16)> = None;
+        for (first, last) in
+            months.chain(days.first().copied().filter(|_| !readings.iter().any(|r| moving(&r))))
+        {
+            let (a, b) = (quarter(first.month_index()), quarter(last.month_index()));
+            span = Some(span.map_or((a, b), |(x, y)| (if a < x { a } else { x }, if b > y { b } else { y })));
         }
-        let at = first + u16::try_from(i).unwrap_or(0);
-        let span = if whole { (first, last) } else { (at, at) };
-        for material in 0..names.materials.len() {
-            let account = books.account(material, span, period, &posted, whole);
-            if let Some(account) = account {
-                stocks += u32::from(!account.counted());
-                if whole { out.whole.push(account) } else { out.quarters.push(account) }
+        let without = |span, doubt: &str| Self { span, postings: None, doubts: vec![doubt.to_owned()] };
+        let Some((first, last)) = span else { return without((0, 0), "no row of any file counts") };
+        if last - first > 400 {
+            return without((0, 0), "the files span more than a hundred years: a date is wrong");
+        }
+        let mut doubts = Vec::new();
+        let work = work(readings, names, first, last, &mut doubts);
+        Self { span: (first, last), postings: Some(Postings::begin(program, names, work)), doubts }
+    }
+
+    /// Takes the next draw; `true` once there is none left.
+    pub fn step(&mut self, program: &Program) -> bool {
+        self.postings.as_mut().is_none_or(|postings| postings.step(program))
+    }
+
+    /// Puts purchases, postings and consignments side by side.
+    #[must_use]
+    pub fn end(self, readings: &[Reading], names: &Names) -> Reconciliation {
+        let mut out = Reconciliation { doubts: self.doubts, ..Reconciliation::default() };
+        let Some(postings) = self.postings else { return out };
+        let (first, last) = self.span;
+        for route in &postings.stopped {
+            let label = names.routes.get(usize::from(*route)).map_or("", |r| r.label.as_str());
+            out.doubts
+                .push(["the route ", label, " stops and posts nothing: see the plan's problems"].concat());
+        }
+        let books = Books { readings, names };
+        let mut stocks = 0_u32;
+        let posted = &postings.periods;
+        for (i, period) in posted.iter().enumerate() {
+            let whole = i == postings.count();
+            if whole && i == 1 {
+                break;
+            }
+            let at = first + u16::try_from(i).unwrap_or(0);
+            let span = if whole { (first, last) } else { (at, at) };
+            for material in 0..names.materials.len() {
+                let account = books.account(material, span, period, posted, whole);
+                if let Some(account) = account {
+                    stocks += u32::from(!account.counted());
+                    if whole { out.whole.push(account) } else { out.quarters.push(account) }
+                }
             }
         }
+        if stocks > 0 {
+            out.doubts.push(
+                "where the shelf was not counted within 15 days of both ends of a quarter, the change of stock is not known and not in \"used\"; a count at each turn of a quarter would do"
+                    .to_owned(),
+            );
+        }
+        books.doubts(posted, &mut out.doubts);
+        out
     }
-    if stocks > 0 {
-        out.doubts.push(
-            "where the shelf was not counted within 15 days of both ends of a quarter, the change of stock is not known and not in \"used\"; a count at each turn of a quarter would do"
-                .to_owned(),
-        );
-    }
-    books.doubts(&posted, &mut out.doubts);
-    out
 }
 
 /// How much of each route was done in each quarter.
@@ -278,10 +309,15 @@ fn work(
         let planned = || names.present().iter().map(|route| (*route, Work::Planned(0.25))).collect();
         return (first..=last).map(|_| planned()).collect();
     }
-    let mut done: BTreeMap<(u16, u16), Done> = BTreeMap::new();
+    let mut done: Vec<((u16, u16), Done)> = Vec::new();
     let mut untold = false;
-    for ((month, route), part) in logs.iter().flat_map(|r| &r.tally.done) {
-        let sum = done.entry((quarter(*month), *route)).or_default();
+    for (key, part) in logs.iter().flat_map(|r| &r.tally.done) {
+        let key = (quarter(key.month), key.material);
+        let at = done.iter().position(|(known, _)| *known == key).unwrap_or_else(|| {
+            done.push((key, Done::default()));
+            done.len() - 1
+        });
+        let Some((_, sum)) = done.get_mut(at) else { continue };
         sum.rows += part.rows;
         sum.extractions += part.extractions;
         sum.controls += part.controls;
@@ -333,7 +369,7 @@ impl Books<'_> {
     ) -> Line {
         let mut out = Line::default();
         for reading in self.of(register) {
-            let sum = reading.tally.over(|key| {
+            let sum = reading.tally.over(&|key| {
                 usize::from(key.material) == material
                     && (first..=last).contains(&quarter(key.month))
                     && stream.is_none_or(|s| (key.stream == RECLAIMED) == (s == RECLAIMED))
@@ -349,7 +385,7 @@ impl Books<'_> {
         let mut nearest: Option<u32> = None;
         for reading in self.of(Register::Stock) {
             // A shelf that was counted and holds none of a solvent has no row for it, on a day that has others.
-            for (_, counted) in reading.tally.stock.keys() {
+            for counted in reading.tally.stock.iter().filter_map(|(key, _)| key.date()) {
                 let apart = counted.number().abs_diff(day);
                 if apart <= NEAR_DAYS && nearest.is_none_or(|n| apart < n.abs_diff(day)) {
                     nearest = Some(counted.number());
@@ -359,8 +395,9 @@ impl Books<'_> {
         let nearest = nearest?;
         let mut out = Line::default();
         for reading in self.of(Register::Stock) {
-            for ((of, counted), sum) in &reading.tally.stock {
-                if usize::from(*of) == material && counted.number() == nearest {
+            for (key, sum) in &reading.tally.stock {
+                let then = key.date().is_some_and(|day| day.number() == nearest);
+                if usize::from(key.material) == material && then {
                     out.add_dependent(&self.line(reading, sum, material));
                 }
             }
@@ -379,7 +416,7 @@ impl Books<'_> {
         let mut out = self.moved(Register::Consignments, material, span, Some(NONE));
         for reading in self.of(Register::Consignments) {
             for stream in 0..self.names.streams.len() {
-                let sum = reading.tally.over(|key| {
+                let sum = reading.tally.over(&|key| {
                     key.material == NONE
                         && usize::from(key.stream) == stream
                         && (span.0..=span.1).contains(&quarter(key.month))
@@ -467,7 +504,7 @@ impl Books<'_> {
                 ));
             }
             let mut by_volume = Sum::default();
-            for sum in reading.tally.sums.values().chain(reading.tally.stock.values()) {
+            for (_, sum) in reading.tally.sums.iter().chain(&reading.tally.stock) {
                 by_volume.join(sum);
             }
             if by_volume.rows_by_volume > 0 {

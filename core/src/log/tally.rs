@@ -1,7 +1,8 @@
 //! Sums over the rows of a file. Each says on how many rows it stands.
 
-use super::{Day, NONE};
-use std::collections::{BTreeMap, BTreeSet};
+use super::places::{Places, hash, mixed};
+use super::{Day, NONE, Reading};
+use std::collections::BTreeMap;
 
 /// Rows that are compared with one another, and containers that get a sum of their own.
 const MOST_COMPARED: usize = 4_000_000;
@@ -65,36 +66,109 @@ pub struct Done {
     pub batches: u64,
 }
 
-/// To what an amount is added up: indices of [`Names`](super::Names), or [`NONE`].
+/// To what something is added up: indices of [`Names`](super::Names), or [`NONE`]. In the order of its fields.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]
 pub struct Key {
     /// Months since the year 0.
     pub month: u16,
-    /// The material.
+    /// The day of the month where it matters, as for stock; 0 elsewhere.
+    pub day: u8,
+    /// The material; in a preparation log the route.
     pub material: u16,
     /// The stream.
     pub stream: u16,
+}
+
+impl Key {
+    /// The day of a stock count.
+    #[must_use]
+    pub fn date(&self) -> Option<Day> {
+        Day::new(self.month / 12, u8::try_from(self.month % 12).ok()? + 1, self.day)
+    }
+
+    /// A number in the order of keys.
+    const fn packed(self) -> u64 {
+        (self.month as u64) << 40
+            | (self.day as u64) << 32
+            | (self.material as u64) << 16
+            | self.stream as u64
+    }
+}
+
+/// Sums by key, in the order of the keys once the file has ended.
+#[derive(Clone, Debug)]
+struct Keyed<V> {
+    places: Places,
+    rows: Vec<(Key, V)>,
+}
+
+impl<V> Default for Keyed<V> {
+    fn default() -> Self {
+        Self { places: Places::default(), rows: Vec::new() }
+    }
+}
+
+impl<V: Copy + Default> Keyed<V> {
+    fn at(&mut self, key: Key) -> &mut V {
+        // No two keys have one hash.
+        let hash = mixed(key.packed());
+        let at = self.places.find(hash, &|_| true).unwrap_or_else(|| {
+            self.rows.push((key, V::default()));
+            self.places.add(hash)
+        });
+        &mut self.rows[at].1
+    }
+
+    fn in_order(self) -> Vec<(Key, V)> {
+        let mut order: Vec<(u64, u32)> = Vec::with_capacity(self.rows.len());
+        for (key, _) in &self.rows {
+            order.push((key.packed(), u32::try_from(order.len()).unwrap_or(0)));
+        }
+        order.sort_unstable();
+        let mut out = Vec::with_capacity(order.len());
+        for (_, at) in order {
+            out.extend(self.rows.get(at as usize).copied());
+        }
+        out
+    }
+}
+
+/// The sums of all files of a register put together under other keys; the register stands in the place of the day.
+pub(crate) fn rolled(readings: &[Reading], other: fn(&Key) -> (u16, u16, u16)) -> Vec<(Key, Sum)> {
+    let mut out = Keyed::<Sum>::default();
+    for r in readings {
+        for (key, sum) in &r.tally.sums {
+            let (month, material, stream) = other(key);
+            out.at(Key { month, day: r.mapping.register as u8, material, stream }).join(sum);
+        }
+    }
+    out.in_order()
 }
 
 /// The sums of one file.
 #[derive(Clone, Debug, Default)]
 pub struct Tally {
     /// Amounts by month, material and stream.
-    pub sums: BTreeMap<Key, Sum>,
-    /// What stood on the shelf, by material and day.
-    pub stock: BTreeMap<(u16, Day), Sum>,
-    /// Amounts by container.
-    pub containers: BTreeMap<String, Sum>,
+    pub sums: Vec<(Key, Sum)>,
+    /// What stood on the shelf, by day and material.
+    pub stock: Vec<(Key, Sum)>,
+    /// Amounts by container, in the order in which the file names them.
+    pub containers: Vec<(String, Sum)>,
     /// Whether there were more containers than get a sum.
     pub more_containers: bool,
     /// Extractions by month and route.
-    pub done: BTreeMap<(u16, u16), Done>,
+    pub done: Vec<(Key, Done)>,
     /// The first and the last day.
     pub days: Option<(Day, Day)>,
     /// Rows that were compared with one another.
     pub compared: u64,
+    amounts: Keyed<Sum>,
+    shelves: Keyed<Sum>,
+    extractions: Keyed<Done>,
+    container_places: Places,
     seen: Vec<(u64, u32)>,
-    batches: Vec<(u64, u16, u16)>,
+    /// The hash of a batch; its route and month in one number.
+    batches: Vec<(u64, u32)>,
 }
 
 impl Tally {
@@ -108,26 +182,30 @@ impl Tally {
     }
 
     pub(super) fn amount(&mut self, key: Key, kg: f64, m3: Option<f64>) {
-        self.sums.entry(key).or_default().add(kg, m3);
+        self.amounts.at(key).add(kg, m3);
     }
 
-    pub(super) fn shelf(&mut self, material: u16, day: Day, kg: f64, m3: Option<f64>) {
-        self.stock.entry((material, day)).or_default().add(kg, m3);
+    pub(super) fn shelf(&mut self, key: Key, kg: f64, m3: Option<f64>) {
+        self.shelves.at(key).add(kg, m3);
     }
 
     pub(super) fn container(&mut self, name: &str, kg: f64, m3: Option<f64>) {
-        let room = self.containers.len() < MOST_CONTAINERS;
-        match self.containers.get_mut(name) {
-            Some(sum) => sum.add(kg, m3),
-            None if room => {
-                self.containers.entry(name.to_owned()).or_default().add(kg, m3);
-            }
+        let hash = hash(name.as_bytes(), &[]);
+        let same = |at: usize| self.containers.get(at).is_some_and(|(known, _)| known == name);
+        let at = self.container_places.find(hash, &same).or_else(|| {
+            (self.containers.len() < MOST_CONTAINERS).then(|| {
+                self.containers.push((name.to_owned(), Sum::default()));
+                self.container_places.add(hash)
+            })
+        });
+        match at.and_then(|at| self.containers.get_mut(at)) {
+            Some((_, sum)) => sum.add(kg, m3),
             None => self.more_containers = true,
         }
     }
 
     pub(super) fn extraction(&mut self, month: u16, route: u16, runs: f64, control: bool, repeat: bool) {
-        let done = self.done.entry((month, route)).or_default();
+        let done = self.extractions.at(of_route(month, route));
         done.rows += 1;
         done.extractions += runs;
         if control {
@@ -139,7 +217,7 @@ impl Tally {
     }
 
     pub(super) fn batch(&mut self, name: &[u8], month: u16, route: u16) {
-        let batch = (hash(name, &[]), month, route);
+        let batch = (hash(name, &[]), u32::from(route) << 16 | u32::from(month));
         // The rows of a batch stand together as a rule.
         if self.batches.last() != Some(&batch) {
             self.batches.push(batch);
@@ -157,29 +235,36 @@ impl Tally {
         }
     }
 
-    /// Counts batches and finds equal rows, told as the line and the earlier line that it repeats.
-    pub(super) fn close(&mut self, mut each: impl FnMut(u32, u32)) {
-        self.batches.sort_unstable();
+    /// Counts batches, puts sums in order and finds equal rows, told as the line and the earlier line that it repeats.
+    pub(super) fn close(&mut self, each: &mut dyn FnMut(u32, u32)) {
+        let mut batches = std::mem::take(&mut self.batches);
+        batches.sort_unstable();
         // A batch that runs over the end of a month counts in the month in which it began.
-        self.batches.dedup_by_key(|(name, _, route)| (*name, *route));
-        for &(_, month, route) in &self.batches {
-            self.done.entry((month, route)).or_default().batches += 1;
+        let mut before = None;
+        for (name, at) in batches {
+            if before != Some((name, at >> 16)) {
+                before = Some((name, at >> 16));
+                self.extractions.at(of_route(at as u16, (at >> 16) as u16)).batches += 1;
+            }
         }
-        self.batches = Vec::new();
+        self.sums = std::mem::take(&mut self.amounts).in_order();
+        self.stock = std::mem::take(&mut self.shelves).in_order();
+        self.done = std::mem::take(&mut self.extractions).in_order();
         self.compared = self.seen.len() as u64;
-        self.seen.sort_unstable();
+        let mut seen = std::mem::take(&mut self.seen);
+        seen.sort_unstable();
         let mut first: Option<(u64, u32)> = None;
-        let mut again: Vec<(u32, u32)> = Vec::new();
-        for &(row, line) in &self.seen {
+        let mut again: Vec<(u64, u32)> = Vec::new();
+        for &(row, line) in &seen {
             match first {
-                Some((same, earlier)) if same == row => again.push((line, earlier)),
+                Some((same, earlier)) if same == row => again.push((u64::from(line), earlier)),
                 _ => first = Some((row, line)),
             }
         }
-        self.seen = Vec::new();
+        drop(seen);
         again.sort_unstable();
         for (line, earlier) in again {
-            each(line, earlier);
+            each(line as u32, earlier);
         }
     }
 
@@ -187,22 +272,27 @@ impl Tally {
     #[must_use]
     pub fn empty_months(&self) -> Vec<u16> {
         let Some((first, last)) = self.days else { return Vec::new() };
-        let mut there: BTreeSet<u16> = self.sums.keys().map(|k| k.month).collect();
-        there.extend(self.done.keys().map(|(month, _)| *month));
-        there.extend(self.stock.keys().map(|(_, day)| day.month_index()));
-        (first.month_index()..=last.month_index()).filter(|month| !there.contains(month)).collect()
+        let keys = self.sums.iter().chain(&self.stock).map(|(k, _)| k.month);
+        let there: Vec<u16> = keys.chain(self.done.iter().map(|(k, _)| k.month)).collect();
+        let mut out = Vec::new();
+        for month in first.month_index()..=last.month_index() {
+            if !there.contains(&month) {
+                out.push(month);
+            }
+        }
+        out
     }
 
     /// Rows that count.
     #[must_use]
     pub fn rows(&self) -> u64 {
-        let amounts = self.sums.values().chain(self.stock.values()).map(|s| s.rows);
-        amounts.chain(self.done.values().map(|d| d.rows)).sum()
+        let amounts = self.sums.iter().chain(&self.stock).map(|(_, s)| s.rows);
+        amounts.chain(self.done.iter().map(|(_, d)| d.rows)).sum()
     }
 
     /// The sum over all keys that fit.
     #[must_use]
-    pub fn over(&self, fits: impl Fn(&Key) -> bool) -> Sum {
+    pub fn over(&self, fits: &dyn Fn(&Key) -> bool) -> Sum {
         let mut all = Sum::default();
         for (_, sum) in self.sums.iter().filter(|(key, _)| fits(key)) {
             all.join(sum);
@@ -222,26 +312,9 @@ impl Tally {
     }
 }
 
-/// FNV-1a over eight bytes at a time, mixed at the end: tells rows apart, keeps no secret.
-fn hash(bytes: &[u8], ends: &[u32]) -> u64 {
-    const PRIME: u64 = 0x0000_0100_0000_01b3;
-    let mut state = 0xcbf2_9ce4_8422_2325_u64;
-    let mut chunks = bytes.chunks_exact(8);
-    for chunk in &mut chunks {
-        let word = chunk.iter().fold(0_u64, |word, b| word << 8 | u64::from(*b));
-        state = (state ^ word).wrapping_mul(PRIME);
-        state ^= state >> 29;
-    }
-    for b in chunks.remainder() {
-        state = (state ^ u64::from(*b)).wrapping_mul(PRIME);
-    }
-    for end in ends {
-        state = (state ^ u64::from(*end)).wrapping_mul(PRIME);
-    }
-    // The last steps of SplitMix64.
-    state = (state ^ (state >> 30)).wrapping_mul(0xbf58_476d_1ce4_e5b9);
-    state = (state ^ (state >> 27)).wrapping_mul(0x94d0_49bb_1331_11eb);
-    state ^ (state >> 31)
+/// The key of a month's extractions.
+const fn of_route(month: u16, route: u16) -> Key {
+    Key { month, day: 0, material: route, stream: NONE }
 }
 
 #[cfg(test)]
@@ -257,7 +330,7 @@ mod tests {
         // The same bytes cut elsewhere are another row.
         tally.compare(b"a1b", &[2, 3], 8);
         let mut found = Vec::new();
-        tally.close(|line, earlier| found.push((line, earlier)));
+        tally.close(&mut |line, earlier| found.push((line, earlier)));
         assert_eq!(found, [(4, 2), (6, 2), (7, 3)]);
         assert_eq!(tally.compared, 7);
     }
@@ -270,19 +343,23 @@ mod tests {
         {
             tally.batch(name.as_bytes(), month, route);
         }
-        tally.close(|_, _| {});
-        let batches = |month, route| tally.done.get(&(month, route)).map_or(0, |d| d.batches);
+        tally.close(&mut |_, _| {});
+        let batches = |month, route| {
+            let done = tally.done.iter().find(|(k, _)| *k == of_route(month, route));
+            done.map_or(0, |(_, d)| d.batches)
+        };
         assert_eq!((batches(10, 0), batches(11, 0), batches(11, 1)), (2, 0, 1));
     }
 
     #[test]
     fn sums_tell_volume_without_density_from_mass() {
         let mut tally = Tally::default();
-        let key = Key { month: 3, material: 0, stream: NONE };
+        let key = Key { month: 3, day: 0, material: 0, stream: NONE };
         tally.amount(key, 2.0, None);
         tally.amount(key, -0.5, None);
         tally.amount(key, 0.0, Some(0.01));
-        let sum = tally.over(|k| k.month == 3);
+        tally.close(&mut |_, _| {});
+        let sum = tally.over(&|k| k.month == 3);
         assert_eq!(sum, Sum { rows: 3, negative: 1, kg: 1.5, m3: 0.01, rows_by_volume: 1 });
         assert_eq!(tally.by(|k| k.stream).len(), 0);
     }

@@ -245,7 +245,7 @@ mod tests {
     fn suggests_what_comes_close() {
         let suggestions = |asked: &str| catalogue().find(asked).unwrap_err().suggestions;
         assert_eq!(suggestions("metahnol")[0], "methanol");
-        assert_eq!(suggestions("cyclohexan")[0], "cyclohexane");
+        assert_eq!(suggestions("cyclohexxane")[0], "cyclohexane");
         assert_eq!(suggestions("67-64-2")[0], "acetone");
         assert_eq!(suggestions("diethyl")[0], "diethyl ether");
         assert!(suggestions("unobtainium").is_empty());

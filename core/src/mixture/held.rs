@@ -2,6 +2,7 @@
 use super::equilibrium::{positive, sum};
 use super::wilson::Lambda;
 use super::{LARGEST, MixtureError, Pairs, PerComponent};
+use crate::exponential::exp;
 
 /// A liquid mixture at a held temperature, with all that does not change with the composition worked out.
 ///
@@ -31,6 +32,8 @@ const LEAST_STEPS: f64 = 4.0;
 const STEADY: f64 = 4e-3;
 /// Steps after which the path is given up; those of the evidence take fewer than 30.
 const MOST_STEPS: usize = 400;
+/// How near the last step comes to the volume before the rest is taken in proportion.
+const NEAR: f64 = 1e-4;
 
 impl Held {
     /// A mixture at `temperature_k` in K: vapour pressure of each component at it in Pa, volume of a mole of each as liquid in m³/mol.
@@ -42,6 +45,18 @@ impl Held {
     /// [`MixtureError::ActivityOutOfRange`] outside the range of the pairs; [`MixtureError::NotPositive`].
     pub fn new(
         pairs: &Pairs,
+        which: &[usize],
+        temperature_k: f64,
+        vapour_pressure_pa: &[f64],
+        volume_m3_mol: &[f64],
+    ) -> Result<Self, MixtureError> {
+        Self::with(pairs, None, which, temperature_k, vapour_pressure_pa, volume_m3_mol)
+    }
+
+    /// As [`Held::new`], with what Wilson's equation comes to for all components at that temperature, where that is known already.
+    pub(crate) fn with(
+        pairs: &Pairs,
+        known: Option<&Lambda>,
         which: &[usize],
         temperature_k: f64,
         vapour_pressure_pa: &[f64],
@@ -65,7 +80,10 @@ impl Held {
             pressures[i] = positive("vapour pressure, Pa", vapour_pressure_pa[i])?;
             volumes[i] = positive("volume of a mole, m³/mol", volume_m3_mol[i])?;
         }
-        let lambda = Lambda::among(pairs, which, temperature_k);
+        let lambda = match known {
+            Some(known) => known.part(which),
+            None => Lambda::among(pairs, which, temperature_k),
+        };
         Ok(Self { count, vapour_pressure_pa: pressures, volume_m3_mol: volumes, lambda })
     }
 
@@ -110,52 +128,6 @@ impl Held {
         n
     }
 
-    fn volume_m3(&self, n: &PerComponent) -> f64 {
-        let mut volume = 0.0;
-        for (n, volume_m3_mol) in n.iter().zip(self.volume_m3_mol).take(self.count) {
-            volume += volume_m3_mol * n;
-        }
-        volume
-    }
-
-    /// The amounts after a time θ at steady κ: `nᵢ exp(−κᵢ θ)`.
-    fn after(&self, n: &PerComponent, kappa: &PerComponent, theta: f64) -> PerComponent {
-        let mut out = *n;
-        for i in 0..self.count {
-            out[i] *= libm::exp(-kappa[i] * theta);
-        }
-        out
-    }
-
-    /// The amounts when the volume is down to `wanted_m3` while κ is steady, from a first guess of θ.
-    ///
-    /// ln V falls, and flattens, as θ grows: Newton's steps come near enough within a few.
-    fn down_to(
-        &self,
-        n: &PerComponent,
-        kappa: &PerComponent,
-        mut theta: f64,
-        wanted_m3: f64,
-    ) -> PerComponent {
-        let mut now = *n;
-        for _ in 0..40 {
-            now = self.after(n, kappa, theta);
-            let (mut volume, mut leaving) = (0.0, 0.0);
-            for i in 0..self.count {
-                let part = self.volume_m3_mol[i] * now[i];
-                volume += part;
-                leaving += part * kappa[i];
-            }
-            let off = volume / wanted_m3 - 1.0;
-            if off.abs() < 1e-9 {
-                break;
-            }
-            // θ ← θ + ln(V/V_wanted) V / Σ vᵢ nᵢ κᵢ
-            theta += libm::log1p(off) * volume / leaving;
-        }
-        now
-    }
-
     /// Takes amounts in mol down to a volume in m³, the vapour taken away as it rises, at the held temperature.
     ///
     /// Every component leaves by `dnᵢ/dθ = −κᵢ nᵢ` with `κᵢ = γᵢ Pᵢ,sat`, in a time θ that runs as fast as it likes. While the activity
@@ -178,41 +150,164 @@ impl Held {
     /// ```
     #[must_use]
     pub fn take_down(&self, amounts_mol: &[f64], down_to_m3: f64) -> TakenDown {
-        let mut n = self.amounts(amounts_mol);
+        // Lists as long as the mixture, so that most of them cost little; what is not there has no amount.
+        match self.count {
+            1 => self.alone(amounts_mol, down_to_m3),
+            2 => Path::<2>::of(self).take_down(self.amounts(amounts_mol), down_to_m3),
+            3 => Path::<3>::of(self).take_down(self.amounts(amounts_mol), down_to_m3),
+            _ => Path::<LARGEST>::of(self).take_down(self.amounts(amounts_mol), down_to_m3),
+        }
+    }
+
+    /// One component: κ is its vapour pressure all the way down.
+    fn alone(&self, amounts_mol: &[f64], down_to_m3: f64) -> TakenDown {
+        let (mut left_mol, before) = (self.amounts(amounts_mol), self.amounts(amounts_mol)[0]);
+        let left = if down_to_m3 > 0.0 { down_to_m3 / self.volume_m3_mol[0] } else { 0.0 };
+        if left < before {
+            left_mol[0] = left;
+        }
+        // ∫ n dθ = (n − n')/P
+        TakenDown { left_mol, per_pressure_mol_pa: (before - left_mol[0]) / self.vapour_pressure_pa[0] }
+    }
+}
+
+/// A mixture of at most `N` components on its way down.
+struct Path<const N: usize> {
+    vapour_pressure_pa: [f64; N],
+    volume_m3_mol: [f64; N],
+    lambda: [[f64; N]; N],
+}
+
+#[expect(clippy::needless_range_loop, reason = "lists of one length side by side read as the equations do")]
+impl<const N: usize> Path<N> {
+    fn of(held: &Held) -> Self {
+        let mut path = Self { vapour_pressure_pa: [1.0; N], volume_m3_mol: [0.0; N], lambda: [[1.0; N]; N] };
+        for i in 0..N {
+            if i < held.count {
+                path.vapour_pressure_pa[i] = held.vapour_pressure_pa[i];
+                path.volume_m3_mol[i] = held.volume_m3_mol[i];
+            }
+            for j in 0..N {
+                path.lambda[i][j] = held.lambda.between(i, j);
+            }
+        }
+        path
+    }
+
+    /// κᵢ = γᵢ Pᵢ,sat of amounts, of which only the ratio counts; Pa. γ as in [`Lambda::activity_of_amounts`].
+    fn escaping_pa(&self, n: &[f64; N]) -> [f64; N] {
+        let (mut total, mut over) = (0.0, [0.0; N]);
+        for k in 0..N {
+            let mut sum = 0.0;
+            for j in 0..N {
+                sum += n[j] * self.lambda[k][j];
+            }
+            // 1/(N Sₖ), N Sₖ = Σⱼ nⱼ Λₖⱼ
+            over[k] = 1.0 / sum;
+            total += n[k];
+        }
+        let mut kappa = [0.0; N];
+        for i in 0..N {
+            let mut sum = 0.0;
+            for k in 0..N {
+                sum += n[k] * over[k] * self.lambda[k][i];
+            }
+            // ln γᵢ = 1 − ln Sᵢ − Σₖ xₖ Λₖᵢ / Sₖ
+            kappa[i] = exp(1.0 - sum) * over[i] * total * self.vapour_pressure_pa[i];
+        }
+        kappa
+    }
+
+    fn volume_m3(&self, n: &[f64; N]) -> f64 {
+        let mut volume = 0.0;
+        for i in 0..N {
+            volume += self.volume_m3_mol[i] * n[i];
+        }
+        volume
+    }
+
+    /// The amounts after a time θ at steady κ: `nᵢ exp(−κᵢ θ)`.
+    fn after(n: &[f64; N], kappa: &[f64; N], theta: f64) -> [f64; N] {
+        let mut out = *n;
+        for i in 0..N {
+            out[i] *= exp(-kappa[i] * theta);
+        }
+        out
+    }
+
+    /// The amounts about half a step on: exp(−x) ≈ 1/(1 + x + x²/2), which stays positive and costs no exponential.
+    fn about(n: &[f64; N], kappa: &[f64; N], theta: f64) -> [f64; N] {
+        let mut out = *n;
+        for i in 0..N {
+            let x = kappa[i] * theta;
+            out[i] /= 1.0 + x * (1.0 + 0.5 * x);
+        }
+        out
+    }
+
+    /// The amounts when the volume is down to `wanted_m3` while κ is steady, from a first guess of θ.
+    ///
+    /// ln V falls, and flattens, as θ grows: Newton's steps come near enough within a few.
+    fn down_to(&self, n: &[f64; N], kappa: &[f64; N], mut theta: f64, wanted_m3: f64) -> [f64; N] {
+        let (mut now, mut volume) = (*n, wanted_m3);
+        for _ in 0..40 {
+            now = Self::after(n, kappa, theta);
+            let mut leaving = 0.0;
+            volume = 0.0;
+            for i in 0..N {
+                let part = self.volume_m3_mol[i] * now[i];
+                volume += part;
+                leaving += part * kappa[i];
+            }
+            let off = volume / wanted_m3 - 1.0;
+            if off.abs() < NEAR {
+                break;
+            }
+            // ln(1 + x), by a quotient that is good for a Newton's step where x is small
+            let ln = if off.abs() < 0.1 { off * (6.0 + off) / (6.0 + 4.0 * off) } else { libm::log1p(off) };
+            // θ ← θ + ln(V/V_wanted) V / Σ vᵢ nᵢ κᵢ
+            theta += ln * volume / leaving;
+        }
+        // The last hair in proportion, so that the volume is met.
+        now.map(|n| n * (wanted_m3 / volume))
+    }
+
+    fn take_down(&self, amounts_mol: PerComponent, down_to_m3: f64) -> TakenDown {
+        let mut left_mol = amounts_mol;
+        let mut n = [0.0; N];
+        n.copy_from_slice(&amounts_mol[..N]);
         let mut volume = self.volume_m3(&n);
         let mut per_pressure_mol_pa = 0.0;
         // Everything: stop at a millionth, and send the rest after it.
         let floor_m3 = if down_to_m3 > 0.0 { down_to_m3 } else { volume * 1e-6 };
         let all = libm::log(volume / floor_m3);
         if !(volume > 0.0 && all > 0.0) {
-            return TakenDown { left_mol: n, per_pressure_mol_pa };
+            return TakenDown { left_mol, per_pressure_mol_pa };
         }
         let mut step = all / LEAST_STEPS;
         if step > STEP {
             step = STEP;
         }
-        let mut shrink = libm::exp(-step);
+        let mut shrink = exp(-step);
         for _ in 0..MOST_STEPS {
             let mut last = volume * shrink <= floor_m3;
             let first = self.escaping_pa(&n);
             let mut leaving = 0.0;
-            for i in 0..self.count {
+            for i in 0..N {
                 leaving += self.volume_m3_mol[i] * n[i] * first[i];
             }
             let fall = if last { libm::log(volume / floor_m3) } else { step };
             // half of the way down, at the κ of the beginning: dV/dθ = −Σ vᵢ nᵢ κᵢ
             let half_theta = 0.5 * fall * volume / leaving;
-            let (mut middle, mut change) = (first, 0.0);
-            if self.count > 1 {
-                let half = self.after(&n, &first, half_theta);
-                middle = self.escaping_pa(&half);
-                for i in 0..self.count {
-                    change += self.volume_m3_mol[i] * half[i] * (middle[i] - first[i]).abs();
-                }
+            let half = Self::about(&n, &first, half_theta);
+            let middle = self.escaping_pa(&half);
+            let mut change = 0.0;
+            for i in 0..N {
+                change += self.volume_m3_mol[i] * half[i] * (middle[i] - first[i]).abs();
             }
             let mut next = n;
             if !last {
-                next = self.after(&n, &middle, 2.0 * half_theta);
+                next = Self::after(&n, &middle, 2.0 * half_theta);
                 let there = self.volume_m3(&next);
                 last = there <= floor_m3;
                 if !last {
@@ -222,7 +317,7 @@ impl Held {
             if last {
                 next = self.down_to(&n, &middle, 2.0 * half_theta, floor_m3);
             }
-            for i in 0..self.count {
+            for i in 0..N {
                 // ∫ nᵢ dθ = (nᵢ − nᵢ') / κᵢ
                 per_pressure_mol_pa += (n[i] - next[i]) / middle[i];
             }
@@ -237,11 +332,12 @@ impl Held {
         }
         if down_to_m3 <= 0.0 {
             let kappa = self.escaping_pa(&n);
-            for i in 0..self.count {
+            for i in 0..N {
                 per_pressure_mol_pa += n[i] / kappa[i];
             }
-            n = [0.0; LARGEST];
+            n = [0.0; N];
         }
-        TakenDown { left_mol: n, per_pressure_mol_pa }
+        left_mol[..N].copy_from_slice(&n);
+        TakenDown { left_mol, per_pressure_mol_pa }
     }
 }

@@ -47,6 +47,7 @@ pub use error::MixtureError;
 pub use held::{Held, TakenDown};
 pub use pair::{Basis, Pair, PairLaw, Wilson, find_pair, pair_table};
 pub use pairs::{IdealPair, Pairs};
+pub(crate) use wilson::Lambda;
 
 /// The most components in one mixture: everything is kept on the stack.
 pub const LARGEST: usize = 8;

@@ -1,22 +1,23 @@
 //! Activity coefficients by Wilson's equation at one temperature.
 use super::{LARGEST, Pairs, PerComponent};
+use crate::exponential::exp;
 
 /// Λᵢⱼ of a mixture at one temperature.
 #[derive(Clone, Copy, Debug)]
-pub(super) struct Lambda {
+pub(crate) struct Lambda {
     count: usize,
     values: [[f64; LARGEST]; LARGEST],
 }
 
 impl Lambda {
-    pub(super) fn at(pairs: &Pairs, temperature_k: f64) -> Self {
+    pub(crate) fn at(pairs: &Pairs, temperature_k: f64) -> Self {
         let count = pairs.count();
         let mut values = [[1.0; LARGEST]; LARGEST];
         for ((row, a), b_k) in values.iter_mut().zip(&pairs.a).zip(&pairs.b_k).take(count) {
             for ((value, &a), &b_k) in row.iter_mut().zip(a).zip(b_k).take(count) {
                 if a != 0.0 || b_k != 0.0 {
                     // Λᵢⱼ = exp(aᵢⱼ + bᵢⱼ/T)
-                    *value = libm::exp(a + b_k / temperature_k);
+                    *value = exp(a + b_k / temperature_k);
                 }
             }
         }
@@ -31,8 +32,24 @@ impl Lambda {
                 let (a, b_k) = (pairs.a[i][j], pairs.b_k[i][j]);
                 if a != 0.0 || b_k != 0.0 {
                     // Λᵢⱼ = exp(aᵢⱼ + bᵢⱼ/T)
-                    *value = libm::exp(a + b_k / temperature_k);
+                    *value = exp(a + b_k / temperature_k);
                 }
+            }
+        }
+        Self { count: which.len(), values }
+    }
+
+    /// Λᵢⱼ.
+    pub(super) fn between(&self, i: usize, j: usize) -> f64 {
+        self.values[i][j]
+    }
+
+    /// Some of the components only.
+    pub(super) fn part(&self, which: &[usize]) -> Self {
+        let mut values = [[1.0; LARGEST]; LARGEST];
+        for (row, &i) in values.iter_mut().zip(which) {
+            for (value, &j) in row.iter_mut().zip(which) {
+                *value = self.values[i][j];
             }
         }
         Self { count: which.len(), values }
@@ -60,7 +77,7 @@ impl Lambda {
                 sum += n[k] * over[k] * self.values[k][i];
             }
             // ln γᵢ = 1 − ln Sᵢ − Σₖ xₖ Λₖᵢ / Sₖ
-            gamma[i] = libm::exp(1.0 - sum) * over[i] * total;
+            gamma[i] = exp(1.0 - sum) * over[i] * total;
         }
         gamma
     }
@@ -83,7 +100,7 @@ impl Lambda {
                 sum += x * row[i] * over;
             }
             // ln γᵢ = 1 − ln Sᵢ − Σₖ xₖ Λₖᵢ / Sₖ
-            *gamma = libm::exp(1.0 - sum) * over[i];
+            *gamma = exp(1.0 - sum) * over[i];
         }
         gamma
     }

@@ -188,8 +188,10 @@ pub struct Stream {
     pub density_mark: Option<Field>,
     /// `central` or `satellite`.
     pub area: Option<String>,
-    /// `when made`, `reclaimed` or `treated at once`.
+    /// `when made`, `reclaimed`, `reclaimed at once` or `treated at once`.
     pub counted: Option<String>,
+    /// What goes round of a reclaimed stream.
+    pub goes_round: Option<String>,
 }
 
 /// A material that the plan adds to the catalogue or overrides there.

@@ -488,7 +488,13 @@ static STREAM: Object = Object {
             "counted",
             Shape::Word(COUNTED),
             r#""when made""#,
-            "how it counts each month: when made, reclaimed (stored, then reclaimed and used again here) or treated at once (never stored)",
+            "how it counts each month: when made, reclaimed (stored, then reclaimed and used again here), reclaimed at once or treated at once (never stored)",
+        ),
+        may(
+            "goes_round",
+            Shape::Amount,
+            r#""20 kg""#,
+            "of a reclaimed stream: the mass that goes round, which counts once a month however often it is reclaimed",
         ),
     ],
     fields_after: None,
@@ -599,7 +605,7 @@ pub(super) const MADE_OF: &[&str] = &["polyethylene", "glass", "stainless steel"
 /// Where a waste container fills.
 pub(super) const AREAS: &[&str] = &["central", "satellite"];
 /// How a stream counts towards the month.
-pub(super) const COUNTED: &[&str] = &["when made", "reclaimed", "treated at once"];
+pub(super) const COUNTED: &[&str] = &["when made", "reclaimed", "reclaimed at once", "treated at once"];
 
 /// How often a step is done.
 pub(super) const BASES: &[&str] = &["sample", "batch", "month", "year"];

@@ -173,6 +173,7 @@ fn stream(stream: &Stream) -> Node {
     out.field("density_mark", stream.density_mark.as_ref());
     out.optional("area", stream.area.as_ref());
     out.optional("counted", stream.counted.as_ref());
+    out.optional("goes_round", stream.goes_round.as_ref());
     out.into()
 }
 
@@ -321,6 +322,7 @@ mod tests {
                     density_mark: Some(Field::Number("1.2".into())),
                     area: some("satellite"),
                     counted: some("reclaimed"),
+                    goes_round: some("20 kg"),
                 }],
                 activity: some("food"),
                 other_waste: vec![OtherWaste {

@@ -19,6 +19,8 @@ pub enum Counted {
     WhenMade,
     /// Stored, then reclaimed and used again on site: once a month, its bottoms not again.
     Reclaimed,
+    /// Reclaimed on site without having been stored: only its bottoms, where they go.
+    ReclaimedAtOnce,
     /// Treated at once in a permitted unit, never stored.
     TreatedAtOnce,
 }
@@ -30,6 +32,7 @@ impl Counted {
         match self {
             Self::WhenMade => "when made",
             Self::Reclaimed => "reclaimed",
+            Self::ReclaimedAtOnce => "reclaimed at once",
             Self::TreatedAtOnce => "treated at once",
         }
     }
@@ -84,6 +87,8 @@ pub struct StreamWaste {
     pub satellite: bool,
     /// How it counts.
     pub counted: Counted,
+    /// What goes round, where it is reclaimed; kg.
+    pub goes_round_kg: Option<f64>,
 }
 
 pub(super) fn site(doc: &Site, problems: &mut Vec<Problem>) -> SiteWaste {
@@ -149,10 +154,32 @@ pub(super) fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> S
         satellite: doc.area.as_deref() == Some("satellite"),
         counted: match doc.counted.as_deref() {
             Some("reclaimed") => Counted::Reclaimed,
+            Some("reclaimed at once") => Counted::ReclaimedAtOnce,
             Some("treated at once") => Counted::TreatedAtOnce,
             _ => Counted::WhenMade,
         },
+        goes_round_kg: doc.goes_round.as_deref().map(|text| goes_round(doc, text, path, problems)),
     }
+}
+
+/// What goes round of a reclaimed stream; kg.
+fn goes_round(doc: &Stream, text: &str, path: &str, problems: &mut Vec<Problem>) -> f64 {
+    let at = below(path, "goes_round");
+    let kg = amount(Some(text), "1 kg", Kind::Mass, &at, problems);
+    if kg <= 0.0 {
+        problems.push(Problem::error(
+            at,
+            format!("\"{text}\" goes round"),
+            "a mass above zero, such as \"20 kg\"",
+        ));
+    } else if doc.counted.as_deref() != Some("reclaimed") {
+        problems.push(Problem::warning(
+            at,
+            "only what is reclaimed goes round",
+            "\"counted\": \"reclaimed\" beside it",
+        ));
+    }
+    kg
 }
 
 /// A pH or the range of one.

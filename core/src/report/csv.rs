@@ -98,6 +98,8 @@ fn line(out: &mut String, [workload, route]: [&str; 2], figure: &Figure, row: &R
 /// use thimbleworth::report::text_cell;
 /// assert_eq!(text_cell("n-hexane"), "n-hexane");
 /// assert_eq!(text_cell("=1+1"), "'=1+1");
+/// assert_eq!(text_cell("-1.5"), "-1.5");
+/// assert_eq!(text_cell("-1.5+2"), "'-1.5+2");
 /// assert_eq!(text_cell("a, \"b\""), "\"a, \"\"b\"\"\"");
 /// ```
 #[must_use]
@@ -106,7 +108,11 @@ pub fn text_cell(text: &str) -> String {
     let first = text.trim_start_matches(' ').chars().next();
     let formula =
         matches!(first, Some('=' | '+' | '-' | '@' | '\t' | '\r' | '\n' | '＝' | '＋' | '－' | '＠'));
-    let apostrophe = if formula { "'" } else { "" };
+    // A bare number is what it is.
+    let digits = text.strip_prefix('-').unwrap_or_default();
+    let number = digits.starts_with(|c: char| c.is_ascii_digit())
+        && digits.bytes().all(|b| b.is_ascii_digit() || b == b'.');
+    let apostrophe = if formula && !number { "'" } else { "" };
     if text.contains([',', '"', '\r', '\n']) || text.starts_with(' ') || text.ends_with(' ') {
         format!("\"{apostrophe}{}\"", text.replace('"', "\"\""))
     } else {

@@ -3,8 +3,8 @@
 use super::data_table::{DataCell, DataTable};
 use super::words::cited;
 use crate::log::{
-    Change, Day, Line, NONE, Names, OUTPUTS, Posted, RECLAIMED, Reading, Reconciliation, Register, Remark,
-    SOLVENT_BALANCE, SolventBalance, Sum, UNCERTAINTY, Verdict, Why, solvent_balance,
+    Change, Day, Key, Line, NONE, Names, OUTPUTS, Posted, RECLAIMED, Reading, Reconciliation, Register,
+    Remark, SOLVENT_BALANCE, SolventBalance, Sum, UNCERTAINTY, Verdict, Why, rolled, solvent_balance,
 };
 use DataCell::{Empty, Number};
 
@@ -35,6 +35,21 @@ fn quarter(index: u16) -> String {
     [&(index / 4).to_string(), " Q", &(index % 4 + 1).to_string()].concat()
 }
 
+/// A row: texts first, then the rest.
+fn put(rows: &mut Vec<Vec<DataCell>>, texts: &[&str], rest: &[DataCell]) {
+    let mut row = Vec::with_capacity(texts.len() + rest.len());
+    for said in texts {
+        row.push(text(said));
+    }
+    row.extend_from_slice(rest);
+    rows.push(row);
+}
+
+/// A table under construction.
+fn begun(key: &'static str, title: &'static str, head: &[[&'static str; 2]]) -> DataTable {
+    DataTable { key, title, head: head.to_vec(), rows: Vec::new(), notes: Vec::new() }
+}
+
 /// What was read: files, columns, reasons, sums by material, month, stream and container, extractions.
 #[must_use]
 pub fn log_tables(readings: &[Reading], names: &Names) -> Vec<DataTable> {
@@ -46,37 +61,10 @@ pub fn log_tables(readings: &[Reading], names: &Names) -> Vec<DataTable> {
 }
 
 fn files(readings: &[Reading]) -> DataTable {
-    let mut notes = Vec::new();
-    let rows = readings.iter().map(|r| {
-        let name = &r.mapping.name;
-        let gaps = r.tally.empty_months();
-        if r.mapping.register != Register::Stock && !gaps.is_empty() {
-            let list: Vec<String> = gaps.iter().take(24).map(|m| month(*m)).collect();
-            let more = if gaps.len() > 24 { " and more" } else { "" };
-            notes.push([name, ": no rows in ", &list.join(", "), more].concat());
-        }
-        if r.tally.compared < r.rows.used {
-            let compared = r.tally.compared.to_string();
-            notes.push([name, ": equal rows were sought among the first ", &compared, " only"].concat());
-        }
-        let day = |last: bool| r.tally.days.map_or(Empty, |(a, b)| text(&iso(if last { b } else { a })));
-        vec![
-            text(name),
-            text(r.mapping.register.word()),
-            count(r.rows.used + r.rows.refused),
-            count(r.rows.used),
-            count(r.rows.changed),
-            count(r.rows.refused),
-            count(r.rows.blank),
-            day(false),
-            day(true),
-        ]
-    });
-    let rows = rows.collect();
-    DataTable {
-        key: "files",
-        title: "Files",
-        head: vec![
+    let mut table = begun(
+        "files",
+        "Files",
+        &[
             ["file", "file"],
             ["register", "read as"],
             ["rows", "rows"],
@@ -87,17 +75,42 @@ fn files(readings: &[Reading]) -> DataTable {
             ["first_day", "first day"],
             ["last_day", "last day"],
         ],
-        rows,
-        notes,
+    );
+    for r in readings {
+        let name = &r.mapping.name;
+        let gaps = r.tally.empty_months();
+        if r.mapping.register != Register::Stock && !gaps.is_empty() {
+            let mut list = String::new();
+            for gap in gaps.iter().take(24) {
+                list.push_str(if list.is_empty() { "" } else { ", " });
+                list.push_str(&month(*gap));
+            }
+            let more = if gaps.len() > 24 { " and more" } else { "" };
+            table.notes.push([name, ": no rows in ", &list, more].concat());
+        }
+        if r.tally.compared < r.rows.used {
+            let compared = r.tally.compared.to_string();
+            table
+                .notes
+                .push([name, ": equal rows were sought among the first ", &compared, " only"].concat());
+        }
+        let day = |last: bool| r.tally.days.map_or(Empty, |(a, b)| text(&iso(if last { b } else { a })));
+        let rows = &r.rows;
+        let counts = [rows.used + rows.refused, rows.used, rows.changed, rows.refused, rows.blank].map(count);
+        put(&mut table.rows, &[name, r.mapping.register.word()], &counts);
+        if let Some(row) = table.rows.last_mut() {
+            row.extend([day(false), day(true)]);
+        }
     }
+    table
 }
 
 fn columns(readings: &[Reading]) -> DataTable {
-    let mut rows = Vec::new();
-    let mut notes = Vec::new();
+    let mut table =
+        begun("columns", "Columns", &[["file", "file"], ["heading", "heading"], ["read_as", "read as"]]);
     for r in readings {
         for (heading, column) in &r.mapping.columns {
-            rows.push(vec![text(&r.mapping.name), text(heading), text(&column.text())]);
+            put(&mut table.rows, &[&r.mapping.name, heading, &column.text()], &[]);
         }
         let separator = match r.separator {
             '\t' => "tab",
@@ -105,7 +118,7 @@ fn columns(readings: &[Reading]) -> DataTable {
             ',' => "comma",
             _ => "bar",
         };
-        notes.push(
+        table.notes.push(
             [
                 &r.mapping.name,
                 ": cells apart by ",
@@ -118,53 +131,38 @@ fn columns(readings: &[Reading]) -> DataTable {
             .concat(),
         );
     }
-    DataTable {
-        key: "columns",
-        title: "Columns",
-        head: vec![["file", "file"], ["heading", "heading"], ["read_as", "read as"]],
-        rows,
-        notes,
-    }
+    table
 }
 
 fn reasons(readings: &[Reading]) -> DataTable {
-    let mut rows = Vec::new();
+    let mut table = begun(
+        "reasons",
+        "Refused and changed, by reason",
+        &[["file", "file"], ["what", "what"], ["why", "why"], ["rows", "rows"]],
+    );
     for r in readings {
-        let refused = Why::ALL.iter().zip(r.rows.by_reason).map(|(w, n)| ("refused", w.words()[0], n));
-        let changed = Change::ALL.iter().zip(r.rows.by_change).map(|(c, n)| ("changed", c.words(), n));
-        for (what, words, n) in refused.chain(changed).filter(|(_, _, n)| *n > 0) {
-            rows.push(vec![text(&r.mapping.name), text(what), text(words), count(n)]);
+        let mut one = |what: &str, why: &str, rows: u64| {
+            if rows > 0 {
+                put(&mut table.rows, &[&r.mapping.name, what, why], &[count(rows)]);
+            }
+        };
+        for (why, rows) in Why::ALL.iter().zip(r.rows.by_reason) {
+            one("refused", why.words()[0], rows);
+        }
+        for (change, rows) in Change::ALL.iter().zip(r.rows.by_change) {
+            one("changed", change.words(), rows);
         }
     }
-    DataTable {
-        key: "reasons",
-        title: "Refused and changed, by reason",
-        head: vec![["file", "file"], ["what", "what"], ["why", "why"], ["rows", "rows"]],
-        rows,
-        notes: Vec::new(),
-    }
+    table
 }
 
 /// The remarks of a file, refused rows or changed ones, as a table.
 #[must_use]
 pub fn remark_table(remarks: &[(String, Remark)], refused: bool) -> DataTable {
-    let rows = remarks.iter().filter(|(_, r)| r.refused() == refused).map(|(file, r)| {
-        vec![
-            text(file),
-            count(r.line),
-            text(&r.heading),
-            text(&r.cell),
-            text(match r.what {
-                Verdict::Refused(why) => why.words()[0],
-                Verdict::Changed(change) => change.words(),
-            }),
-            text(&if refused { r.need() } else { r.detail.clone() }),
-        ]
-    });
-    DataTable {
-        key: if refused { "refused" } else { "changed" },
-        title: if refused { "Refused rows" } else { "Changed rows" },
-        head: vec![
+    let mut table = begun(
+        if refused { "refused" } else { "changed" },
+        if refused { "Refused rows" } else { "Changed rows" },
+        &[
             ["file", "file"],
             ["line", "line"],
             ["column", "column"],
@@ -172,9 +170,19 @@ pub fn remark_table(remarks: &[(String, Remark)], refused: bool) -> DataTable {
             ["found", "found"],
             if refused { ["need", "what would do"] } else { ["read_as", "read as, or the line repeated"] },
         ],
-        rows: rows.collect(),
-        notes: Vec::new(),
+    );
+    for (file, r) in remarks.iter().filter(|(_, r)| r.refused() == refused) {
+        let found = match r.what {
+            Verdict::Refused(why) => why.words()[0],
+            Verdict::Changed(change) => change.words(),
+        };
+        let need = if refused { r.need() } else { r.detail.clone() };
+        put(&mut table.rows, &[file, &r.heading, &r.cell, found, &need], &[]);
+        if let Some(row) = table.rows.last_mut() {
+            row.insert(1, count(r.line));
+        }
     }
+    table
 }
 
 const SUM_HEAD: [[&str; 2]; 4] = [
@@ -201,119 +209,88 @@ fn material_name(names: &Names, index: u16) -> &str {
     names.materials.get(usize::from(index)).map_or("", |m| m.name.as_str())
 }
 
-type Rolled = std::collections::BTreeMap<(Register, u16, u16, u16), Sum>;
+/// Headings before those of a sum.
+fn with_sums(key: &'static str, title: &'static str, head: &[[&'static str; 2]]) -> DataTable {
+    let mut table = begun(key, title, head);
+    table.head.extend(SUM_HEAD);
+    table
+}
 
-/// Sums of all files by register and up to three things.
-fn rolled(readings: &[Reading], key: fn(&crate::log::Key) -> (u16, u16, u16)) -> Rolled {
-    let mut out = Rolled::new();
-    for r in readings {
-        for (at, sum) in &r.tally.sums {
-            let (a, b, c) = key(at);
-            out.entry((r.mapping.register, a, b, c)).or_default().join(sum);
-        }
-    }
-    out
+/// The word of a register that stands in the place of a day.
+fn register(key: &Key) -> &'static str {
+    Register::WORDS.get(usize::from(key.day)).copied().unwrap_or_default()
 }
 
 fn materials(readings: &[Reading], names: &Names) -> DataTable {
-    let mut rows = Vec::new();
-    for ((register, material, at, stream), sum) in rolled(readings, |k| (k.material, k.month / 3, k.stream)) {
-        let mut row = vec![
-            text(material_name(names, material)),
-            text(register.word()),
-            text(stream_name(names, stream)),
-            text(&quarter(at)),
-        ];
-        row.extend(sum_cells(&sum));
-        rows.push(row);
+    let mut table = with_sums(
+        "materials",
+        "Amounts by material and quarter",
+        &[["material", "material"], ["register", "register"], ["stream", "stream"], ["when", "when"]],
+    );
+    for (key, sum) in rolled(readings, |k| (k.material, k.month / 3, k.stream)) {
+        let (name, stream) = (material_name(names, key.month), stream_name(names, key.stream));
+        put(&mut table.rows, &[name, register(&key), stream, &quarter(key.material)], &sum_cells(&sum));
     }
     for r in readings {
-        for ((material, day), sum) in &r.tally.stock {
-            let mut row = vec![
-                text(material_name(names, *material)),
-                text(r.mapping.register.word()),
-                Empty,
-                text(&iso(*day)),
-            ];
-            row.extend(sum_cells(sum));
-            rows.push(row);
+        for (key, sum) in &r.tally.stock {
+            let day = key.date().map(iso).unwrap_or_default();
+            let name = material_name(names, key.material);
+            put(&mut table.rows, &[name, r.mapping.register.word(), "", &day], &sum_cells(sum));
         }
     }
-    let mut head =
-        vec![["material", "material"], ["register", "register"], ["stream", "stream"], ["when", "when"]];
-    head.extend(SUM_HEAD);
-    DataTable {
-        key: "materials",
-        title: "Amounts by material and quarter",
-        head,
-        rows,
-        notes: vec!["Volumes become mass with the density at the bench's temperature.".to_owned()],
-    }
+    table.notes.push("Volumes become mass with the density at the bench's temperature.".to_owned());
+    table
 }
 
 fn months(readings: &[Reading]) -> DataTable {
-    let mut rows = Vec::new();
-    for ((register, at, ..), sum) in rolled(readings, |k| (k.month, 0, 0)) {
-        let mut row = vec![text(&month(at)), text(register.word())];
-        row.extend(sum_cells(&sum));
-        rows.push(row);
+    let mut table = with_sums("months", "Amounts by month", &[["month", "month"], ["register", "register"]]);
+    for (key, sum) in rolled(readings, |k| (k.month, 0, 0)) {
+        put(&mut table.rows, &[&month(key.month), register(&key)], &sum_cells(&sum));
     }
-    let mut head = vec![["month", "month"], ["register", "register"]];
-    head.extend(SUM_HEAD);
-    DataTable { key: "months", title: "Amounts by month", head, rows, notes: Vec::new() }
+    table
 }
 
 fn streams(readings: &[Reading], names: &Names) -> DataTable {
-    let mut rows = Vec::new();
-    for ((register, stream, at, _), sum) in rolled(readings, |k| (k.stream, k.month, 0)) {
-        if register == Register::Consignments && stream != NONE {
-            let mut row = vec![text(stream_name(names, stream)), text(&month(at)), text(&quarter(at / 3))];
-            row.extend(sum_cells(&sum));
-            rows.push(row);
+    let mut table = with_sums(
+        "streams",
+        "Consigned by stream and month",
+        &[["stream", "stream"], ["month", "month"], ["quarter", "quarter"]],
+    );
+    for (key, sum) in rolled(readings, |k| (k.stream, k.month, 0)) {
+        if key.day == Register::Consignments as u8 && key.month != NONE {
+            let at = key.material;
+            let texts = [stream_name(names, key.month), &month(at), &quarter(at / 3)];
+            put(&mut table.rows, &texts, &sum_cells(&sum));
         }
     }
-    let mut head = vec![["stream", "stream"], ["month", "month"], ["quarter", "quarter"]];
-    head.extend(SUM_HEAD);
-    DataTable { key: "streams", title: "Consigned by stream and month", head, rows, notes: Vec::new() }
+    table
 }
 
 fn containers(readings: &[Reading]) -> DataTable {
-    let mut rows = Vec::new();
-    let mut notes = Vec::new();
+    let mut table = with_sums(
+        "containers",
+        "Amounts by container",
+        &[["container", "container"], ["register", "register"], ["file", "file"]],
+    );
     for r in readings {
         for (container, sum) in &r.tally.containers {
-            let mut row = vec![text(container), text(r.mapping.register.word()), text(&r.mapping.name)];
-            row.extend(sum_cells(sum));
-            rows.push(row);
+            let texts = [container, r.mapping.register.word(), &r.mapping.name];
+            put(&mut table.rows, &texts, &sum_cells(sum));
         }
         if r.tally.more_containers {
-            notes.push(
+            table.notes.push(
                 [&r.mapping.name, ": containers beyond the first 20 000 have no sum of their own"].concat(),
             );
         }
     }
-    let mut head = vec![["container", "container"], ["register", "register"], ["file", "file"]];
-    head.extend(SUM_HEAD);
-    DataTable { key: "containers", title: "Amounts by container", head, rows, notes }
+    table
 }
 
 fn work(readings: &[Reading], names: &Names) -> DataTable {
-    let mut rows = Vec::new();
-    for ((at, route), done) in readings.iter().flat_map(|r| &r.tally.done) {
-        rows.push(vec![
-            text(&month(*at)),
-            text(names.routes.get(usize::from(*route)).map_or("", |r| r.label.as_str())),
-            count(done.rows),
-            Number(done.extractions),
-            Number(done.controls),
-            Number(done.repeats),
-            if done.batches > 0 { count(done.batches) } else { Empty },
-        ]);
-    }
-    DataTable {
-        key: "work",
-        title: "Extractions by month and route",
-        head: vec![
+    let mut table = begun(
+        "work",
+        "Extractions by month and route",
+        &[
             ["month", "month"],
             ["route", "work / route"],
             ["rows", "rows"],
@@ -322,65 +299,30 @@ fn work(readings: &[Reading], names: &Names) -> DataTable {
             ["repeats", "of them repeats"],
             ["batches", "batches begun"],
         ],
-        rows,
-        notes: Vec::new(),
+    );
+    for r in readings {
+        for (key, done) in &r.tally.done {
+            let route = names.routes.get(usize::from(key.material)).map_or("", |r| r.label.as_str());
+            let numbers = [
+                count(done.rows),
+                Number(done.extractions),
+                Number(done.controls),
+                Number(done.repeats),
+                if done.batches > 0 { count(done.batches) } else { Empty },
+            ];
+            put(&mut table.rows, &[&month(key.month), route], &numbers);
+        }
     }
+    table
 }
 
 /// Purchases, postings and consignments side by side, with what none explains, as a table.
 #[must_use]
 pub fn reconciliation_table(found: &Reconciliation, names: &Names) -> DataTable {
-    let mut rows = Vec::new();
-    for (account, whole) in
-        found.quarters.iter().map(|a| (a, false)).chain(found.whole.iter().map(|a| (a, true)))
-    {
-        let when = if whole {
-            [&quarter(account.quarters.0), " to ", &quarter(account.quarters.1)].concat()
-        } else {
-            quarter(account.quarters.0)
-        };
-        let unexplained = account.unexplained();
-        let shelf = |line: Option<Line>| line.map_or(Empty, |l| Number(l.kg));
-        let records = [account.bought, account.returned, account.consigned, account.reclaimed];
-        let shelves = account.opening.map_or(0, |l| l.rows) + account.closing.map_or(0, |l| l.rows);
-        let all_rows = records.iter().map(|l| l.rows).fold(shelves, |all, rows| all + rows);
-        rows.push(vec![
-            text(names.materials.get(account.material).map_or("", |m| m.name.as_str())),
-            text(&when),
-            Number(account.bought.kg),
-            Number(account.returned.kg),
-            shelf(account.opening),
-            shelf(account.closing),
-            Number(account.used().kg),
-            Number(account.posted(Posted::Drawn).kg),
-            Number(account.posted(Posted::Hood).kg + account.posted(Posted::Room).kg),
-            Number(account.posted(Posted::Lost).kg),
-            Number(account.posted(Posted::Streams).kg),
-            Number(account.consigned.kg),
-            Number(account.reclaimed.kg),
-            Number(account.waiting().kg),
-            Number(unexplained.kg),
-            Number(unexplained.expanded_kg()),
-            text(match (account.explained(), account.counted()) {
-                _ if all_rows == 0 => "no record of it",
-                (true, true) => "within its uncertainty",
-                (true, false) => "within its uncertainty; stock not counted",
-                (false, true) => "not explained",
-                (false, false) => "not explained; stock not counted",
-            }),
-            count(all_rows),
-        ]);
-    }
-    let mut notes = vec![
-        "used = bought − returned + stock at the start − at the end; unexplained = used − consigned − reclaimed − what the plan posts to air, drain, product and the like. Air is what the plan posts, never the remainder.".to_owned(),
-        "\"in containers\" is what the plan posts into streams less what was consigned; it waits to be collected, or the plan or a record is wrong.".to_owned(),
-        ["± is the expanded uncertainty, k = 2 (", &cited(UNCERTAINTY), "), of limits of 1 % for purchases, 2 % for consignments and cylinders and 10 % for stock counts (common practice, no source) where the plan states no other, and of the plan's own inputs."].concat(),
-    ];
-    notes.extend(found.doubts.iter().cloned());
-    DataTable {
-        key: "reconciliation",
-        title: "Reconciliation by solvent and quarter",
-        head: vec![
+    let mut table = begun(
+        "reconciliation",
+        "Reconciliation by solvent and quarter",
+        &[
             ["material", "solvent"],
             ["when", "when"],
             ["bought_kg", "bought, kg"],
@@ -400,39 +342,64 @@ pub fn reconciliation_table(found: &Reconciliation, names: &Names) -> DataTable 
             ["verdict", "verdict"],
             ["rows", "rows"],
         ],
-        rows,
-        notes,
+    );
+    for account in found.quarters.iter().chain(&found.whole) {
+        let unexplained = account.unexplained();
+        let shelf = |line: Option<Line>| line.map_or(Empty, |l| Number(l.kg));
+        let records = [account.bought, account.returned, account.consigned, account.reclaimed];
+        let shelves = account.opening.map_or(0, |l| l.rows) + account.closing.map_or(0, |l| l.rows);
+        let all_rows = records.iter().map(|l| l.rows).fold(shelves, |all, rows| all + rows);
+        let verdict = match (account.explained(), account.counted()) {
+            _ if all_rows == 0 => "no record of it",
+            (true, true) => "within its uncertainty",
+            (true, false) => "within its uncertainty; stock not counted",
+            (false, true) => "not explained",
+            (false, false) => "not explained; stock not counted",
+        };
+        let numbers = [
+            Number(account.bought.kg),
+            Number(account.returned.kg),
+            shelf(account.opening),
+            shelf(account.closing),
+            Number(account.used().kg),
+            Number(account.posted(Posted::Drawn).kg),
+            Number(account.posted(Posted::Hood).kg + account.posted(Posted::Room).kg),
+            Number(account.posted(Posted::Lost).kg),
+            Number(account.posted(Posted::Streams).kg),
+            Number(account.consigned.kg),
+            Number(account.reclaimed.kg),
+            Number(account.waiting().kg),
+            Number(unexplained.kg),
+            Number(unexplained.expanded_kg()),
+            text(verdict),
+            count(all_rows),
+        ];
+        let name = names.materials.get(account.material).map_or("", |m| m.name.as_str());
+        put(&mut table.rows, &[name, &quarters(account.quarters)], &numbers);
     }
+    table.notes = vec![
+        names.heading.clone(),
+        "used = bought − returned + stock at the start − at the end; unexplained = used − consigned − reclaimed − what the plan posts to air, drain, product and the like. Air is what the plan posts, never the remainder.".to_owned(),
+        "\"in containers\" is what the plan posts into streams less what was consigned; it waits to be collected, or the plan or a record is wrong.".to_owned(),
+        ["± is the expanded uncertainty, k = 2 (", &cited(UNCERTAINTY), "), of limits of 1 % for purchases, 2 % for consignments and cylinders and 10 % for stock counts (common practice, no source) where the plan states no other, and of the plan's own inputs."].concat(),
+    ];
+    table.notes.extend_from_slice(&found.doubts);
+    table
+}
+
+/// Quarters counted from the year 0, in words.
+fn quarters((first, last): (u16, u16)) -> String {
+    if first == last { quarter(first) } else { [&quarter(first), " to ", &quarter(last)].concat() }
 }
 
 /// The solvent balance as a table, ready to print: one column of figures a solvent would be too wide, so it has a line each.
 #[must_use]
 pub fn solvent_balance_table(found: &Reconciliation, names: &Names) -> DataTable {
     let (each, all) = solvent_balance(found, names);
-    let mut rows = Vec::new();
-    let several = each.len() > 1;
-    let total = several.then_some(("all organic solvents", all));
-    let named = each.iter().map(|(material, balance)| {
-        (names.materials.get(*material).map_or("", |m| m.name.as_str()), *balance)
-    });
-    for (name, balance) in total.into_iter().chain(named) {
-        balance_rows(&mut rows, name, &balance);
-    }
-    let span = found.whole.first().or(found.quarters.first()).map(|a| a.quarters);
-    let when = span.map_or_else(String::new, |(a, b)| {
-        if a == b { quarter(a) } else { [&quarter(a), " to ", &quarter(b)].concat() }
-    });
-    let mut notes = vec![
-        [&when, "; ", &cited(SOLVENT_BALANCE)].concat(),
-        "I1, O6 and O8 are the site's records, the others postings of the plan. Whether the directive applies to the site, and to which activity, is for the competent authority; Annex VII names no laboratories.".to_owned(),
-        "O8 counts what was consigned as \"reclaimed off site\"; what is kept in apparatus stands in O9; what goes off site outside of the streams in O6.".to_owned(),
-        "\"unexplained\" is what the fugitive emission by difference holds beyond the postings: a finding to follow up, not an emission that was measured.".to_owned(),
-    ];
-    notes.extend(found.doubts.iter().cloned());
-    DataTable {
-        key: "balance",
-        title: "Solvent balance",
-        head: vec![
+    let mut table = begun(
+        "balance",
+        "Solvent balance",
+        &[
             ["solvent", "solvent"],
             ["line", "line"],
             ["what", "what"],
@@ -440,30 +407,38 @@ pub fn solvent_balance_table(found: &Reconciliation, names: &Names) -> DataTable
             ["expanded_kg", "±, kg"],
             ["rows", "rows"],
         ],
-        rows,
-        notes,
+    );
+    if each.len() > 1 {
+        balance_rows(&mut table.rows, "all organic solvents", &all);
     }
+    for (material, balance) in &each {
+        let name = names.materials.get(*material).map_or("", |m| m.name.as_str());
+        balance_rows(&mut table.rows, name, balance);
+    }
+    let span = found.whole.first().or(found.quarters.first()).map(|a| a.quarters);
+    table.notes = vec![
+        names.heading.clone(),
+        [&span.map(quarters).unwrap_or_default(), "; ", &cited(SOLVENT_BALANCE)].concat(),
+        "I1, O6 and O8 are the site's records, the others postings of the plan. Whether the directive applies to the site, and to which activity, is for the competent authority; Annex VII names no laboratories.".to_owned(),
+        "O8 counts what was consigned as \"reclaimed off site\"; what is kept in apparatus stands in O9; what goes off site outside of the streams in O6.".to_owned(),
+        "\"unexplained\" is what the fugitive emission by difference holds beyond the postings: a finding to follow up, not an emission that was measured.".to_owned(),
+    ];
+    table.notes.extend_from_slice(&found.doubts);
+    table
 }
 
 fn balance_rows(rows: &mut Vec<Vec<DataCell>>, name: &str, balance: &SolventBalance) {
-    let mut put = |line: &str, what: &str, value: Line| {
-        rows.push(vec![
-            text(name),
-            text(line),
-            text(what),
-            Number(value.kg),
-            Number(value.expanded_kg()),
-            count(value.rows),
-        ]);
+    let mut one = |line: &str, what: &str, value: Line| {
+        put(rows, &[name, line, what], &[Number(value.kg), Number(value.expanded_kg()), count(value.rows)]);
     };
-    put("I1", "bought and used", balance.i1);
-    put("I2", "recovered and used again", balance.i2);
+    one("I1", "bought and used", balance.i1);
+    one("I2", "recovered and used again", balance.i2);
     for (i, (what, value)) in OUTPUTS.iter().zip(balance.o).enumerate() {
-        put(&["O", &(i + 1).to_string()].concat(), what, value);
+        one(&["O", &(i + 1).to_string()].concat(), what, value);
     }
-    put("F", "fugitive emission, I1 − O1 − O5 − O6 − O7 − O8", balance.fugitive());
-    put("F posted", "fugitive emission, O2 + O3 + O4 + O9", balance.fugitive_posted());
-    put("unexplained", "the difference of the two", balance.unexplained());
-    put("E", "total emission, F + O1", balance.emission());
-    put("C", "consumption, I1 − O8", balance.consumption());
+    one("F", "fugitive emission, I1 − O1 − O5 − O6 − O7 − O8", balance.fugitive());
+    one("F posted", "fugitive emission, O2 + O3 + O4 + O9", balance.fugitive_posted());
+    one("unexplained", "the difference of the two", balance.unexplained());
+    one("E", "total emission, F + O1", balance.emission());
+    one("C", "consumption, I1 − O8", balance.consumption());
 }

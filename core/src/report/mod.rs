@@ -44,7 +44,9 @@ pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
 pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown, markdown_drawn};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words, stopped_words};
-pub use paper::{Asked, Paper, PaperKind, PaperTable, paper, paper_csv, paper_markdown, pour_paper};
+pub use paper::{
+    Asked, Paper, PaperKind, PaperTable, mix_paper, paper, paper_csv, paper_markdown, pour_paper, words_csv,
+};
 pub use result::{RESULT_VERSION, result_json, result_json_drawn};
 pub use row::PROGRAM;
 pub use table::{account_table, account_table_drawn, comparison_table};

@@ -169,7 +169,7 @@ impl Step for Clean {
         b.release_over(x.get(self.time));
         let filled_kg = chamber.fill(x, b, void_m3)?;
         let again = f64::from(self.baths) - 1.0;
-        let density_kg_m3 = b.states().density_kg_m3(x.get(chamber.state.0), x.get(chamber.state.1))?;
+        let density_kg_m3 = b.states().state(x.get(chamber.state.0), x.get(chamber.state.1))?.density_kg_m3;
         b.note(FLOWED, "n − 1", again, Kind::Number);
         b.note(FLOWED, "t", x.get(self.time), Kind::Time);
         b.note(FLOWED, "V_void", void_m3, Kind::Volume);

@@ -187,7 +187,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     };
     let lost_to = r.place(&LOST_TO);
     let gas = flow.and_then(|flow| r.known("nitrogen").map(|m| (m, flow)));
-    let vapours = Vapours::read(r);
+    let vapours = Vapours::read(r, Some(temperature));
     vapours.warn_unknown(r, "to");
     Box::new(Concentrate {
         to,

@@ -120,7 +120,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             );
         }
         let (coolant, draught, time) = (r.optional(&STILL_COOLANT), r.optional(&DRAUGHT), r.optional(&TIME));
-        let vapours = Vapours::read(r);
+        let vapours = Vapours::read(r, coolant);
         vapours.warn_unknown(r, "to");
         Box::new(Distil {
             to: r.quantity(&TO),

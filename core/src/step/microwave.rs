@@ -102,7 +102,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
     read: |r| {
         let (solvent, charge) = (r.mixture(&SOLVENT), r.quantity(&CHARGE));
         let (headspace, opened) = (r.optional(&HEADSPACE), r.optional(&OPENED));
-        let vapours = Vapours::read(r);
+        let vapours = Vapours::read(r, None);
         if headspace.is_some() {
             vapours.warn_unknown(r, "headspace");
         }

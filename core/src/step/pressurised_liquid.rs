@@ -146,7 +146,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         let solvent = r.mixture(&SOLVENT);
         let (purge, vial) = (r.optional(&PURGE), r.optional(&VIAL));
         let purge = purge.zip(vial).and_then(|p| r.known("nitrogen").map(|m| (m, p)));
-        let vapours = Vapours::read(r);
+        let vapours = Vapours::read(r, None);
         if purge.is_some() {
             vapours.warn_unknown(r, "purge");
         }

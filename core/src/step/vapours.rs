@@ -5,7 +5,7 @@ use crate::chance::{Draw, In};
 use crate::emission::{OpenSurface, Vapour, open_surface_kg_s, sweep};
 use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
 use crate::material::{Class, Law, Substance};
-use crate::mixture::{Held, LARGEST, PairLaw, Pairs, PerComponent, find_pair, ideal_error};
+use crate::mixture::{Held, LARGEST, Lambda, PairLaw, Pairs, PerComponent, find_pair, ideal_error};
 use crate::program::Reader;
 use crate::quantity::Kind;
 use std::sync::Arc;
@@ -32,14 +32,38 @@ pub(super) struct Vapours {
     /// Volatile materials of which too little is known to reckon with.
     unknown: Vec<Material>,
     gases: Vec<Material>,
+    ready: Option<Box<Ready>>,
+}
+
+/// What follows from the temperature alone, at the one that most draws ask for.
+struct Ready {
+    temperature_k: f64,
+    /// Vapour pressures before their factors; Pa.
+    pure_pa: PerComponent,
+    /// Heats of vaporisation; NaN where one is not known; J/kg.
+    heat_j_kg: PerComponent,
+    lambda: Lambda,
+}
+
+impl Ready {
+    fn new(rows: &[Row], pairs: &Pairs, temperature_k: f64) -> Option<Box<Self>> {
+        let (mut pure_pa, mut heat_j_kg) = ([0.0; LARGEST], [f64::NAN; LARGEST]);
+        for ((pure, heat), row) in pure_pa.iter_mut().zip(&mut heat_j_kg).zip(rows) {
+            let s = &row.substance;
+            *pure = s.vapour_pressure.value(temperature_k, &s.name, "").ok()?;
+            *heat = s.heat_of_vaporisation.value(temperature_k, &s.name, "").unwrap_or(f64::NAN);
+        }
+        Some(Box::new(Self { temperature_k, pure_pa, heat_j_kg, lambda: Lambda::at(pairs, temperature_k) }))
+    }
 }
 
 /// Masses in the order of the rows; kg.
 pub(super) type Masses = PerComponent;
 
 impl Vapours {
-    /// All that can evaporate of what the route has met so far: what later steps bring cannot lie there yet.
-    pub(super) fn read(r: &mut Reader<'_, '_>) -> Self {
+    /// All that can evaporate of what the route has met so far: what later steps bring cannot lie there yet. `at` is the temperature
+    /// at which it will be asked for, as a rule the same one in every draw.
+    pub(super) fn read(r: &mut Reader<'_, '_>, at: Option<In>) -> Self {
         let (mut rows, mut unknown, mut gases): (Vec<Row>, Vec<Material>, Vec<Material>) = Default::default();
         for i in 0..r.materials_so_far() {
             let Ok(i) = u16::try_from(i) else { break };
@@ -81,7 +105,8 @@ impl Vapours {
                 }
             }
         }
-        Self { rows, pairs, splits, unknown, gases }
+        let ready = at.zip(pairs.as_ref()).and_then(|(at, pairs)| Ready::new(&rows, pairs, r.value(at)));
+        Self { rows, pairs, splits, unknown, gases, ready }
     }
 
     /// Warns of what is volatile and cannot be reckoned with.
@@ -201,11 +226,17 @@ impl Vapours {
     fn held(&self, x: Draw<'_>, kg: &Masses, temperature_k: f64) -> Result<Option<Warm>, Halt> {
         let (mut which, mut count) = ([0; LARGEST], 0);
         let (mut n, mut pressures, mut volumes) = ([0.0; LARGEST], [0.0; LARGEST], [0.0; LARGEST]);
+        let ready = self.ready_at(temperature_k);
         for (i, (row, kg)) in self.rows.iter().zip(kg).enumerate() {
             if *kg > 0.0 {
-                let s = &row.substance;
-                let pure = s.vapour_pressure.value(temperature_k, &s.name, "vapour pressure");
-                let pure = pure.map_err(crate::mixture::MixtureError::from)?;
+                let pure = match ready {
+                    Some(ready) => ready.pure_pa[i],
+                    None => {
+                        let s = &row.substance;
+                        let pure = s.vapour_pressure.value(temperature_k, &s.name, "vapour pressure");
+                        pure.map_err(crate::mixture::MixtureError::from)?
+                    }
+                };
                 which[count] = i;
                 n[count] = kg / row.molar_mass_kg_mol;
                 pressures[count] = pure * x.get(row.factor);
@@ -215,8 +246,14 @@ impl Vapours {
             }
         }
         let Some(pairs) = self.pairs.as_ref().filter(|_| count > 0) else { return Ok(None) };
-        let held = Held::new(pairs, &which[..count], temperature_k, &pressures[..count], &volumes[..count])?;
+        let known = ready.map(|r| &r.lambda);
+        let (which_ones, pressures, volumes) = (&which[..count], &pressures[..count], &volumes[..count]);
+        let held = Held::with(pairs, known, which_ones, temperature_k, pressures, volumes)?;
         Ok(Some(Warm { which, count, n, held }))
+    }
+
+    fn ready_at(&self, temperature_k: f64) -> Option<&Ready> {
+        self.ready.as_deref().filter(|r| r.temperature_k.to_bits() == temperature_k.to_bits())
     }
 
     /// The vapours over masses at a temperature, in the order of the rows; all zero over nothing.
@@ -263,14 +300,19 @@ impl Vapours {
     /// Heat that evaporates these masses at a temperature; J. `None` where the heat of one of them is not known.
     pub(super) fn heat_j(&self, kg: &Masses, temperature_k: f64) -> Option<f64> {
         let mut heat_j = 0.0;
-        for (row, kg) in self.rows.iter().zip(kg) {
+        let ready = self.ready_at(temperature_k);
+        for (i, (row, kg)) in self.rows.iter().zip(kg).enumerate() {
             if *kg > 0.0 {
                 let s = &row.substance;
+                let heat_j_kg = match ready {
+                    Some(ready) => ready.heat_j_kg[i],
+                    None => s.heat_of_vaporisation.value(temperature_k, &s.name, "").ok()?,
+                };
                 // Q = Σ mᵢ Δhᵢ
-                heat_j += kg * s.heat_of_vaporisation.value(temperature_k, &s.name, "").ok()?;
+                heat_j += kg * heat_j_kg;
             }
         }
-        Some(heat_j)
+        heat_j.is_finite().then_some(heat_j)
     }
 
     /// Density of these masses as a liquid at a temperature, as if volumes added; kg/m³. `None` over nothing or where one is not known.

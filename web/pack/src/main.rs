@@ -3,9 +3,12 @@
 //! The app is compiled for WebAssembly, the glue is made in process by the library behind the wasm-bindgen tool, and
 //! everything is inlined into the shell, which is the root `index.html`. No bundler and no installed tool is needed.
 mod compile;
+mod instruction;
+mod order;
 mod packing;
 mod parts;
 mod shell;
+mod streams;
 
 use anyhow::{Context, Result, bail, ensure};
 use compile::{What, Workspace};
@@ -52,11 +55,13 @@ fn main() -> Result<()> {
         println!(
             "web/dist/empty.html: {} bytes, of that the program {} packed",
             html.len(),
-            packing::pack(&program.wasm)?.len()
+            packing::pack(b"", &program.wasm)?.len()
         );
         return Ok(());
     }
     fs::write(dist.join("page.js"), &script)?;
+    // What the unpacker must give again; a test compares.
+    fs::write(dist.join("program.wasm"), &program.wasm)?;
     fs::write(dist.join("thimbleworth.html"), &html)?;
 
     let parts = Parts::of(&program.wasm)?;
@@ -65,7 +70,7 @@ fn main() -> Result<()> {
     row("program", program.wasm.len());
     row("  of that code", parts.code);
     row("  of that data", parts.data);
-    row("program, packed alone", packing::pack(&program.wasm)?.len());
+    row("program, packed alone", packing::pack(b"", &program.wasm)?.len());
     row("glue", glue.len());
     row("the browser's side", boot.len());
     row("styles", styles.len());

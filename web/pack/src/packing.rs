@@ -1,5 +1,8 @@
-//! The program as text: packed with LZMA, which leaves a quarter less than gzip, and written in characters that come
-//! through as they are in a script. What unpacks it again is a small module, `unpack.wat`, and `web/start.js`.
+//! The program as text: taken apart (`streams.rs`), packed with LZMA, which leaves a quarter less than gzip, and written in
+//! characters that come through as they are in a script. What unpacks it again is a small module, `unpack.wat`, and `web/start.js`.
+use crate::instruction::ALIGNMENTS;
+use crate::parts::sections;
+use crate::streams::{LAST, STREAMS, apart, table};
 use anyhow::Result;
 use lzma_rust2::{EncodeMode, LzmaOptions, LzmaWriter, MfType};
 use std::io::Write;
@@ -7,10 +10,10 @@ use std::io::Write;
 /// The most that is looked back for a repetition: more than any program has.
 const REACH_BYTES: u32 = 4 << 20;
 
-/// A raw LZMA stream, the same bytes for the same bytes. `unpack.wat` knows its settings (lc=3, lp=0, pb=0).
-pub(crate) fn pack(bytes: &[u8]) -> Result<Vec<u8>> {
+/// A raw LZMA stream, the same bytes for the same bytes. `unpack.wat` knows its settings (lc=2, lp=0, pb=0).
+fn pack_stream(bytes: &[u8]) -> Result<Vec<u8>> {
     let mut options = LzmaOptions::with_preset(9);
-    (options.lc, options.lp, options.pb) = (3, 0, 0);
+    (options.lc, options.lp, options.pb) = (2, 0, 0);
     (options.dict_size, options.nice_len, options.depth_limit) = (REACH_BYTES, 273, 512);
     (options.mf, options.mode) = (MfType::Bt4, EncodeMode::Normal);
     let mut writer = LzmaWriter::new_no_header(Vec::new(), &options, false)?;
@@ -18,9 +21,42 @@ pub(crate) fn pack(bytes: &[u8]) -> Result<Vec<u8>> {
     Ok(writer.finish()?)
 }
 
+/// `front` and behind it `module`, packed: numbers of four bytes, namely how many functions there are, how long they are, and the lengths
+/// of each stream packed and unpacked; then the streams.
+pub(crate) fn pack(front: &[u8], module: &[u8]) -> Result<Vec<u8>> {
+    let apart = apart(front, module)?;
+    let mut out = Vec::new();
+    let mut put = |number: usize| {
+        out.extend(u32::try_from(number)?.to_le_bytes());
+        anyhow::Ok(())
+    };
+    put(apart.functions)?;
+    put(apart.code_bytes)?;
+    let mut packed = Vec::new();
+    for stream in &apart.streams {
+        let before = packed.len();
+        packed.extend(pack_stream(stream)?);
+        put(packed.len() - before)?;
+        put(stream.len())?;
+    }
+    out.extend(packed);
+    Ok(out)
+}
+
 /// The module that unpacks what [`pack`] made.
 pub(crate) fn unpacker() -> Result<Vec<u8>> {
-    Ok(wat::parse_str(include_str!("unpack.wat").replace("BIT\n", include_str!("bit.wat")))?)
+    let table: String = table().iter().map(|entry| format!("\\{entry:02x}")).collect();
+    let alignments = ALIGNMENTS.iter().rev().fold(0_u64, |all, one| all << 2 | u64::from(*one));
+    let wat = include_str!("unpack.wat")
+        .replace("BIT\n", include_str!("bit.wat"))
+        .replace("ALIGNMENTS", &alignments.to_string())
+        .replace("TABLE", &table)
+        .replace("HEAD", &(8 + 8 * STREAMS).to_string())
+        .replace("LAST", &LAST.to_string());
+    let module = wat::parse_str(wat)?;
+    // Without the names of its functions.
+    let kept = sections(&module)?.into_iter().filter(|section| section.id != 0);
+    Ok(module[..8].iter().chain(kept.flat_map(|section| section.whole)).copied().collect())
 }
 
 /// The first sign, and how many there are: all of one unit in UTF-16, none that means anything in a script or a page, none
@@ -102,10 +138,10 @@ mod tests {
     #[test]
     fn packing_gives_the_same_bytes_again_and_the_other_side_is_a_small_module() {
         let text = b"the same, the same, the same and a little more of the same".repeat(40);
-        let packed = pack(&text).expect("packed");
-        assert_eq!(packed, pack(&text).expect("packed"));
-        assert!(packed.len() < text.len() / 10);
+        let packed = pack(&text, b"\0asm\x01\0\0\0").expect("packed");
+        assert_eq!(packed, pack(&text, b"\0asm\x01\0\0\0").expect("packed"));
+        assert!(packed.len() < text.len() / 5);
         let module = unpacker().expect("a module");
-        assert!(module.starts_with(b"\0asm") && module.len() < 2000);
+        assert!(module.starts_with(b"\0asm") && module.len() < 3000);
     }
 }

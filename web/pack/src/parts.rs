@@ -1,4 +1,4 @@
-//! The sizes of the sections of a WebAssembly module.
+//! The sections of a WebAssembly module, their sizes, and the bodies of its functions.
 use anyhow::{Context, Result, ensure};
 
 /// Bytes of code and of data; what is left of the module are types, names and tables.
@@ -9,27 +9,58 @@ pub(crate) struct Parts {
 }
 
 impl Parts {
-    /// Reads the section headers. WebAssembly core specification, "Binary Format": a module is a magic number and a
-    /// version of four bytes each, then sections of an id (code 10, data 11), a size in LEB128 and as many bytes.
     pub(crate) fn of(module: &[u8]) -> Result<Self> {
-        ensure!(module.starts_with(b"\0asm"), "not a WebAssembly module");
         let mut parts = Self::default();
-        let mut rest = module.get(8..).context("the module ends early")?;
-        while let Some((&id, after)) = rest.split_first() {
-            let (size, after) = leb128(after).context("the size of a section ends early")?;
-            match id {
-                10 => parts.code += size,
-                11 => parts.data += size,
+        for section in sections(module)? {
+            match section.id {
+                10 => parts.code += section.bytes.len(),
+                11 => parts.data += section.bytes.len(),
                 _ => {}
             }
-            rest = after.get(size..).context("a section ends early")?;
         }
         Ok(parts)
     }
 }
 
+/// A section of a module.
+pub(crate) struct Section<'a> {
+    pub(crate) id: u8,
+    pub(crate) bytes: &'a [u8],
+    /// With its head.
+    pub(crate) whole: &'a [u8],
+}
+
+/// Reads the section headers. WebAssembly core specification, "Binary Format": a module is a magic number and a version of four
+/// bytes each, then sections of an id (code 10, data 11), a size in LEB128 and as many bytes.
+pub(crate) fn sections(module: &[u8]) -> Result<Vec<Section<'_>>> {
+    ensure!(module.starts_with(b"\0asm"), "not a WebAssembly module");
+    let mut list = Vec::new();
+    let mut rest = module.get(8..).context("the module ends early")?;
+    while let Some((&id, after)) = rest.split_first() {
+        let (size, after) = leb128(after).context("the size of a section ends early")?;
+        let (bytes, after) = after.split_at_checked(size).context("a section ends early")?;
+        list.push(Section { id, bytes, whole: &rest[..rest.len() - after.len()] });
+        rest = after;
+    }
+    Ok(list)
+}
+
+/// The bodies of the functions in a code section.
+pub(crate) fn bodies(code: &[u8]) -> Result<Vec<&[u8]>> {
+    let (count, mut rest) = leb128(code).context("the code ends early")?;
+    let mut list = Vec::new();
+    for _ in 0..count {
+        let (size, after) = leb128(rest).context("the size of a body ends early")?;
+        let (body, after) = after.split_at_checked(size).context("a body ends early")?;
+        list.push(body);
+        rest = after;
+    }
+    ensure!(rest.is_empty(), "the code has a rest");
+    Ok(list)
+}
+
 /// An unsigned number in groups of seven bits, lowest first, and what follows it.
-fn leb128(bytes: &[u8]) -> Option<(usize, &[u8])> {
+pub(crate) fn leb128(bytes: &[u8]) -> Option<(usize, &[u8])> {
     let mut value = 0;
     for (i, byte) in bytes.iter().enumerate().take(5) {
         value |= usize::from(byte & 0x7f) << (7 * i);

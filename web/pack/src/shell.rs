@@ -62,8 +62,8 @@ pub(crate) fn second_script(glue: &str, boot: &str) -> String {
 
 /// The script that stands in the page: the packed load and what unpacks it.
 pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<String> {
-    let whole = [load.styles.as_bytes(), load.script.as_bytes(), load.program].concat();
-    let (packed, unpacker) = (pack(&whole)?, unpacker()?);
+    let front = [load.styles.as_bytes(), load.script.as_bytes()].concat();
+    let (packed, unpacker) = (pack(&front, load.program)?, unpacker()?);
     let lowered = start.to_ascii_lowercase();
     for bad in ["</script", "<script", "<!--"] {
         ensure!(
@@ -123,7 +123,7 @@ mod tests {
     use super::*;
 
     const SHELL: &str = include_str!("../../../index.html");
-    const NOTHING: Load<'static> = Load { styles: "", script: "", program: b"" };
+    const NOTHING: Load<'static> = Load { styles: "", script: "", program: b"\0asm\x01\0\0\0" };
 
     #[test]
     fn the_root_shell_takes_styles_script_and_policy() {

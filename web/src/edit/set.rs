@@ -133,6 +133,7 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
                 "density_mark" => stream.density_mark = value,
                 "area" => stream.area = words(value),
                 "counted" => stream.counted = words(value),
+                "goes_round" => stream.goes_round = words(value),
                 _ => return None,
             }
         }
@@ -271,6 +272,7 @@ mod tests {
             "site.streams[0].density_mark",
             "site.streams[0].area",
             "site.streams[0].counted",
+            "site.streams[0].goes_round",
             "site.activity",
             "site.storage_limit",
             "site.pick_up_every",

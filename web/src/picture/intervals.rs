@@ -8,7 +8,7 @@ use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
 use super::{Drawing, Head, Picture, Size, Table};
 use crate::show::{grouped, unbroken, with_minus};
 use thimbleworth::letter::sentence;
-use thimbleworth::odds::FigureReading;
+use thimbleworth::odds::Brief;
 use thimbleworth::program::WorkloadProgram;
 use thimbleworth::report::odds_words;
 
@@ -31,32 +31,29 @@ enum Mark {
     None,
 }
 
-/// The picture of a figure; `None` where no route has draws of it.
+/// The picture of a figure, as it is on each route; `None` where no route has draws of it.
 #[must_use]
 pub fn intervals(
     key: &str,
     work: &WorkloadProgram,
-    figure: &FigureReading,
+    briefs: &[Option<Brief<'_>>],
     coverage: f64,
 ) -> Option<Picture> {
-    let name = |r: usize| work.routes.get(r).map_or(String::new(), |route| route.name.clone());
+    let figure = briefs.iter().flatten().next()?.figure;
     let show = |v: f64| with_minus(&unbroken(&figure.measure.shown(v))).replace(' ', "\u{a0}");
-    let (mut rows, mut table, mut said, mut draws) = (Vec::new(), Vec::new(), Vec::new(), 0);
-    for (r, spread) in figure.routes.iter().enumerate() {
-        let Some(spread) = spread else { continue };
-        let rival = figure.rivals.iter().find(|x| x.route == r);
-        let odds = rival.map_or(String::new(), |x| unbroken(&odds_words(x.less, x.same)));
-        let (words, limits, mark, cells) = match spread.drawn {
+    let title = sentence(&figure.title);
+    let present = work.routes.get(work.present).map_or("", |route| route.name.as_str());
+    let (mut rows, mut odds, mut table, mut said) = (Vec::new(), Vec::new(), Vec::new(), Vec::new());
+    let (mut draws, mut heading, mut best) = (0, title.clone(), -1.0);
+    for (route, brief) in work.routes.iter().zip(briefs) {
+        let (name, Some(brief)) = (route.name.clone(), brief) else { continue };
+        let (words, limits, mark, cells) = match brief.drawn {
             Some(s) => {
                 draws = s.draws;
                 let (low, middle, high) = (s.symmetric.low, s.median, s.symmetric.high);
                 let limits = format!("from {} to {}", show(low), show(high));
-                (
-                    show(middle),
-                    limits,
-                    Mark::Interval(low, middle, high),
-                    [show(middle), show(low), show(high)],
-                )
+                let cells = [show(middle), show(low), show(high)];
+                (show(middle), limits, Mark::Interval(low, middle, high), cells)
             }
             None => {
                 let none = "no interval: too few draws ran".to_owned();
@@ -64,33 +61,32 @@ pub fn intervals(
                     none,
                     String::new(),
                     Mark::None,
-                    [show(spread.central), "not known".to_owned(), String::new()],
+                    [show(brief.central), "not known".to_owned(), String::new()],
                 )
             }
         };
-        said.push(format!("{} {words} {limits}", name(r)).trim_end().to_owned());
-        table.push([name(r)].into_iter().chain(cells).chain([odds]).collect());
-        rows.push(Row { name: name(r), words, limits, mark });
+        said.push(format!("{name} {words} {limits}").trim_end().to_owned());
+        let mut than = String::new();
+        if let Some((less, same)) = brief.odds {
+            than = unbroken(&odds_words(less, same));
+            if less > best {
+                best = less;
+                heading = format!("{title}: {name} has {than} than {present}");
+            }
+            odds.push(Row {
+                name: name.clone(),
+                words: than.clone(),
+                limits: String::new(),
+                mark: Mark::Odds(less, same),
+            });
+        }
+        table.push([name.clone()].into_iter().chain(cells).chain([than]).collect());
+        rows.push(Row { name, words, limits, mark });
     }
     if draws == 0 {
         return None;
     }
-    let title = sentence(&figure.title);
-    let mut heading = title.clone();
-    let mut best = -1.0;
-    for rival in &figure.rivals {
-        let words = unbroken(&odds_words(rival.less, rival.same));
-        if rival.less > best {
-            best = rival.less;
-            heading = format!("{title}: {} has {words} than {}", name(rival.route), name(work.present));
-        }
-        rows.push(Row {
-            name: name(rival.route),
-            words,
-            limits: String::new(),
-            mark: Mark::Odds(rival.less, rival.same),
-        });
-    }
+    rows.extend(odds);
     Some(Picture {
         key: key.to_owned(),
         title: heading,

@@ -15,7 +15,7 @@ const WIDTHS: [u16; 95] = [
 
 /// About how wide a text is at a type size.
 #[must_use]
-pub(super) fn text_width(text: &str, size: f64) -> f64 {
+pub fn text_width(text: &str, size: f64) -> f64 {
     text.chars().map(|c| f64::from(glyph(c))).sum::<f64>() * size / 1000.0 + 0.0
 }
 

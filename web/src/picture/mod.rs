@@ -37,6 +37,7 @@ pub use difference::difference;
 pub use draw::{Node, plate, to_html, to_svg_text};
 pub use flow::flow;
 pub use intervals::intervals;
+pub use letter::text_width;
 pub use mass_by_place::mass_by_place;
 pub use over_years::over_years;
 pub use shape::{Anchor, Hatch, Shape, Trail};

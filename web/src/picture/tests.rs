@@ -39,7 +39,8 @@ fn pictures(account: &Account) -> Vec<Picture> {
     let work = &program.workloads[0];
     let reading = Reading::new(account, &run, 0, 0.95).unwrap();
     for id in ["waste.total.mass", "cost.year"] {
-        out.extend(intervals(&format!("intervals-{id}"), work, &reading.figure(id).unwrap(), 0.95));
+        let briefs: Vec<_> = (0..routes).map(|r| reading.brief(id, r)).collect();
+        out.extend(intervals(&format!("intervals-{id}"), work, &briefs, 0.95));
     }
     for route in 1..routes {
         if let (Ok(case), Some(drawn)) = (switch(account, 0, route), drawn(account, &run, 0, route, 0.95)) {

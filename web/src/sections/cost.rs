@@ -2,10 +2,11 @@
 use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
-use crate::document::Document;
 use crate::draws::{COVERAGE, Drawn, follows};
 use crate::parts::{ByRc, Sheet};
 use crate::picture::{over_years, to_html};
+use crate::reckon::Book;
+use std::rc::Rc;
 use thimbleworth::account::Group;
 use thimbleworth::case::{drawn, switch};
 use thimbleworth::letter::sentence;
@@ -46,7 +47,7 @@ fn draw(view: &View) -> Html {
             let routes = view.book().works.get(w).map_or(0, |work| work.routes.len());
             html! {
                 <>
-                    <OverYears document={view.document.clone()} {w} />
+                    <OverYears book={ByRc(Rc::clone(&view.reckoned.book))} {w} />
                     { cost }
                     { for (0..routes).map(|r| view.plate(w, What::Lost(r))) }
                     { sheet(view, w, "time", "Hours and instruments", Group::Time) }
@@ -59,7 +60,7 @@ fn draw(view: &View) -> Html {
 
 #[derive(Properties, PartialEq)]
 struct Props {
-    document: ByRc<Document>,
+    book: ByRc<Book>,
     w: usize,
 }
 
@@ -70,7 +71,9 @@ fn OverYears(props: &Props) -> Html {
     let found = use_context::<Drawn>().flatten();
     let last = use_mut_ref(Html::default);
     let html = use_memo(found.clone(), |found| {
-        let read = found.as_ref().and_then(|d| d.read(|run, account| {
+        let read = || {
+            let draws = found.as_ref()?;
+            let (run, account) = (draws.run()?, &draws.book.account);
             let work = account.program.as_ref()?.workloads.get(w)?;
             let present = work.routes.get(work.present).map_or("", |r| r.name.as_str());
             let others = work.routes.iter().enumerate().filter(|(r, _)| *r != work.present);
@@ -81,16 +84,16 @@ fn OverYears(props: &Props) -> Html {
                         return html! { <p>{ format!("No case for {} without {}.", route.name, lacking.join("; ")) }</p> };
                     }
                 };
-                let picture = drawn(account, run, w, r, COVERAGE).and_then(|drawn| {
+                let picture = drawn(account, &run, w, r, COVERAGE).and_then(|drawn| {
                     over_years(&format!("over-years-{w}-{r}"), (&route.name, present), &case, &drawn, COVERAGE)
                 });
                 html! { <>{ for picture.map(|p| to_html(&p)) }{ for case.conditions.first().map(|c| html! { <p>{ format!("It holds only with: {c}.") }</p> }) }</> }
             }).collect::<Html>())
-        }));
-        if let Some(read) = read {
-            *last.borrow_mut() = read;
+        };
+        if let Some(html) = read() {
+            *last.borrow_mut() = html;
         }
         last.borrow().clone()
     });
-    follows(&found, &props.document, (*html).clone())
+    follows(found.as_ref().map(|d| &d.book), &props.book, (*html).clone())
 }

@@ -1,4 +1,5 @@
 //! Section "Waste desk": codes of every stream, labels, contents, and whether something may be poured.
+use super::labels::{SIZES, labels};
 use super::{Section, View, When};
 use crate::edit::{Change, Edit};
 use crate::form::text_of;
@@ -52,7 +53,7 @@ struct Props {
 /// What is asked of a pour: into which stream, what, and how full the container is. It is no part of the plan.
 #[component]
 fn Pour(props: &Props) -> Html {
-    let asked = use_state_eq(|| [String::new(), String::new(), String::new()]);
+    let asked = use_state_eq(<[String; 4]>::default);
     let put = {
         let asked = asked.clone();
         Callback::from(move |edit: Edit| {
@@ -66,7 +67,7 @@ fn Pour(props: &Props) -> Html {
     };
     let account = &props.book.account;
     let streams = account.program.as_ref().map_or(&[][..], |p| &p.site.streams);
-    let [into, what, held] = &*asked;
+    let [into, what, held, size] = &*asked;
     let names: Vec<&str> = streams.iter().map(|s| s.name.as_str()).chain(["drain"]).collect();
     let into = names.iter().find(|n| *n == into).or(names.first()).copied().unwrap_or_default();
     let parts: Vec<(String, String)> = what
@@ -81,16 +82,25 @@ fn Pour(props: &Props) -> Html {
         let held = Some(held.trim()).filter(|h| !h.is_empty());
         pour_paper(account, &desk, &Asked { into, parts: &parts, held })
     });
-    let choice =
-        names.iter().map(|n| (AttrValue::from((*n).to_owned()), AttrValue::from((*n).to_owned()))).collect();
+    let choice = |names: &[&str]| {
+        let both = |n: &&str| (AttrValue::from((*n).to_owned()), AttrValue::from((*n).to_owned()));
+        Ask::Choice(names.iter().map(both).collect())
+    };
+    let size = SIZES.iter().find(|s| s.word == size).unwrap_or(&SIZES[0]);
     let field = |i: usize, label: &'static str, hint: &'static str, value: &str, ask: Ask| {
         html! { <Field path={PATHS[i]} {label} {hint} value={value.to_owned()} {ask} edit={put.clone()} /> }
     };
     html! {
+        <>
+        <details class="more controls">
+            <summary>{ "Labels to print" }</summary>
+            { field(3, "Size of the labels", "Of the paper where it is a label each.", size.word, choice(&SIZES.map(|s| s.word))) }
+            { for site_desk(account, &[]).and_then(|desk| labels(account, &desk, size)) }
+        </details>
         <section class={(!matches!(found, Some(Ok(_)))).then_some("controls")} aria-labelledby="pour-heading">
             <h3 id="pour-heading">{ "May this go into that container?" }</h3>
             <div class="controls">
-                { field(0, "Container", "A stream of the site, or the drain.", into, Ask::Choice(choice)) }
+                { field(0, "Container", "A stream of the site, or the drain.", into, choice(&names)) }
                 { field(1, "Poured, as one mixture", "Such as acetone = 40 mL; water = 1 L.", what, Ask::Text) }
                 { field(2, "In the container already", "Such as 12 L; half of what it may hold when left out.", held, Ask::Text) }
             </div>
@@ -102,8 +112,9 @@ fn Pour(props: &Props) -> Html {
                 } }
             </div>
         </section>
+        </>
     }
 }
 
 /// The paths of its fields, which no plan has.
-const PATHS: [&str; 3] = ["pour.into", "pour.what", "pour.held"];
+const PATHS: [&str; 4] = ["pour.into", "pour.what", "pour.held", "labels.size"];

@@ -11,6 +11,7 @@ mod desk;
 mod energy;
 mod finding;
 mod hazard;
+mod labels;
 mod leaf;
 mod places;
 mod plates;

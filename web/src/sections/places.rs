@@ -58,15 +58,17 @@ pub(super) fn all_figures(book: &Book, w: usize) -> impl Iterator<Item = &Figure
 /// The figures that `wanted` takes, each once.
 pub(super) fn lines(book: &Book, w: usize, wanted: impl Fn(&Figure) -> bool) -> Vec<Line> {
     let mut out: Vec<Line> = Vec::new();
+    // What only a later route has stands behind what it follows there, so that totals stay at the end.
+    let mut last = 0;
     for figure in all_figures(book, w).filter(|f| wanted(f)) {
-        if !out.iter().any(|line| line.id == figure.id) {
-            out.push(Line {
-                label: figure.title.clone(),
-                id: figure.id.clone(),
-                measure: figure.measure,
-                part: false,
-            });
+        if let Some(at) = out.iter().position(|line| line.id == figure.id) {
+            last = at + 1;
+            continue;
         }
+        let line =
+            Line { label: figure.title.clone(), id: figure.id.clone(), measure: figure.measure, part: false };
+        out.insert(last, line);
+        last += 1;
     }
     out
 }

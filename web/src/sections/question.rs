@@ -23,14 +23,18 @@ pub(super) static SECTION: Section = Section {
     body: draw,
 };
 
+/// What is folded away or for paper comes a turn later than what can be typed into at once.
 fn draw(view: &View) -> Html {
     html! {
         <>
             <div class="form halves">
-                <div>{ about(view) }{ streams(view) }{ more(view) }</div>
+                <div>
+                    { about(view) }{ streams(view) }
+                    if view.whole { { more(view) } }
+                </div>
                 <div>{ works(view) }</div>
             </div>
-            { printed(view) }
+            if view.whole { { printed(view) } }
         </>
     }
 }
@@ -149,12 +153,20 @@ fn streams(view: &View) -> Html {
 fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
     let path = format!("site.streams[{i}]");
     let id = view.document.ids.streams.get(i).copied().unwrap_or_default();
-    let at = |key: &str| format!("{path}.{key}");
-    let solid = stream.holds.as_deref() == Some("solid");
     html! {
         <details class="card" key={id} id={path.clone()}>
             <summary><h4>{ &stream.name }</h4>{ ": " }{ stream_words(stream) }</summary>
-            { tools(Item::Stream(i), &path, &stream.name, count, &view.edit) }
+            if view.whole { { stream_fields(view, i, stream, count, &path) } }
+        </details>
+    }
+}
+
+fn stream_fields(view: &View, i: usize, stream: &Stream, count: usize, path: &str) -> Html {
+    let at = |key: &str| format!("{path}.{key}");
+    let solid = stream.holds.as_deref() == Some("solid");
+    html! {
+        <>
+            { tools(Item::Stream(i), path, &stream.name, count, &view.edit) }
             <Name item={Item::Stream(i)} id={at("name")} label="Name of the stream" value={stream.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
             { Asked::text(at("holds"), "Holds", stream.holds.clone().unwrap_or_default())
@@ -170,13 +182,13 @@ fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
             { Asked::text(at("treatment"), "Treatment on site", stream.treatment.clone().unwrap_or_default())
                 .need(Need::Default("none", DEFINITION))
                 .ask(Ask::Choice(options("none (left out)", &["recycling", "degradation", "passivation", "none"]))).draw(view) }
-            { for stream_waste(view, &path, stream) }
-        </details>
+            { for stream_waste(view, path, stream) }
+        </>
     }
 }
 
 /// What the waste desk asks of a stream: key, label, hint, words to choose from.
-const STREAM_WASTE: [(&str, &str, &str, &[&str]); 7] = [
+const STREAM_WASTE: [(&str, &str, &str, &[&str]); 8] = [
     ("ph", "pH in its containers", "Lowest to highest as measured, such as 6 to 8.", &[]),
     ("flash_point", "Flash point by test", "Closed cup, such as 26 °C, or none.", &[]),
     ("unused", "Takes unused product", "Expired stock, not used solvent.", &["true", "false"]),
@@ -198,7 +210,13 @@ const STREAM_WASTE: [(&str, &str, &str, &[&str]); 7] = [
         "Satellite: at the bench, under the rules of the United States.",
         &["central", "satellite"],
     ),
-    ("counted", "Counts towards the month", "", &["when made", "reclaimed", "treated at once"]),
+    (
+        "counted",
+        "Counts towards the month",
+        "",
+        &["when made", "reclaimed", "reclaimed at once", "treated at once"],
+    ),
+    ("goes_round", "Goes round, where it is reclaimed", "Counts once a month, such as 20 kg.", &[]),
 ];
 
 fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl Iterator<Item = Html> + 'a {
@@ -210,7 +228,8 @@ fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl I
             "made_of" => stream.made_of.clone(),
             "density_mark" => Some(text_of(stream.density_mark.as_ref())),
             "area" => stream.area.clone(),
-            _ => stream.counted.clone(),
+            "counted" => stream.counted.clone(),
+            _ => stream.goes_round.clone(),
         };
         let ask = match *key {
             "unused" => Ask::YesNo("no (left out)".into()),

@@ -1,15 +1,17 @@
-//! Section "How sure": intervals, odds, what matters most, and the case in every draw.
-use super::{Section, View, When};
-use crate::document::Document;
-use crate::draws::{COVERAGE, Drawn, follows};
+//! Section "How sure": intervals, odds, what matters most, and the case in every draw. Read in turns, so that no key stroke
+//! waits for it; dimmed until it has caught up.
+use super::{Section, When};
+use crate::draws::{COVERAGE, Drawn, Draws, follows, in_turns};
 use crate::parts::{ByRc, words_table};
 use crate::picture::{intervals, to_html};
+use crate::reckon::Book;
 use crate::show::{unbroken, with_minus};
+use gloo::timers::callback::Timeout;
+use std::rc::Rc;
 use thimbleworth::account::Account;
 use thimbleworth::case::{drawn, switch, turning_results};
 use thimbleworth::letter::sentence;
-use thimbleworth::odds::{Reading, Sampled};
-use thimbleworth::program::WorkloadProgram;
+use thimbleworth::odds::{Brief, Reading, Sampled};
 use thimbleworth::report::{PaperTable, money_words, odds_words, stopped_words, turn_words};
 use yew::prelude::*;
 
@@ -18,136 +20,229 @@ pub(super) static SECTION: Section = Section {
     title: "How sure",
     lead: "Every uncertain amount drawn 10,000 times, by the same numbers for all routes; intervals hold 95\u{202f}% of the draws.",
     when: When::Follows,
-    body: draw,
+    body: |view| html! { <Sure book={ByRc(Rc::clone(&view.reckoned.book))} /> },
 };
-
-fn draw(view: &View) -> Html {
-    let works = 0..view.plan().workloads.len();
-    works.map(|w| html! { <Sure key={w} document={view.document.clone()} {w} /> }).collect()
-}
 
 #[derive(Properties, PartialEq)]
 struct SureProps {
-    document: ByRc<Document>,
-    w: usize,
+    book: ByRc<Book>,
+}
+
+/// What stands there, and for which figures.
+#[derive(Clone, PartialEq)]
+struct Shown {
+    book: ByRc<Book>,
+    html: Html,
 }
 
 #[component]
 fn Sure(props: &SureProps) -> Html {
-    let w = props.w;
+    let shown = use_state_eq(|| None::<Shown>);
     let drawn = use_context::<Drawn>().flatten();
-    let chosen = use_state_eq(String::new);
-    // A run that has turned to another plan leaves what stands.
-    let last = use_mut_ref(Html::default);
-    let html = use_memo((drawn.clone(), (*chosen).clone()), |(drawn, id)| {
-        let chosen = chosen.clone();
-        let found = drawn.as_ref().and_then(|d| {
-            d.read(|run, account| {
-                let work = account.program.as_ref()?.workloads.get(w)?;
-                let reading = Reading::new(account, run, w, COVERAGE)?;
-                Some(html! { <>{ picture(&reading, work, w, id, chosen) }{ read(run, account, &reading, w, work) }</> })
-            })
+    {
+        let shown = shown.clone();
+        use_effect_with(drawn, move |drawn| {
+            if let Some(draws) = drawn.clone() {
+                let then = Callback::from(move |s| shown.set(Some(s)));
+                Reader { draws, rows: Vec::new(), at: (0, 0), cased: false, read: Vec::new(), then }.go_on();
+            }
         });
-        if let Some(found) = found {
-            *last.borrow_mut() = found;
-        }
-        last.borrow().clone()
-    });
-    follows(&drawn, &props.document, (*html).clone())
+    }
+    let (of, html) = match &*shown {
+        Some(shown) => (Some(&shown.book), shown.html.clone()),
+        None => (None, Html::default()),
+    };
+    follows(of, &props.book, html)
+}
+
+#[derive(Properties, PartialEq)]
+struct ChosenProps {
+    draws: Draws,
+    w: usize,
 }
 
 /// The picture of one figure, and the choice of it.
-fn picture(
-    reading: &Reading<'_>,
-    work: &WorkloadProgram,
-    w: usize,
-    id: &str,
-    chosen: UseStateHandle<String>,
-) -> Html {
-    let figures: Vec<_> = reading.ids().into_iter().filter_map(|id| reading.figure(id)).collect();
-    let Some(shown) = figures.iter().find(|f| f.id == id).or_else(|| figures.first()) else {
-        return Html::default();
-    };
-    let onchange = Callback::from(move |event: Event| {
-        if let Some(select) = event.target_dyn_into::<web_sys::HtmlSelectElement>() {
-            chosen.set(select.value());
-        }
-    });
-    let field = format!("sure-figure-{w}");
-    html! {
-        <>
-            <div class="field">
-                <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
-                <select id={field} {onchange}>
-                    { for figures.iter().map(|f| html! { <option value={f.id.clone()} selected={f.id == shown.id}>{ sentence(&f.title) }</option> }) }
-                </select>
-            </div>
-            { for intervals(&format!("intervals-{w}"), work, shown, COVERAGE).map(|p| to_html(&p)) }
-        </>
-    }
-}
-
-fn read(run: &Sampled, account: &Account, reading: &Reading<'_>, w: usize, work: &WorkloadProgram) -> Html {
-    let mut rows: Vec<Vec<String>> = Vec::new();
-    for figure in reading.ids().into_iter().filter_map(|id| reading.figure(id)) {
-        for (r, spread) in figure.routes.iter().enumerate() {
-            let Some(spread) = spread else { continue };
-            let show = |v: f64| figure.measure.shown(v);
-            let (low, high) = spread.drawn.map_or(("not known".to_owned(), String::new()), |s| {
-                (show(s.symmetric.low), show(s.symmetric.high))
-            });
-            let rival = figure.rivals.iter().find(|x| x.route == r);
-            let odds = rival.map_or(String::new(), |x| odds_words(x.less, x.same));
-            rows.push(vec![
-                sentence(&figure.title),
-                work.routes[r].name.clone(),
-                show(spread.central),
-                low,
-                high,
-                odds,
-            ]);
-        }
-    }
-    let head = &["Figure, a year", "Route", "Central", "From", "To", "Than the present"];
-    let table = PaperTable { title: "Intervals and odds".to_owned(), head, rows };
-    html! {
-        <>
-            { for stopped_words(work, reading).into_iter().map(|text| html! { <p>{ unbroken(&text) }</p> }) }
-            { words_table(format!("sure-{w}"), &table) }
-            { for (0..work.routes.len()).filter(|r| *r != work.present).map(|r| case(run, account, reading, w, r)) }
-        </>
-    }
-}
-
-/// The case of a route: in words, where it turns, and what matters most as bars.
-fn case(run: &Sampled, account: &Account, reading: &Reading<'_>, w: usize, r: usize) -> Html {
-    let Some(work) = account.program.as_ref().and_then(|p| p.workloads.get(w)) else {
-        return Html::default();
-    };
-    let name = &work.routes[r].name;
-    let (id, words) = match (switch(account, w, r), drawn(account, run, w, r, COVERAGE)) {
-        (Ok(case), Some(drawn)) => {
-            let mut words = vec![money_words(name, &case, &drawn, COVERAGE)];
-            words.extend(case.not_ranked.iter().map(|why| format!("Shown, but not ranked: {why}.")));
-            words.extend(turning_results(account, w, r).map(|turn| sentence(&turn_words(turn)) + "."));
-            ("cost.year", words)
-        }
-        _ => ("waste.total.mass", Vec::new()),
-    };
-    let matters = reading.matters(id, r, Some(work.present));
-    html! {
-        <>
-            <h4>{ format!("{name} in place of {}", work.routes[work.present].name) }</h4>
-            { for words.into_iter().map(|text| html! { <p>{ with_minus(&unbroken(&text)) }</p> }) }
-            if !matters.is_empty() {
-                <p>{ if id == "cost.year" { "What matters most for what it saves:" } else { "What matters most for the difference in waste:" } }</p>
-                <ul>
-                    { for matters.iter().take(5).map(|m| {
-                        let percent = format!("{} %", thimbleworth::quantity::significant(m.share * 100.0, 2));
-                        html! { <li><meter value={m.share.to_string()} aria-label={m.words.clone()}>{ &percent }</meter>{ unbroken(&format!(" {percent} {}", m.words)) }</li> }
-                    }) }
-                </ul>
+#[component]
+fn Chosen(props: &ChosenProps) -> Html {
+    let chosen = use_state_eq(String::new);
+    let w = props.w;
+    let onchange = {
+        let chosen = chosen.clone();
+        Callback::from(move |event: Event| {
+            if let Some(select) = event.target_dyn_into::<web_sys::HtmlSelectElement>() {
+                chosen.set(select.value());
             }
+        })
+    };
+    // A run that has turned to another plan leaves what stands.
+    let last = use_mut_ref(Html::default);
+    let html = use_memo((props.draws.clone(), (*chosen).clone()), |(draws, id)| {
+        let drawn = || {
+            let run = draws.run()?;
+            let account = &draws.book.account;
+            let work = account.program.as_ref()?.workloads.get(w)?;
+            let reading = Reading::new(account, &run, w, COVERAGE)?;
+            let briefs = |id: &str| (0..work.routes.len()).map(|r| reading.brief(id, r)).collect::<Vec<_>>();
+            let ids = reading.ids();
+            let shown = ids.iter().find(|i| *i == id).or_else(|| ids.first()).copied()?;
+            let titles = ids.iter().filter_map(|id| {
+                let title = account
+                    .workloads
+                    .get(w)?
+                    .routes
+                    .iter()
+                    .flatten()
+                    .flat_map(|r| &r.figures)
+                    .find(|f| f.id == *id)?;
+                Some((*id, sentence(&title.title)))
+            });
+            let field = format!("sure-figure-{w}");
+            Some(html! {
+                <>
+                    <div class="field">
+                        <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
+                        <select id={field} {onchange}>
+                            { for titles.map(|(id, title)| html! { <option value={id.to_owned()} selected={id == shown}>{ title }</option> }) }
+                        </select>
+                    </div>
+                    { for intervals(&format!("intervals-{w}"), work, &briefs(shown), COVERAGE).map(|p| to_html(&p)) }
+                </>
+            })
+        };
+        if let Some(html) = drawn() {
+            *last.borrow_mut() = html;
+        }
+        last.borrow().clone()
+    });
+    (*html).clone()
+}
+
+/// Reads what the draws say piece by piece, so that no turn takes long.
+struct Reader {
+    draws: Draws,
+    /// Of the table of the piece of work that is being read.
+    rows: Vec<Vec<String>>,
+    /// The piece of work and the piece of it that comes next.
+    at: (usize, usize),
+    /// Whether the route that was read last has a case.
+    cased: bool,
+    read: Vec<Html>,
+    then: Callback<Shown>,
+}
+
+impl Reader {
+    /// A turn, and then the next; a run that has turned to another plan meanwhile lets it drop.
+    fn go_on(mut self) {
+        if self.draws.run().is_none() {
+            return;
+        }
+        if in_turns(&mut || self.piece()) {
+            let html = self.read.into_iter().collect();
+            self.then.emit(Shown { book: self.draws.book, html });
+        } else {
+            Timeout::new(0, move || self.go_on()).forget();
+        }
+    }
+
+    /// Reads the next piece; whether there was one.
+    fn piece(&mut self) -> bool {
+        let (account, (w, at)) = (&self.draws.book.account, self.at);
+        let Some(work) = account.program.as_ref().and_then(|p| p.workloads.get(w)) else { return false };
+        let Some(run) = self.draws.run() else { return false };
+        let reading = Reading::new(account, &run, w, COVERAGE);
+        let ids = reading.as_ref().map_or(Vec::new(), Reading::ids);
+        let routes = work.routes.len();
+        self.at.1 += 1;
+        let Some(reading) = &reading else {
+            self.at = (w + 1, 0);
+            return true;
+        };
+        if let Some(id) = at.checked_div(routes).and_then(|i| ids.get(i)) {
+            self.rows.extend(
+                reading.brief(id, at % routes).map(|brief| row(&brief, &work.routes[at % routes].name)),
+            );
+            return true;
+        }
+        let at = at - ids.len() * routes;
+        if at == 0 {
+            let head = &["Figure, a year", "Route", "Central", "From", "To", "Than the present"];
+            let title = "Intervals and odds".to_owned();
+            let table = PaperTable { title, head, rows: std::mem::take(&mut self.rows) };
+            self.read.push(html! {
+                <>
+                    <Chosen key={w} draws={self.draws.clone()} {w} />
+                    { for stopped_words(work, reading).into_iter().map(|text| html! { <p>{ unbroken(&text) }</p> }) }
+                    { words_table(format!("sure-{w}"), &table) }
+                </>
+            });
+        }
+        match at / 2 {
+            r if r >= routes => self.at = (w + 1, 0),
+            r if r == work.present => {}
+            r if at.is_multiple_of(2) => {
+                let words = case(&run, account, w, r);
+                self.cased = !words.is_empty();
+                let title = format!("{} in place of {}", work.routes[r].name, work.routes[work.present].name);
+                self.read.push(html! {
+                    <>
+                        <h4>{ title }</h4>
+                        { for words.into_iter().map(|text| html! { <p>{ with_minus(&unbroken(&text)) }</p> }) }
+                    </>
+                });
+            }
+            r => self.read.push(matters(reading, self.cased, work.present, r)),
+        }
+        true
+    }
+}
+
+fn row(brief: &Brief<'_>, route: &str) -> Vec<String> {
+    let show = |v: f64| brief.figure.measure.shown(v);
+    let (low, high) = brief
+        .drawn
+        .map_or(("not known".to_owned(), String::new()), |s| (show(s.symmetric.low), show(s.symmetric.high)));
+    vec![
+        sentence(&brief.figure.title),
+        route.to_owned(),
+        show(brief.central),
+        low,
+        high,
+        brief.odds.map_or(String::new(), |(less, same)| odds_words(less, same)),
+    ]
+}
+
+/// The case of a route in words, and where it turns; empty where there is none.
+fn case(run: &Sampled, account: &Account, w: usize, r: usize) -> Vec<String> {
+    let (Ok(case), Some(drawn)) = (switch(account, w, r), drawn(account, run, w, r, COVERAGE)) else {
+        return Vec::new();
+    };
+    let name = account.program.as_ref().and_then(|p| Some(p.workloads.get(w)?.routes.get(r)?.name.as_str()));
+    let mut words = vec![money_words(name.unwrap_or_default(), &case, &drawn, COVERAGE)];
+    words.extend(case.not_ranked.iter().map(|why| format!("Shown, but not ranked: {why}.")));
+    words.extend(turning_results(account, w, r).map(|turn| sentence(&turn_words(turn)) + "."));
+    words
+}
+
+/// What matters most, as bars: for what a route saves where it has a case, else for the difference in waste.
+fn matters(reading: &Reading<'_>, cased: bool, present: usize, r: usize) -> Html {
+    let (id, lead) = if cased {
+        ("cost.year", "What matters most for what it saves:")
+    } else {
+        ("waste.total.mass", "What matters most for the difference in waste:")
+    };
+    let matters = reading.matters(id, r, Some(present));
+    if matters.is_empty() {
+        return Html::default();
+    }
+    html! {
+        <>
+            <p>{ lead }</p>
+            <ul>
+                { for matters.iter().take(5).map(|m| {
+                    let percent = format!("{} %", thimbleworth::quantity::significant(m.share * 100.0, 2));
+                    html! { <li><meter value={m.share.to_string()} aria-label={m.words.clone()}>{ &percent }</meter>{ unbroken(&format!(" {percent} {}", m.words)) }</li> }
+                }) }
+            </ul>
         </>
     }
 }

@@ -1,7 +1,10 @@
 //! The papers of the waste desk and the pour check.
 
-use super::{csv, plan_with, run, run_on};
+use super::{csv, folder, plan_with, run, run_on};
 use serde_json::json;
+use std::fs;
+use std::io::Read;
+use std::path::Path;
 
 /// The example of a water laboratory, under the rules of the United States.
 fn plan() -> String {
@@ -28,6 +31,59 @@ fn every_paper_is_written_in_both_formats() {
     }
     let all = run_on(plan.as_bytes(), &["waste", "-"]);
     assert_eq!(all.out.lines().filter(|l| l.starts_with("# ")).count(), 8);
+}
+
+#[test]
+fn papers_are_written_as_a_workbook() {
+    let plan = plan_with("/site/name", json!("=cmd|'/C calc'!A1"));
+    let book = folder("waste_workbook").join("papers.xlsx");
+    let to = book.to_str().unwrap();
+    assert_eq!(
+        run_on(plan.as_bytes(), &["waste", "-", "--format", "xlsx"]).status,
+        2,
+        "no workbook on a terminal"
+    );
+    let done = run_on(plan.as_bytes(), &["waste", "-", "--format", "xlsx", "--output", to]);
+    assert_eq!(done.status, 0, "{}", done.complaints);
+    let (names, all) = sheets(&book);
+    assert_eq!(names, ["codes", "run", "label", "drum", "months", "pick-ups", "load", "reporting"]);
+    assert!(all.contains("=cmd|") && !all.contains("<f>") && !all.contains("<f "), "text is never a formula");
+    // The same numbers as in the CSV, as numbers.
+    let table = run_on(plan.as_bytes(), &["waste", "-", "--paper", "load", "--format", "csv"]);
+    let rows = csv(&table.out);
+    let kg = &rows.iter().find(|r| r.len() == 15 && r[0] != "Stream").unwrap()[13];
+    assert!(kg.parse::<f64>().unwrap() > 0.0 && all.contains(&format!("<v>{kg}</v>")), "{kg}");
+
+    let book = book.with_file_name("pour.xlsx");
+    let to = book.to_str().unwrap();
+    let pour = ["pour", "-", "--into", "drain", "acetone=1 L", "--format", "xlsx", "--output", to];
+    let done = run_on(plan.as_bytes(), &pour);
+    assert_eq!(done.status, 0, "{}", done.complaints);
+    let (names, all) = sheets(&book);
+    assert_eq!(names, ["pour"]);
+    assert!(all.contains("the drain is closed"));
+}
+
+/// The names of a workbook's sheets and the text of all its parts.
+fn sheets(book: &Path) -> (Vec<String>, String) {
+    let mut archive = zip::ZipArchive::new(fs::File::open(book).unwrap()).unwrap();
+    let (mut names, mut all) = (Vec::new(), String::new());
+    for i in 0..archive.len() {
+        let mut file = archive.by_index(i).unwrap();
+        let mut text = String::new();
+        if file.name().ends_with(".xml") {
+            file.read_to_string(&mut text).unwrap();
+        }
+        if file.name() == "xl/workbook.xml" {
+            names = text
+                .split("<sheet name=\"")
+                .skip(1)
+                .filter_map(|s| Some(s.split_once('"')?.0.to_owned()))
+                .collect();
+        }
+        all.push_str(&text);
+    }
+    (names, all)
 }
 
 #[test]
@@ -76,6 +132,42 @@ fn pouring_is_checked_against_the_container() {
         (&["--into", "halogenated", "acetone=0 mL"][..], "above zero"),
     ] {
         let refused = pour(args);
+        assert_eq!(refused.status, 2, "{}", refused.out);
+        assert!(refused.complaints.contains(words), "{}", refused.complaints);
+    }
+}
+
+#[test]
+fn the_mix_keeps_within_its_budget() {
+    let plan = run(&["example", "harbour-sediment"]).out;
+    let mix = |args: &[&str]| run_on(plan.as_bytes(), &[&["mix", "-", "--format", "csv"], args].concat());
+    let free = mix(&["--figure", "waste.total.mass"]);
+    assert_eq!(free.status, 0, "{}", free.complaints);
+    assert!(free.out.starts_with("The mix with least all waste streams: mass\r\n"), "{}", free.out);
+    // Whatever is sought keeps what it promises, by the printed figures.
+    for budget in ["-1e9", "-20000", "-1000", "0", "1000", "20000", "1e9"] {
+        let done = mix(&["--figure", "waste.total.mass", "--budget", budget]);
+        assert_eq!(done.status, 0, "{}", done.complaints);
+        let sought: Vec<Vec<String>> = csv(&done.out)
+            .into_iter()
+            .filter(|r| r.last().is_some_and(|l| l.starts_with("sought")))
+            .collect();
+        if budget == "-1e9" {
+            assert!(sought.is_empty() && done.out.contains("No mix keeps within that"));
+            continue;
+        }
+        for row in sought {
+            let more: f64 = row[3].parse().unwrap();
+            assert!(more <= budget.parse::<f64>().unwrap() * (1.0 + 1e-3) + 1.0, "{budget}: {row:?}");
+        }
+    }
+    for (args, words) in [
+        (&["--figure", "waste.totl.mass"][..], "there are: waste.hazardous, "),
+        (&["--figure", "metric.nothing"][..], "no route has a figure"),
+        (&["--price", "-3"][..], "--price"),
+        (&["--budget", "1", "--price", "3"][..], "cannot be used with"),
+    ] {
+        let refused = mix(args);
         assert_eq!(refused.status, 2, "{}", refused.out);
         assert!(refused.complaints.contains(words), "{}", refused.complaints);
     }

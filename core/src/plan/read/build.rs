@@ -150,6 +150,7 @@ fn stream(node: &Node) -> Stream {
         density_mark: get(node, "density_mark").map(field),
         area: text(node, "area"),
         counted: text(node, "counted"),
+        goes_round: text(node, "goes_round"),
     }
 }
 

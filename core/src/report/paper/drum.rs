@@ -1,7 +1,7 @@
 //! What a full container holds, summed from everything poured in, with a draft of its waste profile.
 
 use super::{Paper, PaperTable, Sheet, mass, percent, volume};
-use crate::account::StreamDesk;
+use crate::account::{StreamDesk, classified};
 use crate::code::Flash;
 use crate::order;
 use crate::quantity::{Kind, show, significant};
@@ -49,6 +49,17 @@ fn one(sheet: &Sheet<'_>, s: &StreamDesk<'_>) -> PaperTable {
         Some(Flash::AtK(k)) => show(k, Kind::Temperature),
     };
     put("flash point", flash, String::new());
+    // How many batches it takes to fill one: N = n M / m, with n batches a year that bring the stream m a year.
+    if let Some(full) = full {
+        for (work, pouring) in sheet.program.workloads.iter().zip(&sheet.desk.routes) {
+            let Some(pouring) = pouring else { continue };
+            if classified(&[*pouring], sheet.site).iter().any(|own| own.stream == s.stream) {
+                let batches = pouring.account.runs.batches * full / kg;
+                let what = ["batches of ", &work.name, ", ", &pouring.route.name].concat();
+                put(&what, significant(batches, 3), String::new());
+            }
+        }
+    }
     put("codes", s.codes().join(" "), String::new());
     put("open until tested", s.open().join(" "), String::new());
     let mut charges: Vec<&str> = s.contents.charges.iter().map(|c| c.what.as_str()).collect();

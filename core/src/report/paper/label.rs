@@ -3,7 +3,7 @@
 use super::{Paper, PaperTable, Sheet, mass, rests_on, volume};
 use crate::account::StreamDesk;
 use crate::code::Rules;
-use crate::hazard::label;
+use crate::hazard::{LABEL_SIZE, label, label_size_mm};
 use crate::order;
 use crate::source::{Source, Standing};
 
@@ -22,15 +22,43 @@ const EU: [Source; 2] = [
     Source::new("ADR 2025 5.2, marking and labelling of packages", Standing::FromMemory),
 ];
 
+/// Where the marks of transport stand, whose letters have a size of their own.
+const MARKS: Source = Source::new(
+    "49 CFR 172.301(a)(1), letters of 12 mm, 6 mm up to 30 L; 49 CFR 172.407, diamonds of 100 mm",
+    Standing::FromMemory,
+);
+
 pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     let us = sheet.rules() == Rules::Us;
-    Paper {
-        title: "Container labels".into(),
-        lead: vec![
-            "One table a container; fits 100 × 70 mm with one to four materials, 148 × 105 mm with more. Lines are filled in by hand.".into(),
-        ],
-        tables: sheet.desk.streams.iter().map(|s| one(sheet, s, us)).collect(),
-        foot: rests_on(if us { &US } else { &EU }),
+    let mut tables: Vec<PaperTable> = sheet.desk.streams.iter().map(|s| one(sheet, s, us)).collect();
+    let mut lead = vec![
+        "One table a container. Lines are filled in by hand; diamonds of transport are labels of their own."
+            .to_owned(),
+    ];
+    let mut foot = rests_on(if us { &US } else { &EU });
+    if us {
+        foot.extend(rests_on(&[MARKS]));
+    } else {
+        lead.push("The sizes at the end are the least of the Union's rules for chemicals on the market; waste is not bound by them, and they are taken as a measure. Pictograms are put on.".to_owned());
+        foot.extend(rests_on(&[LABEL_SIZE]));
+        tables.push(sizes(sheet));
+    }
+    Paper { title: "Container labels".into(), lead, tables, foot }
+}
+
+/// The least size for each container.
+fn sizes(sheet: &Sheet<'_>) -> PaperTable {
+    let mut rows = Vec::new();
+    for s in &sheet.desk.streams {
+        let Some(m3) = sheet.stream(s).and_then(|u| u.container_m3) else { continue };
+        let ([short, long], side) = label_size_mm(m3);
+        let by = |a: u16, b: u16| [&a.to_string(), " × ", &b.to_string()].concat();
+        rows.push(vec![sheet.name(s).to_owned(), volume(m3), by(short, long), by(side, side)]);
+    }
+    PaperTable {
+        title: "Least sizes".into(),
+        head: &["Container", "Holds", "Label, mm", "Each pictogram, mm"],
+        rows,
     }
 }
 

@@ -6,12 +6,14 @@ mod codes;
 mod drum;
 mod label;
 mod load;
+mod mix;
 mod months;
 mod pick_ups;
 mod pour;
 mod reporting;
 mod run;
 
+pub use mix::mix_paper;
 pub use pour::{Asked, pour_paper};
 
 use super::csv::text_cell;
@@ -237,34 +239,46 @@ pub fn paper_markdown(paper: &Paper) -> String {
     out
 }
 
+fn csv_row(out: &mut String, cells: &mut dyn Iterator<Item = &str>) {
+    for (i, cell) in cells.enumerate() {
+        if i > 0 {
+            out.push(',');
+        }
+        out.push_str(&text_cell(cell));
+    }
+    out.push_str("\r\n");
+}
+
+/// A table of words as CSV (RFC 4180), a line of headings first. A text that a spreadsheet would take for a formula gets an
+/// apostrophe before it.
+#[must_use]
+pub fn words_csv(head: &[&str], rows: &[Vec<String>]) -> String {
+    let mut out = String::new();
+    csv_row(&mut out, &mut head.iter().copied());
+    for cells in rows {
+        csv_row(&mut out, &mut cells.iter().map(String::as_str));
+    }
+    out
+}
+
 /// A paper as CSV (RFC 4180): title, sentences, tables with a line of headings each, an empty line between them. A text that a
 /// spreadsheet would take for a formula gets an apostrophe before it.
 #[must_use]
 pub fn paper_csv(paper: &Paper) -> String {
     let mut out = String::new();
-    let mut row = |cells: &mut dyn Iterator<Item = &str>| {
-        for (i, cell) in cells.enumerate() {
-            if i > 0 {
-                out.push(',');
-            }
-            out.push_str(&text_cell(cell));
+    let lines = |out: &mut String, lines: &[String]| {
+        for line in lines {
+            csv_row(out, &mut std::iter::once(line.as_str()));
         }
-        out.push_str("\r\n");
     };
-    for line in std::iter::once(&paper.title).chain(&paper.lead) {
-        row(&mut std::iter::once(line.as_str()));
-    }
+    lines(&mut out, std::slice::from_ref(&paper.title));
+    lines(&mut out, &paper.lead);
     for table in &paper.tables {
-        row(&mut std::iter::empty());
-        row(&mut std::iter::once(table.title.as_str()));
-        row(&mut table.head.iter().copied());
-        for cells in &table.rows {
-            row(&mut cells.iter().map(String::as_str));
-        }
+        out.push_str("\r\n");
+        lines(&mut out, std::slice::from_ref(&table.title));
+        out.push_str(&words_csv(table.head, &table.rows));
     }
-    row(&mut std::iter::empty());
-    for line in &paper.foot {
-        row(&mut std::iter::once(line.as_str()));
-    }
+    out.push_str("\r\n");
+    lines(&mut out, &paper.foot);
     out
 }

@@ -26,8 +26,18 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     let mut rows = Vec::new();
     for line in &desk.lines {
         let mut row = months(&line.what, &line.kg);
-        row.extend([if line.counted { "yes" } else { "no" }.to_owned(), line.why.to_owned()]);
+        let counts = match (line.counted, line.counts_kg == line.kg) {
+            (false, _) => "no",
+            (true, true) => "yes",
+            (true, false) => "in part",
+        };
+        row.extend([counts.to_owned(), line.why.to_owned()]);
         rows.push(row);
+        if counts == "in part" {
+            let mut row = months(&[&line.what, ", of it counted"].concat(), &line.counts_kg);
+            row.extend([String::new(), "what goes round, once in each month".to_owned()]);
+            rows.push(row);
+        }
     }
     let mut total = |what: &str, of: fn(&crate::generator::Made) -> f64| {
         let mut row = months(what, &desk.made.map(|m| of(&m)));

@@ -1,7 +1,7 @@
 //! The pick-up calendar: when containers are full, by when they must go, when they go.
 
 use super::{Paper, PaperTable, Sheet, kilograms, mass, rests_on, volume};
-use crate::generator::{Clock, STORAGE, date_of};
+use crate::generator::{Clock, SATELLITE_DAYS, SATELLITE_M3, STORAGE, date_of};
 use crate::quantity::{Kind, show};
 
 pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
@@ -45,12 +45,18 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
             .iter()
             .filter(|l| l.clock == Clock::WhenFull)
             .fold(0.0, |s, l| s + l.takes_m3);
-        // 55 gal = 0.2082 m³
-        if open > 0.2082 {
+        if open > SATELLITE_M3 {
             lead.push(
-                ["Together they may reach ", &volume(open), ": more than one satellite area may hold."]
-                    .concat(),
+                [
+                    "Together they may reach ",
+                    &volume(open),
+                    ": more than one satellite area may hold. All of them are taken as one area.",
+                ]
+                .concat(),
             );
+        }
+        if !calendar.excess.is_empty() {
+            lead.push([&calendar.excess.len().to_string(), " containers leave the area part-full, because it holds more than 55 gal: the day is marked on them, and they are gone from it three days later at the latest."].concat());
         }
     }
     for (days, what) in [
@@ -74,36 +80,59 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
         .concat(),
     );
     for s in desk.streams.iter().filter(|s| !desk.stored.contains(&s.stream)) {
-        lead.push([sheet.name(s), " is not in it: no container size, or treated at once."].concat());
+        lead.push(
+            [sheet.name(s), " is not in it: no container size, or treated or reclaimed at once."].concat(),
+        );
     }
     let mut foot = vec!["The year begins empty and has 365 days; what a month brings comes in equal parts on each of its days. Other waste of the site is not stored here.".to_owned()];
     if desk.categories.is_some() {
         foot.extend(rests_on(&[STORAGE, crate::generator::SATELLITE]));
     }
+    let mut tables = Vec::new();
+    if !calendar.excess.is_empty() {
+        let rows = calendar.excess.iter().filter_map(|(day, at)| {
+            let c = calendar.containers.get(*at)?;
+            Some(vec![
+                line(c.line)?.name.clone(),
+                date_of(*day),
+                date(Some(day + SATELLITE_DAYS)),
+                volume(c.m3),
+            ])
+        });
+        tables.push(PaperTable {
+            title: "More than 55 gal in the satellite area".into(),
+            head: &["Stream", "Marked", "Gone by", "Holds"],
+            rows: rows.collect(),
+        });
+    }
     Paper {
         title: "Pick-up calendar".into(),
         lead,
-        tables: vec![
-            PaperTable {
-                title: "Pick-ups".into(),
-                head: &["Date", "Containers", "kg"],
-                rows: pick_ups.collect(),
-            },
-            PaperTable {
-                title: "Containers".into(),
-                head: &[
-                    "Stream",
-                    "First drop",
-                    "Full",
-                    "Time counts from",
-                    "Must go by",
-                    "Goes",
-                    "Days",
-                    "Holds",
-                ],
-                rows: containers.collect(),
-            },
-        ],
+        tables: [
+            vec![
+                PaperTable {
+                    title: "Pick-ups".into(),
+                    head: &["Date", "Containers", "kg"],
+                    rows: pick_ups.collect(),
+                },
+                PaperTable {
+                    title: "Containers".into(),
+                    head: &[
+                        "Stream",
+                        "First drop",
+                        "Full",
+                        "Time counts from",
+                        "Must go by",
+                        "Goes",
+                        "Days",
+                        "Holds",
+                    ],
+                    rows: containers.collect(),
+                },
+            ],
+            tables,
+        ]
+        .concat(),
         foot,
     }
 }

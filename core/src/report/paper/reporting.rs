@@ -1,11 +1,12 @@
 //! What registers and lists may ask for, asserted only as far as their scope is known.
 
 use super::{Paper, PaperTable, Sheet, kilograms};
-use crate::account::Pouring;
+use crate::account::{Pouring, Standing};
 use crate::code::{Activity, Rules};
+use crate::generator::Category;
 use crate::ledger::{Direction, Place};
-use crate::material::Substance;
 use crate::material::table::Table;
+use crate::material::{Class, Substance};
 use std::sync::OnceLock;
 
 const TABLE: Table = Table { name: "reporting.csv", text: include_str!("../../../data/reporting.csv") };
@@ -13,6 +14,8 @@ const TABLE: Table = Table { name: "reporting.csv", text: include_str!("../../..
 const TRI_OTHERWISE_USED_KG: f64 = 4_535.923_7;
 /// 100 t of volatile organic compounds without methane to air; kg.
 const NMVOC_KG: f64 = 100_000.0;
+/// Hazardous waste that leaves a facility of the pollutant register, 2 t (Article 5(1)(b)); kg.
+const TRANSFER_KG: f64 = 2_000.0;
 /// Vapour pressure from which an organic compound is volatile in the Union, 0.01 kPa at 20 °C; Pa.
 const VOLATILE_PA: f64 = 10.0;
 
@@ -57,8 +60,28 @@ fn moved<'a>(routes: &[Option<Pouring<'a>>]) -> Vec<Moved<'a>> {
     out
 }
 
+/// Activities of Directive 2010/75/EU, Annex VII, Part 2, that a site of this kind may be, each with the consumption of solvents in a
+/// year from which it is one; kg.
+const fn solvent_activities(activity: Activity) -> &'static [(&'static str, f64)] {
+    match activity {
+        Activity::Pharmaceuticals => &[("manufacturing of pharmaceutical products: is it one?", 50_000.0)],
+        Activity::Food | Activity::Fats => {
+            &[("extraction of vegetable oil or animal fat, refining of vegetable oil: is it one?", 10_000.0)]
+        }
+        Activity::Degreasing => &[
+            (
+                "surface cleaning with solvents of Article 59(5), such as those of H340, H350, H360, H341 or H351: is it one?",
+                1_000.0,
+            ),
+            ("other surface cleaning: is it one?", 2_000.0),
+        ],
+        Activity::Laboratory | Activity::Organics | Activity::FineChemicals => &[],
+    }
+}
+
 pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     let moved = moved(&sheet.desk.routes);
+    let mut lead = vec!["A figure above a threshold is no duty by itself: each register has a scope, and its question stands beside the figure.".to_owned()];
     let mut table = PaperTable {
         title: "Against thresholds, kg a year".into(),
         head: &["What", "List", "Amount", "Threshold", "As far as it goes"],
@@ -82,7 +105,7 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     } else {
         "ask: ten full-time employees or more, and a covered industry code; making or processing has 25 000 lb of its own"
     };
-    let (mut voc_eu, mut voc_us, mut hap_kg) = (0.0, 0.0, 0.0);
+    let (mut voc_eu, mut voc_us, mut hap_kg, mut consumed_kg) = (0.0, 0.0, 0.0, 0.0);
     for m in &moved {
         let s = m.substance;
         let row = rows().iter().find(|r| r[0] == s.name);
@@ -91,6 +114,8 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
         if organic && s.name != "methane" {
             let volatile = s.vapour_pressure_pa(293.15).is_ok_and(|p| p.value >= VOLATILE_PA);
             voc_eu += if volatile { m.air_kg } else { 0.0 };
+            let solvent = volatile && s.class == Class::Solvent;
+            consumed_kg += if solvent { m.bought_kg } else { 0.0 };
             voc_us += if exempt.is_empty() { m.air_kg } else { 0.0 };
         }
         hap_kg += if on_hap.is_empty() { 0.0 } else { m.air_kg };
@@ -109,6 +134,34 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     }
     if eu {
         put("volatile organic compounds without methane", "pollutant register, air", voc_eu, NMVOC_KG, annex);
+        let hazardous = sheet.desk.streams.iter().filter(|s| s.standing() != Standing::NotKnownHazardous);
+        let leaving = hazardous.fold(0.0, |sum, s| sum + s.contents.mass_kg());
+        put("hazardous waste that leaves", "pollutant register, transfers", leaving, TRANSFER_KG, annex);
+        for (activity, limit_kg) in solvent_activities(sheet.site.waste.activity) {
+            put(
+                "organic solvents bought net of what is returned",
+                "solvent balance, Directive 2010/75/EU",
+                consumed_kg,
+                *limit_kg,
+                activity,
+            );
+        }
+    }
+    if let Some(categories) = sheet.desk.categories {
+        let months = categories.iter().filter(|c| **c == Category::Lqg).count();
+        lead.push(if months > 0 {
+            [
+                "Large quantity generator in ",
+                &months.to_string(),
+                " months: a biennial report is due by 1 March of the next even year where one of them falls in an odd one (40 CFR 262.41, from memory).",
+            ]
+            .concat()
+        } else {
+            "No month as a large quantity generator: no biennial report by the figures (40 CFR 262.41, from memory); a small quantity generator notifies again every four years (262.18(d), from memory).".to_owned()
+        });
+    }
+    if eu && laboratory {
+        lead.push("A laboratory is no activity of Directive 2010/75/EU, Annex VII: a solvent balance is voluntary, or a condition of a permit.".to_owned());
     }
     let totals = PaperTable {
         title: "To air by list, kg a year".into(),
@@ -135,10 +188,10 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
     };
     Paper {
         title: "Registers and lists".into(),
-        lead: vec!["A figure above a threshold is no duty by itself: each register has a scope, and its question stands beside the figure.".into()],
+        lead,
         tables: vec![table, totals],
         foot: vec![
-            "Thresholds and lists are from memory (Regulation (EC) 166/2006 Annex II; 40 CFR 372.25 and 372.65; Clean Air Act section 112(b); 40 CFR 51.100(s)): check the current text.".into(),
+            "Thresholds and lists are from memory (Regulation (EC) 166/2006 Article 5 and Annex II; Directive 2010/75/EU Annex VII Part 2; 40 CFR 372.25 and 372.65; Clean Air Act section 112(b); 40 CFR 51.100(s)): check the current text.".into(),
         ],
     }
 }

@@ -85,7 +85,8 @@ impl Chamber {
     /// Brings the vessel to its state; what it held more of in the stage before passes on. Returns what is drawn; kg.
     pub(super) fn fill(&self, x: Draw<'_>, b: &mut Bench<'_>, void_m3: f64) -> Result<f64, Halt> {
         let (temperature_k, pressure_pa) = (x.get(self.state.0), x.get(self.state.1));
-        let density_kg_m3 = b.states().density_kg_m3(temperature_k, pressure_pa)?;
+        // The circuit asks for the same state again.
+        let density_kg_m3 = b.states().state(temperature_k, pressure_pa)?.density_kg_m3;
         let rule = self.rules.filled;
         b.note(rule, "T", temperature_k, Kind::Temperature);
         b.note(rule, "p", pressure_pa, Kind::Pressure);

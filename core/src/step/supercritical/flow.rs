@@ -110,7 +110,12 @@ impl Flow {
             }
             Rate::Volume { flow, temperature, pressure } => {
                 let (temperature_k, pressure_pa) = (x.get(temperature), x.get(pressure));
-                let density_kg_m3 = b.states().density_kg_m3(temperature_k, pressure_pa)?;
+                let density_kg_m3 = if self.head().is_some() {
+                    // The circuit asks for the state of the head again.
+                    b.states().state(temperature_k, pressure_pa)?.density_kg_m3
+                } else {
+                    b.states().density_kg_m3(temperature_k, pressure_pa)?
+                };
                 b.note(rule, "q", x.get(flow), Kind::VolumeFlow);
                 b.note(rule, "T_m", temperature_k, Kind::Temperature);
                 b.note(rule, "p_m", pressure_pa, Kind::Pressure);
