@@ -8,6 +8,7 @@ use std::rc::Rc;
 use thimbleworth::account::site_desk;
 use thimbleworth::case::{Bound, HAZARDOUS_WASTE};
 use thimbleworth::compare::HEADLINES;
+use thimbleworth::quantity::{Kind, read};
 use thimbleworth::report::{PaperKind, mix_paper, paper};
 use yew::prelude::*;
 
@@ -52,7 +53,7 @@ fn Mixes(props: &Props) -> Html {
         .map(|(id, name)| (id.into(), name.into()))
         .collect();
     let figure = if figure.is_empty() { HAZARDOUS_WASTE } else { figure };
-    let number = |text: &str| text.trim().parse::<f64>().ok().filter(|sum| sum.is_finite());
+    let number = |text: &str| read(text, Kind::Number).ok().map(|amount| amount.central_si);
     let bound = match (number(budget), number(price)) {
         (Some(more), _) => Bound::Budget(more),
         (None, Some(price)) => Bound::Price(price),
