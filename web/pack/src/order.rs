@@ -238,10 +238,10 @@ mod tests {
         (table 3 funcref)
         (elem (i32.const 1) $b $c)
         (func $a (export "a") (param i32) (result i32)
-          (call $told (i32.const 7)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 3)) (call $b)))
+          (nop) (nop) (nop) (nop) (call $told (i32.const 7)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 3)) (call $b)))
         (func $b (result i32) (i32.const 300))
         (func $c (export "c") (param i32) (result i32)
-          (call $told (i32.const 8)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 5)) (i32.const 4)))
+          (nop) (nop) (nop) (nop) (call $told (i32.const 8)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 5)) (i32.const 4)))
         (memory 1))"#;
 
     fn of(module: &[u8], id: u8) -> Vec<u8> {
