@@ -33,7 +33,12 @@ pub(crate) enum Follows {
     TwoOthers = 13,
     /// A second code, then up to two numbers of the sort of `Other`.
     SecondCode = 14,
+    /// A constant of four bytes, which as a rule is an address; only among codes that are taken apart, where it has a code of its own.
+    Address = 15,
 }
+
+/// The code that stands for an address: none that the compiler makes.
+pub(crate) const ADDRESS: u8 = 0x06;
 
 /// How many groups of constants are told apart, by the instruction after them.
 pub(crate) const CLASSES: u8 = 9;

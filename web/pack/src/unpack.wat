@@ -302,8 +302,8 @@
           (br_if $plain (i32.eqz
             (local.tee $stream (i32.and (i32.load8_u offset=8192 (local.get $code)) (i32.const 15))))))
         (local.set $count (i32.const 1))
-        (block $memory (block $constant (block $targets (block $float (block $two (block $second (block $block (block $end
-          (br_table $end $block $end $more $memory $memory $more $more $more $more $float $targets $constant $two $second
+        (block $memory (block $address (block $constant (block $targets (block $float (block $two (block $second (block $block (block $end
+          (br_table $end $block $end $more $memory $memory $more $more $more $more $float $targets $constant $two $second $address
             (local.get $stream)))
           ;; $end
           (br_if $done (i32.eqz (local.get $depth)))
@@ -344,6 +344,10 @@
           (local.set $stream (i32.add (local.get $stream)
             (i32.shr_u (i32.load8_u offset=8192 (i32.load8_u (local.get $codes))) (i32.const 4))))
           (br $more))
+        ;; $address: a constant, whose code is put right.
+        (i32.store8 (i32.sub (local.get $out) (i32.const 1)) (i32.const 0x41))
+        (local.set $stream (i32.const ADDRESSES))
+        (br $more))
         ;; $memory: two bits say how a load or store is aligned.
         (i32.store8 (local.get $out) (i32.and (i32.const 3) (i32.wrap_i64 (i64.shr_u
           (i64.const ALIGNMENTS)
