@@ -52,6 +52,7 @@ pub(crate) fn unpacker() -> Result<Vec<u8>> {
         .replace("ALIGNMENTS", &alignments.to_string())
         .replace("TABLE", &table)
         .replace("HEAD", &(8 + 8 * STREAMS).to_string())
+        .replace("ADDRESSES", &(LAST - 1).to_string())
         .replace("LAST", &LAST.to_string());
     let module = wat::parse_str(wat)?;
     // Without the names of its functions.
