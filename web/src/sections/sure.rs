@@ -32,7 +32,18 @@ struct SureProps {
 #[derive(Clone, PartialEq)]
 struct Shown {
     book: ByRc<Book>,
-    html: Html,
+    pieces: Vec<ByRc<Html>>,
+}
+
+#[derive(Properties, PartialEq)]
+struct PieceProps {
+    html: ByRc<Html>,
+}
+
+/// A piece of what stands there, drawn again only for another one.
+#[component]
+fn Piece(props: &PieceProps) -> Html {
+    (*props.html).clone()
 }
 
 #[component]
@@ -43,13 +54,18 @@ fn Sure(props: &SureProps) -> Html {
         let shown = shown.clone();
         use_effect_with(drawn, move |drawn| {
             if let Some(draws) = drawn.clone() {
+                // What stands goes piece by piece, so that no turn draws much.
+                let before = (*shown).clone();
                 let then = Callback::from(move |s| shown.set(Some(s)));
-                Reader { draws, rows: Vec::new(), at: (0, 0), cased: false, read: Vec::new(), then }.go_on();
+                Reader { draws, rows: Vec::new(), at: (0, 0), cased: false, read: Vec::new(), before, then }
+                    .go_on();
             }
         });
     }
     let (of, html) = match &*shown {
-        Some(shown) => (Some(&shown.book), shown.html.clone()),
+        Some(shown) => {
+            (Some(&shown.book), shown.pieces.iter().cloned().map(|html| html! { <Piece {html} /> }).collect())
+        }
         None => (None, Html::default()),
     };
     follows(of, &props.book, html)
@@ -126,7 +142,9 @@ struct Reader {
     at: (usize, usize),
     /// Whether the route that was read last has a case.
     cased: bool,
-    read: Vec<Html>,
+    read: Vec<ByRc<Html>>,
+    /// What the run before this one left, until it is replaced.
+    before: Option<Shown>,
     then: Callback<Shown>,
 }
 
@@ -136,10 +154,17 @@ impl Reader {
         if self.draws.run().is_none() {
             return;
         }
-        if in_turns(&mut || self.piece()) {
-            let html = self.read.into_iter().collect();
-            self.then.emit(Shown { book: self.draws.book, html });
-        } else {
+        let told = self.read.len();
+        let done = in_turns(&mut || self.piece());
+        if done {
+            self.then.emit(Shown { book: self.draws.book.clone(), pieces: self.read.clone() });
+        } else if let Some(before) = self.before.as_ref().filter(|_| self.read.len() > told) {
+            // Still of the figures before, so that it stays dimmed until all is of the new ones.
+            let pieces =
+                self.read.iter().chain(before.pieces.iter().skip(self.read.len())).cloned().collect();
+            self.then.emit(Shown { book: before.book.clone(), pieces });
+        }
+        if !done {
             Timeout::new(0, move || self.go_on()).forget();
         }
     }
@@ -168,13 +193,13 @@ impl Reader {
             let head = &["Figure, a year", "Route", "Central", "From", "To", "Than the present"];
             let title = "Intervals and odds".to_owned();
             let table = PaperTable { title, head, rows: std::mem::take(&mut self.rows) };
-            self.read.push(html! {
+            self.read.push(ByRc(Rc::new(html! {
                 <>
                     <Chosen key={w} draws={self.draws.clone()} {w} />
                     { for stopped_words(work, reading).into_iter().map(|text| html! { <p>{ unbroken(&text) }</p> }) }
                     { words_table(format!("sure-{w}"), &table) }
                 </>
-            });
+            })));
         }
         match at / 2 {
             r if r >= routes => self.at = (w + 1, 0),
@@ -183,14 +208,14 @@ impl Reader {
                 let words = case(&run, account, w, r);
                 self.cased = !words.is_empty();
                 let title = format!("{} in place of {}", work.routes[r].name, work.routes[work.present].name);
-                self.read.push(html! {
+                self.read.push(ByRc(Rc::new(html! {
                     <>
                         <h4>{ title }</h4>
                         { for words.into_iter().map(|text| html! { <p>{ with_minus(&unbroken(&text)) }</p> }) }
                     </>
-                });
+                })));
             }
-            r => self.read.push(matters(reading, self.cased, work.present, r)),
+            r => self.read.push(ByRc(Rc::new(matters(reading, self.cased, work.present, r)))),
         }
         true
     }
