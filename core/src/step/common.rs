@@ -196,7 +196,7 @@ impl Open {
     pub(super) fn read(r: &mut Reader<'_, '_>, surface: &'static Param) -> Option<Self> {
         let (surface, temperature) = (r.optional(surface), r.optional(&WARM));
         let (surface, temperature) = surface.zip(temperature)?;
-        let vapours = Vapours::read(r, Some(temperature));
+        let vapours = Vapours::read(r, Some(r.value(temperature)));
         vapours.warn_unknown(r, "surface");
         Some(Self { vapours, surface, temperature })
     }

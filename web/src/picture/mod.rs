@@ -23,6 +23,7 @@ mod scale;
 mod shape;
 #[cfg(test)]
 mod tests;
+mod way_down;
 mod year;
 
 pub use air_course::air_course;
@@ -35,6 +36,7 @@ pub use flow::flow;
 pub use letter::text_width;
 pub use mass_by_place::mass_by_place;
 pub use shape::{Anchor, Hatch, Shape, Trail};
+pub use way_down::way_down;
 pub use year::{load, stock};
 
 /// A picture.

@@ -21,6 +21,8 @@ pub(super) enum What {
     Extraction(usize),
     /// The air of the room on one route.
     Air(usize),
+    /// The first mixture that one route takes down.
+    WayDown(usize),
 }
 
 #[derive(Properties, PartialEq)]
@@ -67,6 +69,11 @@ fn draw(props: &Props) -> Option<Picture> {
             picture::extraction(&format!("extraction-{w}-{r}"), name, dense)
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
+        What::WayDown(r) => {
+            let (route, account) = book.route(w, r)?;
+            let path = thimbleworth::account::batch_paths(route, account).into_iter().next()?;
+            picture::way_down(&format!("way-down-{w}-{r}"), &route.name, &path)
+        }
         What::Air(r) => {
             let (route, account) = book.route(w, r)?;
             picture::air_course(&format!("air-course-{w}-{r}"), &route.name, account.air.as_ref()?)
