@@ -75,6 +75,42 @@ test("1, 43: a title that is typed names the window and marks it, and undo takes
   await close();
 });
 
+test("what is typed in the very turn in which the first section is drawn is kept, and nothing there moves", async () => {
+  const { page, seen, close } = await openRaw(browser, packed, {
+    prepare: () => {
+      const places = () => [...document.querySelectorAll("#question .form input, #question .form select")]
+        .filter((field) => field.checkVisibility({ contentVisibilityAuto: true }))
+        .map((field) => [field.id, field.getBoundingClientRect().x, Math.round(field.getBoundingClientRect().y + scrollY)].join(" "));
+      new MutationObserver((_, observer) => {
+        if (!document.querySelector("#question")) return;
+        observer.disconnect();
+        globalThis.late = document.querySelector("#routes") !== null;
+        const type = (id, value) => {
+          const field = document.getElementById(id);
+          field.value = value;
+          field.dispatchEvent(new InputEvent("input", { bubbles: true }));
+        };
+        type("title", "Typed at once");
+        type("workloads[0].results_per_year", "4321");
+        globalThis.places = { before: places(), now: places };
+      }).observe(document, { childList: true, subtree: true });
+    },
+  });
+  await settled(page);
+  assert.equal(await page.evaluate(() => globalThis.late), false, "typed before anything else stood");
+  assert.equal(await page.locator("#title").inputValue(), "Typed at once");
+  assert.equal(await page.getByLabel("Results reported in a year").first().inputValue(), "4321");
+  assert.equal(await page.title(), "• Typed at once – Thimbleworth");
+  const [before, now] = await page.evaluate(() => [globalThis.places.before, globalThis.places.now()]);
+  assert.ok(before.length > 10, `${before.length} fields in sight`);
+  assert.deepEqual(now, before);
+  await page.getByRole("button", { name: "Undo: change results reported in a year" }).click();
+  await page.getByRole("button", { name: "Undo: change title" }).click();
+  assert.match(await page.locator("#title").inputValue(), /^Harbour sediment/);
+  assertQuiet(seen);
+  await close();
+});
+
 test("2: the page has its landmarks, and the contents stay in sight", async () => {
   const { page, close } = await open(browser);
   for (const role of ["banner", "navigation", "main", "contentinfo"]) {

@@ -191,6 +191,11 @@ fn shared_inputs_cancel() {
     assert_eq!(matters[0].words, "results per year");
     assert!(matters[0].share > 0.99);
     near(rival.first_order_u.unwrap(), difference.u, 0.005);
+    // Read by itself, a figure of a route is the same.
+    let brief = reading.brief("waste.total.mass", 1).unwrap();
+    assert_eq!(brief.odds, Some((rival.less, rival.same)));
+    assert_eq!((brief.figure.id.as_str(), brief.drawn), ("waste.total.mass", waste.routes[1].unwrap().drawn));
+    assert_eq!(reading.brief("waste.total.mass", 0).unwrap().odds, None);
 }
 
 /// In figures that are nearly linear in their inputs, propagation to first order and the draws agree; its interval is that

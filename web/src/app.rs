@@ -41,9 +41,18 @@ impl Reducible for State {
 /// The plan that the page opens with: the first example, so that there is something to look at and to change.
 fn first() -> State {
     let plan = EXAMPLES.first().and_then(|example| open(example.text).plan);
-    let state = plan.map_or_else(State::default, State::example);
-    browser::keep_plan(&state.file_name(), &save(state.plan()));
-    state
+    plan.map_or_else(State::default, State::example)
+}
+
+/// How far the page has been put up. Each turn draws what the next one does not have to wait for.
+#[derive(Clone, Copy, PartialEq)]
+enum Put {
+    /// The frame, and what is typed into first.
+    First,
+    /// All of the question.
+    Question,
+    /// Everything, with figures.
+    Figures,
 }
 
 /// The title of the window: the plan's own, marked while there is unsaved work or a list of errors.
@@ -113,33 +122,51 @@ fn kept_copy() -> (Option<(Option<String>, Plan)>, Option<Notice>) {
 pub(crate) fn App() -> Html {
     let handle = use_reducer(first);
     let dispatcher = handle.dispatcher();
-    let state = Rc::new((*handle).clone());
+    let state: &State = &handle;
     let act = { use_callback((), move |action: Action, ()| dispatcher.dispatch(action)) };
     let edit = {
         let act = act.clone();
         use_callback((), move |edit: Edit, ()| act.emit(Action::Edit(edit)))
     };
     // The newest state for callbacks that are made once.
-    let newest = use_mut_ref(|| Rc::new(State::default()));
-    *newest.borrow_mut() = Rc::clone(&state);
+    let newest = use_mut_ref(|| handle.clone());
+    *newest.borrow_mut() = handle.clone();
     let refusal = {
         let newest = newest.clone();
         use_callback((), move |(item, name): (Item, String), ()| refusal(newest.borrow().plan(), item, &name))
     };
 
-    // The question can be typed into before the first figures stand.
-    let put_up = use_state_eq(|| false);
+    let put = use_state_eq(|| Put::First);
+    let begun = *put != Put::First;
+    let kept = use_state(|| None::<(Option<String>, Plan)>);
     {
-        let put_up = put_up.clone();
-        use_effect_with((), move |()| {
-            let timer = Timeout::new(0, move || put_up.set(true));
+        let (put, kept, act, newest) = (put.clone(), kept.clone(), act.clone(), newest.clone());
+        use_effect_with(*put, move |stage| {
+            let stage = *stage;
+            let timer = Timeout::new(0, move || match stage {
+                Put::First => {
+                    let state = newest.borrow().clone();
+                    browser::keep_plan(&state.file_name(), &save(state.plan()));
+                    let (found, notice) = kept_copy();
+                    kept.set(found);
+                    if let Some(notice) = notice {
+                        act.emit(Action::Say(notice));
+                    }
+                    browser::watch_files(move |name, size, bytes| {
+                        act.emit(files::opened(&name, size, &bytes, newest.borrow().plan()));
+                    });
+                    put.set(Put::Question);
+                }
+                Put::Question => put.set(Put::Figures),
+                Put::Figures => {}
+            });
             move || drop(timer)
         });
     }
     let last = use_mut_ref(|| None::<Rc<Book>>);
     let reckoned = {
-        use_memo((ByRc(Rc::clone(state.document())), *put_up), move |(document, put_up)| {
-            if !put_up {
+        use_memo((ByRc(Rc::clone(state.document())), *put == Put::Figures), move |(document, figures)| {
+            if !figures {
                 return Reckoned::pending(&document.plan);
             }
             let before = last.borrow().clone();
@@ -150,35 +177,23 @@ pub(crate) fn App() -> Html {
     };
     let errors = reckoned.count(Severity::Error);
 
-    let kept = use_state(|| None::<(Option<String>, Plan)>);
     let wish = {
-        let (act, newest) = (act.clone(), newest.clone());
+        let act = act.clone();
         use_callback(errors, move |wish: Wish, errors| grant(wish, *errors, &newest.borrow(), &act))
     };
 
-    use_effect_with(window_title(&state, errors), |title| document().set_title(title));
-    use_effect_with(state.is_unsaved(), |unsaved| browser::guard_leaving(*unsaved));
+    use_effect_with((window_title(state, errors), state.is_unsaved()), |(title, unsaved)| {
+        document().set_title(title);
+        browser::guard_leaving(*unsaved);
+    });
     use_effect_with(state.view.focus.clone(), |focus| {
         if let Some((_, path)) = focus {
             browser::focus_on(&dom_id(path));
         }
     });
     {
-        let (kept, act, newest) = (kept.clone(), act.clone(), newest);
-        use_effect_with((), move |()| {
-            let (found, notice) = kept_copy();
-            kept.set(found);
-            if let Some(notice) = notice {
-                act.emit(Action::Say(notice));
-            }
-            browser::watch_files(move |name, size, bytes| {
-                act.emit(files::opened(&name, size, &bytes, newest.borrow().plan()));
-            });
-        });
-    }
-    {
         let act = act.clone();
-        let state = Rc::clone(&state);
+        let state = handle.clone();
         use_effect_with((ByRc(Rc::clone(state.document())), state.is_unsaved()), move |(_, unsaved)| {
             let unsaved = *unsaved;
             let timer = Timeout::new(KEEP_AFTER_MS, move || {
@@ -215,16 +230,17 @@ pub(crate) fn App() -> Html {
         let act = act.clone();
         Callback::from(move |event: MouseEvent| delegated(&event, &act))
     };
-    let view = View::new(&state, &reckoned, edit, act.clone(), refusal);
+    let view = View::new(state, &reckoned, begun, edit, act.clone(), refusal);
     let works = if reckoned.pending { 0 } else { reckoned.book.works.len() };
     let finding: Vec<String> = (0..works).flat_map(|w| reckoned.book.finding(w)).collect();
-    let examples: Vec<AttrValue> = EXAMPLES.iter().map(|e| AttrValue::from(e.title)).collect();
+    let examples: Vec<AttrValue> =
+        EXAMPLES.iter().filter(|_| begun).map(|e| AttrValue::from(e.title)).collect();
     html! {
         <>
             <Toolbar undo={state.undo_name().map(|name| AttrValue::from(name.to_owned()))}
                 redo={state.redo_name().map(|name| AttrValue::from(name.to_owned()))}
                 unsaved={state.is_unsaved()} {examples} wish={wish} />
-            { notices(&state, &kept, &act) }
+            { notices(state, &kept, &act) }
             <div class="book" {onclick}>
                 <aside class="margin-column" aria-label="Contents and finding">
                     <Contents />
@@ -235,7 +251,7 @@ pub(crate) fn App() -> Html {
                     </div>
                 </aside>
                 <main id="main" tabindex="-1">
-                    { report_head(&state, &finding) }
+                    if begun { { report_head(state, &finding) } }
                     <Mend plan={Rc::clone(state.document())} reckoned={ByRc(reckoned.clone())} open={state.view.listed} act={act.clone()} />
                     <Leaves {view} />
                     if !reckoned.pending {
@@ -245,9 +261,9 @@ pub(crate) fn App() -> Html {
                         </datalist>
                     }
                 </main>
-                <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} />
+                if begun { <Working book={ByRc(Rc::clone(&reckoned.book))} opened={state.view.opened.clone()} act={act} /> }
             </div>
-            <ReadOut text={finding.join(" ")} />
+            if begun { <ReadOut text={finding.join(" ")} /> }
             <footer class="foot">
                 <p>
                     { format!("{} reads and writes plans of version {PLAN_VERSION}. ", crate::PROGRAM) }

@@ -16,7 +16,7 @@ mod sampled;
 
 pub use column::{MOST_STOPPED, RouteColumns, Stopped};
 pub use name::input_words;
-pub use reading::{FigureReading, Matter, Reading, Rival, Spreading};
+pub use reading::{Brief, FigureReading, Matter, Reading, Rival, Spreading};
 pub use sampled::{MOST_CELLS, Sampled, Wish};
 
 use crate::account::{Figure, Group};

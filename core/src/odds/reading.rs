@@ -9,6 +9,7 @@ use crate::compare::absent_is_zero;
 use crate::order;
 use crate::program::{RouteProgram, WorkloadProgram};
 use crate::quantity::{Origin, Spread};
+use std::cell::OnceCell;
 
 /// Shares of variance are taken from so many draws at most: more would sharpen the third digit of a share.
 const DRAWS_FOR_SHARES: u32 = 20_000;
@@ -22,12 +23,15 @@ pub struct Reading<'a> {
     coverage: f64,
 }
 
+/// What each input, by its key, contributes to each figure.
+type Contributions = Vec<(u64, Vec<f64>)>;
+
 struct RouteReading<'a> {
     program: &'a RouteProgram,
     account: &'a RouteAccount,
     columns: &'a RouteColumns,
-    /// By input key, to first order, in the order of the columns.
-    contributions: Option<Vec<(u64, Vec<f64>)>>,
+    /// By input key, to first order, in the order of the columns. Runs the route twice for every input, so only once asked for.
+    contributions: OnceCell<Option<Contributions>>,
 }
 
 /// One figure on every route.
@@ -43,6 +47,19 @@ pub struct FigureReading {
     pub routes: Vec<Option<Spreading>>,
     /// Every other route beside the present one.
     pub rivals: Vec<Rival>,
+}
+
+/// One figure of one route; SI.
+#[derive(Clone, Copy)]
+pub struct Brief<'a> {
+    /// The figure.
+    pub figure: &'a Figure,
+    /// With every input at its central value.
+    pub central: f64,
+    /// What the draws say; `None` where too few ran.
+    pub drawn: Option<Summary>,
+    /// The shares of draws with less than on the present route, and with the same; `None` of the present route itself.
+    pub odds: Option<(f64, f64)>,
 }
 
 /// How far a figure of a route spreads; SI.
@@ -116,7 +133,7 @@ impl<'a> Reading<'a> {
                 program,
                 account,
                 columns,
-                contributions: columns.contributions(program, account),
+                contributions: OnceCell::new(),
             }));
         }
         Some(Self { sampled, index: workload, work, routes, coverage })
@@ -160,6 +177,21 @@ impl<'a> Reading<'a> {
         self.routes.iter().flatten().find_map(|r| r.account.figures.iter().find(|f| f.id == id))
     }
 
+    /// One figure of one route by itself, which takes a fraction of what [`Reading::figure`] takes: its central value, what
+    /// its draws say, and the shares of draws in which it is less than that of the present route and the same. `None` where
+    /// the route has no such figure.
+    #[must_use]
+    pub fn brief(&self, id: &str, route: usize) -> Option<Brief<'a>> {
+        let (figure, this) = self.figure_of(id).zip(self.at(route))?;
+        let beside = self.at(self.work.present).filter(|_| route != self.work.present);
+        Some(Brief {
+            figure,
+            central: this.account.value(id)?,
+            drawn: this.columns.summary(id, self.coverage),
+            odds: beside.and_then(|present| Some(odds(&differences(figure, present, this, u32::MAX)?))),
+        })
+    }
+
     /// What the draws say of a figure; `None` where no route has it.
     #[must_use]
     pub fn figure(&self, id: &str) -> Option<FigureReading> {
@@ -187,12 +219,7 @@ impl<'a> Reading<'a> {
         let (present, other) = (self.at(self.work.present)?, self.at(route)?);
         let mut differences = differences(figure, present, other, u32::MAX)?;
         let ran = differences.len();
-        let (mut less, mut same) = (0_u32, 0_u32);
-        for d in &differences {
-            less += u32::from(*d < 0.0);
-            same += u32::from(*d == 0.0);
-        }
-        let share = |n: u32| if ran > 0 { f64::from(n) / ran as f64 } else { 0.0 };
+        let (less, same) = odds(&differences);
         let (a, b) = (present.columns.done(), other.columns.done());
         let said = ran as f64 >= (1.0 - MOST_STOPPED) * f64::from(if a < b { a } else { b });
         let first_order = || {
@@ -211,8 +238,8 @@ impl<'a> Reading<'a> {
         Some(Rival {
             route,
             draws: ran,
-            less: share(less),
-            same: share(same),
+            less,
+            same,
             difference: if said { summary(&mut differences, self.coverage) } else { None },
             first_order_u: first_order(),
         })
@@ -263,10 +290,23 @@ impl<'a> Reading<'a> {
 impl RouteReading<'_> {
     /// By the key of each input, what it contributes to a figure; nothing where the route has none of it.
     fn first_order(&self, id: &str) -> Option<Vec<(u64, f64)>> {
-        let rows = self.contributions.as_ref()?;
+        let found = self.contributions.get_or_init(|| self.columns.contributions(self.program, self.account));
+        let rows = found.as_ref()?;
         let Some(at) = self.columns.ids().position(|i| i == id) else { return Some(Vec::new()) };
         Some(rows.iter().map(|(key, row)| (*key, row.get(at).copied().unwrap_or(0.0))).collect())
     }
+}
+
+/// The shares of differences that are less than nothing, and nothing.
+fn odds(differences: &[f64]) -> (f64, f64) {
+    let (mut less, mut same) = (0_u32, 0_u32);
+    for d in differences {
+        less += u32::from(*d < 0.0);
+        same += u32::from(*d == 0.0);
+    }
+    let ran = differences.len();
+    let share = |n: u32| if ran > 0 { f64::from(n) / ran as f64 } else { 0.0 };
+    (share(less), share(same))
 }
 
 fn u_of(rows: &[(u64, f64)]) -> f64 {

@@ -21,14 +21,18 @@ pub(super) static SECTION: Section = Section {
     body: draw,
 };
 
+/// What is folded away or for paper comes a turn later than what can be typed into at once.
 fn draw(view: &View) -> Html {
     html! {
         <>
             <div class="form halves">
-                <div>{ about(view) }{ streams(view) }{ more(view) }</div>
+                <div>
+                    { about(view) }{ streams(view) }
+                    if view.whole { { more(view) } }
+                </div>
                 <div>{ works(view) }</div>
             </div>
-            { printed(view) }
+            if view.whole { { printed(view) } }
         </>
     }
 }
@@ -145,12 +149,20 @@ fn streams(view: &View) -> Html {
 fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
     let path = format!("site.streams[{i}]");
     let id = view.document.ids.streams.get(i).copied().unwrap_or_default();
-    let at = |key: &str| format!("{path}.{key}");
-    let solid = stream.holds.as_deref() == Some("solid");
     html! {
         <details class="card" key={id} id={path.clone()}>
             <summary><h4>{ &stream.name }</h4>{ ": " }{ stream_words(stream) }</summary>
-            { tools(Item::Stream(i), &path, &stream.name, count, &view.edit) }
+            if view.whole { { stream_fields(view, i, stream, count, &path) } }
+        </details>
+    }
+}
+
+fn stream_fields(view: &View, i: usize, stream: &Stream, count: usize, path: &str) -> Html {
+    let at = |key: &str| format!("{path}.{key}");
+    let solid = stream.holds.as_deref() == Some("solid");
+    html! {
+        <>
+            { tools(Item::Stream(i), path, &stream.name, count, &view.edit) }
             <Name item={Item::Stream(i)} id={at("name")} label="Name of the stream" value={stream.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
             { Asked::text(at("holds"), "Holds", stream.holds.clone().unwrap_or_default())
@@ -166,8 +178,8 @@ fn one_stream(view: &View, i: usize, stream: &Stream, count: usize) -> Html {
             { Asked::text(at("treatment"), "Treatment on site", stream.treatment.clone().unwrap_or_default())
                 .need(Need::Default("none", DEFINITION))
                 .ask(Ask::Choice(options("none (left out)", &["recycling", "degradation", "passivation", "none"]))).draw(view) }
-            { for stream_waste(view, &path, stream) }
-        </details>
+            { for stream_waste(view, path, stream) }
+        </>
     }
 }
 

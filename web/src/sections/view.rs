@@ -15,6 +15,8 @@ use yew::prelude::*;
 pub(crate) struct View {
     pub(crate) document: ByRc<Document>,
     pub(crate) reckoned: ByRc<Reckoned>,
+    /// Whether more is drawn than what the page begins with: the fields of the question that are in sight.
+    pub(crate) whole: bool,
     /// For how much work figures are shown.
     pub(crate) basis: Basis,
     /// The route whose form is open.
@@ -31,6 +33,7 @@ impl View {
     pub(crate) fn new(
         state: &State,
         reckoned: &Rc<Reckoned>,
+        whole: bool,
         edit: Callback<Edit>,
         act: Callback<Action>,
         refusal: Callback<(Item, String), Option<String>>,
@@ -39,6 +42,7 @@ impl View {
         Self {
             document: ByRc(Rc::clone(state.document())),
             reckoned: ByRc(Rc::clone(reckoned)),
+            whole,
             basis: shown.basis,
             route: shown.route,
             show_all: shown.show_all,
