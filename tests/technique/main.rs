@@ -11,6 +11,7 @@
 mod cases;
 mod circuit;
 mod declared;
+mod filling;
 mod posted;
 mod staged;
 mod trade;
