@@ -11,6 +11,7 @@
 mod cases;
 mod circuit;
 mod declared;
+mod diffusion;
 mod filling;
 mod posted;
 mod staged;

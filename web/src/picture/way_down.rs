@@ -29,7 +29,7 @@ pub fn way_down(key: &str, route: &str, path: &BatchPath) -> Option<Picture> {
         Axis { title: "volume left (%)", ends: (f64::log10(left(last.volume_m3)) - 0.1, 2.0), decades: true };
     let y = Axis { title: "of the liquid's mass (%)", ends: (0.0, 105.0), decades: false };
     let mut head = vec![Head::number("Left (%)"), Head::number("°C"), Head::number("mbar")];
-    head.extend(path.names.iter().map(|_| Head::number("% by mass")));
+    head.extend(path.names.iter().map(|name| Head::number(name)));
     let rows = path.points.iter().map(|p| {
         let mut row = vec![
             written(left(p.volume_m3), 3),
@@ -56,7 +56,7 @@ pub fn way_down(key: &str, route: &str, path: &BatchPath) -> Option<Picture> {
         ),
         notes: vec!["A single stage: what a column parts better ends purer.".to_owned()],
         tables: vec![Table {
-            caption: format!("On the way down: {}", path.names.join(", ")),
+            caption: "On the way down, liquid in % by mass".to_owned(),
             head,
             rows: rows.collect(),
         }],
