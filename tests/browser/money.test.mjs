@@ -39,6 +39,7 @@ test("prices, hours, climate, seed, time and permission are typed on the page; t
   await page.getByLabel("Years of a case").fill("5");
   await fold(page, "Hours of instruments");
   await page.getByLabel(/^Hours of a year with someone there/).fill("1750 h");
+  await page.getByLabel(/^Further hours in which instruments/).fill("4200 h");
   await fold(page, "Climate");
   await row("Share that is burnt", 1, "stream", "flammable", "100 %");
   await page.getByLabel("Warming potentials of").selectOption("AR5");
