@@ -68,6 +68,7 @@ test("prices, hours, climate, seed, time and permission are typed on the page; t
   assert.deepEqual(await axeFindings(page), []);
   // One step back: the case is another one.
   await undo.click();
+  await settled(page);
   await caughtUp(page);
   assert.match(await page.locator("#cost").innerText(), /Small flask in place of Large flask: nothing has to be paid back/);
   assertQuiet(seen);
