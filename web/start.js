@@ -1,4 +1,4 @@
-// The page's first script; before it stand UNPACKER, SIZES and LOAD (see web/pack/src/packing.rs). It unpacks the styles
+// The page's first script; before it stand UNPACKER, SIZES and LOAD (see web/pack/src/shell.rs). It unpacks the styles
 // and the script that goes on from here (boot.js) at once, and the program a piece at a time.
 
 // How many bytes of the program are unpacked at a time.
