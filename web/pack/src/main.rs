@@ -4,6 +4,7 @@
 //! everything is inlined into the shell, which is the root `index.html`. No bundler and no installed tool is needed.
 mod compile;
 mod instruction;
+mod names;
 mod order;
 mod packing;
 mod parts;
