@@ -5,8 +5,10 @@ use serde_json::{Value, json};
 use thimbleworth::account::{Account, account_text};
 use thimbleworth::chance::{Draw, normal_quantile};
 use thimbleworth::example::{EXAMPLES, example};
+use thimbleworth::ledger::{Direction, Material, Place, StepIx};
 use thimbleworth::odds::{MOST_CELLS, Reading, Sampled, Wish, headline};
 use thimbleworth::quantity::{Origin, Spread};
+use thimbleworth::report::stopped_words;
 
 fn harbour() -> Value {
     serde_json::from_str(example("harbour-sediment").unwrap().text).unwrap()
@@ -61,6 +63,59 @@ fn a_draw_is_a_run_with_other_numbers() {
         let plain = thimbleworth::chance::summary(&mut values, 0.95).unwrap();
         assert_eq!(sampled.route(0, r).unwrap().summary("waste.total.mass", 0.95), Some(plain));
     }
+}
+
+/// A gas stream that is too short in a draw goes on until the mark: the draw counts, with the longer time and its gas, and
+/// is told. A plan whose own numbers ask for less than that is stopped.
+#[test]
+fn a_draw_in_which_the_gas_needs_longer_counts_and_is_told() {
+    let text = example("water-laboratory").unwrap().text;
+    let account = account_text(text);
+    let run = sampled(&account, 1000);
+    let routes = &account.program.as_ref().unwrap().workloads[1].routes;
+    let (r, route) = routes.iter().enumerate().find(|(_, r)| r.name == "Solid-phase disk").unwrap();
+    let columns = run.route(1, r).unwrap();
+    assert!(columns.stopped().is_empty() && columns.stopped_share() == 0.0);
+    assert!(columns.summary("waste.total.mass", 0.95).is_some());
+    let [(step, longer)] = *columns.longer() else { panic!("{:?}", columns.longer()) };
+    assert!((100..250).contains(&longer), "{longer}");
+    let StepIx::Step(at) = step else { panic!() };
+    assert_eq!(route.steps[usize::from(at)].technique.key, "concentrate");
+    // By hand: 1.5 L/min of nitrogen over 45 min, or over more of them.
+    let nitrogen = route.materials.iter().position(|m| m.name == "nitrogen").unwrap();
+    let kg = 1.5e-3 / 60.0 * 2700.0 * 101_325.0 * 0.028_013_4 / (8.314_462_618 * 298.15);
+    let (mut more, mut desk) = (0, route.desk());
+    for draw in 0..1000 {
+        let x: Vec<f64> = route.inputs.iter().map(|i| i.draw(1, draw)).collect();
+        route.run(Draw(&x), &mut desk, None).unwrap();
+        let m = Material(u16::try_from(nitrogen).unwrap());
+        let drawn = desk.cells.passed(Place::STORE, Direction::OutOf, m) / desk.runs.extractions;
+        assert!(drawn > kg * (1.0 - 1e-12), "{drawn} {kg}");
+        assert_eq!(drawn > kg * (1.0 + 1e-9), desk.longer != 0, "{drawn} {kg}");
+        more += u32::from(desk.longer != 0);
+    }
+    assert_eq!(more, longer);
+    let said = stopped_words(
+        &account.program.as_ref().unwrap().workloads[1],
+        &Reading::new(&account, &run, 1, 0.95).unwrap(),
+    );
+    assert!(
+        said.iter()
+            .any(|s| s.starts_with(&format!("Solid-phase disk: in {longer} of 1000 draws the run at step 5"))),
+        "{said:?}"
+    );
+    let short = text.replacen(
+        "\"gas_flow\": \"1.5 L/min\",\n              \"time\": \"45 min\"",
+        "\"gas_flow\": \"1.5 L/min\",\n              \"time\": \"5 min\"",
+        1,
+    );
+    assert_ne!(short, text);
+    let short = account_text(&short);
+    assert!(
+        short.problems.iter().any(|p| p.found.contains("a gas that leaves saturated needs at least")),
+        "{:?}",
+        short.problems
+    );
 }
 
 #[test]

@@ -84,7 +84,7 @@ fn what_is_missing_is_said_before_a_case_is_made() {
     for (pointer, key, said) in [
         ("/site/money", "years", "over how many years"),
         ("/site/money", "discount", "the discount rate"),
-        ("/site/money/prices", "cleaner", "the running cost of A: not known are cleaner"),
+        ("/site/money/prices", "cleaner", "the running cost of A; not known: cleaner"),
         ("/workloads/0/routes/1/money", "instrument", "the price of an instrument for B"),
     ] {
         let mut plan = plan();

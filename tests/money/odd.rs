@@ -32,6 +32,7 @@ fn prices_that_cannot_be() {
         ("/site/money", "discount", json!("-5 %"), "-5 %"),
         ("/site/money", "pick_ups", json!(-1), "below zero"),
         ("/site/hours", "attended", json!("9000 h"), "9000 hours in a year"),
+        ("/site/hours", "attended", json!("0 h"), "no hour of the year in which B can run"),
         ("/workloads/0/routes/1/time", "at_once", json!(0), "holds no extraction"),
     ] {
         let account = accounted(&with(pointer, key, value));
@@ -59,6 +60,45 @@ fn nothing_and_less_than_nothing_are_prices() {
     );
     let credit = sound(&with("/site/money/disposal", "waste", json!("-0.5 USD/kg")));
     is(route(&credit, 0), "cost.disposal.waste", -40.0);
+}
+
+/// Prices that are odd and possible are said; what is below zero in some draws alone too.
+#[test]
+fn odd_prices_are_doubted() {
+    for (pointer, key, value, said) in [
+        ("/site/money", "labour_hour", json!("-5 USD"), "-5 USD is a negative price"),
+        ("/site/money", "labour_hour", json!("40 ± 50 USD"), "falls below zero in some draws"),
+        ("/site/money/prices", "cleaner", json!("4 ± 5 USD/L"), "falls below zero in some draws"),
+        (
+            "/workloads/0/routes/1/money",
+            "instrument",
+            json!("1500 USD u 900 USD"),
+            "falls below zero in some draws",
+        ),
+        ("/workloads/0/routes/1/money", "residual", json!("9000 USD"), "worth more at the end than it costs"),
+    ] {
+        let account = sound(&with(pointer, key, value));
+        let doubts = account.problems.iter().filter(|p| p.severity == Severity::Warning);
+        assert!(
+            doubts.clone().any(|p| p.found.contains(said) && !p.need.is_empty()),
+            "{said}: {:#?}",
+            account.problems
+        );
+    }
+}
+
+/// No capacity, no business case: without run time or hours a route is shown and not ranked, and so is one that finds nothing.
+#[test]
+fn without_capacity_or_recovery_nothing_is_ranked() {
+    let mut no_hours = plan();
+    no_hours["site"].as_object_mut().unwrap().remove("hours");
+    for (plan, said) in [
+        (no_hours, "whether the instruments of B find the time"),
+        (with("/workloads/0/routes/1", "recovery", json!("0 %")), "B finds nothing of what is sought"),
+    ] {
+        let case = switch(&sound(&plan), 0, 1).unwrap();
+        assert!(case.not_ranked.iter().any(|why| why.contains(said)), "{:?}", case.not_ranked);
+    }
 }
 
 /// Savings that never come: "never", not a number.

@@ -147,7 +147,9 @@ fn every_default_reads_and_lies_within_its_own_bounds() {
                 Control::Material => {
                     assert!(thimbleworth::material::catalogue().find(text).is_ok(), "{at} = {text}");
                 }
-                Control::Mixture | Control::PerMaterial(_) => panic!("{at}: no default makes sense"),
+                Control::Mixture | Control::PerMaterial(_) | Control::PerStream(_) | Control::Text => {
+                    panic!("{at}: no default makes sense")
+                }
             }
         }
     }

@@ -122,9 +122,7 @@ pub fn margin(param: &Param) -> String {
     let kind = match param.control {
         Control::Quantity(kind) | Control::PerMaterial(kind) => kind,
         Control::Count => Kind::Count,
-        Control::Choice(_) | Control::Material | Control::Mixture | Control::YesNo | Control::Place => {
-            return String::new();
-        }
+        _ => return String::new(),
     };
     let (low, high) = param.usual;
     let range = match (low.is_finite(), high.is_finite()) {

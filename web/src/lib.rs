@@ -6,6 +6,7 @@
 mod app;
 mod browser;
 pub mod document;
+mod draws;
 pub mod edit;
 pub mod files;
 pub mod form;
@@ -42,23 +43,26 @@ pub fn start_page() {
 }
 
 /// The account of a plan as a document, the same bytes as the command writes: `json`, `csv` or `markdown` as
-/// `thimbleworth account PLAN --format …`, `compare` as `thimbleworth compare PLAN --format json`, `odds` as `thimbleworth odds PLAN --draws 2000 --format json`.
+/// `thimbleworth account PLAN --format …`, `compare` as `thimbleworth compare PLAN --format json`, `odds` as `thimbleworth odds PLAN --draws 2000 --format json`, or
+/// `odds 100000` for another number of draws.
 ///
 /// A plan with errors gives a JSON document without workloads, with the problems in it. An unknown format is answered with
 /// a sentence.
 #[wasm_bindgen]
 #[must_use]
 pub fn account(plan_json: &str, format: &str) -> String {
+    if let Some(draws) = format.strip_prefix("odds") {
+        let draws = draws.trim().parse().unwrap_or(2000);
+        let account = account_text(plan_json);
+        let mut sampled = Sampled::default();
+        sampled.follow(&account, Wish { draws, most_cells: MOST_CELLS, wanted: &headline });
+        while sampled.advance(&account, 2000) > 0 {}
+        return odds_json(&account, &sampled, 0.95);
+    }
     let write: fn(&Account) -> String = match format {
         "json" => |account| result_json(account, false),
         "compare" => |account| result_json(account, true),
         "csv" => result_csv,
-        "odds" => |account| {
-            let mut sampled = Sampled::default();
-            sampled.follow(account, Wish { draws: 2000, most_cells: MOST_CELLS, wanted: &headline });
-            while sampled.advance(account, 2000) > 0 {}
-            odds_json(account, &sampled, 0.95)
-        },
         "markdown" => markdown,
         _ => return format!("no format \"{format}\"; there are: json, compare, csv, odds, markdown"),
     };

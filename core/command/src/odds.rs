@@ -15,7 +15,7 @@ use thimbleworth::odds::{MOST_CELLS, Sampled, Wish, headline};
 use thimbleworth::report::{odds_json, odds_table};
 
 /// The exit status of a program that was interrupted.
-const INTERRUPTED: u8 = 130;
+pub(crate) const INTERRUPTED: u8 = 130;
 /// So many draws of routes are made between two looks at the clock.
 const SLICE: u32 = 2_000;
 

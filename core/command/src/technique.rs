@@ -90,6 +90,8 @@ fn control(control: Control) -> String {
         Control::Material => "a material".to_owned(),
         Control::Mixture => "a material, or several with shares".to_owned(),
         Control::PerMaterial(kind) => format!("{} for each material", kind.words()),
+        Control::PerStream(kind) => format!("{} for each stream", kind.words()),
+        Control::Text => "a text".to_owned(),
         Control::Count => "a whole number".to_owned(),
         Control::YesNo => "true or false".to_owned(),
         Control::Place => "a stream of the site, or a place of the book".to_owned(),

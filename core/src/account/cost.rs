@@ -367,8 +367,8 @@ fn once(costs: &mut Costs<'_>, route: &RouteProgram, money: &MoneyUse, hours: Ho
         Some(slot) => paid.push(each(slot, costs, "instrument", "one instrument")),
         None if to_buy.is_some_and(|_| route.time.instruments.is_none()) => {
             costs.lacks(
-                format!("how many instruments for {} are there", route.name),
-                &format!("{}.time.instruments", route.path),
+                format!("the price of an instrument for {}, or how many are there,", route.name),
+                &format!("{}.money.instrument", route.path),
             );
             return;
         }

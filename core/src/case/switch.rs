@@ -30,8 +30,12 @@ pub fn not_ranked(route: &RouteProgram) -> Vec<String> {
     if !stated(&route.equivalence) {
         out.push(format!("nothing says on what the claim rests that {} does equal work", route.name));
     }
-    if route.recovery.is_none() {
-        out.push(format!("nothing says what recovery {} reaches", route.name));
+    match route.recovery.and_then(|slot| route.inputs.get(slot.0 as usize)) {
+        None => out.push(format!("nothing says what recovery {} reaches", route.name)),
+        Some(recovery) if recovery.central_si <= 0.0 => {
+            out.push(format!("{} finds nothing of what is sought: its recovery is 0", route.name));
+        }
+        Some(_) => {}
     }
     if !stated(&route.permission) {
         out.push(format!("nothing says that results of {} may be reported (permission)", route.name));
@@ -59,7 +63,7 @@ pub fn switch(account: &Account, workload: usize, route: usize) -> Result<Switch
     for (program, account) in [(old, present), (new, other)] {
         if account.value("cost.year").is_none() {
             let open: Vec<&str> = account.open.iter().map(|(what, _)| what.as_str()).collect();
-            lacking.push(format!("the running cost of {}: not known are {}", program.name, open.join(", ")));
+            lacking.push(format!("the running cost of {}; not known: {}", program.name, open.join(", ")));
         }
     }
     let (years, discount) = (money.years, money.discount);
@@ -90,7 +94,16 @@ pub fn switch(account: &Account, workload: usize, route: usize) -> Result<Switch
         },
         to_buy,
         conditions: conditions(work, new, other, (old, present)),
-        not_ranked: not_ranked(new),
+        not_ranked: {
+            let mut why = not_ranked(new);
+            if to_buy.is_none() {
+                why.push(format!(
+                    "nothing says whether the instruments of {} find the time for all runs (time.run, site.hours)",
+                    new.name
+                ));
+            }
+            why
+        },
     })
 }
 

@@ -16,6 +16,9 @@ pub enum Edition {
 }
 
 impl Edition {
+    /// The words of all.
+    pub const WORDS: &'static [&'static str] = &["AR4", "AR5", "AR6"];
+
     /// The edition of the plan's word.
     #[must_use]
     pub fn named(word: &str) -> Option<Self> {
@@ -52,6 +55,10 @@ pub enum Origin {
 }
 
 impl Origin {
+    /// The words of all.
+    pub const WORDS: &'static [&'static str] =
+        &["fossil by-product", "biogenic", "natural well", "air capture"];
+
     /// The origin of the plan's word.
     #[must_use]
     pub fn named(word: &str) -> Option<Self> {

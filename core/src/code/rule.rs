@@ -2,6 +2,7 @@
 
 use crate::material::catalogue;
 use crate::material::table::Table;
+use crate::quantity::nearest;
 use crate::room::Day;
 use crate::source::Source;
 use std::sync::OnceLock;
@@ -77,7 +78,7 @@ pub fn rule(key: &str) -> Option<&'static Rule> {
             from: Day::parse(from).ok(),
             until: Day::parse(until).ok(),
             source,
-            reportable_lb: rq.parse().ok(),
+            reportable_lb: nearest(rq),
             change,
         };
         RULES.rows(columns, &mut Vec::new()).into_iter().map(row).collect()

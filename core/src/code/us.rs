@@ -7,7 +7,7 @@ use super::us_spent;
 use super::verdict::{Answer, Desk, Fact, list, share};
 use crate::material::Text;
 use crate::material::table::Table;
-use crate::quantity::Kind;
+use crate::quantity::{Kind, nearest};
 use std::sync::OnceLock;
 
 const LIMITS: Table = Table { name: "toxicity_us.csv", text: include_str!("../../data/toxicity_us.csv") };
@@ -171,7 +171,7 @@ fn toxic(c: &Contents<'_>, desk: &mut Desk) {
     let cresols: Vec<&str> =
         limits().iter().filter(|r| ["D023", "D024", "D025"].contains(&r[0])).map(|r| r[2]).collect();
     for &[code, name, cas, limit] in limits() {
-        let Ok(limit) = limit.parse::<f64>() else { continue };
+        let Some(limit) = nearest(limit) else { continue };
         let is = |s: &crate::material::Substance| {
             s.cas
                 .as_deref()

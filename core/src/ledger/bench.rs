@@ -43,6 +43,8 @@ pub struct Bench<'a> {
     runs_a_year: f64,
     /// How long what goes to air from here on takes; s.
     over_s: Option<f64>,
+    /// The steps that take longer than the plan says: a bit each, the last for all from the 64th on.
+    longer: u64,
 }
 
 impl<'a> Bench<'a> {
@@ -69,6 +71,7 @@ impl<'a> Bench<'a> {
             measured: &[],
             runs_a_year: 0.0,
             over_s: None,
+            longer: 0,
         }
     }
 
@@ -103,6 +106,19 @@ impl<'a> Bench<'a> {
         self.measured = measured;
         self.over_s = None;
         Ok(())
+    }
+
+    /// Says that the step takes longer than the plan says, because its numbers ask for it in this draw.
+    pub fn takes_longer(&mut self) {
+        if let StepIx::Step(i) = self.step {
+            self.longer |= 1 << if i < 63 { i } else { 63 };
+        }
+    }
+
+    /// The steps that took longer than the plan says: bit `i` for step `i`.
+    #[must_use]
+    pub const fn longer(&self) -> u64 {
+        self.longer
     }
 
     /// Turns to the closing of the book, on the basis of the last step.

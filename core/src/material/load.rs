@@ -3,6 +3,7 @@ use super::substance::{EuLow, Gwp100, Hazard, Rcra, Transport};
 use super::table::Table;
 use super::{Class, Figure, FlashPoint, Registration, Solubility, Substance, Text, parse_formula};
 use crate::order;
+use crate::quantity::nearest;
 use crate::source::{Source, Standing};
 
 macro_rules! tables {
@@ -104,7 +105,7 @@ fn list(cell: &str, separator: char) -> Vec<String> {
 
 impl Shelf {
     fn number(&mut self, table: Table, name: &str, cell: &str) -> f64 {
-        cell.parse().unwrap_or_else(|_| {
+        nearest(cell).unwrap_or_else(|| {
             self.faults.push(format!("{}: {name}: \"{cell}\" is no number", table.name));
             f64::NAN
         })

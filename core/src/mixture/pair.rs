@@ -1,5 +1,6 @@
 //! The table of pairs: constants of Wilson's equation and how each was come by.
 use crate::material::Text;
+use crate::quantity::nearest;
 use std::sync::OnceLock;
 
 /// Constants of Wilson's equation for two components: `ln Λᵢⱼ = aᵢⱼ + bᵢⱼ/T`.
@@ -136,14 +137,14 @@ fn row(line: &'static str) -> Option<Pair> {
     let mut cells = line.split(',');
     let mut next = || cells.next();
     let (first, second) = (next()?, next()?);
-    let numbers = [next()?, next()?, next()?, next()?, next()?, next()?].map(str::parse::<f64>);
+    let numbers = [next()?, next()?, next()?, next()?, next()?, next()?].map(nearest);
     let (basis, source) = (next()?, next()?);
     let basis = [Basis::Published, Basis::Azeotrope, Basis::Fitted, Basis::Homologues, Basis::Splits]
         .into_iter()
         .find(|b| b.word() == basis)?;
     let law = match (basis, numbers) {
         (Basis::Splits, _) => PairLaw::Splits,
-        (_, [Ok(a12), Ok(b12_k), Ok(a21), Ok(b21_k), Ok(low_c), Ok(high_c)]) => {
+        (_, [Some(a12), Some(b12_k), Some(a21), Some(b21_k), Some(low_c), Some(high_c)]) => {
             PairLaw::Wilson(Wilson { a12, b12_k, a21, b21_k, low_k: low_c + 273.15, high_k: high_c + 273.15 })
         }
         _ => return None,

@@ -18,7 +18,7 @@ pub struct Investment {
 /// When what was paid has come back.
 #[derive(Clone, Copy, Debug, PartialEq)]
 pub enum Payback {
-    /// Nothing is paid, or less than nothing.
+    /// Nothing is paid, or less than nothing; and where it is nothing, nothing is lost each year.
     AtOnce,
     /// After so many years.
     After(f64),
@@ -101,7 +101,8 @@ impl Investment {
     }
 
     fn payback_at(&self, rate: f64) -> Payback {
-        if self.paid <= 0.0 {
+        // What costs nothing at once and more each year never pays either.
+        if self.paid < 0.0 || (self.paid == 0.0 && self.saved_a_year >= 0.0) {
             return Payback::AtOnce;
         }
         if self.saved_a_year <= 0.0 {
@@ -181,6 +182,8 @@ mod tests {
         assert_eq!(slow.discounted_payback(), Payback::NotWithin(10));
         let free = Investment { paid: 0.0, ..CASE };
         assert_eq!((free.simple_payback(), free.internal_rate()), (Payback::AtOnce, Rate::NothingPaid));
+        let dearer = Investment { paid: 0.0, saved_a_year: -1.0, ..CASE };
+        assert_eq!((dearer.simple_payback(), dearer.discounted_payback()), (Payback::Never, Payback::Never));
         let lossy = Investment { saved_a_year: 1e3, ..CASE };
         let Rate::Of(rate) = lossy.internal_rate() else { panic!() };
         assert!(rate < 0.0 && lossy.value_at(rate).abs() < 1e-6);

@@ -43,6 +43,8 @@ pub struct RouteColumns {
     /// The numbers of the draws that stopped, ascending.
     stopped: Vec<u32>,
     kinds: Vec<Stopped>,
+    /// How often each step took longer than the plan says.
+    longer: Vec<(StepIx, u32)>,
     x: Vec<f64>,
     values: Vec<f64>,
     desk: Desk,
@@ -69,6 +71,7 @@ impl RouteColumns {
             done: 0,
             stopped: Vec::new(),
             kinds: Vec::new(),
+            longer: Vec::new(),
             x: route.central(),
             values: vec![0.0; account.figures.len()],
             desk: route.desk(),
@@ -94,10 +97,14 @@ impl RouteColumns {
             self.done = 0;
             self.stopped.clear();
             self.kinds.clear();
+            self.longer.clear();
         }
     }
 
     pub(super) fn run(&mut self, route: &RouteProgram, account: &RouteAccount, seed: u64, count: u32) {
+        for column in &mut self.columns {
+            column.values.reserve(count as usize);
+        }
         for draw in self.done..self.done + count {
             for &i in &self.uncertain {
                 self.x[i] = route.inputs[i].draw(seed, u64::from(draw));
@@ -112,6 +119,7 @@ impl RouteColumns {
                         Draw(&self.x),
                         &mut self.values,
                     );
+                    self.tell_longer();
                     if !self.columns.iter().all(|c| self.values[c.figure].is_finite()) {
                         found = Some((StepIx::Closing, "a figure that is not finite"));
                     }
@@ -130,6 +138,25 @@ impl RouteColumns {
             }
         }
         self.done += count;
+    }
+
+    fn tell_longer(&mut self) {
+        let mut left = self.desk.longer;
+        while left != 0 {
+            let step = StepIx::Step(u16::try_from(left.trailing_zeros()).unwrap_or(0));
+            match self.longer.iter_mut().find(|(s, _)| *s == step) {
+                Some((_, draws)) => *draws += 1,
+                None => self.longer.push((step, 1)),
+            }
+            left &= left - 1;
+        }
+    }
+
+    /// The steps that took longer than the plan says, because the numbers of a draw asked for it, and in how many draws: they
+    /// count like the others, with the longer time.
+    #[must_use]
+    pub fn longer(&self) -> &[(StepIx, u32)] {
+        &self.longer
     }
 
     /// How many draws have been run.

@@ -7,7 +7,8 @@
 //! | `reading` | what the columns say: intervals, odds, what matters most, first-order propagation beside them |
 //!
 //! Draws in which a route stops are counted by step and kind and left out; with more than [`MOST_STOPPED`] of them no
-//! interval is given.
+//! interval is given. A gas stream that is too short in a draw goes on until the mark is reached: the draw counts with the longer
+//! time, and is told ([`RouteColumns::longer`]); a plan that asks for less than its own gas needs is stopped before.
 
 mod column;
 mod name;

@@ -1,6 +1,13 @@
 //! What an input is called in a sentence.
 
-use crate::program::WorkloadProgram;
+use crate::program::{Fields, ROUTE_FIELDS, SITE_FIELDS, WorkloadProgram};
+
+/// What a declared field is called, inside a sentence.
+fn label(groups: &[Fields], under: &str, key: &str) -> Option<String> {
+    let fields = groups.iter().find(|g| g.0 == under)?.2;
+    let label = fields.iter().find(|p| p.key == key)?.label;
+    Some(if label.starts_with("CO2") { label.to_owned() } else { crate::letter::small_text(label) })
+}
 
 /// The input of this identity in words: `density of n-hexane`, `Soxhlet, step 3 (Soxhlet extraction): charge`, `price of
 /// acetone`.
@@ -26,7 +33,15 @@ pub fn input_words(work: &WorkloadProgram, identity: &str) -> String {
                 return format!("{}, step {} ({}): {what}", route.name, i + 1, step.technique.title);
             }
         }
-        return format!("{}: {}", route.name, plain(rest));
+        let (under, key) =
+            rest.trim_start_matches('.').rsplit_once('.').unwrap_or(("", rest.trim_start_matches('.')));
+        let declared = label(ROUTE_FIELDS, under, key);
+        return format!("{}: {}", route.name, declared.unwrap_or_else(|| plain(rest)));
+    }
+    if let Some((under, key)) = identity.strip_prefix("site.").and_then(|rest| rest.split_once('.'))
+        && let Some(declared) = label(SITE_FIELDS, under, key)
+    {
+        return declared;
     }
     // Workload and site: the last keys say enough.
     match identity.split_once("].") {

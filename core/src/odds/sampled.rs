@@ -4,8 +4,8 @@ use super::column::RouteColumns;
 use crate::account::{Account, Figure};
 use crate::plan::{OwnMaterial, Plan, Site, Workload};
 
-/// So many cells (draws times columns) are kept at most where nothing else is said: 40 MB.
-pub const MOST_CELLS: usize = 5_000_000;
+/// So many cells (draws times columns) are kept at most where nothing else is said: 64 MB, or 100,000 draws of 80 figures.
+pub const MOST_CELLS: usize = 8_000_000;
 
 /// So many draws of one route are made before another route has its turn.
 const TURN: u32 = 500;

@@ -1,6 +1,7 @@
 //! The keys of the document, declared once: the reader checks by these tables, and the schema is made from them.
 //! The order here is the order in which a plan is written.
 
+use crate::climate::{Edition, Origin};
 use crate::code::Activity;
 
 /// The key that says that a document is a plan, and of which version.
@@ -319,13 +320,13 @@ pub(super) static CLIMATE: Object = Object {
     keys: &[
         may(
             "gwp",
-            Shape::Word(&["AR4", "AR5", "AR6"]),
+            Shape::Word(Edition::WORDS),
             r#""AR6""#,
             "the assessment report whose 100-year warming potentials are read; AR6 when left out",
         ),
         may(
             "co2_origin",
-            Shape::Word(&["fossil by-product", "biogenic", "natural well", "air capture"]),
+            Shape::Word(Origin::WORDS),
             r#""fossil by-product""#,
             "where bought CO2 comes from",
         ),

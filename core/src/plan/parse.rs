@@ -2,6 +2,7 @@
 //! they were written.
 
 use super::tree::{DEEPEST, Node};
+use crate::quantity::nearest;
 
 /// Why a text is no JSON, and the byte at which that shows; the length of the text where it ends too early.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -160,7 +161,7 @@ impl<'t> Reader<'t> {
         }
         let number = self.text.get(start..self.at).unwrap_or("");
         // What no double can hold is refused at its last digit.
-        if number.parse::<f64>().is_ok_and(f64::is_finite) { Ok(number) } else { Err(Fault::At(self.at - 1)) }
+        if nearest(number).is_some_and(f64::is_finite) { Ok(number) } else { Err(Fault::At(self.at - 1)) }
     }
 
     fn quoted(&mut self) -> Result<String, Fault> {

@@ -227,13 +227,15 @@ fn parameter(param: &Param) -> Entry {
         Control::Quantity(Kind::Fraction | Kind::Count | Kind::Number) | Control::Count => {
             out.push(number_or_text());
         }
-        Control::Quantity(_) | Control::Material | Control::Place => out.push(typed("string")),
+        Control::Quantity(_) | Control::Material | Control::Place | Control::Text => {
+            out.push(typed("string"));
+        }
         Control::Choice(words) => out.push(entry("enum", texts(words.iter().copied()))),
         Control::Mixture => {
             out.push(entry("type", texts(["string", "object"].into_iter())));
             out.push(entry("additionalProperties", Node::Map(vec![typed("string")])));
         }
-        Control::PerMaterial(_) => out.extend(named(vec![typed("string")])),
+        Control::PerMaterial(_) | Control::PerStream(_) => out.extend(named(vec![typed("string")])),
         Control::YesNo => out.push(typed("boolean")),
     }
     if let Need::Default(words, _) = param.need {

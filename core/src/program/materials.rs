@@ -24,8 +24,8 @@ const CLASSES: &[&str] =
 pub static OWN_FIELDS: &[Param] = &[
     Param::new("class", "Class", Control::Choice(CLASSES))
         .hint("What it counts as in the accounts; solute when left out."),
-    Param::new("cas", "CAS number", Control::Material).hint("As in 110-54-3."),
-    Param::new("formula", "Formula", Control::Material).hint("As in C6H14."),
+    Param::new("cas", "CAS number", Control::Text).hint("As in 110-54-3."),
+    Param::new("formula", "Formula", Control::Text).hint("As in C6H14."),
     Param::quantity("molar_mass", "Molar mass", Kind::MolarMass).physical(1e-3, 10.0),
     Param::quantity("density", "Density at the bench's temperature", Kind::Density).physical(0.01, 25_000.0),
     Param::quantity("bulk_density", "Bulk density", Kind::Density).physical(1.0, 25_000.0),
@@ -36,9 +36,9 @@ pub static OWN_FIELDS: &[Param] = &[
     Param::quantity("solubility_in_water", "Solubility in water", Kind::Density)
         .physical(0.0, 5000.0)
         .hint("Mass dissolved in a volume of water, or \"miscible\"."),
-    Param::new("hazards", "Hazard statements", Control::Material)
+    Param::new("hazards", "Hazard statements", Control::Text)
         .hint("H codes with spaces between, or \"none\"."),
-    Param::new("source", "Source", Control::Material).required().hint("Where these figures come from."),
+    Param::new("source", "Source", Control::Text).required().hint("Where these figures come from."),
 ];
 
 /// Resolves names once for a whole plan.

@@ -132,6 +132,15 @@ impl RouteBuilder<'_> {
         ] {
             *slot = self.price(&route.money, key, &at, Kind::Money, currency, 1.0);
         }
+        if let (Some(new), Some(old)) = (out.instrument, out.residual)
+            && self.value(old) > self.value(new)
+        {
+            self.problems.push(Problem::warning(
+                below(&at, "residual"),
+                "an instrument that is worth more at the end than it costs",
+                "what it brings when it is sold; leave it if it is right",
+            ));
+        }
         Some(out)
     }
 
@@ -170,15 +179,34 @@ impl RouteBuilder<'_> {
         factor: f64,
     ) -> Option<In> {
         match self.amounts.entry(text, kind) {
-            Ok(Entry::Known(amount)) => self
-                .in_currency(path, &amount, currency)
-                .then(|| self.input(path.to_owned(), &scaled(&amount, kind, factor), Origin::Entered)),
+            Ok(Entry::Known(amount)) => {
+                self.doubt_below_zero(path, text, &amount);
+                self.in_currency(path, &amount, currency)
+                    .then(|| self.input(path.to_owned(), &scaled(&amount, kind, factor), Origin::Entered))
+            }
             Ok(Entry::NotKnown) => None,
             Err(e) => {
                 self.problems.push(Problem::error(path, format!("\"{text}\": {}", e.found()), e.need()));
                 None
             }
         }
+    }
+
+    /// Warns of a price below zero, and of one that falls below it in some draws.
+    fn doubt_below_zero(&mut self, path: &str, text: &str, amount: &Amount) {
+        let low = match amount.spread {
+            Spread::Exact => amount.central_si,
+            Spread::Limits { low_si, .. } => low_si,
+            Spread::Standard { u_si } => amount.central_si - 2.0 * u_si,
+        };
+        let found = if amount.central_si < 0.0 {
+            format!("{text} is a negative price: the site would be paid for buying it")
+        } else if low < 0.0 {
+            format!("{text} falls below zero in some draws: the site would be paid there")
+        } else {
+            return;
+        };
+        self.problems.push(Problem::warning(path, found, "leave it if it is right"));
     }
 
     fn in_currency(&mut self, path: &str, amount: &Amount, currency: Currency) -> bool {
@@ -249,13 +277,7 @@ impl RouteBuilder<'_> {
         if !self.in_currency(path, &amount, currency) {
             return None;
         }
-        if amount.central_si < 0.0 {
-            self.problems.push(Problem::warning(
-                path,
-                format!("{text} is a negative price: the site would be paid for buying it"),
-                "leave it if it is right",
-            ));
-        }
+        self.doubt_below_zero(path, text, &amount);
         if kind == Kind::PricePerMass {
             return Some(Price::PerMass(self.input(path.to_owned(), &amount, Origin::Entered)));
         }

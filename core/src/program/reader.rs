@@ -741,6 +741,8 @@ fn expectation(p: &Param) -> String {
         Control::Material => "the name of a material".to_owned(),
         Control::Mixture => "a solvent, or several with their shares".to_owned(),
         Control::PerMaterial(kind) => format!("materials, each with an amount such as \"{}\"", example(kind)),
+        Control::PerStream(kind) => format!("streams, each with an amount such as \"{}\"", example(kind)),
+        Control::Text => "a text".to_owned(),
         Control::Count => "a whole number".to_owned(),
         Control::YesNo => "true or false".to_owned(),
         Control::Place => "the name of a stream or place".to_owned(),

@@ -53,7 +53,7 @@ pub static ROOM_FIELDS: &[Param] = &[
         .physical(0.01, 1.0)
         .usual(0.1, 1.0)
         .hint("0.1 where air short-circuits from inlet to outlet, 1 where it mixes well."),
-    Param::new("low_spaces", "Pits, ducts, cellars, cold rooms", Control::Material)
+    Param::new("low_spaces", "Pits, ducts, cellars, cold rooms", Control::Text)
         .hint("Where heavy vapour and cold gas gather; it prints with the warning."),
     Param::quantity("cylinder", "Largest cylinder", Kind::Mass)
         .physical(0.0, 1e5)

@@ -19,6 +19,8 @@ pub struct Desk {
     pub runs: Runs,
     /// What was placed by default, in the order of [`Place::BENCH`]; kg in a run of the last step's basis.
     pub placed_by_default_kg: [f64; BENCH_PLACES],
+    /// The steps that took longer than the plan says: bit `i` for step `i`.
+    pub longer: u64,
 }
 
 /// Where and why a run stopped.
@@ -40,6 +42,7 @@ impl RouteProgram {
             co2: Scratch::with_room(self.steps.iter().fold(0, |sum, s| sum + s.step.co2_states())),
             runs: Runs { results: 0.0, extractions: 0.0, batches: 0.0, feed_share: 0.0 },
             placed_by_default_kg: [0.0; BENCH_PLACES],
+            longer: 0,
         }
     }
 
@@ -73,7 +76,9 @@ impl RouteProgram {
             b.turn_to(ix, runs.of(step.basis), &step.measured).map_err(at(ix))?;
             step.step.run(x, &mut b).map_err(at(ix))?;
         }
-        desk.placed_by_default_kg = self.close(&mut b).map_err(at(StepIx::Closing))?;
+        let by_default_kg = self.close(&mut b).map_err(at(StepIx::Closing))?;
+        desk.longer = b.longer();
+        desk.placed_by_default_kg = by_default_kg;
         Ok(())
     }
 

@@ -59,6 +59,16 @@ impl RouteBuilder<'_> {
         }
         let there = |slot: Option<In>, b: &Self| slot.map_or(0.0, |s| b.value(s));
         let year_s = there(out.attended_year_s, self) + there(out.unattended_year_s, self);
+        // What may not run alone has the attended hours only.
+        let alone = if out.unattended { there(out.unattended_year_s, self) } else { 0.0 };
+        let hours_s = there(out.attended_year_s, self) + alone;
+        if out.attended_year_s.is_some() && hours_s <= 0.0 && there(out.run_s, self) > 0.0 {
+            self.problems.push(Problem::error(
+                "site.hours.attended",
+                format!("no hour of the year in which {} can run", route.name),
+                "hours in which someone is there, such as \"1300 h\", or a route that may run unattended",
+            ));
+        }
         // 365 days
         if year_s > 31_536_000.0 {
             self.problems.push(Problem::error(

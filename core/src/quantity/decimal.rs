@@ -1,5 +1,6 @@
 //! Decimal numbers as they are written, so that `250 mL` becomes the double nearest to 0.00025 and not the product
 //! of two rounded ones.
+use super::nearest::of_parts;
 
 /// mantissa × 10^exponent.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -10,12 +11,6 @@ pub(super) struct Decimal {
 
 /// Whole numbers up to this are exact in a double: 2^53.
 const EXACT: u128 = 9_007_199_254_740_992;
-
-/// The powers of ten that are exact in a double.
-const POWERS: [f64; 23] = [
-    1e0, 1e1, 1e2, 1e3, 1e4, 1e5, 1e6, 1e7, 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15, 1e16, 1e17, 1e18,
-    1e19, 1e20, 1e21, 1e22,
-];
 
 impl Decimal {
     pub(super) const fn new(mantissa: i128, exponent: i32) -> Self {
@@ -105,17 +100,8 @@ impl Decimal {
 
     /// The nearest double.
     pub(super) fn to_f64(self) -> f64 {
-        if self.mantissa == 0 {
-            return 0.0;
-        }
-        // One product or quotient of two exact doubles is rounded once.
-        let power = usize::try_from(self.exponent.unsigned_abs()).ok().and_then(|n| POWERS.get(n));
-        if let Some(power) = power.filter(|_| self.mantissa.unsigned_abs() <= EXACT) {
-            let mantissa = self.mantissa as f64;
-            return if self.exponent < 0 { mantissa / power } else { mantissa * power };
-        }
-        // The standard library's reading of decimals is correctly rounded; the text is well formed, so it never fails.
-        format!("{}e{}", self.mantissa, self.exponent).parse::<f64>().unwrap_or(f64::NAN)
+        let value = of_parts(self.mantissa.unsigned_abs(), i64::from(self.exponent));
+        if self.is_negative() { -value } else { value }
     }
 
     /// The number divided by a whole number, rounded once where both sides are exact in a double.

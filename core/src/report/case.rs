@@ -1,10 +1,10 @@
 //! The paper for finance and quality: one page, an annex, and what differs from another version of the plan.
 
 use super::markdown::escaped;
-use super::odds::{draws_words, named, odds_words};
+use super::odds::{draws_words, named, odds_words, stopped_words};
 use super::row::PROGRAM;
 use super::words::{cited, work_words};
-use crate::account::{Account, Group};
+use crate::account::{Account, Group, RouteAccount};
 use crate::case::{DrawnCase, Switch, Turn, drawn, not_ranked, switch, turning_prices, turning_results};
 use crate::chance::Summary;
 use crate::compare::{HEADLINES, compare};
@@ -103,9 +103,9 @@ fn page(
     }
     let _ = writeln!(out, "### In place of {}\n", escaped(present));
     out.push_str(
-        "| route | paid at once | saved a year | present value | from | to | gains in | payback | ranked |\n",
+        "| route | instruments to buy | paid at once | saved a year | present value | from | to | gains in | payback | ranked |\n",
     );
-    out.push_str("| --- | ---: | ---: | ---: | ---: | ---: | ---: | --- | --- |\n");
+    out.push_str("| --- | ---: | ---: | ---: | ---: | ---: | ---: | ---: | --- | --- |\n");
     for row in &rows {
         match &row.case {
             Ok(case) => {
@@ -118,8 +118,9 @@ fn page(
                 let ranked = if case.not_ranked.is_empty() { "yes" } else { "no" };
                 let _ = writeln!(
                     out,
-                    "| {} | {} | {} | {} | {} | {} | {gains} | {} | {ranked} |",
+                    "| {} | {} | {} | {} | {} | {} | {} | {gains} | {} | {ranked} |",
                     escaped(row.name),
+                    case.to_buy.map_or_else(|| "not known".to_owned(), |n| significant(n, 4)),
                     money(case.investment.paid),
                     money(case.investment.saved_a_year),
                     money(case.investment.net_present_value()),
@@ -129,7 +130,7 @@ fn page(
                 );
             }
             Err(_) => {
-                let _ = writeln!(out, "| {} | not known | | | | | | | no |", escaped(row.name));
+                let _ = writeln!(out, "| {} | | not known | | | | | | | no |", escaped(row.name));
             }
         }
     }
@@ -145,9 +146,13 @@ fn page(
             }),
         }
     }
+    for text in reading.iter().flat_map(|reading| stopped_words(work, reading)) {
+        let _ = writeln!(out, "- {}", escaped(&text));
+    }
     out.push_str("\n### What else changes\n\n");
     if let (Some(reading), Some(row)) = (&reading, first.or_else(|| rows.first())) {
-        headlines(out, work, reading, row.route);
+        let accounts = account.workloads.get(w).map(|w| w.routes.as_slice()).unwrap_or_default();
+        headlines(out, work, reading, row.route, accounts);
     }
     let Some(row) = first else {
         out.push_str("No route is ranked, so that nothing is recommended.\n\n");
@@ -162,14 +167,20 @@ fn page(
     if let Some(turn) = turning_results(account, w, row.route) {
         let _ = writeln!(out, "- {}", turn_words(turn));
     }
-    for price in turning_prices(account, w, row.route).iter().take(NAMED) {
-        let _ = writeln!(
-            out,
-            "- it turns where {} ({}) is {} times what it is",
-            escaped(&input_words(work, &price.identity)),
-            escaped(&price.written),
-            significant(price.over_central, 3)
-        );
+    let prices: Vec<String> = turning_prices(account, w, row.route)
+        .iter()
+        .take(NAMED)
+        .map(|price| {
+            format!(
+                "{} is {} times what it is ({})",
+                escaped(&input_words(work, &price.identity)),
+                significant(price.over_central, 3),
+                escaped(&price.written)
+            )
+        })
+        .collect();
+    if !prices.is_empty() {
+        let _ = writeln!(out, "- it turns where {}", prices.join(", or "));
     }
     if let Some(reading) = &reading {
         let matters = reading.matters("cost.year", row.route, Some(work.present));
@@ -179,11 +190,15 @@ fn page(
     }
     let routes = account.workloads.get(w).map(|w| &w.routes);
     let found = routes.and_then(|r| r.get(row.route)).and_then(Option::as_ref);
-    out.push_str("\n### Cautions\n\n");
-    for caution in found.iter().flat_map(|a| &a.cautions) {
-        let _ = writeln!(out, "- {}", escaped(caution.text));
+    // What it is about; what to do stands in the annex, so that this stays one page.
+    let about = |text: &'static str| text.split([':', ';', '.']).next().unwrap_or_default();
+    let cautions: Vec<String> =
+        found.iter().flat_map(|a| &a.cautions).map(|c| escaped(about(c.text))).collect();
+    if !cautions.is_empty() {
+        let _ = write!(out, "\n### Cautions\n\n{}. In full in the annex.", cautions.join(". "));
     }
-    out.push_str("\nLocal codes, limits and licensed practice decide.\n\n### Points of change control\n\n");
+    out.push_str(if cautions.is_empty() { "\n" } else { " " });
+    out.push_str("Local codes, limits and licensed practice decide.\n\n### Points of change control\n\n");
     for point in [
         "equivalence shown on own samples and a reference material, with detection limits and recovery",
         "permission of whoever prescribes the method, in writing",
@@ -197,7 +212,13 @@ fn page(
 }
 
 /// The headline figures and the lines of climate: the present route, another one with its interval, and the odds.
-fn headlines(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>, route: usize) {
+fn headlines(
+    out: &mut String,
+    work: &WorkloadProgram,
+    reading: &Reading<'_>,
+    route: usize,
+    accounts: &[Option<RouteAccount>],
+) {
     let name = |r: usize| work.routes.get(r).map_or(String::new(), |r| escaped(&r.name));
     let ids: Vec<&str> = reading.ids();
     let headline = HEADLINES.iter().map(|(id, _)| *id).filter(|id| ids.contains(id) && *id != "cost.year");
@@ -222,12 +243,24 @@ fn headlines(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>, ro
             .iter()
             .find(|x| x.route == route)
             .map_or(String::new(), |x| odds_words(x.less, x.same));
-        let climate = if figure.id.starts_with("climate.") { "climate: " } else { "" };
+        let climate = if figure.id.starts_with("climate.") { scope(accounts, &figure.id) } else { "" };
         let (a, b) = (central(before), central(after));
         let _ =
             writeln!(out, "| {climate}{} | {a} | {b} | {low} | {high} | {odds} |", escaped(&figure.title));
     }
     out.push_str("\nLines of climate are never added up: each has its own scope (annex).\n\n");
+}
+
+/// Which scope a line of climate belongs to, as its boundary says.
+fn scope(accounts: &[Option<RouteAccount>], id: &str) -> &'static str {
+    let figures = accounts.iter().flatten().flat_map(|a| &a.figures);
+    let boundary = figures.into_iter().find(|f| f.id == id).map_or("", |f| f.boundary.as_str());
+    match boundary.get(..7) {
+        Some("scope 1") => "climate, scope 1: ",
+        Some("scope 2") => "climate, scope 2: ",
+        Some("scope 3") => "climate, scope 3: ",
+        _ => "climate, no scope: ",
+    }
 }
 
 fn annex(
@@ -261,6 +294,12 @@ fn annex(
         }
         for why in not_ranked(route) {
             let _ = writeln!(out, "\nNot ranked: {}.", escaped(&why));
+        }
+        if !found.cautions.is_empty() {
+            out.push_str("\nCautions; local codes, limits and licensed practice decide:\n\n");
+            for caution in &found.cautions {
+                let _ = writeln!(out, "- {}", escaped(caution.text));
+            }
         }
         out.push_str("\nAssumed, because the plan does not say:\n\n");
         for a in &route.assumptions {
@@ -375,9 +414,13 @@ pub fn turn_words(turn: Turn) -> String {
 pub fn money_words(name: &str, case: &Switch, drawn: &DrawnCase, coverage: f64) -> String {
     let i = case.investment;
     let mut text = format!(
-        "{name} costs {} at once and saves {} a year: over {} years at {} % a present value of {}",
+        "{name} costs {} at once and {} a year: over {} years at {} % a present value of {}",
         money(i.paid, case),
-        money(i.saved_a_year, case),
+        if i.saved_a_year < 0.0 {
+            format!("{} more", money(-i.saved_a_year, case))
+        } else {
+            ["saves ", &money(i.saved_a_year, case)].concat()
+        },
         i.years,
         significant(i.discount * 100.0, 3),
         money(i.net_present_value(), case)
@@ -446,6 +489,23 @@ pub fn since_markdown(old: &Account, new: &Account) -> String {
                 let i = account.figures.iter().position(|f| f.id == id)?;
                 Some((account.figures[i].measure.shown(account.values[i]), account.values[i]))
             };
+            let value = |a: &Account, w: usize, r: usize| {
+                let case = switch(a, w, r).ok()?;
+                Some((money(case.investment.net_present_value(), &case), case.investment.net_present_value()))
+            };
+            let (a, b) = (value(old, before, at), value(new, w, r));
+            let changed = a.as_ref().map(|v| v.1) != b.as_ref().map(|v| v.1);
+            if changed && r != work.present {
+                let said = |v: Option<(String, f64)>| v.map_or_else(|| "no case".to_owned(), |v| v.0);
+                let _ = writeln!(
+                    out,
+                    "| {} | {} | present value of the case | {} | {} |",
+                    escaped(&work.name),
+                    escaped(&route.name),
+                    said(a),
+                    said(b)
+                );
+            }
             for (id, title) in HEADLINES {
                 let (a, b) = (found(old, before, at, id), found(new, w, r, id));
                 if a.as_ref().map(|v| v.1) != b.as_ref().map(|v| v.1) {

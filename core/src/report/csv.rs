@@ -1,6 +1,7 @@
 //! The figures flat, for a spreadsheet.
 
-use super::row::{Row, figures};
+use super::drawn::{Drawn, Spreads};
+use super::row::{Row, figures, written};
 use crate::account::{Account, Figure};
 use crate::quantity::shortest;
 
@@ -36,15 +37,34 @@ const HEAD: [&str; 12] = [
 /// ```
 #[must_use]
 pub fn result_csv(account: &Account) -> String {
+    result_csv_drawn(account, None)
+}
+
+/// As [`result_csv`], with three columns more: `draws` behind the interval, and its limits `low` and `high`, for a year where the
+/// figure grows with the work; empty where there is no interval.
+#[must_use]
+pub fn result_csv_drawn(account: &Account, drawn: Option<Drawn<'_>>) -> String {
     let mut out = HEAD.join(",");
-    out.push_str("\r\n");
+    out.push_str(if drawn.is_some() { ",draws,low,high\r\n" } else { "\r\n" });
     let Some(program) = &account.program else { return out };
-    for (work, accounts) in program.workloads.iter().zip(&account.workloads) {
-        for (route, account) in work.routes.iter().zip(&accounts.routes) {
+    for (w, (work, accounts)) in program.workloads.iter().zip(&account.workloads).enumerate() {
+        for (r, (route, account)) in work.routes.iter().zip(&accounts.routes).enumerate() {
             let Some(account) = account else { continue };
+            let spreads = Spreads::of(drawn, w, r);
             for (figure, value_si) in figures(account) {
                 let row = Row::of(account, figure.measure, value_si);
                 line(&mut out, [&work.name, &route.name], figure, &row);
+                if drawn.is_some() {
+                    let cells = spreads.get(&figure.id).map_or_else(
+                        || [const { String::new() }; 3],
+                        |s| {
+                            let limit = |v| shortest(written(figure.measure, v));
+                            [s.draws.to_string(), limit(s.symmetric.low), limit(s.symmetric.high)]
+                        },
+                    );
+                    out.push_str(&[",", &cells.join(",")].concat());
+                }
+                out.push_str("\r\n");
             }
         }
     }
@@ -70,7 +90,6 @@ fn line(out: &mut String, [workload, route]: [&str; 2], figure: &Figure, row: &R
     });
     cells.push(text_cell(&figure.boundary));
     out.push_str(&cells.join(","));
-    out.push_str("\r\n");
 }
 
 /// A text as a cell: defused where a spreadsheet would take it for a formula, quoted where RFC 4180 asks for it.

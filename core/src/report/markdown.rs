@@ -1,8 +1,10 @@
 //! A report to read and to print, as Markdown.
 
 use super::air::air_sheets;
+use super::drawn::{Drawn, Spreads};
 use super::energy::{Sheet, energy_sheets};
 use super::row::{MONTHS, PROGRAM, figures};
+use super::table::intervals_words;
 use super::words::{amount, cited, editions, hidden, is_detail, work_words};
 use crate::account::{Account, Group, HazardAccount, MaterialHazard, Pouring, RouteAccount, classified};
 use crate::code::CAUTION;
@@ -26,8 +28,17 @@ use std::fmt::Write as _;
 /// ```
 #[must_use]
 pub fn markdown(account: &Account) -> String {
+    markdown_drawn(account, None)
+}
+
+/// As [`markdown()`], with the limits of each figure's interval, a year, beside its central value.
+#[must_use]
+pub fn markdown_drawn(account: &Account, drawn: Option<Drawn<'_>>) -> String {
     let mut out = String::new();
     head(&mut out, account);
+    if let Some(drawn) = drawn {
+        let _ = write!(out, "{}\n\n", intervals_words(drawn));
+    }
     if let Some(program) = &account.program {
         for (i, (work, accounts)) in program.workloads.iter().zip(&account.workloads).enumerate() {
             let _ = write!(out, "## {}\n\n{}.\n\n", escaped(&work.name), work_words(work));
@@ -38,7 +49,9 @@ pub fn markdown(account: &Account) -> String {
                 let present = if j == work.present { " (present)" } else { "" };
                 let _ = write!(out, "### {}{present}\n\n", escaped(&route.name));
                 match account {
-                    Some(account) => route_account(&mut out, &program.site, route, account),
+                    Some(account) => {
+                        route_account(&mut out, &program.site, route, account, Spreads::of(drawn, i, j));
+                    }
                     None => out.push_str("Its run stopped: see the problems.\n\n"),
                 }
             }
@@ -96,29 +109,42 @@ fn compared(out: &mut String, work: &WorkloadProgram, comparison: &Comparison) {
     }
 }
 
-fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account: &RouteAccount) {
+fn route_account(
+    out: &mut String,
+    site: &SiteUse,
+    route: &RouteProgram,
+    account: &RouteAccount,
+    spreads: Spreads<'_>,
+) {
     let product = account.product_kg > 0.0;
     for group in Group::ALL {
         let rows: Vec<_> = figures(account).filter(|(f, _)| f.group == group).collect();
         if rows.is_empty() {
             continue;
         }
+        let (limits, ruled) = if spreads.there() { (" from | to |", " ---: | ---: |") } else { ("", "") };
         let (last, rule) = if product { (" per kg product |", " ---: |") } else { ("", "") };
         let _ = write!(out, "#### {}\n\n", group.title());
-        let _ = writeln!(out, "| figure | per result | per batch | per month | per year |{last} boundary |");
-        let _ = writeln!(out, "| --- | ---: | ---: | ---: | ---: |{rule} --- |");
+        let _ = writeln!(
+            out,
+            "| figure | per result | per batch | per month | per year |{limits}{last} boundary |"
+        );
+        let _ = writeln!(out, "| --- | ---: | ---: | ---: | ---: |{ruled}{rule} --- |");
         for (figure, a_year) in rows {
             let mut cells = vec![escaped(&figure.title)];
             let shown = |value| amount(value, figure.measure);
+            let limits = spreads.there().then(|| spreads.limits(&figure.id, shown));
             if figure.measure.extensive() {
                 cells.extend(
                     [account.per_result(a_year), account.per_batch(a_year), a_year / MONTHS, a_year]
                         .map(shown),
                 );
+                cells.extend(limits.into_iter().flatten());
                 cells.extend(account.per_kg_product(a_year).map(shown));
             } else {
                 cells.extend(["", "", ""].map(str::to_owned));
                 cells.push(shown(a_year));
+                cells.extend(limits.into_iter().flatten());
                 cells.extend(product.then(String::new));
             }
             cells.push(escaped(&figure.boundary));

@@ -58,7 +58,7 @@ pub fn odds_table(account: &Account, sampled: &Sampled, coverage: f64) -> String
             rows(&mut grid, work, &figure);
         }
         grid.print(&mut out);
-        stopped(&mut out, work, &reading);
+        stopped_words(work, &reading).iter().for_each(|text| paragraph(&mut out, "  ", text));
         matters(&mut out, work, &reading);
     }
     out
@@ -135,9 +135,12 @@ pub fn odds_words(less: f64, same: f64) -> String {
     }
 }
 
-fn stopped(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>) {
+/// What is to be said of draws that stopped, and of those in which a step takes longer: a sentence for each step and kind.
+#[must_use]
+pub fn stopped_words(work: &WorkloadProgram, reading: &Reading<'_>) -> Vec<String> {
+    let mut out = Vec::new();
     for (r, route) in work.routes.iter().enumerate() {
-        let Some(columns) = reading.columns(r).filter(|c| !c.stopped().is_empty()) else { continue };
+        let Some(columns) = reading.columns(r) else { continue };
         let share = columns.stopped_share();
         let kept = if share > MOST_STOPPED {
             "too many for an interval: narrow the amounts of that step"
@@ -145,16 +148,24 @@ fn stopped(out: &mut String, work: &WorkloadProgram, reading: &Reading<'_>) {
             "they are left out"
         };
         for kind in columns.stopped() {
-            let text = format!(
+            out.push(format!(
                 "{}: {} draws stopped {}: {}; {kept}.",
                 route.name,
                 kind.draws,
                 step_words(route, kind.step),
                 kind.why
-            );
-            paragraph(out, "  ", &text);
+            ));
+        }
+        for (step, draws) in columns.longer() {
+            out.push(format!(
+                "{}: in {draws} of {} draws the run {} takes longer than the plan says, as long as its gas stream needs; they count with the longer time.",
+                route.name,
+                columns.done(),
+                step_words(route, *step)
+            ));
         }
     }
+    out
 }
 
 fn step_words(route: &RouteProgram, step: StepIx) -> String {
@@ -220,7 +231,7 @@ fn percent(share: f64) -> String {
 /// | `thimbleworth_odds` | [`ODDS_VERSION`] |
 /// | `program`, `plan_digest` | as in the result document |
 /// | `seed`, `draws`, `asked`, `coverage` | what the draws follow from; how many every route has, and how many were asked for; the probability that an interval holds |
-/// | `workloads` | `name`, `present`, `routes` (`name`, `draws`, `stopped`: `step`, `why`, `draws`), `figures` |
+/// | `workloads` | `name`, `present`, `routes` (`name`, `draws`, `stopped`: `step`, `why`, `draws`; `longer`: `step`, `draws` in which it takes longer than the plan says), `figures` |
 ///
 /// A figure has `id`, `title`, `routes` and `rivals`. Of a route: `name`, `central_U`, `mean_U`, `u_U`, `median_U`,
 /// `low_U` and `high_U` (probabilistically symmetric), `shortest_low_U`, `shortest_high_U`, `first_order_u_U`,
@@ -268,6 +279,14 @@ fn workload(json: &mut Json, reading: &Reading<'_>, coverage: f64, work: &Worklo
                         });
                     }
                 });
+                json.list("longer", |json| {
+                    for (step, draws) in columns.longer() {
+                        json.row(|json| {
+                            json.put("step", if let StepIx::Step(i) = step { Some(*i) } else { None });
+                            json.put("draws", *draws);
+                        });
+                    }
+                });
             });
         }
     });
@@ -294,7 +313,8 @@ fn of_figure(
             json.row(|json| {
                 json.put("name", name(r));
                 number(json, "central", figure.measure, Some(spread.central));
-                summary(json, figure.measure, spread.drawn, spread.first_order_u);
+                summary(json, "", figure.measure, spread.drawn);
+                number(json, "first_order_u", figure.measure, spread.first_order_u);
                 json.put("first_order_agrees", spread.agrees(coverage));
             });
         }
@@ -306,7 +326,8 @@ fn of_figure(
                 json.put("draws", rival.draws);
                 json.put("less", rival.less);
                 json.put("same", rival.same);
-                summary(json, figure.measure, rival.difference, rival.first_order_u);
+                summary(json, "", figure.measure, rival.difference);
+                number(json, "first_order_u", figure.measure, rival.first_order_u);
                 json.list("matters", |json| {
                     for m in reading.matters(&figure.id, rival.route, Some(work.present)) {
                         json.row(|json| {
@@ -327,7 +348,8 @@ fn number(json: &mut Json, key: &str, measure: Measure, value_si: Option<f64>) {
     json.put(&format!("{key}_{}", yearly(measure)), value_si.map(|v| written(measure, v)));
 }
 
-fn summary(json: &mut Json, measure: Measure, said: Option<Summary>, first_order_u: Option<f64>) {
+/// Seven numbers of a summary, each key behind `before`.
+pub(super) fn summary(json: &mut Json, before: &str, measure: Measure, said: Option<Summary>) {
     for (key, value) in [
         ("mean", said.map(|s| s.mean)),
         ("u", said.map(|s| s.u)),
@@ -336,8 +358,7 @@ fn summary(json: &mut Json, measure: Measure, said: Option<Summary>, first_order
         ("high", said.map(|s| s.symmetric.high)),
         ("shortest_low", said.map(|s| s.shortest.low)),
         ("shortest_high", said.map(|s| s.shortest.high)),
-        ("first_order_u", first_order_u),
     ] {
-        number(json, key, measure, value);
+        number(json, &[before, key].concat(), measure, value);
     }
 }

@@ -10,12 +10,15 @@ mod waste;
 pub(super) use figure::figure;
 pub(super) use posting::{inputs, step_and_technique};
 
+use super::drawn::{Drawn, Spreads};
 use super::json::{Json, Value};
+use super::odds::summary;
 use super::row::{PROGRAM, figures};
 use super::words::editions;
 use crate::account::{Account, Pouring, RouteAccount};
 use crate::chance::{Draw, identity_key};
 use crate::compare::compare;
+use crate::odds::Reading;
 use crate::plan::save;
 use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
 
@@ -79,6 +82,15 @@ pub const RESULT_VERSION: u64 = 1;
 /// ```
 #[must_use]
 pub fn result_json(account: &Account, with_comparison: bool) -> String {
+    result_json_drawn(account, with_comparison, None)
+}
+
+/// As [`result_json`], with intervals: the document has `seed`, `draws` and `coverage` as well, and each figure the keys `mean_U`,
+/// `u_U`, `median_U`, `low_U`, `high_U`, `shortest_low_U`, `shortest_high_U` of [`odds_json`](crate::report::odds_json), for a
+/// year where it grows with the work, `null` where there is no interval. A difference of the comparison has the same keys for
+/// the change (behind `change_`), and the shares of draws in which the route has `less` and the `same`.
+#[must_use]
+pub fn result_json_drawn(account: &Account, with_comparison: bool, drawn: Option<Drawn<'_>>) -> String {
     let plan = account.plan.as_ref();
     let program = account.program.as_ref();
     Json::document(|json| {
@@ -86,6 +98,11 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
         json.put("program", PROGRAM);
         let digest = plan.map(|p| format!("fnv1a64:{:016x}", identity_key(&save(p))));
         json.put("plan_digest", digest.as_deref());
+        if let Some(drawn) = drawn {
+            json.put("seed", drawn.sampled.seed());
+            json.put("draws", drawn.sampled.done());
+            json.put("coverage", drawn.coverage);
+        }
         json.put("title", plan.map(|p| p.title.as_str()));
         json.put("site", plan.map(|p| p.site.name.as_str()));
         json.put("rules", plan.and_then(|p| p.site.rules.as_deref()));
@@ -102,7 +119,7 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
         json.list("workloads", |json| {
             let Some(program) = program else { return };
             for (i, work) in program.workloads.iter().enumerate() {
-                json.row(|json| workload(json, account, &program.site, work, i, with_comparison));
+                json.row(|json| workload(json, account, work, i, with_comparison, drawn));
             }
         });
         waste::site(json, account);
@@ -122,11 +139,12 @@ pub fn result_json(account: &Account, with_comparison: bool) -> String {
 fn workload(
     json: &mut Json,
     account: &Account,
-    site: &SiteUse,
     work: &WorkloadProgram,
     index: usize,
     with_comparison: bool,
+    drawn: Option<Drawn<'_>>,
 ) {
+    let Some(site) = account.program.as_ref().map(|p| &p.site) else { return };
     json.put("name", &work.name);
     match work.routes.first().and_then(|route| route.work.runs(Draw(&route.central())).ok()) {
         Some(runs) => json.object("work", |json| {
@@ -139,29 +157,45 @@ fn workload(
     json.put("present", work.routes.get(work.present).map_or("", |r| r.name.as_str()));
     json.list("routes", |json| {
         let Some(accounts) = account.workloads.get(index) else { return };
-        for (route, account) in work.routes.iter().zip(&accounts.routes) {
+        for (r, (route, account)) in work.routes.iter().zip(&accounts.routes).enumerate() {
             json.row(|json| {
                 json.put("name", &route.name);
                 json.put("accounted", account.is_some());
                 if let Some(account) = account {
-                    route_account(json, route, site, account);
+                    route_account(json, route, site, account, Spreads::of(drawn, index, r));
                 }
             });
         }
     });
     if with_comparison {
         match compare(account, index) {
-            Some(comparison) => json.object("comparison", |json| figure::comparison(json, work, &comparison)),
+            Some(comparison) => {
+                let reading = drawn.and_then(|d| Reading::new(account, d.sampled, index, d.coverage));
+                json.object("comparison", |json| {
+                    figure::comparison(json, work, &comparison, reading.as_ref());
+                });
+            }
             None => json.put("comparison", Value::Null),
         }
     }
 }
 
-fn route_account(json: &mut Json, route: &RouteProgram, site: &SiteUse, account: &RouteAccount) {
+fn route_account(
+    json: &mut Json,
+    route: &RouteProgram,
+    site: &SiteUse,
+    account: &RouteAccount,
+    spreads: Spreads<'_>,
+) {
     json.put("kg_product_per_year", account.product_kg);
     json.list("figures", |json| {
         for (of, value_si) in figures(account) {
-            json.row(|json| figure(json, account, of, value_si));
+            json.row(|json| {
+                figure(json, account, of, value_si);
+                if spreads.there() {
+                    summary(json, "", of.measure, spreads.get(&of.id));
+                }
+            });
         }
     });
     json.list("refused", |json| {

@@ -1,11 +1,13 @@
 //! Plain text for a terminal: the accounts of each route, or the routes side by side.
 
 use super::air::air_sheets;
+use super::drawn::{Drawn, Spreads};
 use super::energy::{Sheet, energy_sheets};
 use super::grid::{Grid, paragraph};
+use super::odds::draws_words;
 use super::row::figures;
 use super::words::{amount, cited, is_detail, visible, work_words};
-use crate::account::{Account, Group, Measure, Pouring, RouteAccount, classified};
+use crate::account::{Account, Figure, Group, Measure, Pouring, RouteAccount, classified};
 use crate::code::CAUTION;
 use crate::compare::{Comparison, Difference, HEADLINES, RouteComparison, compare};
 use crate::program::{RouteProgram, SiteUse, WorkloadProgram};
@@ -26,16 +28,25 @@ const ROUTES_ABREAST: usize = 2;
 /// ```
 #[must_use]
 pub fn account_table(account: &Account) -> String {
+    account_table_drawn(account, None)
+}
+
+/// As [`account_table`], with the limits of each figure's interval, a year, beside its central value.
+#[must_use]
+pub fn account_table_drawn(account: &Account, drawn: Option<Drawn<'_>>) -> String {
     let mut out = String::new();
     let Some(program) = &account.program else { return out };
     heading(&mut out, account);
-    for (work, accounts) in program.workloads.iter().zip(&account.workloads) {
+    if let Some(drawn) = drawn {
+        paragraph(&mut out, "", &intervals_words(drawn));
+    }
+    for (w, (work, accounts)) in program.workloads.iter().zip(&account.workloads).enumerate() {
         for (i, (route, account)) in work.routes.iter().zip(&accounts.routes).enumerate() {
             let present = if i == work.present { " (present)" } else { "" };
             out.push('\n');
             paragraph(&mut out, "", &format!("{}: {}{present}", work.name, route.name));
             if let Some(account) = account {
-                route_account(&mut out, &program.site, route, account);
+                route_account(&mut out, &program.site, route, account, Spreads::of(drawn, w, i));
             } else {
                 paragraph(&mut out, "", "Its run stopped: see the problems.");
             }
@@ -82,7 +93,13 @@ fn heading(out: &mut String, account: &Account) {
     paragraph(out, "", &line);
 }
 
-fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account: &RouteAccount) {
+fn route_account(
+    out: &mut String,
+    site: &SiteUse,
+    route: &RouteProgram,
+    account: &RouteAccount,
+    spreads: Spreads<'_>,
+) {
     let runs = account.runs;
     let number = |value| significant(value, 4);
     paragraph(
@@ -99,6 +116,9 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
     let product = account.product_kg > 0.0;
     let mut grid = Grid::new(40, 10);
     let mut head = ["", "per result", "per batch", "per month", "per year"].map(str::to_owned).to_vec();
+    if spreads.there() {
+        head.extend(["from", "to"].map(str::to_owned));
+    }
     if product {
         head.push("per kg product".to_owned());
     }
@@ -119,11 +139,13 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
                     a_year,
                 ];
                 cells.extend(per.map(|value| amount(value, figure.measure)));
+                limits(&mut cells, figure, spreads);
                 cells.extend(account.per_kg_product(a_year).map(|value| amount(value, figure.measure)));
             } else {
                 // A ratio holds for every unit of work; it stands once, in the last column.
                 cells.extend([String::new(), String::new(), String::new()]);
                 cells.push(amount(a_year, figure.measure));
+                limits(&mut cells, figure, spreads);
             }
             grid.row(cells);
         }
@@ -155,6 +177,22 @@ fn route_account(out: &mut String, site: &SiteUse, route: &RouteProgram, account
         "",
         &format!("The book closes to {} of the mass that came in.", significant(account.closure.abs(), 2)),
     );
+}
+
+fn limits(cells: &mut Vec<String>, figure: &Figure, spreads: Spreads<'_>) {
+    if spreads.there() {
+        cells.extend(spreads.limits(&figure.id, |value| amount(value, figure.measure)));
+    }
+}
+
+/// What the columns "from" and "to" hold.
+pub(super) fn intervals_words(drawn: Drawn<'_>) -> String {
+    format!(
+        "{}, seed {}: \"from\" and \"to\" hold {} % of them, a year.",
+        draws_words(drawn.sampled),
+        drawn.sampled.seed(),
+        significant(drawn.coverage * 100.0, 3)
+    )
 }
 
 /// The widest that a table may be: beyond it a terminal breaks its lines, and the columns are lost.

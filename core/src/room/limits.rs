@@ -7,6 +7,7 @@ use super::concentration::fraction_of;
 use super::day::Day;
 use super::error::RoomError;
 use crate::material::table::Table;
+use crate::quantity::nearest;
 use std::fmt;
 use std::sync::OnceLock;
 
@@ -304,7 +305,7 @@ fn load(table: Table) -> (Vec<Limit>, Vec<String>) {
             source,
             note,
         ] = cells;
-        let amount = |cell: &str| cell.parse::<f64>().ok().filter(|v| v.is_finite() && *v > 0.0);
+        let amount = |cell: &str| nearest(cell).filter(|v| v.is_finite() && *v > 0.0);
         let day = |cell: &str| if cell.is_empty() { Some(None) } else { Day::parse(cell).ok().map(Some) };
         let read = || {
             Some(Limit {

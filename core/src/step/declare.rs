@@ -17,6 +17,10 @@ pub enum Control {
     Mixture,
     /// Materials, each with an amount of the given kind: `{ "lavender oil": "92 %" }`.
     PerMaterial(Kind),
+    /// Streams of the site, each with an amount of the given kind.
+    PerStream(Kind),
+    /// Any text.
+    Text,
     /// A whole number; exact, never uncertain, so that the sequence of postings is the same in every draw.
     Count,
     /// Yes or no.

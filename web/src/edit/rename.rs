@@ -1,7 +1,8 @@
 //! Renaming what other parts of the plan refer to by name.
 use super::Item;
 use thimbleworth::plan::{Field, Plan, Step};
-use thimbleworth::step::{Control, technique};
+use thimbleworth::program::SITE_FIELDS;
+use thimbleworth::step::{Control, Param, technique};
 
 /// Gives `item` another name and follows every reference to the old one.
 pub(super) fn rename(plan: &mut Plan, item: Item, name: &str) -> Option<()> {
@@ -9,6 +10,7 @@ pub(super) fn rename(plan: &mut Plan, item: Item, name: &str) -> Option<()> {
         Item::Stream(i) => {
             let stream = plan.site.streams.get_mut(i)?;
             let old = std::mem::replace(&mut stream.name, name.to_owned());
+            in_site(plan, &old, name, |control| matches!(control, Control::PerStream(_)));
             for route in plan.workloads.iter_mut().flat_map(|w| &mut w.routes) {
                 for (_, place) in &mut route.ends {
                     follow(place, &old, name);
@@ -21,6 +23,7 @@ pub(super) fn rename(plan: &mut Plan, item: Item, name: &str) -> Option<()> {
         Item::Material(i) => {
             let material = plan.materials.get_mut(i)?;
             let old = std::mem::replace(&mut material.name, name.to_owned());
+            in_site(plan, &old, name, |control| matches!(control, Control::PerMaterial(_)));
             for workload in &mut plan.workloads {
                 in_rows(&mut workload.feed, &old, name);
                 for route in &mut workload.routes {
@@ -59,10 +62,32 @@ fn in_rows(rows: &mut [(String, String)], old: &str, new: &str) {
     }
 }
 
-fn in_fields(step: &mut Step, old: &str, new: &str, wanted: impl Fn(Control) -> bool) {
-    let Some(technique) = technique(&step.technique) else { return };
-    for (key, field) in &mut step.fields {
-        if technique.params.iter().any(|p| p.key == key && wanted(p.control)) {
+fn in_fields(step: &mut Step, old: &str, new: &str, wanted: fn(Control) -> bool) {
+    if let Some(technique) = technique(&step.technique) {
+        in_declared(&mut step.fields, technique.params, (old, new), wanted);
+    }
+}
+
+/// Prices, removal of waste, shares burnt and factors of production.
+fn in_site(plan: &mut Plan, old: &str, new: &str, wanted: fn(Control) -> bool) {
+    for (under, _, params) in SITE_FIELDS {
+        let fields = match *under {
+            "money" => &mut plan.site.money,
+            "climate" => &mut plan.site.climate,
+            _ => continue,
+        };
+        in_declared(fields, params, (old, new), wanted);
+    }
+}
+
+fn in_declared(
+    fields: &mut [(String, Field)],
+    params: &[Param],
+    (old, new): (&str, &str),
+    wanted: fn(Control) -> bool,
+) {
+    for (key, field) in fields {
+        if params.iter().any(|p| p.key == key && wanted(p.control)) {
             match field {
                 Field::Text(text) => follow(text, old, new),
                 Field::Rows(rows) => in_rows(rows, old, new),

@@ -2,6 +2,7 @@
 use thimbleworth::plan::{
     Electricity, Field, OtherWaste, Plan, Room, Route, Site, Step, Workload, is_number, keys,
 };
+use thimbleworth::program::{Fields, ROUTE_FIELDS, SITE_FIELDS};
 use thimbleworth::step::{TECHNIQUES, technique};
 
 /// Sets the field at `path`, or clears it; returns whether there is such a field.
@@ -56,6 +57,7 @@ fn at_plan(plan: &mut Plan, keys: &[&str], value: Option<Field>) -> Option<()> {
     match keys {
         ["title"] => plan.title = words(value).unwrap_or_default(),
         ["notes"] => plan.notes = words(value),
+        ["seed"] => plan.seed = value,
         ["site", rest @ ..] => at_site(&mut plan.site, rest, value)?,
         ["materials", name, key] => {
             let material = plan.materials.iter_mut().find(|m| m.name == *name)?;
@@ -99,11 +101,16 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
             match *key {
                 "climate" => of.climate = words(value),
                 "price" => of.price = words(value),
+                "year" => of.year = value,
+                "boundary" => of.boundary = words(value),
                 "source" => of.source = words(value),
                 _ => return None,
             }
             site.electricity = (of != Electricity::default()).then_some(of);
         }
+        ["money", key] => declared(&mut site.money, SITE_FIELDS, "money", key, value)?,
+        ["hours", key] => declared(&mut site.hours, SITE_FIELDS, "hours", key, value)?,
+        ["climate", key] => declared(&mut site.climate, SITE_FIELDS, "climate", key, value)?,
         ["room", key] => {
             let mut of = site.room.take().unwrap_or_default();
             if !of.set(key, words(value)) {
@@ -156,6 +163,9 @@ fn at_route(route: &mut Route, keys: &[&str], value: Option<Field>) -> Option<()
         ["feed"] => route.feed = value.map(|value| rows(Some(value))),
         ["recovery"] => route.recovery = words(value),
         ["equivalence"] => route.equivalence = words(value),
+        ["permission"] => route.permission = words(value),
+        ["time", key] => declared(&mut route.time, ROUTE_FIELDS, "time", key, value)?,
+        ["money", key] => declared(&mut route.money, ROUTE_FIELDS, "money", key, value)?,
         ["ph"] => route.ph = words(value),
         ["ends"] => route.ends = rows(value),
         ["ends", place] => put(&mut route.ends, place, words(value), |_| usize::MAX),
@@ -177,6 +187,21 @@ fn at_step(step: &mut Step, keys: &[&str], value: Option<Field>) -> Option<()> {
         }
         _ => return None,
     }
+    Some(())
+}
+
+/// Sets or clears a field that is declared, in the order of its declaration.
+fn declared(
+    list: &mut Vec<(String, Field)>,
+    groups: &[Fields],
+    under: &str,
+    key: &str,
+    value: Option<Field>,
+) -> Option<()> {
+    let fields = groups.iter().find(|g| g.0 == under)?.2;
+    let rank = |key: &str| fields.iter().position(|p| p.key == key);
+    rank(key)?;
+    put(list, key, value, |key| rank(key).unwrap_or(usize::MAX));
     Some(())
 }
 
@@ -259,6 +284,8 @@ mod tests {
             "workloads[0].repeats",
             "workloads[0].routes[0].recovery",
             "workloads[0].routes[0].equivalence",
+            "workloads[0].routes[0].permission",
+            "seed",
             "workloads[0].routes[0].ph",
             "workloads[0].routes[0].ends.marc",
             r#"workloads[0].routes[0].ends["second phase"]"#,
@@ -274,6 +301,35 @@ mod tests {
             assert!(set(&mut after, path, None));
             assert_eq!(after, before, "{path}");
         }
+    }
+
+    /// The same of all that is declared for site and routes; what is not declared is refused.
+    #[test]
+    fn every_declared_field_is_set_and_cleared() {
+        let mut count = 0;
+        for (at, groups) in [("site", SITE_FIELDS), ("workloads[0].routes[0]", ROUTE_FIELDS)] {
+            for (under, _, fields) in groups {
+                let below = if under.is_empty() { at.to_owned() } else { format!("{at}.{under}") };
+                for p in *fields {
+                    let path = format!("{below}.{}", p.key);
+                    let (before, mut after) = (plan(), plan());
+                    assert!(set(&mut after, &path, text("12 g")), "{path}");
+                    assert_ne!(after, before, "{path}");
+                    assert!(set(&mut after, &path, None));
+                    assert_eq!(after, before, "{path}");
+                    count += 1;
+                }
+                assert!(!set(&mut plan(), &format!("{below}.nothing"), text("1")), "{below}");
+            }
+        }
+        assert!(count > 35, "{count}");
+        // The order of the declaration, whatever is typed first.
+        let mut after = plan();
+        for key in ["years", "discount", "currency"] {
+            assert!(set(&mut after, &format!("site.money.{key}"), text("1")));
+        }
+        let keys: Vec<&str> = after.site.money.iter().map(|(k, _)| k.as_str()).collect();
+        assert_eq!(keys, ["currency", "discount", "years"]);
     }
 
     #[test]

@@ -18,6 +18,10 @@ fn document() -> Document {
     route.ends = vec![("marc".into(), "solids".into()), ("liquor".into(), "solvents".into())];
     plan.workloads[0].feed = vec![("oil".into(), "1 g".into())];
     plan.materials.push(thimbleworth::plan::OwnMaterial { name: "oil".into(), fields: Vec::new() });
+    let row = |name: &str, amount: &str| Field::Rows(vec![(name.into(), amount.into())]);
+    plan.site.money =
+        vec![("prices".into(), row("oil", "4 USD/L")), ("disposal".into(), row("solvents", "2 USD/kg"))];
+    plan.site.climate = vec![("incinerated".into(), row("solvents", "100 %"))];
     Document::new(plan, 0)
 }
 
@@ -97,6 +101,9 @@ fn references_follow_a_stream_that_is_renamed() {
     assert_eq!(route.ends[0].1, "solids");
     assert_eq!(route.steps[0].fields[1].1, Field::Text("drum".into()));
     assert_eq!(route.steps[0].fields[2].1, Field::Text("solvents".into()), "an amount is no reference");
+    let site = &after.plan.site;
+    assert_eq!(site.money[1].1, Field::Rows(vec![("drum".into(), "2 USD/kg".into())]));
+    assert_eq!(site.climate[0].1, Field::Rows(vec![("drum".into(), "100 %".into())]));
 }
 
 #[test]
@@ -108,6 +115,7 @@ fn references_follow_a_material_and_a_route_that_are_renamed() {
         after.plan.workloads[0].routes[0].steps[0].fields[0].1,
         Field::Rows(vec![("hop oil".into(), "50 %".into()), ("acetone".into(), "50 %".into())])
     );
+    assert_eq!(after.plan.site.money[0].1, Field::Rows(vec![("hop oil".into(), "4 USD/L".into())]));
     Edit::rename(Item::Route(0, 0), "Soxhlet").apply(&mut after);
     assert_eq!(after.plan.workloads[0].present, "Soxhlet");
 }
@@ -143,6 +151,14 @@ fn actions_are_named_in_words() {
     assert_eq!(Edit::set("x", "Solvent in the flask", None).name, "change solvent in the flask");
     assert_eq!(Edit::set("x", "CO2 left in the marc", None).name, "change CO2 left in the marc");
     assert_eq!(Edit::rename(Item::Stream(0), "x").name, "rename stream");
+    for (under, label, name) in [
+        ("money", "An hour of labour", "change an hour of labour"),
+        ("climate", "Share that is burnt", "change share that is burnt"),
+    ] {
+        let fields = thimbleworth::program::SITE_FIELDS.iter().find(|g| g.0 == under).unwrap().2;
+        let p = fields.iter().find(|p| p.label == label).unwrap();
+        assert_eq!(Edit::set("x", p.label, None).name, name);
+    }
 }
 
 #[test]

@@ -6,6 +6,7 @@ use thimbleworth::account::RouteAccount;
 use thimbleworth::ledger::{Material, Place};
 use thimbleworth::letter::sentence;
 use thimbleworth::program::{RouteProgram, SiteUse};
+use thimbleworth::quantity::Currency;
 
 /// For what amounts are given.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -158,13 +159,19 @@ pub(super) fn mass_unit(largest_kg: f64) -> (&'static str, f64) {
     }
 }
 
+/// The same for money: millions from a million on, which leaves room for names.
+pub(super) fn money_unit(most: f64, currency: Currency) -> (String, f64) {
+    let (words, over) = if most >= 1e6 { ("million ", 1e-6) } else { ("", 1.0) };
+    ([words, currency.code()].concat(), over)
+}
+
 /// A mass in such a unit, without it.
-pub(super) fn mass(kg: f64, unit: (&'static str, f64)) -> String {
+pub(super) fn mass(kg: f64, unit: (&str, f64)) -> String {
     written(kg * unit.1, 3)
 }
 
 /// A mass in such a unit, with it.
-pub(super) fn mass_with_unit(kg: f64, unit: (&'static str, f64)) -> String {
+pub(super) fn mass_with_unit(kg: f64, unit: (&str, f64)) -> String {
     format!("{}\u{a0}{}", mass(kg, unit), unit.0)
 }
 

@@ -6,16 +6,16 @@ use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
 use super::{Drawing, Size};
 
 /// One axis.
-pub(super) struct Axis {
+pub(super) struct Axis<'a> {
     /// What it shows, with its unit.
-    pub(super) title: &'static str,
+    pub(super) title: &'a str,
     /// Its ends, in what is drawn.
     pub(super) ends: (f64, f64),
     /// Whether what is drawn is the decimal logarithm of what the scale says.
     pub(super) decades: bool,
 }
 
-impl Axis {
+impl Axis<'_> {
     /// Where the scale has its numbers, and their words.
     fn marks(&self, most: usize) -> Vec<(f64, String)> {
         let (low, high) = self.ends;
@@ -41,7 +41,7 @@ pub(super) struct Mark {
 }
 
 /// Draws marks in order; those of one point as a dot with its name beside it.
-pub(super) fn chart(x: &Axis, y: &Axis, marks: &[Mark], size: Size) -> Drawing {
+pub(super) fn chart(x: &Axis<'_>, y: &Axis<'_>, marks: &[Mark], size: Size) -> Drawing {
     let (width, type_size) = (size.width(), size.text());
     let height = if size.narrow() { 280.0 } else { 380.0 };
     let a = Area {

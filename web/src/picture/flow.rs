@@ -2,18 +2,23 @@
 //! to the store is folded back under the rest.
 
 use super::books::{
-    End, Per, few, fills, into_places, mass, mass_unit, mass_with_unit, material_name, percent, place_name,
+    End, Per, few, fills, into_places, mass, mass_unit, mass_with_unit, material_name, money_unit, percent,
+    place_name,
 };
 use super::letter::{text_width, wrap};
 use super::shape::{Anchor, Hatch, Shape, Trail, line, text};
 use super::{Drawing, Head, Picture, Size, Table};
 use thimbleworth::account::Account;
 use thimbleworth::ledger::{Material, Place};
+use thimbleworth::letter::small_text;
 use thimbleworth::order;
+use thimbleworth::quantity::Currency;
 
-/// What flows; masses in kg.
+/// What flows; masses in kg, or money.
 pub(super) struct Flow {
     pub(super) route: String,
+    /// In which currency, where it is money that flows.
+    pub(super) currency: Option<Currency>,
     pub(super) per: &'static str,
     /// Name, how it came ("drawn", "feed"), mass.
     pub(super) sources: Vec<(String, &'static str, f64)>,
@@ -67,6 +72,7 @@ pub fn flow(key: &str, account: &Account, workload: usize, route: usize, per: Pe
         _ => "drawn",
     };
     let flow = Flow {
+        currency: None,
         route: routed.name.clone(),
         per: per.words(),
         sources: came
@@ -93,7 +99,9 @@ pub(super) fn picture(key: &str, flow: &Flow) -> Option<Picture> {
         return None;
     }
     let largest = flow.ends.iter().max_by(|a, b| a.2.total_cmp(&b.2))?;
-    let unit = mass_unit(total);
+    let money = flow.currency.map(|currency| money_unit(total, currency));
+    let unit = money.as_ref().map_or_else(|| mass_unit(total), |(words, over)| (words.as_str(), *over));
+    let what = if flow.currency.is_some() { "Cost" } else { "Mass" };
     let title = format!(
         "{}: {} of what comes in goes {}",
         flow.route,
@@ -147,7 +155,8 @@ pub(super) fn picture(key: &str, flow: &Flow) -> Option<Picture> {
         title,
         description,
         notes: vec![format!(
-            "Bands are as wide as their mass; what would be thinner than a pixel is a thin line. {}",
+            "Bands are as wide as their {}; what would be thinner than a pixel is a thin line. {}",
+            small_text(what),
             fills(&kinds)
         )],
         tables: vec![Table {
@@ -156,7 +165,7 @@ pub(super) fn picture(key: &str, flow: &Flow) -> Option<Picture> {
                 Head::words("Material"),
                 Head::words("Comes as"),
                 Head::words("Goes to"),
-                Head::number(&format!("Mass ({heading})")),
+                Head::number(&format!("{what} ({heading})")),
                 Head::number("Share of all that comes in"),
             ],
             rows,
@@ -220,7 +229,7 @@ fn bands(flow: &Flow, left: &[Stop], right: &[Stop], scale: f64) -> Vec<Band> {
     bands
 }
 
-fn draw(flow: &Flow, total: f64, unit: (&'static str, f64), size: Size) -> Drawing {
+fn draw(flow: &Flow, total: f64, unit: (&str, f64), size: Size) -> Drawing {
     let (width, type_size) = (size.width(), size.text());
     let (column, height) = if size.narrow() { (88.0, 200.0) } else { (176.0, 240.0) };
     let step = type_size + 3.0;
@@ -234,7 +243,8 @@ fn draw(flow: &Flow, total: f64, unit: (&'static str, f64), size: Size) -> Drawi
         let fits = !how.is_empty() && text_width(&longer, type_size) <= words;
         match (how.is_empty(), fits) {
             (_, true) => lines.push(longer),
-            (true, false) => lines.push(amount),
+            (true, false) if text_width(&amount, type_size) <= words => lines.push(amount),
+            (true, false) => lines.extend([mass(kg, unit), unit.0.to_owned()]),
             (false, false) => lines.extend([how.to_owned(), amount]),
         }
         lines
@@ -362,6 +372,7 @@ mod tests {
 
     fn sample() -> Flow {
         Flow {
+            currency: None,
             route: "A".into(),
             per: "a year",
             sources: vec![

@@ -6,7 +6,9 @@ use super::*;
 use std::fs;
 use std::path::Path;
 use thimbleworth::account::{Account, account_text, site_desk};
+use thimbleworth::case::{drawn, switch};
 use thimbleworth::compare::compare;
+use thimbleworth::odds::{MOST_CELLS, Reading, Sampled, Wish, headline};
 
 const PLAN: &str = include_str!("fixture/plan.json");
 
@@ -27,6 +29,24 @@ fn pictures(account: &Account) -> Vec<Picture> {
     let air = account.workloads[0].routes.iter().flatten().zip(&program.workloads[0].routes).enumerate();
     for (r, (route, named)) in air.filter_map(|(r, (a, named))| Some((r, (a.air.as_ref()?, named)))) {
         out.extend(air_course(&format!("air-{r}"), &named.name, route));
+    }
+    for route in 0..routes {
+        out.extend(cost_flow(&format!("cost-flow-{route}"), account, 0, route, Per::Year));
+    }
+    let mut run = Sampled::default();
+    run.follow(account, Wish { draws: 400, most_cells: MOST_CELLS, wanted: &headline });
+    while run.advance(account, 400) > 0 {}
+    let work = &program.workloads[0];
+    let reading = Reading::new(account, &run, 0, 0.95).unwrap();
+    for id in ["waste.total.mass", "cost.year"] {
+        let briefs: Vec<_> = (0..routes).map(|r| reading.brief(id, r)).collect();
+        out.extend(intervals(&format!("intervals-{id}"), work, &briefs, 0.95));
+    }
+    for route in 1..routes {
+        if let (Ok(case), Some(drawn)) = (switch(account, 0, route), drawn(account, &run, 0, route, 0.95)) {
+            let names = (work.routes[route].name.as_str(), work.routes[0].name.as_str());
+            out.extend(over_years(&format!("over-years-{route}"), names, &case, &drawn, 0.95));
+        }
     }
     let desk = site_desk(account, &[]).unwrap();
     out.extend(stock("stock", &desk));
@@ -101,6 +121,11 @@ fn the_plan_gives_every_picture() {
             "co2",
             "air-0",
             "air-1",
+            "cost-flow-0",
+            "cost-flow-1",
+            "intervals-waste.total.mass",
+            "intervals-cost.year",
+            "over-years-1",
             "stock",
             "load"
         ]
@@ -210,6 +235,51 @@ fn places_hold_what_the_account_says() {
     let all = picture.tables[0].rows.iter().find(|r| r[0] == "Soxhlet" && r[1] == "together").unwrap();
     let ended_kg = route.value("mass.feed").unwrap() + route.value("mass.bought").unwrap();
     assert_eq!(all[3], letter::written(ended_kg, 3));
+}
+
+/// The flow of cost ends where its account says, with labour and energy shared out where there is a product.
+#[test]
+fn the_flow_of_cost_is_the_account_of_what_is_lost() {
+    let made = PLAN
+        .replace("\"liquor\": \"solvent waste without halogens, second floor\"", "\"liquor\": \"product\"");
+    for (text, shared) in [(PLAN, false), (&made, true)] {
+        let account = account_text(text);
+        let mut count = 0;
+        for r in 0..account.workloads[0].routes.len() {
+            let Some(route) = &account.workloads[0].routes[r] else { continue };
+            let Some(picture) = cost_flow("k", &account, 0, r, Per::Year) else { continue };
+            let lost = route.value("cost.waste").unwrap();
+            assert!(picture.title.contains(&letter::written(lost, 3)), "{}", picture.title);
+            assert_eq!(picture.notes[1].contains("by the share of the mass"), shared, "{:?}", picture.notes);
+            let rows = &picture.tables[0].rows;
+            assert!(rows.iter().any(|row| row[0] == "removal of waste" && row[2] == "all places"));
+            count += 1;
+        }
+        assert!(count > 0);
+    }
+}
+
+/// The interval is that of the draws, and its caption says what it is.
+#[test]
+fn an_interval_says_what_it_is() {
+    let pictures = of(PLAN);
+    let picture = pictures.iter().find(|p| p.key == "intervals-cost.year").unwrap();
+    assert!(
+        picture.description.contains("95\u{202f}% coverage interval, 400 draws"),
+        "{}",
+        picture.description
+    );
+    let years = pictures.iter().find(|p| p.key == "over-years-1").unwrap();
+    assert!(years.description.contains("95\u{202f}% coverage interval, 400 draws"), "{}", years.description);
+    assert_eq!(years.tables[0].rows.len(), 7);
+    // The same plan without spread has a point for an interval, and no odds between.
+    let exact = PLAN
+        .replace(" ± 4 EUR", " EUR")
+        .replace(" ± 5 EUR", " EUR")
+        .replace(" ± 3 min", " min")
+        .replace(" ± 3000 EUR", " EUR");
+    assert!(exact.len() < PLAN.len());
+    assert!(pictures.len() == of(&exact).len());
 }
 
 #[test]

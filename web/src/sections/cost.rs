@@ -1,8 +1,14 @@
 //! Section "Cost": hours, lines of cost, and the case for switching by the central figures.
 use super::places::lines;
+use super::plates::What;
 use super::{Section, View, When};
-use crate::parts::Sheet;
+use crate::draws::{COVERAGE, Drawn, follows};
+use crate::parts::{ByRc, Sheet};
+use crate::picture::{over_years, to_html};
+use crate::reckon::Book;
+use std::rc::Rc;
 use thimbleworth::account::Group;
+use thimbleworth::case::{drawn, switch};
 use thimbleworth::letter::sentence;
 use yew::prelude::*;
 
@@ -37,7 +43,57 @@ pub(super) fn sheet(view: &View, w: usize, id: &str, caption: &str, group: Group
 
 fn draw(view: &View) -> Html {
     view.works(|w| match sheet(view, w, "cost", "Lines of cost", Group::Cost) {
-        Some(cost) => html! { <>{ cost }{ sheet(view, w, "time", "Hours and instruments", Group::Time) }</> },
+        Some(cost) => {
+            let routes = view.book().works.get(w).map_or(0, |work| work.routes.len());
+            html! {
+                <>
+                    <OverYears book={ByRc(Rc::clone(&view.reckoned.book))} {w} />
+                    { cost }
+                    { for (0..routes).map(|r| view.plate(w, What::Lost(r))) }
+                    { sheet(view, w, "time", "Hours and instruments", Group::Time) }
+                </>
+            }
+        }
         None => html! { <p class="empty">{ "The plan names no prices." }</p> },
     })
+}
+
+#[derive(Properties, PartialEq)]
+struct Props {
+    book: ByRc<Book>,
+    w: usize,
+}
+
+/// The case of every other route over the years, or what is lacking for one.
+#[component]
+fn OverYears(props: &Props) -> Html {
+    let w = props.w;
+    let found = use_context::<Drawn>().flatten();
+    let last = use_mut_ref(Html::default);
+    let html = use_memo(found.clone(), |found| {
+        let read = || {
+            let draws = found.as_ref()?;
+            let (run, account) = (draws.run()?, &draws.book.account);
+            let work = account.program.as_ref()?.workloads.get(w)?;
+            let present = work.routes.get(work.present).map_or("", |r| r.name.as_str());
+            let others = work.routes.iter().enumerate().filter(|(r, _)| *r != work.present);
+            Some(others.map(|(r, route)| {
+                let case = match switch(account, w, r) {
+                    Ok(case) => case,
+                    Err(lacking) => {
+                        return html! { <p>{ format!("No case for {} without {}.", route.name, lacking.join("; ")) }</p> };
+                    }
+                };
+                let picture = drawn(account, &run, w, r, COVERAGE).and_then(|drawn| {
+                    over_years(&format!("over-years-{w}-{r}"), (&route.name, present), &case, &drawn, COVERAGE)
+                });
+                html! { <>{ for picture.map(|p| to_html(&p)) }{ for case.conditions.first().map(|c| html! { <p>{ format!("It holds only with: {c}.") }</p> }) }</> }
+            }).collect::<Html>())
+        };
+        if let Some(html) = read() {
+            *last.borrow_mut() = html;
+        }
+        last.borrow().clone()
+    });
+    follows(found.as_ref().map(|d| &d.book), &props.book, (*html).clone())
 }

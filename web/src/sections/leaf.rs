@@ -1,9 +1,12 @@
 //! The sections as leaves of the book. They are put down one after the other, each in a turn of its own, so that the first
 //! can be used at once and nothing that stands is moved; and those with figures follow what is typed.
 use super::{SECTIONS, View, When};
+use crate::draws::Drawing;
+use crate::parts::ByRc;
 use gloo::events::EventListener;
 use gloo::timers::callback::Timeout;
 use gloo::utils::window;
+use std::rc::Rc;
 use yew::prelude::*;
 
 /// How long after the last change of the plan the figures follow.
@@ -54,10 +57,12 @@ pub(crate) fn Leaves(props: &LeavesProps) -> Html {
     }
     html! {
         <div class="leaves" aria-busy={(*stand < SECTIONS.len()).then_some("true")}>
-            { for (0..*stand).map(|at| match SECTIONS.get(at).map(|section| section.when) {
-                Some(When::Follows) => html! { <Follower key={at} {at} view={props.view.clone()} /> },
-                _ => html! { <Leaf key={at} {at} view={props.view.clone()} behind={false} /> },
-            }) }
+            <Drawing book={ByRc(Rc::clone(&props.view.reckoned.book))} begin={*stand >= SECTIONS.len()}>
+                { for (0..*stand).map(|at| match SECTIONS.get(at).map(|section| section.when) {
+                    Some(When::Follows) => html! { <Follower key={at} {at} view={props.view.clone()} /> },
+                    _ => html! { <Leaf key={at} {at} view={props.view.clone()} behind={false} /> },
+                }) }
+            </Drawing>
         </div>
     }
 }

@@ -6,6 +6,7 @@ mod carbon_dioxide;
 mod climate;
 mod comparison;
 mod cost;
+mod declared;
 mod desk;
 mod energy;
 mod finding;

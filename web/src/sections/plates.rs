@@ -19,6 +19,8 @@ pub(super) enum What {
     Circuit(usize),
     /// The first extraction curve of one route.
     Extraction(usize),
+    /// What is lost on one route at its full cost.
+    Lost(usize),
     /// The air of the room on one route.
     Air(usize),
 }
@@ -65,6 +67,10 @@ fn draw(props: &Props) -> Option<Picture> {
             }
             let dense = account.dense.iter().map(|(_, d)| d).find(|d| d.study.is_some())?;
             picture::extraction(&format!("extraction-{w}-{r}"), name, dense)
+        }
+        What::Lost(r) => {
+            let (at, route) = book.in_account(w, r)?;
+            picture::cost_flow(&format!("cost-flow-{w}-{r}"), &book.account, at, route, per(props.basis))
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
         What::Air(r) => {

@@ -1,4 +1,6 @@
 //! Section "The question": what is asked, for which site, with which waste streams, and how much work there is.
+use super::declared::{field, group};
+use super::routes::of_list;
 use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item};
 use crate::form::{text_of, understood};
@@ -6,11 +8,11 @@ use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
 use crate::show::unbroken;
 use std::rc::Rc;
 use thimbleworth::code::Activity;
-use thimbleworth::plan::{Field as Value, OwnMaterial, Stream, Workload};
-use thimbleworth::program::{OWN_FIELDS, ROOM_FIELDS};
+use thimbleworth::plan::{Field as Value, OwnMaterial, Site, Stream, Workload};
+use thimbleworth::program::{OWN_FIELDS, ROOM_FIELDS, SITE_FIELDS};
 use thimbleworth::quantity::Kind;
 use thimbleworth::source::{COMMON_PRACTICE, DEFINITION, FROM_MEMORY};
-use thimbleworth::step::{Control, Need};
+use thimbleworth::step::Need;
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -123,6 +125,8 @@ fn about(view: &View) -> Html {
             { Asked::amount("site.bench_temperature", "Temperature of the bench", Kind::Temperature, site.bench_temperature.as_ref())
                 .need(Need::Default("20 °C", COMMON_PRACTICE)).hint("At which solvents are poured and stored.").draw(view) }
             { Asked::text("notes", "Notes", words(&plan.notes)).ask(Ask::Area).draw(view) }
+            { Asked::text("seed", "Seed of the draws", text_of(plan.seed.as_ref())).need(Need::Default("1", DEFINITION)).ask(Ask::Number)
+                .hint("A whole number; the same seed gives the same draws.").draw(view) }
         </>
     }
 }
@@ -315,9 +319,6 @@ fn more(view: &View) -> Html {
     let plan = view.plan();
     let site = &plan.site;
     let count = plan.materials.len();
-    let electricity = site.electricity.clone().unwrap_or_default();
-    let room = site.room.clone().unwrap_or_default();
-    let kept = "Kept in the plan; no figure of this version uses it yet.";
     html! {
         <>
             <details class="more" open={count > 0}>
@@ -347,49 +348,74 @@ fn more(view: &View) -> Html {
                     .hint("They print with every paper.").ask(Ask::Area).draw(view) }
             </details>
             <details class="more">
-                <summary>{ "Drain, electricity and room" }</summary>
+                <summary>{ "Drain and room" }</summary>
                 { Asked::text("site.drain_permit", "Permit for the drain", site.drain_permit.clone().unwrap_or_default())
                     .hint("The drain is closed until a permit is named; never by dilution.").draw(view) }
-                { Asked::amount("site.electricity.climate", "CO2-equivalent of electricity", Kind::ClimatePerEnergy, electricity.climate.as_ref()).hint(kept).draw(view) }
-                { Asked::amount("site.electricity.price", "Price of electricity", Kind::PricePerEnergy, electricity.price.as_ref()).hint(kept).draw(view) }
-                { Asked::text("site.electricity.source", "Source of these figures", electricity.source.unwrap_or_default()).draw(view) }
                 { for ROOM_FIELDS.iter().map(|p| {
-                    let path = format!("site.room.{}", p.key);
-                    let given = room.get(p.key).map(str::to_owned);
-                    match p.control {
-                        Control::Quantity(kind) => Asked::amount(&path, p.label, kind, given.as_ref()).hint(p.hint).draw(view),
-                        _ => Asked::text(&path, p.label, given.unwrap_or_default()).hint(p.hint).draw(view),
-                    }
+                    let given = site.room.as_ref().and_then(|room| room.get(p.key));
+                    field(view, "site.room", p, given.map(|text| Value::Text(text.to_owned())).as_ref())
                 }) }
             </details>
+            { for SITE_FIELDS.iter().map(|fields| html! {
+                <details class="more">
+                    <summary>{ fields.1 }</summary>
+                    { group(view, "site", fields, &|key| of_site(site, fields.0, key)) }
+                </details>
+            }) }
         </>
     }
+}
+
+/// What stands under a declared key of the site.
+fn of_site(site: &Site, under: &str, key: &str) -> Option<Value> {
+    let list = match under {
+        "money" => &site.money,
+        "hours" => &site.hours,
+        "climate" => &site.climate,
+        _ => {
+            let of = site.electricity.as_ref()?;
+            let text = match key {
+                "climate" => &of.climate,
+                "price" => &of.price,
+                "boundary" => &of.boundary,
+                "source" => &of.source,
+                _ => return of.year.clone(),
+            };
+            return text.clone().map(Value::Text);
+        }
+    };
+    of_list(list, key)
+}
+
+/// A list of fields in one line.
+pub(super) fn list_words(list: &[(String, Value)]) -> String {
+    let mut out = String::new();
+    for (key, value) in list {
+        if !out.is_empty() {
+            out.push_str("; ");
+        }
+        out.push_str(&key.replace('_', " "));
+        for (name, amount) in crate::form::rows_of(Some(value)) {
+            // One value alone is a row of its own with the whole share.
+            let rows = matches!(value, Value::Rows(_));
+            out.push_str(
+                &[" ", &name, if rows { " " } else { "" }, if rows { &amount } else { "" }].concat(),
+            );
+        }
+    }
+    out
 }
 
 fn one_material(view: &View, i: usize, material: &OwnMaterial, count: usize) -> Html {
     let item = Item::Material(i);
     let path = item.path(view.plan());
     let id = view.document.ids.materials.get(i).copied().unwrap_or_default();
-    let value = |key: &str| text_of(material.fields.iter().find(|(k, _)| k == key).map(|(_, field)| field));
     html! {
         <div class="card" key={id} id={crate::edit::dom_id(&path)} role="group" aria-label={format!("Material {}", material.name)}>
             <div class="cardhead"><h4>{ &material.name }</h4>{ tools(item, &path, &material.name, count, &view.edit) }</div>
             <Name {item} id={format!("material-{id}-name")} label="Name of the material" value={material.name.clone()}
                 refusal={view.refusal.clone()} edit={view.edit.clone()} />
-            { for OWN_FIELDS.iter().map(|p| {
-                let at = thimbleworth::plan::below(&path, p.key);
-                let asked = match p.control {
-                    Control::Quantity(kind) => Asked::amount(at, p.label, kind, Some(&value(p.key))),
-                    Control::Choice(words) => Asked::text(at, p.label, value(p.key)).ask(Ask::Choice(options("solute (left out)", words))),
-                    _ => Asked::text(at, p.label, value(p.key)),
-                };
-                // "none" and "miscible" are answers too, which no amount could be.
-                let asked = match value(p.key).as_str() {
-                    "none" | "miscible" => Asked { kind: None, ..asked },
-                    _ => asked,
-                };
-                asked.hint(p.hint).need(p.need).draw(view)
-            }) }
+            { for OWN_FIELDS.iter().map(|p| field(view, &path, p, material.fields.iter().find(|(k, _)| k == p.key).map(|(_, field)| field))) }
         </div>
     }
 }
@@ -421,6 +447,10 @@ fn printed(view: &View) -> Html {
         line("Longest storage", site.storage_limit.clone()),
         line("Picked up every", site.pick_up_every.clone()),
         line("State or national deviations", site.deviations.clone()),
+        line("Prices and money", Some(list_words(&site.money))),
+        line("Hours of instruments", Some(list_words(&site.hours))),
+        line("Climate", Some(list_words(&site.climate))),
+        line("Seed of the draws", plan.seed.as_ref().map(|s| text_of(Some(s)))),
         line("Notes", plan.notes.clone()),
     ];
     for stream in &site.streams {

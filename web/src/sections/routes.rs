@@ -1,19 +1,19 @@
 //! Section "The routes": a card a route, one form open at a time.
-use super::question::{Asked, options};
+use super::declared::{choices, field, group};
+use super::question::{Asked, list_words, options};
 use super::{Section, View, When};
 use crate::edit::{Change, Edit, Item, dom_id, step_field};
-use crate::form::{
-    applies, cited, left_out, margin, measured_lines, places, rows_of, summary, text_of, understood, units,
-};
-use crate::parts::{Ask, Field, Name, Options, Rows, said, tools};
+use crate::form::{applies, cited, measured_lines, summary};
+use crate::parts::{Ask, Field, Name, Rows, said, tools};
 use crate::reckon::things;
 use crate::show::unbroken;
 use crate::state::Action;
 use thimbleworth::ledger::Place;
-use thimbleworth::plan::{Route, Severity, Step, below};
+use thimbleworth::plan::{Field as Value, Route, Severity, Step, below};
+use thimbleworth::program::ROUTE_FIELDS;
 use thimbleworth::quantity::Kind;
 use thimbleworth::source::{DEFINITION, FROM_MEMORY};
-use thimbleworth::step::{Control, Group, Need, Param, TECHNIQUES, Technique, technique};
+use thimbleworth::step::{Group, Need, TECHNIQUES, Technique, technique};
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -100,7 +100,13 @@ fn Summary(props: &SummaryProps) -> Html {
     }
     terms.extend(route.recovery.as_ref().map(|r| format!("Recovery {r}.")));
     terms.extend(route.equivalence.as_ref().map(|e| format!("Equal work: {e}.")));
+    terms.extend(route.permission.as_ref().map(|p| format!("May be reported: {p}.")));
     terms.extend(route.ph.as_ref().map(|p| format!("pH {p}.")));
+    for (title, list) in [("Time", &route.time), ("Money", &route.money)] {
+        if !list.is_empty() {
+            terms.push(format!("{title}: {}.", list_words(list)));
+        }
+    }
     if !route.ends.is_empty() {
         let ends: Vec<String> = route.ends.iter().map(|(from, to)| format!("{from} to {to}")).collect();
         terms.push(format!("What is left: {}.", ends.join(", ")));
@@ -146,27 +152,37 @@ fn form(view: &View, w: usize, r: usize, route: &Route, path: &str) -> Html {
                         .ask(Ask::Choice(places.clone())).draw(view)
                 }) }
             </section>
-            <section class="halves" aria-label="Terms of equal work">
-                <h5>{ "Terms of equal work" }</h5>
-                { Asked::amount(at("recovery"), "Recovery of what is sought", Kind::Fraction, route.recovery.as_ref())
-                    .hint("As this route reaches it.").draw(view) }
-                { Asked::text(at("equivalence"), "What the claim of equal work rests on", route.equivalence.clone().unwrap_or_default())
-                    .hint("Paired samples, a standard method, a validation.").draw(view) }
-                <Rows label="What one sample brings on this route" optional={true} kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L"
-                    rows={route.feed.clone().unwrap_or_default()} hint="Only where it differs from the work's own."
-                    said={said(&view.reckoned.problems, &feed)} show_all={view.show_all} path={feed} edit={view.edit.clone()} />
-                { Asked::text(at("ph"), "Lowest and highest pH", route.ph.clone().unwrap_or_default())
-                    .hint("Such as 2 to 7, where there is a water phase; for the NEMI criteria.").draw(view) }
-            </section>
+            { for ROUTE_FIELDS.iter().enumerate().map(|(i, fields)| html! {
+                <section class="halves" aria-label={fields.1}>
+                    <h5>{ fields.1 }</h5>
+                    { group(view, path, fields, &|key| of_route(route, fields.0, key)) }
+                    if i == 0 {
+                        <Rows label="What one sample brings on this route" optional={true} kind={Kind::Mass} amount="mass or volume" units="g, kg, mL, L"
+                            rows={route.feed.clone().unwrap_or_default()} hint="Only where it differs from the work's own."
+                            said={said(&view.reckoned.problems, &feed)} show_all={view.show_all} path={feed.clone()} edit={view.edit.clone()} />
+                    }
+                </section>
+            }) }
         </div>
     }
 }
 
-/// Where mass may go, as the words of a choice.
-fn choices(view: &View, left_out: &str) -> Options {
-    let places = places(view.plan());
-    let words: Vec<&str> = places.iter().map(String::as_str).collect();
-    options(left_out, &words)
+/// What stands under a declared key of a route.
+fn of_route(route: &Route, under: &str, key: &str) -> Option<Value> {
+    let text = match (under, key) {
+        ("time", _) => return of_list(&route.time, key),
+        ("money", _) => return of_list(&route.money, key),
+        (_, "recovery") => &route.recovery,
+        (_, "equivalence") => &route.equivalence,
+        (_, "permission") => &route.permission,
+        _ => &route.ph,
+    };
+    text.clone().map(Value::Text)
+}
+
+/// What stands under a key of a list.
+pub(super) fn of_list(list: &[(String, Value)], key: &str) -> Option<Value> {
+    list.iter().find(|(k, _)| k == key).map(|(_, field)| field.clone())
 }
 
 #[derive(Properties, PartialEq)]
@@ -242,7 +258,7 @@ fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &
                 <p class="hint">{ technique.about }</p>
                 { for technique.cautions.iter().map(|c| html! { <p class="caution"><strong>{ "Caution: " }</strong>{ c.text }</p> }) }
                 { for technique.params.iter().filter(|p| applies(technique, step, p) || step_field(step, p.key).is_some())
-                    .map(|p| param(view, step, &path, p)) }
+                    .map(|p| field(view, &path, p, step_field(step, p.key))) }
                 { measured(view, technique, step, &path, (w, r, s)) }
             }
             { Asked::text(format!("{path}.per"), "Done once for each", per).need(Need::Default("sample", DEFINITION))
@@ -250,58 +266,6 @@ fn one_step(view: &View, (w, r, s): (usize, usize, usize), step: &Step, route: &
             { Asked::text(format!("{path}.note"), "Note on the step", step.note.clone().unwrap_or_default()).draw(view) }
         </details>
     }
-}
-
-fn param(view: &View, step: &Step, path: &str, p: &'static Param) -> Html {
-    let at = below(path, p.key);
-    let field = step_field(step, p.key);
-    let value = text_of(field);
-    let said = said(&view.reckoned.problems, &at);
-    let show_all = view.show_all;
-    let optional = p.need == Need::Optional;
-    let blank = if field.is_none() { left_out(p.need) } else { String::new() };
-    let first = match p.need {
-        Need::Default(text, _) => format!("{} (assumed)", crate::form::word(text)),
-        Need::Optional => "left out".to_owned(),
-        Need::Required => "choose".to_owned(),
-    };
-    let (ask, units, echo) = match p.control {
-        Control::Mixture | Control::PerMaterial(_) => {
-            let (kind, amount) = match p.control {
-                Control::PerMaterial(Kind::Fraction) => (Kind::Fraction, "share"),
-                Control::PerMaterial(kind) => (kind, "amount"),
-                _ => (Kind::Fraction, "share, v/v unless w/w is said"),
-            };
-            let rows = rows_of(field);
-            let echo = if blank.is_empty() { rows_words(&rows, kind) } else { blank };
-            return html! {
-                <Rows key={p.key} label={p.label} {kind} {amount} units={units(kind)} hint={p.hint} margin={margin(p)} {echo}
-                    {rows} {said} {show_all} {optional} path={at} edit={view.edit.clone()} />
-            };
-        }
-        Control::Quantity(kind) => (Ask::Amount(kind), units(kind), understood(&value, kind, p.need)),
-        Control::Count => (Ask::Number, String::new(), blank),
-        Control::Choice(words) => (Ask::Choice(options(&first, words)), String::new(), blank),
-        Control::Place => (Ask::Choice(choices(view, &first)), String::new(), blank),
-        Control::YesNo => (Ask::YesNo(first.into()), String::new(), blank),
-        Control::Material => (Ask::Material, String::new(), blank),
-    };
-    html! {
-        <Field key={p.key} label={p.label} {units} hint={p.hint} margin={margin(p)} {echo} {said} {show_all} {optional} {value} {ask}
-            path={at} edit={view.edit.clone()} />
-    }
-}
-
-/// What was understood of the rows of a mixture.
-fn rows_words(rows: &[(String, String)], kind: Kind) -> String {
-    let read: Vec<String> = rows
-        .iter()
-        .filter_map(|(name, amount)| {
-            let amount = thimbleworth::quantity::read(amount, kind).ok()?;
-            Some(format!("{name} {}", amount.understood()))
-        })
-        .collect();
-    if read.is_empty() { String::new() } else { format!("Read as {}.", read.join(", ")) }
 }
 
 fn measured(

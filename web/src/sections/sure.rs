@@ -1,18 +1,18 @@
-//! Section "How sure": intervals, odds, what matters most, and the case in every draw. Drawn in slices, so that no key
-//! stroke waits for it; only routes that were edited are drawn again; dimmed until it has caught up.
+//! Section "How sure": intervals, odds, what matters most, and the case in every draw. Read in turns, so that no key stroke
+//! waits for it; dimmed until it has caught up.
 use super::{Section, When};
+use crate::draws::{COVERAGE, Drawn, Draws, follows, in_turns};
 use crate::parts::{ByRc, words_table};
+use crate::picture::{intervals, to_html};
 use crate::reckon::Book;
 use crate::show::{unbroken, with_minus};
 use gloo::timers::callback::Timeout;
-use gloo::utils::window;
-use std::cell::RefCell;
 use std::rc::Rc;
 use thimbleworth::account::Account;
 use thimbleworth::case::{drawn, switch, turning_results};
 use thimbleworth::letter::sentence;
-use thimbleworth::odds::{Brief, MOST_CELLS, Reading, Sampled, Wish, headline};
-use thimbleworth::report::{PaperTable, money_words, odds_words, turn_words};
+use thimbleworth::odds::{Brief, Reading, Sampled};
+use thimbleworth::report::{PaperTable, money_words, odds_words, stopped_words, turn_words};
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -22,17 +22,6 @@ pub(super) static SECTION: Section = Section {
     when: When::Follows,
     body: |view| html! { <Sure book={ByRc(Rc::clone(&view.reckoned.book))} /> },
 };
-
-const DRAWS: u32 = 10_000;
-const COVERAGE: f64 = 0.95;
-/// How long a turn lasts; so many draws of a route are made at once, a millisecond or two.
-const TURN_MS: f64 = 8.0;
-const SLICE: u32 = 500;
-/// The figures wait 150 ms after the last change, and this so much more.
-const AFTER_MS: u32 = 50;
-
-/// One run, kept through edits.
-type Run = Rc<RefCell<Sampled>>;
 
 #[derive(Properties, PartialEq)]
 struct SureProps {
@@ -48,45 +37,89 @@ struct Shown {
 
 #[component]
 fn Sure(props: &SureProps) -> Html {
-    let run: Run = use_memo((), |()| RefCell::new(Sampled::default()));
     let shown = use_state_eq(|| None::<Shown>);
+    let drawn = use_context::<Drawn>().flatten();
     {
         let shown = shown.clone();
-        use_effect_with(props.book.clone(), move |book| {
-            let book = book.clone();
-            let timer = Timeout::new(AFTER_MS, move || {
-                let wish = Wish { draws: DRAWS, most_cells: MOST_CELLS, wanted: &headline };
-                let generation = run.borrow_mut().follow(&book.account, wish);
-                let read = Vec::new();
-                Reader {
-                    run,
-                    book,
-                    generation,
-                    rows: Vec::new(),
-                    at: (0, 0),
-                    cased: false,
-                    read,
-                    then: Callback::from(move |s| shown.set(Some(s))),
-                }
-                .go_on();
-            });
-            move || drop(timer)
+        use_effect_with(drawn, move |drawn| {
+            if let Some(draws) = drawn.clone() {
+                let then = Callback::from(move |s| shown.set(Some(s)));
+                Reader { draws, rows: Vec::new(), at: (0, 0), cased: false, read: Vec::new(), then }.go_on();
+            }
         });
     }
-    let Some(shown) = &*shown else { return html! { <p class="hint">{ "Being drawn …" }</p> } };
-    let behind = shown.book != props.book;
-    html! {
-        <div class={classes!("works", behind.then_some("old"))} aria-busy={behind.then_some("true")}>
-            { shown.html.clone() }
-        </div>
-    }
+    let (of, html) = match &*shown {
+        Some(shown) => (Some(&shown.book), shown.html.clone()),
+        None => (None, Html::default()),
+    };
+    follows(of, &props.book, html)
 }
 
-/// Draws, then reads what the draws say piece by piece, so that no turn takes long.
+#[derive(Properties, PartialEq)]
+struct ChosenProps {
+    draws: Draws,
+    w: usize,
+}
+
+/// The picture of one figure, and the choice of it.
+#[component]
+fn Chosen(props: &ChosenProps) -> Html {
+    let chosen = use_state_eq(String::new);
+    let w = props.w;
+    let onchange = {
+        let chosen = chosen.clone();
+        Callback::from(move |event: Event| {
+            if let Some(select) = event.target_dyn_into::<web_sys::HtmlSelectElement>() {
+                chosen.set(select.value());
+            }
+        })
+    };
+    // A run that has turned to another plan leaves what stands.
+    let last = use_mut_ref(Html::default);
+    let html = use_memo((props.draws.clone(), (*chosen).clone()), |(draws, id)| {
+        let drawn = || {
+            let run = draws.run()?;
+            let account = &draws.book.account;
+            let work = account.program.as_ref()?.workloads.get(w)?;
+            let reading = Reading::new(account, &run, w, COVERAGE)?;
+            let briefs = |id: &str| (0..work.routes.len()).map(|r| reading.brief(id, r)).collect::<Vec<_>>();
+            let ids = reading.ids();
+            let shown = ids.iter().find(|i| *i == id).or_else(|| ids.first()).copied()?;
+            let titles = ids.iter().filter_map(|id| {
+                let title = account
+                    .workloads
+                    .get(w)?
+                    .routes
+                    .iter()
+                    .flatten()
+                    .flat_map(|r| &r.figures)
+                    .find(|f| f.id == *id)?;
+                Some((*id, sentence(&title.title)))
+            });
+            let field = format!("sure-figure-{w}");
+            Some(html! {
+                <>
+                    <div class="field">
+                        <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
+                        <select id={field} {onchange}>
+                            { for titles.map(|(id, title)| html! { <option value={id.to_owned()} selected={id == shown}>{ title }</option> }) }
+                        </select>
+                    </div>
+                    { for intervals(&format!("intervals-{w}"), work, &briefs(shown), COVERAGE).map(|p| to_html(&p)) }
+                </>
+            })
+        };
+        if let Some(html) = drawn() {
+            *last.borrow_mut() = html;
+        }
+        last.borrow().clone()
+    });
+    (*html).clone()
+}
+
+/// Reads what the draws say piece by piece, so that no turn takes long.
 struct Reader {
-    run: Run,
-    book: ByRc<Book>,
-    generation: u64,
+    draws: Draws,
     /// Of the table of the piece of work that is being read.
     rows: Vec<Vec<String>>,
     /// The piece of work and the piece of it that comes next.
@@ -100,30 +133,22 @@ struct Reader {
 impl Reader {
     /// A turn, and then the next; a run that has turned to another plan meanwhile lets it drop.
     fn go_on(mut self) {
-        if self.run.borrow().generation() != self.generation {
+        if self.draws.run().is_none() {
             return;
         }
-        let clock = window().performance();
-        let now = || clock.as_ref().map_or(f64::INFINITY, web_sys::Performance::now);
-        let until = now() + TURN_MS;
-        loop {
-            if self.run.borrow_mut().advance(&self.book.account, SLICE) == 0 && !self.piece() {
-                let html = self.read.into_iter().collect();
-                self.then.emit(Shown { book: self.book, html });
-                return;
-            }
-            if now() >= until {
-                break;
-            }
+        if in_turns(&mut || self.piece()) {
+            let html = self.read.into_iter().collect();
+            self.then.emit(Shown { book: self.draws.book, html });
+        } else {
+            Timeout::new(0, move || self.go_on()).forget();
         }
-        Timeout::new(0, move || self.go_on()).forget();
     }
 
     /// Reads the next piece; whether there was one.
     fn piece(&mut self) -> bool {
-        let (account, (w, at)) = (&self.book.account, self.at);
+        let (account, (w, at)) = (&self.draws.book.account, self.at);
         let Some(work) = account.program.as_ref().and_then(|p| p.workloads.get(w)) else { return false };
-        let run = self.run.borrow();
+        let Some(run) = self.draws.run() else { return false };
         let reading = Reading::new(account, &run, w, COVERAGE);
         let ids = reading.as_ref().map_or(Vec::new(), Reading::ids);
         let routes = work.routes.len();
@@ -143,7 +168,13 @@ impl Reader {
             let head = &["Figure, a year", "Route", "Central", "From", "To", "Than the present"];
             let title = "Intervals and odds".to_owned();
             let table = PaperTable { title, head, rows: std::mem::take(&mut self.rows) };
-            self.read.push(words_table(format!("sure-{w}"), &table));
+            self.read.push(html! {
+                <>
+                    <Chosen key={w} draws={self.draws.clone()} {w} />
+                    { for stopped_words(work, reading).into_iter().map(|text| html! { <p>{ unbroken(&text) }</p> }) }
+                    { words_table(format!("sure-{w}"), &table) }
+                </>
+            });
         }
         match at / 2 {
             r if r >= routes => self.at = (w + 1, 0),

@@ -4,6 +4,7 @@
 mod bad_input;
 mod case;
 mod co2;
+mod drawn;
 mod files;
 mod log;
 mod need;

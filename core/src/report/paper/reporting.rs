@@ -7,6 +7,7 @@ use crate::generator::Category;
 use crate::ledger::{Direction, Place};
 use crate::material::table::Table;
 use crate::material::{Class, Substance};
+use crate::quantity::nearest;
 use std::sync::OnceLock;
 
 const TABLE: Table = Table { name: "reporting.csv", text: include_str!("../../../data/reporting.csv") };
@@ -123,7 +124,7 @@ pub(super) fn paper(sheet: &Sheet<'_>) -> Paper {
             for (list, kg, limit) in
                 [("pollutant register, air", m.air_kg, air), ("pollutant register, water", m.drain_kg, water)]
             {
-                if let (true, Ok(limit)) = (kg > 0.0, limit.parse()) {
+                if let (true, Some(limit)) = (kg > 0.0, nearest(limit)) {
                     put(&s.name, list, kg, limit, annex);
                 }
             }

@@ -1,9 +1,11 @@
 //! Figures and differences: flat rows whose keys name the unit.
 
 use super::super::json::Json;
+use super::super::odds::summary;
 use super::super::row::{Row, key_unit, written, yearly};
 use crate::account::{Figure, Measure, RouteAccount};
 use crate::compare::{Comparison, Difference};
+use crate::odds::Reading;
 use crate::program::WorkloadProgram;
 
 /// One figure in every unit of work.
@@ -29,7 +31,12 @@ pub(crate) fn figure(json: &mut Json, account: &RouteAccount, figure: &Figure, v
 }
 
 /// The comparison of one workload: every route beside the present one.
-pub(super) fn comparison(json: &mut Json, work: &WorkloadProgram, comparison: &Comparison) {
+pub(super) fn comparison(
+    json: &mut Json,
+    work: &WorkloadProgram,
+    comparison: &Comparison,
+    reading: Option<&Reading<'_>>,
+) {
     let name = |i: usize| work.routes.get(i).map_or("", |r| r.name.as_str());
     json.put("present", name(comparison.present));
     json.list("routes", |json| {
@@ -42,7 +49,17 @@ pub(super) fn comparison(json: &mut Json, work: &WorkloadProgram, comparison: &C
                 json.texts("doubts", &route.doubts);
                 json.list("differences", |json| {
                     for d in &route.differences {
-                        json.row(|json| difference(json, d));
+                        json.row(|json| {
+                            difference(json, d);
+                            if let Some(reading) = reading {
+                                let figure = reading.figure(&d.id);
+                                let rivals = figure.iter().flat_map(|f| &f.rivals);
+                                let rival = rivals.into_iter().find(|x| x.route == route.route);
+                                summary(json, "change_", d.measure, rival.and_then(|x| x.difference));
+                                json.put("less", rival.map(|x| x.less));
+                                json.put("same", rival.map(|x| x.same));
+                            }
+                        });
                     }
                 });
             });
