@@ -76,18 +76,23 @@ impl Measure {
         }
     }
 
-    /// A value beside its uncertainty: rounded to the place of the second significant digit of the half width of its
-    /// interval, so that no digit is shown that the interval leaves open. As it is where there is no width. Source: JCGM
-    /// 100:2008, 7.2.6 (from memory).
+    /// An amount of an interval, its middle or a limit, for people: as [`Measure::shown`], without the digits that the
+    /// interval leaves open.
     ///
     /// ```
     /// use thimbleworth::account::Measure;
-    /// let width = (69.31 - 39.91) / 2.0;
-    /// assert_eq!([54.65, 39.91, 69.31].map(|kg| Measure::Mass.rounded(kg, width)), [55.0, 40.0, 69.0]);
-    /// assert_eq!(Measure::Mass.rounded(309.34, 0.0), 309.34);
+    /// let shown = [54.65, 39.91, 69.31].map(|kg| Measure::Mass.shown_within(kg, (39.91, 69.31)));
+    /// assert_eq!(shown, ["55 kg", "40 kg", "69 kg"]);
     /// ```
     #[must_use]
-    pub fn rounded(self, value_si: f64, half_width_si: f64) -> f64 {
+    pub fn shown_within(self, value_si: f64, (low_si, high_si): (f64, f64)) -> String {
+        self.shown(self.rounded(value_si, (high_si - low_si) / 2.0))
+    }
+
+    /// A value beside its uncertainty: rounded to the place of the second significant digit of the half width of its
+    /// interval, so that no digit is shown that the interval leaves open. As it is where there is no width. Source: JCGM
+    /// 100:2008, 7.2.6 (from memory).
+    fn rounded(self, value_si: f64, half_width_si: f64) -> f64 {
         // Below a tenth of a kilowatt hour energies are shown in joules.
         let factor = if self == Self::Energy && value_si.abs() < 3.6e5 { 1.0 } else { self.written().1 };
         let width = half_width_si * factor;
