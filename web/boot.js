@@ -3,6 +3,7 @@
 // The functions below are called by the program, through src/browser.rs.
 
 const LARGEST_FILE = 8 * 1024 * 1024;
+const LARGEST_LOG = 64e6;
 let kept = null;
 let hear = null;
 
@@ -28,6 +29,16 @@ function showStopped() {
 async function read(file) {
   const fits = file.size <= LARGEST_FILE;
   hear(file.name, file.size, fits ? new Uint8Array(await file.arrayBuffer()) : new Uint8Array());
+}
+
+// Every file of a field: its name and its bytes, none of a file that is too large or cannot be read.
+async function readFiles(input, callback) {
+  const files = [...input.files];
+  input.value = "";
+  for (const file of files) {
+    const bytes = file.size <= LARGEST_LOG ? await file.arrayBuffer().catch(() => null) : null;
+    callback(file.name, bytes ? new Uint8Array(bytes) : undefined);
+  }
 }
 
 function watchFiles(callback) {

@@ -69,6 +69,23 @@ test("the year of the site has its pictures, each with its table, and unfolds in
   await close();
 });
 
+test("the mix of routes keeps within what it may cost", async () => {
+  const { page, seen, close } = await open(browser);
+  const site = page.locator("#site-year");
+  await site.getByText("The mix of routes that lowers a figure most").click();
+  await site.getByText("Nothing holds the cost.").waitFor();
+  assert.match(await site.locator("#mix-0").innerText(), /Supercritical CO2/);
+  const budget = site.getByLabel("At most so much more a year");
+  await budget.fill("0");
+  await budget.press("Tab");
+  await site.getByText("At most 0 USD a year more than the present routes.").waitFor();
+  assert.match(await site.locator("#mix-0").innerText(), /Pressurised liquid/);
+  await site.getByLabel("Figure to lower").selectOption("air.solvents");
+  await site.getByText(/^Every mix that no other beats in both: .*air/).waitFor();
+  assertQuiet(seen);
+  await close();
+});
+
 test("labels print at the size of the label, one a page, and nothing else with them", async () => {
   const { page, seen, close } = await open(browser);
   const desk = page.locator("#waste-desk");

@@ -64,6 +64,35 @@ fn a_german_ledger_with_everything_that_goes_wrong() {
     assert_eq!((again.line, again.detail.as_str()), (15, "3"));
 }
 
+/// The mark of UTF-8 before the first heading, German names without a CAS number, one line in another encoding, and a word that
+/// stands for several materials.
+#[test]
+fn a_mark_of_utf_8_and_german_names_without_a_number() {
+    let text = b"\xef\xbb\xbfDatum;L\xc3\xb6semittel;Menge (kg);Lieferant\r\n\
+        2026-01-05;Dichlormethan;2,5;x\r\n\
+        2026-01-06;Essigs\xc3\xa4ureethylester;1,5;x\r\n\
+        2026-01-07;Essigs\xe4ureethylester;1,0;x\r\n\
+        2026-01-08;n-Hexan;3,0;x\r\n\
+        2026-01-09;Benzin;4,0;x\r\n";
+    let (reading, names, remarks) = read("einkauf.csv", text);
+    assert_eq!((reading.rows.used, reading.rows.refused), (4, 1), "{remarks:#?}");
+    assert_eq!(reading.mapping.columns[0].0, "Datum");
+    let kg = |name: &str| {
+        let at = names.materials.iter().position(|m| m.name == name).unwrap();
+        reading.tally.over(&|k| usize::from(k.material) == at).kg
+    };
+    assert_eq!((kg("dichloromethane"), kg("ethyl acetate"), kg("n-hexane")), (2.5, 2.5, 3.0));
+    let told = remarks.iter().find(|r| r.what == Verdict::Changed(Change::Windows1252)).unwrap();
+    assert_eq!(told.line, 4);
+    let petrol = remarks.iter().find(|r| r.refused()).unwrap();
+    assert_eq!(petrol.line, 6);
+    assert!(
+        petrol.need().contains("petroleum ether") && !petrol.need().contains("benzene"),
+        "{}",
+        petrol.need()
+    );
+}
+
 #[test]
 fn both_sides_of_every_question() {
     let purchases = |rows: &str| {

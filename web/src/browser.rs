@@ -16,6 +16,9 @@ extern "C" {
     /// Lets a person choose a file to open.
     #[wasm_bindgen(js_name = chooseFile)]
     pub(crate) fn choose_file();
+    /// Reads every file of a field.
+    #[wasm_bindgen(js_name = readFiles)]
+    fn read_files_js(input: &web_sys::HtmlInputElement, callback: &JsValue);
     /// Saves a text: through the browser's own dialog where it has one, as a download elsewhere.
     #[wasm_bindgen(js_name = saveFile)]
     fn save_file_js(name: &str, text: &str, media_type: &str, callback: &JsValue);
@@ -43,6 +46,15 @@ extern "C" {
 pub(crate) fn watch_files(with: impl FnMut(String, f64, Vec<u8>) + 'static) {
     let callback = Closure::<dyn FnMut(String, f64, Vec<u8>)>::new(with);
     watch_files_js(&callback.into_js_value());
+}
+
+/// Reads every file of a field and calls `with` for each: its name and its bytes, none of a file that is too large or
+/// cannot be read. The field is empty afterwards.
+pub(crate) fn read_files(
+    input: &web_sys::HtmlInputElement,
+    with: impl FnMut(String, Option<Vec<u8>>) + 'static,
+) {
+    read_files_js(input, &Closure::<dyn FnMut(String, Option<Vec<u8>>)>::new(with).into_js_value());
 }
 
 /// Saves a text and calls `then` with the name that was chosen, or nothing when the person thought better of it.

@@ -1,4 +1,5 @@
 //! From the sources to the program and its glue, the same bytes from any folder.
+use crate::names::shortened;
 use crate::order::ordered;
 use anyhow::{Context, Result, bail, ensure};
 use std::env;
@@ -150,7 +151,9 @@ fn glue(compiled: &Path) -> Result<Program> {
             && output.npm_dependencies().is_empty(),
         "a dependency brings scripts of its own, which the packer does not inline"
     );
-    Ok(Program { glue: output.js().to_owned(), wasm: ordered(&output.wasm_mut().emit_wasm())? })
+    let wasm = ordered(&output.wasm_mut().emit_wasm())?;
+    let (wasm, glue) = shortened(&wasm, output.js())?;
+    Ok(Program { wasm, glue })
 }
 
 /// Whether `bytes` hold `path` as text. The root folder is no telling path.

@@ -33,7 +33,12 @@ pub(crate) enum Follows {
     TwoOthers = 13,
     /// A second code, then up to two numbers of the sort of `Other`.
     SecondCode = 14,
+    /// A constant of four bytes, which as a rule is an address; only among codes that are taken apart, where it has a code of its own.
+    Address = 15,
 }
+
+/// The code that stands for an address: none that the compiler makes.
+pub(crate) const ADDRESS: u8 = 0x06;
 
 /// How many groups of constants are told apart, by the instruction after them.
 pub(crate) const CLASSES: u8 = 9;
@@ -95,8 +100,8 @@ pub(crate) struct Instruction<'a> {
 pub(crate) fn instructions(mut rest: &[u8]) -> Result<Vec<Instruction<'_>>> {
     let mut list = Vec::new();
     while let Some((&code, after)) = rest.split_first() {
-        let follows =
-            Follows::of(code).with_context(|| format!("instruction {code:#04x} is not known here"))?;
+        let follows = Follows::of(code)
+            .with_context(|| format!("instruction {code:#04x} has no place in instruction.rs"))?;
         let (beside, after) = match follows {
             Follows::Block | Follows::SecondCode => {
                 after.split_at_checked(1).context("an instruction ends early")?

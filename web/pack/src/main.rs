@@ -4,6 +4,7 @@
 //! everything is inlined into the shell, which is the root `index.html`. No bundler and no installed tool is needed.
 mod compile;
 mod instruction;
+mod names;
 mod order;
 mod packing;
 mod parts;
@@ -45,8 +46,8 @@ fn main() -> Result<()> {
     let load = Load { styles: late_styles, script: &second_script, program: &program.wasm };
     let start = shell::lean(&read("web/start.js")?);
     let page = read("index.html")?;
-    let script = shell::first_script(&load, &start)?;
-    let html = packing::in_utf16(&shell::inline(&page, &first_styles, &script, &load)?);
+    let first = shell::first_script(&load, &start)?;
+    let html = packing::in_utf16(&shell::inline(&page, &first_styles, &first, &load)?);
 
     let dist = workspace.root.join("web/dist");
     fs::create_dir_all(&dist)?;
@@ -59,7 +60,7 @@ fn main() -> Result<()> {
         );
         return Ok(());
     }
-    fs::write(dist.join("page.js"), &script)?;
+    fs::write(dist.join("page.js"), &first.whole)?;
     // What the unpacker must give again; a test compares.
     fs::write(dist.join("program.wasm"), &program.wasm)?;
     fs::write(dist.join("thimbleworth.html"), &html)?;
@@ -77,7 +78,7 @@ fn main() -> Result<()> {
     row("  of that at once", first_styles.len());
     row("start", start.len());
     row("shell", page.len());
-    row("web/dist/page.js", script.len());
+    row("web/dist/page.js", first.whole.len());
     row("web/dist/thimbleworth.html", html.len());
     ensure!(
         html.len() <= LIMIT_BYTES,

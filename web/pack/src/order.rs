@@ -6,9 +6,9 @@ use anyhow::{Context, Result, bail, ensure};
 use std::collections::{BTreeMap, BTreeSet};
 
 /// So many codes in a row are compared.
-const RUN: usize = 5;
+const RUN: usize = 8;
 /// Rows of codes that more functions share than this say nothing about any of them.
-const COMMON: usize = 60;
+const COMMON: usize = 400;
 
 /// Orders the functions of `module` and numbers them anew wherever they are named. Alignments become the natural ones: they are hints
 /// and mean nothing.
@@ -51,41 +51,48 @@ pub(crate) fn ordered(module: &[u8]) -> Result<Vec<u8>> {
     Ok(out)
 }
 
-/// Beginning with the first function, the one most like the last that is not there yet; where there is none, the first that is left.
+/// Beginning with the first function, the one most like the last that is not there yet, where the one before the last counts half as much
+/// and so on; where there is none, the first that is left.
 fn order(functions: &[(&[u8], Vec<Instruction<'_>>)]) -> Vec<usize> {
-    let mut sharing: BTreeMap<&[u8], Vec<usize>> = BTreeMap::new();
     let codes: Vec<Vec<u8>> =
         functions.iter().map(|(_, list)| list.iter().map(|i| i.code).collect()).collect();
     let runs: Vec<BTreeSet<&[u8]>> = codes.iter().map(|codes| codes.windows(RUN).collect()).collect();
+    let mut sharing: BTreeMap<&[u8], Vec<usize>> = BTreeMap::new();
     for (f, runs) in runs.iter().enumerate() {
         for run in runs {
             sharing.entry(run).or_default().push(f);
         }
     }
     sharing.retain(|_, functions| (2..=COMMON).contains(&functions.len()));
-    let mut left: BTreeSet<usize> = (0..functions.len()).collect();
+    let mut left = vec![true; functions.len()];
     let mut order = Vec::with_capacity(functions.len());
+    // How much of what a function has was met lately, for those that have any of it.
     let mut alike = vec![0_u64; functions.len()];
-    while let Some(&first) = left.first() {
-        let mut next = Some(first);
-        while let Some(f) = next.take() {
-            left.remove(&f);
-            order.push(f);
-            let mut met = Vec::new();
-            for others in runs[f].iter().filter_map(|run| sharing.get(run)) {
-                // The rarer a run, the more it says.
-                let weight = u64::from(1024 / (others.len() as u32 + 1).ilog2());
-                for &other in others.iter().filter(|other| left.contains(other)) {
-                    if alike[other] == 0 {
-                        met.push(other);
-                    }
-                    alike[other] += weight;
+    let mut met: Vec<usize> = Vec::new();
+    let mut first = 0;
+    while first < functions.len() {
+        let per_run = |f: usize, last: usize| alike[f] * 1024 / runs[f].len().max(runs[last].len()) as u64;
+        let best = order
+            .last()
+            .and_then(|&last| met.iter().copied().max_by_key(|&f| (per_run(f, last), std::cmp::Reverse(f))));
+        let f = best.unwrap_or(first);
+        left[f] = false;
+        order.push(f);
+        while first < functions.len() && !left[first] {
+            first += 1;
+        }
+        met.retain(|&other| {
+            alike[other] /= 2;
+            left[other] && alike[other] > 0
+        });
+        for others in runs[f].iter().filter_map(|run| sharing.get(run)) {
+            // The rarer a run, the more it says.
+            let weight = u64::from(1024 / (others.len() as u32 + 1).ilog2());
+            for &other in others.iter().filter(|other| left[**other]) {
+                if alike[other] == 0 {
+                    met.push(other);
                 }
-            }
-            let per_run = |other: usize| alike[other] * 1024 / (runs[f].len() + runs[other].len()) as u64;
-            next = met.iter().copied().max_by_key(|&other| (per_run(other), std::cmp::Reverse(other)));
-            for other in met {
-                alike[other] = 0;
+                alike[other] += weight;
             }
         }
     }
@@ -129,7 +136,7 @@ fn number<'a>(bytes: &'a [u8], numbers: &[usize]) -> Result<(Vec<u8>, &'a [u8])>
 }
 
 /// A vector: its length, then each entry by `entry`, which gives what it writes and what follows.
-fn vector<'a>(
+pub(crate) fn vector<'a>(
     bytes: &'a [u8],
     out: &mut Vec<u8>,
     mut entry: impl FnMut(&'a [u8], &mut Vec<u8>) -> Result<&'a [u8]>,
@@ -213,7 +220,7 @@ fn elements(bytes: &[u8], numbers: &[usize]) -> Result<Vec<u8>> {
 }
 
 /// A number in LEB128.
-fn write(out: &mut Vec<u8>, mut value: usize) {
+pub(crate) fn write(out: &mut Vec<u8>, mut value: usize) {
     while value >= 0x80 {
         out.push((value & 0x7f) as u8 | 0x80);
         value >>= 7;
@@ -231,10 +238,10 @@ mod tests {
         (table 3 funcref)
         (elem (i32.const 1) $b $c)
         (func $a (export "a") (param i32) (result i32)
-          (call $told (i32.const 7)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 3)) (call $b)))
+          (nop) (nop) (nop) (nop) (call $told (i32.const 7)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 3)) (call $b)))
         (func $b (result i32) (i32.const 300))
         (func $c (export "c") (param i32) (result i32)
-          (call $told (i32.const 8)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 5)) (i32.const 4)))
+          (nop) (nop) (nop) (nop) (call $told (i32.const 8)) (i32.add (i32.mul (i32.load offset=300 align=1 (local.get 0)) (i32.const 5)) (i32.const 4)))
         (memory 1))"#;
 
     fn of(module: &[u8], id: u8) -> Vec<u8> {

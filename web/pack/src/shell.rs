@@ -10,6 +10,8 @@ const SCRIPT_START: &str = r#"<script src="web/dist/page.js""#;
 const SCRIPT_END: &str = "</script>";
 /// The element of the shell that loads the styles from their folder.
 const STYLES: &str = r#"<link rel="stylesheet" href="web/page.css">"#;
+/// Where the first script finds the load in the file to mail.
+const LOAD: &str = "document.getElementById(\"load\").textContent";
 /// The policy goes behind this element: it must stand before anything that it governs.
 const CHARSET: &str = r#"<meta charset="utf-8">"#;
 
@@ -60,8 +62,18 @@ pub(crate) fn second_script(glue: &str, boot: &str) -> String {
     format!("(function () {{\n\"use strict\";\n{glue}\n{boot}}})();\n")
 }
 
-/// The script that stands in the page: the packed load and what unpacks it.
-pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<String> {
+/// The first script of the page, which unpacks the load.
+pub(crate) struct First {
+    /// With the load in it, for a page that loads it from its folder.
+    pub(crate) whole: String,
+    /// As it stands in a page that has the load in an element of its own, which a browser neither translates nor hashes.
+    pub(crate) beside: String,
+    /// That element's text.
+    pub(crate) load: String,
+}
+
+/// The packed load and what unpacks it.
+pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<First> {
     let front = [load.styles.as_bytes(), load.script.as_bytes()].concat();
     let (packed, unpacker) = (pack(&front, load.program)?, unpacker()?);
     let lowered = start.to_ascii_lowercase();
@@ -71,22 +83,26 @@ pub(crate) fn first_script(load: &Load<'_>, start: &str) -> Result<String> {
             "the start holds {bad:?}, which would end or confuse the script element"
         );
     }
-    Ok(format!(
-        "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}, {}];\n\
-         const LOAD = [{}, \"{}\"];\n{start}}})();\n",
-        unpacker.len(),
-        signs(&unpacker),
-        load.styles.len(),
-        load.script.len(),
-        load.program.len(),
-        packed.len(),
-        signs(&packed)
-    ))
+    let script = |text: &str| {
+        format!(
+            "(function () {{\n\"use strict\";\nconst UNPACKER = [{}, \"{}\"];\nconst SIZES = [{}, {}, {}];\n\
+             const LOAD = [{}, {text}];\n{start}}})();\n",
+            unpacker.len(),
+            signs(&unpacker),
+            load.styles.len(),
+            load.script.len(),
+            load.program.len(),
+            packed.len(),
+        )
+    };
+    let load = signs(&packed);
+    Ok(First { whole: script(&format!("\"{load}\"")), beside: script(LOAD), load })
 }
 
 /// The shell with the styles of the first sight, the script and a policy that admits these, what the script unpacks and
 /// nothing else.
-pub(crate) fn inline(shell: &str, styles: &str, script: &str, load: &Load<'_>) -> Result<String> {
+pub(crate) fn inline(shell: &str, styles: &str, first: &First, load: &Load<'_>) -> Result<String> {
+    let script = &first.beside;
     ensure!(!styles.to_ascii_lowercase().contains("</style"), "the styles hold \"</style\"");
     for mark in [CHARSET, STYLES, SCRIPT_START] {
         ensure!(shell.matches(mark).count() == 1, "index.html must hold {mark} exactly once");
@@ -110,7 +126,10 @@ pub(crate) fn inline(shell: &str, styles: &str, script: &str, load: &Load<'_>) -
     let Some((_, after)) = rest.split_once(SCRIPT_END) else {
         anyhow::bail!("the script element of index.html has no end");
     };
-    Ok(format!("{before}<script>{script}{SCRIPT_END}{after}"))
+    let packed = &first.load;
+    Ok(format!(
+        "{before}<script type=\"text/plain\" id=\"load\">{packed}{SCRIPT_END}<script>{script}{SCRIPT_END}{after}"
+    ))
 }
 
 /// A hash source of Content Security Policy Level 3: the base64 of the SHA-256 of the element's text.
@@ -125,11 +144,22 @@ mod tests {
     const SHELL: &str = include_str!("../../../index.html");
     const NOTHING: Load<'static> = Load { styles: "", script: "", program: b"\0asm\x01\0\0\0" };
 
+    fn first(script: &str) -> First {
+        First { whole: String::new(), beside: script.to_owned(), load: "\u{2100}\u{2101}".to_owned() }
+    }
+
+    #[test]
+    fn the_load_stands_in_the_script_or_beside_it() {
+        let first = first_script(&NOTHING, "run();").expect("a script");
+        assert!(first.whole.contains(&format!("\"{}\"];\nrun();", first.load)));
+        assert_eq!(first.whole.replace(&format!("\"{}\"", first.load), LOAD), first.beside);
+    }
+
     #[test]
     fn the_root_shell_takes_styles_script_and_policy() {
-        let page = inline(SHELL, "p{color:red}", "run();", &NOTHING).expect("a page");
+        let page = inline(SHELL, "p{color:red}", &first("run();"), &NOTHING).expect("a page");
         assert!(page.contains("<style>p{color:red}</style>"));
-        assert!(page.contains("<script>run();</script>\n</body>"));
+        assert!(page.contains("id=\"load\">\u{2100}\u{2101}</script><script>run();</script>\n</body>"));
         assert!(!page.contains("src=\"web/") && !page.contains("href=\"web/") && !page.contains("onerror"));
         let policy = page.find("Content-Security-Policy").expect("a policy");
         assert!(
@@ -143,7 +173,7 @@ mod tests {
         // The example of Content Security Policy Level 3, section on hash usage: the hash of `alert('Hello, world.');`.
         assert_eq!(hash("alert('Hello, world.');"), "'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='");
         let load = Load { styles: "b{}", script: "let second;", program: b"" };
-        let page = inline(SHELL, "a{}", "alert('Hello, world.');", &load).expect("a page");
+        let page = inline(SHELL, "a{}", &first("alert('Hello, world.');"), &load).expect("a page");
         let scripts = "script-src 'sha256-qznLcsROx4GACP2dm0UCKCzCG+HiZ1guq6ZZDob/Tng='";
         assert!(page.contains(&format!("{scripts} {} 'wasm-unsafe-eval';", hash("let second;"))));
         assert!(page.contains(&format!("style-src {} {};", hash("a{}"), hash("b{}"))));
@@ -155,7 +185,7 @@ mod tests {
             assert!(first_script(&NOTHING, bad).is_err(), "{bad} in the start");
         }
         assert!(first_script(&NOTHING, "let a = 1 < 2;").is_ok());
-        assert!(inline(SHELL, "</Style>", "", &NOTHING).is_err());
+        assert!(inline(SHELL, "</Style>", &first(""), &NOTHING).is_err());
     }
 
     #[test]
@@ -165,7 +195,7 @@ mod tests {
             SHELL.replace("</body>", "<script>more()</script></body>"),
             SHELL.replace("web/dist/page.js", "page.js"),
         ] {
-            assert!(inline(&shell, "", "", &NOTHING).is_err());
+            assert!(inline(&shell, "", &first(""), &NOTHING).is_err());
         }
     }
 

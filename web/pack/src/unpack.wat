@@ -254,7 +254,7 @@
       (local.set $from (i32.add (local.get $from) (i32.const 8)))
       (br_if $more (i32.le_u (local.tee $stream (i32.add (local.get $stream) (i32.const 1))) (i32.const LAST)))))
 
-  ;; Unpacks each stream of instructions until it has 64 kB in stock: more than the longest function and what is joined before
+  ;; Unpacks each stream of instructions until it has 128 kB in stock: more than the longest function and what is joined before
   ;; this is called again.
   (func $stock
     (local $stream i32) (local $desk i32) (local $to i32) (local $wanted i32)
@@ -264,7 +264,7 @@
       (local.set $to (i32.load offset=8204 (local.get $desk)))
       (local.set $wanted (i32.add
         (i32.load offset=8448 (i32.shl (local.get $stream) (i32.const 2)))
-        (i32.const 65536)))
+        (i32.const 131072)))
       (if (i32.and
             (i32.lt_u (local.get $to) (i32.load offset=8232 (local.get $desk)))
             (i32.lt_u (local.get $to) (local.get $wanted)))
@@ -302,8 +302,8 @@
           (br_if $plain (i32.eqz
             (local.tee $stream (i32.and (i32.load8_u offset=8192 (local.get $code)) (i32.const 15))))))
         (local.set $count (i32.const 1))
-        (block $memory (block $constant (block $targets (block $float (block $two (block $second (block $block (block $end
-          (br_table $end $block $end $more $memory $memory $more $more $more $more $float $targets $constant $two $second
+        (block $memory (block $address (block $constant (block $targets (block $float (block $two (block $second (block $block (block $end
+          (br_table $end $block $end $more $memory $memory $more $more $more $more $float $targets $constant $two $second $address
             (local.get $stream)))
           ;; $end
           (br_if $done (i32.eqz (local.get $depth)))
@@ -344,6 +344,10 @@
           (local.set $stream (i32.add (local.get $stream)
             (i32.shr_u (i32.load8_u offset=8192 (i32.load8_u (local.get $codes))) (i32.const 4))))
           (br $more))
+        ;; $address: a constant, whose code is put right.
+        (i32.store8 (i32.sub (local.get $out) (i32.const 1)) (i32.const 0x41))
+        (local.set $stream (i32.const ADDRESSES))
+        (br $more))
         ;; $memory: two bits say how a load or store is aligned.
         (i32.store8 (local.get $out) (i32.and (i32.const 3) (i32.wrap_i64 (i64.shr_u
           (i64.const ALIGNMENTS)

@@ -11,7 +11,7 @@ pub use set::{new_step, number, step_field, text};
 
 use crate::document::Document;
 use thimbleworth::letter;
-use thimbleworth::plan::Field;
+use thimbleworth::plan::{Field, Log};
 
 /// One entry of one of the plan's lists.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -94,6 +94,8 @@ pub enum Change {
     Remove(Item),
     /// Moves an entry one place up or down.
     Move(Item, bool),
+    /// Keeps how one of the site's records is read.
+    Log(Box<Log>),
 }
 
 /// A change with the name that undo shows.
@@ -135,6 +137,10 @@ impl Edit {
             Change::Move(item, true) => ("move up", *item),
             Change::Move(item, false) => ("move down", *item),
             Change::Rename(item, _) => ("rename", *item),
+            Change::Log(log) => {
+                let name = format!("change how {} is read", log.name);
+                return Self { name, place: None, change };
+            }
             Change::Set(path, _) => {
                 return Self { name: "change field".to_owned(), place: Some(path.clone()), change };
             }
@@ -150,7 +156,7 @@ impl Edit {
     #[must_use]
     pub fn focus(&self, after: &Document) -> Option<String> {
         match &self.change {
-            Change::Set(..) | Change::Rename(..) => None,
+            Change::Set(..) | Change::Rename(..) | Change::Log(_) => None,
             Change::Add(item, _) => {
                 Some(item.at(list::count(after, *item).saturating_sub(1)).path(&after.plan))
             }
@@ -181,6 +187,14 @@ impl Edit {
             Change::Duplicate(item) => list::duplicate(document, *item).is_some(),
             Change::Remove(item) => list::remove(document, *item).is_some(),
             Change::Move(item, up) => list::shift(document, *item, *up).is_some(),
+            Change::Log(log) => {
+                let logs = &mut document.plan.logs;
+                match logs.iter_mut().find(|known| known.name == log.name) {
+                    Some(known) => *known = (**log).clone(),
+                    None => logs.push((**log).clone()),
+                }
+                true
+            }
         }
     }
 }

@@ -184,3 +184,16 @@ fn an_unknown_technique_adds_nothing() {
     assert!(!Edit::list(Change::Add(Item::Step(0, 0, 0), "alchemy".into())).apply(&mut after));
     assert_eq!(after, document());
 }
+
+#[test]
+fn how_a_file_is_read_is_kept_once_for_each_file() {
+    let mut after = document();
+    for register in ["purchases", "stock count"] {
+        let log = Log { name: "a.csv".into(), register: register.into(), ..Log::default() };
+        let edit = Edit::list(Change::Log(Box::new(log)));
+        assert_eq!(edit.name, "change how a.csv is read");
+        assert!(edit.apply(&mut after));
+    }
+    assert_eq!(after.plan.logs.len(), 1);
+    assert_eq!(after.plan.logs[0].register, "stock count");
+}

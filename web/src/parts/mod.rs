@@ -10,11 +10,11 @@ mod toolbar;
 mod working;
 
 pub(crate) use card::tools;
-pub(crate) use field::{Ask, Field, Options, said};
+pub(crate) use field::{Ask, Field, Options, said, value_of};
 pub(crate) use figures::{Line, Sheet, figure_button};
 pub(crate) use mend::{Mend, basis_of};
 pub(crate) use name::Name;
-pub(crate) use paper::{folded, unfolded, words, words_table};
+pub(crate) use paper::{MOST_ROWS, folded, framed, unfolded, words, words_table};
 pub(crate) use rows::Rows;
 pub(crate) use toolbar::{Export, Toolbar, Wish};
 pub(crate) use working::Working;

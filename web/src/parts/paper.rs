@@ -5,7 +5,7 @@ use thimbleworth::report::{Paper, PaperTable, words_csv};
 use yew::prelude::*;
 
 /// Rows that a table shows; a longer one is saved whole.
-const MOST_ROWS: usize = 200;
+pub(crate) const MOST_ROWS: usize = 200;
 
 /// A table of words.
 pub(crate) fn words_table(id: String, table: &PaperTable) -> Html {
@@ -32,7 +32,7 @@ pub(crate) fn words(id: String, title: &str, head: &[&'static str], rows: &[Vec<
 
 /// A table in its frame: caption, headings, as many of `count` rows as `drawn` has, and what may be done with it. `whole` saves
 /// all rows where not all are shown.
-fn framed(
+pub(crate) fn framed(
     id: String,
     title: &str,
     head: Vec<&'static str>,

@@ -22,6 +22,7 @@ mod label;
 mod letter;
 mod mass_by_place;
 mod over_years;
+mod reconciled;
 mod scale;
 mod shape;
 #[cfg(test)]
@@ -40,6 +41,7 @@ pub use intervals::intervals;
 pub use letter::text_width;
 pub use mass_by_place::mass_by_place;
 pub use over_years::over_years;
+pub use reconciled::reconciled;
 pub use shape::{Anchor, Hatch, Shape, Trail};
 pub use year::{load, stock};
 

@@ -54,17 +54,7 @@ struct Props {
 #[component]
 fn Pour(props: &Props) -> Html {
     let asked = use_state_eq(<[String; 4]>::default);
-    let put = {
-        let asked = asked.clone();
-        Callback::from(move |edit: Edit| {
-            let Change::Set(path, value) = edit.change else { return };
-            let mut next = (*asked).clone();
-            if let Some(slot) = PATHS.iter().position(|p| *p == path).and_then(|i| next.get_mut(i)) {
-                *slot = text_of(value.as_ref());
-            }
-            asked.set(next);
-        })
-    };
+    let put = put_into(&asked, &PATHS);
     let account = &props.book.account;
     let streams = account.program.as_ref().map_or(&[][..], |p| &p.site.streams);
     let [into, what, held, size] = &*asked;
@@ -114,6 +104,22 @@ fn Pour(props: &Props) -> Html {
         </section>
         </>
     }
+}
+
+/// Takes what is typed into fields of these paths, which are no part of the plan.
+pub(super) fn put_into(
+    asked: &UseStateHandle<[String; 4]>,
+    paths: &'static [&'static str; 4],
+) -> Callback<Edit> {
+    let asked = asked.clone();
+    Callback::from(move |edit: Edit| {
+        let Change::Set(path, value) = edit.change else { return };
+        let mut next = (*asked).clone();
+        if let Some(slot) = paths.iter().position(|p| *p == path).and_then(|i| next.get_mut(i)) {
+            *slot = text_of(value.as_ref());
+        }
+        asked.set(next);
+    })
 }
 
 /// The paths of its fields, which no plan has.

@@ -13,6 +13,7 @@ mod finding;
 mod hazard;
 mod labels;
 mod leaf;
+mod logs;
 mod places;
 mod plates;
 mod question;
@@ -36,6 +37,7 @@ static SECTIONS: &[&Section] = &[
     &waste::SECTION,
     &desk::SECTION,
     &site::SECTION,
+    &logs::SECTION,
     &carbon_dioxide::SECTION,
     &energy::SECTION,
     &air::SECTION,

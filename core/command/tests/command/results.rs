@@ -118,6 +118,31 @@ fn trace_opens_a_figure_of_any_route() {
 }
 
 #[test]
+fn check_looks_into_how_logs_are_read() {
+    let mut plan: serde_json::Value = serde_json::from_str(PLAN).unwrap();
+    let mut check = |mut log: serde_json::Value| {
+        log["name"] = "a.csv".into();
+        plan["logs"] = serde_json::json!([log]);
+        run_on(plan.to_string().as_bytes(), &["check", "-"])
+    };
+    let fine = check(
+        serde_json::json!({ "register": "purchases", "columns": { "Item": "material" }, "means": { "x": "acetone" } }),
+    );
+    assert!(fine.status == 0 && !fine.out.contains("logs"), "{}{}", fine.out, fine.complaints);
+    let odd = check(
+        serde_json::json!({ "register": "purchases", "columns": { "Item": "material" }, "means": { "x": "acetonn" } }),
+    );
+    assert!(
+        odd.status == 0 && odd.out.contains("means \"acetonn\", which is nothing in the plan"),
+        "{}",
+        odd.out
+    );
+    let broken =
+        check(serde_json::json!({ "register": "purchases", "columns": { "Item": "material in h" } }));
+    assert!(broken.status == 1 && broken.out.contains("logs"), "{}", broken.out);
+}
+
+#[test]
 fn check_tells_everything_and_says_by_its_status_whether_there_is_an_error() {
     let fine = run_on(PLAN.as_bytes(), &["check", "-"]);
     assert_eq!((fine.status, fine.complaints.as_str()), (0, ""));
