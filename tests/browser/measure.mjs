@@ -1,5 +1,5 @@
 // How fast the page is; no test, because a number depends on the machine and on what else it does.
-//   cargo page && cargo page --empty && node tests/browser/measure.mjs
+//   cargo page && cargo page --empty && node tests/browser/measure.mjs [an earlier page to open beside it]
 // Times are told twice: by the clock, which other work on the machine lengthens, and as processor time of the page's main
 // thread, which it hardly does.
 import { give, launch, open, openRaw, packed, root, settled, smallPlan } from "./vocabulary.mjs";
@@ -44,7 +44,7 @@ async function opened(file) {
   return { clock, processor };
 }
 
-const files = existsSync(empty) ? { page: packed, empty } : { page: packed };
+const files = { page: packed, ...(existsSync(empty) && { empty }), ...(process.argv[2] && { earlier: process.argv[2] }) };
 const found = Object.fromEntries(Object.keys(files).map((name) => [name, []]));
 for (let i = 0; i < RUNS; i += 1) {
   for (const [name, file] of Object.entries(files)) found[name].push(await opened(file));
@@ -52,6 +52,9 @@ for (let i = 0; i < RUNS; i += 1) {
 const of = (name, kind, mark) => median(found[name].map((run) => run[kind][mark]));
 for (const [mark, words] of [["drawn", "first section drawn"], ["finding", "finding drawn"], ["whole", "all sections drawn"]]) {
   console.log(`${words}: median of ${RUNS} ${of("page", "clock", mark).toFixed(0)} ms by the clock, ${of("page", "processor", mark).toFixed(0)} ms of the main thread`);
+}
+if (found.earlier) {
+  console.log(`${process.argv[2]}, beside it in turn: first section drawn ${of("earlier", "clock", "drawn").toFixed(0)} ms, ${of("earlier", "processor", "drawn").toFixed(0)} ms`);
 }
 if (found.empty) {
   const ratio = (kind) => (of("page", kind, "drawn") / of("empty", kind, "drawn")).toFixed(1);
@@ -88,7 +91,7 @@ for (const routes of [4, 50]) {
       });
       observer.observe(document.querySelector(".insight"), { subtree: true, childList: true, characterData: true });
     });
-    const out = { script: [], layout: [], follow: [] };
+    const out = { script: [], layout: [] };
     for (let i = 0; i < 60; i += 1) {
       await new Promise((done) => setTimeout(done, 20));
       const drawn = changed();
@@ -100,20 +103,27 @@ for (const routes of [4, 50]) {
       document.body.getBoundingClientRect();
       out.layout.push(performance.now() - start);
     }
-    // The sections with figures follow once nobody types: the longest task among them is what a stroke may have to wait for.
-    for (let i = 0; i < 5; i += 1) {
-      set.call(input, `${300 + i} mL`);
-      const tasks = [];
-      const observer = new PerformanceObserver((list) => tasks.push(...list.getEntries().map((e) => e.duration)));
-      observer.observe({ type: "longtask" });
-      input.dispatchEvent(new InputEvent("input", { bubbles: true }));
-      await new Promise((done) => setTimeout(done, 1500));
-      observer.disconnect();
-      out.follow.push(Math.max(0, ...tasks));
-    }
     return out;
   });
-  console.log(`${routes} routes of 8 steps: key stroke to figures, median ${median(times.script).toFixed(1)} ms, with layout ${median(times.layout).toFixed(1)} ms, worst ${Math.max(...times.layout).toFixed(1)} ms; longest task of the sections that follow ${median(times.follow).toFixed(0)} ms (0: none above 50 ms)`);
+  // The sections with figures follow once nobody types: the longest task among them is what a stroke may have to wait for.
+  const follow = { clock: [], processor: [] };
+  for (let i = 0; i < 5; i += 1) {
+    await browser.startTracing(page, { categories: ["toplevel", "blink.user_timing"] });
+    await page.evaluate(async (i) => {
+      const input = [...document.querySelectorAll("label")].find((l) => l.innerText.startsWith("Solvent in the flask")).control;
+      Object.getOwnPropertyDescriptor(HTMLInputElement.prototype, "value").set.call(input, `${300 + i} mL`);
+      input.dispatchEvent(new InputEvent("input", { bubbles: true }));
+      performance.mark("typed");
+      await new Promise((done) => setTimeout(done, 1500));
+    }, i);
+    const events = JSON.parse((await browser.stopTracing()).toString()).traceEvents;
+    const typed = events.findLast((e) => e.name === "typed" && e.tts);
+    const tasks = events.filter((e) => /RunTask$/.test(e.name) && e.tdur && e.pid === typed.pid && e.tid === typed.tid && e.ts > typed.ts);
+    if (tasks.length === 0) throw new Error("no task is traced");
+    follow.clock.push(Math.max(...tasks.map((e) => e.dur)) / 1000);
+    follow.processor.push(Math.max(...tasks.map((e) => e.tdur)) / 1000);
+  }
+  console.log(`${routes} routes of 8 steps: key stroke to figures, median ${median(times.script).toFixed(1)} ms, with layout ${median(times.layout).toFixed(1)} ms, worst ${Math.max(...times.layout).toFixed(1)} ms; longest task of the sections that follow ${median(follow.clock).toFixed(0)} ms, ${median(follow.processor).toFixed(0)} ms of the main thread`);
   await close();
 }
 console.log(load());

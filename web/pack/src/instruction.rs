@@ -100,8 +100,8 @@ pub(crate) struct Instruction<'a> {
 pub(crate) fn instructions(mut rest: &[u8]) -> Result<Vec<Instruction<'_>>> {
     let mut list = Vec::new();
     while let Some((&code, after)) = rest.split_first() {
-        let follows =
-            Follows::of(code).with_context(|| format!("instruction {code:#04x} is not known here"))?;
+        let follows = Follows::of(code)
+            .with_context(|| format!("instruction {code:#04x} has no place in instruction.rs"))?;
         let (beside, after) = match follows {
             Follows::Block | Follows::SecondCode => {
                 after.split_at_checked(1).context("an instruction ends early")?

@@ -103,18 +103,20 @@ mod tests {
     fn unsigned(text: &str, size: usize) -> Vec<u8> {
         let (mut out, mut held, mut bits) = (Vec::new(), 0_u32, 0);
         let signs: Vec<u32> = text.chars().map(|sign| u32::from(sign) - FIRST).collect();
+        let half = |held: u32| (held as u16).to_le_bytes();
         for pair in signs.chunks(2) {
             let value = pair[0] * SIGNS + pair[1];
-            for (part, more) in [(value & 0xffff, 16), (value >> 16, 15)] {
-                held |= part << bits;
-                bits += more;
-                while bits >= 8 {
-                    out.push((held & 0xff) as u8);
-                    held >>= 8;
-                    bits -= 8;
-                }
+            held |= (value & 0xffff) << bits;
+            out.extend(half(held));
+            held = held >> 16 | (value >> 16) << bits;
+            bits += 15;
+            if bits > 15 {
+                out.extend(half(held));
+                held >>= 16;
+                bits -= 16;
             }
         }
+        out.extend(half(held));
         out.truncate(size);
         out
     }

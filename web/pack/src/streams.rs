@@ -13,7 +13,7 @@ const ADDRESSES: usize = Follows::Constant as usize + CLASSES as usize;
 pub(crate) const LAST: usize = ADDRESSES + 1;
 
 /// The most bytes of a body: the unpacker keeps so much of every stream in stock, less what it joins between two looks.
-const LONGEST_BODY: usize = 49_152;
+const LONGEST_BODY: usize = 131_072 - 16_384;
 
 /// What is packed.
 #[derive(Default)]
@@ -51,7 +51,11 @@ pub(crate) fn apart(front: &[u8], module: &[u8]) -> Result<Apart> {
         apart.streams[0].extend_from_slice(&section.whole[..head]);
         (apart.functions, apart.code_bytes, part) = (count, rest.len(), LAST);
         for body in bodies(section.bytes)? {
-            ensure!(body.len() <= LONGEST_BODY, "a function of {} bytes", body.len());
+            ensure!(
+                body.len() <= LONGEST_BODY,
+                "a function has {} bytes, and the unpacker takes {LONGEST_BODY}: divide it",
+                body.len()
+            );
             put(&mut apart.streams, body)?;
         }
     }

@@ -254,7 +254,7 @@
       (local.set $from (i32.add (local.get $from) (i32.const 8)))
       (br_if $more (i32.le_u (local.tee $stream (i32.add (local.get $stream) (i32.const 1))) (i32.const LAST)))))
 
-  ;; Unpacks each stream of instructions until it has 64 kB in stock: more than the longest function and what is joined before
+  ;; Unpacks each stream of instructions until it has 128 kB in stock: more than the longest function and what is joined before
   ;; this is called again.
   (func $stock
     (local $stream i32) (local $desk i32) (local $to i32) (local $wanted i32)
@@ -264,7 +264,7 @@
       (local.set $to (i32.load offset=8204 (local.get $desk)))
       (local.set $wanted (i32.add
         (i32.load offset=8448 (i32.shl (local.get $stream) (i32.const 2)))
-        (i32.const 65536)))
+        (i32.const 131072)))
       (if (i32.and
             (i32.lt_u (local.get $to) (i32.load offset=8232 (local.get $desk)))
             (i32.lt_u (local.get $to) (local.get $wanted)))
