@@ -190,10 +190,12 @@ impl Reader {
 }
 
 fn row(brief: &Brief<'_>, route: &str) -> Vec<String> {
-    let show = |v: f64| brief.figure.measure.shown(v);
-    let (low, high) = brief
-        .drawn
-        .map_or(("not known".to_owned(), String::new()), |s| (show(s.symmetric.low), show(s.symmetric.high)));
+    let limits = brief.drawn.map_or((0.0, 0.0), |s| (s.symmetric.low, s.symmetric.high));
+    let show = |v: f64| brief.figure.measure.shown_within(v, limits);
+    let (low, high) = match brief.drawn {
+        Some(_) => (show(limits.0), show(limits.1)),
+        None => ("not known".to_owned(), String::new()),
+    };
     vec![
         sentence(&brief.figure.title),
         route.to_owned(),
