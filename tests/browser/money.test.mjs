@@ -39,6 +39,7 @@ test("prices, hours, climate, seed, time and permission are typed on the page; t
   await page.getByLabel("Years of a case").fill("5");
   await fold(page, "Hours of instruments");
   await page.getByLabel(/^Hours of a year with someone there/).fill("1750 h");
+  await page.getByLabel(/^Further hours in which instruments/).fill("4200 h");
   await fold(page, "Climate");
   await row("Share that is burnt", 1, "stream", "flammable", "100 %");
   await page.getByLabel("Warming potentials of").selectOption("AR5");
@@ -67,6 +68,7 @@ test("prices, hours, climate, seed, time and permission are typed on the page; t
   assert.deepEqual(await axeFindings(page), []);
   // One step back: the case is another one.
   await undo.click();
+  await settled(page);
   await caughtUp(page);
   assert.match(await page.locator("#cost").innerText(), /Small flask in place of Large flask: nothing has to be paid back/);
   assertQuiet(seen);

@@ -37,6 +37,8 @@ fn inputs(route: &RouteProgram, account: &RouteAccount) -> Inputs {
                 Class::Water => i.water_kg += kg,
                 _ => i.reagents_kg += kg,
             },
+            // What filling pushes out of a container was counted when it came there.
+            from if from.stream_index().is_some() && !water => waste_kg -= kg,
             _ => {}
         }
         match p.to {

@@ -143,6 +143,8 @@ impl Chance {
                 area: c.maybe(Self::text),
                 counted: c.maybe(Self::text),
                 goes_round: c.maybe(Self::text),
+                saturation: c.maybe(Self::text),
+                vented_to: c.maybe(Self::text),
             }),
             activity: self.maybe(Self::text),
             other_waste: self.list(3, |c| OtherWaste {

@@ -11,6 +11,8 @@
 mod cases;
 mod circuit;
 mod declared;
+mod diffusion;
+mod filling;
 mod posted;
 mod staged;
 mod trade;

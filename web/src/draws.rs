@@ -91,6 +91,25 @@ pub(crate) fn in_turns(piece: &mut dyn FnMut() -> bool) -> bool {
     true
 }
 
+/// What was drawn last, and of which run and choice.
+pub(crate) type Kept = RefCell<(u64, String, Html)>;
+
+/// Draws again only for another run or choice; a run that has turned to another plan leaves what stands.
+pub(crate) fn kept(
+    last: &Kept,
+    draws: &Draws,
+    chosen: &str,
+    draw: &dyn Fn(&Sampled) -> Option<Html>,
+) -> Html {
+    let mut last = last.borrow_mut();
+    if (last.0, last.1.as_str()) != (draws.generation, chosen)
+        && let Some(html) = draws.run().and_then(|run| draw(&run))
+    {
+        *last = (draws.generation, chosen.to_owned(), html);
+    }
+    last.2.clone()
+}
+
 /// What is drawn: said before the first run, dimmed until it has caught up. `of` are the figures that it is of.
 pub(crate) fn follows(of: Option<&ByRc<Book>>, book: &ByRc<Book>, html: Html) -> Html {
     let Some(of) = of else { return html! { <p class="hint">{ "Being drawn …" }</p> } };

@@ -1,7 +1,7 @@
 //! `case`: the paper for finance and quality.
 
 use crate::input;
-use crate::odds::{coverage, draw};
+use crate::odds::{INTERRUPTED, coverage, draw};
 use crate::output::{Refusal, complain_of, deliver};
 use std::path::PathBuf;
 use std::process::ExitCode;
@@ -33,6 +33,7 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
         complain_of(&account.problems);
         return Err(Refusal::Said);
     }
+    let mut ended = false;
     let text = match &args.since {
         Some(older) => {
             let old = input::account(older)?;
@@ -42,9 +43,13 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
             }
             since_markdown(&old, &account)
         }
-        None => case_markdown(&account, &draw(&account, args.draws, &headline)?.0, coverage),
+        None => {
+            let (sampled, early) = draw(&account, args.draws, &headline)?;
+            ended = early;
+            case_markdown(&account, &sampled, coverage)
+        }
     };
     deliver(&text, args.output.as_deref(), &args.plan)?;
     complain_of(&account.problems);
-    Ok(ExitCode::SUCCESS)
+    Ok(if ended { ExitCode::from(INTERRUPTED) } else { ExitCode::SUCCESS })
 }

@@ -76,6 +76,45 @@ impl Measure {
         }
     }
 
+    /// An amount of an interval, its middle or a limit, for people: as [`Measure::shown`], without the digits that the
+    /// interval leaves open.
+    ///
+    /// ```
+    /// use thimbleworth::account::Measure;
+    /// let shown = [54.65, 39.91, 69.31].map(|kg| Measure::Mass.shown_within(kg, (39.91, 69.31)));
+    /// assert_eq!(shown, ["55 kg", "40 kg", "69 kg"]);
+    /// ```
+    #[must_use]
+    pub fn shown_within(self, value_si: f64, (low_si, high_si): (f64, f64)) -> String {
+        self.shown(self.rounded(value_si, (high_si - low_si) / 2.0))
+    }
+
+    /// A value beside its uncertainty: rounded to the place of the second significant digit of the half width of its
+    /// interval, so that no digit is shown that the interval leaves open. As it is where there is no width. Source: JCGM
+    /// 100:2008, 7.2.6 (from memory).
+    fn rounded(self, value_si: f64, half_width_si: f64) -> f64 {
+        // Below a tenth of a kilowatt hour energies are shown in joules.
+        let factor = if self == Self::Energy && value_si.abs() < 3.6e5 { 1.0 } else { self.written().1 };
+        let width = half_width_si * factor;
+        if !(width.is_finite() && width > 0.0) {
+            return value_si;
+        }
+        let mut steps = value_si * factor;
+        let (mut width, mut tens) = (width, 0_i32);
+        // 9.95 would round to 10 and has its second digit there.
+        while width >= 99.5 {
+            (width, steps, tens) = (width / 10.0, steps / 10.0, tens + 1);
+        }
+        while width < 9.95 && tens > -30 {
+            (width, steps, tens) = (width * 10.0, steps * 10.0, tens - 1);
+        }
+        let mut value = libm::rint(steps);
+        for _ in 0..tens.abs() {
+            value = if tens > 0 { value * 10.0 } else { value / 10.0 };
+        }
+        value / factor
+    }
+
     /// Whether a figure grows with the amount of work.
     #[must_use]
     pub const fn extensive(self) -> bool {
@@ -470,4 +509,30 @@ fn value(figure: &Figure, desk: &Desk, x: Draw<'_>, out: &[f64]) -> f64 {
     };
     // A negative zero is a zero.
     value + 0.0
+}
+
+#[cfg(test)]
+mod tests {
+    use super::Measure;
+
+    #[test]
+    fn what_is_rounded_beside_its_uncertainty_keeps_two_digits_of_it() {
+        for (value, width, expected) in [
+            (9_507.0, 1_516.0, 9_500.0),
+            (12_345.0, 994.9, 12_340.0),
+            (12_345.0, 996.0, 12_300.0),
+            (0.012_345_6, 0.000_123_4, 0.012_35),
+            (-39_430.0, 50_000.0, -39_000.0),
+            (0.125, 0.5, 0.12),
+            (7.0, f64::NAN, 7.0),
+            (7.0, f64::INFINITY, 7.0),
+            (0.0, 3.0, 0.0),
+        ] {
+            let rounded = Measure::Mass.rounded(value, width);
+            assert!((rounded - expected).abs() <= 1e-12 * value.abs(), "{value} ± {width}: {rounded}");
+        }
+        // In kilowatt hours, as they are shown.
+        let (kwh, width) = (9_507.3 * 3.6e6, 1_516.0 * 3.6e6);
+        assert_eq!(Measure::Energy.shown(Measure::Energy.rounded(kwh, width)), "9500 kWh");
+    }
 }

@@ -4,6 +4,7 @@
 //! postings behind it, and the same figure can be evaluated for any draw.
 
 mod air;
+mod batch;
 mod carbon_dioxide;
 mod climate;
 mod cost;
@@ -20,6 +21,7 @@ mod waste;
 mod working;
 
 pub use air::{AirAccount, AirRelease, Clears, GasInRoom, Held, SHIFT_S, SuddenInRoom};
+pub use batch::{BatchPath, BatchPoint, batch_paths};
 pub use desk::{Headroom, MonthLine, SiteDesk, Standing, StreamDesk, classified, site_desk};
 pub use energy::{StepEnergy, by_step};
 pub use figure::{

@@ -192,7 +192,7 @@ impl Followed {
         let origins = self.charges.len() + 1;
         let (from, to) = (self.row(p.from, p.material.0 as usize), self.row(p.to, p.material.0 as usize));
         let mut moved = vec![0.0; origins];
-        if p.from.on_bench() {
+        if p.from.on_bench() || p.from.stream_index().is_some() {
             let Some(there) = self.kg.get_mut(from).filter(|row| !row.is_empty()) else { return };
             let mut all = 0.0;
             for kg in there.iter() {
@@ -256,8 +256,9 @@ mod tests {
                     for s in &found {
                         let place = Place::stream(s.stream).unwrap();
                         let mut posted = 0.0;
-                        for p in account.trace.postings.iter().filter(|p| p.to == place) {
-                            posted += p.kg_a_year();
+                        for p in &account.trace.postings {
+                            posted += p.kg_a_year()
+                                * (f64::from(u8::from(p.to == place)) - f64::from(u8::from(p.from == place)));
                         }
                         assert!((s.contents.mass_kg() / posted - 1.0).abs() < 1e-9, "{}", example.key);
                         seen += s.contents.charges.len();

@@ -27,6 +27,11 @@ pub enum Contribution {
     },
 }
 
+/// Whether a posting takes something out of a waste stream again, so that it counts against what has passed into it.
+fn left_again(posting: &Posting, place: Place, direction: Direction) -> bool {
+    direction == Direction::Into && posting.from == place && place.stream_index().is_some()
+}
+
 /// What lies behind a figure, largest first; zeros are left out.
 ///
 /// Behind a number of containers lies what is behind its volume; a ratio or a multiple has the figures behind it that
@@ -46,8 +51,9 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
                         Direction::Into => posting.to,
                         Direction::OutOf => posting.from,
                     };
-                    if here == term.place {
-                        let kg = posting.kg_a_year();
+                    let gone = left_again(posting, term.place, term.direction);
+                    if here == term.place || gone {
+                        let kg = posting.kg_a_year() * if gone { -1.0 } else { 1.0 };
                         amount_si += match term.factor {
                             Factor::One => kg,
                             Factor::Minus => -kg,
@@ -79,8 +85,9 @@ pub fn behind(route: &RouteProgram, account: &RouteAccount, figure: &Figure) -> 
                     Entry::Cell(place, direction, material) => {
                         for (index, p) in account.trace.postings.iter().enumerate() {
                             let here = if direction == Direction::Into { p.to } else { p.from };
-                            if here == place && p.material == material && p.kg != 0.0 {
-                                let amount_si = p.kg_a_year() * factor;
+                            let gone = left_again(p, place, direction);
+                            if (here == place || gone) && p.material == material && p.kg != 0.0 {
+                                let amount_si = p.kg_a_year() * if gone { -factor } else { factor };
                                 out.push(Contribution::Posting { index, amount_si });
                             }
                         }

@@ -1,6 +1,9 @@
 //! The bench on which a route runs: the only hand that writes postings.
 
-use super::{Cells, Doubt, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace, Utility};
+use super::{
+    Batch, Cells, Direction, Doubt, Halt, Material, Note, Place, Posting, RuleIx, Spending, StepIx, Trace,
+    Utility,
+};
 use crate::chance::{Draw, In};
 use crate::co2::Memo;
 use crate::co2_loop::Scratch;
@@ -180,6 +183,25 @@ impl<'a> Bench<'a> {
             if let Some(density) = nature.filter(|n| n.volatile).and_then(|n| n.density) {
                 // V = Σ mᵢ / ρᵢ
                 sum += self.there(place, *m) / self.draw.get(density);
+            }
+        }
+        sum
+    }
+
+    /// What has passed into a place outside the bench so far, in a run of the present step's basis; kg.
+    #[must_use]
+    pub fn poured_kg(&self, place: Place, m: Material) -> f64 {
+        self.cells.passed(place, Direction::Into, m) / self.runs_a_year
+    }
+
+    /// The volume of the liquids in it, as [`Bench::liquid_volume_m3`]; m³.
+    #[must_use]
+    pub fn poured_m3(&self, place: Place) -> f64 {
+        let mut sum = 0.0;
+        for (i, nature) in self.natures.iter().enumerate() {
+            if let (true, Some(density)) = (nature.volatile, nature.density) {
+                // V = Σ mᵢ / ρᵢ
+                sum += self.poured_kg(place, Material(index(i))) / self.draw.get(density);
             }
         }
         sum
@@ -556,6 +578,13 @@ impl<'a> Bench<'a> {
     #[must_use]
     pub fn traced(&self) -> bool {
         self.trace.is_some()
+    }
+
+    /// Records a mixture that is taken down; does nothing unless the run is traced.
+    pub(crate) fn takes_down(&mut self, make: impl FnOnce(u16) -> Batch) {
+        if let (StepIx::Step(step), Some(trace)) = (self.step, self.trace.as_deref_mut()) {
+            trace.batches.push(make(step));
+        }
     }
 
     /// Tells the reader of something odd that does not stop the run: `found` with the value behind it, and what would do. Does

@@ -92,6 +92,9 @@ impl Cells {
         let (i, j) = (self.at(from, m), self.at(to, m));
         if from.on_bench() {
             self.bench[i] -= kg;
+        } else if from.stream_index().is_some() {
+            // What leaves a container again has never been waste: what has passed into a stream is net.
+            self.passed[i] -= kg * runs_a_year;
         } else {
             self.passed[self.out_of + i] += kg * runs_a_year;
         }

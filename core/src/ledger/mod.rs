@@ -14,7 +14,7 @@ pub use bench::{Bench, Measured, Nature};
 pub use cells::{Cells, Direction};
 pub use halt::Halt;
 pub use place::{BENCH_PLACES, OUTSIDE_PLACES, Place};
-pub use trace::{Doubt, Note, Posting, Spending, StepIx, Trace};
+pub use trace::{Batch, Doubt, Note, Posting, Spending, StepIx, Trace};
 
 /// A material of one route: the index into that route's own list.
 #[derive(Clone, Copy, Debug, PartialEq, Eq, PartialOrd, Ord)]

@@ -92,6 +92,23 @@ pub struct Spending {
     pub runs_a_year: f64,
 }
 
+/// A liquid mixture that a step takes down, as it lies there before.
+#[derive(Clone, Debug, PartialEq)]
+pub struct Batch {
+    /// The step, by its index in the route.
+    pub step: u16,
+    /// Masses; kg in a run.
+    pub kg: Vec<(Material, f64)>,
+    /// The temperature at which volumes are read; K.
+    pub volumes_at_k: f64,
+    /// Temperature of the liquid; K.
+    pub temperature_k: f64,
+    /// Volume left at the end; m³.
+    pub down_to_m3: f64,
+    /// Whether it boils under a held pressure, so that it grows warmer; else the temperature is held.
+    pub boils: bool,
+}
+
 /// The record of one traced run.
 #[derive(Clone, Debug, Default, PartialEq)]
 pub struct Trace {
@@ -103,6 +120,8 @@ pub struct Trace {
     pub notes: Vec<Note>,
     /// What is odd, as warnings of the account.
     pub doubts: Vec<Doubt>,
+    /// Mixtures taken down.
+    pub batches: Vec<Batch>,
 }
 
 impl Trace {

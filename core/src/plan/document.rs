@@ -192,6 +192,10 @@ pub struct Stream {
     pub counted: Option<String>,
     /// What goes round of a reclaimed stream.
     pub goes_round: Option<String>,
+    /// How far the air that filling pushes out is saturated with vapour; not counted when left out.
+    pub saturation: Option<String>,
+    /// `hood` or `room`: where that air goes.
+    pub vented_to: Option<String>,
 }
 
 /// A material that the plan adds to the catalogue or overrides there.

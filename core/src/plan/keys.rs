@@ -496,6 +496,18 @@ static STREAM: Object = Object {
             r#""20 kg""#,
             "of a reclaimed stream: the mass that goes round, which counts once a month however often it is reclaimed",
         ),
+        may(
+            "saturation",
+            Shape::Amount,
+            r#""1""#,
+            "how far the air that filling pushes out is saturated with vapour, 1 to be cautious; not counted when left out",
+        ),
+        may(
+            "vented_to",
+            Shape::Word(&["hood", "room"]),
+            r#""room""#,
+            "where that air goes; hood when left out",
+        ),
     ],
     fields_after: None,
 };

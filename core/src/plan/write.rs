@@ -174,6 +174,8 @@ fn stream(stream: &Stream) -> Node {
     out.optional("area", stream.area.as_ref());
     out.optional("counted", stream.counted.as_ref());
     out.optional("goes_round", stream.goes_round.as_ref());
+    out.optional("saturation", stream.saturation.as_ref());
+    out.optional("vented_to", stream.vented_to.as_ref());
     out.into()
 }
 
@@ -323,6 +325,8 @@ mod tests {
                     area: some("satellite"),
                     counted: some("reclaimed"),
                     goes_round: some("20 kg"),
+                    saturation: some("1"),
+                    vented_to: some("room"),
                 }],
                 activity: some("food"),
                 other_waste: vec![OtherWaste {

@@ -17,7 +17,7 @@ mod waste;
 mod work;
 
 pub use asked::asked;
-pub use book::{BOOK_RULES, PLACED, PLACED_BY_DEFAULT, TAKEN_IN};
+pub use book::{BOOK_RULES, PLACED, PLACED_BY_DEFAULT, PUSHED_OUT, TAKEN_IN};
 pub use climate::ClimateUse;
 pub use declared::{Fields, ROUTE_FIELDS, SITE_FIELDS};
 pub use materials::{MaterialBook, MaterialUse, OWN_FIELDS};
@@ -34,7 +34,7 @@ use crate::chance::In;
 use crate::chance::Input;
 use crate::ledger::{BENCH_PLACES, Material, Measured, Nature, Place};
 use crate::source::Source;
-use crate::step::{Step, Technique};
+use crate::step::{Filling, Step, Technique};
 
 /// A plan that can run.
 pub struct Program {
@@ -140,6 +140,7 @@ pub struct RouteProgram {
     pub uncounted: Vec<String>,
     /// How many streams the site has.
     pub streams: usize,
+    pub(crate) filling: Option<Filling>,
 }
 
 /// One step of a route, ready to run.

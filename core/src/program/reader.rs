@@ -47,6 +47,18 @@ impl<'r, 'p> Reader<'r, 'p> {
         Self { route, technique, doc, path, asked: Vec::new() }
     }
 
+    /// For what no step declares: materials and their figures alone.
+    pub(super) fn of_the_book(route: &'r mut RouteBuilder<'p>) -> Self {
+        static NO_STEP: StepDoc = StepDoc {
+            technique: String::new(),
+            per: None,
+            fields: Vec::new(),
+            measured: Vec::new(),
+            note: None,
+        };
+        Self::new(route, crate::step::TECHNIQUES[0], &NO_STEP, String::new())
+    }
+
     fn at(&self, key: &str) -> String {
         below(&self.path, key)
     }

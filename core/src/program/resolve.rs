@@ -14,7 +14,7 @@ use crate::order::Index;
 use crate::plan::{Field, Plan, Problem, Route, Severity, Site, Stream, Workload, below, nearest};
 use crate::quantity::{Amount, Kind, Origin, ShareBy, Spread, read, show};
 use crate::source::{DEFINITION, Source};
-use crate::step::{TECHNIQUES, technique};
+use crate::step::{Container, Filling, TECHNIQUES, technique};
 
 /// The most materials that one route may use: an index fits in 16 bits, and a plan with more has gone wrong.
 const MOST_MATERIALS: usize = 500;
@@ -178,6 +178,19 @@ fn stream(doc: &Stream, path: &str, problems: &mut Vec<Problem>) -> StreamUse {
             format!("\"{treatment}\""),
             format!("one of: {}", TREATMENTS.join(", ")),
         ));
+    }
+    if let Some(text) = doc.saturation.as_deref() {
+        let s = amount(Some(text), "1", Kind::Number, &below(path, "saturation"), problems);
+        if !(0.0..=2.0).contains(&s) {
+            problems.push(Problem::error(
+                below(path, "saturation"),
+                format!("\"{text}\""),
+                "a number from 0 (closed while it is filled) over 1 (saturated) to 2",
+            ));
+        }
+    }
+    if let Some(other) = doc.vented_to.as_deref().filter(|w| !["hood", "room"].contains(w)) {
+        problems.push(Problem::error(below(path, "vented_to"), format!("\"{other}\""), "hood or room"));
     }
     let container_m3 = doc
         .container
@@ -576,6 +589,7 @@ impl<'p> RouteBuilder<'p> {
         let time = self.time(site, doc, path);
         let money = self.money(site, doc, path);
         let climate = self.climate(site);
+        let filling = self.filling(site);
         let natures = self
             .materials
             .iter()
@@ -606,7 +620,27 @@ impl<'p> RouteBuilder<'p> {
             assumptions: self.assumptions,
             uncounted: self.uncounted,
             streams: self.site.streams.len(),
+            filling,
         }
+    }
+
+    /// The containers whose filling is counted: those of liquid streams of which the plan says how far what leaves is saturated.
+    fn filling(&mut self, site: &Site) -> Option<Filling> {
+        let mut containers = Vec::new();
+        for (i, doc) in site.streams.iter().enumerate() {
+            let Some(stream) = Place::stream(i).filter(|_| doc.holds.as_deref() != Some("solid")) else {
+                continue;
+            };
+            let path = format!("site.streams[{i}].saturation");
+            let Some(saturation) = self.read_optional(doc.saturation.as_deref(), Kind::Number, &path) else {
+                continue;
+            };
+            if self.value(saturation) > 0.0 {
+                let air = if doc.vented_to.as_deref() == Some("room") { Place::ROOM } else { Place::HOOD };
+                containers.push(Container { stream, saturation, air });
+            }
+        }
+        Filling::read(&mut Reader::of_the_book(self), containers)
     }
 
     /// The name under which the book shows a material.

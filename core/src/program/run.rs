@@ -1,6 +1,6 @@
 //! Running a route: one code path for the single traced run and for every draw.
 
-use super::{PLACED, PLACED_BY_DEFAULT, RouteProgram, Runs, TAKEN_IN};
+use super::{PLACED, PLACED_BY_DEFAULT, PUSHED_OUT, RouteProgram, Runs, TAKEN_IN};
 use crate::chance::Draw;
 use crate::co2_loop::Scratch;
 use crate::ledger::{BENCH_PLACES, Bench, Cells, Halt, Place, StepIx, Trace, Utility};
@@ -76,7 +76,7 @@ impl RouteProgram {
             b.turn_to(ix, runs.of(step.basis), &step.measured).map_err(at(ix))?;
             step.step.run(x, &mut b).map_err(at(ix))?;
         }
-        let by_default_kg = self.close(&mut b).map_err(at(StepIx::Closing))?;
+        let by_default_kg = self.close(x, &mut b).map_err(at(StepIx::Closing))?;
         desk.longer = b.longer();
         desk.placed_by_default_kg = by_default_kg;
         Ok(())
@@ -93,7 +93,7 @@ impl RouteProgram {
         Ok(())
     }
 
-    fn close(&self, b: &mut Bench<'_>) -> Result<[f64; BENCH_PLACES], Halt> {
+    fn close(&self, x: Draw<'_>, b: &mut Bench<'_>) -> Result<[f64; BENCH_PLACES], Halt> {
         b.at_close();
         let mut by_default_kg = [0.0; BENCH_PLACES];
         for (i, place) in Place::BENCH.into_iter().enumerate() {
@@ -109,6 +109,9 @@ impl RouteProgram {
                     }
                 }
             }
+        }
+        if let Some(filling) = &self.filling {
+            filling.run(x, b, PUSHED_OUT)?;
         }
         Ok(by_default_kg)
     }

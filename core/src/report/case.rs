@@ -233,11 +233,12 @@ fn headlines(
         if nothing(before) && nothing(after) {
             continue;
         }
-        let show = |v: f64| figure.measure.shown(v);
-        let central = |s: Option<Spreading>| s.map_or_else(|| "none".to_owned(), |s| show(s.central));
-        let drawn = after.and_then(|s| s.drawn);
-        let (low, high) =
-            drawn.map_or((String::new(), String::new()), |s| (show(s.symmetric.low), show(s.symmetric.high)));
+        let limits = |s: Spreading| s.drawn.map_or((0.0, 0.0), |s| (s.symmetric.low, s.symmetric.high));
+        let show = |v: f64, s: Spreading| figure.measure.shown_within(v, limits(s));
+        let central = |s: Option<Spreading>| s.map_or_else(|| "none".to_owned(), |s| show(s.central, s));
+        let (low, high) = after
+            .filter(|s| s.drawn.is_some())
+            .map_or((String::new(), String::new()), |s| (show(limits(s).0, s), show(limits(s).1, s)));
         let odds = figure
             .rivals
             .iter()

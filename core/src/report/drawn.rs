@@ -1,5 +1,6 @@
 //! A sampled run beside an account: the interval of each figure for reports that show central values.
 
+use crate::account::Measure;
 use crate::chance::Summary;
 use crate::odds::{RouteColumns, Sampled};
 
@@ -33,10 +34,13 @@ impl<'a> Spreads<'a> {
     }
 
     /// Lower and upper limit in words; "not known" for the first where there are draws, but no interval.
-    pub(super) fn limits(self, id: &str, show: impl Fn(f64) -> String) -> [String; 2] {
+    pub(super) fn limits(self, id: &str, measure: Measure) -> [String; 2] {
         self.get(id).map_or_else(
             || ["not known".to_owned(), String::new()],
-            |s| [show(s.symmetric.low), show(s.symmetric.high)],
+            |s| {
+                let limits = (s.symmetric.low, s.symmetric.high);
+                [limits.0, limits.1].map(|limit| measure.shown_within(limit, limits))
+            },
         )
     }
 }

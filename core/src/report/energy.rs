@@ -1,7 +1,8 @@
 //! Energy by step, and the CO2 circuits state by state, as tables for report, terminal and page.
 
+use super::batch::batch_sheet;
 use super::words::amount;
-use crate::account::{Measure, RouteAccount, by_step};
+use crate::account::{Measure, RouteAccount, batch_paths, by_step};
 use crate::co2::Phases;
 use crate::co2_loop::{Leg, SOURCE};
 use crate::dense_gas::need::Curve;
@@ -41,7 +42,7 @@ impl Sheet {
     }
 }
 
-/// The tables of a route's energy: each step by kind, then each circuit of CO2 by state. Empty where nothing is known.
+/// The tables of a route's energy: each step by kind, then each circuit of CO2 by state and each mixture on its way down. Empty where nothing is known.
 ///
 /// ```
 /// use thimbleworth::{account::account_text, example::EXAMPLES, report::energy_sheets};
@@ -112,6 +113,9 @@ pub fn energy_sheets(route: &RouteProgram, account: &RouteAccount) -> Vec<Sheet>
             let title = format!("CO2 for the recovery: {name}");
             sheets.push(need_sheet(title, study, Some(here), dense.window.as_ref()));
         }
+    }
+    for path in batch_paths(route, account) {
+        sheets.push(batch_sheet(&step_name(route, path.step), &path));
     }
     sheets
 }

@@ -133,7 +133,7 @@ fn route_account(
         for (figure, a_year) in rows {
             let mut cells = vec![escaped(&figure.title)];
             let shown = |value| amount(value, figure.measure);
-            let limits = spreads.there().then(|| spreads.limits(&figure.id, shown));
+            let limits = spreads.there().then(|| spreads.limits(&figure.id, figure.measure));
             if figure.measure.extensive() {
                 cells.extend(
                     [account.per_result(a_year), account.per_batch(a_year), a_year / MONTHS, a_year]

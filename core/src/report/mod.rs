@@ -18,6 +18,7 @@
 //! The same account gives the same bytes everywhere: numbers for programs are the shortest text that reads back, keys
 //! stand in their declared order.
 mod air;
+mod batch;
 mod case;
 mod csv;
 mod data_table;

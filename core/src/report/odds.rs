@@ -3,7 +3,7 @@
 use super::grid::{Grid, paragraph};
 use super::json::Json;
 use super::row::{PROGRAM, written, yearly};
-use super::words::{amount, visible};
+use super::words::visible;
 use crate::account::{Account, Measure};
 use crate::chance::{Summary, identity_key};
 use crate::ledger::StepIx;
@@ -79,13 +79,15 @@ pub(super) fn draws_words(sampled: &Sampled) -> String {
 fn rows(grid: &mut Grid, work: &WorkloadProgram, figure: &FigureReading) {
     for (r, spread) in figure.routes.iter().enumerate() {
         let Some(spread) = spread else { continue };
-        let show = |value: f64| amount(value, figure.measure);
+        let limits = spread.drawn.map_or((0.0, 0.0), |s| (s.symmetric.low, s.symmetric.high));
+        let show = |value: f64| figure.measure.shown_within(value, limits);
+        let u = |value: f64| figure.measure.shown_within(value, (-value, value));
         let present = if r == work.present { " (present)" } else { "" };
         let mut cells = vec![format!("  {}{present}", visible(&work.routes[r].name)), show(spread.central)];
         match spread.drawn {
             Some(s) => {
-                let first = spread.first_order_u.map_or_else(|| "-".to_owned(), show);
-                cells.extend([show(s.symmetric.low), show(s.symmetric.high), show(s.u), first]);
+                let first = spread.first_order_u.map_or_else(|| "-".to_owned(), u);
+                cells.extend([show(limits.0), show(limits.1), u(s.u), first]);
             }
             None => cells.extend(["not known", "", "", ""].map(str::to_owned)),
         }

@@ -181,7 +181,7 @@ fn route_account(
 
 fn limits(cells: &mut Vec<String>, figure: &Figure, spreads: Spreads<'_>) {
     if spreads.there() {
-        cells.extend(spreads.limits(&figure.id, |value| amount(value, figure.measure)));
+        cells.extend(spreads.limits(&figure.id, figure.measure));
     }
 }
 

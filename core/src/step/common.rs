@@ -13,6 +13,15 @@ pub(super) const METER_K: f64 = 298.15;
 /// Nitrogen at 25 °C and 101 325 Pa as an ideal gas: ρ = p M / (R T); kg/m³.
 pub(super) const NITROGEN_KG_M3: f64 = AIR_PA * 0.028_013_4 / (8.314_462_618 * METER_K);
 
+/// No usual solvent takes less heat to warm, from memory: tetrachloroethylene about 860, chloroform 960, hexane 2260; J/(kg K).
+const LEAST_HEAT_CAPACITY_J_KG_K: f64 = 800.0;
+
+/// The least heat that warms a liquid; J. 0 where it is not warmed.
+pub(super) fn least_warming_j(kg: f64, from_k: f64, to_k: f64) -> f64 {
+    // Q ≥ m c ΔT
+    if to_k > from_k { kg * LEAST_HEAT_CAPACITY_J_KG_K * (to_k - from_k) } else { 0.0 }
+}
+
 /// The solvent of an extraction.
 pub(super) const SOLVENT: Param = Param::new("solvent", "Solvent", Control::Mixture)
     .required()
@@ -196,7 +205,7 @@ impl Open {
     pub(super) fn read(r: &mut Reader<'_, '_>, surface: &'static Param) -> Option<Self> {
         let (surface, temperature) = (r.optional(surface), r.optional(&WARM));
         let (surface, temperature) = surface.zip(temperature)?;
-        let vapours = Vapours::read(r, Some(temperature));
+        let vapours = Vapours::read(r, Some(r.value(temperature)));
         vapours.warn_unknown(r, "surface");
         Some(Self { vapours, surface, temperature })
     }

@@ -187,7 +187,7 @@ fn read(r: &mut Reader<'_, '_>) -> Box<dyn Step> {
     };
     let lost_to = r.place(&LOST_TO);
     let gas = flow.and_then(|flow| r.known("nitrogen").map(|m| (m, flow)));
-    let vapours = Vapours::read(r, Some(temperature));
+    let vapours = Vapours::read(r, Some(r.value(temperature)));
     vapours.warn_unknown(r, "to");
     Box::new(Concentrate {
         to,
@@ -224,6 +224,7 @@ impl Step for Concentrate {
         let share_left = if there_m3 > 0.0 { wanted_m3 / there_m3 } else { 1.0 };
         // What cannot be reckoned with leaves in proportion, and takes its part of the volume.
         let known_m3 = wanted_m3 - share_left * v.other_m3(b, Place::LIQUOR);
+        v.note_way_down(b, &there, (temperature_k, known_m3), false);
         let down = v.take_down(x, &there, known_m3, temperature_k)?;
         let time_s = self.time.map(|t| self.enough_s(x, b, x.get(t), &down)).transpose()?;
         if let Some(time_s) = time_s {

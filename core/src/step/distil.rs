@@ -120,7 +120,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             );
         }
         let (coolant, draught, time) = (r.optional(&STILL_COOLANT), r.optional(&DRAUGHT), r.optional(&TIME));
-        let vapours = Vapours::read(r, coolant);
+        let vapours = Vapours::read(r, coolant.map(|t| r.value(t)));
         vapours.warn_unknown(r, "to");
         Box::new(Distil {
             to: r.quantity(&TO),
@@ -170,6 +170,7 @@ impl Step for Distil {
         }
         let charged = self.vapours.lying(b, Place::LIQUOR);
         self.vapours.tell(b, &charged, BOILED);
+        self.vapours.note_way_down(b, &charged, (x.get(self.temperature), left_m3), true);
         let mut gone = [0.0; super::LARGEST];
         if let Some((_, to)) = self.forerun {
             self.boil(x, b, there_m3 - first_m3, &mut gone)?;

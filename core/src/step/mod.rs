@@ -11,6 +11,7 @@ mod dense;
 mod discard;
 mod distil;
 mod dry;
+mod filling;
 mod impregnate;
 mod liquid_liquid;
 mod microwave;
@@ -27,6 +28,7 @@ mod vapours;
 pub use caution::Caution;
 pub use declare::{Control, Measurable, Need, Param, Rule};
 pub use dense::{DenseCo2, Metered};
+pub(crate) use filling::{Container, Filling};
 pub use mixture::{LARGEST, Mixture, Part};
 pub use solid_phase::Poured;
 

@@ -1,7 +1,9 @@
 //! Pressurised liquid extraction: the cell's void filled hot, flushed, blown out with gas.
 
 use super::caution::{HEATED_FLAMMABLE, PRESSURE_VESSEL};
-use super::common::{EXTRACTS, METER_K, NITROGEN_KG_M3, SOLVENT, held_by_marc, loss, lost_to, power, time};
+use super::common::{
+    EXTRACTS, METER_K, NITROGEN_KG_M3, SOLVENT, held_by_marc, least_warming_j, loss, lost_to, power, time,
+};
 use super::vapours::Vapours;
 use super::{Control, Group, Mixture, Param, Rule, Step, Technique};
 use crate::chance::{Draw, In};
@@ -130,7 +132,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
         )
         .measurable(),
         Rule::new("held in the marc", "mᵢ = (h m_marc / V_liquor) mᵢ(liquor)", FROM_MEMORY).measurable(),
-        Rule::new("heating and pumping", "W = P t", DEFINITION).metered(),
+        Rule::new("heating and pumping", "W = P t, no less than m c ΔT", DEFINITION).metered(),
         Rule::new("purge gas", "m = V p M / (R T), 25 °C and 1 atm", DEFINITION),
     ],
     cautions: &[PRESSURE_VESSEL, HEATED_FLAMMABLE],
@@ -214,7 +216,9 @@ impl Step for PressurisedLiquid {
                 x.get(self.cell) * (x.get(self.void) * lighter + x.get(self.flush)) + lines_m3
             }
         };
+        let before_kg = b.mass_kg(Place::LIQUOR);
         self.solvent.charge(x, b, Place::LIQUOR, volume_m3, CHARGED)?;
+        let solvent_kg = b.mass_kg(Place::LIQUOR) - before_kg;
         super::extract(x, b, &self.extracts, Place::MARC, Place::LIQUOR, EXTRACTED)?;
         let time_s = self.time.map(|t| x.get(t));
         if let Some(time_s) = time_s {
@@ -241,7 +245,16 @@ impl Step for PressurisedLiquid {
             b.share_volatile(Place::LIQUOR, self.lost_to, loss, LOST)?;
         }
         super::hold_up(b, x.get(self.hold_up), marc_kg, HELD)?;
-        super::electricity(x, b, self.power, time_s, None, HEATED);
+        let floor_j = match self.temperature {
+            Some(t) if volume_m3 > 0.0 => {
+                // At the least what fills the cell once is warmed: V_cell ε ρ_hot / ρ_cold of the volume charged.
+                let once = x.get(self.cell) * x.get(self.void) * self.lighter(x)? / volume_m3;
+                let once = if once < 1.0 { once } else { 1.0 };
+                Some(least_warming_j(once * solvent_kg, self.bench_k, x.get(t)))
+            }
+            _ => None,
+        };
+        super::electricity(x, b, self.power, time_s, floor_j, HEATED);
         Ok(())
     }
 }

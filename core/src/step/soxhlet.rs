@@ -119,7 +119,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             r.problem("siphon", "cycles without the volume siphoned", "its volume, such as \"85 mL\"");
         }
         let charge = r.quantity(&CHARGE);
-        let vapours = Vapours::read(r, coolant);
+        let vapours = Vapours::read(r, coolant.map(|t| r.value(t)));
         if coolant.is_some() {
             vapours.warn_unknown(r, "coolant");
         }

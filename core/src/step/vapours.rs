@@ -3,8 +3,8 @@
 
 use crate::chance::{Draw, In};
 use crate::emission::{OpenSurface, Vapour, open_surface_kg_s, sweep};
-use crate::ledger::{Bench, Halt, Material, Place, RuleIx};
-use crate::material::{Class, Law, Substance};
+use crate::ledger::{Batch, Bench, Halt, Material, Place, RuleIx};
+use crate::material::{Class, Law, Solubility, Substance};
 use crate::mixture::{Held, LARGEST, Lambda, PairLaw, Pairs, PerComponent, find_pair, ideal_error};
 use crate::program::Reader;
 use crate::quantity::Kind;
@@ -33,6 +33,7 @@ pub(super) struct Vapours {
     unknown: Vec<Material>,
     gases: Vec<Material>,
     ready: Option<Box<Ready>>,
+    volumes_at_k: f64,
 }
 
 /// What follows from the temperature alone, at the one that most draws ask for.
@@ -61,9 +62,9 @@ impl Ready {
 pub(super) type Masses = PerComponent;
 
 impl Vapours {
-    /// All that can evaporate of what the route has met so far: what later steps bring cannot lie there yet. `at` is the temperature
-    /// at which it will be asked for, as a rule the same one in every draw.
-    pub(super) fn read(r: &mut Reader<'_, '_>, at: Option<In>) -> Self {
+    /// All that can evaporate of what the route has met so far: what later steps bring cannot lie there yet. `at_k` is the temperature
+    /// at which it will be asked for, as a rule the same one in every draw; K.
+    pub(super) fn read(r: &mut Reader<'_, '_>, at_k: Option<f64>) -> Self {
         let (mut rows, mut unknown, mut gases): (Vec<Row>, Vec<Material>, Vec<Material>) = Default::default();
         for i in 0..r.materials_so_far() {
             let Ok(i) = u16::try_from(i) else { break };
@@ -105,8 +106,8 @@ impl Vapours {
                 }
             }
         }
-        let ready = at.zip(pairs.as_ref()).and_then(|(at, pairs)| Ready::new(&rows, pairs, r.value(at)));
-        Self { rows, pairs, splits, unknown, gases, ready }
+        let ready = at_k.zip(pairs.as_ref()).and_then(|(at_k, pairs)| Ready::new(&rows, pairs, at_k));
+        Self { rows, pairs, splits, unknown, gases, ready, volumes_at_k: r.bench_temperature_k() }
     }
 
     /// Warns of what is volatile and cannot be reckoned with.
@@ -222,6 +223,15 @@ impl Vapours {
         kg
     }
 
+    /// What of them a year has brought into a stream, in a run of the present basis; kg.
+    pub(super) fn poured(&self, b: &Bench<'_>, stream: Place) -> Masses {
+        let mut kg = [0.0; LARGEST];
+        for (kg, row) in kg.iter_mut().zip(&self.rows) {
+            *kg = b.poured_kg(stream, row.material);
+        }
+        kg
+    }
+
     /// The masses as a mixture at a temperature: which rows are there, their amounts in mol, and the mixture.
     fn held(&self, x: Draw<'_>, kg: &Masses, temperature_k: f64) -> Result<Option<Warm>, Halt> {
         let (mut which, mut count) = ([0; LARGEST], 0);
@@ -272,6 +282,40 @@ impl Vapours {
             let pressures = warm.held.partial_pressures_pa(&warm.n[..warm.count]);
             for (i, pressure) in warm.which.iter().zip(pressures).take(warm.count) {
                 out[*i].partial_pressure_pa = pressure;
+            }
+        }
+        Ok(out)
+    }
+
+    /// How far water is saturated with another liquid, 0 to 1; 1 where its solubility is not known.
+    fn saturated(&self, kg: &Masses, other: usize, water: usize) -> f64 {
+        let (other_row, water_row) = (&self.rows[other], &self.rows[water]);
+        match (&other_row.substance.solubility_in_water, water_row.substance.class) {
+            (Solubility::Limited(figure), Class::Water) => {
+                // m/(c_sat V_water), 1000 kg in a m³ of water
+                let share = kg[other] / (figure.value * kg[water] / 1000.0);
+                if share < 1.0 { share } else { 1.0 }
+            }
+            _ => 1.0,
+        }
+    }
+
+    /// As [`Vapours::over`], where liquids that do not mix lie in layers, each as if it were alone, and what is dissolved in water
+    /// has its part of that pressure: an upper limit.
+    pub(super) fn over_layers(
+        &self,
+        x: Draw<'_>,
+        kg: &Masses,
+        temperature_k: f64,
+    ) -> Result<[Vapour; LARGEST], Halt> {
+        let mut out = self.over(x, kg, temperature_k)?;
+        for &(i, j) in self.splits.iter().filter(|(i, j)| kg[*i] > 0.0 && kg[*j] > 0.0) {
+            for (i, beside) in [(i, j), (j, i)] {
+                let mut alone = [0.0; LARGEST];
+                alone[i] = kg[i];
+                out[i] = self.over(x, &alone, temperature_k)?[i];
+                // pᵢ = (m/m_sat) Pᵢ,sat
+                out[i].partial_pressure_pa *= self.saturated(kg, i, beside);
             }
         }
         Ok(out)
@@ -338,6 +382,21 @@ impl Vapours {
             }
         }
         most.map(|(i, _)| &*self.rows[i].substance)
+    }
+
+    /// Records that masses are taken down at a temperature, K, to a volume, m³; `boils` under a held pressure.
+    pub(super) fn note_way_down(
+        &self,
+        b: &mut Bench<'_>,
+        kg: &Masses,
+        (temperature_k, down_to_m3): (f64, f64),
+        boils: bool,
+    ) {
+        b.takes_down(|step| {
+            let (parts, count) = self.parts(kg);
+            let kg = parts[..count].to_vec();
+            Batch { step, kg, volumes_at_k: self.volumes_at_k, temperature_k, down_to_m3, boils }
+        });
     }
 
     /// Pairs the masses by material, for the bench.

@@ -133,6 +133,8 @@ fn at_site(site: &mut Site, keys: &[&str], value: Option<Field>) -> Option<()> {
                 "density_mark" => stream.density_mark = value,
                 "area" => stream.area = words(value),
                 "counted" => stream.counted = words(value),
+                "saturation" => stream.saturation = words(value),
+                "vented_to" => stream.vented_to = words(value),
                 "goes_round" => stream.goes_round = words(value),
                 _ => return None,
             }
@@ -273,6 +275,8 @@ mod tests {
             "site.streams[0].area",
             "site.streams[0].counted",
             "site.streams[0].goes_round",
+            "site.streams[0].saturation",
+            "site.streams[0].vented_to",
             "site.activity",
             "site.storage_limit",
             "site.pick_up_every",

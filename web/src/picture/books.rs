@@ -136,6 +136,12 @@ pub(super) fn into_places(account: &RouteAccount) -> Vec<(Place, f64)> {
     let mut found: Vec<(Place, f64)> = Vec::new();
     for posting in &account.trace.postings {
         let kg = posting.kg_a_year();
+        // Pushed out of a container again by filling: it has not stayed there.
+        if let Some((_, sum)) =
+            found.iter_mut().find(|(p, _)| p.stream_index().is_some() && *p == posting.from)
+        {
+            *sum -= kg;
+        }
         if posting.to.on_bench() || !(kg > 0.0 && kg.is_finite()) {
             continue;
         }

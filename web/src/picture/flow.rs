@@ -58,8 +58,12 @@ pub fn flow(key: &str, account: &Account, workload: usize, route: usize, per: Pe
     for (s, (material, ..)) in came.iter().enumerate() {
         for (e, (place, _)) in places.iter().enumerate() {
             let mut kg = 0.0;
-            for p in book.trace.postings.iter().filter(|p| p.to == *place && p.material == *material) {
-                kg += p.kg_a_year();
+            for p in book.trace.postings.iter().filter(|p| p.material == *material) {
+                if p.to == *place {
+                    kg += p.kg_a_year();
+                } else if p.from == *place && place.stream_index().is_some() {
+                    kg -= p.kg_a_year();
+                }
             }
             if kg > 0.0 && kg.is_finite() {
                 links.push((s, e, scaled(kg)));

@@ -40,7 +40,7 @@ pub fn intervals(
     coverage: f64,
 ) -> Option<Picture> {
     let figure = briefs.iter().flatten().next()?.figure;
-    let show = |v: f64| with_minus(&unbroken(&figure.measure.shown(v))).replace(' ', "\u{a0}");
+    let spaced = |text: String| with_minus(&unbroken(&text)).replace(' ', "\u{a0}");
     let title = sentence(&figure.title);
     let present = work.routes.get(work.present).map_or("", |route| route.name.as_str());
     let (mut rows, mut odds, mut table, mut said) = (Vec::new(), Vec::new(), Vec::new(), Vec::new());
@@ -51,6 +51,7 @@ pub fn intervals(
             Some(s) => {
                 draws = s.draws;
                 let (low, middle, high) = (s.symmetric.low, s.median, s.symmetric.high);
+                let show = |v: f64| spaced(figure.measure.shown_within(v, (low, high)));
                 let limits = format!("from {} to {}", show(low), show(high));
                 let cells = [show(middle), show(low), show(high)];
                 (show(middle), limits, Mark::Interval(low, middle, high), cells)
@@ -61,7 +62,7 @@ pub fn intervals(
                     none,
                     String::new(),
                     Mark::None,
-                    [show(brief.central), "not known".to_owned(), String::new()],
+                    [spaced(figure.measure.shown(brief.central)), "not known".to_owned(), String::new()],
                 )
             }
         };

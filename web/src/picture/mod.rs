@@ -27,6 +27,7 @@ mod scale;
 mod shape;
 #[cfg(test)]
 mod tests;
+mod way_down;
 mod year;
 
 pub use air_course::air_course;
@@ -43,6 +44,7 @@ pub use mass_by_place::mass_by_place;
 pub use over_years::over_years;
 pub use reconciled::reconciled;
 pub use shape::{Anchor, Hatch, Shape, Trail};
+pub use way_down::way_down;
 pub use year::{load, stock};
 
 /// A picture.

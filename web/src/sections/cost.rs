@@ -2,7 +2,7 @@
 use super::places::lines;
 use super::plates::What;
 use super::{Section, View, When};
-use crate::draws::{COVERAGE, Drawn, follows};
+use crate::draws::{COVERAGE, Drawn, follows, kept};
 use crate::parts::{ByRc, Sheet};
 use crate::picture::{over_years, to_html};
 use crate::reckon::Book;
@@ -10,6 +10,7 @@ use std::rc::Rc;
 use thimbleworth::account::Group;
 use thimbleworth::case::{drawn, switch};
 use thimbleworth::letter::sentence;
+use thimbleworth::odds::Sampled;
 use yew::prelude::*;
 
 pub(super) static SECTION: Section = Section {
@@ -69,31 +70,30 @@ struct Props {
 fn OverYears(props: &Props) -> Html {
     let w = props.w;
     let found = use_context::<Drawn>().flatten();
-    let last = use_mut_ref(Html::default);
-    let html = use_memo(found.clone(), |found| {
-        let read = || {
-            let draws = found.as_ref()?;
-            let (run, account) = (draws.run()?, &draws.book.account);
-            let work = account.program.as_ref()?.workloads.get(w)?;
-            let present = work.routes.get(work.present).map_or("", |r| r.name.as_str());
-            let others = work.routes.iter().enumerate().filter(|(r, _)| *r != work.present);
-            Some(others.map(|(r, route)| {
-                let case = match switch(account, w, r) {
-                    Ok(case) => case,
-                    Err(lacking) => {
-                        return html! { <p>{ format!("No case for {} without {}.", route.name, lacking.join("; ")) }</p> };
-                    }
-                };
-                let picture = drawn(account, &run, w, r, COVERAGE).and_then(|drawn| {
-                    over_years(&format!("over-years-{w}-{r}"), (&route.name, present), &case, &drawn, COVERAGE)
-                });
-                html! { <>{ for picture.map(|p| to_html(&p)) }{ for case.conditions.first().map(|c| html! { <p>{ format!("It holds only with: {c}.") }</p> }) }</> }
-            }).collect::<Html>())
+    let last = use_mut_ref(Default::default);
+    let html = found.as_ref().map(|draws| kept(&last, draws, "", &|run| years(&draws.book, run, w)));
+    follows(found.as_ref().map(|d| &d.book), &props.book, html.unwrap_or_default())
+}
+
+/// Every other route over the years.
+fn years(book: &Book, run: &Sampled, w: usize) -> Option<Html> {
+    let account = &book.account;
+    let work = account.program.as_ref()?.workloads.get(w)?;
+    let present = work.routes.get(work.present).map_or("", |r| r.name.as_str());
+    let mut out = Vec::new();
+    for (r, route) in work.routes.iter().enumerate().filter(|(r, _)| *r != work.present) {
+        let case = match switch(account, w, r) {
+            Ok(case) => case,
+            Err(lacking) => {
+                out.push(html! { <p>{ format!("No case for {} without {}.", route.name, lacking.join("; ")) }</p> });
+                continue;
+            }
         };
-        if let Some(html) = read() {
-            *last.borrow_mut() = html;
-        }
-        last.borrow().clone()
-    });
-    follows(found.as_ref().map(|d| &d.book), &props.book, (*html).clone())
+        let picture = drawn(account, run, w, r, COVERAGE).and_then(|drawn| {
+            over_years(&format!("over-years-{w}-{r}"), (&route.name, present), &case, &drawn, COVERAGE)
+        });
+        out.extend(picture.map(|p| to_html(&p)));
+        out.extend(case.conditions.first().map(|c| html! { <p>{ format!("It holds only with: {c}.") }</p> }));
+    }
+    Some(out.into_iter().collect())
 }

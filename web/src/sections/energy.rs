@@ -70,6 +70,9 @@ fn by_step(view: &View, w: usize, r: usize) -> Html {
                 { view.plate(w, What::Circuit(r)) }
                 { view.plate(w, What::Extraction(r)) }
             }
+            if !account.trace.batches.is_empty() {
+                { view.plate(w, What::WayDown(r)) }
+            }
         </details>
     }
 }

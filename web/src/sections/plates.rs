@@ -23,6 +23,8 @@ pub(super) enum What {
     Lost(usize),
     /// The air of the room on one route.
     Air(usize),
+    /// The first mixture that one route takes down.
+    WayDown(usize),
 }
 
 #[derive(Properties, PartialEq)]
@@ -73,6 +75,11 @@ fn draw(props: &Props) -> Option<Picture> {
             picture::cost_flow(&format!("cost-flow-{w}-{r}"), &book.account, at, route, per(props.basis))
         }
         What::Co2 => picture::co2_map(&format!("co2-map-{w}"), &book.account, at),
+        What::WayDown(r) => {
+            let (route, account) = book.route(w, r)?;
+            let path = thimbleworth::account::batch_paths(route, account).into_iter().next()?;
+            picture::way_down(&format!("way-down-{w}-{r}"), &route.name, &path)
+        }
         What::Air(r) => {
             let (route, account) = book.route(w, r)?;
             picture::air_course(&format!("air-course-{w}-{r}"), &route.name, account.air.as_ref()?)

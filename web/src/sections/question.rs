@@ -188,7 +188,7 @@ fn stream_fields(view: &View, i: usize, stream: &Stream, count: usize, path: &st
 }
 
 /// What the waste desk asks of a stream: key, label, hint, words to choose from.
-const STREAM_WASTE: [(&str, &str, &str, &[&str]); 8] = [
+const STREAM_WASTE: [(&str, &str, &str, &[&str]); 10] = [
     ("ph", "pH in its containers", "Lowest to highest as measured, such as 6 to 8.", &[]),
     ("flash_point", "Flash point by test", "Closed cup, such as 26 °C, or none.", &[]),
     ("unused", "Takes unused product", "Expired stock, not used solvent.", &["true", "false"]),
@@ -217,6 +217,13 @@ const STREAM_WASTE: [(&str, &str, &str, &[&str]); 8] = [
         &["when made", "reclaimed", "reclaimed at once", "treated at once"],
     ),
     ("goes_round", "Goes round, where it is reclaimed", "Counts once a month, such as 20 kg.", &[]),
+    (
+        "saturation",
+        "Saturation of what filling pushes out",
+        "1 to be cautious; not counted when left out.",
+        &[],
+    ),
+    ("vented_to", "That air goes to", "", &["hood", "room"]),
 ];
 
 fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl Iterator<Item = Html> + 'a {
@@ -229,7 +236,9 @@ fn stream_waste<'a>(view: &'a View, path: &'a str, stream: &'a Stream) -> impl I
             "density_mark" => Some(text_of(stream.density_mark.as_ref())),
             "area" => stream.area.clone(),
             "counted" => stream.counted.clone(),
-            _ => stream.goes_round.clone(),
+            "goes_round" => stream.goes_round.clone(),
+            "saturation" => stream.saturation.clone(),
+            _ => stream.vented_to.clone(),
         };
         let ask = match *key {
             "unused" => Ask::YesNo("no (left out)".into()),

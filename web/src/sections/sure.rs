@@ -1,7 +1,7 @@
 //! Section "How sure": intervals, odds, what matters most, and the case in every draw. Read in turns, so that no key stroke
 //! waits for it; dimmed until it has caught up.
 use super::{Section, When};
-use crate::draws::{COVERAGE, Drawn, Draws, follows, in_turns};
+use crate::draws::{COVERAGE, Drawn, Draws, follows, in_turns, kept};
 use crate::parts::{ByRc, words_table};
 use crate::picture::{intervals, to_html};
 use crate::reckon::Book;
@@ -90,47 +90,40 @@ fn Chosen(props: &ChosenProps) -> Html {
             }
         })
     };
-    // A run that has turned to another plan leaves what stands.
-    let last = use_mut_ref(Html::default);
-    let html = use_memo((props.draws.clone(), (*chosen).clone()), |(draws, id)| {
-        let drawn = || {
-            let run = draws.run()?;
-            let account = &draws.book.account;
-            let work = account.program.as_ref()?.workloads.get(w)?;
-            let reading = Reading::new(account, &run, w, COVERAGE)?;
-            let briefs = |id: &str| (0..work.routes.len()).map(|r| reading.brief(id, r)).collect::<Vec<_>>();
-            let ids = reading.ids();
-            let shown = ids.iter().find(|i| *i == id).or_else(|| ids.first()).copied()?;
-            let titles = ids.iter().filter_map(|id| {
-                let title = account
-                    .workloads
-                    .get(w)?
-                    .routes
-                    .iter()
-                    .flatten()
-                    .flat_map(|r| &r.figures)
-                    .find(|f| f.id == *id)?;
-                Some((*id, sentence(&title.title)))
-            });
-            let field = format!("sure-figure-{w}");
-            Some(html! {
-                <>
-                    <div class="field">
-                        <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
-                        <select id={field} {onchange}>
-                            { for titles.map(|(id, title)| html! { <option value={id.to_owned()} selected={id == shown}>{ title }</option> }) }
-                        </select>
-                    </div>
-                    { for intervals(&format!("intervals-{w}"), work, &briefs(shown), COVERAGE).map(|p| to_html(&p)) }
-                </>
-            })
-        };
-        if let Some(html) = drawn() {
-            *last.borrow_mut() = html;
+    let last = use_mut_ref(Default::default);
+    let draws = &props.draws;
+    kept(&last, draws, &chosen, &|run| {
+        let account = &draws.book.account;
+        let work = account.program.as_ref()?.workloads.get(w)?;
+        let reading = Reading::new(account, run, w, COVERAGE)?;
+        let ids = reading.ids();
+        let shown = ids.iter().find(|i| **i == *chosen).or_else(|| ids.first()).copied()?;
+        let routes = 0..work.routes.len();
+        let mut options = Vec::new();
+        for id in &ids {
+            let found = account
+                .workloads
+                .get(w)?
+                .routes
+                .iter()
+                .flatten()
+                .find_map(|r| r.figures.iter().find(|f| f.id == *id));
+            let title = sentence(&found?.title);
+            options
+                .push(html! { <option value={(*id).to_owned()} selected={*id == shown}>{ title }</option> });
         }
-        last.borrow().clone()
-    });
-    (*html).clone()
+        let briefs: Vec<_> = routes.map(|r| reading.brief(shown, r)).collect();
+        let field = format!("sure-figure-{w}");
+        Some(html! {
+            <>
+                <div class="field">
+                    <label for={field.clone()}>{ format!("Figure of {}", work.name) }</label>
+                    <select id={field} onchange={&onchange}>{ for options }</select>
+                </div>
+                { for intervals(&format!("intervals-{w}"), work, &briefs, COVERAGE).map(|p| to_html(&p)) }
+            </>
+        })
+    })
 }
 
 /// Reads what the draws say piece by piece, so that no turn takes long.
@@ -222,10 +215,12 @@ impl Reader {
 }
 
 fn row(brief: &Brief<'_>, route: &str) -> Vec<String> {
-    let show = |v: f64| brief.figure.measure.shown(v);
-    let (low, high) = brief
-        .drawn
-        .map_or(("not known".to_owned(), String::new()), |s| (show(s.symmetric.low), show(s.symmetric.high)));
+    let limits = brief.drawn.map_or((0.0, 0.0), |s| (s.symmetric.low, s.symmetric.high));
+    let show = |v: f64| brief.figure.measure.shown_within(v, limits);
+    let (low, high) = match brief.drawn {
+        Some(_) => (show(limits.0), show(limits.1)),
+        None => ("not known".to_owned(), String::new()),
+    };
     vec![
         sentence(&brief.figure.title),
         route.to_owned(),

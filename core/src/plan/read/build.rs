@@ -151,6 +151,8 @@ fn stream(node: &Node) -> Stream {
         area: text(node, "area"),
         counted: text(node, "counted"),
         goes_round: text(node, "goes_round"),
+        saturation: text(node, "saturation"),
+        vented_to: text(node, "vented_to"),
     }
 }
 

@@ -60,7 +60,7 @@ pub(super) static TECHNIQUE: Technique = Technique {
             and what stays dissolved are lost. Stages follow as several steps, with let_down false for all but the last.",
     group: Group::Extraction,
     takes_feed: Some(Place::MARC),
-    params: &dense::params::<60>(&[
+    params: &dense::params::<61>(&[
         &[dense::TEMPERATURE, dense::PRESSURE],
         &vessel::PARAMS,
         &flow::PARAMS,
@@ -162,6 +162,7 @@ impl Step for Supercritical {
         self.trap.cosolvent(x, b, time_s, vent_to, COSOLVENT)?;
         let here = (x.get(chamber.state.0), x.get(chamber.state.1));
         self.soluble.hold(x, b, &self.extracts, here, filled_kg + passed_kg, EXTRACTED);
+        self.soluble.diffuse(x, b, &self.extracts, (time_s, passed_kg), EXTRACTED);
         super::extract(x, b, &self.extracts, Place::MARC, Place::TRAP, EXTRACTED)?;
         self.trap.blow_off(x, b, vent_to, BLOWN_OFF)?;
         chamber.keep(x, b, self.dissolved, Place::TRAP, DRAWN_OFF)?;

@@ -4,7 +4,7 @@ use crate::chance::{Draw, In};
 use crate::dense_gas::chrastil::{self, Chrastil};
 use crate::dense_gas::need::{Curve, Solubility, Target};
 use crate::dense_gas::search::Window;
-use crate::dense_gas::{sovova, vegetable_oil};
+use crate::dense_gas::{hot_ball, sovova, vegetable_oil};
 use crate::ledger::{Bench, Material, Place, RuleIx};
 use crate::program::Reader;
 use crate::quantity::Kind;
@@ -56,6 +56,11 @@ const SLOW: Param = Param::quantity("slow", "W of the slow period", Kind::Number
     .with("intact")
     .hint("Walls of intact cells; from your own extraction curve.")
     .source(sovova::SOURCE);
+const DIFFUSION: Param = Param::quantity("diffusion_time", "Diffusion time r²/(π² D)", Kind::Time)
+    .physical(1e-3, 1e8)
+    .usual(60.0, 1e5)
+    .hint("Of the hot-ball model: late in the extraction, what is left falls to a third (1/e) in it. It holds where particles, not solubility, decide.")
+    .source(hot_ball::SOURCE);
 const RATED_PRESSURE: Param = Param::quantity("rated_pressure", "Highest pressure for the vessel", Kind::Pressure)
     .physical(1e5, 8e8)
     .hint("Its rating at the highest temperature, less the margin to its relief: ends the search for the best state.")
@@ -66,14 +71,15 @@ const RATED_TEMPERATURE: Param =
         .hint("Ends the search for the best state.")
         .source(COMMON_PRACTICE);
 
-pub(super) const PARAMS: [Param; 10] =
-    [SOLUBILITY, K, A, B, SOUGHT, INTACT, FAST, SLOW, RATED_PRESSURE, RATED_TEMPERATURE];
+pub(super) const PARAMS: [Param; 11] =
+    [SOLUBILITY, K, A, B, SOUGHT, INTACT, FAST, SLOW, DIFFUSION, RATED_PRESSURE, RATED_TEMPERATURE];
 
 /// The solubility of one step.
 pub(super) struct Soluble {
     law: Option<Law>,
     sought: Option<Material>,
     curve: Option<[In; 3]>,
+    diffusion: Option<In>,
     rated: (Option<In>, Option<In>),
 }
 
@@ -105,6 +111,7 @@ impl Soluble {
                 }
             }
         }
+        let diffusion = r.optional(&DIFFUSION);
         let rated = (r.optional(&RATED_PRESSURE), r.optional(&RATED_TEMPERATURE));
         for (key, slot, rating) in [("pressure", state.1, rated.0), ("temperature", state.0, rated.1)] {
             if let Some(rating) = rating
@@ -121,7 +128,7 @@ impl Soluble {
             [Some(intact), Some(fast), Some(slow)] => Some([intact, fast, slow]),
             _ => None,
         };
-        Self { law, sought, curve, rated }
+        Self { law, sought, curve, diffusion, rated }
     }
 
     fn law(&self, x: Draw<'_>) -> Option<Solubility> {
@@ -152,6 +159,39 @@ impl Soluble {
         let low_k = if temperature_k < 308.15 { temperature_k } else { 308.15 };
         let low_pa = if pressure_pa < 10e6 { pressure_pa } else { 10e6 };
         Some(Window { temperature_k: [low_k, x.get(high_k)], pressure_pa: [low_pa, x.get(high_pa)] })
+    }
+
+    /// Notes what diffusion out of the particles asks for by the hot-ball model, in a run that is traced, and doubts a plan that
+    /// allows less time.
+    pub(super) fn diffuse(
+        &self,
+        x: Draw<'_>,
+        b: &mut Bench<'_>,
+        extracts: &[(Material, In)],
+        (time_s, passed_kg): (f64, f64),
+        rule: RuleIx,
+    ) {
+        let (true, Some(slot)) = (b.traced(), self.diffusion) else { return };
+        b.note(rule, "r²/(π² D)", x.get(slot), Kind::Time);
+        for (_, share) in extracts {
+            let share = x.get(*share);
+            // Everything takes no finite time by the model.
+            let recovery = if share < 1.0 { share } else { 1.0 - 1e-9 };
+            let Ok(reduced) = hot_ball::reduced_time_for(recovery) else { continue };
+            // t = t_r r²/(π² D)
+            let least_s = reduced * x.get(slot);
+            b.note(rule, "t, by diffusion", least_s, Kind::Time);
+            b.note(rule, "m_CO2, by diffusion", passed_kg * least_s / time_s, Kind::Mass);
+            if time_s < least_s * (1.0 - 1e-9) {
+                b.doubt(
+                    rule,
+                    "more is taken out than diffusion lets out of the particles in the dynamic time, which would take",
+                    least_s,
+                    Kind::Time,
+                    "more time, finer particles, or a smaller share taken out",
+                );
+            }
+        }
     }
 
     /// Notes what the solubility asks for, in a run that is traced, and doubts a plan that passes less.
