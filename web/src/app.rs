@@ -417,6 +417,7 @@ fn report_head(state: &State, finding: &[String]) -> Html {
                 if state.is_unsaved() { { " Printed with changes that no file holds." } }
             </p>
             { for finding.iter().map(|sentence| html! { <p class="finding">{ sentence }</p> }) }
+            <p class="signed">{ "Drawn up by ____________________ on ____________   Checked by ____________________ on ____________" }</p>
         </section>
     }
 }

@@ -119,10 +119,17 @@ fn beside(
         &differences,
         old.uncounted.is_empty() && new.uncounted.is_empty(),
     );
+    let mut finding = judged.sentence;
+    // What is paid once stands beside what is saved each year.
+    if let Some(paid) = other.figures.iter().find(|f| f.id == "cost.once").zip(other.value("cost.once"))
+        && paid.1 > 0.0
+    {
+        finding = format!("{finding} {} are paid at once.", paid.0.measure.shown(paid.1));
+    }
     RouteComparison {
         route,
         differences,
-        finding: judged.sentence,
+        finding,
         better: judged.better,
         worse: judged.worse,
         doubts: doubts(old, new),

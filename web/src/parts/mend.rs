@@ -122,8 +122,8 @@ pub(crate) fn Mend(props: &Props) -> Html {
                     { if props.open { "Close the list" } else { "Open the list" } }
                 </button>
             }
-            if props.open {
-                <div class="listed">
+            if errors + doubts > 0 {
+                <div class={if props.open { "listed" } else { "onpaper" }}>
                     { group(Severity::Error, "To mend") }
                     { group(Severity::Warning, "Doubts, which keep nothing from being accounted") }
                 </div>
