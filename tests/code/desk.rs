@@ -1,7 +1,7 @@
 //! Routes and months against what practice expects of them: a preserved water sample shaken out with dichloromethane and acetone,
 //! and the months of a university that takes in a contract of such samples. Inputs and expected figures come from a worked
 //! case of the trade whose arithmetic was recomputed by hand; codes and thresholds from the sections of 40 CFR named beside them.
-use thimbleworth::account::{Account, SiteDesk, Standing, account_text, site_desk};
+use thimbleworth::account::{Account, Measure, SiteDesk, Standing, account_text, site_desk};
 use thimbleworth::code::Answer;
 use thimbleworth::generator::Category;
 use thimbleworth::report::{PaperKind, paper};
@@ -270,4 +270,29 @@ fn a_full_drum_is_told_in_batches() {
         table.rows.iter().find(|r| r[0] == "batches of Contract, Funnel").unwrap()[1].parse().unwrap();
     // About 1.05 L a sample into 180 L.
     within(batches, 171.0, 0.03);
+}
+
+/// Water alone is no hazardous waste; in the container of dichloromethane it is. The sum over routes does not see that.
+#[test]
+fn a_mix_is_classified_as_a_whole_too() {
+    use thimbleworth::case::{Bound, HAZARDOUS_WASTE, mixes};
+    let told = |to: &str| {
+        let wash = format!(
+            r#", {{ "name": "Wash", "results_per_year": 100, "batch": {{ "samples": 1 }}, "feed": {{}}, "present": "Rinse", "routes": [ {{ "name": "Rinse", "ph": "7",
+            "steps": [ {{ "step": "rinse", "solvent": "water", "charge": "100 mL", "to": "{to}", "loss": "0 %" }} ] }} ] }} ] }}"#
+        );
+        let one = plan("", r#""results_per_year": 1200,"#, "when made", "US").replace(
+            r#"{ "name": "organic""#,
+            r#"{ "name": "wash water", "container": "20 L" }, { "name": "organic""#,
+        );
+        let account = account(&(one.strip_suffix(" ] }").unwrap().to_owned() + &wash));
+        let found = mixes(&account, HAZARDOUS_WASTE, Bound::None).unwrap();
+        (found.present.figure, found.doubts.join("; "))
+    };
+    let (apart, said) = told("wash water");
+    assert!(!said.contains("classified together"), "{said}");
+    let (shared, said) = told("organic");
+    within(shared, apart, 1e-12);
+    let together = Measure::Mass.shown(apart + 100.0 * 0.0998);
+    assert!(said.contains(&["classified together, ", &together].concat()), "{together}: {said}");
 }

@@ -263,6 +263,9 @@ fn containers_are_rounded_up_once() {
         let account = sound(&plan);
         let (_, a) = routes(&account).next().unwrap();
         assert_eq!(value(a, "waste.waste.containers"), cans, "{results}");
+        // A share is what one run fills, whatever the year is rounded up to: 75 mL of 18 L.
+        let figure = a.figures.iter().find(|f| f.id == "waste.waste.containers").unwrap();
+        close(a.per_result(a.shared(figure, cans)), 1.0 / 240.0, "a result's share of a container");
         close(value(a, "waste.waste.volume"), 75e-6 * f64::from(results), "volume");
     }
 }

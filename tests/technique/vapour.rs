@@ -194,6 +194,16 @@ fn a_gas_space_and_an_open_dish() {
     near(to_air_g(&soil(&film), 1, "acetone"), 2.0 * 0.7902, 2e-3);
 }
 
+/// Acetone boils at 56 °C (any table of solvents).
+#[test]
+fn an_open_dish_that_boils_is_said() {
+    let told = |at: &str| {
+        let dish = json!([{ "step": "ultrasonic", "solvent": "acetone", "charge": "100 mL", "portions": 1, "time": "10 min", "surface": "78.54 cm2", "temperature": at }]);
+        warned(&soil(&dish), "the liquid boils at 1 atm")
+    };
+    assert!(!told("20 °C") && !told("55 °C") && told("58 °C") && told("90 °C"));
+}
+
 /// 8.5 L of n-hexane siphoned take 0.52 kWh at the boiling point and 0.57 kWh cold; 20 W for 20 h are 0.4 kWh.
 #[test]
 fn reflux_has_a_floor_and_cooling_water_runs_by_flow() {

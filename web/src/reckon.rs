@@ -309,7 +309,10 @@ impl Book {
     #[must_use]
     pub fn value(&self, w: usize, r: usize, id: &str, measure: Measure, basis: Basis) -> Option<f64> {
         let (_, account) = self.route(w, r)?;
-        let value = self.figure(w, r, id).map(|(_, value)| value);
+        let value = self.figure(w, r, id).map(|(figure, value)| match basis {
+            Basis::Year => value,
+            _ => account.shared(figure, value),
+        });
         if measure.extensive() { basis.of(account, value.unwrap_or(0.0)) } else { value }
     }
 

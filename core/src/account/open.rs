@@ -1,7 +1,7 @@
 //! From a plan to the account of every route.
 
 use super::air::{self, AirAccount};
-use super::figure::{Draft, Figure, evaluate};
+use super::figure::{Draft, Figure, How, evaluate};
 use super::hazard::HazardAccount;
 use super::metric::Refusal;
 use super::{carbon_dioxide, climate, cost, energy, hazard, mass, metric, time, waste};
@@ -72,6 +72,17 @@ impl RouteAccount {
     pub fn value(&self, id: &str) -> Option<f64> {
         let i = self.figures.iter().position(|f| f.id == id)?;
         self.values.get(i).copied()
+    }
+
+    /// What of a figure is shared out over results, batches, months and product: the year's amount, and of containers what fills them,
+    /// before the year's number is rounded up.
+    #[must_use]
+    pub fn shared(&self, figure: &Figure, a_year: f64) -> f64 {
+        match figure.how {
+            // V / (V_c · fill)
+            How::Containers { of, takes } => self.values.get(of).map_or(a_year, |amount| amount / takes),
+            _ => a_year,
+        }
     }
 
     /// A yearly figure for each reported result.

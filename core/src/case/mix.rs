@@ -70,7 +70,7 @@ pub struct Mixes {
     pub thinned: bool,
     /// Routes that are in none of them.
     pub left_out: Vec<LeftOut>,
-    /// What the cost does not hold, in sentences without a full stop.
+    /// What the cost does not hold, and where the figure of a mix differs from the sum over its routes, in sentences without a full stop.
     pub doubts: Vec<String>,
 }
 
@@ -167,6 +167,27 @@ pub fn mixes(account: &Account, id: &str, bound: Bound) -> Result<Mixes, String>
                 .reduce(|best, at| if whole(&found[at]) < whole(&found[best]) { at } else { best })
         }
     };
+    if id == HAZARDOUS_WASTE {
+        let sought = chosen.and_then(|at| found.get(at)).filter(|m| m.routes != present.routes);
+        for (mix, what) in [(Some(&present), "the present routes"), (sought, "the mix that is sought")] {
+            let Some(mix) = mix else { continue };
+            let whole = hazardous_kg(&poured(account, program, &mix.routes), program);
+            if (whole - mix.figure).abs() > 1e-9 * (whole + mix.figure) {
+                let (whole, sum) = (measure.shown(whole), measure.shown(mix.figure));
+                doubts.push(
+                    [
+                        "codes hang on whole streams, and ",
+                        what,
+                        " pour into the same ones: classified together, ",
+                        &whole,
+                        " a year are hazardous or wait for a test, not the sum of ",
+                        &sum,
+                    ]
+                    .concat(),
+                );
+            }
+        }
+    }
     Ok(Mixes { title, measure, currency, present, front: found, chosen, thinned, left_out, doubts })
 }
 
@@ -200,13 +221,7 @@ fn value(account: &Account, program: &Program, w: usize, r: usize, id: &str) -> 
     let work = account.workloads.get(w)?;
     let (own, route) = (work.routes.get(r)?.as_ref()?, program.workloads.get(w)?.routes.get(r)?);
     if id == HAZARDOUS_WASTE {
-        let mut kg = 0.0;
-        for s in classified(&[Pouring { route, account: own }], &program.site) {
-            if s.standing() != Standing::NotKnownHazardous {
-                kg += s.contents.mass_kg();
-            }
-        }
-        return Some(kg);
+        return Some(hazardous_kg(&[Pouring { route, account: own }], program));
     }
     own.value(id).or_else(|| {
         let known = |f: &&Figure| f.id == id;
@@ -218,6 +233,29 @@ fn value(account: &Account, program: &Program, w: usize, r: usize, id: &str) -> 
             .find(known)?;
         absent_is_zero(route, figure).then_some(0.0)
     })
+}
+
+/// What is hazardous or waits for a test of all that these routes pour; kg a year.
+fn hazardous_kg(routes: &[Pouring<'_>], program: &Program) -> f64 {
+    let mut kg = 0.0;
+    for s in classified(routes, &program.site) {
+        if s.standing() != Standing::NotKnownHazardous {
+            kg += s.contents.mass_kg();
+        }
+    }
+    kg
+}
+
+/// The routes of a mix with their accounts.
+fn poured<'a>(account: &'a Account, program: &'a Program, routes: &[Option<usize>]) -> Vec<Pouring<'a>> {
+    let mut out = Vec::new();
+    for ((work, own), r) in program.workloads.iter().zip(&account.workloads).zip(routes) {
+        let Some(r) = *r else { continue };
+        if let (Some(route), Some(Some(account))) = (work.routes.get(r), own.routes.get(r)) {
+            out.push(Pouring { route, account });
+        }
+    }
+    out
 }
 
 /// The money of the site, where the running cost of every present route is known.

@@ -62,7 +62,7 @@ pub struct Vessel<'a> {
     pub capacity_m3: Option<f64>,
     /// How full it may be.
     pub fill: f64,
-    /// What is in it already; m³; `None` where nobody says.
+    /// What is in it already; m³; `None` where nobody says: then it is taken as half of what it may hold.
     pub held_m3: Option<f64>,
     /// What it is made of: a word of the plan.
     pub made_of: Option<&'a str>,
@@ -137,7 +137,7 @@ pub fn into_vessel(
         put(pair.severity, [pair.text, " (", &names.join(", "), ")"].concat(), COMMON_PRACTICE);
     }
     material(&all, vessel, &mut put);
-    space(poured, &all, vessel, &mut put);
+    space((poured, into, &all), vessel, &mut put);
     if all.solid != poured.solid && !poured.parts.is_empty() {
         let what = if all.solid {
             "liquid into a container for solids"
@@ -194,8 +194,7 @@ fn material(all: &Contents<'_>, vessel: &Vessel<'_>, put: &mut dyn FnMut(Severit
 }
 
 fn space(
-    poured: &Contents<'_>,
-    all: &Contents<'_>,
+    (poured, into, all): (&Contents<'_>, &Contents<'_>, &Contents<'_>),
     vessel: &Vessel<'_>,
     put: &mut dyn FnMut(Severity, String, Source),
 ) {
@@ -221,16 +220,25 @@ fn space(
         }
     }
     let Some(capacity) = vessel.capacity_m3 else { return };
-    let after = vessel.held_m3.unwrap_or(0.0) + poured.volume_m3();
     let most = capacity * vessel.fill;
+    // Where nobody says, half of what it may hold, as the codes are found; no less than what the contents themselves take up.
+    let (half, known) = (most / 2.0, into.volume_m3());
+    let held = vessel.held_m3.unwrap_or(if known > half { known } else { half });
+    let after = held + poured.volume_m3();
     if after > most {
         let over = show(after - most, Kind::Volume);
-        put(Severity::Stop, ["no headspace: ", &over, " more than it may hold"].concat(), COMMON_PRACTICE);
+        let taken = if vessel.held_m3.is_none() {
+            ["; how full it is was not said, and it is taken to hold ", &show(held, Kind::Volume)].concat()
+        } else {
+            String::new()
+        };
+        let what = ["no headspace: ", &over, " more than it may hold", &taken].concat();
+        put(Severity::Stop, what, COMMON_PRACTICE);
     } else if vessel.held_m3.is_none() {
-        let room = show(most, Kind::Volume);
+        let room = show(most - poured.volume_m3(), Kind::Volume);
         put(
             Severity::Mind,
-            ["how full it is was not said: at most ", &room, " may be in it"].concat(),
+            ["how full it is was not said: at most ", &room, " may be in it before"].concat(),
             COMMON_PRACTICE,
         );
     }
@@ -345,6 +353,22 @@ mod tests {
         // 1 kg of toluene is 1.15 L; 18 L may be in a 20 L can
         assert!(found(&[("toluene", 1.0)], &[("toluene", 1.0)], &can(0.0168)).is_empty());
         assert_eq!(found(&[("toluene", 1.0)], &[("toluene", 1.0)], &can(0.0169))[0].0, Severity::Stop);
+    }
+
+    #[test]
+    fn a_container_of_which_nothing_is_said_is_half_full() {
+        let can = Vessel { capacity_m3: Some(0.02), ..OPEN };
+        let of = |name: &str, litres: f64| {
+            let kg = part(name, 1.0).density_kg_m3.unwrap() * litres / 1000.0;
+            found(&[(name, kg)], &[], &can)[0].clone()
+        };
+        // 18 L may be in it: 9 + 8 pass, 9 + 10 are 1 L over, 9 + 30 are 21 L over
+        let (severity, what) = of("acetone", 8.0);
+        assert!(severity == Severity::Mind && what.contains("at most 10 L"), "{what}");
+        for (name, litres, over) in [("acetone", 10.0, "1 L more"), ("water", 30.0, "21 L more")] {
+            let (severity, what) = of(name, litres);
+            assert!(severity == Severity::Stop && what.contains(over) && what.contains("hold 9 L"), "{what}");
+        }
     }
 
     #[test]

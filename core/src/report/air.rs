@@ -7,10 +7,17 @@ use crate::program::{RoomUse, RouteProgram, SiteUse};
 use crate::quantity::{Kind, show, significant};
 use crate::room::{LIMITS_CAUTION, LimitKind};
 
-/// A fraction by volume as people say it: ppm, and per cent from one per cent on.
+/// A fraction by volume as people say it: ppm, and per cent from one per cent on. What is below a thousandth of a ppm is only said to be so.
+///
+/// ```
+/// use thimbleworth::report::by_volume;
+/// assert_eq!([0.05, 5e-5, 6.72e-29, 0.0].map(by_volume), ["5 %", "50 ppm", "< 0.001 ppm", "0 ppm"]);
+/// ```
 #[must_use]
 pub fn by_volume(x: f64) -> String {
-    if x >= 0.01 {
+    if x > 0.0 && x < 1e-9 {
+        "< 0.001 ppm".to_owned()
+    } else if x >= 0.01 {
         format!("{} %", significant(x * 100.0, 3))
     } else {
         format!("{} ppm", significant(x * 1e6, 4))
@@ -134,14 +141,20 @@ fn said_of(gas: &GasInRoom) -> Vec<String> {
     }
     let blind: Vec<&str> = gas.sensor.blind.iter().map(|s| s.title()).collect();
     out.push(format!(
-        "{}: a {}, {}. {}{}",
+        "{}: {} {}, {}. {}{}",
         gas.name,
+        article(gas.sensor.sensor.title()),
         gas.sensor.sensor.title(),
         gas.sensor.place,
         gas.sensor.why,
         if blind.is_empty() { String::new() } else { format!(" Blind to it: {}.", blind.join(", ")) }
     ));
     out
+}
+
+/// "a" or "an", by the first letter, which the titles of sensors keep to.
+fn article(title: &str) -> &'static str {
+    if title.starts_with(['a', 'e', 'i', 'o', 'u']) { "an" } else { "a" }
 }
 
 fn against_limits(air: &AirAccount) -> Sheet {
@@ -254,4 +267,16 @@ fn let_go(sudden: &[SuddenInRoom]) -> Sheet {
     };
     sheet.without_empty_columns();
     sheet
+}
+
+#[cfg(test)]
+mod tests {
+    use super::article;
+    use crate::room::Sensor;
+
+    #[test]
+    fn a_sensor_has_its_article() {
+        let of = |s: Sensor| article(s.title());
+        assert_eq!([Sensor::Oxygen, Sensor::CarbonDioxide, Sensor::Vapour].map(of), ["an", "a", "a"]);
+    }
 }

@@ -52,7 +52,7 @@ pub fn result_csv_drawn(account: &Account, drawn: Option<Drawn<'_>>) -> String {
             let Some(account) = account else { continue };
             let spreads = Spreads::of(drawn, w, r);
             for (figure, value_si) in figures(account) {
-                let row = Row::of(account, figure.measure, value_si);
+                let row = Row::of(account, figure, value_si);
                 line(&mut out, [&work.name, &route.name], figure, &row);
                 if drawn.is_some() {
                     let cells = spreads.get(&figure.id).map_or_else(

@@ -135,12 +135,13 @@ fn route_account(
             let shown = |value| amount(value, figure.measure);
             let limits = spreads.there().then(|| spreads.limits(&figure.id, figure.measure));
             if figure.measure.extensive() {
+                let shared = account.shared(figure, a_year);
                 cells.extend(
-                    [account.per_result(a_year), account.per_batch(a_year), a_year / MONTHS, a_year]
+                    [account.per_result(shared), account.per_batch(shared), shared / MONTHS, a_year]
                         .map(shown),
                 );
                 cells.extend(limits.into_iter().flatten());
-                cells.extend(account.per_kg_product(a_year).map(shown));
+                cells.extend(account.per_kg_product(shared).map(shown));
             } else {
                 cells.extend(["", "", ""].map(str::to_owned));
                 cells.push(shown(a_year));

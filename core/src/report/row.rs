@@ -19,15 +19,17 @@ pub(super) enum Row {
 
 impl Row {
     /// The row of a figure whose value is given in SI, for a year.
-    pub(super) fn of(account: &RouteAccount, measure: Measure, value_si: f64) -> Self {
+    pub(super) fn of(account: &RouteAccount, figure: &Figure, value_si: f64) -> Self {
+        let measure = figure.measure;
         let value = written(measure, value_si);
+        let shared = written(measure, account.shared(figure, value_si));
         if measure.extensive() {
             Self::Extensive {
-                per_result: account.per_result(value),
-                per_batch: account.per_batch(value),
-                per_month: value / MONTHS,
+                per_result: account.per_result(shared),
+                per_batch: account.per_batch(shared),
+                per_month: shared / MONTHS,
                 per_year: value,
-                per_kg_product: account.per_kg_product(value),
+                per_kg_product: account.per_kg_product(shared),
             }
         } else {
             Self::Ratio(value)

@@ -132,15 +132,16 @@ fn route_account(
         for (figure, a_year) in rows {
             let mut cells = vec![format!("  {}", visible(&figure.title))];
             if figure.measure.extensive() {
+                let shared = account.shared(figure, a_year);
                 let per = [
-                    account.per_result(a_year),
-                    account.per_batch(a_year),
-                    a_year / super::row::MONTHS,
+                    account.per_result(shared),
+                    account.per_batch(shared),
+                    shared / super::row::MONTHS,
                     a_year,
                 ];
                 cells.extend(per.map(|value| amount(value, figure.measure)));
                 limits(&mut cells, figure, spreads);
-                cells.extend(account.per_kg_product(a_year).map(|value| amount(value, figure.measure)));
+                cells.extend(account.per_kg_product(shared).map(|value| amount(value, figure.measure)));
             } else {
                 // A ratio holds for every unit of work; it stands once, in the last column.
                 cells.extend([String::new(), String::new(), String::new()]);

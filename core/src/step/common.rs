@@ -224,7 +224,17 @@ impl Open {
         b.note(rule, "T", temperature_k, Kind::Temperature);
         b.note(rule, "t", time_s, Kind::Time);
         self.vapours.tell(b, kg, rule);
-        self.vapours.off_a_surface(x, kg, (area_m2, temperature_k, time_s))
+        let (gone, pressure_pa) = self.vapours.off_a_surface(x, kg, (area_m2, temperature_k, time_s))?;
+        if pressure_pa >= AIR_PA {
+            b.doubt(
+                rule,
+                "at the stated temperature the liquid boils at 1 atm, and the equation of an open surface in still air does not hold; the pressure over it comes to",
+                pressure_pa,
+                Kind::Pressure,
+                "a temperature of the surface below the boiling point, or a measured loss",
+            );
+        }
+        Ok(gone)
     }
 
     /// Loses to air what an open surface does where one is stated, else a share from experience of all that is there.

@@ -152,16 +152,17 @@ impl Vapours {
         Ok(gone)
     }
 
-    /// What evaporates from an open surface in still air in a time, no more than is there; kg. `area_m2` in m², `time_s` in s.
+    /// What evaporates from an open surface in still air in a time, no more than is there; kg. With it the pressure over the liquid; Pa.
+    /// `area_m2` in m², `time_s` in s.
     pub(super) fn off_a_surface(
         &self,
         x: Draw<'_>,
         kg: &Masses,
         (area_m2, temperature_k, time_s): (f64, f64, f64),
-    ) -> Result<Masses, Halt> {
+    ) -> Result<(Masses, f64), Halt> {
         let mut out = [0.0; LARGEST];
         let vapours = self.over(x, kg, temperature_k)?;
-        for ((out, vapour), kg) in out.iter_mut().zip(vapours).zip(kg) {
+        for ((out, vapour), kg) in out.iter_mut().zip(&vapours).zip(kg) {
             if vapour.partial_pressure_pa > 0.0 {
                 let surface = OpenSurface {
                     area_m2,
@@ -175,7 +176,7 @@ impl Vapours {
                 *out = if gone < *kg { gone } else { *kg };
             }
         }
-        Ok(out)
+        Ok((out, Self::sum_pa(&vapours)))
     }
 
     /// What a gas carries off when it leaves saturated, no more than is there; kg. `gas_m3` at the temperature and the pressure of the air.

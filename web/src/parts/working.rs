@@ -96,7 +96,8 @@ fn working(
     let bases: Vec<Html> = Basis::ALL
         .into_iter()
         .filter_map(|basis| {
-            let value = basis.of(account, value)?;
+            let shared = if basis == Basis::Year { value } else { account.shared(figure, value) };
+            let value = basis.of(account, shared)?;
             let scale = Scale::of(figure.measure, [value].into_iter());
             Some(html! { <li>{ format!("{} {} {}", scale.write(value), scale.unit(), basis.words()) }</li> })
         })

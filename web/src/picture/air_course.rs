@@ -79,13 +79,23 @@ fn hours(gas: &GasInRoom, unit: (&str, f64)) -> Table {
     if gas.on_setback.is_some() {
         head.push(Head::number(&format!("On setback ({})", unit.0)));
     }
-    let cell = |c: &Course, h: f64| written(c.at(h * HOUR_S) * unit.1, 3);
-    let rows = (0..=12_u32).map(|i| f64::from(2 * i)).map(|h| {
-        let mut row = vec![written(h, 3), cell(&gas.course, h)];
-        row.extend(gas.on_setback.as_ref().map(|(c, ..)| cell(c, h)));
-        row
-    });
-    Table { caption: format!("{} in the air of the room", gas.name), head, rows: rows.collect() }
+    let cell = |c: &Course, h: f64| match c.at(h * HOUR_S) {
+        x if x > 0.0 && x < 1e-9 => spaced(x),
+        x => written(x * unit.1, 3),
+    };
+    let mut rows: Vec<Vec<String>> = (0..=12_u32)
+        .map(|i| f64::from(2 * i))
+        .map(|h| {
+            let mut row = vec![written(h, 3), cell(&gas.course, h)];
+            row.extend(gas.on_setback.as_ref().map(|(c, ..)| cell(c, h)));
+            row
+        })
+        .collect();
+    // The figure of the heading, which may stand between two hours.
+    let mut highest = vec!["Highest of the day".to_owned(), spaced(gas.exposure.peak)];
+    highest.extend(gas.on_setback.as_ref().map(|(_, e, _)| spaced(e.peak)));
+    rows.push(highest);
+    Table { caption: format!("{} in the air of the room", gas.name), head, rows }
 }
 
 fn limits_table(limits: &[(f64, String)]) -> Table {

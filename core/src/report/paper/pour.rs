@@ -141,7 +141,12 @@ fn stream(sheet: &Sheet<'_>, asked: &Asked<'_>, poured: &Contents<'_>) -> Result
         lead.push([what, &text, "."].concat());
     }
     if filled.is_none() {
-        lead.push("No route of the plan fills this container: it is taken as empty.".to_owned());
+        lead.push(
+            "No route of the plan fills this container: its codes are those of an empty one.".to_owned(),
+        );
+        if held.is_none() && most.is_some() {
+            lead.push("For the space in it, it is taken as half full.".to_owned());
+        }
     } else if held.is_none() {
         lead.push("The container is taken as half full, in the proportions of a year.".to_owned());
     }

@@ -17,7 +17,7 @@ pub(crate) fn figure(json: &mut Json, account: &RouteAccount, figure: &Figure, v
     json.put("formula", figure.formula);
     json.put("source", figure.source.cite);
     json.put("standing", figure.source.standing.words());
-    match Row::of(account, figure.measure, value_si) {
+    match Row::of(account, figure, value_si) {
         Row::Ratio(value) => json.put(key_unit(figure.measure), value),
         Row::Extensive { per_result, per_batch, per_month, per_year, per_kg_product } => {
             let unit = key_unit(figure.measure);

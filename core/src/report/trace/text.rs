@@ -52,14 +52,15 @@ fn opened(out: &mut String, o: &Opened<'_>, before: &str) {
     paragraph(out, "", &format!("{before}{} [{}]", figure.title, figure.id));
     let shown = |value: f64| amount(value, figure.measure);
     if figure.measure.extensive() {
+        let shared = account.shared(figure, o.value_si);
         let mut line = format!(
             "{} a result, {} a batch, {} a month, {} a year",
-            shown(account.per_result(o.value_si)),
-            shown(account.per_batch(o.value_si)),
-            shown(o.value_si / MONTHS),
+            shown(account.per_result(shared)),
+            shown(account.per_batch(shared)),
+            shown(shared / MONTHS),
             shown(o.value_si)
         );
-        if let Some(value) = account.per_kg_product(o.value_si) {
+        if let Some(value) = account.per_kg_product(shared) {
             line.push_str(&format!(", {} a kilogram of product", shown(value)));
         }
         paragraph(out, "  ", &line);
