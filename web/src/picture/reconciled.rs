@@ -199,7 +199,7 @@ mod tests {
         (open.used, open.unexplained) = (None, None);
         open.verdict = "not recorded: purchases".into();
         let said = |rows: &[Row]| title(rows, ("kg", 1.0));
-        assert_eq!(said(&[more, loss]), "50 kg of acetone, 2026 Q1 cannot be explained");
+        assert_eq!(said(&[more, loss]), "50\u{a0}kg of acetone, 2026 Q1 cannot be explained");
         assert_eq!(said(&[open]), "What is unexplained cannot be said; not recorded: purchases");
         let more = said(&[row(10.0, [754.0, 0.0, 0.0], 5.0)]);
         assert_eq!(more, "No loss is found, but the records of acetone, 2026 Q1 lack some of what came");
