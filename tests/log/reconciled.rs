@@ -3,11 +3,12 @@
 use super::{harbour, in_pieces};
 use std::fmt::Write as _;
 use thimbleworth::account::Account;
+use thimbleworth::account::site_desk;
 use thimbleworth::ledger::{Direction, Place};
 use thimbleworth::log::{
     Names, Posted, Reader, Reading, Reconciliation, SolventAccount, reconcile, solvent_balance,
 };
-use thimbleworth::report::{reconciliation_table, solvent_balance_table};
+use thimbleworth::report::{DataCell, consigned_year_table, reconciliation_table, solvent_balance_table};
 
 /// The harbour's work of a year as its log would show it: in each quarter a quarter of the batches, 13 samples and 4
 /// controls in each.
@@ -229,6 +230,23 @@ fn a_stream_that_the_plan_does_not_fill_is_told_and_in_no_solvent() {
         .map(|a| a.consigned.kg)
         .sum();
     assert!(shares > 50.0 && shares <= 100.0, "{shares}");
+}
+
+/// 73 days are a fifth of a year.
+#[test]
+fn consignments_are_scaled_to_a_year_beside_the_plan() {
+    let account = harbour();
+    let text = "Ship date,Waste stream,Net (kg)\n2026-01-01,flammable,60\n2026-03-14,flammable,40\n";
+    let (readings, names) = readings(&account, &[("waste.csv", text.to_owned())]);
+    let table = consigned_year_table(&readings, &names, &account);
+    let cell = |key: &str| table.rows[0][table.head.iter().position(|h| h[0] == key).unwrap()].clone();
+    assert_eq!((cell("mass_kg"), cell("days")), (DataCell::Number(100.0), DataCell::Count(73)));
+    assert_eq!(cell("scaled_kg_year"), DataCell::Number(500.0));
+    let desk = site_desk(&account, &[]).unwrap();
+    let at = names.streams.iter().position(|s| *s == cell("stream").shown()).unwrap();
+    let planned = desk.streams.iter().find(|s| s.stream == at).unwrap().contents.mass_kg();
+    assert!(planned > 0.0);
+    assert_eq!(cell("plan_kg_year"), DataCell::Number(planned));
 }
 
 /// 754 kg of acetone left and nothing says what came: no figure is made of that.

@@ -2,6 +2,7 @@
 
 use super::data_table::{DataCell, DataTable};
 use super::words::cited;
+use crate::account::{Account, site_desk};
 use crate::log::{
     Change, Day, Key, Line, NONE, Names, OUTPUTS, Posted, RECLAIMED, Reading, Reconciliation, Register,
     Remark, SOLVENT_BALANCE, SolventBalance, Sum, UNCERTAINTY, Verdict, Why, rolled, solvent_balance,
@@ -277,6 +278,45 @@ fn streams(readings: &[Reading], names: &Names) -> DataTable {
             put(&mut table.rows, &texts, &sum_cells(&sum));
         }
     }
+    table
+}
+
+/// What was consigned of each stream over the days covered, scaled to a year, beside the plan's year.
+///
+/// The days covered run from the first consignment to the last, both counted; what was collected on the first of them may
+/// have stood for longer, so few collections scale badly.
+#[must_use]
+pub fn consigned_year_table(readings: &[Reading], names: &Names, account: &Account) -> DataTable {
+    let mut table =
+        with_sums("consigned_year", "Consigned by stream, scaled to a year", &[["stream", "stream"]]);
+    table.head.extend([
+        ["days", "days covered"],
+        ["scaled_kg_year", "scaled to a year, kg"],
+        ["plan_kg_year", "plan, kg a year"],
+    ]);
+    let mut days: Option<(u32, u32)> = None;
+    for r in readings.iter().filter(|r| r.mapping.register == Register::Consignments) {
+        if let Some((first, last)) = r.tally.days.map(|(a, b)| (a.number(), b.number())) {
+            days = Some(days.map_or((first, last), |(a, b)| {
+                (if a < first { a } else { first }, if b > last { b } else { last })
+            }));
+        }
+    }
+    let (Some((first, last)), Some(desk)) = (days, site_desk(account, &[])) else { return table };
+    let covered = last - first + 1;
+    for (key, sum) in rolled(readings, |k| (k.stream, 0, 0)) {
+        if key.day != Register::Consignments as u8 || key.month == NONE {
+            continue;
+        }
+        let planned = desk.streams.iter().find(|s| s.stream == usize::from(key.month));
+        let mut cells = sum_cells(&sum).to_vec();
+        cells.push(count(u64::from(covered)));
+        // m · 365 / days
+        cells.push(Number(sum.kg * 365.0 / f64::from(covered)));
+        cells.push(planned.map_or(Empty, |s| Number(s.contents.mass_kg())));
+        put(&mut table.rows, &[stream_name(names, key.month)], &cells);
+    }
+    table.notes.push("Scaled: mass × 365 / days from the first consignment to the last, both counted. It is no record of a year; a few collections scale badly. The plan's figure is that of its present routes.".to_owned());
     table
 }
 
