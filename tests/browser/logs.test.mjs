@@ -61,6 +61,12 @@ test("purchases and consignments stand beside the plan's postings, as bars and a
     file("purchases.csv", "Date,Solvent,Amount (kg),Supplier\n2026-01-05,acetone,200,x\n2026-02-05,n-hexane,300,x\n"),
     file("manifests.csv", "Ship date,Waste stream,Drum,Net weight kg\n2026-03-30,flammable,D1,60\n"),
   ]);
+  // What was not recorded is not zero: without a stock count there is no figure and no balance.
+  await logs.locator("figure strong", { hasText: "cannot be said; not recorded: stock count" }).waitFor();
+  assert.equal(await logs.locator("summary", { hasText: "Solvent balance" }).count(), 0);
+  await logs.locator("input[type=file]").setInputFiles([
+    file("stock.csv", "Count date,Item,On hand (kg)\n2026-02-15,acetone,1\n"),
+  ]);
   await logs.getByRole("heading", { name: "manifests.csv" }).waitFor();
   await ready(page);
   const figure = logs.locator("figure");

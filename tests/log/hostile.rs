@@ -2,6 +2,7 @@
 
 use super::{in_pieces, read, refused};
 use thimbleworth::log::{Change, Names, Reader, Reading, Remark, Unreadable, Verdict, Why};
+use thimbleworth::report::log_tables;
 
 #[test]
 fn a_german_ledger_with_everything_that_goes_wrong() {
@@ -265,4 +266,53 @@ fn names_bring_neither_markup_nor_formulas_into_the_tables() {
     let json: serde_json::Value = serde_json::from_str(&data_json(&tables)).unwrap();
     assert_eq!(json["tables"]["containers"]["rows"][0]["container"], "=cmd|' /C calc'!A0");
     assert_eq!(json["tables"]["refused"]["rows"][0]["line"], 3);
+}
+
+/// A column is settled by its own rows alone: the sizes of packs say nothing of the amounts.
+#[test]
+fn a_number_with_two_readings_is_asked_about_in_its_own_column() {
+    let read_as = |rows: &str| {
+        let text = format!("Date\tSolvent\tAmount (kg)\tPacks\tPack size (L)\tSupplier\n{rows}");
+        let (reading, _, remarks) = read("x.csv", text.as_bytes());
+        let asked: Vec<u64> = remarks
+            .iter()
+            .filter(|r| r.what == Verdict::Refused(Why::CommaOrThousands))
+            .map(|r| r.line)
+            .collect();
+        assert_eq!(asked.len(), refused(&remarks).len(), "{remarks:#?}");
+        (reading.rows.used, asked)
+    };
+    let asked = vec![2];
+    for (rows, expected) in [
+        ("2026-01-05\tacetone\t1,234\t\t\tx\n", (0, asked.clone())),
+        ("2026-01-05\tacetone\t1,234\t\t\tx\n2026-01-06\tacetone\t\t4\t2.5\tx\n", (1, asked.clone())),
+        ("2026-01-05\tacetone\t\t1,234\t2.5\tx\n", (0, asked.clone())),
+        ("2026-01-05\tacetone\t1,234\t\t\tx\n2026-01-06\tacetone\t12.5\t\t\tx\n", (2, vec![])),
+        (
+            "2026-01-05\tacetone\t1,234\t\t\tx\n2026-01-06\tacetone\t12.5\t\t\tx\n2026-01-06\tacetone\t12,5\t\t\tx\n",
+            (2, asked),
+        ),
+    ] {
+        assert_eq!(read_as(rows), expected, "{rows}");
+    }
+}
+
+/// A month whose rows were refused has rows; a paste needs no last line end; a last line short of cells may be cut.
+#[test]
+fn refused_months_and_last_lines_are_told_as_they_are() {
+    let notes = |rows: &str| {
+        let (reading, names, remarks) =
+            read("x.csv", format!("Date,Solvent,Amount (kg),Supplier\n{rows}").as_bytes());
+        (log_tables(&[reading], &names)[0].notes.join("; "), remarks)
+    };
+    let (said, remarks) =
+        notes("2026-03-05,acetone,2,x\n2026-04-05,acetone,plenty,x\n2026-06-05,acetone,2,x");
+    assert_eq!(said, "x.csv: all rows were refused in 2026-04; x.csv: no rows in 2026-05");
+    assert_eq!(remarks.len(), 1, "nothing is said of the line end: {remarks:#?}");
+    let (said, _) = notes("2026-03-05,acetone,2,x\n04/05/2026,acetone,2,x\n2026-05-05,acetone,2,x");
+    assert_eq!(said, "x.csv: no row that counts in 2026-04; 1 refused rows have no date that can be read");
+    let (_, remarks) = notes("2026-03-05,acetone,2,x\n2026-04-05,acetone,2");
+    assert_eq!(refused(&remarks), [(3, Why::CutOff.words()[0])]);
+    let (_, remarks) = notes("2026-03-05,acetone,2,x\n2026-04-05,acetone,2,\"x");
+    assert_eq!(refused(&remarks), [(3, Why::OpenQuote.words()[0])]);
 }

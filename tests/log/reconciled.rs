@@ -3,10 +3,12 @@
 use super::{harbour, in_pieces};
 use std::fmt::Write as _;
 use thimbleworth::account::Account;
+use thimbleworth::account::site_desk;
 use thimbleworth::ledger::{Direction, Place};
 use thimbleworth::log::{
     Names, Posted, Reader, Reading, Reconciliation, SolventAccount, reconcile, solvent_balance,
 };
+use thimbleworth::report::{DataCell, consigned_year_table, reconciliation_table, solvent_balance_table};
 
 /// The harbour's work of a year as its log would show it: in each quarter a quarter of the batches, 13 samples and 4
 /// controls in each.
@@ -110,28 +112,36 @@ fn what_is_taken_away_is_found_again() {
             posted.push(part.posted(Posted::Streams).kg);
         }
     }
-    let files =
-        [("prep.csv", log_of_a_year(25)), ("purchases.csv", bought), ("waste.csv", consigned.clone())];
+    let files = [
+        ("prep.csv", log_of_a_year(25)),
+        ("purchases.csv", bought),
+        ("waste.csv", consigned.clone()),
+        // Read, but near no turn of a quarter.
+        ("stock.csv", "Count date,Item,On hand (kg)\n2026-02-10,toluene,1\n".to_owned()),
+    ];
     let (closed, names) = reconciled(&account, &files);
     for name in ["acetone", "n-hexane"] {
         for part in of(&closed.quarters, &names, name) {
-            assert!(part.explained(), "{name}: {:?}", part.unexplained());
-            assert!(part.unexplained().kg.abs() < 1e-6 && part.beyond_plan().kg.abs() < 1e-6);
-            assert!(part.waiting().kg.abs() < 1e-6);
+            assert_eq!(part.explained(), Some(true), "{name}: {:?}", part.unexplained());
+            assert!(
+                part.unexplained().unwrap().kg.abs() < 1e-6 && part.beyond_plan().unwrap().kg.abs() < 1e-6
+            );
+            assert!(part.waiting().unwrap().kg.abs() < 1e-6);
             assert!(!part.counted());
         }
     }
     assert!(closed.doubts.iter().any(|d| d.contains("not counted")));
     // The second quarter's acetone was never consigned.
     let without: Vec<&str> = consigned.lines().filter(|l| !l.starts_with("2026-05-28,acetone")).collect();
-    let files = [files[0].clone(), files[1].clone(), ("waste.csv", without.join("\n") + "\n")];
+    let files =
+        [files[0].clone(), files[1].clone(), ("waste.csv", without.join("\n") + "\n"), files[3].clone()];
     let (open, names) = reconciled(&account, &files);
     let parts = of(&open.quarters, &names, "acetone");
     for (quarter, part) in parts.iter().enumerate() {
-        assert_eq!(part.explained(), quarter != 1, "{quarter}");
+        assert_eq!(part.explained(), Some(quarter != 1), "{quarter}");
     }
-    assert!((parts[1].unexplained().kg - posted[1]).abs() < 1e-6);
-    assert!((parts[1].waiting().kg - posted[1]).abs() < 1e-6);
+    assert!((parts[1].unexplained().unwrap().kg - posted[1]).abs() < 1e-6);
+    assert!((parts[1].waiting().unwrap().kg - posted[1]).abs() < 1e-6);
     let hood = |found: &Reconciliation| of(&found.quarters, &names, "acetone")[1].posted(Posted::Hood).kg;
     assert_eq!(hood(&open).to_bits(), hood(&closed).to_bits(), "air is what the plan posts");
     // In the solvent balance it is fugitive by difference, unexplained by the postings.
@@ -166,15 +176,24 @@ fn stock_returns_and_reclaimed_solvent() {
     assert!(part.counted());
     assert_eq!(part.opening.unwrap().kg, 30.0);
     assert_eq!(part.closing.unwrap().kg, 20.0);
-    assert_eq!(part.used().kg, 106.0);
+    assert_eq!(part.used().unwrap().kg, 106.0);
     assert_eq!((part.consigned.kg, part.reclaimed.kg), (70.0, 20.0));
-    assert_eq!(part.unexplained().kg, 16.0);
+    assert_eq!(part.unexplained().unwrap().kg, 16.0);
     // u² = (1 % · 100)² + (2 % · 4)² + (10 % · 30)² + (10 % · 20)² + (2 % · 70)² + (2 % · 20)², each over 3; density of
     // toluene adds its own part of less than 0.2 %.
     let squares = 1.0 + 0.0064 + 9.0 + 4.0 + 1.96 + 0.16_f64;
     let u = (squares / 3.0).sqrt();
-    assert!((part.unexplained().u_kg / u - 1.0).abs() < 0.01, "{} {u}", part.unexplained().u_kg);
-    assert!(!part.explained(), "16 kg are more than {}", part.unexplained().expanded_kg());
+    assert!(
+        (part.unexplained().unwrap().u_kg / u - 1.0).abs() < 0.01,
+        "{} {u}",
+        part.unexplained().unwrap().u_kg
+    );
+    assert_eq!(
+        part.explained(),
+        Some(false),
+        "16 kg are more than {}",
+        part.unexplained().unwrap().expanded_kg()
+    );
     let (_, all) = solvent_balance(&found, &names);
     assert_eq!(all.o[7].kg, 20.0);
     assert_eq!(all.consumption().kg, all.i1.kg - 20.0);
@@ -211,4 +230,56 @@ fn a_stream_that_the_plan_does_not_fill_is_told_and_in_no_solvent() {
         .map(|a| a.consigned.kg)
         .sum();
     assert!(shares > 50.0 && shares <= 100.0, "{shares}");
+}
+
+/// 73 days are a fifth of a year.
+#[test]
+fn consignments_are_scaled_to_a_year_beside_the_plan() {
+    let account = harbour();
+    let text = "Ship date,Waste stream,Net (kg)\n2026-01-01,flammable,60\n2026-03-14,flammable,40\n";
+    let (readings, names) = readings(&account, &[("waste.csv", text.to_owned())]);
+    let table = consigned_year_table(&readings, &names, &account);
+    let cell = |key: &str| table.rows[0][table.head.iter().position(|h| h[0] == key).unwrap()].clone();
+    assert_eq!((cell("mass_kg"), cell("days")), (DataCell::Number(100.0), DataCell::Count(73)));
+    assert_eq!(cell("scaled_kg_year"), DataCell::Number(500.0));
+    let desk = site_desk(&account, &[]).unwrap();
+    let at = names.streams.iter().position(|s| *s == cell("stream").shown()).unwrap();
+    let planned = desk.streams.iter().find(|s| s.stream == at).unwrap().contents.mass_kg();
+    assert!(planned > 0.0);
+    assert_eq!(cell("plan_kg_year"), DataCell::Number(planned));
+}
+
+/// 754 kg of acetone left and nothing says what came: no figure is made of that.
+#[test]
+fn a_register_that_was_not_read_is_not_zero() {
+    let account = harbour();
+    let waste = ("waste.csv", "Ship date,Solvent,Manifest,Net (kg)\n2026-05-05,acetone,M1,754\n".to_owned());
+    let bought = ("purchases.csv", "Order date,Item,Amount (kg)\n2026-04-10,acetone,800\n".to_owned());
+    let stock = ("stock.csv", "Count date,Item,On hand (kg)\n2026-04-01,acetone,5\n".to_owned());
+    for (files, missing) in [
+        (vec![waste.clone()], "purchases, stock count"),
+        (vec![waste.clone(), bought.clone()], "stock count"),
+        (vec![waste.clone(), stock.clone()], "purchases"),
+        (vec![bought.clone(), stock.clone()], "waste consignments"),
+        (vec![waste, bought, stock], ""),
+    ] {
+        let (found, names) = reconciled(&account, &files);
+        let part = of(&found.quarters, &names, "acetone")[0];
+        assert_eq!(part.recorded.missing(), missing);
+        assert_eq!(part.unexplained().is_some(), missing.is_empty(), "{missing}");
+        assert_eq!(part.explained().is_some(), missing.is_empty(), "{missing}");
+        assert_eq!(solvent_balance(&found, &names).0.is_empty(), !missing.is_empty(), "{missing}");
+        let told = found.doubts.iter().any(|d| d.starts_with(&format!("not recorded: {missing};")));
+        assert_eq!(told, !missing.is_empty(), "{:?}", found.doubts);
+        let table = reconciliation_table(&found, &names);
+        let row = table.rows.iter().find(|r| r[0].shown() == "acetone").unwrap();
+        let cell = |key: &str| row[table.head.iter().position(|h| h[0] == key).unwrap()].shown();
+        for (key, register) in
+            [("bought_kg", "purchases"), ("opening_kg", "stock"), ("consigned_kg", "waste")]
+        {
+            assert_eq!(cell(key) == "not recorded", missing.contains(register), "{missing}: {key}");
+        }
+        assert_eq!(cell("unexplained_kg") == "not recorded", !missing.is_empty());
+        assert_eq!(solvent_balance_table(&found, &names).rows.is_empty(), !missing.is_empty());
+    }
 }

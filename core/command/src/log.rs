@@ -9,8 +9,10 @@ use std::io::{self, BufWriter, IsTerminal, Read, Write};
 use std::path::{Path, PathBuf};
 use std::process::ExitCode;
 use std::time::{Duration, Instant};
+use thimbleworth::account::Account;
 use thimbleworth::log::{Mapping, Names, Reader, Reading, Register, Remark, mappings, reconcile};
 use thimbleworth::plan::save;
+use thimbleworth::report::consigned_year_table;
 use thimbleworth::report::{
     DataTable, data_csv, data_json, data_markdown, data_text, log_tables, reconciliation_table, remark_table,
     solvent_balance_table, text_cell, visible,
@@ -106,7 +108,7 @@ pub(crate) fn run(args: &Args) -> Result<ExitCode, Refusal> {
     if unreadable {
         return Err(Refusal::Said);
     }
-    let tables = tables(args, &readings, &remarks, program, &mut names)?;
+    let tables = tables(args, &readings, &remarks, &account, program, &mut names)?;
     match args.format {
         Format::Table => deliver(&data_text(&tables), args.output.as_deref(), &args.plan)?,
         Format::Json => deliver(&data_json(&tables), args.output.as_deref(), &args.plan)?,
@@ -151,10 +153,12 @@ fn tables(
     args: &Args,
     readings: &[Reading],
     remarks: &[(String, Remark)],
+    account: &Account,
     program: &thimbleworth::program::Program,
     names: &mut Names,
 ) -> Result<Vec<DataTable>, Refusal> {
     let mut out = log_tables(readings, names);
+    out.extend(Some(consigned_year_table(readings, names, account)).filter(|t| !t.rows.is_empty()));
     for refused in [true, false] {
         let mut table = remark_table(remarks, refused);
         if args.format == Format::Table && table.rows.len() > SHOWN_REMARKS {

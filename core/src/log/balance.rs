@@ -83,14 +83,15 @@ impl SolventBalance {
         Line::joined(&[(1.0, self.i1), (-1.0, self.output(8))])
     }
 
-    /// The balance of one solvent.
+    /// The balance of one solvent; `None` where a register of it is missing.
     #[must_use]
-    pub fn of(account: &SolventAccount) -> Self {
+    pub fn of(account: &SolventAccount) -> Option<Self> {
+        let used = account.used().filter(|_| account.recorded.consignments)?;
         let posted = |account_of| account.posted(account_of);
         let mut collected = account.consigned;
         collected.add_dependent(&posted(Posted::Elsewhere));
-        Self {
-            i1: account.used(),
+        Some(Self {
+            i1: used,
             i2: posted(Posted::Reused),
             o: [
                 posted(Posted::Hood),
@@ -103,7 +104,7 @@ impl SolventBalance {
                 account.reclaimed,
                 posted(Posted::Held),
             ],
-        }
+        })
     }
 
     /// Adds another solvent. Their figures come from the same scales, so their uncertainties are added up.
@@ -116,7 +117,8 @@ impl SolventBalance {
     }
 }
 
-/// The balance of each organic solvent over the whole time, and of all of them; empty where there is none.
+/// The balance of each organic solvent over the whole time, and of all of them; empty where there is none
+/// or a register is missing.
 ///
 /// Organic solvents are the solvents of the catalogue and the plan with carbon and a vapour pressure of at least 0.01 kPa
 /// at 293.15 K (Article 3(45)), and those whose vapour pressure is not known.
@@ -129,8 +131,9 @@ pub fn solvent_balance(
     let mut all = SolventBalance::default();
     let mut out = Vec::new();
     for account in accounts {
-        if names.materials.get(account.material).is_some_and(|m| m.voc) {
-            let balance = SolventBalance::of(account);
+        if names.materials.get(account.material).is_some_and(|m| m.voc)
+            && let Some(balance) = SolventBalance::of(account)
+        {
             all.add(&balance);
             out.push((account.material, balance));
         }

@@ -28,7 +28,7 @@ pub use names::{LogMaterial, LogRoute, NONE, Names, RECLAIMED};
 pub use posted::Posted;
 pub use read::{Reader, Reading, Rows, Unread, Unreadable};
 pub use reconcile::{
-    Line, Reconciliation, Reconciling, SolventAccount, UNCERTAINTY, USUAL_LIMITS, reconcile,
+    Line, Reconciliation, Reconciling, Recorded, SolventAccount, UNCERTAINTY, USUAL_LIMITS, reconcile,
 };
 pub(crate) use tally::rolled;
 pub use tally::{Done, Key, Sum, Tally};

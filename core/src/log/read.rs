@@ -124,7 +124,8 @@ struct State {
     places: Places,
     amount_unit: Option<LogUnit>,
     size_unit: Option<LogUnit>,
-    decimals: Decimals,
+    /// Of the amounts, the packs and their sizes.
+    decimals: [Decimals; 3],
     units: [UnitCell; 3],
     key: Vec<u8>,
     heading_line: u64,
@@ -333,6 +334,26 @@ fn first_lines(text: &[u8], separator: u8) -> Vec<(u64, Vec<String>)> {
     out
 }
 
+/// What the cells of a column say of their decimal sign, as long as they agree.
+#[derive(Clone, Copy, Default)]
+struct Agreed {
+    said: Option<Decimals>,
+    differ: bool,
+}
+
+impl Agreed {
+    fn hear(&mut self, said: Option<Decimals>) {
+        if said.is_some() {
+            self.differ |= self.said.is_some() && self.said != said;
+            self.said = said;
+        }
+    }
+
+    fn settled(self) -> Decimals {
+        if self.differ { Decimals::Ask } else { self.said.unwrap_or_default() }
+    }
+}
+
 impl State {
     fn new(mapping: Mapping, heading_line: u64) -> Self {
         let place = |role| mapping.place(role).unwrap_or(NOWHERE);
@@ -359,7 +380,7 @@ impl State {
             },
             amount_unit: unit(Role::Amount),
             size_unit: unit(Role::PackSize),
-            decimals: mapping.decimals,
+            decimals: [mapping.decimals; 3],
             dates: mapping.dates,
             mapping,
             units: Default::default(),
@@ -378,14 +399,15 @@ impl State {
     /// them open. Where cells speak against one another, they stay open.
     fn learn(&mut self, text: &[u8], separator: u8, ended: bool) {
         let places = self.places;
-        let (mut decimals, mut dates) = (Vec::new(), Vec::new());
+        let (mut decimals, mut dates) = ([Agreed::default(); 3], Vec::new());
+        let numbers = [places.amount, places.packs, places.pack_size];
         let heading = self.heading_line;
         let mut each = |record: &Record<'_>| {
             if record.line <= heading {
                 return;
             }
-            for place in [places.amount, places.pack_size] {
-                decimals.extend(amount::decimals_of(&decoded(record.cell(place)).0));
+            for (agreed, place) in decimals.iter_mut().zip(numbers) {
+                agreed.hear(amount::decimals_of(&decoded(record.cell(place)).0));
             }
             dates.extend(order_of(&decoded(record.cell(places.date)).0));
         };
@@ -394,10 +416,18 @@ impl State {
         if ended {
             splitter.finish(&mut each);
         }
-        if let (Decimals::Ask, Some((first, rest))) = (self.decimals, decimals.split_first())
-            && rest.iter().all(|d| d == first)
-        {
-            self.decimals = *first;
+        if self.mapping.decimals == Decimals::Ask {
+            // A column is settled by its own rows. The mapping says it for all columns, so only where none is open.
+            let mut all = Agreed::default();
+            let mut open = false;
+            for ((mine, agreed), place) in self.decimals.iter_mut().zip(decimals).zip(numbers) {
+                *mine = agreed.settled();
+                open |= place != NOWHERE && *mine == Decimals::Ask;
+                all.hear(agreed.said);
+            }
+            if !open {
+                self.mapping.decimals = all.settled();
+            }
         }
         if let (super::DayOrder::Ask, Some((first, rest))) = (self.dates, dates.split_first())
             && rest.iter().all(|d| d == first)
@@ -405,7 +435,6 @@ impl State {
             self.dates = *first;
         }
         // Shown, and kept with the mapping.
-        self.mapping.decimals = self.decimals;
         self.mapping.dates = self.dates;
     }
 
@@ -448,9 +477,6 @@ impl State {
         match self.counted(record, names) {
             Ok(()) => {
                 self.rows.used += 1;
-                if record.unfinished {
-                    self.changed(record, NOWHERE, Change::NoLineEnd, "");
-                }
                 self.rows.changed += u64::from(self.rows.by_change != before);
                 self.tally.compare(bytes, ends, record.line);
             }
@@ -458,6 +484,12 @@ impl State {
                 self.rows.refused += 1;
                 if let Some(count) = self.rows.by_reason.get_mut(why as usize) {
                     *count += 1;
+                }
+                // Its month has rows, though none that counts.
+                let dated = if record.broken.is_none() { self.date(record).ok() } else { None };
+                match dated {
+                    Some((date, _)) => self.tally.refuse(date.month_index()),
+                    None => self.tally.undated += 1,
                 }
                 self.remark(record.line, place, record.cell(place), Verdict::Refused(why), &detail);
             }
@@ -585,12 +617,13 @@ impl State {
         record: &Record<'_>,
     ) -> Result<(Value, [(usize, Option<Change>); 2]), (Why, usize, String)> {
         let places = self.places;
+        let [amounts, counts, sizes] = self.decimals;
         let [own, beside, size] = &mut self.units;
         let cell = record.cell(places.amount);
         if !cell.is_empty() {
             let column = record.cell(places.unit);
             let unit = if column.is_empty() { self.amount_unit.as_ref() } else { beside.of(column) };
-            let value = amount::amount(cell, self.decimals, own, unit).map_err(|why| {
+            let value = amount::amount(cell, amounts, own, unit).map_err(|why| {
                 // A unit that cannot be used stands in its own column.
                 let odd = why == Why::NoUnit && !column.is_empty();
                 let (why, place) = if odd { (Why::OtherUnit, places.unit) } else { (why, places.amount) };
@@ -603,12 +636,12 @@ impl State {
             let place = if places.amount == NOWHERE { places.packs } else { places.amount };
             return Err((Why::NoAmount, place, String::new()));
         }
-        let count = amount::count(packs, self.decimals).map_err(|why| (why, places.packs, String::new()))?;
+        let count = amount::count(packs, counts).map_err(|why| (why, places.packs, String::new()))?;
         let each = record.cell(places.pack_size);
         let column = record.cell(places.unit);
         let unit = if column.is_empty() { self.size_unit.as_ref() } else { beside.of(column) };
-        let value = amount::amount(each, self.decimals, size, unit)
-            .map_err(|why| (why, places.pack_size, String::new()))?;
+        let value =
+            amount::amount(each, sizes, size, unit).map_err(|why| (why, places.pack_size, String::new()))?;
         Ok((Value { si: count * value.si, ..value }, [(places.pack_size, value.change), (0, None)]))
     }
 
@@ -627,7 +660,9 @@ impl State {
         };
         let runs = match record.cell(places.runs) {
             [] => 1.0,
-            cell => amount::count(cell, self.decimals).map_err(|why| (why, places.runs, String::new()))?,
+            cell => {
+                amount::count(cell, self.mapping.decimals).map_err(|why| (why, places.runs, String::new()))?
+            }
         };
         let (control, typed_repeat) = sample_type(record.cell(places.sample_type), &self.mapping.means)
             .ok_or((Why::SampleType, places.sample_type, String::new()))?;

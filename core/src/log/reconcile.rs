@@ -82,6 +82,57 @@ impl Line {
     }
 }
 
+/// Which registers were read with at least one row that counts. What stands in the others is not known, and not zero.
+#[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
+pub struct Recorded {
+    /// Purchases.
+    pub purchases: bool,
+    /// Stock counts.
+    pub stock: bool,
+    /// Waste consignments.
+    pub consignments: bool,
+}
+
+impl Recorded {
+    fn of(readings: &[Reading]) -> Self {
+        let has = |register| readings.iter().any(|r| r.mapping.register == register && r.rows.used > 0);
+        Self {
+            purchases: has(Register::Purchases),
+            stock: has(Register::Stock),
+            consignments: has(Register::Consignments),
+        }
+    }
+
+    /// Whether what was used is known.
+    #[must_use]
+    pub const fn used(self) -> bool {
+        self.purchases && self.stock
+    }
+
+    /// Whether nothing is missing of which a balance is made.
+    #[must_use]
+    pub const fn all(self) -> bool {
+        self.used() && self.consignments
+    }
+
+    /// The registers that are missing, in words; empty where none is.
+    #[must_use]
+    pub fn missing(self) -> String {
+        let mut out = String::new();
+        for (there, register) in [
+            (self.purchases, Register::Purchases),
+            (self.stock, Register::Stock),
+            (self.consignments, Register::Consignments),
+        ] {
+            if !there {
+                out.push_str(if out.is_empty() { "" } else { ", " });
+                out.push_str(register.word());
+            }
+        }
+        out
+    }
+}
+
 /// One solvent in one period.
 #[derive(Clone, Debug, PartialEq)]
 pub struct SolventAccount {
@@ -89,6 +140,8 @@ pub struct SolventAccount {
     pub material: usize,
     /// The first and the last quarter, counted from the year 0.
     pub quarters: (u16, u16),
+    /// Which registers were read: the lines of the others are empty and mean nothing.
+    pub recorded: Recorded,
     /// Bought.
     pub bought: Line,
     /// Returned to the supplier in cylinders.
@@ -112,15 +165,18 @@ impl SolventAccount {
         self.posted.get(account as usize).copied().unwrap_or_default()
     }
 
-    /// What the books say was used.
+    /// What the books say was used; `None` without purchases or stock counts.
     #[must_use]
-    pub fn used(&self) -> Line {
+    pub fn used(&self) -> Option<Line> {
+        if !self.recorded.used() {
+            return None;
+        }
         let (opening, closing) = match (self.opening, self.closing) {
             (Some(opening), Some(closing)) => (opening, closing),
             // Without both counts the change is not known, and not guessed.
             _ => (Line::default(), Line::default()),
         };
-        Line::joined(&[(1.0, self.bought), (-1.0, self.returned), (1.0, opening), (-1.0, closing)])
+        Some(Line::joined(&[(1.0, self.bought), (-1.0, self.returned), (1.0, opening), (-1.0, closing)]))
     }
 
     /// Whether the shelf was counted at both ends.
@@ -131,32 +187,34 @@ impl SolventAccount {
 
     /// Used according to the books beyond what the plan draws for the work that was logged.
     #[must_use]
-    pub fn beyond_plan(&self) -> Line {
-        Line::joined(&[(1.0, self.used()), (-1.0, self.posted(Posted::Drawn))])
+    pub fn beyond_plan(&self) -> Option<Line> {
+        Some(Line::joined(&[(1.0, self.used()?), (-1.0, self.posted(Posted::Drawn))]))
     }
 
-    /// Posted into waste streams beyond what was consigned: in containers still, or elsewhere.
+    /// Posted into waste streams beyond what was consigned: in containers still, or elsewhere; `None` without
+    /// consignments.
     #[must_use]
-    pub fn waiting(&self) -> Line {
-        Line::joined(&[(1.0, self.posted(Posted::Streams)), (-1.0, self.consigned), (-1.0, self.reclaimed)])
+    pub fn waiting(&self) -> Option<Line> {
+        let parts = [(1.0, self.posted(Posted::Streams)), (-1.0, self.consigned), (-1.0, self.reclaimed)];
+        self.recorded.consignments.then(|| Line::joined(&parts))
     }
 
-    /// What none of the three explains.
+    /// What none of the three explains; `None` where a register is missing.
     #[must_use]
-    pub fn unexplained(&self) -> Line {
-        Line::joined(&[
-            (1.0, self.used()),
+    pub fn unexplained(&self) -> Option<Line> {
+        let used = self.used().filter(|_| self.recorded.consignments)?;
+        Some(Line::joined(&[
+            (1.0, used),
             (-1.0, self.consigned),
             (-1.0, self.reclaimed),
             (-1.0, self.posted(Posted::Lost)),
-        ])
+        ]))
     }
 
-    /// Whether what is unexplained lies within its expanded uncertainty.
+    /// Whether what is unexplained lies within its expanded uncertainty; `None` where it is not known.
     #[must_use]
-    pub fn explained(&self) -> bool {
-        let line = self.unexplained();
-        line.kg.abs() <= line.expanded_kg()
+    pub fn explained(&self) -> Option<bool> {
+        self.unexplained().map(|line| line.kg.abs() <= line.expanded_kg())
     }
 }
 
@@ -185,6 +243,7 @@ fn first_day(quarter: u16) -> Option<Day> {
 struct Books<'r> {
     readings: &'r [Reading],
     names: &'r Names,
+    recorded: Recorded,
 }
 
 /// Holds the site's records against the plan's postings, by solvent and quarter.
@@ -262,7 +321,18 @@ impl Reconciling {
             out.doubts
                 .push(["the route ", label, " stops and posts nothing: see the plan's problems"].concat());
         }
-        let books = Books { readings, names };
+        let recorded = Recorded::of(readings);
+        if !recorded.all() {
+            out.doubts.push(
+                [
+                    "not recorded: ",
+                    &recorded.missing(),
+                    "; what was not recorded is not zero, so nothing is said of what is unexplained and there is no solvent balance. Add the register that is missing, with its rows over the same quarters",
+                ]
+                .concat(),
+            );
+        }
+        let books = Books { readings, names, recorded };
         let mut stocks = 0_u32;
         let posted = &postings.periods;
         for (i, period) in posted.iter().enumerate() {
@@ -280,7 +350,7 @@ impl Reconciling {
                 }
             }
         }
-        if stocks > 0 {
+        if stocks > 0 && recorded.stock {
             out.doubts.push(
                 "where the shelf was not counted within 15 days of both ends of a quarter, the change of stock is not known and not in \"used\"; a count at each turn of a quarter would do"
                     .to_owned(),
@@ -464,6 +534,7 @@ impl Books<'_> {
         let account = SolventAccount {
             material,
             quarters: span,
+            recorded: self.recorded,
             bought: self.moved(Register::Purchases, material, span, None),
             returned: self.moved(Register::Cylinders, material, span, None),
             opening: self.shelf(material, span.0),

@@ -160,6 +160,10 @@ pub struct Tally {
     pub done: Vec<(Key, Done)>,
     /// The first and the last day.
     pub days: Option<(Day, Day)>,
+    /// Months with refused rows, in order once the file has ended.
+    pub refused: Vec<u16>,
+    /// Refused rows of which no month is known.
+    pub undated: u64,
     /// Rows that were compared with one another.
     pub compared: u64,
     amounts: Keyed<Sum>,
@@ -179,6 +183,14 @@ impl Tally {
                 (if day < first { day } else { first }, if day > last { day } else { last })
             }
         });
+    }
+
+    /// A row of this month is refused.
+    pub(super) fn refuse(&mut self, month: u16) {
+        // Days of a hundred years have few months.
+        if !self.refused.contains(&month) {
+            self.refused.push(month);
+        }
     }
 
     pub(super) fn amount(&mut self, key: Key, kg: f64, m3: Option<f64>) {
@@ -247,6 +259,7 @@ impl Tally {
                 self.extractions.at(of_route(at as u16, (at >> 16) as u16)).batches += 1;
             }
         }
+        self.refused.sort_unstable();
         self.sums = std::mem::take(&mut self.amounts).in_order();
         self.stock = std::mem::take(&mut self.shelves).in_order();
         self.done = std::mem::take(&mut self.extractions).in_order();
@@ -268,18 +281,30 @@ impl Tally {
         }
     }
 
-    /// Months between the first and the last without a row.
+    /// Whether a row of this month counts.
+    fn has(&self, month: u16) -> bool {
+        let keys = self.sums.iter().chain(&self.stock).map(|(k, _)| k.month);
+        keys.chain(self.done.iter().map(|(k, _)| k.month)).any(|known| known == month)
+    }
+
+    /// Months between the first and the last without a row, used or refused.
     #[must_use]
     pub fn empty_months(&self) -> Vec<u16> {
         let Some((first, last)) = self.days else { return Vec::new() };
-        let keys = self.sums.iter().chain(&self.stock).map(|(k, _)| k.month);
-        let there: Vec<u16> = keys.chain(self.done.iter().map(|(k, _)| k.month)).collect();
         let mut out = Vec::new();
         for month in first.month_index()..=last.month_index() {
-            if !there.contains(&month) {
+            if !self.has(month) && !self.refused.contains(&month) {
                 out.push(month);
             }
         }
+        out
+    }
+
+    /// Months of which all rows were refused.
+    #[must_use]
+    pub fn refused_months(&self) -> Vec<u16> {
+        let mut out = self.refused.clone();
+        out.retain(|month| !self.has(*month));
         out
     }
 

@@ -92,7 +92,7 @@ impl Why {
             Self::OpenQuote => ["a quote opens here and is not closed", "a quote before and after the cell"],
             Self::StrayQuote => ["text follows a closing quote", "quotes inside of a cell written twice"],
             Self::LongLine => ["the line is longer than 16 kB", "one row a line"],
-            Self::CutOff => ["the last line is cut off", "the whole file"],
+            Self::CutOff => ["the last line has fewer cells than headings: it may be cut", "the whole file"],
             Self::TooManyCells => [
                 "there are more cells than headings",
                 "a decimal comma or a separator inside of a cell in quotes",
@@ -162,8 +162,6 @@ pub enum Change {
     NameRead,
     /// Another name of a material was read.
     Synonym,
-    /// The file ends without a line end: its last row may be cut.
-    NoLineEnd,
     /// The same row stands there before; both count.
     Repeated,
     /// The headings stand there once more.
@@ -172,7 +170,7 @@ pub enum Change {
 
 impl Change {
     /// All of them.
-    pub const ALL: [Self; 12] = [
+    pub const ALL: [Self; 11] = [
         Self::Windows1252,
         Self::DayNumber,
         Self::TwoDigitYear,
@@ -182,7 +180,6 @@ impl Change {
         Self::SpreadLeft,
         Self::NameRead,
         Self::Synonym,
-        Self::NoLineEnd,
         Self::Repeated,
         Self::HeadingsAgain,
     ];
@@ -200,9 +197,6 @@ impl Change {
             Self::SpreadLeft => "what follows ± left aside",
             Self::NameRead => "words such as a purity left out of the name",
             Self::Synonym => "another name of the material",
-            Self::NoLineEnd => {
-                "the file ends without a line end: its last row may be cut, and counts as it stands"
-            }
             Self::Repeated => "the same row stands there before; both count",
             Self::HeadingsAgain => "the headings stand there once more",
         }

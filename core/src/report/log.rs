@@ -2,6 +2,7 @@
 
 use super::data_table::{DataCell, DataTable};
 use super::words::cited;
+use crate::account::{Account, site_desk};
 use crate::log::{
     Change, Day, Key, Line, NONE, Names, OUTPUTS, Posted, RECLAIMED, Reading, Reconciliation, Register,
     Remark, SOLVENT_BALANCE, SolventBalance, Sum, UNCERTAINTY, Verdict, Why, rolled, solvent_balance,
@@ -78,15 +79,29 @@ fn files(readings: &[Reading]) -> DataTable {
     );
     for r in readings {
         let name = &r.mapping.name;
-        let gaps = r.tally.empty_months();
-        if r.mapping.register != Register::Stock && !gaps.is_empty() {
+        let undated = r.tally.undated.to_string();
+        let mut told = |said: &str, gaps: &[u16], more: &[&str]| {
+            if gaps.is_empty() {
+                return;
+            }
             let mut list = String::new();
             for gap in gaps.iter().take(24) {
                 list.push_str(if list.is_empty() { "" } else { ", " });
                 list.push_str(&month(*gap));
             }
-            let more = if gaps.len() > 24 { " and more" } else { "" };
-            table.notes.push([name, ": no rows in ", &list, more].concat());
+            let and = if gaps.len() > 24 { " and more" } else { "" };
+            table.notes.push([name, said, &list, and, &more.concat()].concat());
+        };
+        told(": all rows were refused in ", &r.tally.refused_months(), &[]);
+        if r.mapping.register != Register::Stock {
+            let gaps = r.tally.empty_months();
+            // A refused row without a day may be of any month.
+            if r.tally.undated > 0 {
+                let rows = ["; ", &undated, " refused rows have no date that can be read"];
+                told(": no row that counts in ", &gaps, &rows);
+            } else {
+                told(": no rows in ", &gaps, &[]);
+            }
         }
         if r.tally.compared < r.rows.used {
             let compared = r.tally.compared.to_string();
@@ -266,6 +281,45 @@ fn streams(readings: &[Reading], names: &Names) -> DataTable {
     table
 }
 
+/// What was consigned of each stream over the days covered, scaled to a year, beside the plan's year.
+///
+/// The days covered run from the first consignment to the last, both counted; what was collected on the first of them may
+/// have stood for longer, so few collections scale badly.
+#[must_use]
+pub fn consigned_year_table(readings: &[Reading], names: &Names, account: &Account) -> DataTable {
+    let mut table =
+        with_sums("consigned_year", "Consigned by stream, scaled to a year", &[["stream", "stream"]]);
+    table.head.extend([
+        ["days", "days covered"],
+        ["scaled_kg_year", "scaled to a year, kg"],
+        ["plan_kg_year", "plan, kg a year"],
+    ]);
+    let mut days: Option<(u32, u32)> = None;
+    for r in readings.iter().filter(|r| r.mapping.register == Register::Consignments) {
+        if let Some((first, last)) = r.tally.days.map(|(a, b)| (a.number(), b.number())) {
+            days = Some(days.map_or((first, last), |(a, b)| {
+                (if a < first { a } else { first }, if b > last { b } else { last })
+            }));
+        }
+    }
+    let (Some((first, last)), Some(desk)) = (days, site_desk(account, &[])) else { return table };
+    let covered = last - first + 1;
+    for (key, sum) in rolled(readings, |k| (k.stream, 0, 0)) {
+        if key.day != Register::Consignments as u8 || key.month == NONE {
+            continue;
+        }
+        let planned = desk.streams.iter().find(|s| s.stream == usize::from(key.month));
+        let mut cells = sum_cells(&sum).to_vec();
+        cells.push(count(u64::from(covered)));
+        // m · 365 / days
+        cells.push(Number(sum.kg * 365.0 / f64::from(covered)));
+        cells.push(planned.map_or(Empty, |s| Number(s.contents.mass_kg())));
+        put(&mut table.rows, &[stream_name(names, key.month)], &cells);
+    }
+    table.notes.push("Scaled: mass × 365 / days from the first consignment to the last, both counted. It is no record of a year; a few collections scale badly. The plan's figure is that of its present routes.".to_owned());
+    table
+}
+
 fn containers(readings: &[Reading]) -> DataTable {
     let mut table = with_sums(
         "containers",
@@ -345,32 +399,43 @@ pub fn reconciliation_table(found: &Reconciliation, names: &Names) -> DataTable 
     );
     for account in found.quarters.iter().chain(&found.whole) {
         let unexplained = account.unexplained();
-        let shelf = |line: Option<Line>| line.map_or(Empty, |l| Number(l.kg));
+        let recorded = account.recorded;
+        let known = |there: bool, line: Option<Line>| match (there, line) {
+            (true, Some(line)) => Number(line.kg),
+            (true, None) => Empty,
+            _ => text("not recorded"),
+        };
         let records = [account.bought, account.returned, account.consigned, account.reclaimed];
         let shelves = account.opening.map_or(0, |l| l.rows) + account.closing.map_or(0, |l| l.rows);
         let all_rows = records.iter().map(|l| l.rows).fold(shelves, |all, rows| all + rows);
+        let missing = ["not recorded: ", &recorded.missing()].concat();
+        let negative = unexplained.is_some_and(|line| line.kg < 0.0);
         let verdict = match (account.explained(), account.counted()) {
             _ if all_rows == 0 => "no record of it",
-            (true, true) => "within its uncertainty",
-            (true, false) => "within its uncertainty; stock not counted",
-            (false, true) => "not explained",
-            (false, false) => "not explained; stock not counted",
+            (None, _) => &missing,
+            (Some(true), true) => "within its uncertainty",
+            (Some(true), false) => "within its uncertainty; stock not counted",
+            // More left than came: no finding of a loss.
+            (Some(false), true) if negative => "more left than the records brought",
+            (Some(false), false) if negative => "more left than the records brought; stock not counted",
+            (Some(false), true) => "not explained",
+            (Some(false), false) => "not explained; stock not counted",
         };
         let numbers = [
-            Number(account.bought.kg),
+            known(recorded.purchases, Some(account.bought)),
             Number(account.returned.kg),
-            shelf(account.opening),
-            shelf(account.closing),
-            Number(account.used().kg),
+            known(recorded.stock, account.opening),
+            known(recorded.stock, account.closing),
+            known(recorded.used(), account.used()),
             Number(account.posted(Posted::Drawn).kg),
             Number(account.posted(Posted::Hood).kg + account.posted(Posted::Room).kg),
             Number(account.posted(Posted::Lost).kg),
             Number(account.posted(Posted::Streams).kg),
-            Number(account.consigned.kg),
-            Number(account.reclaimed.kg),
-            Number(account.waiting().kg),
-            Number(unexplained.kg),
-            Number(unexplained.expanded_kg()),
+            known(recorded.consignments, Some(account.consigned)),
+            known(recorded.consignments, Some(account.reclaimed)),
+            known(recorded.consignments, account.waiting()),
+            known(recorded.all(), unexplained),
+            unexplained.map_or(Empty, |line| Number(line.expanded_kg())),
             text(verdict),
             count(all_rows),
         ];

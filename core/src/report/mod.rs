@@ -42,7 +42,7 @@ pub use csv::{result_csv, result_csv_drawn, text_cell};
 pub use data_table::{DataCell, DataTable, data_csv, data_json, data_markdown, data_text};
 pub use drawn::Drawn;
 pub use energy::{Sheet, dense_words, energy_sheets, need_sheet};
-pub use log::{log_tables, reconciliation_table, remark_table, solvent_balance_table};
+pub use log::{consigned_year_table, log_tables, reconciliation_table, remark_table, solvent_balance_table};
 pub use markdown::{escaped, markdown, markdown_drawn};
 pub use odds::{ODDS_VERSION, odds_json, odds_table, odds_words, stopped_words};
 pub use paper::{

@@ -71,6 +71,7 @@ fn reconciliation(account: &Account) -> DataTable {
             "waste.csv",
             "Date,Solvent,Amount (kg),Manifest\n2026-02-05,acetone,400,x\n2026-05-05,toluene,20,x\n2026-05-05,methanol,9,x\n",
         ),
+        ("stock.csv", "Date,Solvent,On hand (kg)\n2026-02-15,acetone,1\n"),
     ] {
         let mut reader = Reader::new(name, names, &[]);
         reader.feed(text.as_bytes());

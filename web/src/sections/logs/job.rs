@@ -8,7 +8,7 @@ use std::rc::Rc;
 use thimbleworth::log::{Mapping, Names, Reader, Reading, Reconciling, Register, Remark, mappings};
 use thimbleworth::plan::Plan;
 use thimbleworth::report::{
-    DataTable, log_tables, reconciliation_table, remark_table, solvent_balance_table,
+    DataTable, consigned_year_table, log_tables, reconciliation_table, remark_table, solvent_balance_table,
 };
 
 /// How long a slice lasts; ms.
@@ -169,6 +169,7 @@ impl Job {
                 None => self.sums = log_tables(&self.readings, names),
             }
             tables.extend([remark_table(&self.remarks, true), remark_table(&self.remarks, false)]);
+            tables.push(consigned_year_table(&self.readings, names, &self.book.account));
             tables.append(&mut self.sums);
             tables.retain(|t| !t.rows.is_empty() && t.key != "columns");
         }
