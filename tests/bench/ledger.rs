@@ -196,7 +196,7 @@ fn main() {
     let bench = plan(&[workload("bench", &[By::Solvent; 4])]);
     let open_co2 = plan(&[workload("open", &[By::Solvent, By::Solvent, By::OpenCo2, By::OpenCo2])]);
     let closed_co2 = plan(&[workload("closed", &[By::Solvent, By::Solvent, By::ClosedCo2, By::ClosedCo2])]);
-    draws("without CO2", &bench, Some(20e3), yard_ns);
+    draws("without CO2", &bench, Some(5e3), yard_ns);
     draws("two of four routes with open loops of CO2", &open_co2, Some(20e3), yard_ns);
     draws("two of four routes with closed loops of CO2", &closed_co2, Some(20e3), yard_ns);
     if std::env::args().any(|a| a == "draws") {
